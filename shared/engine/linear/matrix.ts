@@ -1,0 +1,311 @@
+import { EngineError } from '../errors.ts';
+import { symmetricEigen } from './symmetric-eigen.ts';
+
+/** A dense matrix by rows. Functions of this folder never change their arguments. */
+export type Matrix = readonly (readonly number[])[];
+
+/** Relative size under which a pivot is rounding noise of doubles and not information. */
+export const PIVOT_TOLERANCE = 1e-12;
+
+/** The element at row `i`, column `j`; zero outside, which callers exclude by `requireRectangular`. */
+export function entry(matrix: Matrix, i: number, j: number): number {
+  return matrix[i]?.[j] ?? 0;
+}
+
+/** A `rows` by `columns` matrix filled by `value(i, j)`. */
+export function build(rows: number, columns: number, value: (i: number, j: number) => number): number[][] {
+  return Array.from({ length: rows }, (_, i) => Array.from({ length: columns }, (_, j) => value(i, j)));
+}
+
+/**
+ * Refuses a matrix with ragged rows, no rows, or entries that are not finite numbers.
+ * @throws EngineError `not-rectangular`, `not-finite`
+ */
+export function requireRectangular(matrix: Matrix, field = 'matrix'): void {
+  const columns = matrix[0]?.length ?? 0;
+  if (columns === 0)
+    throw new EngineError(
+      'not-rectangular',
+      field,
+      `${field} is empty; give at least one row and one column.`,
+    );
+  matrix.forEach((row, i) => {
+    if (row.length !== columns) {
+      throw new EngineError(
+        'not-rectangular',
+        `${field}[${i}]`,
+        `Row ${i + 1} of ${field} has ${row.length} columns where ${columns} are expected.`,
+      );
+    }
+    for (const [j, value] of row.entries()) {
+      if (!Number.isFinite(value)) {
+        throw new EngineError(
+          'not-finite',
+          `${field}[${i}][${j}]`,
+          `${field}[${i}][${j}] is ${value}; a finite number is expected.`,
+        );
+      }
+    }
+  });
+}
+
+/** Refuses what is not a square matrix of finite numbers. */
+function requireSquare(matrix: Matrix, field = 'matrix'): void {
+  requireRectangular(matrix, field);
+  const columns = matrix[0]?.length ?? 0;
+  if (columns !== matrix.length) {
+    throw new EngineError(
+      'not-square',
+      field,
+      `${field} has ${matrix.length} rows and ${columns} columns; a square matrix is expected.`,
+    );
+  }
+}
+
+/**
+ * Refuses a matrix that is not square and symmetric (relative difference above 1e-9 of the larger diagonal scale).
+ * @throws EngineError `not-square`, `not-symmetric`, `not-rectangular`, `not-finite`
+ */
+export function requireSymmetric(matrix: Matrix, field = 'matrix'): void {
+  requireSquare(matrix, field);
+  const pair = asymmetry(matrix);
+  if (pair) {
+    const [i, j] = pair;
+    const found = `${entry(matrix, i, j)} and ${entry(matrix, j, i)}`;
+    throw new EngineError(
+      'not-symmetric',
+      `${field}[${i}][${j}]`,
+      `${field} is not symmetric: entries ${i + 1},${j + 1} and ${j + 1},${i + 1} are ${found}.`,
+    );
+  }
+}
+
+/** The first pair of mirrored entries that differ, or undefined for a symmetric matrix. */
+function asymmetry(matrix: Matrix): [number, number] | undefined {
+  for (let i = 0; i < matrix.length; i += 1) {
+    for (let j = 0; j < i; j += 1) {
+      const upper = entry(matrix, j, i);
+      const lower = entry(matrix, i, j);
+      const scale = Math.max(
+        Math.abs(upper),
+        Math.abs(lower),
+        Math.sqrt(Math.abs(entry(matrix, i, i) * entry(matrix, j, j))),
+      );
+      if (Math.abs(upper - lower) > 1e-9 * scale) return [j, i];
+    }
+  }
+  return undefined;
+}
+
+/** Transposes `matrix`. */
+export function transpose(matrix: Matrix): number[][] {
+  return build(matrix[0]?.length ?? 0, matrix.length, (i, j) => entry(matrix, j, i));
+}
+
+/**
+ * The product `left right`.
+ * @throws EngineError `size-mismatch` when the columns of `left` are not the rows of `right`
+ */
+export function multiply(left: Matrix, right: Matrix): number[][] {
+  const inner = right.length;
+  const columns = left[0]?.length ?? 0;
+  if (columns !== inner) {
+    throw new EngineError(
+      'size-mismatch',
+      'right',
+      `A matrix of ${columns} columns cannot multiply one of ${inner} rows.`,
+    );
+  }
+  return build(left.length, right[0]?.length ?? 0, (i, j) => {
+    let sum = 0;
+    for (let k = 0; k < inner; k += 1) sum += entry(left, i, k) * entry(right, k, j);
+    return sum;
+  });
+}
+
+/**
+ * The product of a matrix and a column vector.
+ * @throws EngineError `size-mismatch`
+ */
+export function multiplyVector(matrix: Matrix, vector: readonly number[]): number[] {
+  return multiply(
+    matrix,
+    vector.map((value) => [value]),
+  ).map((row) => row[0] ?? 0);
+}
+
+/** The quadratic form `x' matrix x`: the variance of the combination `x` under the covariance `matrix`. */
+export function quadraticForm(matrix: Matrix, x: readonly number[]): number {
+  return multiplyVector(matrix, x).reduce((sum, value, i) => sum + value * (x[i] ?? 0), 0);
+}
+
+/**
+ * The lower triangle L with `L L' = matrix`. A covariance whose variances differ by many decades keeps its
+ * digits, since each pivot is judged against its own diagonal entry.
+ * @throws EngineError `not-positive-definite` naming the row at which it fails; those of `requireSymmetric`
+ */
+export function cholesky(matrix: Matrix, field = 'matrix'): number[][] {
+  requireSymmetric(matrix, field);
+  const { lower, failedAt } = factorize(matrix);
+  if (failedAt !== undefined) {
+    throw new EngineError(
+      'not-positive-definite',
+      `${field}[${failedAt}]`,
+      `${field} is not positive definite: row ${failedAt + 1} depends on the rows above it, or contradicts them.`,
+    );
+  }
+  return lower;
+}
+
+/** Cholesky factor as far as it goes, with the row of the first pivot that is not positive. */
+function factorize(matrix: Matrix): { lower: number[][]; failedAt?: number } {
+  const lower = build(matrix.length, matrix.length, () => 0);
+  for (const [i, row] of lower.entries()) {
+    for (let j = 0; j <= i; j += 1) {
+      let sum = entry(matrix, i, j);
+      for (let k = 0; k < j; k += 1) sum -= entry(lower, i, k) * entry(lower, j, k);
+      if (i !== j) row[j] = sum / entry(lower, j, j);
+      else if (sum > PIVOT_TOLERANCE * entry(matrix, i, i)) row[i] = Math.sqrt(sum);
+      else return { lower, failedAt: i };
+    }
+  }
+  return { lower };
+}
+
+/** Scales that bring a symmetric matrix to comparable rows, so that one tolerance judges every pivot. */
+function equilibrium(matrix: Matrix): number[] {
+  const scales = matrix.map((_, i) => {
+    const diagonal = Math.abs(entry(matrix, i, i));
+    return diagonal > 0 ? 1 / Math.sqrt(diagonal) : 0;
+  });
+  return scales.map((scale, i) => {
+    if (scale > 0) return scale;
+    const largest = Math.max(...(matrix[i] ?? []).map((value, j) => Math.abs(value) * (scales[j] || 1)));
+    return largest > 0 ? 1 / largest : 1;
+  });
+}
+
+/**
+ * Solves `matrix x = right` for a symmetric matrix, definite or not (bordered normal equations are not), by
+ * elimination with row exchange on the equilibrated matrix.
+ * @throws EngineError `singular` naming a row that depends on others; `size-mismatch`; those of `requireSymmetric`
+ */
+export function solveSymmetric(matrix: Matrix, right: readonly number[], field = 'matrix'): number[] {
+  if (right.length !== matrix.length) {
+    throw new EngineError(
+      'size-mismatch',
+      'right',
+      `${right.length} right-hand values for ${matrix.length} equations.`,
+    );
+  }
+  return solveColumns(
+    matrix,
+    right.map((value) => [value]),
+    field,
+  ).map((row) => row[0] ?? 0);
+}
+
+/**
+ * The inverse of a symmetric matrix, definite or not; symmetric to the last digit.
+ * @throws EngineError `singular`; those of `requireSymmetric`
+ */
+export function inverseSymmetric(matrix: Matrix, field = 'matrix'): number[][] {
+  const size = matrix.length;
+  const inverse = solveColumns(
+    matrix,
+    build(size, size, (i, j) => (i === j ? 1 : 0)),
+    field,
+  );
+  return build(size, size, (i, j) => (entry(inverse, i, j) + entry(inverse, j, i)) / 2);
+}
+
+/** Gauss-Jordan elimination with row exchange; solves for all right-hand columns at once. */
+function solveColumns(matrix: Matrix, right: Matrix, field: string): number[][] {
+  requireSymmetric(matrix, field);
+  const size = matrix.length;
+  const scales = equilibrium(matrix);
+  const scaled = (value: number, i: number, j: number) => value * (scales[i] ?? 1) * (scales[j] ?? 1);
+  const rows = matrix.map((row, i) => [
+    ...row.map((value, j) => scaled(value, i, j)),
+    ...(right[i] ?? []).map((value) => value * (scales[i] ?? 1)),
+  ]);
+  for (let k = 0; k < size; k += 1) eliminateColumn(rows, k, field);
+  return rows.map((row, i) => row.slice(size).map((value) => (value / (row[i] ?? 1)) * (scales[i] ?? 1)));
+}
+
+/** Brings the largest entry of column `k` onto the diagonal and clears the column elsewhere. */
+function eliminateColumn(rows: number[][], k: number, field: string): void {
+  let best = k;
+  for (let i = k + 1; i < rows.length; i += 1) {
+    if (Math.abs(entry(rows, i, k)) > Math.abs(entry(rows, best, k))) best = i;
+  }
+  const pivotRow = rows[best] ?? [];
+  const pivot = pivotRow[k] ?? 0;
+  if (Math.abs(pivot) <= PIVOT_TOLERANCE) {
+    throw new EngineError(
+      'singular',
+      `${field}[${k}]`,
+      `${field} is singular: column ${k + 1} depends on those before it.`,
+    );
+  }
+  rows[best] = rows[k] ?? [];
+  rows[k] = pivotRow;
+  rows.forEach((row, i) => {
+    const factor = (row[k] ?? 0) / pivot;
+    if (i === k || factor === 0) return;
+    for (let j = k; j < row.length; j += 1) row[j] = (row[j] ?? 0) - factor * (pivotRow[j] ?? 0);
+  });
+}
+
+/**
+ * Whether a matrix can be a covariance matrix. Where it cannot, `offending` names the pair to look at: mirrored
+ * entries that differ, a negative variance (i = j), a correlation beyond 1, or the pair that pulls the variance
+ * of some combination below zero the most.
+ * @throws EngineError `not-rectangular`, `not-finite`, `not-square`
+ */
+export function isPositiveSemidefinite(matrix: Matrix): { ok: boolean; offending?: [number, number] } {
+  requireSquare(matrix);
+  const pair = asymmetry(matrix) ?? impossiblePair(matrix);
+  if (pair) return { ok: false, offending: pair };
+  if (factorize(matrix).failedAt === undefined) return { ok: true };
+  const negative = negativeCombination(matrix);
+  return negative ? { ok: false, offending: negative } : { ok: true };
+}
+
+/** A negative variance, or a covariance larger than its two variances allow. */
+function impossiblePair(matrix: Matrix): [number, number] | undefined {
+  for (let i = 0; i < matrix.length; i += 1) {
+    if (entry(matrix, i, i) < 0) return [i, i];
+    for (let j = 0; j < i; j += 1) {
+      const limit = Math.sqrt(entry(matrix, i, i)) * Math.sqrt(Math.max(0, entry(matrix, j, j)));
+      if (Math.abs(entry(matrix, i, j)) > limit * (1 + 1e-9)) return [j, i];
+    }
+  }
+  return undefined;
+}
+
+/** The pair that weighs most in the most negative combination of the correlation matrix, if there is one. */
+function negativeCombination(matrix: Matrix): [number, number] | undefined {
+  const scales = equilibrium(matrix);
+  const correlation = build(
+    matrix.length,
+    matrix.length,
+    (i, j) => entry(matrix, i, j) * (scales[i] ?? 1) * (scales[j] ?? 1),
+  );
+  const { values, vectors } = symmetricEigen(correlation);
+  const lowest = values[0] ?? 0;
+  if (lowest >= -1e-9 * matrix.length) return undefined;
+  const vector = vectors[0] ?? [];
+  let worst: [number, number] = [0, 0];
+  let size = 0;
+  for (let i = 0; i < matrix.length; i += 1) {
+    for (let j = 0; j < i; j += 1) {
+      const part = (vector[i] ?? 0) * (vector[j] ?? 0) * entry(correlation, i, j);
+      if (part < size) {
+        size = part;
+        worst = [j, i];
+      }
+    }
+  }
+  return worst;
+}
