@@ -1,0 +1,15 @@
+/**
+ * A failure that a person can act on: the message says what is wrong and why, `next` what to do about it.
+ * Anything else that is thrown is a defect and is shown with its stack.
+ */
+export class BootError extends Error {
+  /**
+   * @param {string} message
+   * @param {string} [next]
+   */
+  constructor(message, next) {
+    super(message);
+    this.name = 'BootError';
+    this.next = next;
+  }
+}

@@ -1,0 +1,25 @@
+import path from 'node:path';
+import { distFolder, inProject } from './paths.js';
+
+/** The programs of the server, each a file of this name in server/. */
+export const entryNames = /** @type {const} */ (['index', 'migrate', 'seed-demo']);
+
+/** @typedef {(typeof entryNames)[number]} EntryName */
+
+/**
+ * @param {EntryName} name
+ * @returns {string} its source
+ */
+export function entrySource(name) {
+  return inProject('server', `${name}.ts`);
+}
+
+/**
+ * @param {EntryName} name
+ * @param {{ isDev: boolean }} options from the sources while developing, from the build otherwise
+ * @returns {[string, string[]]} program and arguments
+ */
+export function entryCommand(name, { isDev }) {
+  if (isDev) return [process.execPath, ['--import', 'tsx', entrySource(name), '--dev']];
+  return [process.execPath, [path.join(distFolder, 'server', `${name}.js`)]];
+}
