@@ -1,18 +1,18 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { EngineError } from '../errors.ts';
+import { build } from './entries.ts';
 import {
-  build,
   cholesky,
   inverseSymmetric,
   isPositiveSemidefinite,
   multiply,
   multiplyVector,
   quadraticForm,
-  requireSymmetric,
   solveSymmetric,
   transpose,
 } from './matrix.ts';
+import { requireNumbers, requireSymmetric } from './requirements.ts';
 import { symmetricEigen } from './symmetric-eigen.ts';
 
 /** Entries down to a thousandth: squares of denormal doubles have no digits left to test. */
@@ -179,5 +179,13 @@ describe('symmetricEigen', () => {
       }),
     );
     expect(symmetricEigen([[2, 1], [1, 2]]).values).toEqual([expect.closeTo(1, 14), expect.closeTo(3, 14)]); // prettier-ignore
+  });
+});
+
+describe('lists of numbers', () => {
+  it('are refused when short or not finite', () => {
+    expect(codeOf(() => requireNumbers([1], 'readings', 2))).toBe('too-few-values readings');
+    expect(codeOf(() => requireNumbers([], 'readings'))).toBe('too-few-values readings');
+    expect(codeOf(() => requireNumbers([1, Number.NaN], 'readings'))).toBe('not-finite readings[1]');
   });
 });

@@ -1,101 +1,12 @@
 import { EngineError } from '../errors.ts';
+import { build, entry, item, type Matrix } from './entries.ts';
+import { asymmetry, requireSquare, requireSymmetric } from './requirements.ts';
 import { symmetricEigen } from './symmetric-eigen.ts';
 
-/** A dense matrix by rows. Functions of this folder never change their arguments. */
-export type Matrix = readonly (readonly number[])[];
+export type { Matrix } from './entries.ts';
 
 /** Relative size under which a pivot is rounding noise of doubles and not information. */
 export const PIVOT_TOLERANCE = 1e-12;
-
-/** The element at row `i`, column `j`; zero outside, which callers exclude by `requireRectangular`. */
-export function entry(matrix: Matrix, i: number, j: number): number {
-  return matrix[i]?.[j] ?? 0;
-}
-
-/** A `rows` by `columns` matrix filled by `value(i, j)`. */
-export function build(rows: number, columns: number, value: (i: number, j: number) => number): number[][] {
-  return Array.from({ length: rows }, (_, i) => Array.from({ length: columns }, (_, j) => value(i, j)));
-}
-
-/**
- * Refuses a matrix with ragged rows, no rows, or entries that are not finite numbers.
- * @throws EngineError `not-rectangular`, `not-finite`
- */
-export function requireRectangular(matrix: Matrix, field = 'matrix'): void {
-  const columns = matrix[0]?.length ?? 0;
-  if (columns === 0)
-    throw new EngineError(
-      'not-rectangular',
-      field,
-      `${field} is empty; give at least one row and one column.`,
-    );
-  matrix.forEach((row, i) => {
-    if (row.length !== columns) {
-      throw new EngineError(
-        'not-rectangular',
-        `${field}[${i}]`,
-        `Row ${i + 1} of ${field} has ${row.length} columns where ${columns} are expected.`,
-      );
-    }
-    for (const [j, value] of row.entries()) {
-      if (!Number.isFinite(value)) {
-        throw new EngineError(
-          'not-finite',
-          `${field}[${i}][${j}]`,
-          `${field}[${i}][${j}] is ${value}; a finite number is expected.`,
-        );
-      }
-    }
-  });
-}
-
-/** Refuses what is not a square matrix of finite numbers. */
-function requireSquare(matrix: Matrix, field = 'matrix'): void {
-  requireRectangular(matrix, field);
-  const columns = matrix[0]?.length ?? 0;
-  if (columns !== matrix.length) {
-    throw new EngineError(
-      'not-square',
-      field,
-      `${field} has ${matrix.length} rows and ${columns} columns; a square matrix is expected.`,
-    );
-  }
-}
-
-/**
- * Refuses a matrix that is not square and symmetric (relative difference above 1e-9 of the larger diagonal scale).
- * @throws EngineError `not-square`, `not-symmetric`, `not-rectangular`, `not-finite`
- */
-export function requireSymmetric(matrix: Matrix, field = 'matrix'): void {
-  requireSquare(matrix, field);
-  const pair = asymmetry(matrix);
-  if (pair) {
-    const [i, j] = pair;
-    const found = `${entry(matrix, i, j)} and ${entry(matrix, j, i)}`;
-    throw new EngineError(
-      'not-symmetric',
-      `${field}[${i}][${j}]`,
-      `${field} is not symmetric: entries ${i + 1},${j + 1} and ${j + 1},${i + 1} are ${found}.`,
-    );
-  }
-}
-
-/** The first pair of mirrored entries that differ, or undefined for a symmetric matrix. */
-function asymmetry(matrix: Matrix): [number, number] | undefined {
-  for (let i = 0; i < matrix.length; i += 1) {
-    for (let j = 0; j < i; j += 1) {
-      const upper = entry(matrix, j, i);
-      const lower = entry(matrix, i, j);
-      const scale = Math.max(
-        Math.abs(upper),
-        Math.abs(lower),
-        Math.sqrt(Math.abs(entry(matrix, i, i) * entry(matrix, j, j))),
-      );
-      if (Math.abs(upper - lower) > 1e-9 * scale) return [j, i];
-    }
-  }
-  return undefined;
-}
 
 /** Transposes `matrix`. */
 export function transpose(matrix: Matrix): number[][] {
@@ -131,12 +42,12 @@ export function multiplyVector(matrix: Matrix, vector: readonly number[]): numbe
   return multiply(
     matrix,
     vector.map((value) => [value]),
-  ).map((row) => row[0] ?? 0);
+  ).map((row) => item(row, 0));
 }
 
 /** The quadratic form `x' matrix x`: the variance of the combination `x` under the covariance `matrix`. */
 export function quadraticForm(matrix: Matrix, x: readonly number[]): number {
-  return multiplyVector(matrix, x).reduce((sum, value, i) => sum + value * (x[i] ?? 0), 0);
+  return multiplyVector(matrix, x).reduce((sum, value, i) => sum + value * item(x, i), 0);
 }
 
 /**
@@ -180,7 +91,7 @@ function equilibrium(matrix: Matrix): number[] {
   });
   return scales.map((scale, i) => {
     if (scale > 0) return scale;
-    const largest = Math.max(...(matrix[i] ?? []).map((value, j) => Math.abs(value) * (scales[j] || 1)));
+    const largest = Math.max(...item(matrix, i).map((value, j) => Math.abs(value) * (scales[j] || 1)));
     return largest > 0 ? 1 / largest : 1;
   });
 }
@@ -202,7 +113,7 @@ export function solveSymmetric(matrix: Matrix, right: readonly number[], field =
     matrix,
     right.map((value) => [value]),
     field,
-  ).map((row) => row[0] ?? 0);
+  ).map((row) => item(row, 0));
 }
 
 /**
@@ -224,13 +135,13 @@ function solveColumns(matrix: Matrix, right: Matrix, field: string): number[][] 
   requireSymmetric(matrix, field);
   const size = matrix.length;
   const scales = equilibrium(matrix);
-  const scaled = (value: number, i: number, j: number) => value * (scales[i] ?? 1) * (scales[j] ?? 1);
+  const scaled = (value: number, i: number, j: number) => value * item(scales, i) * item(scales, j);
   const rows = matrix.map((row, i) => [
     ...row.map((value, j) => scaled(value, i, j)),
-    ...(right[i] ?? []).map((value) => value * (scales[i] ?? 1)),
+    ...item(right, i).map((value) => value * item(scales, i)),
   ]);
   for (let k = 0; k < size; k += 1) eliminateColumn(rows, k, field);
-  return rows.map((row, i) => row.slice(size).map((value) => (value / (row[i] ?? 1)) * (scales[i] ?? 1)));
+  return rows.map((row, i) => row.slice(size).map((value) => (value / item(row, i)) * item(scales, i)));
 }
 
 /** Brings the largest entry of column `k` onto the diagonal and clears the column elsewhere. */
@@ -239,8 +150,8 @@ function eliminateColumn(rows: number[][], k: number, field: string): void {
   for (let i = k + 1; i < rows.length; i += 1) {
     if (Math.abs(entry(rows, i, k)) > Math.abs(entry(rows, best, k))) best = i;
   }
-  const pivotRow = rows[best] ?? [];
-  const pivot = pivotRow[k] ?? 0;
+  const pivotRow = item(rows, best);
+  const pivot = item(pivotRow, k);
   if (Math.abs(pivot) <= PIVOT_TOLERANCE) {
     throw new EngineError(
       'singular',
@@ -248,12 +159,12 @@ function eliminateColumn(rows: number[][], k: number, field: string): void {
       `${field} is singular: column ${k + 1} depends on those before it.`,
     );
   }
-  rows[best] = rows[k] ?? [];
+  rows[best] = item(rows, k);
   rows[k] = pivotRow;
   rows.forEach((row, i) => {
-    const factor = (row[k] ?? 0) / pivot;
+    const factor = item(row, k) / pivot;
     if (i === k || factor === 0) return;
-    for (let j = k; j < row.length; j += 1) row[j] = (row[j] ?? 0) - factor * (pivotRow[j] ?? 0);
+    for (let j = k; j < row.length; j += 1) row[j] = item(row, j) - factor * item(pivotRow, j);
   });
 }
 
@@ -290,17 +201,17 @@ function negativeCombination(matrix: Matrix): [number, number] | undefined {
   const correlation = build(
     matrix.length,
     matrix.length,
-    (i, j) => entry(matrix, i, j) * (scales[i] ?? 1) * (scales[j] ?? 1),
+    (i, j) => entry(matrix, i, j) * item(scales, i) * item(scales, j),
   );
   const { values, vectors } = symmetricEigen(correlation);
-  const lowest = values[0] ?? 0;
+  const lowest = item(values, 0);
   if (lowest >= -1e-9 * matrix.length) return undefined;
-  const vector = vectors[0] ?? [];
+  const vector = item(vectors, 0);
   let worst: [number, number] = [0, 0];
   let size = 0;
   for (let i = 0; i < matrix.length; i += 1) {
     for (let j = 0; j < i; j += 1) {
-      const part = (vector[i] ?? 0) * (vector[j] ?? 0) * entry(correlation, i, j);
+      const part = item(vector, i) * item(vector, j) * entry(correlation, i, j);
       if (part < size) {
         size = part;
         worst = [j, i];

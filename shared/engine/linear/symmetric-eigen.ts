@@ -1,3 +1,5 @@
+import { entry, item } from './entries.ts';
+
 /**
  * Eigenvalues in rising order with their unit eigenvectors (one row each) of a symmetric matrix, by cyclic
  * Jacobi rotations: slow beside other methods, exact to the last digits, ample for the few hundred values of a
@@ -15,12 +17,8 @@ export function symmetricEigen(matrix: readonly (readonly number[])[]): {
       for (let q = p + 1; q < size; q += 1) rotate(work, vectors, p, q);
     }
   }
-  const order = work.map((_, i) => i).sort((i, j) => at(work, i, i) - at(work, j, j));
-  return { values: order.map((i) => at(work, i, i)), vectors: order.map((i) => vectors[i] ?? []) };
-}
-
-function at(rows: number[][], i: number, j: number): number {
-  return rows[i]?.[j] ?? 0;
+  const order = work.map((_, i) => i).sort((i, j) => entry(work, i, i) - entry(work, j, j));
+  return { values: order.map((i) => entry(work, i, i)), vectors: order.map((i) => item(vectors, i)) };
 }
 
 /** Sum of the squares off the diagonal, or 0 once it is below the rounding of the diagonal. */
@@ -38,9 +36,9 @@ function offDiagonal(rows: number[][]): number {
 
 /** One plane rotation that clears the entry p, q; `vectors` keeps the eigenvectors as rows. */
 function rotate(rows: number[][], vectors: number[][], p: number, q: number): void {
-  const off = at(rows, p, q);
+  const off = entry(rows, p, q);
   if (off === 0) return;
-  const theta = (at(rows, q, q) - at(rows, p, p)) / (2 * off);
+  const theta = (entry(rows, q, q) - entry(rows, p, p)) / (2 * off);
   const tangent = (theta < 0 ? -1 : 1) / (Math.abs(theta) + Math.hypot(theta, 1));
   const cosine = 1 / Math.hypot(tangent, 1);
   const sine = tangent * cosine;
@@ -50,17 +48,17 @@ function rotate(rows: number[][], vectors: number[][], p: number, q: number): vo
 }
 
 function turn(row: number[], p: number, q: number, cosine: number, sine: number): void {
-  const first = row[p] ?? 0;
-  const second = row[q] ?? 0;
+  const first = item(row, p);
+  const second = item(row, q);
   row[p] = cosine * first - sine * second;
   row[q] = sine * first + cosine * second;
 }
 
 function turnRows(rows: number[][], p: number, q: number, cosine: number, sine: number): void {
-  const first = rows[p] ?? [];
-  const second = rows[q] ?? [];
+  const first = item(rows, p);
+  const second = item(rows, q);
   first.forEach((value, k) => {
-    const other = second[k] ?? 0;
+    const other = item(second, k);
     first[k] = cosine * value - sine * other;
     second[k] = sine * value + cosine * other;
   });

@@ -1,0 +1,99 @@
+import { EngineError } from '../errors.ts';
+import { requireNumber } from '../quantity/domain.ts';
+
+/**
+ * Probability that F with `numerator` and `denominator` degrees of freedom exceeds `ratio`. With
+ * `numerator` 1 and `ratio` t squared it is the two-sided probability of Student's t.
+ * Domain: ratio >= 0, degrees of freedom finite and above 0; about 1e-12 absolute.
+ * @throws EngineError `out-of-range`, `not-finite`
+ */
+export function fUpperTail(ratio: number, numerator: number, denominator: number): number {
+  requireNumber(ratio, 'ratio', { min: 0 });
+  requireNumber(numerator, 'numerator', { above: 0 });
+  requireNumber(denominator, 'denominator', { above: 0 });
+  return incompleteBeta(numerator * ratio, denominator, denominator / 2, numerator / 2);
+}
+
+/**
+ * The ratio that F exceeds with probability `upperTail`: the critical value of a one-sided F test.
+ * @throws EngineError `not-a-probability`, `out-of-range`, `not-finite`
+ */
+export function fCriticalValue(upperTail: number, numerator: number, denominator: number): number {
+  requireNumber(upperTail, 'level');
+  if (upperTail <= 0 || upperTail >= 1) {
+    throw new EngineError(
+      'not-a-probability',
+      'level',
+      `The level is ${upperTail}; a probability between 0 and 1 is expected.`,
+    );
+  }
+  let low = -1;
+  let high = 1;
+  while (fUpperTail(Math.exp(high), numerator, denominator) > upperTail && high < 700) high *= 2;
+  while (fUpperTail(Math.exp(low), numerator, denominator) < upperTail && low > -700) low *= 2;
+  for (let step = 0; step < 100; step += 1) {
+    const middle = (low + high) / 2;
+    if (fUpperTail(Math.exp(middle), numerator, denominator) > upperTail) low = middle;
+    else high = middle;
+  }
+  return Math.exp((low + high) / 2);
+}
+
+/**
+ * Student's t that is exceeded in size with probability `level` (two-sided).
+ * @throws EngineError those of `fCriticalValue`
+ */
+export function studentCriticalValue(level: number, degreesOfFreedom: number): number {
+  return Math.sqrt(fCriticalValue(level, 1, degreesOfFreedom));
+}
+
+/** Two-sided probability of a Student t at least as large in size as `t`. */
+export function studentTwoSidedTail(t: number, degreesOfFreedom: number): number {
+  return fUpperTail(t * t, 1, degreesOfFreedom);
+}
+
+/** Regularised incomplete beta function of `b / (a + b)`; the two parts keep digits near 0 and near 1. */
+function incompleteBeta(complement: number, part: number, p: number, q: number): number {
+  const x = part / (part + complement);
+  const y = complement / (part + complement);
+  if (y === 0) return 1;
+  if (x === 0) return 0;
+  const scale = Math.exp(p * Math.log(x) + q * Math.log(y) + logGamma(p + q) - logGamma(p) - logGamma(q));
+  if (x < (p + 1) / (p + q + 2)) return (scale * betaFraction(x, p, q)) / p;
+  return 1 - (scale * betaFraction(y, q, p)) / q;
+}
+
+/** Continued fraction of the incomplete beta function (Abramowitz and Stegun 26.5.8), evaluated forwards. */
+function betaFraction(x: number, p: number, q: number): number {
+  const tiny = 1e-300;
+  let c = 1;
+  let d = 1 / awayFromZero(1 - ((p + q) * x) / (p + 1), tiny);
+  let value = d;
+  for (let m = 1; m < 2000; m += 1) {
+    const even = (m * (q - m) * x) / ((p + 2 * m - 1) * (p + 2 * m));
+    const odd = (-(p + m) * (p + q + m) * x) / ((p + 2 * m) * (p + 2 * m + 1));
+    let change = 1;
+    for (const term of [even, odd]) {
+      d = 1 / awayFromZero(1 + term * d, tiny);
+      c = awayFromZero(1 + term / c, tiny);
+      change = c * d;
+      value *= change;
+    }
+    if (Math.abs(change - 1) < 1e-15) break;
+  }
+  return value;
+}
+
+function awayFromZero(value: number, tiny: number): number {
+  return Math.abs(value) < tiny ? tiny : value;
+}
+
+/** Natural logarithm of the gamma function for x > 0: Stirling's series after shifting x above 15. */
+function logGamma(x: number): number {
+  let shift = 0;
+  let z = x;
+  for (; z < 15; z += 1) shift -= Math.log(z);
+  const w = 1 / (z * z);
+  const series = (1 / 12 - w * (1 / 360 - w * (1 / 1260 - w * (1 / 1680 - w / 1188)))) / z;
+  return shift + (z - 0.5) * Math.log(z) - z + 0.5 * Math.log(2 * Math.PI) + series;
+}

@@ -1,0 +1,52 @@
+import { EngineError } from '../errors.ts';
+import { requireNumber } from '../quantity/domain.ts';
+
+export type SensitivityWeighing = {
+  /** Reading before and after the sensitivity weight was added. */
+  readingWithout: number;
+  readingWith: number;
+  /** Mass of the sensitivity weight in mg, with its standard uncertainty. */
+  mass: number;
+  massUncertainty: number;
+  /** Density of the sensitivity weight and of the air in kg/m3: the weight is buoyed up like any other. */
+  density: number;
+  airDensity: number;
+  /** Standard uncertainty of the difference of the two readings, in units of reading. */
+  readingUncertainty: number;
+};
+
+/**
+ * Mass in mg for one unit of reading, from a small weight of known mass added to the load. Multiply differences
+ * by it; its uncertainty counts in proportion to the difference, so it matters little near balance.
+ * Source: OIML R 111-1:2004, C.6.4 (from memory).
+ * @throws EngineError `out-of-range`, `not-finite`, `air-as-dense`, `no-response`
+ */
+export function sensitivityFromWeight(a: SensitivityWeighing): {
+  sensitivity: number;
+  standardUncertainty: number;
+} {
+  requireNumber(a.readingWithout, 'readingWithout');
+  requireNumber(a.readingWith, 'readingWith');
+  requireNumber(a.mass, 'mass', { above: 0 });
+  requireNumber(a.density, 'density', { above: 0 });
+  for (const field of ['massUncertainty', 'airDensity', 'readingUncertainty'] as const)
+    requireNumber(a[field], field, { min: 0 });
+  if (a.airDensity >= a.density) {
+    throw new EngineError(
+      'air-as-dense',
+      'density',
+      `A weight of ${a.density} kg/m3 floats in air of ${a.airDensity} kg/m3.`,
+    );
+  }
+  const change = a.readingWith - a.readingWithout;
+  if (change === 0) {
+    throw new EngineError(
+      'no-response',
+      'readingWith',
+      `The reading stayed at ${a.readingWith}; the comparator did not answer to the weight.`,
+    );
+  }
+  const sensitivity = (a.mass * (1 - a.airDensity / a.density)) / change;
+  const relative = Math.hypot(a.massUncertainty / a.mass, a.readingUncertainty / change);
+  return { sensitivity, standardUncertainty: Math.abs(sensitivity) * relative };
+}
