@@ -21,3 +21,22 @@ export { densityLimits, densityLimitsByRule } from './conformity/density-limits.
 export { polarizationLimit, susceptibilityLimit } from './conformity/magnetic-limits.ts';
 export type { WeightClass, LimitsSource, DensityInterval } from './conformity/r111-2004.ts';
 export type { ClassConformity, DecisionRule, UncertaintyAllowed } from './conformity/class-conformity.ts';
+
+// air and buoyancy
+export { airDensityCipm2007, airDensitySensitivities } from './air/air-density-cipm2007.ts';
+export { airDensityUncertainty, CIPM2007_FORMULA_UNCERTAINTY } from './air/air-density-cipm2007.ts';
+export { relativeHumidityFromDewPoint } from './air/moist-air.ts';
+export { airDensitySimplified } from './air/air-density-simplified.ts';
+export { conventionalMass, massFromConventional } from './air/conventional-mass.ts';
+export { buoyancyCorrection } from './air/buoyancy-correction.ts';
+export { massAndConventional } from './air/mass-and-conventional.ts';
+export { heightCorrection } from './air/height-correction.ts';
+export { volumeAtTemperature } from './air/volume-at-temperature.ts';
+export { sorptionCorrection } from './air/sorption-correction.ts';
+export type { AirState, AirStateUncertainty, AirDensitySensitivities } from './air/air-density-cipm2007.ts';
+export type { BuoyancyCorrection } from './air/buoyancy-correction.ts';
+export type { MassKind } from './air/convention.ts';
+export type { MassAndConventional } from './air/mass-and-conventional.ts';
+export type { HeightCorrection } from './air/height-correction.ts';
+export type { VolumeAtTemperature } from './air/volume-at-temperature.ts';
+export type { SorptionCorrection, Transfer } from './air/sorption-correction.ts';
