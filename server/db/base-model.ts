@@ -1,0 +1,44 @@
+import { type Model, type Attributes, type CreationAttributes, type ModelStatic } from 'sequelize';
+import { currentAct } from './act.ts';
+
+/**
+ * Makes a model insert-only and bound to an act: a row of the register is written inside `inAct`, and never
+ * changed. The database's grants refuse the rest; this says so earlier and in words.
+ */
+export function guardRegisterModel<M extends Model>(model: ModelStatic<M>): void {
+  const needsAct = () => {
+    if (!currentAct()) throw new Error(`${model.name} is written inside an act only`);
+  };
+  const refuses = () => {
+    throw new Error(`${model.name} is insert-only: a correction is a new row`);
+  };
+  model.addHook('beforeCreate', needsAct);
+  model.addHook('beforeBulkCreate', needsAct);
+  model.addHook('beforeUpdate', refuses);
+  model.addHook('beforeBulkUpdate', refuses);
+  model.addHook('beforeDestroy', refuses);
+  model.addHook('beforeBulkDestroy', refuses);
+}
+
+/** Inserts one row and stamps it with the open act's number and time. */
+export async function insertRow<M extends Model>(
+  model: ModelStatic<M>,
+  values: Omit<CreationAttributes<M>, 'actSeq' | 'recordedAt'>,
+): Promise<M> {
+  return model.create(stamp<M>(values));
+}
+
+/** Inserts many rows in one statement, each stamped with the open act. */
+export async function insertRows<M extends Model>(
+  model: ModelStatic<M>,
+  values: Omit<CreationAttributes<M>, 'actSeq' | 'recordedAt'>[],
+): Promise<void> {
+  if (values.length === 0) return;
+  await model.bulkCreate(values.map((row) => stamp<M>(row)));
+}
+
+function stamp<M extends Model>(values: object): CreationAttributes<M> & Attributes<M> {
+  const act = currentAct();
+  return { ...values, actSeq: act?.seq, recordedAt: act?.recordedAt } as unknown as CreationAttributes<M> &
+    Attributes<M>;
+}

@@ -1,0 +1,36 @@
+/**
+ * What the application's account may do beyond reading, table by table. The register is kept insert-only
+ * here, by the database itself; a test compares this list with the catalogue and tries to break it.
+ */
+export const GRANTS: Readonly<Record<string, readonly ('INSERT' | 'UPDATE' | 'DELETE')[]>> = {
+  act: ['INSERT'],
+  document: ['INSERT'],
+  laboratory: ['INSERT'],
+  account: ['INSERT'],
+  account_password: ['INSERT'],
+  membership: ['INSERT'],
+  policy_version: ['INSERT'],
+  recognition: ['INSERT'],
+  scope_line: ['INSERT'],
+  authorisation: ['INSERT'],
+  scale_version: ['INSERT'],
+  standard: ['INSERT'],
+  weight_set: ['INSERT'],
+  set_member: ['INSERT'],
+  epoch: ['INSERT'],
+  standard_fact: ['INSERT'],
+  programme: ['INSERT'],
+  source: ['INSERT'],
+  property: ['INSERT'],
+  calibration: ['INSERT'],
+  revision: ['INSERT'],
+  assigned_value: ['INSERT'],
+  value_link: ['INSERT'],
+  source_link: ['INSERT'],
+  value_group: ['INSERT'],
+  group_covariance: ['INSERT'],
+  component: ['INSERT'],
+  value_end: ['INSERT'],
+  session: ['INSERT', 'UPDATE', 'DELETE'],
+  calibration_draft: ['INSERT', 'UPDATE'],
+};

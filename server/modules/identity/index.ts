@@ -1,0 +1,1 @@
+export { userByAccountId, verifyPassword } from './account.queries.ts';

@@ -1,0 +1,237 @@
+import { z } from 'zod';
+import { RootKind, UsedAs } from './calibrations.ts';
+import {
+  Abilities,
+  DatePrecision,
+  Day,
+  DecimalString,
+  Deviation,
+  Id,
+  LaboratoryName,
+  Medium,
+  Outcome,
+  QuantityKind,
+  Severity,
+  Stage,
+  ValueState,
+  Verdict,
+  WeightClass,
+} from './common.ts';
+
+/** GET /api/chains/:valueUid: in force on `day`, as known at the end of `known`; both default to today. */
+export const ChainQuery = z.object({ day: Day.optional(), known: Day.optional() });
+export type ChainQuery = z.infer<typeof ChainQuery>;
+
+/** Where a number for u comes from; worn by each u on screen. */
+export const UncertaintyOrigin = z.enum([
+  'stated',
+  'recomputed',
+  'inferred',
+  'agreed',
+  'by definition',
+  'unknown',
+]);
+
+/** A value in the chain. What is above one's own weights is a statement: never readings, budget or owner's customers. */
+export const ChainValue = z.object({
+  type: z.literal('value'),
+  uid: Id,
+  view: z.enum(['full', 'statement']),
+  registryNo: z.string(),
+  standardId: Id,
+  /** Address of the calibration behind it; null where this person may not open it. */
+  revisionId: Id.nullable(),
+  marking: z.string(),
+  nominal: DecimalString,
+  class: WeightClass.nullable(),
+  holder: LaboratoryName,
+  issuer: LaboratoryName,
+  certificateNo: z.string(),
+  revisionN: z.number().int(),
+  quantity: QuantityKind,
+  medium: Medium,
+  stage: Stage.nullable(),
+  deviation: Deviation,
+  expandedU: DecimalString.nullable(),
+  k: DecimalString.nullable(),
+  performedEnd: Day,
+  datePrecision: DatePrecision,
+  issuedOn: Day,
+  state: ValueState,
+  stateSince: Day.nullable(),
+  rootKind: RootKind.nullable(),
+  scaleVersion: z.string().nullable(),
+  /** Standard uncertainties, g: stated by the certificate, carried by what it leans on, as computed now. */
+  uStated: z.number().nullable(),
+  uCarried: z.number().nullable(),
+  uNow: z.number().nullable(),
+  uOrigin: UncertaintyOrigin,
+  /** Tier from the focus (0) upwards: the longest way. */
+  tier: z.number().int(),
+  /** Local part's share of the focus's variance (a fraction, signed); null where unknown. */
+  localShare: z.number().nullable(),
+  /** What flows through this node, as a share of the focus's variance. */
+  share: z.number().nullable(),
+});
+export type ChainValue = z.infer<typeof ChainValue>;
+
+/** An effect shared by several values: a volume, a scale version, one apparatus. */
+export const ChainSource = z.object({
+  type: z.literal('source'),
+  uid: Id,
+  kind: z.enum(['volume', 'air', 'drift', 'apparatus', 'scale version']),
+  name: z.string(),
+  /** Of which standard, where it belongs to one. */
+  registryNo: z.string().nullable(),
+  u: z.number(),
+  unit: z.string(),
+  tier: z.number().int(),
+  share: z.number().nullable(),
+});
+export type ChainSource = z.infer<typeof ChainSource>;
+
+export const ChainLink = z.object({
+  childUid: Id,
+  /** A value or a source. */
+  parentUid: Id,
+  role: z.enum(['reference', 'informs', 'source']),
+  sensitivity: z.number(),
+  usedAs: UsedAs.nullable(),
+  usedBegin: Day.nullable(),
+  usedEnd: Day.nullable(),
+  /** Signed share of the focus's variance that flows through; null where not computable. */
+  flow: z.number().nullable(),
+  /** Worst outcome of its checks under each verdict. */
+  conduct: z.enum(['sound', 'caution', 'broken', 'not judged']),
+  today: z.enum(['sound', 'caution', 'broken', 'not judged']),
+});
+export type ChainLink = z.infer<typeof ChainLink>;
+
+/** What a check is about. Parameters fill the rule's sentence: texts only, already formatted for reading. */
+export const ChainCheck = z.object({
+  rule: z.string(),
+  subject: z.discriminatedUnion('type', [
+    z.object({ type: z.literal('link'), childUid: Id, parentUid: Id }),
+    z.object({ type: z.literal('value'), uid: Id }),
+    z.object({ type: z.literal('chain') }),
+  ]),
+  verdict: Verdict,
+  outcome: Outcome,
+  /** Severity of this outcome; a rule's own, unless it depends on the effect. */
+  severity: Severity,
+  parameters: z.record(z.string(), z.string()),
+  /** Which of the rule's sentences applies. */
+  sentence: z.string(),
+});
+export type ChainCheck = z.infer<typeof ChainCheck>;
+
+/** Said once per rule: its clause and its sentences, with `{parameter}` places. */
+export const ChainRule = z.object({
+  id: z.string(),
+  title: z.string(),
+  clause: z.string(),
+  edition: z.string(),
+  severity: Severity,
+  scope: z.enum(['link', 'value', 'chain']),
+  sentences: z.record(z.string(), z.string()),
+});
+
+/** One line of "where the uncertainty comes from". */
+export const Contribution = z.object({
+  /** A value (its local part), a group's member values, or a source. */
+  uids: z.array(Id),
+  label: z.string(),
+  kind: z.enum(['local part', 'weighing design', 'source', 'root', 'class limit']),
+  /** Share of the focus's variance, signed. */
+  share: z.number(),
+});
+
+/** What would help most, in plain numbers: U of the focus now and after. Grams, at the focus's k. */
+export const Improvement = z.object({
+  action: z.string(),
+  uids: z.array(Id),
+  expandedUNow: z.number(),
+  expandedUThen: z.number(),
+});
+
+const SideValue = z.object({
+  quantity: QuantityKind,
+  deviation: Deviation,
+  expandedU: z.number().nullable(),
+  origin: z.enum(['stated', 'computed from the other and the density']),
+  isTheOneToType: z.boolean(),
+});
+
+export const ChainResponse = z.object({
+  question: z.object({ valueUid: Id, day: Day, known: Day, ruleSet: z.string(), engine: z.string() }),
+  focusUid: Id,
+  nodes: z.array(z.discriminatedUnion('type', [ChainValue, ChainSource])),
+  links: z.array(ChainLink),
+  /** The definition in force when the roots were determined. */
+  definition: z.enum(['planck constant', 'international prototype', 'both']),
+  uncertainty: z.object({
+    /** Grams, k = 1; null with the reason in `missing`. */
+    standard: z.number().nullable(),
+    /** At the k the certificate states. */
+    expanded: z.number().nullable(),
+    k: z.number(),
+    stated: z.number().nullable(),
+    carried: z.number().nullable(),
+    degreesOfFreedom: z.number().nullable(),
+    /** "unknown, because ...": one sentence per value that states no U. */
+    missing: z.array(z.object({ uid: Id, because: z.string() })),
+  }),
+  rootShares: z.array(z.object({ uid: Id, share: z.number() })),
+  contributions: z.array(Contribution),
+  improvements: z.array(Improvement),
+  /** Mass and conventional mass side by side, where the density allows; the one to type into a balance named. */
+  sideBySide: z.array(SideValue),
+  sideBySideNote: z.string().nullable(),
+  rules: z.array(ChainRule),
+  checks: z.array(ChainCheck),
+  /** Counts of links by their worst outcome under each verdict. */
+  summary: z.object({
+    links: z.number().int(),
+    conduct: z.object({
+      sound: z.number().int(),
+      caution: z.number().int(),
+      broken: z.number().int(),
+      notJudged: z.number().int(),
+    }),
+    today: z.object({
+      sound: z.number().int(),
+      caution: z.number().int(),
+      broken: z.number().int(),
+      notJudged: z.number().int(),
+    }),
+  }),
+  abilities: Abilities,
+});
+export type ChainResponse = z.infer<typeof ChainResponse>;
+
+/** GET /api/chains/:valueUid/covariance/:otherUid: of two values that both are open to this person. Grams squared. */
+export const CovarianceResponse = z.object({
+  covariance: z.number().nullable(),
+  correlation: z.number().nullable(),
+  standardUncertainties: z.tuple([z.number().nullable(), z.number().nullable()]),
+});
+
+/** GET /api/chains?q=: which chain to open. */
+export const ChainSearchQuery = z.object({ q: z.string().trim().max(80).default('') });
+export const ChainSearchResponse = z.object({
+  values: z.array(
+    z.object({
+      uid: Id,
+      registryNo: z.string(),
+      nominal: DecimalString,
+      marking: z.string(),
+      holder: LaboratoryName,
+      quantity: QuantityKind,
+      certificateNo: z.string(),
+      performedEnd: Day,
+      deviation: Deviation,
+      expandedU: DecimalString.nullable(),
+      k: DecimalString.nullable(),
+    }),
+  ),
+});

@@ -1,0 +1,59 @@
+import { z } from 'zod';
+import { Day, Id, LaboratoryName } from './common.ts';
+import { DraftSummary } from './calibrations.ts';
+
+/** GET /api/desk: what needs this person today, by role; empty parts are not sent. */
+export const DeskResponse = z.object({
+  day: Day,
+  laboratories: z.array(LaboratoryName),
+  /** Sent to sign, where this person may sign. */
+  toSign: z.array(DraftSummary),
+  /** Open drafts of this person's laboratories. */
+  drafts: z.array(DraftSummary),
+  /** References due within 60 days or overdue, by the laboratory's own programme. */
+  due: z.array(
+    z.object({
+      standardId: Id,
+      registryNo: z.string(),
+      marking: z.string(),
+      holder: LaboratoryName,
+      dueOn: Day,
+      lastCalibrated: Day.nullable(),
+    }),
+  ),
+  /** Values of ours whose reference was superseded or withdrawn since. */
+  upstream: z.array(
+    z.object({
+      valueUid: Id,
+      registryNo: z.string(),
+      referenceRegistryNo: z.string(),
+      what: z.enum(['superseded', 'withdrawn']),
+      on: Day,
+    }),
+  ),
+  /** For the registrar: size of the register. */
+  register: z
+    .object({
+      laboratories: z.number().int(),
+      standards: z.number().int(),
+      values: z.number().int(),
+      acts: z.number().int(),
+    })
+    .nullable(),
+  /** For an assessor: laboratories opened to them and until when. */
+  assessments: z.array(z.object({ laboratory: LaboratoryName, until: Day.nullable() })),
+});
+export type DeskResponse = z.infer<typeof DeskResponse>;
+
+/** GET /api/find?q=: one box finds anything by number, marking, certificate or laboratory. */
+export const FindQuery = z.object({ q: z.string().trim().min(1, 'Type a number, marking or name').max(120) });
+export const FindResponse = z.object({
+  found: z.array(
+    z.object({
+      kind: z.enum(['standard', 'set', 'certificate', 'laboratory']),
+      id: Id,
+      label: z.string(),
+      detail: z.string(),
+    }),
+  ),
+});
