@@ -40,3 +40,19 @@ export type { MassAndConventional } from './air/mass-and-conventional.ts';
 export type { HeightCorrection } from './air/height-correction.ts';
 export type { VolumeAtTemperature } from './air/volume-at-temperature.ts';
 export type { SorptionCorrection, Transfer } from './air/sorption-correction.ts';
+
+// the network
+export { propagate } from './network/propagate.ts';
+export { compileNetwork } from './network/compile-network.ts';
+export { networkFromArrays } from './network/network-from-arrays.ts';
+export { variances } from './network/variances.ts';
+export { covariance, covarianceMatrix } from './network/covariance.ts';
+export { inferLocal } from './network/infer-local.ts';
+export { shift } from './network/shift.ts';
+export { applyChanges } from './network/apply-changes.ts';
+export { groupKey } from './network/network.ts';
+export type { Network, NetworkValue, NetworkSource, NetworkGroup, NetworkLink } from './network/network.ts';
+export type { Propagation } from './network/propagate.ts';
+export type { CompiledNetwork } from './network/compiled-network.ts';
+export type { NetworkArrays } from './network/network-from-arrays.ts';
+export type { Change, Notice } from './network/changes.ts';

@@ -1,0 +1,49 @@
+import { Decimal } from '#shared/decimal.ts';
+import { EngineError } from '../errors.ts';
+import { requireNonNegative } from './check-network.ts';
+
+const PLAIN_DECIMAL = /^\d+(\.\d+)?$/;
+
+/**
+ * The local part of a value whose certificate states only U and k: `l^2 = (U/k)^2 - carried variance`, taken once
+ * at issue. U is rounded, so it stands for the interval (U +/- half a last digit)/k:
+ * `deficit` (l = 0): even the upper end is below what the parents carry; `within rounding` (l = 0): the carried
+ * uncertainty lies in the interval, so l cannot be told from 0; `holds`: l is told from 0.
+ * @param a.expandedUncertainty text as printed, since its last digit matters, in the network's unit
+ * @param a.carriedVariance variance the parents bring, each with its uncertainty as used
+ * @throws EngineError `not-a-decimal`, `out-of-range`
+ */
+export function inferLocal(a: {
+  expandedUncertainty: string;
+  coverageFactor: number;
+  carriedVariance: number;
+}): {
+  local: number;
+  verdict: 'holds' | 'within rounding' | 'deficit';
+} {
+  const text = a.expandedUncertainty.trim();
+  if (!PLAIN_DECIMAL.test(text)) {
+    throw new EngineError(
+      'not-a-decimal',
+      'expandedUncertainty',
+      `"${a.expandedUncertainty}" is not a plain decimal such as 0.030; write U as printed, without exponent or unit.`,
+    );
+  }
+  if (!(Number.isFinite(a.coverageFactor) && a.coverageFactor > 0)) {
+    throw new EngineError(
+      'out-of-range',
+      'coverageFactor',
+      `k is ${a.coverageFactor}; a number above 0 is expected.`,
+    );
+  }
+  requireNonNegative(a.carriedVariance, 'carriedVariance');
+  const decimals = text.split('.')[1]?.length ?? 0;
+  const half = new Decimal(10).pow(-decimals).div(2);
+  const varianceOf = (expanded: Decimal) => expanded.div(a.coverageFactor).pow(2);
+  const carried = new Decimal(a.carriedVariance);
+  const stated = new Decimal(text);
+  if (carried.gt(varianceOf(stated.plus(half)))) return { local: 0, verdict: 'deficit' };
+  if (carried.gte(varianceOf(Decimal.max(0, stated.minus(half)))))
+    return { local: 0, verdict: 'within rounding' };
+  return { local: varianceOf(stated).minus(carried).sqrt().toNumber(), verdict: 'holds' };
+}
