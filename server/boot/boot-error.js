@@ -13,3 +13,12 @@ export class BootError extends Error {
     this.next = next;
   }
 }
+
+/**
+ * @param {unknown} error
+ * @returns {string} what a person needs: the message and the way out, or the stack of a defect
+ */
+export function errorText(error) {
+  if (error instanceof BootError) return error.next ? `${error.message}\n${error.next}` : error.message;
+  return error instanceof Error ? (error.stack ?? error.message) : String(error);
+}

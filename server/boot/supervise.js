@@ -1,4 +1,4 @@
-import { BootError } from './boot-error.js';
+import { errorText } from './boot-error.js';
 import { say } from './step.js';
 
 /** @typedef {{ name: string, close: () => Promise<void> }} Closer */
@@ -88,9 +88,5 @@ function ignoreClosedTerminal() {
 
 /** @param {unknown} error */
 function report(error) {
-  if (error instanceof BootError) {
-    process.stderr.write(`\n${error.message}\n${error.next ? `${error.next}\n` : ''}`);
-  } else {
-    process.stderr.write(`\n${error instanceof Error ? error.stack : String(error)}\n`);
-  }
+  process.stderr.write(`\n${errorText(error)}\n`);
 }

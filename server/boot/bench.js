@@ -1,0 +1,3 @@
+import { runTool } from './tool.js';
+
+runTool({ name: 'bench', program: 'tests/bench/run.ts', needsChromium: false });
