@@ -64,6 +64,7 @@ export function precisionTest(a: {
 }): HistoryTest {
   const { run, history } = a;
   requireNumber(history.standardDeviation, 'history.standardDeviation', { above: 0 });
+  requireNumber(run.standardDeviation, 'run.standardDeviation', { min: 0 });
   requireNumber(run.degreesOfFreedom, 'run.degreesOfFreedom', { above: 0 });
   requireNumber(history.degreesOfFreedom, 'history.degreesOfFreedom', { above: 0 });
   const statistic = (run.standardDeviation / history.standardDeviation) ** 2;

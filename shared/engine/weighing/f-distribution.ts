@@ -4,14 +4,30 @@ import { requireNumber } from '../quantity/domain.ts';
 /**
  * Probability that F with `numerator` and `denominator` degrees of freedom exceeds `ratio`. With
  * `numerator` 1 and `ratio` t squared it is the two-sided probability of Student's t.
- * Domain: ratio >= 0, degrees of freedom finite and above 0; about 1e-12 absolute.
+ * Domain: ratio >= 0, degrees of freedom finite and at least 1; about 1e-12 absolute.
  * @throws EngineError `out-of-range`, `not-finite`
  */
 export function fUpperTail(ratio: number, numerator: number, denominator: number): number {
   requireNumber(ratio, 'ratio', { min: 0 });
-  requireNumber(numerator, 'numerator', { above: 0 });
-  requireNumber(denominator, 'denominator', { above: 0 });
-  return incompleteBeta(numerator * ratio, denominator, denominator / 2, numerator / 2);
+  requireNumber(numerator, 'numerator', { min: 1 });
+  requireNumber(denominator, 'denominator', { min: 1 });
+  return incompleteBeta((numerator / denominator) * ratio, denominator / 2, numerator / 2);
+}
+
+/**
+ * Refuses a significance level that is no probability, or so small that its critical value outgrows a double.
+ * @throws EngineError `not-finite`, `not-a-probability`
+ */
+export function requireLevel(level: number): number {
+  requireNumber(level, 'level');
+  if (level < 1e-100 || level >= 1) {
+    throw new EngineError(
+      'not-a-probability',
+      'level',
+      `level is ${level}; a probability between 0 and 1 is expected.`,
+    );
+  }
+  return level;
 }
 
 /**
@@ -19,18 +35,11 @@ export function fUpperTail(ratio: number, numerator: number, denominator: number
  * @throws EngineError `not-a-probability`, `out-of-range`, `not-finite`
  */
 export function fCriticalValue(upperTail: number, numerator: number, denominator: number): number {
-  requireNumber(upperTail, 'level');
-  if (upperTail <= 0 || upperTail >= 1) {
-    throw new EngineError(
-      'not-a-probability',
-      'level',
-      `The level is ${upperTail}; a probability between 0 and 1 is expected.`,
-    );
-  }
+  requireLevel(upperTail);
   let low = -1;
   let high = 1;
-  while (fUpperTail(Math.exp(high), numerator, denominator) > upperTail && high < 700) high *= 2;
-  while (fUpperTail(Math.exp(low), numerator, denominator) < upperTail && low > -700) low *= 2;
+  while (fUpperTail(Math.exp(high), numerator, denominator) > upperTail) high *= 2;
+  while (fUpperTail(Math.exp(low), numerator, denominator) < upperTail) low *= 2;
   for (let step = 0; step < 100; step += 1) {
     const middle = (low + high) / 2;
     if (fUpperTail(Math.exp(middle), numerator, denominator) > upperTail) low = middle;
@@ -52,12 +61,12 @@ export function studentTwoSidedTail(t: number, degreesOfFreedom: number): number
   return fUpperTail(t * t, 1, degreesOfFreedom);
 }
 
-/** Regularised incomplete beta function of `b / (a + b)`; the two parts keep digits near 0 and near 1. */
-function incompleteBeta(complement: number, part: number, p: number, q: number): number {
-  const x = part / (part + complement);
-  const y = complement / (part + complement);
-  if (y === 0) return 1;
+/** Regularised incomplete beta function of `1 / (1 + odds)`; the two parts keep digits near 0 and near 1. */
+function incompleteBeta(odds: number, p: number, q: number): number {
+  const x = 1 / (1 + odds);
+  if (odds === 0) return 1;
   if (x === 0) return 0;
+  const y = odds / (1 + odds);
   const scale = Math.exp(p * Math.log(x) + q * Math.log(y) + logGamma(p + q) - logGamma(p) - logGamma(q));
   if (x < (p + 1) / (p + q + 2)) return (scale * betaFraction(x, p, q)) / p;
   return 1 - (scale * betaFraction(y, q, p)) / q;

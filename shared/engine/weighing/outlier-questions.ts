@@ -2,7 +2,7 @@ import { EngineError } from '../errors.ts';
 import { item } from '../linear/entries.ts';
 import { requireNumbers } from '../linear/requirements.ts';
 import { requireNumber } from '../quantity/domain.ts';
-import { studentCriticalValue, studentTwoSidedTail } from './f-distribution.ts';
+import { requireLevel, studentCriticalValue, studentTwoSidedTail } from './f-distribution.ts';
 import type { PrecisionEstimate } from './pooled-standard-deviation.ts';
 
 /** One value that lies far from its fellows, put as a question; the value stays where it is. */
@@ -29,14 +29,7 @@ export function outlierQuestions(a: {
   precision?: PrecisionEstimate;
 }): OutlierQuestion[] {
   requireNumbers(a.values, 'values', 2);
-  const level = requireNumber(a.level ?? 0.01, 'level');
-  if (level <= 0 || level >= 1) {
-    throw new EngineError(
-      'not-a-probability',
-      'level',
-      `The level is ${level}; a probability between 0 and 1 is expected.`,
-    );
-  }
+  const level = requireLevel(a.level ?? 0.01);
   if (a.precision) {
     requireNumber(a.precision.standardDeviation, 'precision.standardDeviation', { above: 0 });
     requireNumber(a.precision.degreesOfFreedom, 'precision.degreesOfFreedom', { above: 0 });
