@@ -2,7 +2,7 @@
 // dependencies are installed, and its memory goes with it.
 import path from 'node:path';
 import { build } from 'vite';
-import { entryNames, entrySource } from './entries.js';
+import { entryNames, entrySource, hasEntry } from './entries.js';
 import { projectFolder } from './paths.js';
 
 const outFolder = process.argv[2];
@@ -17,6 +17,8 @@ await build({
     outDir: path.join(outFolder, 'server'),
     emptyOutDir: true,
     ssr: true,
-    rolldownOptions: { input: Object.fromEntries(entryNames.map((name) => [name, entrySource(name)])) },
+    rolldownOptions: {
+      input: Object.fromEntries(entryNames.filter(hasEntry).map((name) => [name, entrySource(name)])),
+    },
   },
 });

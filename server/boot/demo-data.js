@@ -1,6 +1,6 @@
 import { existsSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
-import { entryCommand } from './entries.js';
+import { entryCommand, hasEntry } from './entries.js';
 import { mariadbFolder } from './mariadb-folder.js';
 import { runOrFail } from './run-command.js';
 import { say, step } from './step.js';
@@ -33,6 +33,7 @@ export function discardUnfinishedDemoData(folder) {
 export async function ensureDemoData({ folder, env, isDev }) {
   const marker = markerFile(folder);
   if (existsSync(marker) && readFileSync(marker, 'utf8') === 'done') return;
+  if (!hasEntry('seed-demo')) return;
   await step('Making the demo network (once; a minute or two)', async () => {
     writeFileSync(marker, 'begun');
     await runOrFail('Making the demo network', ...entryCommand('seed-demo', { isDev }), {

@@ -1,7 +1,7 @@
 import { cpSync, existsSync, mkdirSync, readdirSync, renameSync, rmSync } from 'node:fs';
 import path from 'node:path';
 import { credentialsOf } from './credentials.js';
-import { entryCommand } from './entries.js';
+import { entryCommand, hasEntry } from './entries.js';
 import { lockDataFolder, takeLock } from './folder-lock.js';
 import { startMariadb } from './mariadb-server.js';
 import { migrate } from './migrate.js';
@@ -49,17 +49,18 @@ async function makeTemplate(folder) {
     isDev: false,
   };
   const env = serverEnvironment(settings);
-  await migrate({ env, isDev: false });
-  await step('Making the demo network (once for these sources; a minute or two)', async () => {
-    await runOrFail('Making the demo network', ...entryCommand('seed-demo', { isDev: false }), { env });
-  });
+  await migrate({ env, isDev: true });
+  if (hasEntry('seed-demo'))
+    await step('Making the demo network (once for these sources; a minute or two)', async () => {
+      await runOrFail('Making the demo network', ...entryCommand('seed-demo', { isDev: true }), { env });
+    });
   await database.stop();
   release();
   renameSync(unfinished, folder);
 }
 
 /**
- * A running MariaDB on a fresh copy of the demo network. The build has to be there.
+ * A running MariaDB on a fresh copy of the demo network.
  * @param {string} name of the data folder in .data-test; one command at a time may use it
  * @returns {Promise<{ folder: string, lock: number, database: import('./mariadb-server.js').Mariadb, stop: () => Promise<void> }>}
  */

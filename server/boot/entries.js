@@ -1,3 +1,4 @@
+import { existsSync } from 'node:fs';
 import path from 'node:path';
 import { distFolder, inProject } from './paths.js';
 
@@ -12,6 +13,14 @@ export const entryNames = /** @type {const} */ (['index', 'migrate', 'seed-demo'
  */
 export function entrySource(name) {
   return inProject('server', `${name}.ts`);
+}
+
+/**
+ * @param {EntryName} name
+ * @returns {boolean}
+ */
+export function hasEntry(name) {
+  return existsSync(entrySource(name));
 }
 
 /**

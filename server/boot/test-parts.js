@@ -1,7 +1,9 @@
 import { mkdirSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
+import { ensureBuild } from './build.js';
 import { startDemoCopy } from './demo-template.js';
 import { startDemoServer } from './demo-server.js';
+import { withSetupLock } from './folder-lock.js';
 import { inProject, testDataFolder } from './paths.js';
 import { runCommand } from './run-command.js';
 import { oneCheck, playwrightCounts, tapCounts, vitestCounts } from './test-counts.js';
@@ -11,7 +13,7 @@ import { oneCheck, playwrightCounts, tapCounts, vitestCounts } from './test-coun
 /**
  * @typedef {object} TestPart
  * @property {string} name as given to `npm test -- <name>`
- * @property {('mariadb' | 'build' | 'chromium')[]} needs set up before the first part begins
+ * @property {('mariadb' | 'chromium')[]} needs set up before the first part begins
  * @property {(tools: { chromium: string }) => Promise<PartResult>} run
  */
 
@@ -22,9 +24,9 @@ export const testParts = [
   { name: 'types', needs: [], run: () => check('typescript/bin/tsc', ['-p', '.', '--noEmit']) },
   { name: 'unit', needs: [], run: () => vitest('unit', process.env) },
   { name: 'client', needs: [], run: () => vitest('client', process.env) },
-  { name: 'api', needs: ['mariadb', 'build'], run: api },
+  { name: 'api', needs: ['mariadb'], run: api },
   { name: 'boot', needs: ['mariadb'], run: boot },
-  { name: 'journeys', needs: ['mariadb', 'build', 'chromium'], run: journeys },
+  { name: 'journeys', needs: ['mariadb', 'chromium'], run: journeys },
 ];
 
 /**
@@ -85,10 +87,12 @@ async function boot() {
 }
 
 /**
+ * Whole journeys in a browser, on the built product.
  * @param {{ chromium: string }} tools
  * @returns {Promise<PartResult>}
  */
 async function journeys({ chromium }) {
+  await withSetupLock(ensureBuild);
   const server = await startDemoServer('journeys');
   try {
     const report = freshReport('journeys.json');

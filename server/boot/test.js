@@ -1,5 +1,4 @@
 import path from 'node:path';
-import { ensureBuild } from './build.js';
 import { BootError, errorText } from './boot-error.js';
 import { ensureChromium } from './chromium.js';
 import { ensureDependencies } from './dependencies.js';
@@ -80,7 +79,6 @@ async function setUp(parts) {
     await ensureDependencies();
     if (needs.has('mariadb')) await ensureMariadb();
     const chromium = needs.has('chromium') ? await ensureChromium() : '';
-    if (needs.has('build')) await ensureBuild();
     return { chromium };
   });
 }
