@@ -35,7 +35,11 @@ const ROLES_ON_DAY = `
         AND later.valid_from <= :day AND (later.valid_to IS NULL OR later.valid_to >= :day))`;
 
 /** The person behind an account with the roles of today; null for an account that does not exist. */
-export async function userByAccountId(database: Sequelize, clock: Clock, accountId: string): Promise<User | null> {
+export async function userByAccountId(
+  database: Sequelize,
+  clock: Clock,
+  accountId: string,
+): Promise<User | null> {
   const day = clock.now().toISOString().slice(0, 10);
   const [account, roles] = await Promise.all([
     readRow<AccountRow>(database, 'SELECT id, email, name FROM account WHERE id = :accountId', { accountId }),
@@ -74,6 +78,8 @@ function userOf(account: AccountRow, roles: RoleRow[]): User {
         ? [{ laboratoryId: row.laboratoryId, role: row.role as LaboratoryRole }]
         : [],
     ),
-    assessedLaboratoryIds: roles.flatMap((row) => (row.role === 'assessor' && row.laboratoryId ? [row.laboratoryId] : [])),
+    assessedLaboratoryIds: roles.flatMap((row) =>
+      row.role === 'assessor' && row.laboratoryId ? [row.laboratoryId] : [],
+    ),
   };
 }

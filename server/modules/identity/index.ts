@@ -1,1 +1,4 @@
 export { userByAccountId, verifyPassword } from './account.queries.ts';
+export { createAccount, setPassword } from './account.service.ts';
+export { assertMembership, type RoleName } from './membership.service.ts';
+export { hashPassword } from './password.ts';

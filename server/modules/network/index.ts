@@ -1,0 +1,8 @@
+export {
+  adoptPolicy,
+  assertAuthorisation,
+  assertRecognition,
+  assertScopeLine,
+  createLaboratory,
+  createScaleVersion,
+} from './network.service.ts';
