@@ -96,13 +96,19 @@ function inShownUnit(input: QuantityInput): { stated: Stated; unit: string } {
   const given = input.kind === 'uncertainty' ? input.value : (input.expandedUncertainty ?? null);
   const expanded = given === null ? null : new Decimal(given).toFixed();
   if (input.shownIn === undefined || !isUnit(unit)) {
-    return { stated: { value: new Decimal(input.value), expanded: expanded && new Decimal(expanded) }, unit };
+    return {
+      stated: { value: new Decimal(input.value), expanded: expanded === null ? null : new Decimal(expanded) },
+      unit,
+    };
   }
   const grams = (text: string): string => convertText(text, unit, 'g');
   const shownIn =
     input.shownIn === 'auto' ? deviationUnit(grams(input.value), expanded && grams(expanded)) : input.shownIn;
   const shown = (text: string): Decimal => new Decimal(convertText(text, unit, shownIn));
-  return { stated: { value: shown(input.value), expanded: expanded && shown(expanded) }, unit: shownIn };
+  return {
+    stated: { value: shown(input.value), expanded: expanded === null ? null : shown(expanded) },
+    unit: shownIn,
+  };
 }
 
 function digits(

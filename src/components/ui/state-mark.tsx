@@ -1,7 +1,5 @@
 import type { ReactNode } from 'react';
-
-/** How something stands after it was checked. */
-export type State = 'sound' | 'caution' | 'broken' | 'not judged' | 'does not apply';
+import type { State } from '#src/lib/states.ts';
 
 const COLOURS: Record<State, string> = {
   sound: 'text-sound',

@@ -1,0 +1,37 @@
+/** Every screen's place: `path` for the router, `href` for links. No other file writes an address by hand. */
+export const paths = {
+  home: { path: '/', href: () => '/' },
+  signIn: {
+    path: '/sign-in',
+    /** @param from relative path to come back to after sign-in */
+    href: (from?: string) =>
+      from && from !== '/' ? `/sign-in?from=${encodeURIComponent(from)}` : '/sign-in',
+  },
+  desk: { path: '/desk', href: () => '/desk' },
+  standards: { path: '/standards', href: () => '/standards' },
+  newStandard: { path: '/standards/new', href: () => '/standards/new' },
+  newSet: { path: '/standards/new-set', href: () => '/standards/new-set' },
+  standard: { path: '/standards/:standardId', href: (standardId: string) => `/standards/${standardId}` },
+  calibrations: { path: '/calibrations', href: () => '/calibrations' },
+  calibrationDraft: {
+    path: '/calibrations/drafts/:draftId',
+    href: (draftId: string) => `/calibrations/drafts/${draftId}`,
+  },
+  calibration: {
+    path: '/calibrations/:revisionId',
+    href: (revisionId: string) => `/calibrations/${revisionId}`,
+  },
+  chains: { path: '/chains', href: () => '/chains' },
+  chain: { path: '/chains/:valueUid', href: (valueUid: string) => `/chains/${valueUid}` },
+  network: { path: '/network', href: () => '/network' },
+  laboratory: { path: '/network/:laboratoryId', href: (laboratoryId: string) => `/network/${laboratoryId}` },
+} as const;
+
+/** The sections of the rail that exist. */
+export const SECTIONS = [
+  { label: 'Desk', href: paths.desk.href() },
+  { label: 'Standards', href: paths.standards.href() },
+  { label: 'Calibrations', href: paths.calibrations.href() },
+  { label: 'Chains', href: paths.chains.href() },
+  { label: 'Network', href: paths.network.href() },
+];

@@ -1,0 +1,32 @@
+import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
+import { SessionResponse, SignOutResponse, type SignInBody } from '#shared/contracts/identity.ts';
+import { get, post, remove } from '#src/lib/api-client.ts';
+
+/** Who is signed in. Asked once; sign-in, sign-out and a refused request make it asked again. */
+export const sessionQuery = queryOptions({
+  queryKey: ['session'],
+  queryFn: ({ signal }) => get('/api/session', SessionResponse, { signal }),
+  staleTime: Infinity,
+  refetchOnWindowFocus: 'always',
+});
+
+/** Signs in; everything cached for whoever was here before is forgotten. */
+export function useSignIn() {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (body: SignInBody) => post('/api/session', body, SessionResponse),
+    onSuccess: (session) => {
+      queries.clear();
+      queries.setQueryData(sessionQuery.queryKey, session);
+    },
+  });
+}
+
+/** Signs out, and forgets what was read. */
+export function useSignOut() {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: () => remove('/api/session', SignOutResponse),
+    onSuccess: () => queries.clear(),
+  });
+}

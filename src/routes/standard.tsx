@@ -1,0 +1,6 @@
+import { Page } from '#src/components/layout/page.tsx';
+
+/** Keeps the place of the screen at this address. */
+export function Component() {
+  return <Page title="Standard">{null}</Page>;
+}
