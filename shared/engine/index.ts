@@ -56,3 +56,25 @@ export type { Propagation } from './network/propagate.ts';
 export type { CompiledNetwork } from './network/compiled-network.ts';
 export type { NetworkArrays } from './network/network-from-arrays.ts';
 export type { Change, Notice } from './network/changes.ts';
+
+// conformity under uncertainty
+export { conformanceProbability } from './conformity/conformance-probability.ts';
+export { guardBandedAcceptance } from './conformity/guard-bands.ts';
+export { globalRisks } from './conformity/global-risks.ts';
+export type { GlobalRiskInput, GlobalRisks } from './conformity/global-risks.ts';
+
+// uncertainty
+export { standardUncertainty, HALF_WIDTH_DISTRIBUTIONS } from './uncertainty/standard-uncertainty.ts';
+export { combine } from './uncertainty/combine.ts';
+export { effectiveDegreesOfFreedom } from './uncertainty/effective-degrees-of-freedom.ts';
+export { coverageFactor } from './uncertainty/coverage-factor.ts';
+export { monteCarlo, numericalTolerance } from './uncertainty/monte-carlo.ts';
+export { randomSource } from './uncertainty/random.ts';
+export { normalDistribution, normalQuantile } from './uncertainty/normal-distribution.ts';
+export type { HalfWidthDistribution } from './uncertainty/standard-uncertainty.ts';
+export type { BudgetComponent, CombinedUncertainty } from './uncertainty/combine.ts';
+export type { EffectiveComponent } from './uncertainty/effective-degrees-of-freedom.ts';
+export type { Distribution } from './uncertainty/input-distribution.ts';
+export type { MonteCarloOptions, MonteCarloResult } from './uncertainty/monte-carlo.ts';
+export type { IntervalKind } from './uncertainty/coverage-interval.ts';
+export type { RandomSource } from './uncertainty/random.ts';

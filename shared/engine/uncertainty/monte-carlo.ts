@@ -1,0 +1,169 @@
+import { EngineError } from '../errors.ts';
+import { requireChoice, requireNumber } from '../quantity/domain.ts';
+import { coverageInterval, INTERVAL_KINDS, type IntervalKind } from './coverage-interval.ts';
+import { samplerOf, type Distribution } from './input-distribution.ts';
+import { randomSource } from './random.ts';
+
+/** How a Monte Carlo evaluation is run. */
+export interface MonteCarloOptions {
+  /** Seed of the generator, an integer; the same seed gives the same result. */
+  seed: number;
+  /** Significant digits of the standard uncertainty that are to be settled, 1 or 2; 2 when left out. */
+  digits?: number;
+  /** Most trials to be made; 5 million when left out. */
+  maximumTrials?: number;
+  /** Coverage probability of the interval; 0.95 when left out. */
+  probability?: number;
+  /** Which interval; `symmetric` (equal tails) when left out. */
+  interval?: IntervalKind;
+}
+
+/** Result of a Monte Carlo evaluation. */
+export interface MonteCarloResult {
+  /** Mean of the model values. */
+  mean: number;
+  /** Their standard deviation. */
+  standardUncertainty: number;
+  /** Coverage interval. */
+  interval: [number, number];
+  /** Trials made. */
+  trials: number;
+  /** Whether the digits asked for were settled before the trials ran out. */
+  stable: boolean;
+}
+
+/** Mean, standard deviation and interval of one block of trials. */
+type BlockResult = [mean: number, deviation: number, low: number, high: number];
+
+/** Options with every default filled in, and the blocks they lead to. */
+interface Settings {
+  digits: number;
+  probability: number;
+  interval: IntervalKind;
+  blockSize: number;
+  blocks: number;
+}
+
+const SMALLEST_BLOCK = 10_000;
+
+/**
+ * Numerical tolerance of a standard uncertainty: half a unit in its last significant digit.
+ *
+ * Source: JCGM 101:2008, 7.9.2.
+ */
+export function numericalTolerance(standardUncertainty: number, digits: number): number {
+  if (standardUncertainty === 0) return 0;
+  const exponent = Number(standardUncertainty.toExponential(digits - 1).split('e')[1]);
+  return 0.5 * 10 ** (exponent - (digits - 1));
+}
+
+/** Mean and standard deviation in two passes, so that small spreads on large values keep their digits. */
+function moments(values: Float64Array | number[]): { mean: number; deviation: number } {
+  const size = values.length;
+  const origin = values[0] as number;
+  let sum = 0;
+  for (const value of values) sum += value - origin;
+  const offset = sum / size;
+  let squares = 0;
+  for (const value of values) squares += (value - origin - offset) ** 2;
+  return { mean: origin + offset, deviation: Math.sqrt(squares / (size - 1)) };
+}
+
+/** Mean and standard deviation of all trials from those of their blocks, which are of one size. */
+function pooled(blocks: BlockResult[], blockSize: number): { mean: number; deviation: number } {
+  const count = blocks.length;
+  const between = moments(blocks.map(([mean]) => mean));
+  const within = blocks.reduce((sum, [, deviation]) => sum + deviation * deviation, 0) * (blockSize - 1);
+  const squares = within + (count === 1 ? 0 : between.deviation ** 2 * (count - 1) * blockSize);
+  return { mean: between.mean, deviation: Math.sqrt(squares / (count * blockSize - 1)) };
+}
+
+/** Whether twice the standard deviation of each averaged result is within the tolerance (7.9.4, steps e to h). */
+function isSettled(blocks: BlockResult[], settings: Settings): boolean {
+  if (blocks.length < 2) return false;
+  const tolerance = numericalTolerance(pooled(blocks, settings.blockSize).deviation, settings.digits);
+  return [0, 1, 2, 3].every((k) => {
+    const { deviation } = moments(blocks.map((block) => block[k as 0 | 1 | 2 | 3]));
+    return (2 * deviation) / Math.sqrt(blocks.length) <= tolerance;
+  });
+}
+
+/** Fills part of `values` with model values. */
+function runBlock(values: Float64Array, draw: () => number[], model: (x: number[]) => number): void {
+  for (let i = 0; i < values.length; i += 1) {
+    const value = model(draw());
+    if (!Number.isFinite(value)) {
+      throw new EngineError(
+        'model-not-finite',
+        'model',
+        `The model gave ${value} for some values of its inputs. Restrict the inputs to where the model holds.`,
+      );
+    }
+    values[i] = value;
+  }
+}
+
+/**
+ * Propagates distributions through a model by the adaptive Monte Carlo procedure: blocks of trials are added until
+ * the mean, the standard uncertainty and both ends of the interval are settled to the digits asked for.
+ *
+ * Source: JCGM 101:2008, 7.9.4; blocks as in 7.9.4 b, intervals as in 7.7. Inputs are independent.
+ *
+ * @param model the measurement model; it is given one value per input and must not keep the array
+ * @param inputs distribution of each input, at least one
+ * @param options seed, digits, most trials, probability, interval
+ * @throws EngineError `empty`, `unknown-choice`, `not-finite`, `out-of-range`, or `model-not-finite`
+ */
+export function monteCarlo(
+  model: (x: number[]) => number,
+  inputs: readonly Distribution[],
+  options: MonteCarloOptions,
+): MonteCarloResult {
+  if (inputs.length === 0) throw new EngineError('empty', 'inputs', 'There is no input quantity.');
+  const samplers = inputs.map((input, i) => samplerOf(input, `inputs[${i}]`));
+  const random = randomSource(options.seed);
+  const settings = settle(options);
+  const x = samplers.map(() => 0);
+  const draw = (): number[] => {
+    for (let i = 0; i < samplers.length; i += 1) x[i] = (samplers[i] as (typeof samplers)[number])(random);
+    return x;
+  };
+
+  const all = new Float64Array(settings.blocks * settings.blockSize);
+  const results: BlockResult[] = [];
+  let used = all.subarray(0, 0);
+  let stable = false;
+  while (results.length < settings.blocks && !stable) {
+    const start = results.length * settings.blockSize;
+    const block = all.subarray(start, start + settings.blockSize);
+    runBlock(block, draw, model);
+    const { mean, deviation } = moments(block);
+    const ends = coverageInterval(block.toSorted(), settings.probability, settings.interval);
+    results.push([mean, deviation, ...ends]);
+    used = all.subarray(0, start + settings.blockSize);
+    stable = isSettled(results, settings);
+  }
+  const { mean, deviation } = pooled(results, settings.blockSize);
+  return {
+    mean,
+    standardUncertainty: deviation,
+    interval: coverageInterval(used.sort(), settings.probability, settings.interval),
+    trials: used.length,
+    stable,
+  };
+}
+
+function settle(options: MonteCarloOptions): Settings {
+  const probability = requireNumber(options.probability ?? 0.95, 'options.probability', {
+    above: 0,
+    max: 0.9999,
+  });
+  const digits = Math.floor(requireNumber(options.digits ?? 2, 'options.digits', { min: 1, max: 2 }));
+  const blockSize = Math.max(SMALLEST_BLOCK, Math.ceil(100 / (1 - probability)));
+  const maximum = requireNumber(options.maximumTrials ?? 5_000_000, 'options.maximumTrials', {
+    min: 2 * blockSize,
+    max: 1e8,
+  });
+  const interval = requireChoice(options.interval ?? 'symmetric', 'options.interval', INTERVAL_KINDS);
+  return { digits, probability, interval, blockSize, blocks: Math.floor(maximum / blockSize) };
+}
