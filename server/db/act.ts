@@ -4,6 +4,7 @@ import { QueryTypes } from 'sequelize';
 import { canonicalJson } from '#shared/canonical-json.ts';
 import type { Context } from '#server/http/context.ts';
 import { readRow } from './read.ts';
+import { rowsSha256 } from './row-digest.ts';
 import { inTransaction } from './transaction.ts';
 
 /** What an act is about, said before it begins. */
@@ -28,6 +29,8 @@ export interface Act {
   readonly recordedAt: Date;
   /** States what changed; an act without it is not committed. */
   record(content: ActContent): void;
+  /** Notes a row that this act wrote; models call it, services do not. */
+  noteRow(table: string, sha256: string): void;
 }
 
 const openAct = new AsyncLocalStorage<Act>();
@@ -48,22 +51,42 @@ export async function inAct<T>(
   work: (act: Act) => Promise<T>,
 ): Promise<T> {
   const outer = currentAct();
-  if (outer) return work({ seq: outer.seq, recordedAt: outer.recordedAt, record: () => {} });
+  if (outer) return work({ ...outer, record: () => {} });
   return inTransaction(context.database, async () => {
     const head = await lockHead(context);
     let content: ActContent | undefined;
+    const rows = new Map<string, string[]>();
     const act: Act = {
       seq: head.seq + 1,
       recordedAt: context.clock.now(),
       record: (stated) => {
         content = stated;
       },
+      noteRow: (table, hash) => {
+        const noted = rows.get(table) ?? [];
+        noted.push(hash);
+        rows.set(table, noted);
+      },
     };
     const result = await openAct.run(act, () => work(act));
     if (!content) throw new Error(`The act ${description.kind} did not say what it changed`);
-    await insertAct(context, description, act, content, head.chainSha256);
+    await insertAct(context, description, act, content, rowDigests(rows), head.chainSha256);
     return result;
   });
+}
+
+/** What an act's record says of the rows it wrote in one table. */
+export interface RowDigest {
+  count: number;
+  sha256: string;
+}
+
+function rowDigests(rows: ReadonlyMap<string, string[]>): Record<string, RowDigest> {
+  const digests = [...rows].map(([table, hashes]) => [
+    table,
+    { count: hashes.length, sha256: rowsSha256(hashes) },
+  ]);
+  return Object.fromEntries(digests) as Record<string, RowDigest>;
 }
 
 interface Head {
@@ -86,6 +109,7 @@ async function insertAct(
   description: ActDescription,
   act: Act,
   content: ActContent,
+  rows: Record<string, RowDigest>,
   previousChain: string,
 ): Promise<void> {
   const body = canonicalJson({
@@ -99,6 +123,7 @@ async function insertAct(
     subject: content.subject,
     before: content.before ?? null,
     after: content.after,
+    rows,
   });
   const contentSha256 = sha256(body);
   await context.database.query(
