@@ -23,6 +23,7 @@ export const network: Migration = {
       ${VALID},
       ${RECORDED},
       KEY recognition_laboratory (laboratory_id, kind, recorded_at),
+      KEY recognition_act (act_seq),
       CONSTRAINT recognition_laboratory FOREIGN KEY (laboratory_id) REFERENCES laboratory (id) ON DELETE RESTRICT
     ) ${TABLE}`,
     `CREATE TABLE IF NOT EXISTS scope_line (
@@ -41,6 +42,7 @@ export const network: Migration = {
       ${VALID},
       ${RECORDED},
       KEY scope_line_laboratory (laboratory_id, quantity, nominal_from, nominal_to),
+      KEY scope_line_act (act_seq),
       CONSTRAINT scope_line_laboratory FOREIGN KEY (laboratory_id) REFERENCES laboratory (id) ON DELETE RESTRICT
     ) ${TABLE}`,
     `CREATE TABLE IF NOT EXISTS authorisation (

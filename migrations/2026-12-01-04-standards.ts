@@ -38,6 +38,7 @@ export const standards: Migration = {
       ${RECORDED},
       PRIMARY KEY (set_id, standard_id, act_seq),
       KEY set_member_standard (standard_id),
+      KEY set_member_act (act_seq),
       CONSTRAINT set_member_set FOREIGN KEY (set_id) REFERENCES weight_set (id) ON DELETE RESTRICT,
       CONSTRAINT set_member_standard FOREIGN KEY (standard_id) REFERENCES standard (id) ON DELETE RESTRICT
     ) ${TABLE}`,
@@ -51,6 +52,7 @@ export const standards: Migration = {
       note VARCHAR(300) NULL,
       ${RECORDED},
       UNIQUE KEY epoch_standard_n (standard_id, n),
+      KEY epoch_act (act_seq),
       CONSTRAINT epoch_standard FOREIGN KEY (standard_id) REFERENCES standard (id) ON DELETE RESTRICT
     ) ${TABLE}`,
     `CREATE TABLE IF NOT EXISTS standard_fact (
@@ -62,6 +64,7 @@ export const standards: Migration = {
       ${VALID},
       ${RECORDED},
       KEY standard_fact_standard (standard_id, kind, recorded_at),
+      KEY standard_fact_act (act_seq),
       CONSTRAINT standard_fact_standard FOREIGN KEY (standard_id) REFERENCES standard (id) ON DELETE RESTRICT
     ) ${TABLE}`,
     `CREATE TABLE IF NOT EXISTS programme (
@@ -74,6 +77,7 @@ export const standards: Migration = {
       ${VALID},
       ${RECORDED},
       KEY programme_standard (standard_id, laboratory_id, recorded_at),
+      KEY programme_act (act_seq),
       CONSTRAINT programme_standard FOREIGN KEY (standard_id) REFERENCES standard (id) ON DELETE RESTRICT,
       CONSTRAINT programme_laboratory FOREIGN KEY (laboratory_id) REFERENCES laboratory (id) ON DELETE RESTRICT
     ) ${TABLE}`,
@@ -108,6 +112,7 @@ export const standards: Migration = {
       ${VALID},
       ${RECORDED},
       KEY property_standard (standard_id, kind, recorded_at),
+      KEY property_act (act_seq),
       CONSTRAINT property_standard FOREIGN KEY (standard_id) REFERENCES standard (id) ON DELETE RESTRICT,
       CONSTRAINT property_source FOREIGN KEY (source_id) REFERENCES source (id) ON DELETE RESTRICT
     ) ${TABLE}`,

@@ -1,0 +1,203 @@
+import type { Sequelize } from 'sequelize';
+import { readRow, readRows } from '#server/db/read.ts';
+import { ancestorIds, storedGroups, storedSources, storedValues } from './closure.queries.ts';
+import { laboratoryDossiers, standardDossiers } from './dossier.queries.ts';
+import type { LaboratoryDossier, StandardDossier, StoredGroup, StoredSource, StoredValue } from './stored.ts';
+
+/** Beyond this many values the memory is emptied and filled anew by what is asked: about 2 kB each. */
+const MAXIMUM_VALUES = 100_000;
+/** A register up to this size is read whole when the first chain is asked for. */
+const WHOLE_REGISTER = 20_000;
+
+/** One question's worth of the register: the focus and all it leans on, parents before children. */
+export interface Closure {
+  focus: StoredValue;
+  /** Every ancestor and the focus, each after all of its own references. */
+  values: StoredValue[];
+  sources: Map<number, StoredSource>;
+  groups: Map<number, StoredGroup>;
+}
+
+/** Tables whose later rows change what is known of a standard, or of a laboratory. */
+const TOUCHED_STANDARDS = `
+  SELECT standard_id AS id FROM assigned_value WHERE act_seq > :seq
+  UNION SELECT v.standard_id FROM value_end x JOIN assigned_value v ON v.id = x.value_id WHERE x.act_seq > :seq
+  UNION SELECT standard_id FROM programme WHERE act_seq > :seq
+  UNION SELECT standard_id FROM property WHERE act_seq > :seq
+  UNION SELECT standard_id FROM set_member WHERE act_seq > :seq`;
+const TOUCHED_LABORATORIES = `
+  SELECT laboratory_id AS id FROM scope_line WHERE act_seq > :seq
+  UNION SELECT laboratory_id FROM recognition WHERE act_seq > :seq`;
+
+/**
+ * The part of the register that chains have asked about, in memory. Recorded values never change, so they are
+ * kept; what later acts add to (histories, programmes, scopes) is dropped when an act touched it. Every
+ * question first catches up with the newest act, so an answer is never older than the question.
+ */
+export class ChainStore {
+  readonly #database: Sequelize;
+  readonly #values = new Map<number, StoredValue>();
+  readonly #sources = new Map<number, StoredSource>();
+  readonly #groups = new Map<number, StoredGroup>();
+  readonly #standards = new Map<string, StandardDossier>();
+  readonly #laboratories = new Map<string, LaboratoryDossier>();
+  #seq = -1;
+  #catchingUp: Promise<void> | null = null;
+
+  constructor(database: Sequelize) {
+    this.#database = database;
+  }
+
+  /** The act up to which the memory is current. */
+  get seq(): number {
+    return this.#seq;
+  }
+
+  /** Brings the memory up to the newest act. Callers that arrive together share one look. */
+  catchUp(): Promise<void> {
+    this.#catchingUp ??= this.#lookForActs().finally(() => {
+      this.#catchingUp = null;
+    });
+    return this.#catchingUp;
+  }
+
+  /** The value with this id and all it leans on. */
+  async closure(focusId: number): Promise<Closure> {
+    await this.#loadAncestors(focusId);
+    const values = this.#inOrder(focusId);
+    const focus = values.at(-1)!;
+    const sources = new Map<number, StoredSource>();
+    const groups = new Map<number, StoredGroup>();
+    for (const value of values) {
+      for (const { sourceId } of value.sources) sources.set(sourceId, this.#sources.get(sourceId)!);
+      if (value.groupId !== null) groups.set(value.groupId, this.#groups.get(value.groupId)!);
+    }
+    return { focus, values, sources, groups };
+  }
+
+  /** What is known of these standards, duplicates' partners included. */
+  async standards(ids: Iterable<string>): Promise<Map<string, StandardDossier>> {
+    const wanted = new Set(ids);
+    await this.#loadStandards(wanted);
+    const partners = new Set([...wanted].flatMap((id) => this.#standards.get(id)?.duplicateIds ?? []));
+    await this.#loadStandards(partners);
+    return this.#standards;
+  }
+
+  /** What is known of these laboratories. */
+  async laboratories(ids: Iterable<string>): Promise<Map<string, LaboratoryDossier>> {
+    const missing = [...new Set(ids)].filter((id) => !this.#laboratories.has(id));
+    for (const dossier of await laboratoryDossiers(this.#database, missing))
+      this.#laboratories.set(dossier.id, dossier);
+    return this.#laboratories;
+  }
+
+  async #lookForActs(): Promise<void> {
+    const head = await readRow<{ seq: number | null }>(this.#database, 'SELECT MAX(seq) AS seq FROM act');
+    const seq = head?.seq ?? 0;
+    if (seq === this.#seq) return;
+    if (this.#seq === -1) await this.#readSmallRegister();
+    else await this.#forgetTouched();
+    this.#seq = seq;
+  }
+
+  /** A small register is read in one go: the first visitor's chain is then as quick as the hundredth. */
+  async #readSmallRegister(): Promise<void> {
+    const rows = await readRows<{ id: number; standardId: string; issuerId: string; holderId: string }>(
+      this.#database,
+      `SELECT id, standard_id AS standardId, issuer_id AS issuerId, holder_id AS holderId
+       FROM assigned_value LIMIT ${WHOLE_REGISTER + 1}`,
+    );
+    if (rows.length > WHOLE_REGISTER) return;
+    await this.#loadValues(rows.map((row) => row.id));
+    await this.#loadStandards(new Set(rows.map((row) => row.standardId)));
+    await this.laboratories(rows.flatMap((row) => [row.issuerId, row.holderId]));
+  }
+
+  async #forgetTouched(): Promise<void> {
+    const [standards, laboratories] = await Promise.all([
+      readRows<{ id: string }>(this.#database, TOUCHED_STANDARDS, { seq: this.#seq }),
+      readRows<{ id: string }>(this.#database, TOUCHED_LABORATORIES, { seq: this.#seq }),
+    ]);
+    for (const { id } of standards) this.#standards.delete(id);
+    for (const { id } of laboratories) this.#laboratories.delete(id);
+  }
+
+  async #loadAncestors(focusId: number): Promise<void> {
+    if (this.#holdsClosure(focusId)) return;
+    if (this.#values.size > MAXIMUM_VALUES) this.#forgetValues();
+    await this.#loadValues(await ancestorIds(this.#database, [focusId]));
+  }
+
+  #forgetValues(): void {
+    this.#values.clear();
+    this.#sources.clear();
+    this.#groups.clear();
+    this.#standards.clear();
+  }
+
+  #holdsClosure(focusId: number): boolean {
+    const seen = new Set<number>([focusId]);
+    for (const id of seen) {
+      const value = this.#values.get(id);
+      if (!value) return false;
+      for (const { parentId } of value.parents) seen.add(parentId);
+    }
+    return true;
+  }
+
+  async #loadValues(ids: number[]): Promise<void> {
+    for (const chunk of chunks(
+      ids.filter((id) => !this.#values.has(id)),
+      2_000,
+    )) {
+      const values = await storedValues(this.#database, chunk);
+      const sourceIds = new Set(values.flatMap((value) => value.sources.map((link) => link.sourceId)));
+      const groupIds = new Set(values.flatMap((value) => (value.groupId === null ? [] : [value.groupId])));
+      const [sources, groups] = await Promise.all([
+        storedSources(
+          this.#database,
+          [...sourceIds].filter((id) => !this.#sources.has(id)),
+        ),
+        storedGroups(
+          this.#database,
+          [...groupIds].filter((id) => !this.#groups.has(id)),
+        ),
+      ]);
+      for (const source of sources) this.#sources.set(source.id, source);
+      for (const group of groups) this.#groups.set(group.id, group);
+      for (const value of values) this.#values.set(value.id, value);
+    }
+  }
+
+  async #loadStandards(ids: Set<string>): Promise<void> {
+    for (const chunk of chunks(
+      [...ids].filter((id) => !this.#standards.has(id)),
+      1_000,
+    )) {
+      for (const dossier of await standardDossiers(this.#database, chunk))
+        this.#standards.set(dossier.standardId, dossier);
+    }
+  }
+
+  /** Depth first, parents before children. The register admits no circle, so this ends. */
+  #inOrder(focusId: number): StoredValue[] {
+    const done = new Set<number>();
+    const ordered: StoredValue[] = [];
+    const visit = (id: number): void => {
+      if (done.has(id)) return;
+      done.add(id);
+      const value = this.#values.get(id)!;
+      for (const { parentId } of value.parents) visit(parentId);
+      ordered.push(value);
+    };
+    visit(focusId);
+    return ordered;
+  }
+}
+
+function chunks<T>(items: T[], size: number): T[][] {
+  const parts: T[][] = [];
+  for (let start = 0; start < items.length; start += size) parts.push(items.slice(start, start + size));
+  return parts;
+}

@@ -1,0 +1,122 @@
+import type { Sequelize } from 'sequelize';
+import { groupBy } from '#shared/group-by.ts';
+import { readRows } from '#server/db/read.ts';
+import type { StoredGroup, StoredLink, StoredSource, StoredSourceLink, StoredValue } from './stored.ts';
+
+/** Instants as the pure functions compare them: ISO 8601, UTC, microseconds. */
+const INSTANT = (column: string) => `DATE_FORMAT(${column}, '%Y-%m-%dT%H:%i:%s.%fZ')`;
+
+/** Ids of the values and of everything they lean on; UNION removes the repeats that shared references bring. */
+const ANCESTORS = `
+  WITH RECURSIVE closure (id) AS (
+    SELECT CAST(v.id AS UNSIGNED) FROM assigned_value v WHERE v.id IN (:ids)
+    UNION
+    SELECT l.parent_id FROM closure c JOIN value_link l ON l.child_id = c.id)
+  SELECT id FROM closure`;
+
+const VALUES = `
+  SELECT v.id, v.uid, v.revision_id AS revisionId, r.n AS revisionN, c.certificate_no AS certificateNo, v.line,
+    v.issuer_id AS issuerId, v.holder_id AS holderId, c.registered_by_id AS registeredById,
+    v.standard_id AS standardId, s.registry_no AS registryNo, s.marking, s.kind AS standardKind,
+    (SELECT m.set_id FROM set_member m WHERE m.standard_id = s.id ORDER BY m.act_seq DESC LIMIT 1) AS setId,
+    e.n AS epochN, e.begins_on AS epochBeginsOn, v.quantity, v.medium, v.stage, v.nominal, v.deviation,
+    v.reported_unit AS reportedUnit, v.reported_decimals AS reportedDecimals, v.expanded_u AS expandedU,
+    v.reported_u_decimals AS reportedUDecimals, v.k, v.coverage, v.nu_eff AS nuEff, v.u AS uStated,
+    v.local_u AS localU, v.local_origin AS localOrigin, v.local_degrees_of_freedom AS localDegreesOfFreedom,
+    v.local_estimate AS localEstimate, v.root_kind AS rootKind, sv.name AS scaleVersion, v.class,
+    v.under_accreditation AS underAccreditation, v.unit_confirmed AS unitConfirmed, v.changed,
+    r.decision_rule AS decisionRule, r.method, r.performed_begin AS performedBegin,
+    v.performed_end AS performedEnd, v.date_precision AS datePrecision, v.effective_from AS issuedOn,
+    ${INSTANT('v.recorded_at')} AS recordedAt
+  FROM assigned_value v
+  JOIN revision r ON r.id = v.revision_id
+  JOIN calibration c ON c.id = r.calibration_id
+  JOIN standard s ON s.id = v.standard_id
+  JOIN epoch e ON e.id = v.epoch_id
+  LEFT JOIN scale_version sv ON sv.id = v.scale_version_id
+  WHERE v.id IN (:ids)`;
+
+const LINKS = `
+  SELECT child_id AS childId, parent_id AS parentId, role, sensitivity, used_begin AS usedBegin,
+    used_end AS usedEnd, used_as AS usedAs, used_deviation AS usedDeviation,
+    used_expanded_u AS usedExpandedU, used_k AS usedK
+  FROM value_link WHERE child_id IN (:ids) ORDER BY child_id, parent_id`;
+
+const SOURCE_LINKS = `
+  SELECT child_id AS childId, source_id AS sourceId, sensitivity
+  FROM source_link WHERE child_id IN (:ids) ORDER BY child_id, source_id`;
+
+const GROUP_MEMBERS = `
+  SELECT row_id AS valueId, group_id AS groupId FROM group_covariance
+  WHERE row_id IN (:ids) AND row_id = column_id`;
+
+const SOURCES = `
+  SELECT o.id, o.uid, o.kind, o.name, o.u, o.unit, o.degrees_of_freedom AS degreesOfFreedom, o.estimate,
+    o.standard_id AS standardId, s.registry_no AS registryNo, o.laboratory_id AS laboratoryId,
+    o.determined_on AS determinedOn
+  FROM source o LEFT JOIN standard s ON s.id = o.standard_id WHERE o.id IN (:ids)`;
+
+const GROUPS = `
+  SELECT g.id, g.degrees_of_freedom AS degreesOfFreedom, g.estimate, k.row_id AS rowId,
+    k.column_id AS columnId, k.covariance
+  FROM value_group g JOIN group_covariance k ON k.group_id = g.id WHERE g.id IN (:ids)`;
+
+/** Ids of `ids` and all they lean on. */
+export async function ancestorIds(database: Sequelize, ids: number[]): Promise<number[]> {
+  const rows = await readRows<{ id: number }>(database, ANCESTORS, { ids });
+  return rows.map((row) => row.id);
+}
+
+/** The values with their links; every id is expected to exist. */
+export async function storedValues(database: Sequelize, ids: number[]): Promise<StoredValue[]> {
+  if (ids.length === 0) return [];
+  type Row = Omit<StoredValue, 'parents' | 'sources' | 'groupId'>;
+  const [values, links, sourceLinks, members] = await Promise.all([
+    readRows<Row>(database, VALUES, { ids }),
+    readRows<StoredLink & { childId: number }>(database, LINKS, { ids }),
+    readRows<StoredSourceLink & { childId: number }>(database, SOURCE_LINKS, { ids }),
+    readRows<{ valueId: number; groupId: number }>(database, GROUP_MEMBERS, { ids }),
+  ]);
+  const parents = groupBy(links, (link) => link.childId);
+  const sources = groupBy(sourceLinks, (link) => link.childId);
+  const groups = new Map(members.map((member) => [member.valueId, member.groupId]));
+  return values.map((row) => ({
+    ...row,
+    underAccreditation: Boolean(row.underAccreditation),
+    unitConfirmed: Boolean(row.unitConfirmed),
+    parents: (parents.get(row.id) ?? []).map(({ childId: _, ...link }) => link),
+    sources: (sources.get(row.id) ?? []).map(({ childId: _, ...link }) => link),
+    groupId: groups.get(row.id) ?? null,
+  }));
+}
+
+/** Shared effects by id. */
+export async function storedSources(database: Sequelize, ids: number[]): Promise<StoredSource[]> {
+  return ids.length === 0 ? [] : readRows<StoredSource>(database, SOURCES, { ids });
+}
+
+/** Covariances of local parts by group. */
+export async function storedGroups(database: Sequelize, ids: number[]): Promise<StoredGroup[]> {
+  if (ids.length === 0) return [];
+  type Row = Omit<StoredGroup, 'covariance'> & { rowId: number; columnId: number; covariance: number };
+  const rows = await readRows<Row>(database, GROUPS, { ids });
+  const groups = new Map<number, StoredGroup>();
+  for (const row of rows) {
+    const group = groups.get(row.id) ?? {
+      id: row.id,
+      degreesOfFreedom: row.degreesOfFreedom,
+      estimate: row.estimate,
+      covariance: new Map<number, Map<number, number>>(),
+    };
+    groups.set(row.id, group);
+    put(group.covariance, row.rowId, row.columnId, row.covariance);
+    put(group.covariance, row.columnId, row.rowId, row.covariance);
+  }
+  return [...groups.values()];
+}
+
+function put(matrix: Map<number, Map<number, number>>, row: number, column: number, value: number): void {
+  const line = matrix.get(row) ?? new Map<number, number>();
+  line.set(column, value);
+  matrix.set(row, line);
+}

@@ -1,0 +1,120 @@
+import type { Sequelize } from 'sequelize';
+import { groupBy } from '#shared/group-by.ts';
+import { readRows } from '#server/db/read.ts';
+import type {
+  LaboratoryDossier,
+  StandardDossier,
+  StoredEnd,
+  StoredHistoryValue,
+  StoredProgramme,
+  StoredProperty,
+  StoredRecognition,
+  StoredScopeLine,
+} from './stored.ts';
+
+const ASSERTED = `valid_from AS validFrom, valid_to AS validTo, act_seq AS actSeq,
+  DATE_FORMAT(recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt`;
+
+const STANDARDS = `
+  SELECT id AS standardId, registry_no AS registryNo, marking, nominal FROM standard WHERE id IN (:ids)`;
+
+const HISTORY = `
+  SELECT v.standard_id AS standardId, v.id, v.uid, c.certificate_no AS certificateNo, r.n AS revisionN,
+    v.quantity, v.stage, e.n AS epochN, v.deviation, v.expanded_u AS expandedU, v.k,
+    v.performed_end AS performedEnd, v.date_precision AS datePrecision, v.effective_from AS issuedOn,
+    DATE_FORMAT(v.recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt, v.changed
+  FROM assigned_value v
+  JOIN revision r ON r.id = v.revision_id
+  JOIN calibration c ON c.id = r.calibration_id
+  JOIN epoch e ON e.id = v.epoch_id
+  WHERE v.standard_id IN (:ids)
+  ORDER BY v.performed_end, v.effective_from, v.id`;
+
+const ENDS = `
+  SELECT x.value_id AS valueId, x.kind, x.effective_on AS effectiveOn, x.made_known_on AS madeKnownOn,
+    DATE_FORMAT(x.recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt, x.changed, x.reason,
+    x.replaced_by AS replacedById, c.certificate_no AS replacedByCertificate
+  FROM value_end x
+  JOIN assigned_value v ON v.id = x.value_id
+  LEFT JOIN assigned_value n ON n.id = x.replaced_by
+  LEFT JOIN revision r ON r.id = n.revision_id
+  LEFT JOIN calibration c ON c.id = r.calibration_id
+  WHERE v.standard_id IN (:ids)`;
+
+const PROGRAMMES = `
+  SELECT standard_id AS standardId, laboratory_id AS laboratoryId, interval_months AS intervalMonths, method, ${ASSERTED}
+  FROM programme WHERE standard_id IN (:ids)`;
+
+const PROPERTIES = `
+  SELECT standard_id AS standardId, kind, value, expanded_u AS expandedU, k, origin, source_id AS sourceId, ${ASSERTED}
+  FROM property WHERE standard_id IN (:ids)`;
+
+const DUPLICATES = `
+  SELECT m.standard_id AS standardId, o.standard_id AS duplicateId
+  FROM set_member m
+  JOIN set_member o ON o.set_id = m.set_id AND o.standard_id <> m.standard_id
+  JOIN standard s ON s.id = m.standard_id
+  JOIN standard t ON t.id = o.standard_id AND t.nominal = s.nominal
+  WHERE m.standard_id IN (:ids)`;
+
+const LABORATORIES = 'SELECT id, code, name, kind FROM laboratory WHERE id IN (:ids)';
+
+const SCOPE = `
+  SELECT laboratory_id AS laboratoryId, line, quantity, nominal_from AS nominalFrom, nominal_to AS nominalTo,
+    method, best_u_constant AS bestUConstant, best_u_relative AS bestURelative, k, coverage, state, ${ASSERTED}
+  FROM scope_line WHERE laboratory_id IN (:ids)`;
+
+const RECOGNITIONS = `
+  SELECT laboratory_id AS laboratoryId, kind, body, number, arrangement, state, ${ASSERTED}
+  FROM recognition WHERE laboratory_id IN (:ids)`;
+
+type Of<T, Key extends string> = T & Record<Key, string>;
+
+/** What later acts may have added to these standards: history with its ends, programmes, properties, duplicates. */
+export async function standardDossiers(database: Sequelize, ids: string[]): Promise<StandardDossier[]> {
+  if (ids.length === 0) return [];
+  const [standards, history, ends, programmes, properties, duplicates] = await Promise.all([
+    readRows<Pick<StandardDossier, 'standardId' | 'registryNo' | 'marking' | 'nominal'>>(
+      database,
+      STANDARDS,
+      { ids },
+    ),
+    readRows<Of<Omit<StoredHistoryValue, 'ends'>, 'standardId'>>(database, HISTORY, { ids }),
+    readRows<StoredEnd & { valueId: number }>(database, ENDS, { ids }),
+    readRows<Of<StoredProgramme, 'standardId'>>(database, PROGRAMMES, { ids }),
+    readRows<Of<StoredProperty, 'standardId'>>(database, PROPERTIES, { ids }),
+    readRows<{ standardId: string; duplicateId: string }>(database, DUPLICATES, { ids }),
+  ]);
+  const endsByValue = groupBy(ends, (end) => end.valueId);
+  const historyOf = groupBy(history, (row) => row.standardId);
+  const programmesOf = groupBy(programmes, (row) => row.standardId);
+  const propertiesOf = groupBy(properties, (row) => row.standardId);
+  const duplicatesOf = groupBy(duplicates, (row) => row.standardId);
+  return standards.map((standard) => ({
+    ...standard,
+    history: (historyOf.get(standard.standardId) ?? []).map((row) => ({
+      ...row,
+      ends: endsByValue.get(row.id) ?? [],
+    })),
+    programmes: programmesOf.get(standard.standardId) ?? [],
+    properties: propertiesOf.get(standard.standardId) ?? [],
+    duplicateIds: [...new Set((duplicatesOf.get(standard.standardId) ?? []).map((row) => row.duplicateId))],
+  }));
+}
+
+/** What later acts may have added to these laboratories: scope lines and recognitions. */
+export async function laboratoryDossiers(database: Sequelize, ids: string[]): Promise<LaboratoryDossier[]> {
+  if (ids.length === 0) return [];
+  const [laboratories, scope, recognitions] = await Promise.all([
+    readRows<Pick<LaboratoryDossier, 'id' | 'code' | 'name' | 'kind'>>(database, LABORATORIES, { ids }),
+    readRows<Of<StoredScopeLine, 'laboratoryId'>>(database, SCOPE, { ids }),
+    readRows<Of<StoredRecognition, 'laboratoryId'>>(database, RECOGNITIONS, { ids }),
+  ]);
+  const scopeOf = groupBy(scope, (row) => row.laboratoryId);
+  const recognitionsOf = groupBy(recognitions, (row) => row.laboratoryId);
+  return laboratories.map((laboratory) => ({
+    ...laboratory,
+    scope: scopeOf.get(laboratory.id) ?? [],
+    recognitions: recognitionsOf.get(laboratory.id) ?? [],
+  }));
+}
