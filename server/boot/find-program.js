@@ -1,17 +1,20 @@
 import { accessSync, constants, statSync } from 'node:fs';
 import path from 'node:path';
 
-/** Debian leaves these out of the PATH of ordinary users, yet mariadbd lives there. */
-const systemFolders = ['/usr/local/sbin', '/usr/local/bin', '/usr/sbin', '/usr/bin', '/sbin', '/bin'];
-
 /**
+ * Debian keeps mariadbd in an sbin folder, which the PATH of ordinary users leaves out: each bin folder of the
+ * PATH stands for its sbin neighbour too.
  * @param {string} name
- * @param {string[]} [folders] where to look; the PATH and the system folders unless told
+ * @param {string} [searchPath]
  * @returns {string | undefined} absolute path of an executable file
  */
-export function findProgram(name, folders = [...(process.env.PATH ?? '').split(':'), ...systemFolders]) {
-  return folders
+export function findProgram(name, searchPath = process.env.PATH ?? '') {
+  return searchPath
+    .split(':')
     .filter((folder) => path.isAbsolute(folder))
+    .flatMap((folder) =>
+      path.basename(folder) === 'bin' ? [folder, path.join(folder, '../sbin')] : [folder],
+    )
     .map((folder) => path.join(folder, name))
     .find(isExecutable);
 }

@@ -1,6 +1,6 @@
 import assert from 'node:assert/strict';
 import { after, before, test } from 'node:test';
-import { leftOver, processMarked } from './support/processes.js';
+import { leftOver, processesMarked, processMarked } from './support/processes.js';
 import { openStart } from './support/running-start.js';
 import { standInProject } from './support/stand-in-project.js';
 
@@ -42,7 +42,7 @@ for (const [name, end] of ends) {
 
     const second = await openStart(project.folder, { PORT: String(first.port) });
     await second.isReady();
-    assert.equal((await second.health()).status, 'ok');
+    assert.equal((await second.health()).status, 'ready');
     second.type('\x03');
     assert.deepEqual(await leftOver(second.mark), [], second.screen());
   });
@@ -54,13 +54,13 @@ test('a start right after the starter was killed waits for the old database and 
   process.kill(processMarked(first.mark, starter), 'SIGKILL');
   const second = await openStart(project.folder, { PORT: String(first.port) });
   await second.isReady();
-  assert.equal((await second.health()).status, 'ok');
+  assert.equal((await second.health()).status, 'ready');
   second.type('\x03');
   assert.deepEqual(await leftOver(second.mark), []);
   assert.deepEqual(await leftOver(first.mark), []);
 });
 
-test('Ctrl-C stops the server before the database, so that nothing is cut off', async () => {
+test('Ctrl-C is an orderly stop, for npm too: exit code 0', async () => {
   const started = await openStart(project.folder);
   await started.isReady();
   started.type('\x03');
@@ -84,4 +84,32 @@ test('a database that dies by itself ends the whole with a message', async () =>
   assert.equal(await started.ended, 1);
   assert.match(started.screen(), /The database ended by itself; its log is .*mariadb\.log/);
   assert.deepEqual(await leftOver(started.mark), []);
+});
+
+for (const signal of ['SIGINT', 'SIGKILL']) {
+  test(`${signal} while the demo network is made: the next start begins it anew`, async () => {
+    const cut = standInProject();
+    const first = await openStart(cut.folder, { STAND_IN_SEED_MS: '60000' });
+    await first.shows(/first half stored/);
+    process.kill(processMarked(first.mark, starter), /** @type {NodeJS.Signals} */ (signal));
+    assert.deepEqual(await leftOver(first.mark), [], first.screen());
+
+    const second = await openStart(cut.folder);
+    await second.isReady();
+    assert.match(second.screen(), /was cut short last time/);
+    assert.deepEqual((await second.health()).notes, ['first half', 'second half']);
+    second.type('\x03');
+    assert.deepEqual(await leftOver(second.mark), []);
+    cut.remove();
+  });
+}
+
+test('Ctrl-C to the tests ends them and what they started', async () => {
+  const started = await openStart(project.folder, {}, 'npm test -- boot');
+  await started.shows(/- boot \.\.\./);
+  while (!processesMarked(started.mark).some(({ command }) => command.includes('endless.test.js'))) {
+    await new Promise((resolve) => setTimeout(resolve, 20));
+  }
+  started.type('\x03');
+  assert.deepEqual(await leftOver(started.mark), [], started.screen());
 });

@@ -27,8 +27,11 @@ export async function openStart(folder, settings = {}, command = 'npm start') {
   };
 }
 
-/** What a person's shell has: nothing of the npm that runs these tests. */
-function plainEnvironment() {
+/**
+ * What a person's shell has: nothing of the npm that runs these tests.
+ * @returns {NodeJS.ProcessEnv}
+ */
+export function plainEnvironment() {
   const { PATH, HOME, USER, LANG, TMPDIR } = process.env;
   return Object.fromEntries(Object.entries({ PATH, HOME, USER, LANG, TMPDIR }).filter(([, value]) => value));
 }

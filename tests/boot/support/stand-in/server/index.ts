@@ -5,7 +5,8 @@ import mariadb from 'mariadb';
 const pool = mariadb.createPool(process.env.DATABASE_URL ?? '');
 const server = http.createServer((_request, response) => {
   pool.query('select note from stand_in').then(
-    (rows) => response.end(JSON.stringify({ status: 'ok', note: rows[0]?.note })),
+    (rows) =>
+      response.end(JSON.stringify({ status: 'ready', notes: rows.map((row: { note: string }) => row.note) })),
     (error) => response.writeHead(503).end(String(error)),
   );
 });
