@@ -9,6 +9,8 @@ interface QuantityProps extends QuantityInput {
   hidesUncertainty?: boolean;
   /** Leaves the unit to the table head. */
   hidesUnit?: boolean;
+  /** The value of record at the head of a screen: the unit stands after the value and after U, as on a certificate. */
+  isOfRecord?: boolean;
   /** `serif` for values of record, `mono` for readings, `inherit` inside a line of interface text. @default 'serif' */
   face?: 'serif' | 'mono' | 'inherit';
   className?: string;
@@ -23,6 +25,7 @@ const FACES = { serif: 'font-serif', mono: 'font-mono', inherit: '' };
 export function Quantity({
   hidesUncertainty,
   hidesUnit,
+  isOfRecord,
   face = 'serif',
   className = '',
   ...input
@@ -40,8 +43,7 @@ export function Quantity({
       {text.bracket !== null && <span>({text.bracket})</span>}
       {spread !== null && (
         <>
-          {/* The U stands beside the value with its own unit, as in the heading of a certificate. */}
-          {hasUnit && !isBracketed && <UnitSymbol unit={text.unit} isSpaced />}
+          {hasUnit && isOfRecord && !isBracketed && <UnitSymbol unit={text.unit} isSpaced />}
           {' ± '}
           <Digits parts={spread} />
         </>
