@@ -1,1 +1,1 @@
-document.title = 'Stand-in runs';
+globalThis.document.title = 'Stand-in runs';
