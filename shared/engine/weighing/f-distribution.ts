@@ -1,6 +1,9 @@
 import { EngineError } from '../errors.ts';
 import { requireNumber } from '../quantity/domain.ts';
 
+/** Degrees of freedom that stand for a standard deviation known well: Student's t then is normal within 2e-6. */
+export const KNOWN_WELL = 1e6;
+
 /**
  * Probability that F with `numerator` and `denominator` degrees of freedom exceeds `ratio`. With
  * `numerator` 1 and `ratio` t squared it is the two-sided probability of Student's t.
