@@ -8,11 +8,6 @@ export class MaxHeap {
     this.places = new Int32Array(capacity);
   }
 
-  /** The largest entry; only meaningful while `size` is above 0. */
-  top(): number {
-    return this.places[0]!;
-  }
-
   push(place: number): void {
     const places = this.places;
     let at = this.size++;

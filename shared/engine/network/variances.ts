@@ -9,8 +9,9 @@ import type { Network } from './network.ts';
  *
  * Values are taken in topological order. Each is walked up only to the first ancestor through which every
  * remaining road leads: from there on the variance of that ancestor, already known, stands for all that is above.
- * With one parent this is a single step. Roots with one child are added on sight. The cost is the number of links
- * walked, so it is small where chains narrow upwards and at most the sum over values of their ancestors.
+ * With one parent this is a single step. Roots (sources above all) wait aside: one whose first child is the
+ * ancestor reached, or comes after it, cannot be met further up. The cost is the number of links walked: small
+ * where chains narrow upwards, at most the sum over values of their ancestors' links.
  * @throws EngineError those of `compileNetwork`
  */
 export function variances(network: Network | CompiledNetwork): Float64Array {
@@ -19,19 +20,21 @@ export function variances(network: Network | CompiledNetwork): Float64Array {
   for (let place = 0; place < net.nodeCount; place += 1) {
     state.variance[place] = oneParentVariance(state, place) ?? walkedVariance(state, place);
   }
-  return Float64Array.from({ length: net.valueCount }, (_, node) => state.variance[net.position[node]!]!);
+  return Float64Array.from({ length: net.valueCount }, (_, node) => state.variance[state.placeOf[node]!]!);
 }
 
 /** The network renumbered by place in the topological order, with the work arrays of one walk. */
 type State = {
   net: CompiledNetwork;
+  order: Int32Array;
+  placeOf: Int32Array;
   linkStart: Int32Array;
   parent: Int32Array;
   sensitivity: Float64Array;
   /** Own variance and class limits; infinite where not known; a group member's limits only. */
   own: Float64Array;
-  /** 1 for an ungrouped root with one child. */
-  privateRoot: Uint8Array;
+  /** For an ungrouped root the lowest place among its children, beyond all places if it has none; else -1. */
+  firstChild: Int32Array;
   /** Group of a place, -1 for none, and the lowest place of each group's members. */
   group: Int32Array;
   lowestPlace: Int32Array;
@@ -40,49 +43,83 @@ type State = {
   /** Place + 1 of the walk that wrote `gain` last. */
   stamp: Int32Array;
   heap: MaxHeap;
-  /** Groups met in the current walk, and the lowest place among their members. */
-  metGroups: Set<number>;
-  lowestMet: number;
+  /** Groups and roots met in the current walk, and the lowest place at which one may be met again. */
+  metGroups: number[];
+  metRoots: number[];
+  lowestGroup: number;
+  lowestRoot: number;
 };
 
 function newState(net: CompiledNetwork): State {
   const count = net.nodeCount;
+  const { order, placeOf } = walkOrder(net);
   const state: State = {
     net,
-    ...linksByPlace(net),
+    order,
+    placeOf,
+    ...linksByPlace(net, order, placeOf),
     own: new Float64Array(count),
-    privateRoot: new Uint8Array(count),
-    group: Int32Array.from(net.order, (node) => net.groupOf[node]!),
+    firstChild: new Int32Array(count).fill(count),
+    group: Int32Array.from(order, (node) => net.groupOf[node]!),
     lowestPlace: Int32Array.from(net.groups, (group) =>
-      group.members.reduce((lowest, node) => Math.min(lowest, net.position[node]!), count),
+      group.members.reduce((lowest, node) => Math.min(lowest, placeOf[node]!), count),
     ),
     variance: new Float64Array(count),
     gain: new Float64Array(count),
     stamp: new Int32Array(count),
     heap: new MaxHeap(count),
-    metGroups: new Set(),
-    lowestMet: count,
+    metGroups: [],
+    metRoots: [],
+    lowestGroup: count,
+    lowestRoot: count,
   };
-  const childCount = new Int32Array(count);
-  for (const parent of state.parent) childCount[parent]! += 1;
-  for (let place = 0; place < count; place += 1) {
-    state.own[place] = ownVariance(net, net.order[place]!);
-    const isRoot = state.linkStart[place] === state.linkStart[place + 1];
-    state.privateRoot[place] = Number(isRoot && childCount[place] === 1 && state.group[place]! < 0);
+  for (let place = count - 1; place >= 0; place -= 1) {
+    state.own[place] = ownVariance(net, order[place]!);
+    const from = state.linkStart[place]!;
+    const to = state.linkStart[place + 1]!;
+    for (let link = from; link < to; link += 1) state.firstChild[state.parent[link]!] = place;
+    if (from < to || state.group[place]! >= 0) state.firstChild[place] = -1;
+    // Whether an unknown root cancels out is seen only by walking all roads to it.
+    else if (state.own[place] === Infinity) state.firstChild[place] = 0;
   }
   return state;
 }
 
-function linksByPlace(net: CompiledNetwork): Pick<State, 'linkStart' | 'parent' | 'sensitivity'> {
+/** Topological order with each root just before its first child: what is met together lies together in memory. */
+function walkOrder(net: CompiledNetwork): { order: Int32Array; placeOf: Int32Array } {
+  const order = new Int32Array(net.nodeCount);
+  const placeOf = new Int32Array(net.nodeCount).fill(-1);
+  let filled = 0;
+  const put = (node: number) => {
+    if (placeOf[node]! >= 0) return;
+    placeOf[node] = filled;
+    order[filled++] = node;
+  };
+  for (const node of net.order) {
+    const from = net.linkStart[node]!;
+    const to = net.linkStart[node + 1]!;
+    if (from === to) continue;
+    for (let link = from; link < to; link += 1) put(net.linkParent[link]!);
+    put(node);
+  }
+  net.order.forEach(put);
+  return { order, placeOf };
+}
+
+function linksByPlace(
+  net: CompiledNetwork,
+  order: Int32Array,
+  placeOf: Int32Array,
+): Pick<State, 'linkStart' | 'parent' | 'sensitivity'> {
   const linkStart = new Int32Array(net.nodeCount + 1);
   const parent = new Int32Array(net.linkParent.length);
   const sensitivity = new Float64Array(net.linkParent.length);
   let filled = 0;
   for (let place = 0; place < net.nodeCount; place += 1) {
     linkStart[place] = filled;
-    const node = net.order[place]!;
+    const node = order[place]!;
     for (let link = net.linkStart[node]!; link < net.linkStart[node + 1]!; link += 1) {
-      parent[filled] = net.position[net.linkParent[link]!]!;
+      parent[filled] = placeOf[net.linkParent[link]!]!;
       sensitivity[filled++] = net.linkSensitivity[link]!;
     }
   }
@@ -116,46 +153,71 @@ function oneParentVariance(state: State, place: number): number | undefined {
 
 function walkedVariance(state: State, focus: number): number {
   const { heap, gain, stamp } = state;
-  state.metGroups.clear();
-  state.lowestMet = state.net.nodeCount;
+  state.metGroups.length = 0;
+  state.metRoots.length = 0;
+  state.lowestGroup = state.net.nodeCount;
+  state.lowestRoot = state.net.nodeCount;
   gain[focus] = 1;
   stamp[focus] = focus + 1;
   let sum = expand(state, focus, focus);
   while (heap.size > 0) {
     const place = heap.pop();
-    // A met group below this place may share its covariance with what is above: then the walk goes on.
-    if (heap.size === 0 && place < state.lowestMet) {
-      sum += scaled(gain[place]!, state.variance[place]!);
+    // What was met and may be met again above would be correlated with this ancestor: then the walk goes on.
+    if (heap.size === 0 && place < state.lowestGroup && place <= state.lowestRoot) {
+      sum += scaled(gain[place]!, state.variance[place]!) + rootsOfLast(state, place, focus);
       break;
     }
     sum += expand(state, place, focus);
   }
+  for (const root of state.metRoots) sum += scaled(gain[root]!, state.variance[root]!);
   for (const index of state.metGroups) sum += groupVariance(state, index, focus);
   return Math.max(0, sum);
 }
 
 /** Adds a node's own variance and hands its gain to its parents. */
 function expand(state: State, place: number, focus: number): number {
-  const { gain, stamp, parent, sensitivity } = state;
+  const { gain, stamp, parent, sensitivity, firstChild } = state;
   const own = gain[place]!;
-  const index = state.group[place]!;
-  if (index >= 0) {
-    state.metGroups.add(index);
-    state.lowestMet = Math.min(state.lowestMet, state.lowestPlace[index]!);
-  }
+  if (state.group[place]! >= 0) meetGroup(state, state.group[place]!);
+  const to = state.linkStart[place + 1]!;
   let sum = scaled(own, state.own[place]!);
-  for (let link = state.linkStart[place]!; link < state.linkStart[place + 1]!; link += 1) {
+  for (let link = state.linkStart[place]!; link < to; link += 1) {
     const up = parent[link]!;
     const part = own * sensitivity[link]!;
-    if (state.privateRoot[up]) {
-      sum += scaled(part, state.variance[up]!);
-    } else if (stamp[up] === focus + 1) {
+    if (stamp[up] === focus + 1) {
       gain[up]! += part;
-    } else {
-      stamp[up] = focus + 1;
-      gain[up] = part;
-      state.heap.push(up);
+      continue;
     }
+    const first = firstChild[up]!;
+    if (first === place) {
+      sum += scaled(part, state.variance[up]!);
+      continue;
+    }
+    stamp[up] = focus + 1;
+    gain[up] = part;
+    if (first < 0) {
+      state.heap.push(up);
+    } else {
+      state.metRoots.push(up);
+      if (first < state.lowestRoot) state.lowestRoot = first;
+    }
+  }
+  return sum;
+}
+
+function meetGroup(state: State, index: number): void {
+  if (!state.metGroups.includes(index)) state.metGroups.push(index);
+  state.lowestGroup = Math.min(state.lowestGroup, state.lowestPlace[index]!);
+}
+
+/** Twice the covariance of the last ancestor with the waiting roots whose first child it is. */
+function rootsOfLast(state: State, place: number, focus: number): number {
+  let sum = 0;
+  for (let link = state.linkStart[place]!; link < state.linkStart[place + 1]!; link += 1) {
+    const root = state.parent[link]!;
+    if (state.stamp[root] !== focus + 1) continue;
+    const product = state.gain[place]! * state.gain[root]! * state.sensitivity[link]!;
+    if (product !== 0) sum += 2 * product * state.variance[root]!;
   }
   return sum;
 }
@@ -164,7 +226,7 @@ function expand(state: State, place: number, focus: number): number {
 function groupVariance(state: State, index: number, focus: number): number {
   const { members, covariance } = state.net.groups[index]!;
   const gains = Array.from(members, (node) => {
-    const place = state.net.position[node]!;
+    const place = state.placeOf[node]!;
     return state.stamp[place] === focus + 1 ? state.gain[place]! : 0;
   });
   let sum = 0;
