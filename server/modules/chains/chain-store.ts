@@ -9,10 +9,9 @@ const MAXIMUM_VALUES = 100_000;
 /** A register up to this size is read whole when the first chain is asked for. */
 const WHOLE_REGISTER = 20_000;
 
-/** One question's worth of the register: the focus and all it leans on, parents before children. */
+/** A part of the register that is complete upwards: with every value, all it leans on. */
 export interface Closure {
-  focus: StoredValue;
-  /** Every ancestor and the focus, each after all of its own references. */
+  /** Each after all of its own references. */
   values: StoredValue[];
   sources: Map<number, StoredSource>;
   groups: Map<number, StoredGroup>;
@@ -23,6 +22,7 @@ const TOUCHED_STANDARDS = `
   SELECT standard_id AS id FROM assigned_value WHERE act_seq > :seq
   UNION SELECT v.standard_id FROM value_end x JOIN assigned_value v ON v.id = x.value_id WHERE x.act_seq > :seq
   UNION SELECT standard_id FROM programme WHERE act_seq > :seq
+  UNION SELECT standard_id FROM epoch WHERE act_seq > :seq
   UNION SELECT standard_id FROM property WHERE act_seq > :seq
   UNION SELECT standard_id FROM set_member WHERE act_seq > :seq`;
 const TOUCHED_LABORATORIES = `
@@ -61,18 +61,17 @@ export class ChainStore {
     return this.#catchingUp;
   }
 
-  /** The value with this id and all it leans on. */
-  async closure(focusId: number): Promise<Closure> {
-    await this.#loadAncestors(focusId);
-    const values = this.#inOrder(focusId);
-    const focus = values.at(-1)!;
+  /** The values with these ids and all they lean on. */
+  async closure(ids: readonly number[]): Promise<Closure> {
+    await this.#loadAncestors(ids);
+    const values = this.#inOrder(ids);
     const sources = new Map<number, StoredSource>();
     const groups = new Map<number, StoredGroup>();
     for (const value of values) {
       for (const { sourceId } of value.sources) sources.set(sourceId, this.#sources.get(sourceId)!);
       if (value.groupId !== null) groups.set(value.groupId, this.#groups.get(value.groupId)!);
     }
-    return { focus, values, sources, groups };
+    return { values, sources, groups };
   }
 
   /** What is known of these standards, duplicates' partners included. */
@@ -123,10 +122,10 @@ export class ChainStore {
     for (const { id } of laboratories) this.#laboratories.delete(id);
   }
 
-  async #loadAncestors(focusId: number): Promise<void> {
-    if (this.#holdsClosure(focusId)) return;
+  async #loadAncestors(ids: readonly number[]): Promise<void> {
+    if (this.#holdsClosure(ids)) return;
     if (this.#values.size > MAXIMUM_VALUES) this.#forgetValues();
-    await this.#loadValues(await ancestorIds(this.#database, [focusId]));
+    await this.#loadValues(await ancestorIds(this.#database, ids));
   }
 
   #forgetValues(): void {
@@ -136,8 +135,8 @@ export class ChainStore {
     this.#standards.clear();
   }
 
-  #holdsClosure(focusId: number): boolean {
-    const seen = new Set<number>([focusId]);
+  #holdsClosure(ids: readonly number[]): boolean {
+    const seen = new Set<number>(ids);
     for (const id of seen) {
       const value = this.#values.get(id);
       if (!value) return false;
@@ -181,7 +180,7 @@ export class ChainStore {
   }
 
   /** Depth first, parents before children. The register admits no circle, so this ends. */
-  #inOrder(focusId: number): StoredValue[] {
+  #inOrder(ids: readonly number[]): StoredValue[] {
     const done = new Set<number>();
     const ordered: StoredValue[] = [];
     const visit = (id: number): void => {
@@ -191,7 +190,7 @@ export class ChainStore {
       for (const { parentId } of value.parents) visit(parentId);
       ordered.push(value);
     };
-    visit(focusId);
+    for (const id of ids) visit(id);
     return ordered;
   }
 }

@@ -15,7 +15,7 @@ const ANCESTORS = `
   SELECT id FROM closure`;
 
 const VALUES = `
-  SELECT v.id, v.uid, v.revision_id AS revisionId, r.n AS revisionN, c.certificate_no AS certificateNo, v.line,
+  SELECT v.id, v.uid, r.calibration_id AS calibrationId, v.revision_id AS revisionId, r.n AS revisionN, c.certificate_no AS certificateNo, v.line,
     v.issuer_id AS issuerId, v.holder_id AS holderId, c.registered_by_id AS registeredById,
     v.standard_id AS standardId, s.registry_no AS registryNo, s.marking, s.kind AS standardKind,
     (SELECT m.set_id FROM set_member m WHERE m.standard_id = s.id ORDER BY m.act_seq DESC LIMIT 1) AS setId,
@@ -27,7 +27,9 @@ const VALUES = `
     v.under_accreditation AS underAccreditation, v.unit_confirmed AS unitConfirmed, v.changed,
     r.decision_rule AS decisionRule, r.method, r.performed_begin AS performedBegin,
     v.performed_end AS performedEnd, v.date_precision AS datePrecision, v.effective_from AS issuedOn,
-    ${INSTANT('v.recorded_at')} AS recordedAt
+    ${INSTANT('v.recorded_at')} AS recordedAt,
+    (SELECT COUNT(DISTINCT o.id) FROM assigned_value o JOIN value_link l ON l.child_id = o.id
+     WHERE o.revision_id = v.revision_id AND o.id <> v.id) AS siblingLinesWithReferences
   FROM assigned_value v
   JOIN revision r ON r.id = v.revision_id
   JOIN calibration c ON c.id = r.calibration_id
@@ -62,7 +64,7 @@ const GROUPS = `
   FROM value_group g JOIN group_covariance k ON k.group_id = g.id WHERE g.id IN (:ids)`;
 
 /** Ids of `ids` and all they lean on. */
-export async function ancestorIds(database: Sequelize, ids: number[]): Promise<number[]> {
+export async function ancestorIds(database: Sequelize, ids: readonly number[]): Promise<number[]> {
   const rows = await readRows<{ id: number }>(database, ANCESTORS, { ids });
   return rows.map((row) => row.id);
 }

@@ -5,6 +5,7 @@ import type {
   LaboratoryDossier,
   StandardDossier,
   StoredEnd,
+  StoredEpoch,
   StoredHistoryValue,
   StoredProgramme,
   StoredProperty,
@@ -19,8 +20,11 @@ const STANDARDS = `
   SELECT id AS standardId, registry_no AS registryNo, marking, nominal FROM standard WHERE id IN (:ids)`;
 
 const HISTORY = `
-  SELECT v.standard_id AS standardId, v.id, v.uid, c.certificate_no AS certificateNo, r.n AS revisionN,
-    v.quantity, v.stage, e.n AS epochN, v.deviation, v.expanded_u AS expandedU, v.k,
+  SELECT v.standard_id AS standardId, v.id, v.uid, r.calibration_id AS calibrationId, v.revision_id AS revisionId,
+    c.certificate_no AS certificateNo, r.n AS revisionN,
+    v.quantity, v.medium, v.stage, e.n AS epochN, v.deviation, v.reported_unit AS reportedUnit,
+    v.reported_decimals AS reportedDecimals, v.expanded_u AS expandedU,
+    v.reported_u_decimals AS reportedUDecimals, v.k, r.performed_begin AS performedBegin,
     v.performed_end AS performedEnd, v.date_precision AS datePrecision, v.effective_from AS issuedOn,
     DATE_FORMAT(v.recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt, v.changed
   FROM assigned_value v
@@ -40,6 +44,11 @@ const ENDS = `
   LEFT JOIN revision r ON r.id = n.revision_id
   LEFT JOIN calibration c ON c.id = r.calibration_id
   WHERE v.standard_id IN (:ids)`;
+
+const EPOCHS = `
+  SELECT standard_id AS standardId, n, reason, begins_on AS beginsOn, last_good_on AS lastGoodOn,
+    DATE_FORMAT(recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt
+  FROM epoch WHERE standard_id IN (:ids) ORDER BY n`;
 
 const PROGRAMMES = `
   SELECT standard_id AS standardId, laboratory_id AS laboratoryId, interval_months AS intervalMonths, method, ${ASSERTED}
@@ -73,7 +82,7 @@ type Of<T, Key extends string> = T & Record<Key, string>;
 /** What later acts may have added to these standards: history with its ends, programmes, properties, duplicates. */
 export async function standardDossiers(database: Sequelize, ids: string[]): Promise<StandardDossier[]> {
   if (ids.length === 0) return [];
-  const [standards, history, ends, programmes, properties, duplicates] = await Promise.all([
+  const [standards, history, ends, epochs, programmes, properties, duplicates] = await Promise.all([
     readRows<Pick<StandardDossier, 'standardId' | 'registryNo' | 'marking' | 'nominal'>>(
       database,
       STANDARDS,
@@ -81,12 +90,14 @@ export async function standardDossiers(database: Sequelize, ids: string[]): Prom
     ),
     readRows<Of<Omit<StoredHistoryValue, 'ends'>, 'standardId'>>(database, HISTORY, { ids }),
     readRows<StoredEnd & { valueId: number }>(database, ENDS, { ids }),
+    readRows<Of<StoredEpoch, 'standardId'>>(database, EPOCHS, { ids }),
     readRows<Of<StoredProgramme, 'standardId'>>(database, PROGRAMMES, { ids }),
     readRows<Of<StoredProperty, 'standardId'>>(database, PROPERTIES, { ids }),
     readRows<{ standardId: string; duplicateId: string }>(database, DUPLICATES, { ids }),
   ]);
   const endsByValue = groupBy(ends, (end) => end.valueId);
   const historyOf = groupBy(history, (row) => row.standardId);
+  const epochsOf = groupBy(epochs, (row) => row.standardId);
   const programmesOf = groupBy(programmes, (row) => row.standardId);
   const propertiesOf = groupBy(properties, (row) => row.standardId);
   const duplicatesOf = groupBy(duplicates, (row) => row.standardId);
@@ -96,6 +107,7 @@ export async function standardDossiers(database: Sequelize, ids: string[]): Prom
       ...row,
       ends: endsByValue.get(row.id) ?? [],
     })),
+    epochs: epochsOf.get(standard.standardId) ?? [],
     programmes: programmesOf.get(standard.standardId) ?? [],
     properties: propertiesOf.get(standard.standardId) ?? [],
     duplicateIds: [...new Set((duplicatesOf.get(standard.standardId) ?? []).map((row) => row.duplicateId))],

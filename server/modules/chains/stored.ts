@@ -7,6 +7,7 @@
 export interface StoredValue {
   id: number;
   uid: string;
+  calibrationId: string;
   revisionId: string;
   revisionN: number;
   certificateNo: string;
@@ -59,6 +60,8 @@ export interface StoredValue {
   recordedAt: string;
   parents: StoredLink[];
   sources: StoredSourceLink[];
+  /** How many other lines of the same revision name a reference. */
+  siblingLinesWithReferences: number;
   /** The group whose covariance replaces `localU`, where its calibration correlates its results. */
   groupId: number | null;
 }
@@ -121,14 +124,21 @@ export interface StoredEnd {
 export interface StoredHistoryValue {
   id: number;
   uid: string;
+  calibrationId: string;
+  revisionId: string;
   certificateNo: string;
   revisionN: number;
   quantity: 'mass' | 'conventional mass';
+  medium: 'air' | 'vacuum' | 'inert gas';
   stage: 'as found' | 'as left' | null;
   epochN: number;
   deviation: string;
+  reportedUnit: 'kg' | 'g' | 'mg' | 'ug';
+  reportedDecimals: number;
   expandedU: string | null;
+  reportedUDecimals: number | null;
   k: string | null;
+  performedBegin: string;
   performedEnd: string;
   datePrecision: 'day' | 'month' | 'year';
   issuedOn: string;
@@ -143,6 +153,14 @@ export interface Asserted {
   validTo: string | null;
   recordedAt: string;
   actSeq: number;
+}
+
+export interface StoredEpoch {
+  n: number;
+  reason: string;
+  beginsOn: string;
+  lastGoodOn: string | null;
+  recordedAt: string;
 }
 
 export interface StoredProgramme extends Asserted {
@@ -167,6 +185,7 @@ export interface StandardDossier {
   marking: string;
   nominal: string;
   history: StoredHistoryValue[];
+  epochs: StoredEpoch[];
   programmes: StoredProgramme[];
   properties: StoredProperty[];
   /** Other members of the same sets at the same nominal: 2 and 2*. */

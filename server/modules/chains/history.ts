@@ -1,0 +1,17 @@
+import type { StandardDossier, StoredHistoryValue, StoredValue } from './stored.ts';
+
+/** The value of the same standard, kind, medium and epoch that was determined just before this one; null: none. */
+export function historyBefore(dossier: StandardDossier, value: StoredValue): StoredHistoryValue | null {
+  let before: StoredHistoryValue | null = null;
+  for (const row of dossier.history) {
+    const isComparable =
+      row.calibrationId !== value.calibrationId &&
+      row.quantity === value.quantity &&
+      row.medium === value.medium &&
+      row.epochN === value.epochN;
+    const isEarlier =
+      row.performedEnd < value.performedEnd || (row.performedEnd === value.performedEnd && row.id < value.id);
+    if (isComparable && isEarlier) before = row;
+  }
+  return before;
+}
