@@ -44,7 +44,8 @@ export const ChainValue = z.object({
   marking: z.string(),
   nominal: DecimalString,
   class: WeightClass.nullable(),
-  holder: LaboratoryName,
+  /** Who holds the weight; null in a statement. */
+  holder: LaboratoryName.nullable(),
   issuer: LaboratoryName,
   certificateNo: z.string(),
   revisionN: z.number().int(),
@@ -83,7 +84,8 @@ export const ChainSource = z.object({
   name: z.string(),
   /** Of which standard, where it belongs to one. */
   registryNo: z.string().nullable(),
-  u: z.number(),
+  /** Null where this person sees a statement only. */
+  u: z.number().nullable(),
   unit: z.string(),
   tier: z.number().int(),
   share: z.number().nullable(),
@@ -120,8 +122,8 @@ export const ChainCheck = z.object({
   /** Severity of this outcome; a rule's own, unless it depends on the effect. */
   severity: Severity,
   parameters: z.record(z.string(), z.string()),
-  /** Which of the rule's sentences applies. */
-  sentence: z.string(),
+  /** Which of the rule's sentences applies; null where it would tell more of another laboratory's weight than a statement does. */
+  sentence: z.string().nullable(),
 });
 export type ChainCheck = z.infer<typeof ChainCheck>;
 

@@ -1,0 +1,49 @@
+import { readRows } from '#server/db/read.ts';
+import { IN_FORCE, knownAt } from '#server/db/in-force.ts';
+import { today } from '#server/http/context.ts';
+import type { SignedInContext } from '#server/http/route.ts';
+import { readableLaboratoryIds } from '#server/policy/user.ts';
+
+export interface FoundValue {
+  uid: string;
+  registryNo: string;
+  nominal: string;
+  marking: string;
+  holderId: string;
+  holderCode: string;
+  holderName: string;
+  quantity: 'mass' | 'conventional mass';
+  certificateNo: string;
+  performedEnd: string;
+  deviation: string;
+  expandedU: string | null;
+  k: string | null;
+}
+
+const LONGEST_LIST = 30;
+
+/** Values in force of weights this person reads in full, by the beginning of the registry number; newest first. */
+export async function chainChoices(context: SignedInContext, q: string): Promise<FoundValue[]> {
+  const laboratoryIds = readableLaboratoryIds(context.user);
+  if (laboratoryIds?.length === 0) return [];
+  const day = today(context);
+  return readRows<FoundValue>(
+    context.database,
+    `SELECT v.uid, s.registry_no AS registryNo, v.nominal, s.marking, h.id AS holderId, h.code AS holderCode,
+       h.name AS holderName, v.quantity, c.certificate_no AS certificateNo, v.performed_end AS performedEnd,
+       v.deviation, v.expanded_u AS expandedU, v.k
+     FROM assigned_value v
+     JOIN standard s ON s.id = v.standard_id
+     JOIN revision r ON r.id = v.revision_id
+     JOIN calibration c ON c.id = r.calibration_id
+     JOIN laboratory h ON h.id = v.holder_id
+     WHERE ${laboratoryIds ? 'v.holder_id IN (:laboratoryIds) AND' : ''} s.registry_no LIKE :beginning AND ${IN_FORCE}
+     ORDER BY v.performed_end DESC, v.id DESC LIMIT ${LONGEST_LIST}`,
+    {
+      laboratoryIds: laboratoryIds ?? [],
+      beginning: `${q.toUpperCase().replace(/[\\%_]/g, (sign) => `\\${sign}`)}%`,
+      day,
+      knownAt: knownAt(day),
+    },
+  );
+}

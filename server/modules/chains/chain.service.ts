@@ -1,0 +1,135 @@
+import type { ChainResponse } from '#shared/contracts/chains.ts';
+import type { ChainFacts, Question } from '#shared/rules/facts.ts';
+import { judgeChain, type ChainJudgement } from '#shared/rules/judge.ts';
+import { endOfDay } from '#shared/state-at.ts';
+import { today, type Context } from '#server/http/context.ts';
+import { linkFacts, valueFacts, type FactParts } from './chain-facts.ts';
+import { chainNumbers, type ChainNumbers } from './chain-numbers.ts';
+import type { ChainStore, Closure } from './chain-store.ts';
+import { contributionsOf } from './contributions.ts';
+import { historyBefore } from './history.ts';
+import { improvementsOf } from './improvements.ts';
+import { sideBySide } from './side-by-side.ts';
+import type { LaboratoryDossier, StandardDossier, StoredValue } from './stored.ts';
+import { tiersOf } from './tiers.ts';
+
+/** A chain worked out, before anything is left out for the person who asks. */
+export interface Chain {
+  question: Question;
+  focus: StoredValue;
+  closure: Closure;
+  standards: Map<string, StandardDossier>;
+  laboratories: Map<string, LaboratoryDossier>;
+  numbers: ChainNumbers;
+  tiers: Map<string, number>;
+  judgement: ChainJudgement;
+  contributions: ReturnType<typeof contributionsOf>;
+  improvements: ChainResponse['improvements'];
+  sideBySide: ReturnType<typeof sideBySide>;
+}
+
+/** Chains already worked out, valid until the next act. */
+const LONGEST_MEMORY = 300;
+interface Remembered {
+  seq: number;
+  chains: Map<string, Chain>;
+}
+const memories = new WeakMap<ChainStore, Remembered>();
+
+/**
+ * Works out the chain of a value: numbers, checks, and what would help.
+ * @param day in force on (ISO day), `known` as known at the end of (ISO day)
+ */
+export async function chainOf(
+  context: Context,
+  store: ChainStore,
+  focusId: number,
+  asked: { day?: string | undefined; known?: string | undefined },
+): Promise<Chain> {
+  await store.catchUp();
+  const question: Question = {
+    day: asked.day ?? today(context),
+    known: asked.known ?? today(context),
+    programmeEndedAfterUse: 'said',
+  };
+  const key = `${focusId} ${question.day} ${question.known}`;
+  const memory = memoryOf(store);
+  const remembered = memory.get(key);
+  if (remembered) return remembered;
+  const chain = await workOut(store, focusId, question);
+  if (memory.size >= LONGEST_MEMORY) memory.delete(memory.keys().next().value!);
+  memory.set(key, chain);
+  return chain;
+}
+
+function memoryOf(store: ChainStore): Map<string, Chain> {
+  const memory = memories.get(store);
+  if (memory?.seq === store.seq) return memory.chains;
+  const fresh = { seq: store.seq, chains: new Map<string, Chain>() };
+  memories.set(store, fresh);
+  return fresh.chains;
+}
+
+async function workOut(store: ChainStore, focusId: number, question: Question): Promise<Chain> {
+  const closure = await store.closure([focusId]);
+  const focus = closure.values.find((value) => value.id === focusId)!;
+  const [standards, laboratories] = await Promise.all([
+    store.standards(closure.values.map((value) => value.standardId)),
+    store.laboratories(closure.values.flatMap((value) => [value.issuerId, value.holderId])),
+  ]);
+  const earlier = closure.values.flatMap((value) => {
+    const before = historyBefore(standards.get(value.standardId)!, value);
+    return before ? [before.id] : [];
+  });
+  const widened = await store.closure([focusId, ...earlier]);
+  const numbers = chainNumbers(widened, focus.uid);
+  const contributions = contributionsOf(widened, numbers.propagation);
+  const parts: FactParts = {
+    question,
+    standards,
+    laboratories,
+    numbers,
+    byId: new Map(widened.values.map((value) => [value.id, value])),
+  };
+  const facts = chainFacts(closure, focus, parts, contributions);
+  return {
+    question,
+    focus,
+    closure,
+    standards,
+    laboratories,
+    numbers,
+    tiers: tiersOf(closure, focus),
+    judgement: judgeChain(facts),
+    contributions,
+    improvements: improvementsOf(closure, focus, numbers.propagation, standards, endOfDay(question.known)),
+    sideBySide: sideBySide(
+      focus,
+      standards.get(focus.standardId)!,
+      numbers.propagation.standardUncertainty,
+      endOfDay(question.known),
+    ),
+  };
+}
+
+function chainFacts(
+  closure: Closure,
+  focus: StoredValue,
+  parts: FactParts,
+  contributions: Chain['contributions'],
+): ChainFacts {
+  const values = new Map(closure.values.map((value) => [value.id, valueFacts(value, parts)]));
+  return {
+    question: parts.question,
+    focusUid: focus.uid,
+    values: [...values.values()],
+    links: closure.values.flatMap((value) =>
+      value.parents.map((link) => linkFacts(values.get(value.id)!, values.get(link.parentId)!, link, parts)),
+    ),
+    contributions,
+    varianceNow: parts.numbers.variance(focus.uid),
+    // The register admits neither: a circle is refused at issue, and a reference is a row or nothing.
+    circle: null,
+    missingReferences: [],
+  };
+}

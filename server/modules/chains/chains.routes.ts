@@ -1,0 +1,63 @@
+import { z } from 'zod';
+import {
+  ChainQuery,
+  ChainResponse,
+  ChainSearchQuery,
+  ChainSearchResponse,
+  CovarianceResponse,
+} from '#shared/contracts/chains.ts';
+import { Id } from '#shared/ids.ts';
+import { route, type Route } from '#server/http/route.ts';
+import { authorize, signedIn } from '#server/policy/permission.ts';
+import { chainChoices } from './chain-search.queries.ts';
+import { chainSubject } from './chain-subject.queries.ts';
+import { presentChain } from './chain.presenter.ts';
+import { chainOf } from './chain.service.ts';
+import { readChain } from './chains.policy.ts';
+import { covarianceOf } from './covariance.service.ts';
+import { storeOf } from './store-of.ts';
+
+export const chainRoutes: Route[] = [
+  route({
+    method: 'get',
+    path: '/api/chains',
+    summary: 'Which chain to open: values in force of one’s own weights.',
+    permission: signedIn,
+    query: ChainSearchQuery,
+    act: (context, { query }) => chainChoices(context, query.q),
+    response: ChainSearchResponse,
+    present: (rows) => ({
+      values: rows.map(({ holderId, holderCode, holderName, ...row }) => ({
+        ...row,
+        holder: { id: holderId, code: holderCode, name: holderName },
+      })),
+    }),
+  }),
+  route({
+    method: 'get',
+    path: '/api/chains/:valueUid',
+    summary: 'The chain of a value up to the SI, with its numbers and checks, on a day as known on a day.',
+    permission: readChain,
+    params: z.object({ valueUid: Id }),
+    query: ChainQuery,
+    subject: (context, { params }) => chainSubject(context, params.valueUid),
+    act: (context, { query }, subject) => chainOf(context, storeOf(context.database), subject.id, query),
+    response: ChainResponse,
+    present: (chain, context, subject) => presentChain(chain, context.user, subject),
+  }),
+  route({
+    method: 'get',
+    path: '/api/chains/:valueUid/covariance/:otherUid',
+    summary: 'Covariance and correlation of two values through everything they share.',
+    permission: readChain,
+    params: z.object({ valueUid: Id, otherUid: Id }),
+    subject: (context, { params }) => chainSubject(context, params.valueUid),
+    act: async (context, { params }, subject) => {
+      const other = await chainSubject(context, params.otherUid);
+      authorize(context.user, readChain, other);
+      return covarianceOf(storeOf(context.database), subject, other);
+    },
+    response: CovarianceResponse,
+    present: (result) => result,
+  }),
+];

@@ -1,0 +1,3 @@
+export { chainOf } from './chain.service.ts';
+export { chainRoutes } from './chains.routes.ts';
+export { storeOf } from './store-of.ts';
