@@ -1,6 +1,5 @@
 import type { z } from 'zod';
-import type { CalibrationLine, DecisionRule, RootKind, UsedAs } from '#shared/contracts/calibrations.ts';
-import type { Contribution } from '#shared/contracts/chains.ts';
+import type { DecisionRule, RootKind, UsedAs } from '#shared/contracts/calibrations.ts';
 import type {
   DatePrecision,
   MassUnit,
@@ -142,7 +141,7 @@ export interface ValueFacts extends ResultFacts, DatesFacts {
   class: WeightClass | null;
   decisionRule: z.infer<typeof DecisionRule> | null;
   /** Coverage probability as text. */
-  coverage: CalibrationLine['coverage'];
+  coverage: string | null;
   underAccreditation: boolean;
   unitConfirmed: boolean;
   rootKind: RootKind | null;
@@ -210,6 +209,15 @@ export interface Question {
   programmeEndedAfterUse: 'said' | 'breaks';
 }
 
+/** Part of the focus's variance by where it arises. */
+export interface ContributionFacts {
+  label: string;
+  /** A fraction, signed. */
+  share: number;
+  /** Arises in a root itself or in the scale version it rests on. */
+  isTop: boolean;
+}
+
 /** A whole chain. */
 export interface ChainFacts {
   question: Question;
@@ -218,7 +226,7 @@ export interface ChainFacts {
   values: ValueFacts[];
   links: LinkFacts[];
   /** Shares of the focus's variance by origin; null: not computable. */
-  contributions: Pick<z.infer<typeof Contribution>, 'label' | 'kind' | 'share'>[] | null;
+  contributions: ContributionFacts[] | null;
   /** Variance of the focus as computed now over the whole chain; null: not computable. */
   varianceNow: number | null;
   /** Uids of a circle, in its order; null: none. */

@@ -24,6 +24,8 @@ export interface RuleHead {
   severity: Severity;
   /** Which verdicts it speaks for; it is judged once for each. */
   verdicts: readonly VerdictName[];
+  /** A flaw of the result itself: found for the conduct, it counts for today as well. */
+  isLasting?: true;
   /** Each names the certificate, the date or the field that would mend it. */
   sentences: Readonly<Record<string, string>>;
 }

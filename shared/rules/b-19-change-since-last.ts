@@ -1,0 +1,95 @@
+import type { HistoryFacts, ValueFacts } from './facts.ts';
+import { isUnitQuestioned } from './b-18-unit.ts';
+import { dateText } from './days.ts';
+import { mpeOf } from './mpe.ts';
+import { certificateText, deviationOf, ratioText, statedU, uOfDifference, valueText } from './numbers.ts';
+import { CLEAR_CHANGE, isSignOdd, isSwapOdd, isUnitOdd, splitHistory } from './odd-one-out.ts';
+import { cannotBeJudged, doesNotApply, fails, holds, type ValueRule } from './rule.ts';
+
+/**
+ * Change since the last calibration of the same epoch against its U (k = 2) with covariance. Between 1 and 1.5 it is
+ * a question only: 4.6 % of honest pairs lie there or beyond. An M weight in service may wear by its maximum
+ * permissible error (common practice, no source). One fault is reported once: a value whose sign, unit or identity
+ * is asked about is not asked about again, and its successor is compared with the value before it.
+ */
+export const changeSinceLast: ValueRule = {
+  id: 'B-19',
+  title: 'Change since the last calibration',
+  scope: 'value',
+  severity: 'major',
+  verdicts: ['today'],
+  isLasting: true,
+  sentences: {
+    small:
+      'Changed from {previousValue} (certificate {previous}, {previousDate}) to {value}: {ratio} of its U.',
+    question:
+      'Changed from {previousValue} (certificate {previous}, {previousDate}) to {value}: {ratio} of its U. One honest pair in twenty does.',
+    large:
+      'Changed from {previousValue} (certificate {previous}, {previousDate}) to {value} (certificate {certificate}): {ratio} of its U. Find the cause, or open a new epoch for {registryNo}.',
+    returned:
+      'Differs from certificate {previous} ({previousValue}) by {ratio} of its U, but agrees with the value before it: the question belongs to {previous}.',
+    wear: 'Changed from {previousValue} to {value}, {ratio} of its U, within what class {class} allows for wear.',
+    first: 'There is no earlier value of {registryNo} in this epoch to compare with.',
+    'asked elsewhere':
+      'The value of certificate {certificate} is asked about by another rule (sign, unit or exchanged weights).',
+    'no uncertainty': 'Certificate {without} states no U; without it the change cannot be weighed.',
+  },
+  judge(value) {
+    const known = { certificate: certificateText(value), registryNo: value.registryNo };
+    if (isAskedElsewhere(value)) return doesNotApply('asked elsewhere', known);
+    const [previous, ...before] = comparable(value);
+    if (!previous) return doesNotApply('first', known);
+    const ratio = changeRatio(value, previous);
+    if (ratio === null) {
+      const without = statedU(value) === null ? value : previous;
+      return cannotBeJudged('no uncertainty', { ...known, without: certificateText(without) });
+    }
+    const parameters = {
+      ...known,
+      class: value.class ?? '',
+      value: valueText(value),
+      previous: certificateText(previous),
+      previousValue: valueText(previous),
+      previousDate: dateText(previous.performedEnd, previous.datePrecision),
+      ratio: ratioText(ratio),
+    };
+    if (ratio <= 1) return holds('small', parameters);
+    if (ratio <= CLEAR_CHANGE) return holds('question', parameters, 'information');
+    if (isWear(value, previous)) return holds('wear', parameters, 'information');
+    const hasReturned = before.some((past) => (changeRatio(value, past) ?? Infinity) <= 1);
+    return hasReturned ? holds('returned', parameters, 'information') : fails('large', parameters);
+  },
+};
+
+/** |change| / U(change), k = 2; null where either states no U. */
+function changeRatio(value: ValueFacts, past: HistoryFacts): number | null {
+  const u = uOfDifference(value, past, past.covariance);
+  return u === null ? null : Math.abs(deviationOf(value) - deviationOf(past)) / (2 * u);
+}
+
+function isAskedElsewhere(value: ValueFacts): boolean {
+  const { earlier, later } = splitHistory(value);
+  return (
+    isSignOdd(value, earlier, later) ||
+    isUnitQuestioned(value) ||
+    value.duplicates.some((duplicate) => isSwapOdd(value, duplicate))
+  );
+}
+
+/** Earlier values, newest first, without those whose own sign or unit is the odd one. */
+function comparable(value: ValueFacts): HistoryFacts[] {
+  const everything = [...value.history, value];
+  return splitHistory(value)
+    .earlier.filter((past) => {
+      const others = everything.filter((other) => other.uid !== past.uid);
+      const earlier = others.filter((other) => other.performedEnd <= past.performedEnd);
+      const later = others.filter((other) => other.performedEnd > past.performedEnd);
+      return !isSignOdd(past, earlier, later) && !isUnitOdd(past, earlier, later);
+    })
+    .reverse();
+}
+
+function isWear(value: ValueFacts, previous: HistoryFacts): boolean {
+  const mpe = value.class?.startsWith('M') ? mpeOf(value) : null;
+  return mpe !== null && mpe.gte(Math.abs(deviationOf(value) - deviationOf(previous)));
+}

@@ -1,0 +1,118 @@
+import { Decimal } from '#shared/decimal.ts';
+import { formatQuantity } from '#shared/engine/quantity/format-quantity.ts';
+import { UNIT_DEFINITIONS } from '#shared/engine/quantity/units.ts';
+import type { ResultFacts } from './facts.ts';
+
+/** Standard uncertainty in g as the certificate states it, U/k; null where U or k is not stated. */
+export function statedU(result: Pick<ResultFacts, 'expandedU' | 'k'>): number | null {
+  if (result.expandedU === null || result.k === null) return null;
+  return new Decimal(result.expandedU).div(result.k).toNumber();
+}
+
+/** A deviation in g as a number, for comparisons against an uncertainty only. */
+export function deviationOf(result: Pick<ResultFacts, 'deviation'>): number {
+  return new Decimal(result.deviation).toNumber();
+}
+
+/** Grams in the reported unit. */
+export function inReportedUnit(result: Pick<ResultFacts, 'reportedUnit'>, grams: string | number): Decimal {
+  return new Decimal(grams).times(new Decimal(10).pow(-UNIT_DEFINITIONS[result.reportedUnit].exponent));
+}
+
+/** Half of the value's last printed digit, g. */
+export function halfDigit(result: Pick<ResultFacts, 'reportedUnit' | 'reportedDecimals'>): Decimal {
+  return halfDigitAt(result, result.reportedDecimals);
+}
+
+/** Half of U's last printed digit, g. */
+export function halfDigitOfU(result: ResultFacts): Decimal {
+  return halfDigitAt(result, decimalsOfU(result) ?? 0);
+}
+
+/**
+ * Decimals of U in the reported unit: as kept, else the fewest that write it. Null where U is not stated. Decimals
+ * that cannot write U belong to another unit and are not believed.
+ */
+export function decimalsOfU(result: ResultFacts): number | null {
+  if (result.expandedU === null) return null;
+  const needed = inReportedUnit(result, result.expandedU).decimalPlaces();
+  const kept = result.reportedUDecimals;
+  return kept === null || kept < needed ? needed : kept;
+}
+
+/** Whether the printed decimals of U are on record and can be those. */
+export function isUDecimalsKept(result: ResultFacts): boolean {
+  return result.reportedUDecimals !== null && decimalsOfU(result) === result.reportedUDecimals;
+}
+
+/** U in the reported unit with its printed decimals, plain text; U has to be stated. */
+export function printedU(result: ResultFacts): string {
+  return inReportedUnit(result, result.expandedU ?? '0').toFixed(decimalsOfU(result) ?? 0);
+}
+
+/**
+ * Standard uncertainty of the difference of two results, g, with the rounding of both values (rectangular over the
+ * last digit). Null where either states no U. A covariance that would leave nothing is not believed.
+ * @param covariance g2; null: taken as 0, which for results that share an ancestor overstates
+ */
+export function uOfDifference(a: ResultFacts, b: ResultFacts, covariance: number | null): number | null {
+  const [ua, ub] = [statedU(a), statedU(b)];
+  if (ua === null || ub === null) return null;
+  const rounding = (halfDigit(a).toNumber() ** 2 + halfDigit(b).toNumber() ** 2) / 3;
+  const independent = ua ** 2 + ub ** 2;
+  const correlated = independent - 2 * (covariance ?? 0);
+  return Math.sqrt((correlated > 0 ? correlated : independent) + rounding);
+}
+
+/** A deviation for reading, in the unit and decimals of its certificate. */
+export function valueText(result: ResultFacts): string {
+  return quantityText(
+    inReportedUnit(result, result.deviation),
+    result.reportedUnit,
+    result.reportedDecimals,
+    true,
+  );
+}
+
+/** U for reading, in the reported unit; "not stated" where there is none. */
+export function expandedUText(result: ResultFacts): string {
+  if (result.expandedU === null) return 'not stated';
+  return quantityText(new Decimal(printedU(result)), result.reportedUnit, decimalsOfU(result)!, false);
+}
+
+/** A computed amount in g for reading, to two significant digits in the unit of a result. */
+export function amountText(grams: number | Decimal, like: Pick<ResultFacts, 'reportedUnit'>): string {
+  const amount = inReportedUnit(like, new Decimal(grams).toFixed()).toSignificantDigits(2);
+  const decimals = amount.isZero() ? 0 : Math.max(0, 1 - amount.e);
+  return quantityText(amount, like.reportedUnit, decimals, false);
+}
+
+/** A fraction as a percentage for reading. */
+export function percentText(fraction: number): string {
+  return `${new Decimal(fraction).times(100).toSignificantDigits(2).toFixed()} %`;
+}
+
+/** A ratio for reading, to two significant digits. */
+export function ratioText(ratio: number): string {
+  return new Decimal(ratio).toSignificantDigits(2).toFixed();
+}
+
+/** A certificate for reading; the revision is named from the second on. */
+export function certificateText(result: { certificateNo: string; revisionN: number }): string {
+  return result.revisionN > 1
+    ? `${result.certificateNo}, revision ${result.revisionN}`
+    : result.certificateNo;
+}
+
+function quantityText(
+  value: Decimal,
+  unit: ResultFacts['reportedUnit'],
+  decimals: number,
+  showPlus: boolean,
+): string {
+  return formatQuantity({ value, unit, decimals, showPlus }).text;
+}
+
+function halfDigitAt(result: Pick<ResultFacts, 'reportedUnit'>, decimals: number): Decimal {
+  return new Decimal(10).pow(UNIT_DEFINITIONS[result.reportedUnit].exponent - decimals).div(2);
+}
