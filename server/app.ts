@@ -5,6 +5,7 @@ import { pinoHttp } from 'pino-http';
 import type { Sequelize } from 'sequelize';
 import { makePassport } from '#server/auth/passport.ts';
 import { sessionStore } from '#server/auth/session.ts';
+import { sessionControl } from '#server/auth/sign-in.ts';
 import { AppError } from '#server/http/app-error.ts';
 import { systemClock, type Clock } from '#server/http/context.ts';
 import { errorHandler } from '#server/http/error-handler.ts';
@@ -50,7 +51,7 @@ export function createApp(parts: AppParts): App {
       autoLogging: { ignore: (request) => !request.url?.startsWith('/api') },
     }),
   );
-  app.use(requestContext(parts.database, clock));
+  app.use(requestContext(parts.database, clock, parts.dataDir));
   app.use(
     '/api',
     noStore,
@@ -59,7 +60,7 @@ export function createApp(parts: AppParts): App {
     passport.initialize(),
     passport.session(),
   );
-  app.use('/api', userIntoContext, sameOrigin);
+  app.use('/api', userIntoContext, sessionControl(passport, clock), sameOrigin);
   for (const route of routes) app[route.method](route.path, ...route.handlers);
   app.use('/api', () => {
     throw new AppError('not-found', 'There is no such address in the programming interface.');

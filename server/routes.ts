@@ -1,5 +1,13 @@
+import { documentRoutes } from '#server/modules/documents/index.ts';
 import { healthRoutes } from '#server/modules/health/index.ts';
+import { identityRoutes } from '#server/modules/identity/index.ts';
+import { networkRoutes } from '#server/modules/network/index.ts';
 import type { Route } from '#server/http/route.ts';
 
 /** Every route of the product. A test walks this table as every kind of person. */
-export const routes: readonly Route[] = [...healthRoutes];
+export const routes: readonly Route[] = [
+  ...healthRoutes,
+  ...identityRoutes,
+  ...networkRoutes,
+  ...documentRoutes,
+];

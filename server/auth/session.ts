@@ -3,6 +3,9 @@ import session from 'express-session';
 import type { RequestHandler } from 'express';
 import { DataTypes, type Sequelize } from 'sequelize';
 
+/** Name of the cookie; it holds a signed random id and nothing else. */
+export const SESSION_COOKIE = 'exagium.session';
+
 /** A working day and an evening: after this the person signs in again. */
 const SESSION_MILLISECONDS = 12 * 60 * 60 * 1000;
 const CLEANING_MILLISECONDS = 15 * 60 * 1000;
@@ -35,7 +38,7 @@ export function sessionStore(database: Sequelize, secret: string, isBehindTls: b
   };
   const store = new Store(options);
   const middleware = session({
-    name: 'exagium.session',
+    name: SESSION_COOKIE,
     secret,
     store,
     resave: false,

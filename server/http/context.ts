@@ -10,6 +10,14 @@ export interface Clock {
 
 export const systemClock: Clock = { now: () => new Date() };
 
+/** How a route signs a person in or out without touching the request: `server/auth/sign-in.ts` gives it. */
+export interface SessionControl {
+  /** Checks the password, counts failures and opens a session with a new id. */
+  signIn(email: string, password: string): Promise<User>;
+  /** Ends the session and clears its cookie. */
+  signOut(): Promise<void>;
+}
+
 /** Who asks, when, and under which request: handed to every service as its first argument. */
 export interface Context {
   requestId: string;
@@ -17,6 +25,10 @@ export interface Context {
   database: Sequelize;
   clock: Clock;
   user: User | null;
+  /** Where documents are kept; null for work that keeps none. */
+  dataDir: string | null;
+  /** Null where no browser asks. */
+  session: SessionControl | null;
   /** Ten bytes for the next identifier; seeded for the demo network, from the system otherwise. */
   randomness(): Uint8Array;
 }
@@ -27,6 +39,8 @@ export function makeContext(parts: Partial<Context> & { database: Sequelize }): 
     requestId: 'internal',
     clock: systemClock,
     user: null,
+    dataDir: null,
+    session: null,
     randomness: () => randomBytes(10),
     ...parts,
   };

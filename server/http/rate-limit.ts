@@ -32,6 +32,11 @@ export class FailureLimit {
     this.#failures.set(key, [...this.#recent(key), this.#clock.now().getTime()]);
   }
 
+  /** Takes the newest failure back: the attempt that was noted turned out well. */
+  takeBack(key: string): void {
+    this.#failures.set(key, this.#recent(key).slice(0, -1));
+  }
+
   /** Forgets a key after success. */
   clear(key: string): void {
     this.#failures.delete(key);

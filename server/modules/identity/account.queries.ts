@@ -55,14 +55,16 @@ export async function verifyPassword(
   email: string,
   password: string,
 ): Promise<User | null> {
-  const row = await readRow<{ id: string; argon2id: string }>(
+  const row = await readRow<{ id: string; email: string; argon2id: string }>(
     database,
-    `SELECT a.id, p.argon2id FROM account a JOIN account_password p ON p.account_id = a.id
+    `SELECT a.id, a.email, p.argon2id FROM account a JOIN account_password p ON p.account_id = a.id
      WHERE a.email = :email ORDER BY p.act_seq DESC LIMIT 1`,
     { email },
   );
   const isRight = await verify(row?.argon2id ?? DECOY, password);
-  return row && isRight ? userByAccountId(database, clock, row.id) : null;
+  // The column also takes "é" for "e"; failures are counted by what was typed, so only case may differ.
+  const isSameEmail = row?.email.toLowerCase() === email.toLowerCase();
+  return row && isRight && isSameEmail ? userByAccountId(database, clock, row.id) : null;
 }
 
 function userOf(account: AccountRow, roles: RoleRow[]): User {

@@ -3,6 +3,7 @@ import { inAct } from '#server/db/act.ts';
 import { insertRow } from '#server/db/base-model.ts';
 import { fieldError } from '#server/http/app-error.ts';
 import { newId, type Context } from '#server/http/context.ts';
+import { assertAuthorisation } from '#server/modules/network/index.ts';
 import { membershipModel } from './account.model.ts';
 
 export type RoleName = Role;
@@ -15,6 +16,34 @@ export interface MembershipAssertion {
   state: 'granted' | 'ended';
   validFrom: string;
   validTo: string | null;
+}
+
+/**
+ * Gives or ends a role as the people of a laboratory see it: a signatory is also authorised to sign
+ * (ISO/IEC 17025:2017, 6.2.6), in the same act.
+ * @throws AppError `unprocessable` as `assertMembership`
+ */
+export async function changeRole(
+  context: Context,
+  assertion: MembershipAssertion & { laboratoryId: string },
+): Promise<{ id: string }> {
+  const kind = assertion.state === 'granted' ? 'membership.grant' : 'membership.end';
+  return inAct(context, { kind, laboratoryId: assertion.laboratoryId }, async (act) => {
+    const made = await assertMembership(context, assertion);
+    if (assertion.role === 'signatory') {
+      const { accountId, laboratoryId, state, validFrom, validTo } = assertion;
+      await assertAuthorisation(context, {
+        accountId,
+        laboratoryId,
+        what: 'sign calibrations',
+        state,
+        validFrom,
+        validTo,
+      });
+    }
+    act.record({ subject: { type: 'membership', id: made.id }, after: assertion });
+    return made;
+  });
 }
 
 const NETWORK_ROLES: readonly Role[] = ['registrar', 'comparison pilot'];

@@ -6,3 +6,5 @@ export {
   createLaboratory,
   createScaleVersion,
 } from './network.service.ts';
+export { networkRoutes } from './network.routes.ts';
+export { refuseUnknownLaboratory } from './refuse-unknown-laboratory.ts';
