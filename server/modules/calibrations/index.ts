@@ -1,0 +1,3 @@
+export { issueCalibration, type IssuedCalibration } from './issue-calibration.service.ts';
+export { reviseCalibration } from './revise-calibration.service.ts';
+export { withdrawCalibration } from './withdraw-calibration.service.ts';

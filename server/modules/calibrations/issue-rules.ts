@@ -1,0 +1,329 @@
+import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { FieldProblem } from '#shared/errors.ts';
+import { isPositiveSemidefinite } from '#shared/engine/linear/matrix.ts';
+import { AppError } from '#server/http/app-error.ts';
+import { twin } from './complete-sources.ts';
+import type { IssueFacts, ReferenceFacts, StandardFacts } from './issue-facts.ts';
+import { unitQuestion } from './unit-question.ts';
+
+/** A rule of the domain that the calibration breaks, at a path of the input. */
+export type IssueProblem = FieldProblem & { field: string };
+
+/** Everything that keeps this calibration from being issued, in the order of the sheet. Empty where nothing does. */
+export function issueProblems(input: CalibrationInput, facts: IssueFacts): IssueProblem[] {
+  return [
+    ...dateProblems(input, facts.today),
+    ...partyProblems(input, facts),
+    ...input.lines.flatMap((line, at) => lineProblems(line, at, input, facts)),
+    ...groupProblems(input),
+  ];
+}
+
+/**
+ * Refuses a calibration that breaks a rule; every problem is named at its field.
+ * @throws AppError `unprocessable`
+ */
+export function refuseProblems(problems: readonly IssueProblem[]): void {
+  const first = problems[0];
+  if (!first) return;
+  const fields = Object.fromEntries(
+    problems.toReversed().map(({ field, ...problem }) => [field, problem] as const),
+  );
+  const more = problems.length > 1 ? ` (and ${problems.length - 1} more)` : '';
+  throw new AppError('unprocessable', `${first.message}${more}`, { fields });
+}
+
+function dateProblems(input: CalibrationInput, today: string): IssueProblem[] {
+  const { performedBegin, performedEnd, issuedOn } = input;
+  const problems: IssueProblem[] = [];
+  if (performedBegin > performedEnd) {
+    problems.push({
+      field: 'performedEnd',
+      message: 'The calibration ends before it begins.',
+      received: performedEnd,
+      expected: `${performedBegin} or later`,
+    });
+  }
+  if (performedEnd > issuedOn) {
+    problems.push({
+      field: 'issuedOn',
+      message: 'The certificate is issued before the calibration ends.',
+      received: issuedOn,
+      expected: `${performedEnd} or later`,
+      clause: 'ISO/IEC 17025:2017, 7.8.2.1',
+    });
+  }
+  if (issuedOn > today) {
+    problems.push({
+      field: 'issuedOn',
+      message: 'The day of issue lies in the future.',
+      received: issuedOn,
+      expected: `${today} or earlier`,
+    });
+  }
+  return problems;
+}
+
+function partyProblems(input: CalibrationInput, facts: IssueFacts): IssueProblem[] {
+  const problems: IssueProblem[] = [];
+  for (const field of ['issuerId', 'registeredById'] as const) {
+    if (!facts.laboratories.has(input[field])) {
+      problems.push({ field, message: 'This laboratory is not in the register.', received: input[field] });
+    }
+  }
+  if (input.documentId !== null && facts.documentLaboratoryId !== input.registeredById) {
+    problems.push({
+      field: 'documentId',
+      message: 'This document is not among those of the laboratory that enters the calibration.',
+      received: input.documentId,
+    });
+  }
+  return problems;
+}
+
+function lineProblems(
+  line: CalibrationLine,
+  at: number,
+  input: CalibrationInput,
+  facts: IssueFacts,
+): IssueProblem[] {
+  const path = `lines.${at}`;
+  const standard = facts.standards.get(line.standardId);
+  if (!standard || !isTheirs(standard, input)) {
+    return [
+      {
+        field: `${path}.standardId`,
+        message:
+          'This weight is not in the register as one of the issuer or of the laboratory that enters it.',
+        received: standard?.registryNo ?? line.standardId,
+        expected: 'a weight registered by one of the two',
+      },
+    ];
+  }
+  return [
+    ...repeatedLine(line, at, input, standard),
+    ...uncertaintyProblems(line, path),
+    ...rootProblems(line, path, input, facts),
+    ...referenceProblems(line, path, input, facts, standard),
+    ...sourceProblems(line, path, facts),
+    ...unitQuestion(line, standard).map((problem) => ({ ...problem, field: `${path}.deviation` })),
+  ];
+}
+
+function isTheirs(standard: StandardFacts, input: CalibrationInput): boolean {
+  const holders = [standard.ownerId, standard.custodianId, standard.laboratoryId];
+  return holders.includes(input.registeredById) || holders.includes(input.issuerId);
+}
+
+function repeatedLine(
+  line: CalibrationLine,
+  at: number,
+  input: CalibrationInput,
+  standard: StandardFacts,
+): IssueProblem[] {
+  const first = input.lines.findIndex(
+    (other) =>
+      other.standardId === line.standardId &&
+      other.quantity === line.quantity &&
+      other.medium === line.medium &&
+      other.stage === line.stage,
+  );
+  if (first === at) return [];
+  return [
+    {
+      field: `lines.${at}.standardId`,
+      message: `Lines ${first + 1} and ${at + 1} give ${standard.registryNo} the same kind of value in the same state. One certificate gives it once.`,
+      received: standard.registryNo,
+    },
+  ];
+}
+
+function uncertaintyProblems(line: CalibrationLine, path: string): IssueProblem[] {
+  if (line.expandedU === null || line.k !== null) return [];
+  return [
+    {
+      field: `${path}.k`,
+      message: 'An expanded uncertainty needs its coverage factor.',
+      received: 'nothing',
+      expected: 'k as printed on the certificate, usually 2',
+      clause: 'JCGM 100:2008, 7.2.3',
+    },
+  ];
+}
+
+function rootProblems(
+  line: CalibrationLine,
+  path: string,
+  input: CalibrationInput,
+  facts: IssueFacts,
+): IssueProblem[] {
+  const leans = line.references.some((reference) => reference.role === 'reference');
+  const problems: IssueProblem[] = [];
+  if (line.rootKind !== null && leans) {
+    problems.push({
+      field: `${path}.rootKind`,
+      message: `A ${line.rootKind} leans on nothing. Leave its references out, or name them as what informs it.`,
+      received: line.rootKind,
+    });
+  }
+  if (line.rootKind === null && !leans && input.issuerId === input.registeredById) {
+    problems.push({
+      field: `${path}.references`,
+      message: 'A result of one’s own names the value of the reference it leaned on.',
+      received: 'nothing',
+      expected: 'at least one assigned value',
+      clause: 'ISO/IEC 17025:2017, 6.5.1',
+    });
+  }
+  if (line.scaleVersionId !== null && !facts.scaleVersionIds.has(line.scaleVersionId)) {
+    problems.push({
+      field: `${path}.scaleVersionId`,
+      message: 'This version of the mass scale is not in the register.',
+      received: line.scaleVersionId,
+    });
+  }
+  return problems;
+}
+
+function referenceProblems(
+  line: CalibrationLine,
+  path: string,
+  input: CalibrationInput,
+  facts: IssueFacts,
+  standard: StandardFacts,
+): IssueProblem[] {
+  const problems: IssueProblem[] = [];
+  const seen = new Set<string>();
+  for (const [at, used] of line.references.entries()) {
+    const field = `${path}.references.${at}`;
+    const reference = facts.references.get(used.valueUid);
+    if (!reference) {
+      problems.push({
+        field: `${field}.valueUid`,
+        message: 'This reference value is not in the register. Keep the sheet as a draft until it is.',
+        received: used.valueUid,
+        clause: 'ISO/IEC 17025:2017, 6.5.1',
+      });
+      continue;
+    }
+    const key = `${used.valueUid} ${used.role}`;
+    if (seen.has(key)) {
+      problems.push({
+        field: `${field}.valueUid`,
+        message: `${reference.registryNo}, ${reference.certificateNo} is named twice. Add the two sensitivities.`,
+        received: reference.certificateNo,
+      });
+    }
+    seen.add(key);
+    problems.push(...useProblems(used, field, input, reference));
+    problems.push(...kindProblem(line, `${field}.valueUid`, input, reference, facts, standard));
+  }
+  return problems;
+}
+
+function useProblems(
+  used: CalibrationLine['references'][number],
+  field: string,
+  input: CalibrationInput,
+  reference: ReferenceFacts,
+): IssueProblem[] {
+  const problems: IssueProblem[] = [];
+  if (used.usedBegin > used.usedEnd || used.usedEnd > input.issuedOn) {
+    problems.push({
+      field: `${field}.usedEnd`,
+      message: `The use of ${reference.registryNo} ends before it begins, or after the certificate was issued.`,
+      received: used.usedEnd,
+      expected: `from ${used.usedBegin} to ${input.issuedOn}`,
+    });
+  }
+  if (used.role === 'reference' && used.sensitivity === 0) {
+    problems.push({
+      field: `${field}.sensitivity`,
+      message: 'A reference with sensitivity 0 carries nothing. Give its sensitivity, or leave it out.',
+      received: '0',
+      expected: '1 for a comparison at equal nominal; 0.5 for 500 g from 1 kg',
+    });
+  }
+  if (used.usedAs === 'class limit' && reference.class === null && used.usedExpandedU === null) {
+    problems.push({
+      field: `${field}.usedExpandedU`,
+      message: `${reference.registryNo} has no class, so it has no class limit to be used by.`,
+      received: 'nothing',
+      expected: 'the limit that was used, or another way of use',
+    });
+  }
+  return problems;
+}
+
+/**
+ * Rule B-16: mass and conventional mass differ by 94 mg/kg for platinum-iridium; a change of kind at E1 to F1
+ * needs the volume with its uncertainty (OIML D 28).
+ */
+function kindProblem(
+  line: CalibrationLine,
+  field: string,
+  input: CalibrationInput,
+  reference: ReferenceFacts,
+  facts: IssueFacts,
+  standard: StandardFacts,
+): IssueProblem[] {
+  const isFine = ['E1', 'E2', 'F1'].includes(line.class ?? standard.class ?? '');
+  if (!isFine || reference.quantity === line.quantity || twin(line, input)) return [];
+  const converted = line.quantity === 'conventional mass' ? reference.volumeSource : standard.volumeSource;
+  if (converted || line.sources.some(({ sourceUid }) => facts.sources.get(sourceUid)?.kind === 'volume')) {
+    return [];
+  }
+  const whose = line.quantity === 'conventional mass' ? reference.registryNo : standard.registryNo;
+  return [
+    {
+      field,
+      message: `The reference value is a ${reference.quantity} and the result a ${line.quantity}. Enter the density of ${whose} with its U, so that the conversion and its uncertainty are known.`,
+      received: reference.quantity,
+      expected: line.quantity,
+      clause: 'OIML D 28',
+    },
+  ];
+}
+
+function sourceProblems(line: CalibrationLine, path: string, facts: IssueFacts): IssueProblem[] {
+  const seen = new Set<string>();
+  return line.sources.flatMap(({ sourceUid }, at) => {
+    const isKnown = facts.sources.has(sourceUid);
+    const isRepeated = seen.has(sourceUid);
+    seen.add(sourceUid);
+    if (isKnown && !isRepeated) return [];
+    const message = isKnown
+      ? 'This shared effect is named twice.'
+      : 'This shared effect is not in the register.';
+    return [{ field: `${path}.sources.${at}.sourceUid`, message, received: sourceUid }];
+  });
+}
+
+function groupProblems(input: CalibrationInput): IssueProblem[] {
+  const { group, lines } = input;
+  if (!group) return [];
+  const field = 'group.covariance';
+  const size = lines.length;
+  if (group.covariance.length !== size || group.covariance.some((row) => row.length !== size)) {
+    return [
+      {
+        field,
+        message: 'The covariance of the local parts has one row and one column per result.',
+        received: `${group.covariance.length} rows`,
+        expected: `${size} rows of ${size}`,
+      },
+    ];
+  }
+  const { ok, offending } = isPositiveSemidefinite(group.covariance);
+  if (ok) return [];
+  const pair = offending ? `Results ${offending[0] + 1} and ${offending[1] + 1} contradict each other.` : '';
+  return [
+    {
+      field,
+      message:
+        `This is not the covariance of anything: it is not symmetric, or a combination of results would have a negative variance. ${pair}`.trim(),
+      received: 'a matrix that is not positive semidefinite',
+      expected: 'a symmetric, positive semidefinite matrix in g2',
+    },
+  ];
+}
