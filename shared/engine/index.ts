@@ -78,3 +78,70 @@ export type { Distribution } from './uncertainty/input-distribution.ts';
 export type { MonteCarloOptions, MonteCarloResult } from './uncertainty/monte-carlo.ts';
 export type { IntervalKind } from './uncertainty/coverage-interval.ts';
 export type { RandomSource } from './uncertainty/random.ts';
+
+// weighing
+export { substitutionSeries } from './weighing/substitution-series.ts';
+export { pooledStandardDeviation } from './weighing/pooled-standard-deviation.ts';
+export { sensitivityFromWeight } from './weighing/sensitivity-weight.ts';
+export { solveWeighingDesign, designFactors } from './weighing/weighing-design.ts';
+export { weighingDesigns } from './weighing/weighing-designs.ts';
+export { checkStandardTest, precisionTest } from './weighing/check-standard.ts';
+export { outlierQuestions, grubbsCriticalValue } from './weighing/outlier-questions.ts';
+export type { SubstitutionCycle, SubstitutionSeries } from './weighing/substitution-series.ts';
+export type { SubstitutionResult } from './weighing/substitution-series.ts';
+export type { PrecisionEstimate } from './weighing/pooled-standard-deviation.ts';
+export type { SensitivityWeighing } from './weighing/sensitivity-weight.ts';
+export type { Restraint, WeighingDesignInput } from './weighing/design-input.ts';
+export type { WeighingDesignResult } from './weighing/weighing-design.ts';
+export type { PublishedDesign } from './weighing/weighing-designs.ts';
+export type { HistoryTest } from './weighing/check-standard.ts';
+export type { OutlierQuestion } from './weighing/outlier-questions.ts';
+
+// realization
+export { kibbleMass } from './realization/kibble-mass.ts';
+export { crystalDensityMass, electronMass } from './realization/crystal-density-mass.ts';
+export { PLANCK_CONSTANT, ELEMENTARY_CHARGE, SPEED_OF_LIGHT } from './realization/constants.ts';
+export { JOSEPHSON_CONSTANT, VON_KLITZING_CONSTANT } from './realization/constants.ts';
+export type { KibbleRun, KibbleUncertainties, JosephsonVoltage } from './realization/kibble-mass.ts';
+export type { KibbleCorrections, RelativeCorrection } from './realization/kibble-corrections.ts';
+export type { CrystalSphere, CrystalUncertainties, Isotope } from './realization/crystal-density-mass.ts';
+export type { BudgetLine, RealizedMass } from './realization/budget.ts';
+
+// time
+export { predictValue } from './time/predict-value.ts';
+export { fitLine } from './time/fit-line.ts';
+export { splitByEpochs } from './time/epochs.ts';
+export { stepQuestion } from './time/step-question.ts';
+export { recalibrationInterval } from './time/recalibration-interval.ts';
+export type { HistoryEntry } from './time/history.ts';
+export type { Prediction, PredictionOptions } from './time/predict-value.ts';
+export type { LinearFit } from './time/fit-line.ts';
+export type { Intervention, Dated, EpochSplit } from './time/epochs.ts';
+export type { StepAnswer, StepQuestion } from './time/step-question.ts';
+export type { IntervalProposal, IntervalBounds } from './time/recalibration-interval.ts';
+export type { Staircase, ControlChart, InUseTime } from './time/recalibration-interval.ts';
+
+// matrices
+export { isPositiveSemidefinite } from './linear/matrix.ts';
+export type { Matrix } from './linear/matrix.ts';
+
+// comparisons
+export { referenceValue } from './comparison/reference-value.ts';
+export { degreesOfEquivalence, pairwise } from './comparison/degrees-of-equivalence.ts';
+export { consistency, chiSquaredAbout } from './comparison/consistency.ts';
+export { largestConsistentSubset } from './comparison/largest-consistent-subset.ts';
+export { referToCommonDate } from './comparison/refer-to-common-date.ts';
+export { link } from './comparison/link.ts';
+export { consensusValue } from './comparison/consensus-value.ts';
+export { enScore, zetaScore, zScore, zPrimeScore } from './comparison/scores.ts';
+export { zScoreAllowed, scoreSignal } from './comparison/scores.ts';
+export { chiSquaredUpperTail, chiSquaredUpperPoint } from './comparison/chi-squared.ts';
+export type { Results } from './comparison/results.ts';
+export type { Estimator, ReferenceValue, ReferenceWarning } from './comparison/reference-value.ts';
+export type { DegreeOfEquivalence } from './comparison/degrees-of-equivalence.ts';
+export type { Consistency } from './comparison/consistency.ts';
+export type { ConsistentSubset } from './comparison/largest-consistent-subset.ts';
+export type { Observation, Circulation, CommonDateResults } from './comparison/refer-to-common-date.ts';
+export type { DriftModel } from './comparison/drift-models.ts';
+export type { DriftFit } from './comparison/drift-fit.ts';
+export type { Link, LinkingParticipant } from './comparison/link.ts';

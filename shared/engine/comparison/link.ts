@@ -1,0 +1,159 @@
+import { EngineError } from '../errors.ts';
+import { multiplyVector, quadraticForm } from '../linear/matrix.ts';
+import { requireNumber } from '../quantity/domain.ts';
+import { observed } from './consistency.ts';
+import { type DegreeOfEquivalence, equivalence } from './degrees-of-equivalence.ts';
+import { type ReferenceValue, referenceValue } from './reference-value.ts';
+import { checkedResults, type Results, statedCovariance } from './results.ts';
+import { weightedMean } from './weighted-mean.ts';
+
+/** A participant of both comparisons: its places, and the covariance of its two results (the common part squared). */
+export type LinkingParticipant = { reference: number; regional: number; covariance: number };
+
+export type Link = {
+  /** Of the reference comparison; linking never moves it. */
+  reference: Pick<ReferenceValue, 'value' | 'coefficients' | 'standardUncertainty'>;
+  /** Reference scale less regional scale, with the weights of the linking participants. */
+  offset: number;
+  offsetUncertainty: number;
+  weights: number[];
+  differences: { difference: number; standardUncertainty: number }[];
+  /** Of the linking differences about the offset. */
+  chiSquared: number;
+  degreesOfFreedom: number;
+  pValue: number;
+  covarianceWithReference: number;
+  /** Of the regional participants, against the reference value of the other comparison. */
+  degreesOfEquivalence: DegreeOfEquivalence[];
+  /** Every regional participant `i` against every participant `j` of the reference comparison. */
+  pairs: { i: number; j: number; difference: number; expandedUncertainty: number }[];
+};
+
+/**
+ * Links a regional comparison to a reference comparison through the participants of both (Delahaye and Witt 2002
+ * Metrologia 39 Tech. Suppl. 01005; Elster, Link and Woeger 2003 Metrologia 40 189), in matrix form over the joint
+ * covariance of all results. For ratios give relative deviations or logarithms.
+ * @param a.published reference value as published, if another estimator than the weighted mean was used
+ * @throws EngineError `no-link`, `size-mismatch`, `out-of-range`, `not-finite`, `not-a-covariance`, those of
+ * `checkedResults` and `referenceValue`
+ */
+export function link(a: {
+  reference: Results;
+  regional: Results;
+  linking: LinkingParticipant[];
+  published?: Pick<ReferenceValue, 'value' | 'coefficients' | 'standardUncertainty'>;
+}): Link {
+  const joint = jointResults(a);
+  const reference = a.published ?? referenceValue(a.reference, 'weighted-mean');
+  const size = joint.values.length;
+  const split = a.reference.values.length;
+  const at = (place: number): number[] => Array.from({ length: size }, (_, i) => Number(i === place));
+  const rows = a.linking.map((one) => minus(at(one.reference), at(split + one.regional)));
+  const linked = linkMean(rows, joint);
+  const toOffset = rows.reduce(
+    (sum, row, l) =>
+      plus(
+        sum,
+        row.map((value) => linked.coefficients[l]! * value),
+      ),
+    at(-1),
+  );
+  const coefficients = [...reference.coefficients, ...a.regional.values.map(() => 0)];
+  const offset = linked.value;
+  const variance = (k: number[]) => quadraticForm(joint.covariance, k);
+  return {
+    reference,
+    offset,
+    offsetUncertainty: Math.sqrt(linked.variance),
+    weights: linked.coefficients,
+    differences: rows.map((row, l) => ({
+      difference: linked.differences[l]!,
+      standardUncertainty: Math.sqrt(variance(row)),
+    })),
+    ...withoutBirge(linked.chiSquared, rows.length - 1),
+    covarianceWithReference: dot(multiplyVector(joint.covariance, toOffset), coefficients),
+    degreesOfEquivalence: a.regional.values.map((x, j) =>
+      equivalence(x + offset - reference.value, variance(minus(plus(at(split + j), toOffset), coefficients))),
+    ),
+    pairs: a.regional.values.flatMap((x, i) =>
+      a.reference.values.map((other, j) => ({
+        i,
+        j,
+        difference: x + offset - other,
+        expandedUncertainty:
+          2 * Math.sqrt(Math.max(0, variance(minus(plus(at(split + i), toOffset), at(j))))),
+      })),
+    ),
+  };
+}
+
+type Joint = { values: number[]; covariance: number[][] };
+
+/** The results of both comparisons in one list, with the covariances of the linking participants between them. */
+function jointResults(a: { reference: Results; regional: Results; linking: LinkingParticipant[] }): Joint {
+  const [reference, regional] = [checkedResults(a.reference), checkedResults(a.regional)];
+  const blocks = [statedCovariance(reference), statedCovariance(regional)];
+  const split = reference.values.length;
+  checkLinking(a.linking, split, regional.values.length);
+  const values = [...reference.values, ...regional.values];
+  const covariance = values.map((_, i) =>
+    values.map((_unused, j) => {
+      if (i < split && j < split) return blocks[0]![i]![j]!;
+      return i >= split && j >= split ? blocks[1]![i - split]![j - split]! : 0;
+    }),
+  );
+  for (const one of a.linking) {
+    covariance[one.reference]![split + one.regional] = one.covariance;
+    covariance[split + one.regional]![one.reference] = one.covariance;
+  }
+  checkedResults({ values, covariance });
+  return { values, covariance };
+}
+
+function checkLinking(
+  linking: readonly LinkingParticipant[],
+  referenceCount: number,
+  regionalCount: number,
+): void {
+  if (linking.length === 0) {
+    throw new EngineError(
+      'no-link',
+      'linking',
+      'No participant took part in both comparisons; at least one has to.',
+    );
+  }
+  linking.forEach((one, l) => {
+    requireNumber(one.reference, `linking[${l}].reference`, { min: 0, below: referenceCount });
+    requireNumber(one.regional, `linking[${l}].regional`, { min: 0, below: regionalCount });
+    requireNumber(one.covariance, `linking[${l}].covariance`);
+  });
+}
+
+/** Generalised least squares mean of the linking differences. */
+function linkMean(rows: number[][], joint: Joint) {
+  const differences = rows.map((row) => dot(row, joint.values));
+  const pulled = rows.map((row) => multiplyVector(joint.covariance, row));
+  const covariance = rows.map((row) => pulled.map((column) => dot(row, column)));
+  const everyRow = rows.map((_, l) => l);
+  return { differences, ...weightedMean({ values: differences, independent: false }, covariance, everyRow) };
+}
+
+function withoutBirge(
+  chiSquared: number,
+  count: number,
+): Pick<Link, 'chiSquared' | 'degreesOfFreedom' | 'pValue'> {
+  const { degreesOfFreedom, pValue } = observed(count === 0 ? 0 : chiSquared, count);
+  return { chiSquared: count === 0 ? 0 : chiSquared, degreesOfFreedom, pValue };
+}
+
+function plus(a: readonly number[], b: readonly number[]): number[] {
+  return a.map((value, i) => value + b[i]!);
+}
+
+function minus(a: readonly number[], b: readonly number[]): number[] {
+  return a.map((value, i) => value - b[i]!);
+}
+
+function dot(a: readonly number[], b: readonly number[]): number {
+  return a.reduce((sum, value, i) => sum + value * b[i]!, 0);
+}
