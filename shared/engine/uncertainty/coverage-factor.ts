@@ -56,20 +56,24 @@ function solve(probability: number, degreesOfFreedom: number, start: number): nu
   for (let step = 0; step < 200; step += 1) {
     const t = Math.exp(log);
     const { inside, outside, density } = studentAreas(t, degreesOfFreedom);
-    const miss = probability > 0.5 ? Math.log((1 - probability) / outside) : Math.log(inside / probability);
+    const isUpper = probability > 0.5;
+    const miss = isUpper ? Math.log((1 - probability) / outside) : Math.log(inside / probability);
     if (miss > 0) high = log;
     else low = log;
-    const newton = log - (miss * (probability > 0.5 ? outside : inside)) / (t * density);
+    const newton = log - (miss * (isUpper ? outside : inside)) / (t * density);
     const next = newton > low && newton < high ? newton : (low + high) / 2;
-    if (Math.abs(next - log) <= 1e-15 * (1 + Math.abs(log))) return Math.exp(next);
+    const change = Math.abs(next - log);
     log = next;
+    if (change <= 1e-15 * (1 + Math.abs(log))) break;
   }
-  if (high > LARGEST_LOG - 1) {
-    throw new EngineError(
-      'out-of-range',
-      'degreesOfFreedom',
-      `With degreesOfFreedom ${degreesOfFreedom} the factor for probability ${probability} is beyond 1e150.`,
-    );
-  }
+  if (log > LARGEST_LOG - 1) refuseFactor(probability, degreesOfFreedom);
   return Math.exp(log);
+}
+
+function refuseFactor(probability: number, degreesOfFreedom: number): never {
+  throw new EngineError(
+    'out-of-range',
+    'degreesOfFreedom',
+    `With degreesOfFreedom ${degreesOfFreedom} the factor for probability ${probability} is beyond 1e150.`,
+  );
 }

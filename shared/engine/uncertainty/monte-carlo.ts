@@ -46,6 +46,9 @@ interface Settings {
 
 const SMALLEST_BLOCK = 10_000;
 
+/** Fewer blocks than this may look settled by luck; the document asks for two. */
+const FEWEST_BLOCKS = 10;
+
 /**
  * Numerical tolerance of a standard uncertainty: half a unit in its last significant digit.
  *
@@ -69,18 +72,18 @@ function moments(values: Float64Array | number[]): { mean: number; deviation: nu
   return { mean: origin + offset, deviation: Math.sqrt(squares / (size - 1)) };
 }
 
-/** Mean and standard deviation of all trials from those of their blocks, which are of one size. */
+/** Mean and standard deviation of all trials from those of their two or more blocks, which are of one size. */
 function pooled(blocks: BlockResult[], blockSize: number): { mean: number; deviation: number } {
   const count = blocks.length;
   const between = moments(blocks.map(([mean]) => mean));
   const within = blocks.reduce((sum, [, deviation]) => sum + deviation * deviation, 0) * (blockSize - 1);
-  const squares = within + (count === 1 ? 0 : between.deviation ** 2 * (count - 1) * blockSize);
+  const squares = within + between.deviation ** 2 * (count - 1) * blockSize;
   return { mean: between.mean, deviation: Math.sqrt(squares / (count * blockSize - 1)) };
 }
 
 /** Whether twice the standard deviation of each averaged result is within the tolerance (7.9.4, steps e to h). */
 function isSettled(blocks: BlockResult[], settings: Settings): boolean {
-  if (blocks.length < 2) return false;
+  if (blocks.length < FEWEST_BLOCKS) return false;
   const tolerance = numericalTolerance(pooled(blocks, settings.blockSize).deviation, settings.digits);
   return [0, 1, 2, 3].every((k) => {
     const { deviation } = moments(blocks.map((block) => block[k as 0 | 1 | 2 | 3]));
@@ -129,28 +132,38 @@ export function monteCarlo(
     return x;
   };
 
-  const all = new Float64Array(settings.blocks * settings.blockSize);
+  const blocks: Float64Array[] = [];
   const results: BlockResult[] = [];
-  let used = all.subarray(0, 0);
   let stable = false;
-  while (results.length < settings.blocks && !stable) {
-    const start = results.length * settings.blockSize;
-    const block = all.subarray(start, start + settings.blockSize);
+  while (blocks.length < settings.blocks && !stable) {
+    const block = new Float64Array(settings.blockSize);
     runBlock(block, draw, model);
     const { mean, deviation } = moments(block);
-    const ends = coverageInterval(block.toSorted(), settings.probability, settings.interval);
-    results.push([mean, deviation, ...ends]);
-    used = all.subarray(0, start + settings.blockSize);
+    results.push([
+      mean,
+      deviation,
+      ...coverageInterval(block.sort(), settings.probability, settings.interval),
+    ]);
+    blocks.push(block);
     stable = isSettled(results, settings);
   }
+  const sorted = joined(blocks).sort();
   const { mean, deviation } = pooled(results, settings.blockSize);
   return {
     mean,
     standardUncertainty: deviation,
-    interval: coverageInterval(used.sort(), settings.probability, settings.interval),
-    trials: used.length,
+    interval: coverageInterval(sorted, settings.probability, settings.interval),
+    trials: sorted.length,
     stable,
   };
+}
+
+/** All model values in one array; the blocks are of one size. */
+function joined(blocks: Float64Array[]): Float64Array {
+  const size = blocks[0]?.length ?? 0;
+  const all = new Float64Array(size * blocks.length);
+  blocks.forEach((block, i) => all.set(block, i * size));
+  return all;
 }
 
 function settle(options: MonteCarloOptions): Settings {

@@ -27,6 +27,13 @@ export const COMPONENTS: readonly Component[] = [
   { multiplier: 33000, modulus: 2147483123, quotient: 65075, remainder: 8123 },
 ];
 
+/** The next state of one component: multiplier times state, modulo modulus. */
+export function advance({ multiplier, modulus, quotient, remainder }: Component, state: number): number {
+  const whole = Math.floor(state / quotient);
+  const next = multiplier * (state - whole * quotient) - remainder * whole;
+  return next < 0 ? next + modulus : next;
+}
+
 /** Scrambles 32 bits, so that neighbouring seeds start far apart (two rounds of multiply and shift). */
 function scramble(bits: number): number {
   let mixed = bits | 0;
@@ -61,13 +68,10 @@ export function randomSource(seed: number): RandomSource {
   const uniform = (): number => {
     let sum = 0;
     for (let i = 0; i < 4; i += 1) {
-      const { multiplier, modulus, quotient, remainder } = COMPONENTS[i] as Component;
-      const state = states[i] as number;
-      const whole = Math.floor(state / quotient);
-      let next = multiplier * (state - whole * quotient) - remainder * whole;
-      if (next < 0) next += modulus;
+      const component = COMPONENTS[i] as Component;
+      const next = advance(component, states[i] as number);
       states[i] = next;
-      sum += next / modulus;
+      sum += next / component.modulus;
     }
     const fraction = sum - Math.floor(sum);
     return fraction > 0 ? fraction : uniform();
