@@ -1,4 +1,5 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
+import { useEffect, useRef } from 'react';
 import {
   Navigate,
   Outlet,
@@ -33,13 +34,16 @@ export function RootLayout() {
   const location = useLocation();
   const navigate = useNavigate();
   const isMoving = useNavigation().state === 'loading';
+  useFocusOnScreen(location.pathname);
   if (!data.person) return <Navigate to={paths.signIn.href(location.pathname + location.search)} replace />;
   return (
     <PersonContext value={data.person}>
       <AppShell
         sections={SECTIONS}
         search={<FindBox onFound={(found) => void navigate(foundHref(found))} />}
-        foot={<AccountMenu person={data.person} onSignedOut={() => void navigate(paths.signIn.href())} />}
+        foot={
+          <AccountMenu person={data.person} onSignedOut={() => window.location.assign(paths.signIn.href())} />
+        }
         notice={<ConnectionNotice />}
       >
         <div aria-busy={isMoving}>
@@ -49,4 +53,14 @@ export function RootLayout() {
       <ScrollRestoration />
     </PersonContext>
   );
+}
+
+/** After a move to another screen the keyboard starts at that screen, not in the rail of the last one. */
+function useFocusOnScreen(pathname: string): void {
+  const shown = useRef(pathname);
+  useEffect(() => {
+    if (shown.current === pathname) return;
+    shown.current = pathname;
+    document.getElementById('screen')?.focus({ preventScroll: true });
+  }, [pathname]);
 }

@@ -1,5 +1,4 @@
 import { useSyncExternalStore } from 'react';
-import { z } from 'zod';
 
 /** What one reader prefers; kept in this browser only, and without effect on anything that is stored. */
 export interface Preferences {
@@ -11,11 +10,12 @@ export interface Preferences {
 
 const STORAGE_KEY = 'exagium.preferences';
 
-const StoredPreferences = z.object({
-  theme: z.enum(['system', 'paper', 'lamp']).catch('system'),
-  decimalMark: z.enum(['.', ',']).catch('.'),
-  uncertainty: z.enum(['plus-minus', 'concise']).catch('plus-minus'),
-});
+/** What each preference may be; the first stands until somebody chooses. */
+const CHOICES: { [Name in keyof Preferences]: readonly [Preferences[Name], ...Preferences[Name][]] } = {
+  theme: ['system', 'paper', 'lamp'],
+  decimalMark: ['.', ','],
+  uncertainty: ['plus-minus', 'concise'],
+};
 
 const listeners = new Set<() => void>();
 let current = read();
@@ -58,10 +58,18 @@ function darkQuery(): MediaQueryList | undefined {
 }
 
 function read(): Preferences {
+  const kept = readKept();
+  const chosen = <Name extends keyof Preferences>(name: Name): Preferences[Name] =>
+    CHOICES[name].find((choice) => choice === kept[name]) ?? CHOICES[name][0];
+  return { theme: chosen('theme'), decimalMark: chosen('decimalMark'), uncertainty: chosen('uncertainty') };
+}
+
+function readKept(): Record<string, unknown> {
   try {
-    return StoredPreferences.parse(JSON.parse(localStorage.getItem(STORAGE_KEY) ?? '{}'));
+    const kept: unknown = JSON.parse(localStorage.getItem(STORAGE_KEY) ?? 'null');
+    return typeof kept === 'object' && kept !== null ? { ...kept } : {};
   } catch {
-    return StoredPreferences.parse({});
+    return {};
   }
 }
 

@@ -25,38 +25,40 @@ export function AppShell({ sections, search, foot, notice, children }: AppShellP
       >
         Skip to the screen
       </a>
-      <div className="flex flex-col border-rule max-rail:border-b rail:sticky rail:top-0 rail:h-dvh rail:overflow-y-auto rail:border-r">
-        <div className="flex items-center justify-between px-4 py-2.5 rail:px-5 rail:pt-4.5 rail:pb-4">
-          <NavLink to="/" className="font-serif text-xl">
-            Exagium
-          </NavLink>
-          <button
-            type="button"
-            aria-expanded={isOpen}
-            aria-controls="rail"
-            onClick={() => setOpen(!isOpen)}
-            className="min-h-11 px-2 underline underline-offset-3 rail:hidden"
-          >
-            {isOpen ? 'Close' : 'Sections'}
-          </button>
+      <header className="border-rule max-rail:border-b rail:border-r">
+        <div className="flex flex-col rail:sticky rail:top-0 rail:z-5 rail:min-h-dvh">
+          <div className="flex items-center justify-between px-4 py-2.5 rail:px-5 rail:pt-4.5 rail:pb-4">
+            <NavLink to="/" className="font-serif text-xl">
+              Exagium
+            </NavLink>
+            <button
+              type="button"
+              aria-expanded={isOpen}
+              aria-controls="rail"
+              onClick={() => setOpen(!isOpen)}
+              className="min-h-11 px-2 underline underline-offset-3 rail:hidden"
+            >
+              {isOpen ? 'Close' : 'Sections'}
+            </button>
+          </div>
+          <div id="rail" className={`${fold} flex-1 flex-col gap-4 pb-4`}>
+            {search && <div className="px-4 rail:px-5">{search}</div>}
+            <nav aria-label="Sections" className="flex flex-col">
+              {sections.map((section) => (
+                <NavLink
+                  key={section.href}
+                  to={section.href}
+                  onClick={() => setOpen(false)}
+                  className="flex min-h-8.5 items-center border-l-3 border-transparent px-3.25 text-ink-2 hover:text-ink focus-visible:-outline-offset-2 aria-[current=page]:border-brass aria-[current=page]:text-ink pointer-coarse:min-h-11 rail:px-4.25"
+                >
+                  {section.label}
+                </NavLink>
+              ))}
+            </nav>
+            <div className="mt-auto px-4 rail:px-5">{foot}</div>
+          </div>
         </div>
-        <div id="rail" className={`${fold} flex-1 flex-col gap-4 pb-4`}>
-          {search && <div className="px-4 rail:px-5">{search}</div>}
-          <nav aria-label="Sections" className="flex flex-col">
-            {sections.map((section) => (
-              <NavLink
-                key={section.href}
-                to={section.href}
-                onClick={() => setOpen(false)}
-                className="flex min-h-8.5 items-center border-l-3 border-transparent px-4 text-ink-2 hover:text-ink focus-visible:-outline-offset-2 aria-[current=page]:border-brass aria-[current=page]:text-ink pointer-coarse:min-h-11 rail:px-4.25"
-              >
-                {section.label}
-              </NavLink>
-            ))}
-          </nav>
-          <div className="mt-auto px-4 rail:px-5">{foot}</div>
-        </div>
-      </div>
+      </header>
       <main id="screen" tabIndex={-1} className="min-w-0 outline-none">
         {notice}
         {children}

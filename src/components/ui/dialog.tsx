@@ -18,7 +18,7 @@ export function Dialog({ title, children, onClose, actions }: DialogProps) {
     <dialog
       ref={ref}
       aria-labelledby={titleId}
-      className="m-auto max-h-[90dvh] w-[min(34rem,calc(100vw-2rem))] overflow-auto border border-ink bg-raised p-0 backdrop:bg-[#14171a]/40"
+      className="m-auto max-h-[90dvh] w-[min(34rem,calc(100vw-2rem))] overflow-auto border border-ink bg-raised p-0 [--table-ground:var(--raised)] backdrop:bg-ink/35"
     >
       <div className="flex flex-col gap-4 p-5">
         <h2 id={titleId} className="font-serif text-lg">
@@ -48,7 +48,7 @@ export function SideSheet({ title, children, onClose, width = 'normal' }: SideSh
     <dialog
       ref={ref}
       aria-labelledby={titleId}
-      className={`m-0 ml-auto h-dvh max-h-none max-w-none overflow-auto border-l border-ink bg-raised p-0 backdrop:bg-transparent ${size}`}
+      className={`m-0 ml-auto h-dvh max-h-none max-w-none overflow-auto border-l border-ink bg-raised p-0 [--table-ground:var(--raised)] backdrop:bg-transparent ${size}`}
     >
       <div className="flex min-h-full flex-col gap-4 p-5">
         <div className="flex items-baseline justify-between gap-4">

@@ -11,12 +11,12 @@ interface QuantityProps extends QuantityInput {
   hidesUnit?: boolean;
   /** The value of record at the head of a screen: the unit stands after the value and after U, as on a certificate. */
   isOfRecord?: boolean;
-  /** `serif` for values of record, `mono` for readings, `inherit` inside a line of interface text. @default 'serif' */
+  /** `serif` for values of record and plates, `mono` for readings. @default 'inherit', the face around it */
   face?: 'serif' | 'mono' | 'inherit';
   className?: string;
 }
 
-const FACES = { serif: 'font-serif', mono: 'font-mono', inherit: '' };
+const FACES = { serif: 'font-serif text-[1.1em]', mono: 'font-mono', inherit: '' };
 
 /**
  * Draws a number, everywhere in the product: grouped by thin spaces, rounded by its uncertainty, the digits
@@ -26,7 +26,7 @@ export function Quantity({
   hidesUncertainty,
   hidesUnit,
   isOfRecord,
-  face = 'serif',
+  face = 'inherit',
   className = '',
   ...input
 }: QuantityProps) {

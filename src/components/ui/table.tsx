@@ -49,10 +49,10 @@ export function Head({ align = 'left', sort, onSort, children, className = '', .
       scope="col"
       {...rest}
       aria-sort={sort}
-      className={`sticky top-0 z-2 h-8 border-b border-rule bg-(--table-ground,var(--paper)) pr-3 align-bottom font-normal whitespace-nowrap text-ink-2 first:left-0 first:z-3 ${side} ${className}`}
+      className={`sticky top-0 z-2 h-7.5 border-b border-rule bg-(--table-ground,var(--paper)) pr-3 pb-1.5 align-bottom font-normal whitespace-nowrap text-ink-2 first:left-0 first:z-3 ${side} ${className}`}
     >
       {onSort ? (
-        <button type="button" onClick={onSort} className="min-h-7 hover:text-ink hover:underline">
+        <button type="button" onClick={onSort} className="-my-1 min-h-6 py-1 hover:text-ink hover:underline">
           {children}
           <span aria-hidden="true" className="inline-block w-4 font-mono text-xs">
             {arrow}
@@ -75,12 +75,12 @@ export function Row({ isSelected = false, className = '', ...rest }: RowProps) {
   return (
     <tr
       {...rest}
-      aria-selected={isSelected || undefined}
+      aria-current={isSelected || undefined}
       onClick={(event) => {
         rest.onClick?.(event);
         openRow(event);
       }}
-      className={`group/row has-[[data-row]]:cursor-pointer has-[[data-row]]:hover:bg-raised aria-selected:bg-raised aria-selected:outline-2 aria-selected:-outline-offset-1 aria-selected:outline-brass has-[[data-row]:focus-visible]:bg-raised ${className}`}
+      className={`group/row has-[[data-row]]:cursor-pointer has-[[data-row]]:hover:bg-raised aria-[current=true]:bg-raised has-[[data-row]:focus-visible]:bg-raised ${className}`}
     />
   );
 }
@@ -93,6 +93,10 @@ interface CellProps extends Omit<ComponentProps<'td'>, 'align'> {
   /** Makes the cell the row's heading; use it on the first cell. */
   isHeading?: boolean;
 }
+
+/** The brass frame of a chosen row, drawn cell by cell: an outline of the row would lie under the sticky cell. */
+const CHOSEN =
+  'group-aria-[current=true]/row:shadow-[inset_0_2px_var(--brass),inset_0_-2px_var(--brass)] group-aria-[current=true]/row:first:shadow-[inset_2px_2px_var(--brass),inset_0_-2px_var(--brass)] group-aria-[current=true]/row:last:shadow-[inset_-2px_2px_var(--brass),inset_0_-2px_var(--brass)]';
 
 /** A cell; the first of a row stays in sight when the table is scrolled sideways. */
 export function Cell({
@@ -107,9 +111,9 @@ export function Cell({
     <Tag
       scope={isHeading ? 'row' : undefined}
       {...rest}
-      className={`h-7.5 border-b border-rule py-1 pr-3 align-baseline font-normal first:sticky first:left-0 first:z-1 first:bg-(--table-ground,var(--paper)) group-hover/row:has-[[data-row]]:bg-raised group-aria-selected/row:first:bg-raised pointer-coarse:h-11 ${
+      className={`h-7.5 border-b border-rule py-1 pr-3 align-baseline font-normal first:sticky first:left-0 first:z-1 first:bg-(--table-ground,var(--paper)) group-hover/row:has-[[data-row]]:bg-raised group-aria-[current=true]/row:first:bg-raised ${CHOSEN} pointer-coarse:h-11 ${
         align === 'right' ? 'text-right' : 'text-left'
-      } ${isMono ? 'font-mono text-sm' : ''} ${className}`}
+      } ${isMono ? 'font-mono text-sm whitespace-nowrap' : ''} ${className}`}
     />
   );
 }

@@ -10,23 +10,19 @@ export const sessionQuery = queryOptions({
   refetchOnWindowFocus: 'always',
 });
 
-/** Signs in; everything cached for whoever was here before is forgotten. */
+/** Signs in; whatever was read by somebody before is forgotten. */
 export function useSignIn() {
   const queries = useQueryClient();
   return useMutation({
     mutationFn: (body: SignInBody) => post('/api/session', body, SessionResponse),
     onSuccess: (session) => {
-      queries.clear();
+      queries.removeQueries({ predicate: (query) => query.queryKey[0] !== sessionQuery.queryKey[0] });
       queries.setQueryData(sessionQuery.queryKey, session);
     },
   });
 }
 
-/** Signs out, and forgets what was read. */
+/** Signs out. The caller then loads the page anew, so that nothing read stays in the memory of the tab. */
 export function useSignOut() {
-  const queries = useQueryClient();
-  return useMutation({
-    mutationFn: () => remove('/api/session', SignOutResponse),
-    onSuccess: () => queries.clear(),
-  });
+  return useMutation({ mutationFn: () => remove('/api/session', SignOutResponse) });
 }

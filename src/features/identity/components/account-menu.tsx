@@ -45,10 +45,11 @@ export function AccountMenu({ person, onSignedOut }: AccountMenuProps) {
   );
 }
 
-/** One line of roles: the first with its laboratory, and how many more there are. */
+/** The roles in the first laboratory and its code; a person without any is known by the e-mail. */
 function roleLine(person: Person): string {
-  const [first, ...others] = person.roles;
+  const first = person.roles[0];
   if (!first) return person.email;
-  const place = first.laboratory ? `, ${first.laboratory.code}` : '';
-  return `${first.role}${place}${others.length > 0 ? ` and ${others.length} more` : ''}`;
+  const here = person.roles.filter(({ laboratory }) => laboratory?.id === first.laboratory?.id);
+  const roles = here.map(({ role }) => role).join(', ');
+  return first.laboratory ? `${roles} · ${first.laboratory.code}` : roles;
 }

@@ -36,7 +36,7 @@ export function PreferencesForm() {
         ]}
       />
       <p className="text-xl">
-        <Quantity value="1000.0000123" expandedUncertainty="0.000003" coverageFactor="2" />
+        <Quantity value="1000.0000123" expandedUncertainty="0.000003" coverageFactor="2" face="serif" />
       </p>
       <p className="text-sm text-ink-3">
         Kept in this browser. What is stored in the register does not change.
