@@ -25,7 +25,7 @@ export const withinScope: ValueRule = {
       certificate: certificateText(value),
       issuer: value.issuer.name,
       quantity: value.quantity,
-      nominal: amountText(value.nominal, { reportedUnit: Number(value.nominal) < 1 ? 'mg' : 'g' }),
+      nominal: amountText(Number(value.nominal), { reportedUnit: Number(value.nominal) < 1 ? 'mg' : 'g' }),
       performed: dateText(value.performedEnd, precision),
       issuedOn: dateText(value.issuedOn, precision),
     };

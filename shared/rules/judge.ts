@@ -1,0 +1,125 @@
+import type { z } from 'zod';
+import type { ChainCheck, ChainLink, ChainRule } from '#shared/contracts/chains.ts';
+import type { ChainFacts, LinkFacts, Question, ValueFacts } from './facts.ts';
+import { RULES, rulesInWords } from './rule-set.ts';
+import type { Finding, Rule, Severity, VerdictName } from './rule.ts';
+
+export type Check = z.infer<typeof ChainCheck>;
+export type Standing = z.infer<typeof ChainLink>['conduct'];
+
+/** A link with its worst outcome under each verdict. */
+export interface LinkStanding {
+  childUid: string;
+  parentUid: string;
+  conduct: Standing;
+  today: Standing;
+}
+
+/** What the rules found in a chain. */
+export interface ChainJudgement {
+  checks: Check[];
+  links: LinkStanding[];
+  rules: z.infer<typeof ChainRule>[];
+}
+
+const LASTING = new Set(RULES.filter((rule) => rule.isLasting).map((rule) => rule.id));
+
+/** Runs every rule over a chain. A link that only informs is not judged by link rules: nothing flows through it. */
+export function judgeChain(chain: ChainFacts): ChainJudgement {
+  const { question } = chain;
+  const links = chain.links.filter((link) => link.role === 'reference');
+  const checks = [
+    ...links.flatMap((link) => judgeLink(link, question)),
+    ...chain.values.flatMap((value) => judgeValue(value, question)),
+    ...checksOf('chain', { type: 'chain' }, (rule, verdict) =>
+      rule.scope === 'chain' ? rule.judge(chain, question, verdict) : null,
+    ),
+  ];
+  return { checks, links: standingsOf(chain, checks), rules: rulesInWords(question.day) };
+}
+
+/** The checks of one link: for a chain, and for a draft whose reference has just been chosen. */
+export function judgeLink(link: LinkFacts, question: Question): Check[] {
+  const subject = { type: 'link', childUid: link.child.uid, parentUid: link.parent.uid } as const;
+  return checksOf('link', subject, (rule, verdict) =>
+    rule.scope === 'link' ? rule.judge(link, question, verdict) : null,
+  );
+}
+
+/** The checks of one value: for a chain, and for a line of a draft. */
+export function judgeValue(value: ValueFacts, question: Question): Check[] {
+  return checksOf('value', { type: 'value', uid: value.uid }, (rule, verdict) =>
+    rule.scope === 'value' ? rule.judge(value, question, verdict) : null,
+  );
+}
+
+const GRAVE: readonly Severity[] = ['block', 'critical', 'major'];
+
+/**
+ * The worst of some checks. A grave failure (block, critical, major) breaks; a lesser one (minor, information) calls
+ * for caution; a grave rule that cannot be judged leaves the link not judged where nothing fails; a lesser one that
+ * cannot be judged changes nothing.
+ */
+export function standingOf(checks: readonly Check[]): Standing {
+  const failing = checks.filter((check) => check.outcome === 'fails');
+  if (failing.some((check) => GRAVE.includes(check.severity))) return 'broken';
+  if (failing.length > 0) return 'caution';
+  const isOpen = checks.some(
+    (check) => check.outcome === 'cannot be judged' && GRAVE.includes(check.severity),
+  );
+  return isOpen ? 'not judged' : 'sound';
+}
+
+function checksOf(
+  scope: Rule['scope'],
+  subject: Check['subject'],
+  find: (rule: Rule, verdict: VerdictName) => Finding | null,
+): Check[] {
+  return RULES.filter((rule) => rule.scope === scope).flatMap((rule) =>
+    rule.verdicts.flatMap((verdict) => {
+      const finding = find(rule, verdict);
+      if (finding === null) return [];
+      const { outcome, sentence, parameters, severity = rule.severity } = finding;
+      return [{ rule: rule.id, subject, verdict, outcome, severity, parameters, sentence }];
+    }),
+  );
+}
+
+/**
+ * A link stands as its own checks and those of the value that leans: the step made that value. The checks of a value
+ * without a step above it (a root) count where it is leaned on. What a rule finds for the conduct counts for today as
+ * well where it is a flaw of the result itself.
+ */
+function standingsOf(chain: ChainFacts, checks: readonly Check[]): LinkStanding[] {
+  const byLink = new Map<string, Check[]>();
+  const byValue = new Map<string, Check[]>();
+  for (const check of checks) {
+    const { subject } = check;
+    if (subject.type === 'link') add(byLink, `${subject.childUid} ${subject.parentUid}`, check);
+    if (subject.type === 'value') add(byValue, subject.uid, check);
+  }
+  const leaning = new Set(
+    chain.links.filter((link) => link.role === 'reference').map((link) => link.child.uid),
+  );
+  return chain.links.map((link) => {
+    const [childUid, parentUid] = [link.child.uid, link.parent.uid];
+    if (link.role === 'informs') return { childUid, parentUid, conduct: 'sound', today: 'sound' };
+    const concerned = [
+      ...(byLink.get(`${childUid} ${parentUid}`) ?? []),
+      ...(byValue.get(childUid) ?? []),
+      ...(leaning.has(parentUid) ? [] : (byValue.get(parentUid) ?? [])),
+    ];
+    return {
+      childUid,
+      parentUid,
+      conduct: standingOf(concerned.filter((check) => check.verdict === 'conduct')),
+      today: standingOf(concerned.filter((check) => check.verdict === 'today' || LASTING.has(check.rule))),
+    };
+  });
+}
+
+function add(map: Map<string, Check[]>, key: string, check: Check): void {
+  const list = map.get(key);
+  if (list) list.push(check);
+  else map.set(key, [check]);
+}
