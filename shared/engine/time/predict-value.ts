@@ -1,7 +1,7 @@
 import { EngineError } from '../errors.ts';
 import { entry, item } from '../linear/entries.ts';
 import { requireNumber } from '../quantity/domain.ts';
-import { KNOWN_WELL, studentCriticalValue } from '../weighing/f-distribution.ts';
+import { coverageFactor } from '../uncertainty/coverage-factor.ts';
 import { dayNumber, yearsBetween } from './calendar.ts';
 import { crossedIntervention, type Intervention } from './epochs.ts';
 import { diagonalCovariance, fitLine, type LinearFit } from './fit-line.ts';
@@ -91,7 +91,7 @@ function summarize(fit: LinearFit, options: PredictionOptions): Prediction {
     above: 0,
     below: 1,
   });
-  const k = studentCriticalValue(1 - probability, observed ? degreesOfFreedom : KNOWN_WELL);
+  const k = coverageFactor(probability, observed ? degreesOfFreedom : Infinity);
   const halfWidth = k * Math.hypot(standardUncertainty, next);
   const value = item(fit.parameters, 0);
   return {

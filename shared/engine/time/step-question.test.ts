@@ -63,7 +63,7 @@ describe('stepQuestion', () => {
   it('refuses nonsense', () => {
     expect(() => stepQuestion([])).toThrow(expect.objectContaining({ code: 'too-few-values' }));
     expect(() => stepQuestion(yearly([1, 2, 3, 4]), { level: 2 })).toThrow(
-      expect.objectContaining({ code: 'not-a-probability' }),
+      expect.objectContaining({ code: 'out-of-range' }),
     );
     expect(() => stepQuestion(yearly([1, 2, 3, 4]), { covariance: [[1]] })).toThrow(
       expect.objectContaining({ code: 'size-mismatch' }),

@@ -1,5 +1,6 @@
 import { item } from '../linear/entries.ts';
-import { KNOWN_WELL, requireLevel, studentTwoSidedTail } from '../weighing/f-distribution.ts';
+import { normalUpperTail } from '../uncertainty/normal-distribution.ts';
+import { requireLevel } from '../weighing/f-distribution.ts';
 import { yearsBetween } from './calendar.ts';
 import { diagonalCovariance, fitLinear } from './fit-line.ts';
 import { checkHistory, type HistoryEntry } from './history.ts';
@@ -27,7 +28,7 @@ export type StepAnswer =
  * Fewer than four calibrations cannot tell a step from a drift.
  * @param options.level probability of a false question, 0.01 unless given
  * @throws EngineError `too-few-values` without calibrations, `not-a-date`, `not-finite`, `out-of-range`,
- * `size-mismatch`, `not-positive-definite`, `not-a-probability`
+ * `size-mismatch`, `not-positive-definite`, `out-of-range`
  */
 export function stepQuestion(
   history: HistoryEntry[],
@@ -73,7 +74,7 @@ function stepAt(
     between,
     step,
     standardUncertainty,
-    pValue: Math.min(1, places * studentTwoSidedTail(step / standardUncertainty, KNOWN_WELL)),
+    pValue: Math.min(1, 2 * places * normalUpperTail(Math.abs(step) / standardUncertainty)),
     question: `Between ${between[0]} and ${between[1]} the value seems to step. Did something happen to the standard?`,
   };
 }

@@ -1,6 +1,7 @@
 import { EngineError } from '../errors.ts';
 import { requireNumber } from '../quantity/domain.ts';
-import { fCriticalValue, fUpperTail, studentCriticalValue, studentTwoSidedTail } from './f-distribution.ts';
+import { coverageFactor } from '../uncertainty/coverage-factor.ts';
+import { fCriticalValue, fUpperTail, requireLevel, studentTwoSidedTail } from './f-distribution.ts';
 import type { PrecisionEstimate } from './pooled-standard-deviation.ts';
 
 /** What a test against history says; a question to the person, never a deletion. */
@@ -20,7 +21,7 @@ export type HistoryTest = {
  * history is itself uncertain, hence the factor 1 + 1/count under the root; with a long one it is the test of
  * NIST/SEMATECH e-Handbook of Statistical Methods, 2.3.5.2 (from memory). Any unit, the same throughout.
  * @param a.level probability of a false alarm, 0.05 unless given
- * @throws EngineError `too-few-values` under two values; `out-of-range`, `not-finite`, `not-a-probability`
+ * @throws EngineError `too-few-values` under two values; `out-of-range`, `not-finite`
  */
 export function checkStandardTest(a: {
   value: number;
@@ -40,7 +41,7 @@ export function checkStandardTest(a: {
   }
   const scale = a.history.standardDeviation * Math.sqrt(1 + 1 / count);
   const statistic = (a.value - a.history.mean) / scale;
-  const criticalValue = studentCriticalValue(a.level ?? 0.05, count - 1);
+  const criticalValue = coverageFactor(1 - requireLevel(a.level ?? 0.05), count - 1);
   return {
     statistic,
     criticalValue,
@@ -55,7 +56,7 @@ export function checkStandardTest(a: {
  * balance that has become worse raises a question.
  * Source: NIST/SEMATECH e-Handbook of Statistical Methods, 2.3.5.1.1.
  * @param a.level probability of a false alarm, 0.01 unless given
- * @throws EngineError `out-of-range`, `not-finite`, `not-a-probability`
+ * @throws EngineError `out-of-range`, `not-finite`
  */
 export function precisionTest(a: {
   run: PrecisionEstimate;

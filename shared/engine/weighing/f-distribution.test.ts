@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { fCriticalValue, fUpperTail, studentCriticalValue, studentTwoSidedTail } from './f-distribution.ts';
+import { coverageFactor } from '../uncertainty/coverage-factor.ts';
+import { fCriticalValue, fUpperTail, studentTwoSidedTail } from './f-distribution.ts';
 
 const positive = (max: number) => fc.integer({ min: 0, max: max * 100 }).map((n) => 1 + n / 100);
 
@@ -44,16 +45,18 @@ describe('F and Student t', () => {
   });
 
   it('gives published quantiles', () => {
-    // JCGM 100:2008, Table G.2 (from memory): t for 95 % and 10, 99 % and 16 degrees of freedom.
-    expect(studentCriticalValue(0.05, 10)).toBeCloseTo(2.23, 2);
-    expect(studentCriticalValue(0.01, 16)).toBeCloseTo(2.92, 2);
     // NIST/SEMATECH e-Handbook, 2.3.5.1.1 (procedure read, quantile recomputed elsewhere).
     expect(fCriticalValue(0.01, 3, 351)).toBeCloseTo(3.837866, 6);
   });
 
+  it('agrees with the coverage factors of Student', () => {
+    for (const nu of [1, 3, 6.5, 40, 1000])
+      expect(studentTwoSidedTail(coverageFactor(0.99, nu), nu)).toBeCloseTo(0.01, 12);
+  });
+
   it('holds at the ends', () => {
     expect(fUpperTail(0, 3, 5)).toBe(1);
-    expect(fUpperTail(1.7e308, 3, 5)).toBe(0);
+    expect(fUpperTail(1.7e308, 5, 3)).toBe(0);
     expect(fUpperTail(1e10, 3, 5)).toBeGreaterThan(0);
     expect(Number.isFinite(fCriticalValue(1e-100, 1, 1))).toBe(true);
     expect(fCriticalValue(0.999999, 1, 1)).toBeGreaterThan(0);
@@ -62,9 +65,9 @@ describe('F and Student t', () => {
 
   it('refuses what is no probability and no degrees of freedom', () => {
     expect(() => fCriticalValue(0, 1, 1)).toThrow(
-      expect.objectContaining({ code: 'not-a-probability', field: 'level' }),
+      expect.objectContaining({ code: 'out-of-range', field: 'level' }),
     );
-    expect(() => fCriticalValue(1, 1, 1)).toThrow(expect.objectContaining({ code: 'not-a-probability' }));
+    expect(() => fCriticalValue(1, 1, 1)).toThrow(expect.objectContaining({ code: 'out-of-range' }));
     expect(() => fCriticalValue(Number.NaN, 1, 1)).toThrow(
       expect.objectContaining({ code: 'not-finite', field: 'level' }),
     );

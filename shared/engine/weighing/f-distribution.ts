@@ -1,8 +1,4 @@
-import { EngineError } from '../errors.ts';
 import { requireNumber } from '../quantity/domain.ts';
-
-/** Degrees of freedom that stand for a standard deviation known well: Student's t then is normal within 2e-6. */
-export const KNOWN_WELL = 1e6;
 
 /**
  * Probability that F with `numerator` and `denominator` degrees of freedom exceeds `ratio`. With
@@ -18,24 +14,16 @@ export function fUpperTail(ratio: number, numerator: number, denominator: number
 }
 
 /**
- * Refuses a significance level that is no probability, or so small that its critical value outgrows a double.
- * @throws EngineError `not-finite`, `not-a-probability`
+ * A significance level: a probability, and not so small that its critical value outgrows a double.
+ * @throws EngineError `not-finite`, `out-of-range`
  */
 export function requireLevel(level: number): number {
-  requireNumber(level, 'level');
-  if (level < 1e-100 || level >= 1) {
-    throw new EngineError(
-      'not-a-probability',
-      'level',
-      `level is ${level}; a probability between 0 and 1 is expected.`,
-    );
-  }
-  return level;
+  return requireNumber(level, 'level', { min: 1e-100, below: 1 });
 }
 
 /**
  * The ratio that F exceeds with probability `upperTail`: the critical value of a one-sided F test.
- * @throws EngineError `not-a-probability`, `out-of-range`, `not-finite`
+ * @throws EngineError `out-of-range`, `not-finite`
  */
 export function fCriticalValue(upperTail: number, numerator: number, denominator: number): number {
   requireLevel(upperTail);
@@ -49,14 +37,6 @@ export function fCriticalValue(upperTail: number, numerator: number, denominator
     else high = middle;
   }
   return Math.exp((low + high) / 2);
-}
-
-/**
- * Student's t that is exceeded in size with probability `level` (two-sided).
- * @throws EngineError those of `fCriticalValue`
- */
-export function studentCriticalValue(level: number, degreesOfFreedom: number): number {
-  return Math.sqrt(fCriticalValue(level, 1, degreesOfFreedom));
 }
 
 /** Two-sided probability of a Student t at least as large in size as `t`. */

@@ -74,10 +74,10 @@ describe('outlierQuestions', () => {
       expect.objectContaining({ field: 'values[2]' }),
     );
     expect(() => outlierQuestions({ values: [1, 2], level: 1 })).toThrow(
-      expect.objectContaining({ code: 'not-a-probability' }),
+      expect.objectContaining({ code: 'out-of-range' }),
     );
     expect(() => outlierQuestions({ values: [1, 2], level: 0 })).toThrow(
-      expect.objectContaining({ code: 'not-a-probability' }),
+      expect.objectContaining({ code: 'out-of-range' }),
     );
     const precision = { standardDeviation: 0, degreesOfFreedom: 3 };
     expect(() => outlierQuestions({ values: [1, 2], precision })).toThrow(

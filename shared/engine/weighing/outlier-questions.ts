@@ -2,7 +2,8 @@ import { EngineError } from '../errors.ts';
 import { item } from '../linear/entries.ts';
 import { requireNumbers } from '../linear/requirements.ts';
 import { requireNumber } from '../quantity/domain.ts';
-import { requireLevel, studentCriticalValue, studentTwoSidedTail } from './f-distribution.ts';
+import { coverageFactor } from '../uncertainty/coverage-factor.ts';
+import { requireLevel, studentTwoSidedTail } from './f-distribution.ts';
 import type { PrecisionEstimate } from './pooled-standard-deviation.ts';
 
 /** One value that lies far from its fellows, put as a question; the value stays where it is. */
@@ -21,7 +22,7 @@ export type OutlierQuestion = {
  * itself (Grubbs' test of the farthest value, ISO 5725-2, from memory; fewer than three values raise no
  * question); with a pooled `precision` every value is judged by it. `level` is the probability of a false
  * question over the whole series, 0.01 unless given. Any unit, the same throughout.
- * @throws EngineError `too-few-values` under two values, `not-finite`, `out-of-range`, `not-a-probability`
+ * @throws EngineError `too-few-values` under two values, `not-finite`, `out-of-range`
  */
 export function outlierQuestions(a: {
   values: number[];
@@ -91,7 +92,7 @@ function leftOutStudent(deviations: number[], index: number): number {
 /**
  * Grubbs' critical value for the farthest of `count` values: the largest distance from the mean, in standard
  * deviations of the series, that passes at `level` (two-sided).
- * @throws EngineError `too-few-values` under three values; `not-a-probability`
+ * @throws EngineError `too-few-values` under three values; `out-of-range`
  */
 export function grubbsCriticalValue(count: number, level: number): number {
   if (!Number.isInteger(count) || count < 3) {
@@ -101,6 +102,6 @@ export function grubbsCriticalValue(count: number, level: number): number {
       `A series of ${count} values has no outlier test; at least 3 are needed.`,
     );
   }
-  const t = studentCriticalValue(level / count, count - 2);
+  const t = coverageFactor(1 - requireLevel(level) / count, count - 2);
   return ((count - 1) / Math.sqrt(count)) * Math.sqrt((t * t) / (count - 2 + t * t));
 }
