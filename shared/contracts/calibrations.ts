@@ -184,14 +184,16 @@ export const DraftContent = z.strictObject({
 });
 export type DraftContent = z.infer<typeof DraftContent>;
 
+/** POST /api/drafts, 201. GET /api/drafts/:draftId gives a DraftResponse, as do all writes below. */
 export const CreateDraftBody = z.strictObject({ laboratoryId: Id, content: DraftContent });
-/** PUT: `version` is the one this edit started from; another one on the server is a 409 with both. */
+/** PUT /api/drafts/:draftId: `version` is the one this edit started from; another one on the server is a 409 with both. */
 export const SaveDraftBody = z.strictObject({ version: z.number().int().min(1), content: DraftContent });
+/** POST /api/drafts/:draftId/state. */
 export const DraftStateBody = z.strictObject({
   version: z.number().int().min(1),
   state: z.enum(['open', 'sent to sign', 'discarded']),
 });
-/** POST .../issue: the signatory's password again, and the version they read. */
+/** POST /api/drafts/:draftId/issue, 201 IssuedResponse: the signatory's password again, and the version they read. */
 export const IssueDraftBody = z.strictObject({
   version: z.number().int().min(1),
   password: z.string().min(1, 'Type your password again: it is your signature').max(200),
@@ -293,6 +295,7 @@ export const ReferenceListResponse = z.object({ references: z.array(ReferenceCho
 
 // --- issued calibrations ----------------------------------------------------------------------------
 
+/** GET /api/calibrations. */
 export const CalibrationListQuery = z.object({
   q: z.string().trim().max(80).optional(),
   laboratory: Id.optional(),
@@ -332,6 +335,7 @@ export const CalibrationListResponse = z.object({
 });
 export type CalibrationListResponse = z.infer<typeof CalibrationListResponse>;
 
+/** GET /api/calibrations/:revisionId. */
 export const CalibrationResponse = z.object({
   calibration: CalibrationRow.extend({
     method: z.string(),
@@ -394,6 +398,7 @@ export const CalibrationResponse = z.object({
 });
 export type CalibrationResponse = z.infer<typeof CalibrationResponse>;
 
+/** POST /api/calibrations/:revisionId/withdraw: a CalibrationResponse. */
 export const WithdrawBody = z.strictObject({
   reason: z.string().trim().min(3, 'Say why it is withdrawn').max(300),
   effectiveOn: Day,

@@ -185,6 +185,7 @@ export const HistoryValue = z.object({
   change: z.object({ deviation: Deviation, ratio: z.number().nullable() }).nullable(),
 });
 
+/** GET /api/standards/:standardId. */
 export const StandardResponse = z.object({
   standard: StandardRow.extend({
     serial: z.string().nullable(),
