@@ -1,3 +1,4 @@
+import { item } from '../linear/entries.ts';
 import { requireNumber } from '../quantity/domain.ts';
 import { normalBetween, normalDensity } from '../uncertainty/normal-distribution.ts';
 import { requireLimits } from './conformance-probability.ts';
@@ -79,7 +80,7 @@ export function globalRisks(a: GlobalRiskInput): GlobalRisks {
   let producer = 0;
   let consumer = 0;
   points.slice(1).forEach((to, i) => {
-    const from = points[i] ?? to;
+    const from = item(points, i);
     const middle = from / 2 + to / 2;
     const isConforming = middle >= tolerance.lower && middle <= tolerance.upper;
     if (isConforming) producer += integrate((x) => density(x) * (1 - accepted(x)), from, to);

@@ -1,4 +1,5 @@
 import { EngineError } from '../errors.ts';
+import { entry, item } from '../linear/entries.ts';
 import { isPositiveSemidefinite } from '../linear/matrix.ts';
 import { requireNumber } from '../quantity/domain.ts';
 import { effectiveDegreesOfFreedom } from './effective-degrees-of-freedom.ts';
@@ -49,7 +50,7 @@ export function combine(
   });
   const degreesOfFreedom = effectiveDegreesOfFreedom(
     components.map((one, i) => ({
-      contribution: contributions[i] ?? 0,
+      contribution: item(contributions, i),
       degreesOfFreedom: one.degreesOfFreedom ?? Infinity,
       estimate: one.estimate,
     })),
@@ -66,7 +67,7 @@ function correlated(contributions: number[], correlation: readonly (readonly num
   let variance = 0;
   correlation.forEach((row, i) => {
     row.forEach((coefficient, j) => {
-      variance += (((contributions[i] ?? 0) / scale) * coefficient * (contributions[j] ?? 0)) / scale;
+      variance += ((item(contributions, i) / scale) * coefficient * item(contributions, j)) / scale;
     });
   });
   return Math.sqrt(Math.max(0, variance)) * scale;
@@ -79,7 +80,7 @@ function refusePair(
   j: number,
   why: string,
 ): never {
-  const names = `"${components[i]?.name ?? i}" and "${components[j]?.name ?? j}"`;
+  const names = `"${item(components, i).name}" and "${item(components, j).name}"`;
   throw new EngineError(code, `correlation[${i}][${j}]`, `correlation of ${names}: ${why}`);
 }
 
@@ -98,17 +99,17 @@ function checkCorrelation(
   }
   correlation.forEach((row, i) => {
     row.forEach((value, j) => {
-      const mirrored = correlation[j]?.[i] ?? NaN;
+      const mirrored = entry(correlation, j, i);
       requireNumber(value, `correlation[${i}][${j}]`, i === j ? { min: 1, max: 1 } : { min: -1, max: 1 });
       if (Math.abs(value - mirrored) <= TOLERANCE) return;
       refusePair('not-symmetric', components, i, j, `${value} one way and ${mirrored} the other.`);
     });
   });
-  const { ok, offending } = isPositiveSemidefinite(correlation);
-  if (ok) return;
-  const [i, j] = offending ?? [0, 0];
+  const { offending } = isPositiveSemidefinite(correlation);
+  if (offending === undefined) return;
+  const [i, j] = offending;
   const why =
-    `${correlation[i]?.[j]} cannot stand beside the other coefficients: some combination of the components ` +
+    `${entry(correlation, i, j)} cannot stand beside the other coefficients: some combination of the components ` +
     'would have a variance below zero. Look at this pair first.';
   refusePair('not-positive-semidefinite', components, i, j, why);
 }

@@ -1,3 +1,5 @@
+import { item } from '../linear/entries.ts';
+
 /** Which of the intervals with the coverage probability is taken. */
 export const INTERVAL_KINDS = ['symmetric', 'shortest'] as const;
 
@@ -20,7 +22,7 @@ export function coverageInterval(
 ): [number, number] {
   const trials = sorted.length;
   const inside = Math.min(trials - 1, Math.floor(probability * trials + 0.5));
-  const at = (index: number): number => sorted[index] as number;
+  const at = (index: number): number => item(sorted, index);
   // The document counts from 1; here the first value has index 0.
   let first = Math.max(0, Math.floor((trials - inside + 1) / 2) - 1);
   if (kind === 'shortest') {

@@ -1,4 +1,5 @@
 import { EngineError } from '../errors.ts';
+import { item } from '../linear/entries.ts';
 import { requireNumber } from '../quantity/domain.ts';
 import { requireDegreesOfFreedom } from './coverage-factor.ts';
 
@@ -55,7 +56,7 @@ export function effectiveDegreesOfFreedom(components: readonly EffectiveComponen
   components.forEach((one, i) => {
     const field = `components[${i}].degreesOfFreedom`;
     const degreesOfFreedom = requireDegreesOfFreedom(one.degreesOfFreedom, field);
-    const square = ((contributions[i] ?? 0) / largest) ** 2;
+    const square = (item(contributions, i) / largest) ** 2;
     // A name cannot begin with a colon and a number of its own: unnamed estimates stay apart.
     addTo(shares, one.estimate ?? `:${i}`, { square, degreesOfFreedom }, field);
   });

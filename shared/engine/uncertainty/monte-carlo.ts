@@ -1,4 +1,5 @@
 import { EngineError } from '../errors.ts';
+import { item } from '../linear/entries.ts';
 import { requireChoice, requireNumber } from '../quantity/domain.ts';
 import { coverageInterval, INTERVAL_KINDS, type IntervalKind } from './coverage-interval.ts';
 import { samplerOf, type Distribution } from './input-distribution.ts';
@@ -63,7 +64,7 @@ export function numericalTolerance(standardUncertainty: number, digits: number):
 /** Mean and standard deviation in two passes, so that small spreads on large values keep their digits. */
 function moments(values: Float64Array | number[]): { mean: number; deviation: number } {
   const size = values.length;
-  const origin = values[0] as number;
+  const origin = item(values, 0);
   let sum = 0;
   for (const value of values) sum += value - origin;
   const offset = sum / size;
@@ -86,7 +87,7 @@ function isSettled(blocks: BlockResult[], settings: Settings): boolean {
   if (blocks.length < FEWEST_BLOCKS) return false;
   const tolerance = numericalTolerance(pooled(blocks, settings.blockSize).deviation, settings.digits);
   return [0, 1, 2, 3].every((k) => {
-    const { deviation } = moments(blocks.map((block) => block[k as 0 | 1 | 2 | 3]));
+    const { deviation } = moments(blocks.map((block) => item(block, k)));
     return (2 * deviation) / Math.sqrt(blocks.length) <= tolerance;
   });
 }
@@ -128,7 +129,7 @@ export function monteCarlo(
   const settings = settle(options);
   const x = samplers.map(() => 0);
   const draw = (): number[] => {
-    for (let i = 0; i < samplers.length; i += 1) x[i] = (samplers[i] as (typeof samplers)[number])(random);
+    for (let i = 0; i < samplers.length; i += 1) x[i] = item(samplers, i)(random);
     return x;
   };
 
@@ -160,7 +161,7 @@ export function monteCarlo(
 
 /** All model values in one array; the blocks are of one size. */
 function joined(blocks: Float64Array[]): Float64Array {
-  const size = blocks[0]?.length ?? 0;
+  const size = item(blocks, 0).length;
   const all = new Float64Array(size * blocks.length);
   blocks.forEach((block, i) => all.set(block, i * size));
   return all;

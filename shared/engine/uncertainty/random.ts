@@ -1,3 +1,4 @@
+import { item } from '../linear/entries.ts';
 import { requireNumber } from '../quantity/domain.ts';
 
 /** A source of pseudo-random numbers; the same seed gives the same numbers on every machine. */
@@ -68,8 +69,8 @@ export function randomSource(seed: number): RandomSource {
   const uniform = (): number => {
     let sum = 0;
     for (let i = 0; i < 4; i += 1) {
-      const component = COMPONENTS[i] as Component;
-      const next = advance(component, states[i] as number);
+      const component = item(COMPONENTS, i);
+      const next = advance(component, item(states, i));
       states[i] = next;
       sum += next / component.modulus;
     }

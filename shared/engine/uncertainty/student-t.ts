@@ -17,30 +17,26 @@ function logHalfStepRatio(x: number): number {
   return recurrence + 0.5 * Math.log(shifted) + inverse * bracket;
 }
 
-/** Smallest number the continued fraction divides by. */
-const TINY = 1e-300;
-
-/** One even and one odd step of the continued fraction of the incomplete beta function (Lentz's method). */
+/**
+ * The continued fraction of the incomplete beta function by Lentz's method. For x below (a + 1)/(a + b + 2), as here,
+ * every denominator is positive.
+ */
 function betaFraction(x: number, a: number, b: number): number {
   let c = 1;
-  let d = 1 / guard(1 - ((a + b) * x) / (a + 1));
+  let d = 1 / (1 - ((a + b) * x) / (a + 1));
   let product = d;
   for (let m = 1; m <= 20_000; m += 1) {
     const even = (m * (b - m) * x) / ((a + 2 * m - 1) * (a + 2 * m));
-    d = 1 / guard(1 + even * d);
-    c = guard(1 + even / c);
+    d = 1 / (1 + even * d);
+    c = 1 + even / c;
     product *= d * c;
     const odd = (-(a + m) * (a + b + m) * x) / ((a + 2 * m) * (a + 2 * m + 1));
-    d = 1 / guard(1 + odd * d);
-    c = guard(1 + odd / c);
+    d = 1 / (1 + odd * d);
+    c = 1 + odd / c;
     product *= d * c;
     if (Math.abs(d * c - 1) < 1e-15) break;
   }
   return product;
-}
-
-function guard(value: number): number {
-  return Math.abs(value) < TINY ? TINY : value;
 }
 
 /** What is known of Student's distribution at one point, of the absolute value. */
