@@ -7,6 +7,7 @@ import { projectFolder } from './paths.js';
  * @typedef {object} CommandOptions
  * @property {NodeJS.ProcessEnv} [env]
  * @property {string} [cwd] the project folder unless told
+ * @property {number} [limitMs] it is stopped then
  * @property {'keep' | 'show'} [output] kept for the case of failure, or shown as it comes
  */
 
@@ -20,7 +21,7 @@ import { projectFolder } from './paths.js';
 export async function runCommand(
   program,
   args,
-  { env = process.env, cwd = projectFolder, output = 'keep' } = {},
+  { env = process.env, cwd = projectFolder, output = 'keep', limitMs } = {},
 ) {
   if (isStopping()) throw new BootError('A stop is under way.');
   const child = startChild(program, args, { env, cwd, stdio: ['ignore', 'pipe', 'pipe'] });
@@ -33,7 +34,9 @@ export async function runCommand(
     });
   }
   const forget = closeAtEnd(program, () => child.end(10_000));
+  const timer = limitMs && setTimeout(() => void child.end(10_000), limitMs);
   const { code } = await child.ended;
+  if (timer) clearTimeout(timer);
   forget();
   return { code: code ?? 128, output: Buffer.concat(chunks).toString('utf8') };
 }

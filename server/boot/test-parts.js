@@ -17,6 +17,9 @@ import { oneCheck, playwrightCounts, tapCounts, vitestCounts } from './test-coun
  * @property {(tools: { chromium: string }) => Promise<PartResult>} run
  */
 
+/** A part that hangs is a failed part, and its output says where. */
+const longestPart = 15 * 60_000;
+
 /** @type {TestPart[]} in the order they run: what fails fastest and explains most comes first */
 export const testParts = [
   { name: 'lint', needs: [], run: () => check('eslint/bin/eslint.js', ['.', '--max-warnings=0']) },
@@ -81,8 +84,15 @@ async function boot() {
   const tap = freshReport('boot.tap');
   const reporters = ['tap', 'spec'].map((name) => `--test-reporter=${name}`);
   const destinations = [tap, 'stdout'].map((name) => `--test-reporter-destination=${name}`);
-  const args = ['--test', '--test-concurrency=1', ...reporters, ...destinations, ...files];
-  const { code, output } = await runCommand(process.execPath, args);
+  const args = [
+    '--test',
+    '--test-concurrency=1',
+    '--test-timeout=120000',
+    ...reporters,
+    ...destinations,
+    ...files,
+  ];
+  const { code, output } = await runCommand(process.execPath, args, { limitMs: longestPart });
   return { counts: tapCounts(tap, code), output };
 }
 
@@ -111,7 +121,10 @@ async function journeys({ chromium }) {
  * @param {NodeJS.ProcessEnv} env
  */
 function runTool(program, args, env) {
-  return runCommand(process.execPath, [inProject('node_modules', program), ...args], { env });
+  return runCommand(process.execPath, [inProject('node_modules', program), ...args], {
+    env,
+    limitMs: longestPart,
+  });
 }
 
 /** @param {string} name */
