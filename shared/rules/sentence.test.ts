@@ -1,0 +1,10 @@
+import { expect, it } from 'vitest';
+import { fillSentence } from './sentence.ts';
+
+it('fills every place, also twice', () => {
+  expect(fillSentence('{a} before {b}, and {a} again', { a: '1', b: '2' })).toBe('1 before 2, and 1 again');
+});
+
+it('names the parameter that is missing', () => {
+  expect(() => fillSentence('due on {due}', {})).toThrow('needs the parameter due');
+});
