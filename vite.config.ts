@@ -19,7 +19,13 @@ export default defineConfig(({ isSsrBuild }) => ({
         test: {
           name: 'unit',
           environment: 'node',
-          include: ['shared/**/*.test.ts', 'server/**/*.test.ts', 'seeders/**/*.test.ts', 'tests/house/**/*.test.ts'],
+          include: [
+            'shared/**/*.test.ts',
+            'server/**/*.test.ts',
+            'seeders/**/*.test.ts',
+            'tests/house/**/*.test.ts',
+            'src/**/*.node.test.ts',
+          ],
         },
       },
       {
@@ -28,6 +34,7 @@ export default defineConfig(({ isSsrBuild }) => ({
           name: 'client',
           environment: 'jsdom',
           include: ['src/**/*.test.ts', 'src/**/*.test.tsx'],
+          exclude: ['src/**/*.node.test.ts'],
           setupFiles: ['tests/support/client-setup.ts'],
         },
       },

@@ -1,3 +1,5 @@
+import { deskRoutes } from '#server/modules/desk/index.ts';
+import { chainRoutes } from '#server/modules/chains/index.ts';
 import { documentRoutes } from '#server/modules/documents/index.ts';
 import { healthRoutes } from '#server/modules/health/index.ts';
 import { identityRoutes } from '#server/modules/identity/index.ts';
@@ -10,4 +12,6 @@ export const routes: readonly Route[] = [
   ...identityRoutes,
   ...networkRoutes,
   ...documentRoutes,
+  ...chainRoutes,
+  ...deskRoutes,
 ];

@@ -126,10 +126,26 @@ function chainFacts(
     links: closure.values.flatMap((value) =>
       value.parents.map((link) => linkFacts(values.get(value.id)!, values.get(link.parentId)!, link, parts)),
     ),
-    contributions,
+    contributions: contributionFacts(contributions, closure),
     varianceNow: parts.numbers.variance(focus.uid),
     // The register admits neither: a circle is refused at issue, and a reference is a row or nothing.
     circle: null,
     missingReferences: [],
   };
+}
+
+/** The rules ask of each origin only whether it lies at the top: a root's own part, or the scale it rests on. */
+function contributionFacts(
+  contributions: Chain['contributions'],
+  closure: Closure,
+): ChainFacts['contributions'] {
+  if (!contributions) return null;
+  const top = new Set<string>();
+  for (const value of closure.values) if (value.rootKind !== null) top.add(value.uid);
+  for (const source of closure.sources.values()) if (source.kind === 'scale version') top.add(source.uid);
+  return contributions.map(({ label, share, uids }) => ({
+    label,
+    share,
+    isTop: uids.every((uid) => top.has(uid)),
+  }));
 }

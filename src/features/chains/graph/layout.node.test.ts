@@ -1,4 +1,3 @@
-// @vitest-environment node
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { GAP, PLATE, SCALE } from './geometry.ts';
