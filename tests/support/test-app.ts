@@ -16,6 +16,8 @@ export interface TestApp {
   database: Sequelize;
   /** As the owner: only to look at the catalogue, or to tamper behind the product's back. */
   owner: Sequelize;
+  /** Where this application keeps documents. */
+  dataDir: string;
   /** A context for calling services directly. */
   context(user?: User | null, clock?: Clock): Context;
   /** Requests without sign-in; unsafe ones carry the header that the browser client sends. */
@@ -59,6 +61,7 @@ export async function testApp(clock: Clock = systemClock): Promise<TestApp> {
     app,
     database,
     owner,
+    dataDir,
     context: (user = null, contextClock = clock) => makeContext({ database, user, clock: contextClock }),
     request: agent(),
     signIn: async ({ email, password }) => {

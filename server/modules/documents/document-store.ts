@@ -1,6 +1,7 @@
 import { createHash, randomUUID } from 'node:crypto';
 import { mkdir, open, readFile, rename, rm, stat } from 'node:fs/promises';
 import path from 'node:path';
+import { AppError } from '#server/http/app-error.ts';
 
 /**
  * Keeps a content under its SHA-256, once. Written beside its place and moved there when complete: a reader
@@ -29,12 +30,20 @@ export async function keepContent(dataDir: string, content: Buffer): Promise<str
 
 /**
  * Reads a content back and checks it against its name.
- * @throws Error where it is missing or is not what was kept
+ * @throws AppError `unavailable` where it is missing or is not what was kept
  */
 export async function readContent(dataDir: string, sha256: string): Promise<Buffer> {
-  const content = await readFile(placeOf(dataDir, sha256));
-  if (hashOf(content) !== sha256) throw new Error(`The document ${sha256} is not what was kept`);
-  return content;
+  try {
+    const content = await readFile(placeOf(dataDir, sha256));
+    if (hashOf(content) === sha256) return content;
+  } catch (cause) {
+    throw new AppError(
+      'unavailable',
+      `The document ${sha256} is missing from the store; tell the operator.`,
+      { cause },
+    );
+  }
+  throw new AppError('unavailable', `The document ${sha256} is not what was kept; tell the operator.`);
 }
 
 function hashOf(content: Buffer): string {

@@ -8,3 +8,4 @@ export {
 } from './network.service.ts';
 export { networkRoutes } from './network.routes.ts';
 export { refuseUnknownLaboratory } from './refuse-unknown-laboratory.ts';
+export { standingOn } from './standing.ts';
