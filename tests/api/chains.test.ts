@@ -57,11 +57,11 @@ async function smallNetwork() {
         {
           standardId,
           quantity: 'mass',
-          deviation: '0.000012',
+          deviation: '0.00001',
           reportedUnit: 'mg',
-          reportedDecimals: 3,
+          reportedDecimals: milligramDecimals(expandedU),
           expandedU,
-          reportedUDecimals: 3,
+          reportedUDecimals: milligramDecimals(expandedU),
           k: '2',
           rootKind: leansOn ? null : 'realization run',
           references: leansOn ? [{ valueUid: leansOn, sensitivity: 1, usedBegin: day, usedEnd: day }] : [],
@@ -87,6 +87,11 @@ async function smallNetwork() {
   const a = await issue(first.id, '2020-03-10', '0.00021', 1e-4, w.uid, laboratory.id);
   const b = await issue(second.id, '2020-03-11', '0.00013', 6e-5, w.uid, laboratory.id);
   return { institute, laboratory, r, w, a, b };
+}
+
+/** A certificate prints value and U in milligrams to the same place. */
+function milligramDecimals(grams: string): number {
+  return grams.length - '0.000'.length;
 }
 
 const network = await smallNetwork();
