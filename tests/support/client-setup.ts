@@ -11,6 +11,7 @@ HTMLDialogElement.prototype.close ??= function close() {
   this.dispatchEvent(new Event('close'));
 };
 Element.prototype.scrollIntoView ??= function scrollIntoView() {};
+window.scrollTo = () => undefined;
 
 afterEach(() => {
   cleanup();

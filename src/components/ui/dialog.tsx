@@ -18,7 +18,7 @@ export function Dialog({ title, children, onClose, actions }: DialogProps) {
     <dialog
       ref={ref}
       aria-labelledby={titleId}
-      className="m-auto max-h-[90dvh] w-[min(34rem,calc(100vw-2rem))] overflow-auto border border-ink bg-raised p-0 [--table-ground:var(--raised)] backdrop:bg-ink/35"
+      className="m-auto max-h-[90dvh] w-[min(34rem,calc(100vw-2rem))] overflow-auto border border-ink bg-raised p-0 [--table-ground:var(--raised)] backdrop:bg-paper/75"
     >
       <div className="flex flex-col gap-4 p-5">
         <h2 id={titleId} className="font-serif text-lg">
