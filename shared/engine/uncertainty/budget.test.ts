@@ -113,6 +113,17 @@ describe('effectiveDegreesOfFreedom', () => {
     );
   });
 
+  it('adds the squares that rest on one estimate before it spreads them', () => {
+    // (25 + 25)^2 / (25^2/5 + 25^2/10) by hand.
+    expect(
+      of([
+        [3, 5, 'pooled'],
+        [4, 5, 'pooled'],
+        [5, 10],
+      ]),
+    ).toBeCloseTo(40 / 3, 12);
+  });
+
   it('is infinite where nothing is estimated from few data', () => {
     expect(
       of([

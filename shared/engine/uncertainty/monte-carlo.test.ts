@@ -129,6 +129,20 @@ describe('monteCarlo: the procedure', () => {
     expect(run(5).mean).not.toBe(run(6).mean);
   });
 
+  it('mean and standard uncertainty are those of all model values together', () => {
+    const values: number[] = [];
+    const record = (x: number[]) => {
+      values.push(at(x, 0));
+      return at(x, 0);
+    };
+    const result = monteCarlo(record, [normal(2, 5)], { seed: 8, digits: 1 });
+    const mean = values.reduce((sum, value) => sum + value, 0) / values.length;
+    const squares = values.reduce((sum, value) => sum + (value - mean) ** 2, 0);
+    expect(result.trials).toBe(values.length);
+    expect(result.mean / mean).toBeCloseTo(1, 11);
+    expect(result.standardUncertainty / Math.sqrt(squares / (values.length - 1))).toBeCloseTo(1, 11);
+  });
+
   it('makes more trials for more digits, in whole blocks', () => {
     const run = (digits: number) => monteCarlo((x) => at(x, 0), [normal(0, 5)], { seed: 5, digits }).trials;
     expect(run(2)).toBeGreaterThan(2 * run(1));
