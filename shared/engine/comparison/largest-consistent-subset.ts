@@ -1,5 +1,5 @@
 import { EngineError } from '../errors.ts';
-import { chiSquaredUpperTail } from './chi-squared.ts';
+import { chiSquaredUpperPoint } from './chi-squared.ts';
 import { type CheckedResults, checkedResults, type Results, statedCovariance } from './results.ts';
 import { subsetsOfSize } from './subsets.ts';
 import { weightedMean } from './weighted-mean.ts';
@@ -41,31 +41,53 @@ export function largestConsistentSubset(r: Results, level = 0.05): ConsistentSub
   }
   const checked = checkedResults(r);
   const covariance = statedCovariance(checked);
-  const most = checked.independent ? MOST_SUBSETS.independent : MOST_SUBSETS.correlated;
-  const passes = ({ members, chiSquared }: Subset) =>
-    chiSquaredUpperTail(chiSquared, members.length - 1) >= level;
+  const critical = (size: number) => (size === 1 ? 0 : chiSquaredUpperPoint(level, size - 1));
   const tried = (members: number[]): Subset => ({
     members,
-    chiSquared: weightedMean(checked, covariance, members).chiSquared,
+    chiSquared: chiSquaredOf(checked, covariance, members),
   });
-  let left = most;
-  for (let size = checked.members.length; size > 0; size -= 1) {
+  let left = checked.independent ? MOST_SUBSETS.independent : MOST_SUBSETS.correlated;
+  let size = checked.members.length;
+  for (;;) {
     left -= binomial(checked.members.length, size);
-    if (left < 0) return described(checked, [oneAtATime(checked.members, tried, passes)], false);
-    const consistent = subsetsOfSize(checked.members, size).map(tried).filter(passes);
+    if (left < 0) return described(checked, [oneAtATime(checked.members, tried, critical)], false);
+    const limit = critical(size);
+    const subsets = subsetsOfSize(checked.members, size).map(tried);
+    const consistent = subsets.filter(({ chiSquared }) => chiSquared <= limit);
+    // A single result is always consistent with itself, so the search ends at size 1.
     if (consistent.length > 0) return described(checked, consistent, true);
+    size -= 1;
   }
-  throw new EngineError('out-of-range', 'level', 'No result is consistent even with itself at this level.');
+}
+
+/** Chi-squared of members about their weighted mean; of uncorrelated ones by sums alone, for the many subsets. */
+function chiSquaredOf(
+  checked: CheckedResults,
+  covariance: readonly (readonly number[])[],
+  members: readonly number[],
+): number {
+  if (!checked.independent) return weightedMean(checked, covariance, members).chiSquared;
+  const origin = checked.values[members[0]!]!;
+  let total = 0;
+  let pulled = 0;
+  for (const i of members) {
+    total += 1 / covariance[i]![i]!;
+    pulled += (checked.values[i]! - origin) / covariance[i]![i]!;
+  }
+  const mean = pulled / total;
+  let chiSquared = 0;
+  for (const i of members) chiSquared += (checked.values[i]! - origin - mean) ** 2 / covariance[i]![i]!;
+  return chiSquared;
 }
 
 /** Takes out, again and again, the result without which chi-squared is smallest. */
 function oneAtATime(
   all: readonly number[],
   tried: (members: number[]) => Subset,
-  passes: (subset: Subset) => boolean,
+  critical: (size: number) => number,
 ): Subset {
   let kept = tried([...all]);
-  while (!passes(kept)) {
+  while (kept.chiSquared > critical(kept.members.length)) {
     const without = kept.members.map((out) => tried(kept.members.filter((place) => place !== out)));
     kept = without.reduce((best, each) => (each.chiSquared < best.chiSquared ? each : best));
   }

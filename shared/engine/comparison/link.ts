@@ -123,10 +123,19 @@ function checkLinking(
     );
   }
   linking.forEach((one, l) => {
-    requireNumber(one.reference, `linking[${l}].reference`, { min: 0, below: referenceCount });
-    requireNumber(one.regional, `linking[${l}].regional`, { min: 0, below: regionalCount });
+    requirePlace(one.reference, referenceCount, `linking[${l}].reference`);
+    requirePlace(one.regional, regionalCount, `linking[${l}].regional`);
     requireNumber(one.covariance, `linking[${l}].covariance`);
   });
+}
+
+function requirePlace(place: number, count: number, field: string): void {
+  if (Number.isInteger(place) && place >= 0 && place < count) return;
+  throw new EngineError(
+    'out-of-range',
+    field,
+    `${field} is ${place}; a place from 0 to ${count - 1} is expected.`,
+  );
 }
 
 /** Generalised least squares mean of the linking differences. */

@@ -10,11 +10,21 @@ import { median, sorted } from './order-statistics.ts';
 export function qSpread(values: readonly number[]): number {
   const differences: number[] = [];
   values.forEach((a, i) => values.slice(0, i).forEach((b) => differences.push(Math.abs(a - b))));
-  const ordered = sorted(differences);
+  const ordered = withTiesMade(sorted(differences));
   const shareEqual = ordered.filter((difference) => difference === 0).length / ordered.length;
   const level = 0.25 + 0.75 * shareEqual;
   const scale = Math.SQRT2 * normalQuantile(Math.min(1 - 1e-16, 0.625 + 0.375 * shareEqual));
   return shareEqual === 1 ? 0 : inverseOfMidpoints(ordered, level) / scale;
+}
+
+/** Differences that are equal on paper differ by the rounding of doubles: 3.4 - 3.37 and 3.43 - 3.4. */
+function withTiesMade(ordered: readonly number[]): number[] {
+  const rounding = 1e-10 * ordered[ordered.length - 1]!;
+  let first = 0;
+  return ordered.map((difference) => {
+    if (difference - first > rounding) first = difference;
+    return first;
+  });
 }
 
 /** Where the polygon through 0 and the mid-points of the jumps of the distribution reaches `level`. */
@@ -33,7 +43,6 @@ function inverseOfMidpoints(ordered: readonly number[], level: number): number {
     }
     [previousAt, previousHeight, shareBelow, from] = [at, height, share, to];
   }
-  return previousAt;
 }
 
 /** Hampel's psi: q to 1.5, then 1.5, falling to 0 from 3 to 4.5. */

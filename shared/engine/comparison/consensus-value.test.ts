@@ -1,0 +1,50 @@
+import { describe, expect, it } from 'vitest';
+import { consensusValue } from './consensus-value.ts';
+
+describe('consensusValue', () => {
+  // CCM-TGPfD-kg, Calculation of the Consensus Value for the Kilogram 2020, 2023, 2026; second-hand copy, in ug.
+  it.each([
+    [[0, 12.4, -18.8], 0, -2.1333, -2],
+    [[12.4, -18.8, -15.2], -2, -7.2, -7],
+    [[-18.8, -15.2, -10.7], -7, -14.9, -12],
+  ])('window %j after %d: mean %d, published %d', (window, previousPublished, mean, published) => {
+    const found = consensusValue({
+      window,
+      previousPublished,
+      limit: 5,
+      agreedUncertainty: 20,
+      resolution: 1,
+    });
+    expect(found.calculated).toBeCloseTo(mean, 3);
+    expect(found.published).toBe(published);
+    expect(found.standardUncertainty).toBe(20);
+  });
+
+  it('limits the change from the published value, not from the calculated one, in both directions (trap 18)', () => {
+    const chained = consensusValue({
+      window: [-14.9],
+      previousPublished: -7,
+      limit: 5,
+      agreedUncertainty: 20,
+    });
+    expect(chained).toEqual({ calculated: -14.9, published: -12, standardUncertainty: 20 });
+    expect(
+      consensusValue({ window: [9], previousPublished: 1, limit: 5, agreedUncertainty: 20 }).published,
+    ).toBe(6);
+    expect(
+      consensusValue({ window: [3.5], previousPublished: 1, limit: 5, agreedUncertainty: 20 }).published,
+    ).toBe(3.5);
+  });
+
+  it.each([
+    [{ window: [] }, 'too-few-values', 'window'],
+    [{ window: [NaN] }, 'not-finite', 'window[0]'],
+    [{ previousPublished: NaN }, 'not-finite', 'previousPublished'],
+    [{ limit: -1 }, 'out-of-range', 'limit'],
+    [{ agreedUncertainty: -1 }, 'out-of-range', 'agreedUncertainty'],
+    [{ resolution: 0 }, 'out-of-range', 'resolution'],
+  ])('refuses %j', (wrong, code, field) => {
+    const right = { window: [1], previousPublished: 0, limit: 5, agreedUncertainty: 20 };
+    expect(() => consensusValue({ ...right, ...wrong })).toThrow(expect.objectContaining({ code, field }));
+  });
+});
