@@ -1,0 +1,26 @@
+import { queryOptions } from '@tanstack/react-query';
+import { ChainResponse, ChainSearchResponse } from '#shared/contracts/chains.ts';
+import { get } from '#src/lib/api-client.ts';
+
+/** The question behind a chain, apart from the value: the day and the knowledge day; today where left out. */
+export interface ChainDays {
+  day?: string | undefined;
+  known?: string | undefined;
+}
+
+/** The chain of a value, with its numbers and checks. */
+export function chainQuery(valueUid: string, days: ChainDays) {
+  return queryOptions({
+    queryKey: ['chains', 'detail', valueUid, days],
+    queryFn: ({ signal }) =>
+      get(`/api/chains/${valueUid}`, ChainResponse, { query: { day: days.day, known: days.known }, signal }),
+  });
+}
+
+/** Which chain to open: values in force of weights this person reads in full. */
+export function chainChoicesQuery(q: string) {
+  return queryOptions({
+    queryKey: ['chains', 'list', q],
+    queryFn: ({ signal }) => get('/api/chains', ChainSearchResponse, { query: { q }, signal }),
+  });
+}

@@ -1,0 +1,98 @@
+import { useMemo } from 'react';
+import ReactFlow, { Controls, type Edge, type EdgeTypes, type Node, type NodeTypes } from 'reactflow';
+import 'reactflow/dist/style.css';
+import type { ChainResponse } from '#shared/contracts/chains.ts';
+import { Waiting } from '#src/components/ui/progress.tsx';
+import { linkKey, type ChainQuestion } from '../question.ts';
+import { BandNode } from './band-node.tsx';
+import { displayList, layoutInput, type DisplayList, type Plate } from './display-list.ts';
+import { PlateNode } from './plate-node.tsx';
+import { RibbonEdge } from './ribbon-edge.tsx';
+import { useLayout } from './use-layout.ts';
+
+const nodeTypes: NodeTypes = { plate: PlateNode, band: BandNode };
+const edgeTypes: EdgeTypes = { ribbon: RibbonEdge };
+const FIT = { padding: 0.06, maxZoom: 1 };
+
+interface ChainGraphProps {
+  chain: ChainResponse;
+  question: ChainQuestion;
+  /** A node's uid, or a link's key. */
+  onSelect: (at: string) => void;
+}
+
+/** The chain drawn as a conserved flow from the definition down to the weight. The table beside it says the same. */
+export function ChainGraph({ chain, question, onSelect }: ChainGraphProps) {
+  const input = useMemo(() => layoutInput(chain, question.draw), [chain, question.draw]);
+  const placement = useLayout(input);
+  const list = useMemo(
+    () => placement && displayList(chain, placement, question),
+    [chain, placement, question],
+  );
+  const drawn = useMemo(
+    () => list && { nodes: nodesOf(list, question.at), edges: edgesOf(list, question.at) },
+    [list, question.at],
+  );
+  if (!drawn) return <Waiting>Laying the chain out</Waiting>;
+  return (
+    <ReactFlow
+      key={`${chain.focusUid} ${question.draw}`}
+      nodes={drawn.nodes}
+      edges={drawn.edges}
+      nodeTypes={nodeTypes}
+      edgeTypes={edgeTypes}
+      onNodeClick={(_event, node) => node.type === 'plate' && onSelect(node.id)}
+      onEdgeClick={(_event, edge) => onSelect(edge.id)}
+      nodesDraggable={false}
+      nodesConnectable={false}
+      edgesUpdatable={false}
+      edgesFocusable={false}
+      deleteKeyCode={null}
+      fitView
+      fitViewOptions={FIT}
+      minZoom={0.1}
+      maxZoom={2}
+      preventScrolling={false}
+      zoomOnScroll={false}
+      proOptions={{ hideAttribution: true }}
+      aria-label="The chain, drawn. The table of links holds the same facts."
+    >
+      <Controls showInteractive={false} position="bottom-right" />
+    </ReactFlow>
+  );
+}
+
+function nodesOf(list: DisplayList, at: string | undefined): Node[] {
+  const band: Node = {
+    id: 'definition',
+    type: 'band',
+    position: { x: 0, y: 0 },
+    data: list.band,
+    selectable: false,
+    focusable: false,
+  };
+  const plates = list.plates.map((plate) => ({
+    id: plate.id,
+    type: 'plate',
+    position: { x: plate.x, y: plate.y },
+    data: { plate, isSelected: plate.id === at },
+    ariaLabel: plateLabel(plate),
+  }));
+  return [band, ...plates];
+}
+
+function edgesOf(list: DisplayList, at: string | undefined): Edge[] {
+  return list.ribbons.map((ribbon) => ({
+    id: ribbon.id,
+    type: 'ribbon',
+    source: ribbon.link.parentUid,
+    target: ribbon.link.childUid,
+    data: { ribbon, isSelected: linkKey(ribbon.link) === at },
+  }));
+}
+
+function plateLabel({ node, isFocus }: Plate): string {
+  if (node.type === 'source') return `Shared effect: ${node.name}`;
+  const kind = node.rootKind ? `, ${node.rootKind}` : '';
+  return `${isFocus ? 'The weight itself: ' : ''}${node.registryNo}${kind}, certificate ${node.certificateNo}, ${node.state}`;
+}

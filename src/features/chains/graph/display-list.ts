@@ -1,0 +1,137 @@
+import type { ChainResponse } from '#shared/contracts/chains.ts';
+import { stateOfValue, type State } from '#src/lib/states.ts';
+import { linkKey, type ChainQuestion } from '../question.ts';
+import { BAND, PLATE, SCALE } from './geometry.ts';
+import type { LayoutInput, Placement, Point } from './layout-input.ts';
+import { ribbonMiddle, ribbonPath } from './ribbon-path.ts';
+
+type Node = ChainResponse['nodes'][number];
+type Link = ChainResponse['links'][number];
+
+/** A plate: a value or a shared effect, in its place. */
+export interface Plate {
+  id: string;
+  x: number;
+  y: number;
+  node: Node;
+  state: State;
+  isFocus: boolean;
+  isFaint: boolean;
+  stub: Stub | null;
+}
+
+/** What a value adds of its own, entering from the side at the same scale. */
+export interface Stub {
+  /** Drawn height; null: the own part is not known. */
+  height: number | null;
+  share: number | null;
+  isToScale: boolean;
+  isNegative: boolean;
+}
+
+/** A link as it is drawn. */
+export interface Ribbon {
+  id: string;
+  link: Link;
+  path: string;
+  width: number;
+  isToScale: boolean;
+  isNegative: boolean;
+  /** Named above a consensus value, without flow. */
+  isInforming: boolean;
+  state: State;
+  isFaint: boolean;
+  middle: Point;
+}
+
+/** Everything that is drawn of a chain, in numbers: the screen and every export are made from it. */
+export interface DisplayList {
+  width: number;
+  height: number;
+  band: { width: number; height: number; text: string };
+  plates: Plate[];
+  ribbons: Ribbon[];
+}
+
+/** What the layout needs of a chain. In the plain drawing every link is a hairline. */
+export function layoutInput(chain: ChainResponse, draw: ChainQuestion['draw']): LayoutInput {
+  const isPlain = draw === 'plain';
+  return {
+    nodes: chain.nodes.map((node) => ({
+      id: node.uid,
+      tier: node.tier,
+      isRoot: node.type === 'value' && node.rootKind !== null,
+      hasStub: stubOf(node, isPlain) !== null,
+    })),
+    links: chain.links.map((link) => ({
+      child: link.childUid,
+      parent: link.parentUid,
+      flow: isPlain || link.role === 'informs' ? 0 : link.flow,
+    })),
+  };
+}
+
+/** Puts the chain's facts in the places that the layout found. */
+export function displayList(
+  chain: ChainResponse,
+  placement: Placement,
+  question: ChainQuestion,
+): DisplayList {
+  const isPlain = question.draw === 'plain';
+  const failing = failingNodes(chain, question);
+  const isFaint = (uid: string) => failing !== null && !failing.has(uid);
+  const placeOf = new Map(placement.plates.map((plate) => [plate.id, plate]));
+  return {
+    width: placement.width,
+    height: placement.height,
+    band: { width: placement.width, height: BAND.height, text: DEFINITIONS[chain.definition] },
+    plates: chain.nodes.map((node) => ({
+      id: node.uid,
+      x: placeOf.get(node.uid)!.x,
+      y: placeOf.get(node.uid)!.y,
+      node,
+      state: node.type === 'value' ? stateOfValue(node.state) : 'sound',
+      isFocus: node.uid === chain.focusUid,
+      isFaint: isFaint(node.uid),
+      stub: stubOf(node, isPlain),
+    })),
+    ribbons: placement.ribbons.map((ribbon, index) => {
+      const link = chain.links[index]!;
+      return {
+        id: linkKey(link),
+        link,
+        path: ribbonPath(ribbon.points),
+        width: ribbon.width,
+        isToScale: ribbon.isToScale,
+        isNegative: ribbon.isNegative,
+        isInforming: link.role === 'informs',
+        state: link[question.verdict],
+        isFaint: isFaint(link.childUid) || isFaint(link.parentUid),
+        middle: ribbonMiddle(ribbon.points),
+      };
+    }),
+  };
+}
+
+/** The definition in force when the roots were determined; the constant is exact (26th CGPM, Resolution 1). */
+const DEFINITIONS: Record<ChainResponse['definition'], string> = {
+  'planck constant': 'The kilogram: h = 6.626 070 15 × 10⁻³⁴ J s, exactly',
+  'international prototype': 'The kilogram before 2019-05-20: the mass of the international prototype',
+  both: 'The kilogram: the international prototype before 2019-05-20, since then h = 6.626 070 15 × 10⁻³⁴ J s',
+};
+
+function stubOf(node: Node, isPlain: boolean): Stub | null {
+  if (isPlain || node.type !== 'value' || node.share === null) return null;
+  if (node.localShare === null) return { height: null, share: null, isToScale: false, isNegative: false };
+  if (node.localShare === 0) return null;
+  const height = Math.min(PLATE.height, Math.abs(node.localShare) * SCALE);
+  const isToScale = height >= 1;
+  return { height: Math.max(1, height), share: node.localShare, isToScale, isNegative: node.localShare < 0 };
+}
+
+/** Nodes at either end of a link that is broken or calls for caution; null where everything is shown. */
+function failingNodes(chain: ChainResponse, question: ChainQuestion): Set<string> | null {
+  if (question.only !== 'fails') return null;
+  const failing = chain.links.filter((link) => ['broken', 'caution'].includes(link[question.verdict]));
+  return new Set(failing.flatMap((link) => [link.childUid, link.parentUid]));
+}

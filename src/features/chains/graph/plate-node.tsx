@@ -1,0 +1,123 @@
+import { memo } from 'react';
+import { Handle, Position, type NodeProps } from 'reactflow';
+import { DateText } from '#src/components/ui/date-text.tsx';
+import { Quantity } from '#src/components/ui/quantity.tsx';
+import { StateMark } from '#src/components/ui/state-mark.tsx';
+import { usePreferences } from '#src/lib/preferences.ts';
+import { shareText } from '../share-text.ts';
+import type { Plate, Stub } from './display-list.ts';
+import { PLATE, STUB_REACH } from './geometry.ts';
+
+export interface PlateData {
+  plate: Plate;
+  isSelected: boolean;
+}
+
+const STUB_LENGTH = 34;
+
+/** A value of the chain, or an effect it shares, as a small plate; what it adds of its own enters from the left. */
+export const PlateNode = memo(function PlateNode({ data }: NodeProps<PlateData>) {
+  const { plate, isSelected } = data;
+  const isRoot = plate.node.type === 'value' && plate.node.rootKind !== null;
+  const edge = plate.isFocus || isSelected ? 'border-brass' : 'border-ink';
+  const rule =
+    plate.node.type === 'source' ? 'border border-dashed' : isRoot ? 'border-3 border-double' : 'border';
+  return (
+    <div
+      className={`relative cursor-pointer bg-raised text-left ${rule} ${edge} ${isSelected || plate.isFocus ? 'outline outline-brass' : ''} ${plate.isFaint ? 'opacity-35' : ''}`}
+      style={{ width: PLATE.width, height: PLATE.height }}
+    >
+      <Handle type="source" position={Position.Bottom} className="invisible" isConnectable={false} />
+      <Handle type="target" position={Position.Top} className="invisible" isConnectable={false} />
+      {plate.stub && <StubMark stub={plate.stub} />}
+      <div className="flex h-full flex-col justify-between px-2 py-1">
+        {plate.node.type === 'value' ? (
+          <ValueFace plate={plate} node={plate.node} />
+        ) : (
+          <SourceFace node={plate.node} />
+        )}
+      </div>
+    </div>
+  );
+});
+
+function ValueFace({ plate, node }: { plate: Plate; node: Extract<Plate['node'], { type: 'value' }> }) {
+  return (
+    <>
+      <div className="flex items-baseline justify-between gap-1 text-xs">
+        <span className="font-mono text-sm">{node.registryNo}</span>
+        <span className="truncate text-ink-2">
+          {node.rootKind ?? <NominalAndClass nominal={node.nominal} weightClass={node.class} />}
+        </span>
+      </div>
+      <div className="flex items-center justify-between gap-1">
+        <Quantity
+          value={node.deviation}
+          expandedUncertainty={node.expandedU}
+          coverageFactor={node.k}
+          kind="deviation"
+          shownIn="auto"
+          face="serif"
+        />
+        <StateMark state={plate.state} isMarkOnly>
+          {node.state}
+        </StateMark>
+      </div>
+      <div className="truncate text-xs text-ink-2">
+        {node.issuer.name} · <DateText value={datedTo(node.performedEnd, node.datePrecision)} />
+      </div>
+    </>
+  );
+}
+
+function SourceFace({ node }: { node: Extract<Plate['node'], { type: 'source' }> }) {
+  return (
+    <>
+      <div className="flex items-baseline justify-between gap-1 text-xs">
+        <span className="font-mono text-sm">{node.registryNo ?? node.kind}</span>
+        <span className="text-ink-2">shared effect</span>
+      </div>
+      <div className="line-clamp-2 text-xs">{node.name}</div>
+    </>
+  );
+}
+
+/** Nominal in the unit it is spoken of, with the class: "1 kg E2". */
+export function NominalAndClass({ nominal, weightClass }: { nominal: string; weightClass: string | null }) {
+  const unit = Number(nominal) >= 1000 ? 'kg' : Number(nominal) >= 1 ? 'g' : 'mg';
+  return (
+    <>
+      <Quantity value={nominal} shownIn={unit} />
+      {weightClass && ` ${weightClass}`}
+    </>
+  );
+}
+
+/** A date no more exact than it is known. */
+function datedTo(day: string, precision: 'day' | 'month' | 'year'): string {
+  return { day, month: day.slice(0, 7), year: day.slice(0, 4) }[precision];
+}
+
+function StubMark({ stub }: { stub: Stub }) {
+  const { decimalMark } = usePreferences();
+  const height = stub.height ?? 14;
+  const look =
+    stub.height === null
+      ? 'border border-dashed border-ink-3'
+      : stub.isNegative
+        ? 'border border-dashed border-ink-2'
+        : stub.isToScale
+          ? 'bg-local'
+          : 'bg-ink-3';
+  return (
+    <div
+      className="absolute top-1/2 flex -translate-y-1/2 items-center justify-end gap-1"
+      style={{ right: PLATE.width, width: STUB_REACH }}
+    >
+      <span className="font-mono text-xs whitespace-nowrap text-ink-2">
+        {stub.share === null ? '?' : stub.isToScale ? shareText(stub.share, decimalMark, 0) : ''}
+      </span>
+      <span className={look} style={{ width: STUB_LENGTH, height, flexShrink: 0 }} />
+    </div>
+  );
+}

@@ -1,0 +1,37 @@
+import { z } from 'zod';
+
+/**
+ * Everything a chain's screen can be asked, as it stands in the address: a link sent to a colleague shows the
+ * same picture, within that reader's rights. What cannot be read is left out, not an error.
+ */
+const Question = z.object({
+  day: z.iso.date().optional().catch(undefined),
+  known: z.iso.date().optional().catch(undefined),
+  draw: z.enum(['flow', 'plain']).catch('flow'),
+  verdict: z.enum(['conduct', 'today']).catch('today'),
+  only: z.enum(['fails']).optional().catch(undefined),
+  /** What is selected: a node's uid, or child and parent of a link joined by a dot. */
+  at: z.string().max(80).optional().catch(undefined),
+});
+export type ChainQuestion = z.infer<typeof Question>;
+
+/** Reads the question from the address. */
+export function readQuestion(parameters: URLSearchParams): ChainQuestion {
+  return Question.parse(Object.fromEntries(parameters));
+}
+
+/** The address's parameters with a change; what is at its default is left out. */
+export function withChange(question: ChainQuestion, change: Partial<ChainQuestion>): Record<string, string> {
+  const next = { ...question, ...change };
+  const defaults: Record<string, string> = { draw: 'flow', verdict: 'today' };
+  return Object.fromEntries(
+    Object.entries(next).flatMap(([name, value]) =>
+      value && value !== defaults[name] ? [[name, value]] : [],
+    ),
+  );
+}
+
+/** The address part of a link. */
+export function linkKey(link: { childUid: string; parentUid: string }): string {
+  return `${link.childUid}.${link.parentUid}`;
+}
