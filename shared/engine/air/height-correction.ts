@@ -1,4 +1,4 @@
-import { Decimal } from '#shared/decimal.ts';
+import type { Decimal } from '#shared/decimal.ts';
 import { requireDecimal, requireNumber } from '../quantity/domain.ts';
 
 /** A correction to a weighing and how it changes with the height difference and the gradient. */

@@ -1,4 +1,4 @@
-import { Decimal } from '#shared/decimal.ts';
+import type { Decimal } from '#shared/decimal.ts';
 import { requireChoice, requireDecimal, requireNumber } from '../quantity/domain.ts';
 import { DENSITY_TABLE, WEIGHT_CLASSES, type DensityInterval, type WeightClass } from './r111-2004.ts';
 

@@ -36,8 +36,8 @@ export interface ParseOptions {
 
 const LONGEST_TEXT = 160;
 
-/** Every kind of space people and programs put between digits: no-break, figure, thin, hair, narrow, ... */
-const SPACES = /[\u0009\u0020\u00a0\u2000-\u200a\u202f\u205f]/g;
+/** Every kind of space people and programs put between digits: no-break, figure, thin, hair, narrow, tab, ... */
+const SPACES = /\s/g;
 const MINUS_SIGNS = /^[-\u2212]/;
 const PLUS_MINUS = /\u00b1|\+\/-|\+\/\u2212/;
 
