@@ -48,8 +48,9 @@ export const providerAccepted: ValueRule = {
     const { row, state } = recognition;
     const parameters = { ...known, body: row.body, number: row.number, arrangement: row.arrangement, state };
     if (state !== 'granted') return fails('not granted', parameters);
-    if (row.kind === 'accreditation' && !value.underAccreditation)
-      return fails('not under accreditation', parameters);
+    // A recognized certificate was entered as one that its recognition covers.
+    const isCovered = value.underAccreditation || value.rootKind === 'recognized certificate';
+    if (row.kind === 'accreditation' && !isCovered) return fails('not under accreditation', parameters);
     return holds(row.kind, parameters);
   },
 };

@@ -21,6 +21,10 @@ export const LABORATORY = {
 } as const;
 export const CUSTOMER = { id: 'lab-mill', name: 'Mill Laboratory', kind: 'calibration laboratory' } as const;
 
+/** Identifiers of the two values. */
+export const FOCUS = '01900000-0000-7000-8000-00000000000a';
+export const REFERENCE = '01900000-0000-7000-8000-00000000000b';
+
 export const SCOPE_LINE: ScopeLineFacts = {
   line: 1,
   nominalFrom: '1',
@@ -38,7 +42,7 @@ export const SCOPE_LINE: ScopeLineFacts = {
 /** The weight at the end: 1 kg, E2, calibrated 2025-03-10 by the laboratory for its customer, U 0.30 mg. */
 export function valueFacts(changes: Partial<ValueFacts> = {}): ValueFacts {
   return {
-    uid: 'value-focus',
+    uid: FOCUS,
     certificateNo: 'RL-2025-031',
     revisionN: 1,
     deviation: '0.00021',
@@ -103,7 +107,7 @@ export function valueFacts(changes: Partial<ValueFacts> = {}): ValueFacts {
 /** The reference: 1 kg, E1, calibrated 2024-01-15 by the institute, U 0.12 mg. */
 export function referenceFacts(changes: Partial<ValueFacts> = {}): ValueFacts {
   return valueFacts({
-    uid: 'value-reference',
+    uid: REFERENCE,
     certificateNo: 'IP-2024-002',
     deviation: '0.00005',
     expandedU: '0.00012',
@@ -116,6 +120,9 @@ export function referenceFacts(changes: Partial<ValueFacts> = {}): ValueFacts {
     issuer: INSTITUTE,
     holder: LABORATORY,
     class: 'E1',
+    underAccreditation: false,
+    scope: [],
+    recognitions: [{ ...valueFacts().recognitions[0]!, kind: 'institute arrangement', number: 'A-02' }],
     references: 0,
     rootKind: 'recognized certificate',
     ...changes,
