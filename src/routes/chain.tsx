@@ -1,6 +1,50 @@
-import { Page } from '#src/components/layout/page.tsx';
+import { keepPreviousData, useQuery } from '@tanstack/react-query';
+import { useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router';
+import { paths } from '#src/app/paths.ts';
+import { queryClient } from '#src/app/query-client.ts';
+import { Toolbar } from '#src/components/layout/columns.tsx';
+import { LinkButton } from '#src/components/ui/button.tsx';
+import { chainQuery } from '#src/features/chains/api.ts';
+import { ChainScreen } from '#src/features/chains/components/chain-screen.tsx';
+import type { ValueNode } from '#src/features/chains/components/selection-sheet.tsx';
+import { readQuestion, withChange, type ChainQuestion } from '#src/features/chains/question.ts';
 
-/** Keeps the place of the screen at this address. */
+/** Primes the chain, so that the drawing and its numbers are on the way together. */
+export async function loader({ params, request }: LoaderFunctionArgs): Promise<null> {
+  const question = readQuestion(new URL(request.url).searchParams);
+  await queryClient.query({
+    ...chainQuery(params.valueUid!, { day: question.day, known: question.known }),
+    staleTime: 10_000,
+  });
+  return null;
+}
+
+/** The chain of one value. Everything asked of it stands in the address. */
 export function Component() {
-  return <Page title="Chain">{null}</Page>;
+  const { valueUid } = useParams();
+  const [parameters, setParameters] = useSearchParams();
+  const question = readQuestion(parameters);
+  const { data, error } = useQuery({
+    ...chainQuery(valueUid!, { day: question.day, known: question.known }),
+    placeholderData: keepPreviousData,
+  });
+  if (error) throw error;
+  if (!data) return null;
+  const change = (next: Partial<ChainQuestion>) =>
+    setParameters(withChange(question, next), { replace: 'at' in next, preventScrollReset: true });
+  return <ChainScreen chain={data} question={question} onChange={change} actionsFor={actionsFor} />;
+}
+
+function actionsFor(node: ValueNode) {
+  return (
+    <Toolbar>
+      {node.revisionId && (
+        <LinkButton to={paths.calibration.href(node.revisionId)}>Open the calibration</LinkButton>
+      )}
+      {node.view === 'full' && (
+        <LinkButton to={paths.standard.href(node.standardId)}>Open the standard</LinkButton>
+      )}
+      {node.tier > 0 && <LinkButton to={paths.chain.href(node.uid)}>Its own chain</LinkButton>}
+    </Toolbar>
+  );
 }

@@ -1,6 +1,10 @@
-import { Page } from '#src/components/layout/page.tsx';
+import { useSearchParams } from 'react-router';
+import { paths } from '#src/app/paths.ts';
+import { ChainChooser } from '#src/features/chains/components/chain-chooser.tsx';
 
-/** Keeps the place of the screen at this address. */
+/** Which chain to open. */
 export function Component() {
-  return <Page title="Chains">{null}</Page>;
+  const [parameters, setParameters] = useSearchParams();
+  const search = (q: string) => setParameters(q === '' ? {} : { q }, { replace: true });
+  return <ChainChooser q={parameters.get('q') ?? ''} onSearch={search} hrefOf={paths.chain.href} />;
 }

@@ -1,0 +1,104 @@
+import { useState } from 'react';
+import { useQuery } from '@tanstack/react-query';
+import { Page } from '#src/components/layout/page.tsx';
+import { DateText } from '#src/components/ui/date-text.tsx';
+import { EmptyState } from '#src/components/ui/empty-state.tsx';
+import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
+import { Waiting } from '#src/components/ui/progress.tsx';
+import { Quantity } from '#src/components/ui/quantity.tsx';
+import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
+import { TextField } from '#src/components/ui/text-field.tsx';
+import { chainChoicesQuery } from '../api.ts';
+
+interface ChainChooserProps {
+  q: string;
+  onSearch: (q: string) => void;
+  hrefOf: (valueUid: string) => string;
+}
+
+/** Which chain to open: the newest values of one's own weights, or those found by registry number. */
+export function ChainChooser({ q, onSearch, hrefOf }: ChainChooserProps) {
+  const [typed, setTyped] = useState(q);
+  const { data, error, refetch } = useQuery(chainChoicesQuery(q));
+  return (
+    <Page title="Chains" sub="Each value back to the SI, with the uncertainty that really reaches it.">
+      <TextField
+        label="Registry number"
+        className="max-w-72"
+        isMono
+        type="search"
+        value={typed}
+        onChange={(event) => {
+          setTyped(event.target.value);
+          onSearch(event.target.value.trim());
+        }}
+      />
+      {error && <ErrorNotice error={error} onRetry={() => void refetch()} />}
+      {!data && !error && <Waiting>Looking for values</Waiting>}
+      {data?.values.length === 0 && (
+        <EmptyState>
+          {q
+            ? `No value in force of a weight whose number begins with "${q}".`
+            : 'The chains of your weights stand here once a calibration of them is issued.'}
+        </EmptyState>
+      )}
+      {data && data.values.length > 0 && (
+        <Table caption="Values in force">
+          <thead>
+            <tr>
+              <Head>Weight</Head>
+              <Head align="right">Nominal</Head>
+              <Head>Held by</Head>
+              <Head>Certificate</Head>
+              <Head>Calibrated</Head>
+              <Head align="right">Deviation</Head>
+              <Head align="right">U</Head>
+            </tr>
+          </thead>
+          <tbody>
+            {data.values.map((value) => (
+              <Row key={value.uid}>
+                <Cell isMono>
+                  <RowLink to={hrefOf(value.uid)}>{value.registryNo}</RowLink>
+                </Cell>
+                <Cell align="right">
+                  <Quantity
+                    value={value.nominal}
+                    shownIn={Number(value.nominal) >= 1000 ? 'kg' : Number(value.nominal) >= 1 ? 'g' : 'mg'}
+                  />
+                </Cell>
+                <Cell>{value.holder.name}</Cell>
+                <Cell isMono>{value.certificateNo}</Cell>
+                <Cell>
+                  <DateText value={value.performedEnd} />
+                </Cell>
+                <Cell align="right">
+                  <Quantity
+                    value={value.deviation}
+                    expandedUncertainty={value.expandedU}
+                    coverageFactor={value.k}
+                    kind="deviation"
+                    shownIn="auto"
+                    hidesUncertainty
+                  />
+                </Cell>
+                <Cell align="right">
+                  {value.expandedU ? (
+                    <Quantity
+                      value={value.expandedU}
+                      kind="uncertainty"
+                      coverageFactor={value.k}
+                      shownIn="auto"
+                    />
+                  ) : (
+                    'not stated'
+                  )}
+                </Cell>
+              </Row>
+            ))}
+          </tbody>
+        </Table>
+      )}
+    </Page>
+  );
+}

@@ -1,0 +1,103 @@
+import { lazy, Suspense, type ReactNode } from 'react';
+import type { ChainResponse } from '#shared/contracts/chains.ts';
+import { TwoColumns } from '#src/components/layout/columns.tsx';
+import { Page, Section } from '#src/components/layout/page.tsx';
+import { Waiting } from '#src/components/ui/progress.tsx';
+import { Coverage, Quantity } from '#src/components/ui/quantity.tsx';
+import { Decimal, decimalText } from '#shared/decimal.ts';
+import { quantityLine, quantityText } from '#src/lib/quantity-text.ts';
+import type { ChainQuestion } from '../question.ts';
+import { BothKinds } from './both-kinds.tsx';
+import { Contributions } from './contributions.tsx';
+import { Legend } from './legend.tsx';
+import { LinkTable } from './link-table.tsx';
+import { QuestionBar } from './question-bar.tsx';
+import { SelectionSheet, type ValueNode } from './selection-sheet.tsx';
+import { Verdict } from './verdict.tsx';
+
+/** The drawing brings reactflow and dagre: fetched with the screen, not with the application. */
+const ChainGraph = lazy(() =>
+  import('../graph/chain-graph.tsx').then((module) => ({ default: module.ChainGraph })),
+);
+
+interface ChainScreenProps {
+  chain: ChainResponse;
+  question: ChainQuestion;
+  onChange: (change: Partial<ChainQuestion>) => void;
+  actionsFor: (node: ValueNode) => ReactNode;
+  /** Actions for the whole chain, at the foot of the side. */
+  actions?: ReactNode;
+}
+
+/** The heart: the weight at the bottom, the SI at the top, and what flows between them. */
+export function ChainScreen({ chain, question, onChange, actionsFor, actions }: ChainScreenProps) {
+  const focus = chain.nodes.find(
+    (node): node is ValueNode => node.uid === chain.focusUid && node.type === 'value',
+  )!;
+  const select = (at: string) => onChange({ at });
+  return (
+    <Page
+      title={titleOf(focus)}
+      sub={`${focus.holder?.name ?? focus.issuer.name} · certificate ${focus.certificateNo} · ${focus.state}${focus.stateSince ? ` since ${focus.stateSince}` : ''}`}
+      value={
+        <Quantity
+          value={decimalText(new Decimal(focus.nominal).plus(focus.deviation))}
+          expandedUncertainty={focus.expandedU}
+          coverageFactor={focus.k}
+          isOfRecord
+        />
+      }
+      valueNote={
+        <>
+          {focus.quantity}
+          {focus.k ? (
+            <>
+              , <Coverage coverageFactor={focus.k} />
+            </>
+          ) : (
+            ', U not stated'
+          )}
+        </>
+      }
+    >
+      <QuestionBar question={question} answered={chain.question} onChange={onChange} />
+      <TwoColumns
+        sideWidth="normal"
+        side={
+          <>
+            <Verdict chain={chain} question={question} />
+            <LinkTable chain={chain} question={question} onSelect={select} />
+            <Contributions chain={chain} />
+            <BothKinds chain={chain} />
+            {actions}
+          </>
+        }
+      >
+        <Section title={<span className="sr-only">The chain, drawn</span>}>
+          <div className="h-[clamp(26rem,72dvh,60rem)] border-y border-rule">
+            <Suspense fallback={<Waiting>Fetching the drawing</Waiting>}>
+              <ChainGraph chain={chain} question={question} onSelect={select} />
+            </Suspense>
+          </div>
+          <Legend />
+        </Section>
+      </TwoColumns>
+      {question.at && (
+        <SelectionSheet
+          chain={chain}
+          at={question.at}
+          onClose={() => onChange({ at: undefined })}
+          actionsFor={actionsFor}
+        />
+      )}
+    </Page>
+  );
+}
+
+function titleOf(focus: ValueNode): string {
+  const unit = Number(focus.nominal) >= 1000 ? 'kg' : Number(focus.nominal) >= 1 ? 'g' : 'mg';
+  const nominal = quantityLine(
+    quantityText({ value: focus.nominal, shownIn: unit }, { decimalMark: '.', uncertainty: 'plus-minus' }),
+  );
+  return `${focus.registryNo}, ${nominal}${focus.class ? `, class ${focus.class}` : ''}`;
+}

@@ -1,0 +1,94 @@
+import type { ChainResponse } from '#shared/contracts/chains.ts';
+import { DateText } from '#src/components/ui/date-text.tsx';
+import { StateMark } from '#src/components/ui/state-mark.tsx';
+import { Cell, Head, Row, RowButton, Table } from '#src/components/ui/table.tsx';
+import { usePreferences } from '#src/lib/preferences.ts';
+import { linkKey, type ChainQuestion } from '../question.ts';
+import { shareText } from '../share-text.ts';
+
+interface LinkTableProps {
+  chain: ChainResponse;
+  question: ChainQuestion;
+  onSelect: (at: string) => void;
+}
+
+/** The same facts as the drawing, one row per link from the weight upwards. */
+export function LinkTable({ chain, question, onSelect }: LinkTableProps) {
+  const { decimalMark } = usePreferences();
+  const names = namesOf(chain);
+  const rows = linksUpwards(chain).filter(
+    (link) => question.only !== 'fails' || ['broken', 'caution'].includes(link[question.verdict]),
+  );
+  return (
+    <Table caption="Links of the chain">
+      <thead>
+        <tr>
+          <Head>Link</Head>
+          <Head>Used</Head>
+          <Head align="right">Flow</Head>
+          <Head>Judged</Head>
+        </tr>
+      </thead>
+      <tbody>
+        {rows.map((link) => (
+          <Row key={linkKey(link)} isSelected={linkKey(link) === question.at}>
+            <Cell isMono>
+              <RowButton onClick={() => onSelect(linkKey(link))}>
+                {names.get(link.parentUid)} <span aria-label="to">→</span> {names.get(link.childUid)}
+              </RowButton>
+            </Cell>
+            <Cell>{link.usedEnd ? <DateText value={link.usedEnd} /> : ''}</Cell>
+            <Cell align="right">{flowText(link, decimalMark)}</Cell>
+            <Cell>
+              {link.role === 'reference' ? (
+                <StateMark state={link[question.verdict]} />
+              ) : (
+                <span className="text-ink-3">{link.role === 'informs' ? 'informs' : 'shared effect'}</span>
+              )}
+            </Cell>
+          </Row>
+        ))}
+        {rows.length === 0 && (
+          <Row>
+            <Cell colSpan={4}>
+              {chain.links.length === 0
+                ? 'This value is itself a root: it leans on nothing.'
+                : 'No link fails a check.'}
+            </Cell>
+          </Row>
+        )}
+      </tbody>
+    </Table>
+  );
+}
+
+type Link = ChainResponse['links'][number];
+
+function flowText(link: Link, decimalMark: '.' | ','): string {
+  if (link.role === 'informs') return '–';
+  return link.flow === null ? 'unknown' : shareText(link.flow, decimalMark);
+}
+
+/** From the focus upwards, tier by tier; within a tier the widest flow first. */
+function linksUpwards(chain: ChainResponse): Link[] {
+  const tiers = new Map(chain.nodes.map((node) => [node.uid, node.tier]));
+  return chain.links.toSorted(
+    (a, b) =>
+      tiers.get(a.childUid)! - tiers.get(b.childUid)! || Math.abs(b.flow ?? 0) - Math.abs(a.flow ?? 0),
+  );
+}
+
+/** A value is named by its weight; where one weight stands with two values, the certificate's day tells them apart. */
+export function namesOf(chain: ChainResponse): Map<string, string> {
+  const count = new Map<string, number>();
+  for (const node of chain.nodes) {
+    if (node.type === 'value') count.set(node.registryNo, (count.get(node.registryNo) ?? 0) + 1);
+  }
+  return new Map(
+    chain.nodes.map((node) => {
+      if (node.type === 'source') return [node.uid, node.name];
+      const isTwice = (count.get(node.registryNo) ?? 0) > 1;
+      return [node.uid, isTwice ? `${node.registryNo} (${node.performedEnd.slice(0, 7)})` : node.registryNo];
+    }),
+  );
+}
