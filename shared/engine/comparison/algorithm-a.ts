@@ -31,9 +31,5 @@ export function algorithmA(values: readonly number[]): RobustValue {
   }
   const inside = values.map((x) => Number(Math.abs(x - value) <= CLIP * spread));
   const count = inside.reduce((sum, one) => sum + one, 0);
-  return {
-    value,
-    spread,
-    coefficients: inside.map((one) => (count === 0 ? 1 / values.length : one / count)),
-  };
+  return { value, spread, coefficients: inside.map((one) => one / count) };
 }

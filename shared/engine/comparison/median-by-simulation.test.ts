@@ -55,6 +55,14 @@ describe('procedure B: the median by simulation', () => {
     expect(outsider.expandedUncertainty / 2).toBeCloseTo(Math.sqrt(4 + 0.5), 1);
   });
 
+  it('gives the shortest interval: -0.20 to 7.45 for a skewed median, where equal tails are -0.06 to 8.11', () => {
+    // Ends from the exact distribution p1 p2 + p1 p3 + p2 p3 - 2 p1 p2 p3, searched numerically.
+    const results = { values: [0, 5, 5.2], uncertainties: [0.1, 3, 3] };
+    const [low, high] = referenceValue(results, 'median', { draws: 40_000 }).interval!;
+    expect(low).toBeLessThan(-0.1);
+    expect(high).toBeLessThan(7.8);
+  });
+
   it('refuses too few draws', () => {
     const results = { values: [0, 1], uncertainties: [1, 1] };
     for (const draws of [999, 1000.5]) {

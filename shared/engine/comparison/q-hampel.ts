@@ -32,7 +32,9 @@ function inverseOfMidpoints(ordered: readonly number[], level: number): number {
   let previousAt = 0;
   let previousHeight = 0;
   let shareBelow = 0;
-  for (let from = 0; from < ordered.length;) {
+  let from = 0;
+  // The last mid-point, (1 + a share) / 2, is never below the level: the polygon reaches it.
+  for (;;) {
     const at = ordered[from]!;
     let to = from;
     while (ordered[to] === at) to += 1;

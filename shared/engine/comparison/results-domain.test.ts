@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { normalQuantile } from '../uncertainty/normal-distribution.ts';
 import { chiSquaredUpperPoint, chiSquaredUpperTail } from './chi-squared.ts';
 import { consistency } from './consistency.ts';
 import { degreesOfEquivalence } from './degrees-of-equivalence.ts';
@@ -128,6 +129,18 @@ describe('edges inside the domain never give NaN', () => {
     expect(found.coefficients.every(Number.isFinite)).toBe(true);
   });
 
+  it('of a stretch where the sum of psi is 0, Hampel takes the point nearest the median', () => {
+    const found = referenceValue({ values: [0, 0.1, 0.2, 1.7, 1.8, 1.9] }, 'q-hampel');
+    expect(found.value).toBeCloseTo(0.95, 12);
+    expect(found.coefficients).toEqual(Array.from({ length: 6 }, () => 1 / 6));
+  });
+
+  it('many equal results: the Q method counts from 0, whatever share of pairs is equal', () => {
+    // Ten pairs: three at 0, four at 1, three at 2; level 0.475 on the line from (0, 0) to (1, 0.5).
+    const { spread } = referenceValue({ values: [0, 0, 0, 1, 2] }, 'q-hampel');
+    expect(spread).toBeCloseTo(0.95 / (Math.SQRT2 * normalQuantile(0.7375)), 12);
+  });
+
   it('results without uncertainties are tested with the spread found', () => {
     const { chiSquared, degreesOfFreedom } = referenceValue({ values: [1, 2, 3] }, 'arithmetic-mean');
     expect([chiSquared, degreesOfFreedom]).toEqual([2, 2]);
@@ -168,6 +181,7 @@ describe('chi-squared', () => {
     expect(chiSquaredUpperTail(625.25, 3) / 3.3833540073794086e-135).toBeCloseTo(1, 9);
     expect(chiSquaredUpperTail(3000, 3000)).toBeCloseTo(0.49656643883965, 11);
     expect(chiSquaredUpperTail(0, 5)).toBe(1);
+    expect(chiSquaredUpperTail(0.1, 0)).toBe(0);
   });
 
   it('refuses broken degrees of freedom and negative values', () => {
