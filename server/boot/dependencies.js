@@ -1,42 +1,48 @@
-import { existsSync, readFileSync } from 'node:fs';
+import { createHash } from 'node:crypto';
+import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
-import { runOrFail } from './run-command.js';
 import { projectFolder } from './paths.js';
+import { runOrFail } from './run-command.js';
 import { step } from './step.js';
 
-/** @typedef {{ version?: string, integrity?: string, link?: boolean, optional?: boolean, devOptional?: boolean, peer?: boolean }} LockedPackage */
-
-/**
- * @param {string} file
- * @returns {Map<string, LockedPackage>} by path such as "node_modules/zod", without the project itself
- */
-function lockedPackages(file) {
-  const { packages = {} } = JSON.parse(readFileSync(file, 'utf8'));
-  return new Map(Object.entries(packages).filter(([location]) => location !== ''));
+/** @param {string} folder of a project */
+function stampFile(folder) {
+  return path.join(folder, 'node_modules/.installed-from');
 }
 
 /**
- * Compares what is installed with the lock file by content: a lock file that was merely touched costs nothing.
- * npm writes its own list last, so an installation that was cut short has none.
+ * @param {string} folder of a project
+ * @returns {string} the same as long as the lock file says the same, for one kind of machine
+ */
+function lockHash(folder) {
+  const hash = createHash('sha256').update(`${process.platform} ${process.arch}\n`);
+  return hash.update(readFileSync(path.join(folder, 'package-lock.json'))).digest('hex');
+}
+
+/**
+ * Remembers which lock file the installed packages come from. The note goes with node_modules.
+ * @param {string} [folder]
+ * @returns {void}
+ */
+export function noteInstalled(folder = projectFolder) {
+  writeFileSync(stampFile(folder), lockHash(folder));
+}
+
+/**
+ * Judged by content: a lock file that was merely touched costs nothing. npm's own list of what it installed is no
+ * measure (it leaves out optional packages and peers that the lock file names), except for what must be there:
+ * npm writes it last, so an installation that was cut short has none.
  * @param {string} [folder]
  * @returns {string | undefined} why `npm ci` is needed
  */
 export function staleDependencies(folder = projectFolder) {
-  const wanted = lockedPackages(path.join(folder, 'package-lock.json'));
-  if (wanted.size === 0) return undefined;
-  const listFile = path.join(folder, 'node_modules/.package-lock.json');
-  if (!existsSync(listFile)) return 'node_modules is missing or incomplete';
-  const installed = lockedPackages(listFile);
-  for (const [location, { version, integrity, optional }] of wanted) {
-    const found = installed.get(location);
-    // Optional packages are made for one platform each; those of other platforms are rightly absent.
-    if (!found && optional) continue;
-    if (found?.version !== version || found?.integrity !== integrity) return `${location} is not as locked`;
-    if (!existsSync(path.join(folder, location))) return `${location} is missing`;
-  }
-  for (const location of installed.keys())
-    if (!wanted.has(location)) return `${location} is no longer locked`;
-  return undefined;
+  const list = path.join(folder, 'node_modules/.package-lock.json');
+  if (!existsSync(list)) return 'node_modules is missing or incomplete';
+  if (!existsSync(stampFile(folder))) return 'node_modules does not say which lock file it is from';
+  if (readFileSync(stampFile(folder), 'utf8') !== lockHash(folder)) return 'package-lock.json has changed';
+  const { packages = {} } = JSON.parse(readFileSync(list, 'utf8'));
+  const lost = Object.keys(packages).find((location) => !existsSync(path.join(folder, location)));
+  return lost && `${lost} is missing`;
 }
 
 /**
@@ -54,5 +60,6 @@ export async function ensureDependencies() {
     await runOrFail('npm ci', program, programArgs, {
       next: 'Check the network and the npm registry setting (npm config get registry), then start again.',
     });
+    noteInstalled();
   });
 }

@@ -87,7 +87,7 @@ async function boot() {
   const args = [
     '--test',
     '--test-concurrency=1',
-    '--test-timeout=120000',
+    '--test-timeout=900000',
     ...reporters,
     ...destinations,
     ...files,
