@@ -42,7 +42,7 @@ function registerSize(database: Sequelize): Promise<DeskResponse['register']> {
   return readRow<NonNullable<DeskResponse['register']>>(
     database,
     `SELECT (SELECT COUNT(*) FROM laboratory) AS laboratories, (SELECT COUNT(*) FROM standard) AS standards,
-            (SELECT COUNT(*) FROM assigned_value) AS \`values\`, (SELECT COALESCE(MAX(seq), 0) FROM act) AS acts`,
+            (SELECT COUNT(*) FROM assigned_value) AS \`values\`, (SELECT CAST(COALESCE(MAX(seq), 0) AS UNSIGNED) FROM act) AS acts`,
   );
 }
 
