@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { consensusValue } from './consensus-value.ts';
+import { referenceValue } from './reference-value.ts';
 
 describe('consensusValue', () => {
   // CCM-TGPfD-kg, Calculation of the Consensus Value for the Kilogram 2020, 2023, 2026; second-hand copy, in ug.
@@ -18,6 +19,18 @@ describe('consensusValue', () => {
     expect(found.calculated).toBeCloseTo(mean, 3);
     expect(found.published).toBe(published);
     expect(found.standardUncertainty).toBe(20);
+  });
+
+  // The mean's own uncertainty, which the agreed 20 ug replaces: 6.0 printed in 2020, the others recomputed.
+  it.each([
+    [[0, 12.4, -18.8], [11.7, 11.4, 7.5], 5.991660871578097],
+    [[12.4, -18.8, -15.2], [11.4, 8.1, 7.4], 5.273940125223687],
+    [[-18.8, -15.2, -10.7], [8.1, 7.4, 6.4], 4.233858235174574],
+  ])('the mean of %j has u = %j combined: %d', (values, uncertainties, u) => {
+    expect(referenceValue({ values, uncertainties }, 'arithmetic-mean').standardUncertainty).toBeCloseTo(
+      u,
+      12,
+    );
   });
 
   it('limits the change from the published value, not from the calculated one, in both directions (trap 18)', () => {

@@ -22,9 +22,12 @@ export type Consistency = {
  * Chi-squared test of the results that count about their own weighted mean, with the full covariance; the upper
  * point counts (one-sided). It passes or fails the set as a whole and says nothing about single pairs.
  * @param level probability of calling consistent results inconsistent; 0.05 by custom
- * @throws EngineError `uncertainties-missing`, those of `checkedResults`; `too-few-values` for fewer than two
+ * @throws EngineError `uncertainties-missing`, `out-of-range`, those of `checkedResults`; `too-few-values` for fewer than two
  */
 export function consistency(r: Results, level = 0.05): Consistency {
+  if (!(level > 0 && level < 1)) {
+    throw new EngineError('out-of-range', 'level', `The level is ${level}; between 0 and 1 is expected.`);
+  }
   const checked = checkedResults(r);
   const { chiSquared } = weightedMean(checked, statedCovariance(checked), checked.members);
   const degreesOfFreedom = checked.members.length - 1;

@@ -45,49 +45,51 @@ export function link(a: {
 }): Link {
   const joint = jointResults(a);
   const reference = a.published ?? referenceValue(a.reference, 'weighted-mean');
-  const size = joint.values.length;
-  const split = a.reference.values.length;
-  const at = (place: number): number[] => Array.from({ length: size }, (_, i) => Number(i === place));
-  const rows = a.linking.map((one) => minus(at(one.reference), at(split + one.regional)));
-  const linked = linkMean(rows, joint);
-  const toOffset = rows.reduce(
-    (sum, row, l) =>
-      plus(
-        sum,
-        row.map((value) => linked.coefficients[l]! * value),
-      ),
-    at(-1),
+  const coefficients = joint.values.map((_, place) => reference.coefficients[place] ?? 0);
+  const rows = a.linking.map((one) => difference(joint, one.reference, joint.split + one.regional));
+  const { mean, differences } = linkMean(rows, joint);
+  const toOffset = joint.values.map((_, i) =>
+    dot(
+      mean.coefficients,
+      rows.map((row) => row[i]!),
+    ),
   );
-  const coefficients = [...reference.coefficients, ...a.regional.values.map(() => 0)];
-  const offset = linked.value;
+  // What one result on the reference scale, `x + offset`, is sensitive to.
+  const onReferenceScale = (i: number) => plus(unit(joint, joint.split + i), toOffset);
   const variance = (k: number[]) => quadraticForm(joint.covariance, k);
   return {
     reference,
-    offset,
-    offsetUncertainty: Math.sqrt(linked.variance),
-    weights: linked.coefficients,
-    differences: rows.map((row, l) => ({
-      difference: linked.differences[l]!,
-      standardUncertainty: Math.sqrt(variance(row)),
-    })),
-    ...withoutBirge(linked.chiSquared, rows.length - 1),
+    offset: mean.value,
+    offsetUncertainty: Math.sqrt(mean.variance),
+    weights: mean.coefficients,
+    differences,
+    ...chiSquaredOf(mean.chiSquared, rows.length - 1),
     covarianceWithReference: dot(multiplyVector(joint.covariance, toOffset), coefficients),
-    degreesOfEquivalence: a.regional.values.map((x, j) =>
-      equivalence(x + offset - reference.value, variance(minus(plus(at(split + j), toOffset), coefficients))),
+    degreesOfEquivalence: a.regional.values.map((x, i) =>
+      equivalence(x + mean.value - reference.value, variance(minus(onReferenceScale(i), coefficients))),
     ),
     pairs: a.regional.values.flatMap((x, i) =>
-      a.reference.values.map((other, j) => ({
-        i,
-        j,
-        difference: x + offset - other,
-        expandedUncertainty:
-          2 * Math.sqrt(Math.max(0, variance(minus(plus(at(split + i), toOffset), at(j))))),
-      })),
+      a.reference.values.map((other, j) => {
+        const pair = equivalence(
+          x + mean.value - other,
+          variance(minus(onReferenceScale(i), unit(joint, j))),
+        );
+        return { i, j, difference: pair.difference, expandedUncertainty: pair.expandedUncertainty };
+      }),
     ),
   };
 }
 
-type Joint = { values: number[]; covariance: number[][] };
+/** Both comparisons in one list; the regional one begins at `split`. */
+type Joint = { values: number[]; covariance: number[][]; split: number };
+
+function unit(joint: Joint, place: number): number[] {
+  return joint.values.map((_, i) => Number(i === place));
+}
+
+function difference(joint: Joint, one: number, other: number): number[] {
+  return minus(unit(joint, one), unit(joint, other));
+}
 
 /** The results of both comparisons in one list, with the covariances of the linking participants between them. */
 function jointResults(a: { reference: Results; regional: Results; linking: LinkingParticipant[] }): Joint {
@@ -107,7 +109,7 @@ function jointResults(a: { reference: Results; regional: Results; linking: Linki
     covariance[split + one.regional]![one.reference] = one.covariance;
   }
   checkedResults({ values, covariance });
-  return { values, covariance };
+  return { values, covariance, split };
 }
 
 function checkLinking(
@@ -138,21 +140,24 @@ function requirePlace(place: number, count: number, field: string): void {
   );
 }
 
-/** Generalised least squares mean of the linking differences. */
+/** The linking differences and their generalised least squares mean. */
 function linkMean(rows: number[][], joint: Joint) {
-  const differences = rows.map((row) => dot(row, joint.values));
+  const values = rows.map((row) => dot(row, joint.values));
   const pulled = rows.map((row) => multiplyVector(joint.covariance, row));
   const covariance = rows.map((row) => pulled.map((column) => dot(row, column)));
-  const everyRow = rows.map((_, l) => l);
-  return { differences, ...weightedMean({ values: differences, independent: false }, covariance, everyRow) };
+  const every = rows.map((_, l) => l);
+  const mean = weightedMean({ values, independent: false }, covariance, every);
+  const differences = values.map((value, l) => ({
+    difference: value,
+    standardUncertainty: Math.sqrt(covariance[l]![l]!),
+  }));
+  return { mean, differences };
 }
 
-function withoutBirge(
-  chiSquared: number,
-  count: number,
-): Pick<Link, 'chiSquared' | 'degreesOfFreedom' | 'pValue'> {
-  const { degreesOfFreedom, pValue } = observed(count === 0 ? 0 : chiSquared, count);
-  return { chiSquared: count === 0 ? 0 : chiSquared, degreesOfFreedom, pValue };
+/** A single linking participant agrees with itself: rounding must not say otherwise. */
+function chiSquaredOf(found: number, degreesOfFreedom: number) {
+  const chiSquared = degreesOfFreedom === 0 ? 0 : found;
+  return { chiSquared, degreesOfFreedom, pValue: observed(chiSquared, degreesOfFreedom).pValue };
 }
 
 function plus(a: readonly number[], b: readonly number[]): number[] {

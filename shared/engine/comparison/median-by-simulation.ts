@@ -38,8 +38,28 @@ export function medianBySimulation(
       `${draws} draws; a whole number of at least ${LEAST_DRAWS} is expected.`,
     );
   }
-  const draw = sampler(checked, covariance, options.seed ?? 1);
+  const { medians, differences, timesMiddle } = simulate(
+    checked,
+    sampler(checked, covariance, options.seed ?? 1),
+    draws,
+  );
+  const { mean, deviation } = meanAndDeviation(medians);
   const origin = checked.values[checked.members[0]!]!;
+  const [low, high] = interval(medians, 'shortest');
+  return {
+    value: origin + mean,
+    standardUncertainty: deviation,
+    interval: [origin + low, origin + high],
+    coefficients: timesMiddle.map((count) => count / draws),
+    differences: differences.map((column) => ({
+      standardUncertainty: meanAndDeviation(column).deviation,
+      interval: interval(column, 'symmetric'),
+    })),
+  };
+}
+
+/** The medians of all draws, every result's difference from them, and how often a result was the median. */
+function simulate(checked: CheckedResults, draw: () => Float64Array, draws: number) {
   const medians = new Float64Array(draws);
   const differences = checked.values.map(() => new Float64Array(draws));
   const timesMiddle = checked.values.map(() => 0);
@@ -57,17 +77,7 @@ export function medianBySimulation(
     }
     differences.forEach((column, i) => (column[trial] = x[i]! - medians[trial]!));
   }
-  const { mean, deviation } = meanAndDeviation(medians);
-  return {
-    value: origin + mean,
-    standardUncertainty: deviation,
-    interval: interval(medians, 'shortest').map((end) => end + origin) as [number, number],
-    coefficients: timesMiddle.map((count) => count / draws),
-    differences: differences.map((column) => ({
-      standardUncertainty: meanAndDeviation(column).deviation,
-      interval: interval(column, 'symmetric'),
-    })),
-  };
+  return { medians, differences, timesMiddle };
 }
 
 /** Draws all results, less the first member's value, from their joint normal distribution. */

@@ -188,6 +188,18 @@ describe('the printed figures of published comparisons', () => {
     expect(degrees.filter((d) => Math.abs(d.en) <= 1)).toHaveLength(8);
   });
 
+  it('CCM.M-K8.2024: the result outside the reference value has the plus sign, U = 75.31', () => {
+    const set = PUBLISHED_SETS[0]!;
+    const all = {
+      values: [...set.values, 4],
+      uncertainties: [...set.uncertainties, 37.1],
+      counts: [...set.values.map(() => true), false],
+    };
+    const outsider = degreesOfEquivalence(all, referenceValue(all, 'weighted-mean'))[9]!;
+    near(outsider.difference, 14.710960939151349, 1e-12);
+    near(outsider.expandedUncertainty, 75.31384061573354, 1e-12);
+  });
+
   it('CODATA 2018, constant of gravitation: 6.674290(38), chi-squared per degree 13.2, Birge ratio 3.63', () => {
     const found = referenceValue(PUBLISHED_SETS[2]!, 'weighted-mean');
     near(found.value, 6.67429, 5e-7, 1);

@@ -89,7 +89,7 @@ describe('results outside the domain are refused with their field', () => {
         expect.objectContaining({ field: 'level' }),
       );
     }
-    expect(() => consistency(right, 0)).toThrow(expect.objectContaining({ field: 'probability' }));
+    expect(() => consistency(right, 0)).toThrow(expect.objectContaining({ field: 'level' }));
     expect(() => consistency({ values: [1], uncertainties: [1] })).toThrow(
       expect.objectContaining({ code: 'too-few-values' }),
     );
