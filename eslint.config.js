@@ -28,6 +28,10 @@ const ENGINE_ONLY = {
   message: 'The engine imports decimals and itself, nothing else.',
 };
 
+/**
+ * @param {...object} patterns what the folder may not import
+ * @returns {import('eslint').Linter.RulesRecord}
+ */
 function restricted(...patterns) {
   return { 'no-restricted-imports': ['error', { patterns: [TESTS, ...patterns] }] };
 }
