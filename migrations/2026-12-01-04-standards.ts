@@ -64,6 +64,7 @@ export const standards: Migration = {
       ${VALID},
       ${RECORDED},
       KEY standard_fact_standard (standard_id, kind, recorded_at),
+      KEY standard_fact_laboratory (laboratory_id, kind, standard_id),
       KEY standard_fact_act (act_seq),
       CONSTRAINT standard_fact_standard FOREIGN KEY (standard_id) REFERENCES standard (id) ON DELETE RESTRICT
     ) ${TABLE}`,

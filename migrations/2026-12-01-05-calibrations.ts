@@ -24,6 +24,7 @@ export const calibrations: Migration = {
       registered_by_id ${ID} NOT NULL COMMENT 'the laboratory that entered it',
       ${RECORDED},
       UNIQUE KEY calibration_certificate (laboratory_id, certificate_no),
+      KEY calibration_certificate_no (certificate_no),
       KEY calibration_registered_by (registered_by_id),
       CONSTRAINT calibration_laboratory FOREIGN KEY (laboratory_id) REFERENCES laboratory (id) ON DELETE RESTRICT,
       CONSTRAINT calibration_registered_by FOREIGN KEY (registered_by_id) REFERENCES laboratory (id) ON DELETE RESTRICT

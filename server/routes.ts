@@ -4,6 +4,8 @@ import { documentRoutes } from '#server/modules/documents/index.ts';
 import { healthRoutes } from '#server/modules/health/index.ts';
 import { identityRoutes } from '#server/modules/identity/index.ts';
 import { networkRoutes } from '#server/modules/network/index.ts';
+import { calibrationRoutes } from '#server/modules/calibrations/index.ts';
+import { standardRoutes } from '#server/modules/standards/index.ts';
 import type { Route } from '#server/http/route.ts';
 
 /** Every route of the product. A test walks this table as every kind of person. */
@@ -12,6 +14,8 @@ export const routes: readonly Route[] = [
   ...identityRoutes,
   ...networkRoutes,
   ...documentRoutes,
+  ...standardRoutes,
+  ...calibrationRoutes,
   ...chainRoutes,
   ...deskRoutes,
 ];

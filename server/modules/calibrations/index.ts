@@ -1,3 +1,4 @@
 export { issueCalibration, type IssuedCalibration } from './issue-calibration.service.ts';
 export { reviseCalibration } from './revise-calibration.service.ts';
 export { withdrawCalibration } from './withdraw-calibration.service.ts';
+export { calibrationRoutes } from './calibrations.routes.ts';

@@ -32,27 +32,40 @@ export async function issueCalibration(
 ): Promise<IssuedCalibration> {
   const parsed = validate(CalibrationInput, asked, 'body');
   return inAct(context, { kind: 'calibration.issue', laboratoryId: parsed.registeredById }, async (act) => {
-    await refuseKnownCertificate(context, parsed);
-    const facts = await issueFacts(context.database, parsed, today(context));
-    const input = completeSources(parsed, facts);
-    refuseProblems(issueProblems(input, facts));
-    const calibrationId = newId(context);
-    const { issuerId, certificateNo, registeredById } = input;
-    await insertRow(calibrationModel(context.database), {
-      id: calibrationId,
-      laboratoryId: issuerId,
-      certificateNo,
-      registeredById,
-    });
-    const head = { calibrationId, n: 1, reason: null, signatoryId, changed: [] };
-    const { revisionId, values, content, contentSha256 } = await writeRevision(context, input, facts, head);
-    const valueUids = values.map((value) => value.uid);
-    act.record({
-      subject: { type: 'calibration', id: calibrationId },
-      after: { revisionId, valueUids, contentSha256, content },
-    });
-    return { calibrationId, revisionId, valueUids };
+    const { issued, after } = await writeCalibration(context, parsed, signatoryId);
+    act.record({ subject: { type: 'calibration', id: issued.calibrationId }, after });
+    return issued;
   });
+}
+
+/**
+ * The work of issuing, inside an act that is open already, and what the act's record is to say of it.
+ * @throws AppError `unprocessable` naming every field, `duplicate` on certificateNo
+ */
+export async function writeCalibration(
+  context: Context,
+  parsed: CalibrationInput,
+  signatoryId: string | null,
+): Promise<{ issued: IssuedCalibration; after: Record<string, unknown> }> {
+  await refuseKnownCertificate(context, parsed);
+  const facts = await issueFacts(context.database, parsed, today(context));
+  const input = completeSources(parsed, facts);
+  refuseProblems(issueProblems(input, facts));
+  const calibrationId = newId(context);
+  const { issuerId, certificateNo, registeredById } = input;
+  await insertRow(calibrationModel(context.database), {
+    id: calibrationId,
+    laboratoryId: issuerId,
+    certificateNo,
+    registeredById,
+  });
+  const head = { calibrationId, n: 1, reason: null, signatoryId, changed: [] };
+  const { revisionId, values, content, contentSha256 } = await writeRevision(context, input, facts, head);
+  const valueUids = values.map((value) => value.uid);
+  return {
+    issued: { calibrationId, revisionId, valueUids },
+    after: { revisionId, valueUids, contentSha256, content },
+  };
 }
 
 async function refuseKnownCertificate(

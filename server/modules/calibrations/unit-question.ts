@@ -13,7 +13,10 @@ const THOUSAND = { from: 10 ** 2.5, to: 10 ** 3.5 };
  * U both lie a factor of a thousand above or below the weight's last value.
  */
 export function unitQuestion(
-  line: CalibrationLine,
+  line: Pick<
+    CalibrationLine,
+    'quantity' | 'deviation' | 'expandedU' | 'reportedUnit' | 'class' | 'unitConfirmed'
+  >,
   standard: Pick<StandardFacts, 'registryNo' | 'nominal' | 'class' | 'lastConventional'>,
 ): FieldProblem[] {
   if (line.unitConfirmed || line.quantity !== 'conventional mass') return [];
@@ -42,7 +45,7 @@ export function unitQuestion(
 }
 
 function isThousandfold(
-  line: CalibrationLine,
+  line: Pick<CalibrationLine, 'deviation' | 'expandedU'>,
   last: { deviation: string; expandedU: string | null },
 ): boolean {
   if (line.expandedU === null || last.expandedU === null) return false;

@@ -4,3 +4,4 @@ export { openEpoch } from './open-epoch.service.ts';
 export { registerSet } from './register-set.service.ts';
 export { registerStandard, type StandardRegistration } from './register-standard.service.ts';
 export { factOnDay } from './standard-laboratory.queries.ts';
+export { standardRoutes } from './standards.routes.ts';

@@ -1,0 +1,71 @@
+import { permission, type Permission } from '#server/policy/permission.ts';
+import { readsInFull, worksIn, type User } from '#server/policy/user.ts';
+
+/** Whose calibration it is: who issued it, who entered it, and who holds the weights. */
+export interface CalibrationSubject {
+  revisionId: string;
+  issuerId: string;
+  registeredById: string;
+  holderIds: readonly string[];
+}
+
+/** Opening an issued calibration: for those who read its issuer, its registrant or a holder in full. */
+export const readCalibration = permission<CalibrationSubject>(
+  'calibration:read',
+  (user, subject) =>
+    [subject.issuerId, subject.registeredById].some((id) => readsInFull(user, id)) ||
+    subject.holderIds.some((id) => readsInFull(user, id)),
+);
+
+/** Withdrawing: a signature, so for a signatory of the laboratory that entered it. */
+export const withdrawCalibrationPermission = permission<CalibrationSubject>(
+  'calibration:withdraw',
+  (user, { registeredById }) => worksIn(user, registeredById, 'signatory'),
+);
+
+/** Of a laboratory: beginning drafts for it and looking up references. */
+export const draftCalibration = permission<{ laboratoryId: string }>(
+  'calibration:draft',
+  (user, { laboratoryId }) => worksIn(user, laboratoryId, 'metrologist', 'laboratory administrator'),
+);
+
+/** Looking up what a result may name as reference: for everybody who works in the laboratory. */
+export const findReferences = permission<{ laboratoryId: string }>(
+  'reference:find',
+  (user, { laboratoryId }) => worksIn(user, laboratoryId),
+);
+
+/** A draft, with whether this person may sign for its laboratory today. */
+export interface DraftSubject {
+  draftId: string;
+  laboratoryId: string;
+  isAuthorised: boolean;
+}
+
+export const readDraftPermission = permission<DraftSubject>('draft:read', (user, { laboratoryId }) =>
+  readsInFull(user, laboratoryId),
+);
+
+export const writeDraftPermission = permission<DraftSubject>('draft:write', (user, { laboratoryId }) =>
+  worksIn(user, laboratoryId, 'metrologist', 'laboratory administrator'),
+);
+
+/** Sending a draft to sign, taking it back or discarding it; a signatory sends back what is not complete. */
+export const sendDraftPermission = permission<DraftSubject>('draft:send', (user, { laboratoryId }) =>
+  worksIn(user, laboratoryId, 'metrologist', 'laboratory administrator', 'signatory'),
+);
+
+/** Issuing: a signatory whose authorisation to sign calibrations is in force (ISO/IEC 17025:2017, 6.2.6). */
+export const issueCalibrationPermission = permission<DraftSubject>(
+  'calibration:issue',
+  (user, { laboratoryId, isAuthorised }) => isAuthorised && worksIn(user, laboratoryId, 'signatory'),
+);
+
+/** Abilities over no record in particular: whether the person may begin something somewhere. */
+export function somewhere<Subject extends { laboratoryId: string }>(
+  user: User,
+  wanted: Permission<Subject>,
+): Record<string, boolean> {
+  const may = user.memberships.some(({ laboratoryId }) => wanted.allows(user, { laboratoryId } as Subject));
+  return { [wanted.name]: may };
+}
