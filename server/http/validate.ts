@@ -57,8 +57,11 @@ function valueAt(root: unknown, path: PropertyKey[]): unknown {
   return value;
 }
 
+/** Short enough to read beside a field; what is nested is only named, since it may be nested without end. */
 function describe(value: unknown): string | undefined {
   if (value === undefined) return undefined;
-  const text = typeof value === 'string' ? value : JSON.stringify(value);
+  if (Array.isArray(value)) return `a list of ${value.length}`;
+  if (typeof value === 'object' && value !== null) return 'an object';
+  const text = String(value);
   return text.length > 80 ? `${text.slice(0, 77)}...` : text;
 }

@@ -2,26 +2,18 @@ import { describe, expect, it } from 'vitest';
 import { routes } from '#server/routes.ts';
 import { testApp } from '#tests/support/test-app.ts';
 import { makeScene, WALKERS, type Walker } from './walk/scene.ts';
-import { WALK, type WalkRow } from './walk/table.ts';
+import { nameOf, send, type WalkedRoute } from './walk/send.ts';
+import { READERS, WALK, type WalkRow } from './walk/table.ts';
 
 const app = await testApp();
 const scene = await makeScene(app);
 
-const nameOf = (route: { method: string; path: string }) => `${route.method.toUpperCase()} ${route.path}`;
-
-/** Sends a row's request as a walker. */
-async function walk(route: (typeof routes)[number], row: WalkRow, walker: Walker) {
-  const { path, query, body, file } = await row.request(scene, walker);
-  const agent = row.endsSession ? await scene.freshAgent(walker) : scene.agent(walker);
-  const request = agent[route.method](path).query(query ?? {});
-  if (file) return request.set('Content-Type', 'application/pdf').send(file);
-  return body === undefined ? request : request.send(body as object);
-}
-
 /** What the table says: no sign-in is 401 on all but public routes; then may or may not. */
-function expectedStatus(route: (typeof routes)[number], row: WalkRow, walker: Walker): number {
+function expectedStatus(route: WalkedRoute, row: WalkRow, walker: Walker): number {
   if (walker === 'nobody' && !route.isPublic) return 401;
-  return row.may.includes(walker) ? row.ok : row.otherwise;
+  if (row.may.includes(walker)) return row.ok;
+  if (row.otherwise !== 'hidden') return row.otherwise;
+  return READERS.includes(walker) ? 403 : 404;
 }
 
 describe('the table of the walk', () => {
@@ -48,7 +40,7 @@ describe.each(routes.map((route) => [nameOf(route), route] as const))('%s', (nam
   it.each(WALKERS)('as %s', async (walker) => {
     const row = WALK[name];
     if (!row) throw new Error(`${name} has no row in tests/api/walk/table.ts`);
-    const reply = await walk(route, row, walker);
+    const reply = await send(scene, route, row, walker, await row.request(scene, walker));
     const what = reply.status >= 400 ? JSON.stringify(reply.body) : '';
     expect(`${reply.status} ${what}`).toMatch(new RegExp(`^${expectedStatus(route, row, walker)} `));
     if (reply.status >= 400) {

@@ -135,3 +135,11 @@ export async function fullSheet({ app, home, referenceUid }: Scene): Promise<Rec
     ],
   };
 }
+
+/** A draft of home with that content, begun by its metrologist. */
+export async function makeDraft(scene: Scene): Promise<{ id: string; version: number; content: unknown }> {
+  const body = { laboratoryId: scene.home.id, content: await fullSheet(scene) };
+  const reply = await scene.agent('metrologist').post('/api/drafts').send(body);
+  if (reply.status !== 201) throw new Error(`The draft was not begun: ${reply.text}`);
+  return { id: reply.body.id, version: reply.body.version, content: reply.body.content };
+}

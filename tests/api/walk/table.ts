@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
+import { makeStandard } from '#tests/support/calibration-factories.ts';
 import { freeRegistryNo } from '#tests/support/factories.ts';
-import { fullSheet, looseCalibration, WALKERS, type Scene, type Walker } from './scene.ts';
+import { fullSheet, looseCalibration, makeDraft, WALKERS, type Scene, type Walker } from './scene.ts';
 
 export interface WalkRequest {
   path: string;
@@ -17,8 +18,8 @@ export interface WalkRow {
   may: readonly Walker[];
   /** Status for those who may. */
   ok: 200 | 201;
-  /** Status for the others who are signed in: 404 where they may not even know. */
-  otherwise: 403 | 404;
+  /** Status for the others who are signed in: 404 where they may not even know; `hidden`: 403 for who reads home. */
+  otherwise: 403 | 404 | 'hidden';
   /** The request ends the session it is sent in. */
   endsSession?: boolean;
 }
@@ -26,7 +27,7 @@ export interface WalkRow {
 const EVERYBODY = WALKERS;
 const SIGNED_IN = WALKERS.filter((walker) => walker !== 'nobody');
 /** Who reads home in full. */
-const READERS: readonly Walker[] = [
+export const READERS: readonly Walker[] = [
   'registrar',
   'laboratory administrator',
   'metrologist',
@@ -35,6 +36,19 @@ const READERS: readonly Walker[] = [
   'assessor',
 ];
 const AT_HOME: readonly Walker[] = ['laboratory administrator', 'metrologist', 'signatory', 'reader'];
+
+/** Who writes in home's name. */
+const WRITERS: readonly Walker[] = ['laboratory administrator', 'metrologist'];
+
+const WEIGHT = {
+  nominal: '1000',
+  marking: '1 kg',
+  serial: '77',
+  shape: 'knob',
+  material: 'stainless steel',
+  class: 'E2',
+  density: { value: '7950', expandedU: '140', k: '2', origin: 'assumed' },
+};
 
 const fixed = (path: string, query?: Record<string, string>) => () => ({ path, query });
 
@@ -112,7 +126,141 @@ export const WALK: Readonly<Record<string, WalkRow>> = {
     ok: 200,
     otherwise: 404,
   },
+  // standards
+  'GET /api/standards': {
+    request: fixed('/api/standards', { q: 'kg' }),
+    may: SIGNED_IN,
+    ok: 200,
+    otherwise: 403,
+  },
+  'POST /api/standards': {
+    request: ({ home }) => ({
+      path: '/api/standards',
+      body: {
+        laboratoryId: home.id,
+        registryNo: freeRegistryNo(),
+        manufacturer: null,
+        inServiceFrom: '2024-01-10',
+        intervalMonths: 24,
+        ...WEIGHT,
+      },
+    }),
+    may: WRITERS,
+    ok: 201,
+    otherwise: 403,
+  },
+  'POST /api/sets': {
+    request: ({ home }) => ({
+      path: '/api/sets',
+      body: {
+        laboratoryId: home.id,
+        registryNo: freeRegistryNo(),
+        name: 'Set of two',
+        manufacturer: null,
+        inServiceFrom: '2024-01-10',
+        intervalMonths: 24,
+        members: [WEIGHT, { ...WEIGHT, marking: '1 kg *', density: null }],
+      },
+    }),
+    may: WRITERS,
+    ok: 201,
+    otherwise: 403,
+  },
+  'GET /api/standards/:standardId': {
+    request: ({ standardId }) => ({ path: `/api/standards/${standardId}` }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'POST /api/standards/:standardId/epochs': {
+    request: async ({ app, home }) => {
+      const { id } = await makeStandard(app, home.id);
+      return {
+        path: `/api/standards/${id}/epochs`,
+        body: {
+          reason: 'adjusted',
+          beginsOn: '2024-05-01',
+          lastGoodOn: '2024-04-20',
+          note: 'Adjusted upwards',
+        },
+      };
+    },
+    may: WRITERS,
+    ok: 201,
+    otherwise: 'hidden',
+  },
+  // drafts
+  'POST /api/drafts': {
+    request: async (scene) => ({
+      path: '/api/drafts',
+      body: { laboratoryId: scene.home.id, content: await fullSheet(scene) },
+    }),
+    may: WRITERS,
+    ok: 201,
+    otherwise: 403,
+  },
+  'GET /api/drafts/:draftId': {
+    request: async (scene) => ({ path: `/api/drafts/${(await makeDraft(scene)).id}` }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'PUT /api/drafts/:draftId': {
+    request: async (scene) => {
+      const { id, version, content } = await makeDraft(scene);
+      return { path: `/api/drafts/${id}`, body: { version, content } };
+    },
+    may: WRITERS,
+    ok: 200,
+    otherwise: 'hidden',
+  },
+  'POST /api/drafts/:draftId/state': {
+    request: async (scene) => {
+      const { id, version } = await makeDraft(scene);
+      return { path: `/api/drafts/${id}/state`, body: { version, state: 'discarded' } };
+    },
+    may: [...WRITERS, 'signatory'],
+    ok: 200,
+    otherwise: 'hidden',
+  },
+  'POST /api/drafts/:draftId/issue': {
+    request: async (scene, walker) => {
+      const { id, version } = await makeDraft(scene);
+      return { path: `/api/drafts/${id}/issue`, body: { version, password: scene.person(walker).password } };
+    },
+    may: ['signatory'],
+    ok: 201,
+    otherwise: 'hidden',
+  },
+  'GET /api/references': {
+    request: ({ home, referenceNo }) => ({
+      path: '/api/references',
+      query: { laboratory: home.id, q: referenceNo, quantity: 'conventional mass' },
+    }),
+    may: AT_HOME,
+    ok: 200,
+    otherwise: 403,
+  },
+  // calibrations
+  'GET /api/calibrations': {
+    request: fixed('/api/calibrations', { sort: 'issuedOn', limit: '20' }),
+    may: SIGNED_IN,
+    ok: 200,
+    otherwise: 403,
+  },
+  'GET /api/calibrations/:revisionId': {
+    request: ({ revisionId }) => ({ path: `/api/calibrations/${revisionId}` }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'POST /api/calibrations/:revisionId/withdraw': {
+    request: async (scene) => ({
+      path: `/api/calibrations/${(await looseCalibration(scene)).revisionId}/withdraw`,
+      body: { reason: 'The balance was not level', effectiveOn: '2024-09-01' },
+    }),
+    may: ['signatory'],
+    ok: 200,
+    otherwise: 'hidden',
+  },
 };
-
-// The rows of standards and calibrations use these.
-export const PENDING = { AT_HOME, freeRegistryNo, fullSheet, looseCalibration };
