@@ -23,13 +23,15 @@ export function randomNetwork(seed: number, size = 12): Network {
       links.push({ child: `v${child}`, parent: `s${pick(3)}`, sensitivity: signed() });
     }
   }
-  const shuffled = [...links].sort(() => random() - 0.5);
-  return { values, sources, groups: randomGroups(size, random), links: shuffled };
+  return { values, sources, groups: randomGroups(size, random), links: shuffled(links, random) };
 }
 
 /** Two groups over scattered members; A A' is a covariance whatever A is, with entries of both signs. */
 function randomGroups(size: number, random: () => number): Network['groups'] {
-  const ids = Array.from({ length: size }, (_, i) => `v${i}`).sort(() => random() - 0.5);
+  const ids = shuffled(
+    Array.from({ length: size }, (_, i) => `v${i}`),
+    random,
+  );
   return [ids.slice(0, 3), ids.slice(3, 5)].map((members) => {
     const factor = members.map(() => members.map(() => random() * 2 - 1));
     const covariance = members.map((_, i) =>
@@ -37,4 +39,13 @@ function randomGroups(size: number, random: () => number): Network['groups'] {
     );
     return { members, covariance };
   });
+}
+
+function shuffled<T>(items: readonly T[], random: () => number): T[] {
+  const mixed = [...items];
+  for (let last = mixed.length - 1; last > 0; last -= 1) {
+    const other = Math.floor(random() * (last + 1));
+    [mixed[last], mixed[other]] = [mixed[other]!, mixed[last]!];
+  }
+  return mixed;
 }
