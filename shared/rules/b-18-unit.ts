@@ -9,6 +9,9 @@ import { cannotBeJudged, doesNotApply, fails, holds, type ValueRule } from './ru
 const FAR_ABOVE = 10 ** 2.5;
 const FAR_BELOW = 0.01;
 
+/** U of ordinary work at the best of the scope, in multiples of the best capability. */
+const USUAL = [0.5, 10] as const;
+
 /**
  * Is the unit right? Asked of conventional mass where deviation and U together stand a factor of 1000 from the
  * weight's history, or, without history, from the class limit and the issuer's best capability.
@@ -64,9 +67,10 @@ export function isUnitQuestioned(value: ValueFacts): boolean {
   const { earlier, later } = splitHistory(value);
   const times = timesBest(value);
   if (value.history.length > 0) {
-    // A slip upwards leaves at least 1000 times the best capability: less is another laboratory's larger U.
+    // A slip upwards leaves at least 1000 times the best capability, and hardly one downwards about that capability:
+    // what is between them is another laboratory's larger U, or the value after a slip.
     const isRise = value.history.every((other) => (statedU(other) ?? 0) < statedU(value)!);
-    const isOrdinary = isRise && times !== null && times < FAR_ABOVE;
+    const isOrdinary = times !== null && (isRise ? times < FAR_ABOVE : times > USUAL[0] && times < USUAL[1]);
     return !isOrdinary && isUnitOdd(value, earlier, later);
   }
   const mpe = mpeOf(value)?.toNumber() ?? null;

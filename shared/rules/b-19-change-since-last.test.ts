@@ -86,3 +86,16 @@ it('cannot be judged where U is not stated, and names the certificate', () => {
   expect(judge('0.0002', [past('0.0002')], { expandedU: null }).text).toContain('RL-2025-031 states no U');
   expect(judge('0.0002', [past('0.0002', 2023, { expandedU: null })]).text).toContain('RL-2023 states no U');
 });
+
+it('does not compare with a value that was exchanged with the duplicate', () => {
+  const partner = {
+    registryNo: 'MI 0008',
+    marking: '1 kg*',
+    result: historyFacts({ uid: 'partner', deviation: '0.0012' }),
+    history: [past('0.0002', 2023), past('0.00121', 2027)],
+  };
+  const history = [past('0.0012', 2023), past('0.00021', 2027)];
+  expect(judge('0.0002', history, { duplicates: [partner] }).sentence).toBe('first');
+  const elsewhere = { ...partner, history: [past('0.00121', 2027)] };
+  expect(judge('0.0002', history, { duplicates: [elsewhere] }).outcome).toBe('fails');
+});

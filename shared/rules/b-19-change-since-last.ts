@@ -3,7 +3,14 @@ import { isUnitQuestioned } from './b-18-unit.ts';
 import { dateText } from './days.ts';
 import { mpeOf } from './mpe.ts';
 import { certificateText, deviationOf, ratioText, statedU, uOfDifference, valueText } from './numbers.ts';
-import { CLEAR_CHANGE, isSignOdd, isSwapOdd, isUnitOdd, splitHistory } from './odd-one-out.ts';
+import {
+  CLEAR_CHANGE,
+  isExchanged,
+  isSignOdd,
+  isUnitOdd,
+  splitHistory,
+  wasExchanged,
+} from './odd-one-out.ts';
 import { cannotBeJudged, doesNotApply, fails, holds, type ValueRule } from './rule.ts';
 
 /**
@@ -72,11 +79,11 @@ function isAskedElsewhere(value: ValueFacts): boolean {
   return (
     isSignOdd(value, earlier, later) ||
     isUnitQuestioned(value) ||
-    value.duplicates.some((duplicate) => isSwapOdd(value, duplicate))
+    value.duplicates.some((duplicate) => isExchanged(value, duplicate))
   );
 }
 
-/** Earlier values, newest first, without those whose own sign or unit is the odd one. */
+/** Earlier values, newest first, without those whose own sign, unit or identity is the odd one. */
 function comparable(value: ValueFacts): HistoryFacts[] {
   const everything = [...value.history, value];
   return splitHistory(value)
@@ -84,7 +91,9 @@ function comparable(value: ValueFacts): HistoryFacts[] {
       const others = everything.filter((other) => other.uid !== past.uid);
       const earlier = others.filter((other) => other.performedEnd <= past.performedEnd);
       const later = others.filter((other) => other.performedEnd > past.performedEnd);
-      return !isSignOdd(past, earlier, later) && !isUnitOdd(past, earlier, later);
+      return (
+        !isSignOdd(past, earlier, later) && !isUnitOdd(past, earlier, later) && !wasExchanged(value, past)
+      );
     })
     .reverse();
 }

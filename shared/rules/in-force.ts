@@ -12,7 +12,7 @@ import type { Assertion, EndFacts, RecognitionFacts } from './facts.ts';
 export function rowInForce<T extends Assertion>(rows: readonly T[], day: string, knownBy: string): T | null {
   const covering = rows
     .filter((row) => row.validFrom <= day && (row.validTo === null || day <= row.validTo))
-    .sort((a, b) => (a.recordedAt < b.recordedAt ? -1 : a.recordedAt > b.recordedAt ? 1 : 0));
+    .sort((a, b) => (a.recordedAt === b.recordedAt ? 0 : a.recordedAt < b.recordedAt ? -1 : 1));
   const knownThen = covering.filter((row) => row.recordedAt <= endOfDay(knownBy));
   if (knownThen.length > 0) return knownThen.at(-1)!;
   const firstEntered = covering[0]?.recordedAt.slice(0, 10);

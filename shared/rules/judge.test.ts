@@ -43,7 +43,9 @@ describe('judgeChain', () => {
     const sentences = new Map(rules.map((rule) => [rule.id, rule.sentences]));
     for (const check of checks) {
       expect(ChainCheck.parse(check)).toEqual(check);
-      expect(fillSentence(sentences.get(check.rule)![check.sentence]!, check.parameters)).toMatch(/\.$|\?$/);
+      expect(fillSentence(sentences.get(check.rule)?.[check.sentence ?? ''] ?? '', check.parameters)).toMatch(
+        /\.$|\?$/,
+      );
     }
     const keys = checks.map((check) => JSON.stringify([check.rule, check.subject, check.verdict]));
     expect(new Set(keys).size).toBe(keys.length);

@@ -2,7 +2,7 @@ import type { z } from 'zod';
 import type { ChainCheck, ChainLink, ChainRule } from '#shared/contracts/chains.ts';
 import type { ChainFacts, LinkFacts, Question, ValueFacts } from './facts.ts';
 import { RULES, rulesInWords } from './rule-set.ts';
-import type { Finding, Rule, Severity, VerdictName } from './rule.ts';
+import type { Finding, RuleHead, Severity, VerdictName } from './rule.ts';
 
 export type Check = z.infer<typeof ChainCheck>;
 export type Standing = z.infer<typeof ChainLink>['conduct'];
@@ -23,6 +23,9 @@ export interface ChainJudgement {
 }
 
 const LASTING = new Set(RULES.filter((rule) => rule.isLasting).map((rule) => rule.id));
+const LINK_RULES = RULES.filter((rule) => rule.scope === 'link');
+const VALUE_RULES = RULES.filter((rule) => rule.scope === 'value');
+const CHAIN_RULES = RULES.filter((rule) => rule.scope === 'chain');
 
 /** Runs every rule over a chain. A link that only informs is not judged by link rules: nothing flows through it. */
 export function judgeChain(chain: ChainFacts): ChainJudgement {
@@ -31,9 +34,7 @@ export function judgeChain(chain: ChainFacts): ChainJudgement {
   const checks = [
     ...links.flatMap((link) => judgeLink(link, question)),
     ...chain.values.flatMap((value) => judgeValue(value, question)),
-    ...checksOf('chain', { type: 'chain' }, (rule, verdict) =>
-      rule.scope === 'chain' ? rule.judge(chain, question, verdict) : null,
-    ),
+    ...checksOf(CHAIN_RULES, { type: 'chain' }, chain, question),
   ];
   return { checks, links: standingsOf(chain, checks), rules: rulesInWords(question.day) };
 }
@@ -41,16 +42,12 @@ export function judgeChain(chain: ChainFacts): ChainJudgement {
 /** The checks of one link: for a chain, and for a draft whose reference has just been chosen. */
 export function judgeLink(link: LinkFacts, question: Question): Check[] {
   const subject = { type: 'link', childUid: link.child.uid, parentUid: link.parent.uid } as const;
-  return checksOf('link', subject, (rule, verdict) =>
-    rule.scope === 'link' ? rule.judge(link, question, verdict) : null,
-  );
+  return checksOf(LINK_RULES, subject, link, question);
 }
 
 /** The checks of one value: for a chain, and for a line of a draft. */
 export function judgeValue(value: ValueFacts, question: Question): Check[] {
-  return checksOf('value', { type: 'value', uid: value.uid }, (rule, verdict) =>
-    rule.scope === 'value' ? rule.judge(value, question, verdict) : null,
-  );
+  return checksOf(VALUE_RULES, { type: 'value', uid: value.uid }, value, question);
 }
 
 const GRAVE: readonly Severity[] = ['block', 'critical', 'major'];
@@ -70,17 +67,21 @@ export function standingOf(checks: readonly Check[]): Standing {
   return isOpen ? 'not judged' : 'sound';
 }
 
-function checksOf(
-  scope: Rule['scope'],
+type RuleAbout<Facts> = RuleHead & {
+  judge(facts: Facts, question: Question, verdict: VerdictName): Finding;
+};
+
+function checksOf<Facts>(
+  rules: readonly RuleAbout<Facts>[],
   subject: Check['subject'],
-  find: (rule: Rule, verdict: VerdictName) => Finding | null,
+  facts: Facts,
+  question: Question,
 ): Check[] {
-  return RULES.filter((rule) => rule.scope === scope).flatMap((rule) =>
-    rule.verdicts.flatMap((verdict) => {
-      const finding = find(rule, verdict);
-      if (finding === null) return [];
+  return rules.flatMap((rule) =>
+    rule.verdicts.map((verdict) => {
+      const finding = rule.judge(facts, question, verdict);
       const { outcome, sentence, parameters, severity = rule.severity } = finding;
-      return [{ rule: rule.id, subject, verdict, outcome, severity, parameters, sentence }];
+      return { rule: rule.id, subject, verdict, outcome, severity, parameters, sentence };
     }),
   );
 }

@@ -1,5 +1,5 @@
-import { deviationOf, halfDigit, statedU, uOfDifference } from './numbers.ts';
-import type { DuplicateFacts, HistoryFacts, ResultFacts, ValueFacts } from './facts.ts';
+import { deviationOf, statedU, uOfDifference } from './numbers.ts';
+import type { DatesFacts, DuplicateFacts, HistoryFacts, ResultFacts, ValueFacts } from './facts.ts';
 
 /*
  * Which of several values of one weight is the odd one? A single comparison cannot say: the value after a slip
@@ -71,19 +71,21 @@ const HALF_DECADE = Math.sqrt(10);
 const ORDINARY = THOUSAND / HALF_DECADE ** 3;
 
 /**
- * Whether U and deviation both stand a factor of 1000 from another value, up or down. The deviation does if its ratio
- * is near 1000, or if it fits the other only after the factor is taken out.
+ * Whether U and deviation both stand a factor of 1000 from another value, up or down. Upwards the deviation does if
+ * its ratio is near 1000, or if it fits the other only after the factor is taken out; downwards, where a deviation
+ * near zero fits anything, if less than a hundredth of the other is left.
  */
 export function unitLikeness(value: ResultFacts, other: ResultFacts): Likeness {
   const [u, uOther] = [statedU(value), statedU(other)];
   if (u === null || uOther === null) return 'undecided';
   if (u / uOther < ORDINARY && uOther / u < ORDINARY) return 'agrees';
-  const factor = u > uOther ? THOUSAND : 1 / THOUSAND;
-  if (!isNear(u / uOther / factor)) return 'undecided';
+  const isUp = u > uOther;
+  if (!isNear(isUp ? u / uOther / THOUSAND : uOther / u / THOUSAND)) return 'undecided';
   const [a, b] = [deviationOf(value), deviationOf(other)];
-  const room = CLEAR_CHANGE * 2 * Math.hypot(u / factor, uOther) + halfDigit(value).toNumber() / factor;
-  const fitsOnlyAfter = Math.abs(a / factor - b) <= room && Math.abs(a - b) > room;
-  return isNear(a / b / factor) || fitsOnlyAfter ? 'contradicts' : 'undecided';
+  if (!isUp) return Math.abs(a) * 100 < Math.abs(b) ? 'contradicts' : 'undecided';
+  const room = CLEAR_CHANGE * 2 * Math.hypot(u / THOUSAND, uOther);
+  const fitsOnlyAfter = Math.abs(a / THOUSAND - b) <= room && Math.abs(a - b) > room;
+  return isNear(a / b / THOUSAND) || fitsOnlyAfter ? 'contradicts' : 'undecided';
 }
 
 /** Whether the unit of a value is the odd one in the weight's history (B-18). */
@@ -113,26 +115,70 @@ export function isSwapVisible(value: ResultFacts, duplicate: ResultFacts): boole
   return apart >= SWAP_VISIBLE * 2 * Math.max(u, uDuplicate);
 }
 
+/** A result with its day, its weight's other values, and the same of the duplicate on the same certificate. */
+interface Pair {
+  own: { result: ResultFacts; others: readonly HistoryFacts[] };
+  duplicate: { result: ResultFacts; others: readonly HistoryFacts[] };
+  performedEnd: string;
+}
+
 /**
  * Whether the results of two duplicates are the odd ones because each fits the other's history and neither its own
  * (X-01). Both crossings have to show.
  */
-export function isSwapOdd(value: ValueFacts, duplicate: DuplicateFacts): boolean {
-  if (isSwapVisible(value, duplicate.result) !== true) return false;
-  const crosses = (result: ResultFacts, own: HistoryFacts[], others: HistoryFacts[]): boolean => {
-    const agreeing = own.filter((past) => fits(result, past) === true).map((): Likeness => 'agrees');
-    const crossing = (list: HistoryFacts[]) =>
-      list.filter((past) => fits(result, past) === true).map((): Likeness => 'contradicts');
-    const isEarlier = (past: HistoryFacts) => past.performedEnd <= value.performedEnd;
+export function isSwapOdd({ own, duplicate, performedEnd }: Pair): boolean {
+  if (isSwapVisible(own.result, duplicate.result) !== true) return false;
+  const isEarlier = (past: HistoryFacts) => past.performedEnd <= performedEnd;
+  const crosses = (
+    result: ResultFacts,
+    others: readonly HistoryFacts[],
+    crossed: readonly HistoryFacts[],
+  ) => {
+    const fitting = (list: readonly HistoryFacts[], as: Likeness) =>
+      list.filter((past) => fits(result, past) === true).map(() => as);
+    const earlier = crossed.filter(isEarlier);
+    const later = crossed.filter((past) => !isEarlier(past));
     return isOddOne(
-      [...agreeing, ...crossing(others.filter(isEarlier))],
-      crossing(others.filter((past) => !isEarlier(past))),
+      [...fitting(others, 'agrees'), ...fitting(earlier, 'contradicts')],
+      fitting(later, 'contradicts'),
     );
   };
   return (
-    crosses(value, value.history, duplicate.history) &&
-    crosses(duplicate.result, duplicate.history, value.history)
+    crosses(own.result, own.others, duplicate.others) &&
+    crosses(duplicate.result, duplicate.others, own.others)
   );
+}
+
+/** Whether a value and one of its duplicates were exchanged. */
+export function isExchanged(value: ValueFacts, duplicate: DuplicateFacts): boolean {
+  return isSwapOdd({
+    own: { result: value, others: value.history },
+    duplicate: { result: duplicate.result, others: duplicate.history },
+    performedEnd: value.performedEnd,
+  });
+}
+
+/** Whether an earlier or later value of the weight was exchanged with a duplicate's on its own certificate. */
+export function wasExchanged(value: ValueFacts, past: HistoryFacts): boolean {
+  return value.duplicates.some(({ result, history }) => {
+    const partner = history.find((other) => other.certificateNo === past.certificateNo);
+    if (!partner) return false;
+    const others = value.history.filter((other) => other.uid !== past.uid);
+    const partners = history.filter((other) => other.uid !== partner.uid);
+    return isSwapOdd({
+      own: { result: past, others: [...others, { ...value, covariance: null }] },
+      duplicate: {
+        result: partner,
+        others: [...partners, { ...datesOf(value), ...result, covariance: null }],
+      },
+      performedEnd: past.performedEnd,
+    });
+  });
+}
+
+function datesOf(value: ValueFacts): DatesFacts {
+  const { performedBegin, performedEnd, issuedOn, datePrecision } = value;
+  return { performedBegin, performedEnd, issuedOn, datePrecision };
 }
 
 function isNear(ratio: number): boolean {

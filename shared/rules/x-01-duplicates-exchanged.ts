@@ -1,4 +1,4 @@
-import { isSwapOdd, isSwapVisible } from './odd-one-out.ts';
+import { isExchanged, isSwapVisible } from './odd-one-out.ts';
 import { certificateText, statedU, valueText } from './numbers.ts';
 import { cannotBeJudged, doesNotApply, fails, holds, type ValueRule } from './rule.ts';
 
@@ -26,7 +26,7 @@ export const duplicatesExchanged: ValueRule = {
       'The other values of {registryNo} and {duplicate} state no U to compare with.',
   },
   judge(value) {
-    const exchanged = value.duplicates.find((duplicate) => isSwapOdd(value, duplicate));
+    const exchanged = value.duplicates.find((duplicate) => isExchanged(value, duplicate));
     const visible = value.duplicates.find((duplicate) => isSwapVisible(value, duplicate.result) !== false);
     const duplicate = exchanged ?? visible ?? value.duplicates[0];
     const known = {
