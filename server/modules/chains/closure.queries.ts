@@ -1,6 +1,7 @@
 import type { Sequelize } from 'sequelize';
 import { groupBy } from '#shared/group-by.ts';
 import { readRows } from '#server/db/read.ts';
+import { plainDecimals } from './plain-decimals.ts';
 import type { StoredGroup, StoredLink, StoredSource, StoredSourceLink, StoredValue } from './stored.ts';
 
 /** Instants as the pure functions compare them: ISO 8601, UTC, microseconds. */
@@ -84,6 +85,7 @@ export async function storedValues(database: Sequelize, ids: number[]): Promise<
   const groups = new Map(members.map((member) => [member.valueId, member.groupId]));
   return values.map((row) => ({
     ...row,
+    ...plainDecimals(row),
     underAccreditation: Boolean(row.underAccreditation),
     unitConfirmed: Boolean(row.unitConfirmed),
     parents: (parents.get(row.id) ?? []).map(({ childId: _, ...link }) => link),

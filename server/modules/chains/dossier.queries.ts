@@ -1,3 +1,4 @@
+import { plainDecimals } from './plain-decimals.ts';
 import type { Sequelize } from 'sequelize';
 import { groupBy } from '#shared/group-by.ts';
 import { readRows } from '#server/db/read.ts';
@@ -105,6 +106,7 @@ export async function standardDossiers(database: Sequelize, ids: string[]): Prom
     ...standard,
     history: (historyOf.get(standard.standardId) ?? []).map((row) => ({
       ...row,
+      ...plainDecimals(row),
       ends: endsByValue.get(row.id) ?? [],
     })),
     epochs: epochsOf.get(standard.standardId) ?? [],

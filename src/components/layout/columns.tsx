@@ -13,14 +13,23 @@ interface TwoColumnsProps {
   side: ReactNode;
   /** @default 'normal' */
   sideWidth?: keyof typeof SIDES;
+  /** Below 640 px the side comes first: where the work is a drawing and the side says the same in words. */
+  isSideFirstOnPhones?: boolean;
 }
 
 /** The work at the left, what it means at the right; one below the other on narrow screens. */
-export function TwoColumns({ children, side, sideWidth = 'normal' }: TwoColumnsProps) {
+export function TwoColumns({
+  children,
+  side,
+  sideWidth = 'normal',
+  isSideFirstOnPhones = false,
+}: TwoColumnsProps) {
   return (
     <div className={`grid min-w-0 grid-cols-1 gap-x-8 gap-y-6 ${SIDES[sideWidth]}`}>
       <div className="flex min-w-0 flex-col gap-6">{children}</div>
-      <div className="flex min-w-0 flex-col gap-6">{side}</div>
+      <div className={`flex min-w-0 flex-col gap-6 ${isSideFirstOnPhones ? 'max-sm:-order-1' : ''}`}>
+        {side}
+      </div>
     </div>
   );
 }

@@ -62,7 +62,7 @@ export function ChainScreen({ chain, question, onChange, actionsFor, actions }: 
     >
       <QuestionBar question={question} answered={chain.question} onChange={onChange} />
       <TwoColumns
-        sideWidth="normal"
+        isSideFirstOnPhones
         side={
           <>
             <Verdict chain={chain} question={question} />
@@ -74,7 +74,7 @@ export function ChainScreen({ chain, question, onChange, actionsFor, actions }: 
         }
       >
         <Section title={<span className="sr-only">The chain, drawn</span>}>
-          <div className="h-[clamp(26rem,72dvh,60rem)] border-y border-rule">
+          <div className="h-[clamp(26rem,76dvh,64rem)] border-y border-rule">
             <Suspense fallback={<Waiting>Fetching the drawing</Waiting>}>
               <ChainGraph chain={chain} question={question} onSelect={select} />
             </Suspense>

@@ -28,10 +28,13 @@ function CheckItem({ chain, check }: { chain: ChainResponse; check: Check }) {
       <div className="flex flex-wrap items-baseline justify-between gap-x-3">
         <StateMark state={stateOfOutcome(check.outcome, check.severity)}>{check.outcome}</StateMark>
         <span className="text-sm text-ink-2">
-          <span className="font-mono">{check.rule}</span> · {check.verdict} · {rule.clause}
+          <span className="font-mono">{check.rule}</span> · {check.verdict === 'conduct' ? 'at use' : 'today'}
         </span>
       </div>
       <p>{template === undefined ? rule.title : fillSentence(template, check.parameters)}</p>
+      <p className="text-xs text-ink-3">
+        {rule.clause === 'none' ? rule.edition : `${rule.edition}: ${rule.clause}`}
+      </p>
     </li>
   );
 }

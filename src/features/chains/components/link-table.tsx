@@ -38,7 +38,9 @@ export function LinkTable({ chain, question, onSelect }: LinkTableProps) {
               </RowButton>
             </Cell>
             <Cell>{link.usedEnd ? <DateText value={link.usedEnd} /> : ''}</Cell>
-            <Cell align="right">{flowText(link, decimalMark)}</Cell>
+            <Cell align="right" className="whitespace-nowrap">
+              {flowText(link, decimalMark)}
+            </Cell>
             <Cell>
               {link.role === 'reference' ? (
                 <StateMark state={link[question.verdict]} />

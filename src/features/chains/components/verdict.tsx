@@ -3,6 +3,7 @@ import { fillSentence } from '#shared/rules/sentence.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import type { ChainQuestion } from '../question.ts';
 import { CheckList } from './check-list.tsx';
+import { namesOf } from './link-table.tsx';
 
 const LONGEST_LIST = 3;
 
@@ -44,14 +45,15 @@ function headline(counts: ChainResponse['summary']['today'], links: number): str
 /** Each failing check once in words; a value's failure shows at the link it made. */
 function failingSentences(chain: ChainResponse, question: ChainQuestion): string[] {
   const rules = new Map(chain.rules.map((rule) => [rule.id, rule]));
+  const names = namesOf(chain);
   const sentences = chain.checks
     .filter((check) => check.outcome === 'fails' && check.subject.type !== 'chain')
     .filter((check) => check.verdict === question.verdict || question.verdict === 'today')
     .map((check) => {
       const rule = rules.get(check.rule)!;
-      return check.sentence === null
-        ? rule.title
-        : fillSentence(rule.sentences[check.sentence]!, check.parameters);
+      if (check.sentence !== null) return fillSentence(rule.sentences[check.sentence]!, check.parameters);
+      const uid = check.subject.type === 'value' ? check.subject.uid : chain.focusUid;
+      return `${names.get(uid)}: ${rule.title} (${check.rule}).`;
     });
   return [...new Set(sentences)];
 }

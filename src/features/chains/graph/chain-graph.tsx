@@ -1,6 +1,7 @@
 import { useMemo } from 'react';
 import ReactFlow, { Controls, type Edge, type EdgeTypes, type Node, type NodeTypes } from 'reactflow';
 import 'reactflow/dist/style.css';
+import './chain-graph.css';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { linkKey, type ChainQuestion } from '../question.ts';

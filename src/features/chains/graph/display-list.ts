@@ -48,7 +48,8 @@ export interface Ribbon {
 export interface DisplayList {
   width: number;
   height: number;
-  band: { width: number; height: number; text: string };
+  /** The definition in force when the roots were determined. */
+  band: { width: number; height: number; definition: ChainResponse['definition'] };
   plates: Plate[];
   ribbons: Ribbon[];
 }
@@ -84,7 +85,7 @@ export function displayList(
   return {
     width: placement.width,
     height: placement.height,
-    band: { width: placement.width, height: BAND.height, text: DEFINITIONS[chain.definition] },
+    band: { width: placement.width, height: BAND.height, definition: chain.definition },
     plates: chain.nodes.map((node) => ({
       id: node.uid,
       x: placeOf.get(node.uid)!.x,
@@ -112,13 +113,6 @@ export function displayList(
     }),
   };
 }
-
-/** The definition in force when the roots were determined; the constant is exact (26th CGPM, Resolution 1). */
-const DEFINITIONS: Record<ChainResponse['definition'], string> = {
-  'planck constant': 'The kilogram: h = 6.626 070 15 × 10⁻³⁴ J s, exactly',
-  'international prototype': 'The kilogram before 2019-05-20: the mass of the international prototype',
-  both: 'The kilogram: the international prototype before 2019-05-20, since then h = 6.626 070 15 × 10⁻³⁴ J s',
-};
 
 function stubOf(node: Node, isPlain: boolean): Stub | null {
   if (isPlain || node.type !== 'value' || node.share === null) return null;

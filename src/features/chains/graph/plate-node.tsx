@@ -64,7 +64,7 @@ function ValueFace({ plate, node }: { plate: Plate; node: Extract<Plate['node'],
         </StateMark>
       </div>
       <div className="truncate text-xs text-ink-2">
-        {node.issuer.name} · <DateText value={datedTo(node.performedEnd, node.datePrecision)} />
+        <DateText value={datedTo(node.performedEnd, node.datePrecision)} /> · {node.issuer.name}
       </div>
     </>
   );
