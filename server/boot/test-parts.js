@@ -53,7 +53,7 @@ async function vitest(project, env) {
     'run',
     '--project',
     project,
-    '--reporter=default',
+    '--reporter=dot',
     '--reporter=json',
     `--outputFile.json=${report}`,
   ];
