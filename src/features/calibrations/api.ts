@@ -1,0 +1,141 @@
+import {
+  infiniteQueryOptions,
+  queryOptions,
+  useMutation,
+  useQueryClient,
+  type UseMutationResult,
+} from '@tanstack/react-query';
+import type { z } from 'zod';
+import {
+  CalibrationListResponse,
+  CalibrationResponse,
+  DocumentResponse,
+  DraftResponse,
+  IssuedResponse,
+  ReferenceListResponse,
+  type DraftContent,
+  type ReferenceChoice,
+  type WithdrawBody,
+} from '#shared/contracts/calibrations.ts';
+import type { QuantityKind } from '#shared/contracts/common.ts';
+import { LaboratoryListResponse } from '#shared/contracts/network.ts';
+import { StandardListResponse, type StandardRow } from '#shared/contracts/standards.ts';
+import { get, post, put } from '#src/lib/api-client.ts';
+import type { ListSearch } from './list-search.ts';
+
+const ALL = ['calibrations'] as const;
+
+/** The list as the address asks for it, page after page by cursor. */
+export function calibrationListQuery({ pages: _pages, open: _open, ...asked }: ListSearch) {
+  return infiniteQueryOptions({
+    queryKey: [...ALL, 'list', asked],
+    queryFn: ({ pageParam, signal }) =>
+      get('/api/calibrations', CalibrationListResponse, { query: { ...asked, cursor: pageParam }, signal }),
+    initialPageParam: null as string | null,
+    getNextPageParam: (last) => last.nextCursor,
+  });
+}
+
+/** One issued calibration by its revision. */
+export function calibrationQuery(revisionId: string) {
+  return queryOptions({
+    queryKey: [...ALL, 'one', revisionId],
+    queryFn: ({ signal }) => get(`/api/calibrations/${revisionId}`, CalibrationResponse, { signal }),
+  });
+}
+
+/** A draft with its open points and checks as they are now. */
+export function draftQuery(draftId: string) {
+  return queryOptions({
+    queryKey: [...ALL, 'draft', draftId],
+    queryFn: ({ signal }) => get(`/api/drafts/${draftId}`, DraftResponse, { signal }),
+  });
+}
+
+/** Every laboratory, for choosing an issuer or a filter. */
+export const laboratoriesQuery = queryOptions({
+  queryKey: ['laboratories', 'today'],
+  queryFn: ({ signal }) => get('/api/laboratories', LaboratoryListResponse, { signal }),
+});
+
+/** Weights of one laboratory by part of a number or marking. @param limit how many at most, up to 200 */
+export async function findStandards(
+  laboratoryId: string,
+  text: string,
+  limit: number,
+  signal?: AbortSignal,
+): Promise<StandardRow[]> {
+  const query = { laboratory: laboratoryId, q: text, limit };
+  return (await get('/api/standards', StandardListResponse, { query, signal })).standards;
+}
+
+/** Values a result may name as its reference. */
+export async function findReferences(
+  asked: { laboratory: string; q: string; quantity?: QuantityKind },
+  signal?: AbortSignal,
+): Promise<ReferenceChoice[]> {
+  return (await get('/api/references', ReferenceListResponse, { query: asked, signal })).references;
+}
+
+/** Begins a draft. @throws ApiProblem */
+export function createDraft(laboratoryId: string, content: DraftContent): Promise<DraftResponse> {
+  return post('/api/drafts', { laboratoryId, content }, DraftResponse);
+}
+
+/** Keeps what was typed as the next version. @throws ApiProblem `stale` with `current` */
+export function saveDraft(draftId: string, version: number, content: DraftContent): Promise<DraftResponse> {
+  return put(`/api/drafts/${draftId}`, { version, content }, DraftResponse);
+}
+
+/** Keeps a file for a laboratory. */
+export function useAddDocument(laboratoryId: string): Mutation<z.infer<typeof DocumentResponse>, File> {
+  return useMutation({
+    mutationFn: (file) =>
+      post('/api/documents', file, DocumentResponse, {
+        query: { laboratory: laboratoryId, name: file.name },
+      }),
+  });
+}
+
+/** Sends a draft to sign, takes it back or discards it. */
+export function useSetDraftState(
+  draftId: string,
+): Mutation<DraftResponse, { version: number; state: 'open' | 'sent to sign' | 'discarded' }> {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (body) => post(`/api/drafts/${draftId}/state`, body, DraftResponse),
+    onSuccess: (draft) => {
+      queries.setQueryData(draftQuery(draftId).queryKey, draft);
+      void queries.invalidateQueries({ queryKey: [...ALL, 'list'] });
+      void queries.invalidateQueries({ queryKey: ['desk'] });
+    },
+  });
+}
+
+/** Issues a draft under the signatory's password. Everything that shows values is read anew. */
+export function useIssueDraft(
+  draftId: string,
+): Mutation<IssuedResponse, { version: number; password: string }> {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (body) => post(`/api/drafts/${draftId}/issue`, body, IssuedResponse),
+    onSuccess: () => {
+      queries.removeQueries({ queryKey: draftQuery(draftId).queryKey });
+      void queries.invalidateQueries();
+    },
+  });
+}
+
+/** Withdraws a calibration. Everything that shows values is read anew. */
+export function useWithdraw(revisionId: string): Mutation<CalibrationResponse, z.infer<typeof WithdrawBody>> {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (body) => post(`/api/calibrations/${revisionId}/withdraw`, body, CalibrationResponse),
+    onSuccess: (calibration) => {
+      queries.setQueryData(calibrationQuery(revisionId).queryKey, calibration);
+      void queries.invalidateQueries();
+    },
+  });
+}
+
+type Mutation<Answer, Asked> = UseMutationResult<Answer, Error, Asked>;

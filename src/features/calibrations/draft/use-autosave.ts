@@ -1,0 +1,114 @@
+import { useQueryClient } from '@tanstack/react-query';
+import { useCallback, useEffect, useRef, useState } from 'react';
+import type { UseFormReturn } from 'react-hook-form';
+import type { DraftResponse } from '#shared/contracts/calibrations.ts';
+import { useLostSince } from '#src/lib/connection-state.ts';
+import { useLocalDraft } from '#src/lib/local-draft.ts';
+import { usePerson } from '#src/lib/session.ts';
+import { createDraft, draftQuery, saveDraft } from '../api.ts';
+import { makeAutosave, type Autosave, type SaveState } from './autosave.ts';
+import { contentOf, isSameContent, type DraftValues } from './draft-values.ts';
+
+interface Saving {
+  state: SaveState;
+  /** When what the form was filled with was typed, where it had not reached the server; else null. */
+  restoredFrom: number | null;
+  /** Saves at once; says whether the server now has every entry. */
+  saveNow: () => Promise<boolean>;
+  /** Takes these values as what should stand, upon the version the server has. */
+  settle: (theirs: DraftResponse, values: DraftValues) => void;
+  /** Forgets what this browser keeps of the draft. */
+  forget: () => void;
+}
+
+/**
+ * Keeps a draft: in this browser at once, on the server when the typing pauses. The first change creates it.
+ * @param draft what the server has; null for a draft that does not exist yet
+ * @param laboratoryId whose draft a new one becomes
+ */
+export function useAutosave(
+  form: UseFormReturn<DraftValues, unknown, DraftValues>,
+  draft: DraftResponse | null,
+  laboratoryId: string,
+  onCreated: (draft: DraftResponse) => void,
+): Saving {
+  const queries = useQueryClient();
+  const { accountId } = usePerson();
+  const [state, setState] = useState<SaveState>({ kind: 'untouched' });
+  const { restoredFrom, clear } = useLocalDraft(accountId, `calibration:${draft?.id ?? 'new'}`, form);
+  const latest = useRef({ draft, laboratoryId, onCreated, clear });
+  useEffect(() => {
+    latest.current = { draft, laboratoryId, onCreated, clear };
+  });
+  const saver = useRef<Autosave | null>(null);
+  /** Forgets the copy kept under the name "new" once the draft has one of its own. */
+  const clearNew = useRef<(() => void) | null>(null);
+
+  useEffect(() => {
+    let id = latest.current.draft?.id ?? null;
+    let isLeft = false;
+    const read = () => contentOf(form.getValues());
+    const autosave = makeAutosave({
+      read,
+      // A sheet that was only looked at makes no draft.
+      saved: latest.current.draft?.content ?? contentOf(form.formState.defaultValues as DraftValues),
+      send: async (content) => {
+        const isNew = id === null;
+        const answer =
+          id === null
+            ? await createDraft(latest.current.laboratoryId, content)
+            : await saveDraft(id, form.getValues('version'), content);
+        id = answer.id;
+        form.setValue('version', answer.version);
+        queries.setQueryData(draftQuery(answer.id).queryKey, answer);
+        void queries.invalidateQueries({ queryKey: ['calibrations', 'list'] });
+        void queries.invalidateQueries({ queryKey: ['desk'] });
+        if (isNew) {
+          clearNew.current = latest.current.clear;
+          if (!isLeft) latest.current.onCreated(answer);
+        }
+        if (isSameContent(read(), content)) latest.current.clear();
+        return answer;
+      },
+      onState: setState,
+    });
+    saver.current = autosave;
+    const unsubscribe = form.subscribe({ formState: { values: true }, callback: autosave.changed });
+    // What was restored from this browser goes to the server now.
+    autosave.changed();
+    return () => {
+      isLeft = true;
+      unsubscribe();
+      autosave.stop();
+    };
+  }, [form, queries]);
+
+  useEffect(() => {
+    clearNew.current?.();
+    clearNew.current = null;
+  }, [draft?.id]);
+
+  useEffect(() => {
+    // Somebody else's version arrived while nothing was being typed here.
+    if (!draft || draft.version <= form.getValues('version') || !saver.current?.isClean()) return;
+    form.reset({ ...draft.content, version: draft.version });
+    saver.current?.settle(draft.content);
+  }, [draft, form]);
+
+  const lostSince = useLostSince();
+  useEffect(() => {
+    if (lostSince === null) void saver.current?.now();
+  }, [lostSince]);
+
+  const settle = useCallback(
+    (theirs: DraftResponse, values: DraftValues) => {
+      saver.current?.settle(theirs.content);
+      form.reset({ ...values, version: theirs.version });
+      saver.current?.changed();
+      queries.setQueryData(draftQuery(theirs.id).queryKey, theirs);
+    },
+    [form, queries],
+  );
+  const saveNow = useCallback(() => saver.current?.now() ?? Promise.resolve(false), []);
+  return { state, restoredFrom, saveNow, settle, forget: clear };
+}
