@@ -95,7 +95,7 @@ function lineProblems(
         field: `${path}.standardId`,
         message:
           'This weight is not in the register as one of the issuer or of the laboratory that enters it.',
-        received: standard?.registryNo ?? line.standardId,
+        received: line.standardId,
         expected: 'a weight registered by one of the two',
       },
     ];

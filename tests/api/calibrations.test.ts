@@ -1,0 +1,248 @@
+import type supertest from 'supertest';
+import { beforeAll, describe, expect, it } from 'vitest';
+import { readRow } from '#server/db/read.ts';
+import { issueCalibration, reviseCalibration } from '#server/modules/calibrations/index.ts';
+import { assertFact } from '#server/modules/standards/index.ts';
+import {
+  inputOf,
+  lineOf,
+  makeCalibration,
+  makeStandard,
+  useOf,
+} from '#tests/support/calibration-factories.ts';
+import { makeLaboratory, makePerson } from '#tests/support/factories.ts';
+import { testApp } from '#tests/support/test-app.ts';
+
+const app = await testApp();
+const NOBODY = '01890000-0000-7000-8000-000000000000';
+
+interface Place {
+  id: string;
+  agent: supertest.Agent;
+  signatory: supertest.Agent;
+}
+
+async function place(): Promise<Place> {
+  const { id } = await makeLaboratory(app);
+  return {
+    id,
+    agent: await app.signIn(await makePerson(app, 'metrologist', id)),
+    signatory: await app.signIn(await makePerson(app, 'signatory', id)),
+  };
+}
+
+let institute: Place;
+let holder: Place;
+let stranger: Place;
+let registrar: supertest.Agent;
+
+beforeAll(async () => {
+  [institute, holder, stranger] = [await place(), await place(), await place()];
+  registrar = await app.signIn(await makePerson(app, 'registrar'));
+});
+
+const certificates = (reply: supertest.Response): string[] =>
+  reply.body.calibrations.map((row: { certificateNo: string }) => row.certificateNo);
+
+describe('GET /api/calibrations', () => {
+  it('is refused without sign-in and for queries that make no sense', async () => {
+    expect((await app.request.get('/api/calibrations')).status).toBe(401);
+    for (const query of [{ sort: 'x' }, { state: 'x' }, { issuedFrom: '2024-13-01' }, { cursor: 'e30' }]) {
+      const reply = await holder.agent.get('/api/calibrations').query(query);
+      expect([reply.status, Object.keys(reply.body.fields)]).toEqual([400, Object.keys(query)]);
+    }
+  });
+
+  it('shows a laboratory what it issued, entered or holds, and nobody else', async () => {
+    const weight = await makeStandard(app, holder.id);
+    const issued = await makeCalibration(app, institute.id, '2024-01-10', [lineOf(weight.id)], {
+      registeredById: holder.id,
+      certificateNo: `V-${weight.registryNo}`,
+    });
+    const asked = { q: `v-${weight.registryNo.toLowerCase()}` };
+    for (const agent of [institute.agent, holder.agent, registrar]) {
+      const reply = await agent.get('/api/calibrations').query(asked);
+      expect(reply.body.calibrations).toMatchObject([
+        {
+          revisionId: issued.revisionId,
+          weights: 1,
+          firstRegistryNo: weight.registryNo,
+          state: 'in force',
+          issuer: { id: institute.id },
+        },
+      ]);
+    }
+    expect((await stranger.agent.get('/api/calibrations').query(asked)).body.count).toBe(0);
+    const byWeight = await holder.agent
+      .get('/api/calibrations')
+      .query({ q: weight.registryNo, laboratory: institute.id });
+    expect(byWeight.body.count).toBe(1);
+  });
+
+  it('walks every row once in each order; the latest revision, or those of a state', async () => {
+    const own = await place();
+    const weight = await makeStandard(app, own.id);
+    const days = ['2024-01-10', '2024-01-10', '2024-02-10', '2024-03-10', '2024-04-10'];
+    const inputs = days.map((day) => inputOf(own.id, day, [lineOf(weight.id)]));
+    const issued = [];
+    for (const input of inputs) issued.push(await issueCalibration(app.context(), input));
+    const revised = await reviseCalibration(app.context(), {
+      ...inputs[0]!,
+      calibrationId: issued[0]!.calibrationId,
+      issuedOn: '2024-05-01',
+      effectiveOn: '2024-05-01',
+      reason: 'Address corrected',
+    });
+    for (const sort of ['issuedOn', '-issuedOn', 'certificateNo', '-certificateNo']) {
+      const seen: { revisionId: string; issuedOn: string; certificateNo: string }[] = [];
+      let cursor: string | undefined;
+      do {
+        const reply: supertest.Response = await own.agent
+          .get('/api/calibrations')
+          .query({ sort, limit: 2, cursor });
+        expect(reply.body.count).toBe(5);
+        seen.push(...reply.body.calibrations);
+        cursor = reply.body.nextCursor ?? undefined;
+      } while (cursor);
+      expect(new Set(seen.map((row) => row.revisionId)).size).toBe(5);
+      expect(seen).toHaveLength(5);
+      const keys = seen.map((row) => (sort.endsWith('issuedOn') ? row.issuedOn : row.certificateNo));
+      expect(keys).toEqual(sort.startsWith('-') ? keys.toSorted().toReversed() : keys.toSorted());
+    }
+    const superseded = await own.agent.get('/api/calibrations').query({ state: 'superseded' });
+    expect(superseded.body.calibrations).toMatchObject([{ revisionId: issued[0]!.revisionId, revisionN: 1 }]);
+    const newest = await own.agent.get('/api/calibrations').query({ issuedFrom: '2024-04-11' });
+    expect(newest.body.calibrations).toMatchObject([{ revisionId: revised.revisionId, revisionN: 2 }]);
+    const inRange = await own.agent
+      .get('/api/calibrations')
+      .query({ issuedFrom: '2024-02-01', issuedTo: '2024-03-31', sort: 'issuedOn' });
+    expect(certificates(inRange)).toEqual([inputs[2]!.certificateNo, inputs[3]!.certificateNo]);
+  });
+
+  it('puts the open drafts of one’s laboratories on the first page', async () => {
+    const made = await holder.agent
+      .post('/api/drafts')
+      .send({ laboratoryId: holder.id, content: { certificateNo: 'half done', issuerId: institute.id } });
+    const reply = await holder.agent.get('/api/calibrations');
+    expect(reply.body.drafts).toMatchObject([
+      {
+        id: made.body.id,
+        certificateNo: 'half done',
+        lines: 0,
+        state: 'open',
+        laboratory: { id: holder.id },
+      },
+    ]);
+    expect(reply.body.drafts[0].issuerName).toMatch(/^Laboratory/);
+    expect(reply.body.abilities).toEqual({ 'calibration:draft': true });
+    expect((await stranger.agent.get('/api/calibrations')).body.drafts).toEqual([]);
+  });
+});
+
+describe('GET /api/calibrations/:revisionId', () => {
+  it('is refused without sign-in and unknown to strangers', async () => {
+    const weight = await makeStandard(app, holder.id);
+    const { revisionId } = await makeCalibration(app, holder.id, '2024-01-10', [lineOf(weight.id)]);
+    expect((await app.request.get(`/api/calibrations/${revisionId}`)).status).toBe(401);
+    expect((await stranger.agent.get(`/api/calibrations/${revisionId}`)).status).toBe(404);
+    expect((await holder.agent.get(`/api/calibrations/${NOBODY}`)).status).toBe(404);
+    expect((await holder.agent.get('/api/calibrations/x')).status).toBe(404);
+  });
+
+  it('shows each customer their own lines, and the budget to the issuer alone', async () => {
+    const [mine, theirs] = [await makeStandard(app, holder.id), await makeStandard(app, stranger.id)];
+    const top = await makeStandard(app, institute.id);
+    const root = await makeCalibration(app, institute.id, '2024-01-10', [lineOf(top.id)]);
+    const references = [useOf(root.valueUids[0]!, '2024-02-10')];
+    const components = [
+      {
+        name: 'repeatability',
+        evaluation: 'A' as const,
+        distribution: 'normal' as const,
+        standardUncertainty: 2e-4,
+        sensitivity: 1,
+      },
+    ];
+    const shared = await makeShared(mine.id, theirs.id, references, components);
+    const full = await institute.agent.get(`/api/calibrations/${shared}`);
+    expect(full.body.lines).toHaveLength(2);
+    expect(full.body.lines[0].components).toEqual([
+      { name: 'repeatability', evaluation: 'A', standardUncertainty: 2e-4, sensitivity: 1 },
+    ]);
+    const part = await holder.agent.get(`/api/calibrations/${shared}`);
+    expect(part.body.lines).toMatchObject([
+      {
+        standard: { id: mine.id },
+        components: null,
+        references: [{ valueUid: root.valueUids[0], registryNo: top.registryNo, state: 'in force' }],
+      },
+    ]);
+    expect(part.body.calibration.weights).toBe(1);
+    expect(JSON.stringify(part.body)).not.toContain(theirs.registryNo);
+    expect(part.body.abilities).toEqual({ 'calibration:read': true, 'calibration:withdraw': false });
+  });
+
+  /** Two customers' weights in the institute's custody, on one certificate. */
+  async function makeShared(
+    mine: string,
+    theirs: string,
+    references: ReturnType<typeof useOf>[],
+    components: object[],
+  ): Promise<string> {
+    for (const standardId of [mine, theirs]) {
+      await assertFact(app.context(), {
+        standardId,
+        kind: 'custodian',
+        laboratoryId: institute.id,
+        validFrom: '2024-01-01',
+      });
+    }
+    const issued = await makeCalibration(app, institute.id, '2024-02-10', [
+      lineOf(mine, { references, components: components as never }),
+      lineOf(theirs, { references, components: components as never }),
+    ]);
+    return issued.revisionId;
+  }
+});
+
+describe('POST /api/calibrations/:revisionId/withdraw', () => {
+  const body = { reason: 'The balance was found faulty', effectiveOn: '2024-02-01' };
+
+  it('is refused without sign-in, malformed, to those who do not sign, and to strangers', async () => {
+    const weight = await makeStandard(app, holder.id);
+    const { revisionId } = await makeCalibration(app, holder.id, '2024-01-10', [lineOf(weight.id)]);
+    const path = `/api/calibrations/${revisionId}/withdraw`;
+    expect((await app.request.post(path).send(body)).status).toBe(401);
+    const short = await holder.signatory.post(path).send({ ...body, reason: 'x' });
+    expect([short.status, Object.keys(short.body.fields)]).toEqual([400, ['reason']]);
+    expect((await holder.agent.post(path).send(body)).status).toBe(403);
+    expect((await registrar.post(path).send(body)).status).toBe(403);
+    expect((await stranger.signatory.post(path).send(body)).status).toBe(404);
+    const early = await holder.signatory.post(path).send({ ...body, effectiveOn: '2023-12-31' });
+    expect([early.status, Object.keys(early.body.fields)]).toEqual([422, ['effectiveOn']]);
+  });
+
+  it('ends every value from the day on, once, and leaves its act', async () => {
+    const weight = await makeStandard(app, holder.id);
+    const { revisionId, calibrationId } = await makeCalibration(app, holder.id, '2024-01-10', [
+      lineOf(weight.id),
+    ]);
+    const path = `/api/calibrations/${revisionId}/withdraw`;
+    const reply = await holder.signatory.post(path).send(body);
+    expect(reply.status).toBe(200);
+    expect(reply.body).toMatchObject({
+      calibration: { state: 'withdrawn' },
+      lines: [{ state: 'withdrawn', stateSince: '2024-02-01' }],
+    });
+    expect((await holder.signatory.post(path).send(body)).status).toBe(409);
+    const sheet = await holder.agent.get(`/api/standards/${weight.id}`);
+    expect(sheet.body.standard.value).toBeNull();
+    expect(sheet.body.history).toMatchObject([{ state: 'withdrawn', stateSince: '2024-02-01' }]);
+    const act = await readRow(
+      app.database,
+      "SELECT seq FROM act WHERE kind = 'calibration.withdraw' AND subject_id = :calibrationId",
+      { calibrationId },
+    );
+    expect(act).not.toBeNull();
+  });
+});
