@@ -34,6 +34,18 @@ export function asAppError(thrown: unknown): AppError | null {
       cause: thrown,
     });
   }
+  const unfit = unfitColumn(thrown);
+  if (unfit) {
+    // The edge should have said so, by the field's own name: news for us, not only for the person.
+    return new AppError(
+      'unprocessable',
+      `A value does not fit where it is kept (${unfit}); nothing was saved.`,
+      {
+        cause: thrown,
+        isReportable: true,
+      },
+    );
+  }
   if (thrown instanceof ConnectionError) {
     return new AppError(
       'unavailable',
@@ -44,4 +56,13 @@ export function asAppError(thrown: unknown): AppError | null {
     );
   }
   return null;
+}
+
+/** Out of range, too long, or not of the column's kind. */
+const UNFIT = new Set([1264, 1406, 1366, 1292]);
+
+function unfitColumn(thrown: unknown): string | null {
+  const parent = (thrown as { parent?: { errno?: number; sqlMessage?: string } } | null)?.parent;
+  if (!parent?.errno || !UNFIT.has(parent.errno)) return null;
+  return /column [`']?(?:[^`']*[`']\.[`'])*([a-z_]+)/i.exec(parent.sqlMessage ?? '')?.[1] ?? 'a column';
 }

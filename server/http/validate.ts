@@ -13,11 +13,30 @@ export function validate<Out>(schema: z.ZodType<Out> | undefined, value: unknown
   // Express gives no body at all for a missing or foreign content type, and params without a prototype.
   const plain = part === 'body' ? (value ?? {}) : { ...(value as object) };
   const parsed = schema.safeParse(plain);
-  if (parsed.success) return parsed.data;
+  const halved = parsed.success ? halfCharacterIn(parsed.data) : null;
+  if (parsed.success && !halved) return parsed.data;
   if (part === 'params') throw new AppError('not-found', 'This address names nothing in the register.');
   throw new AppError('malformed', 'Some fields cannot be used; each is named below.', {
-    fields: fieldProblems(parsed.error, plain),
+    fields: parsed.success ? { [halved ?? '']: HALF_CHARACTER } : fieldProblems(parsed.error, plain),
   });
+}
+
+/** Half of a surrogate pair is no character of Unicode: the database has no way to keep it. */
+const LONE_SURROGATE = /[\ud800-\udfff]/u;
+const HALF_CHARACTER = {
+  message: 'This text holds half a character, as a broken copy leaves it. Type it anew.',
+  expected: 'well-formed text',
+};
+
+/** Path of the first text that is not well-formed; null where all is. What it walks has passed a schema. */
+function halfCharacterIn(value: unknown, path = ''): string | null {
+  if (typeof value === 'string') return LONE_SURROGATE.test(value) ? path || '(all)' : null;
+  if (value === null || typeof value !== 'object') return null;
+  for (const [key, member] of Object.entries(value)) {
+    const found = halfCharacterIn(member, path ? `${path}.${key}` : key);
+    if (found) return found;
+  }
+  return null;
 }
 
 /** One problem per offending path (the first), in the form that forms and programs read. */

@@ -26,8 +26,8 @@ export type MassUnit = z.infer<typeof MassUnit>;
 
 /** Grams as text, above zero and within the column. */
 export const Nominal = DecimalString.refine(
-  (text) => new Decimal(text).gt(0) && new Decimal(text).lte('50000000'),
-  'Expected a nominal above 0 g and up to 50 000 kg',
+  (text) => new Decimal(text).gt(0) && new Decimal(text).lte('50000000') && fitsColumn(text),
+  'Expected a nominal above 0 g and up to 50 000 kg, to a picogram at most',
 );
 
 /** Grams as text, signed, within the column (to a picogram). */
@@ -44,14 +44,14 @@ export const ExpandedU = DecimalString.refine(
 
 /** Coverage factor as text. */
 export const CoverageFactor = DecimalString.refine(
-  (text) => new Decimal(text).gte(1) && new Decimal(text).lte(20),
-  'Expected a coverage factor from 1 to 20, as printed on the certificate',
+  (text) => new Decimal(text).gte(1) && new Decimal(text).lte(20) && hasPlaces(text, 4),
+  'Expected a coverage factor from 1 to 20 with at most 4 decimals, as printed on the certificate',
 );
 
 /** Coverage probability as text, for example 0.9545. */
 export const CoverageProbability = DecimalString.refine(
-  (text) => new Decimal(text).gt(0.5) && new Decimal(text).lt(1),
-  'Expected a coverage probability between 0.5 and 1, such as 0.9545',
+  (text) => new Decimal(text).gt(0.5) && new Decimal(text).lt(1) && hasPlaces(text, 5),
+  'Expected a coverage probability between 0.5 and 1 with at most 5 decimals, such as 0.9545',
 );
 
 /** What this person may do with a record, by permission name. */
@@ -82,4 +82,9 @@ export type Severity = z.infer<typeof Severity>;
 function fitsColumn(text: string): boolean {
   const value = new Decimal(text);
   return value.decimalPlaces() <= 12 && value.abs().lt('100000000');
+}
+
+/** More decimals than the column has would be rounded in silence. */
+function hasPlaces(text: string, places: number): boolean {
+  return new Decimal(text).decimalPlaces() <= places;
 }

@@ -37,8 +37,8 @@ export const RegistryNo = z
   .regex(/^[A-Z]{2,4} \d{4}(-\d{1,3})?$/, 'Expected a registry number such as TV 0112 or TV 0300-07');
 
 export const Density = DecimalString.refine(
-  (text) => Number(text) >= 500 && Number(text) <= 25_000,
-  'Expected a density from 500 to 25 000 kg/m3',
+  (text) => Number(text) >= 500 && Number(text) <= 25_000 && !/\.\d{10}/.test(text),
+  'Expected a density from 500 to 25 000 kg/m3, with at most 9 decimals',
 );
 
 /** GET /api/standards. Everything a list can be asked for; the URL of the page carries the same names. */
@@ -101,8 +101,8 @@ export type StandardListResponse = z.infer<typeof StandardListResponse>;
 const PropertyBody = z.strictObject({
   value: Density,
   expandedU: DecimalString.refine(
-    (text) => Number(text) > 0,
-    'Expected an uncertainty above zero',
+    (text) => Number(text) > 0 && Number(text) <= 25_000 && !/\.\d{10}/.test(text),
+    'Expected an uncertainty above 0 and up to 25 000 kg/m3, with at most 9 decimals',
   ).nullable(),
   k: CoverageFactor.nullable(),
   origin: PropertyOrigin,
