@@ -6,3 +6,6 @@ export const HealthResponse = z.object({
   version: z.string(),
   database: z.string(),
 });
+
+/** GET /api/health/session: the database answered a signed-in person. */
+export const SessionHealthResponse = z.object({ status: z.literal('ready') });

@@ -56,6 +56,12 @@ const fixed = (path: string, query?: Record<string, string>) => () => ({ path, q
 export const WALK: Readonly<Record<string, WalkRow>> = {
   // health and identity
   'GET /api/health': { request: fixed('/api/health'), may: EVERYBODY, ok: 200, otherwise: 403 },
+  'GET /api/health/session': {
+    request: fixed('/api/health/session'),
+    may: SIGNED_IN,
+    ok: 200,
+    otherwise: 403,
+  },
   'GET /api/session': { request: fixed('/api/session'), may: EVERYBODY, ok: 200, otherwise: 403 },
   'POST /api/session': {
     request: (scene, walker) => {
