@@ -1,0 +1,61 @@
+import { Decimal, decimalText } from '#shared/decimal.ts';
+import { EngineError } from '#shared/engine/errors.ts';
+import { parseQuantity } from '#shared/engine/quantity/parse-quantity.ts';
+import type { DecimalMark } from '#shared/engine/quantity/read-number.ts';
+import { convertUnit, type Unit } from '#shared/engine/quantity/units.ts';
+import type { Shape } from '#shared/contracts/standards.ts';
+import { quantityLine, quantityText } from '#src/lib/quantity-text.ts';
+
+/** What became of a nominal as typed: nothing there, grams as canonical text, or why it cannot be read. */
+export type ReadNominal =
+  { kind: 'empty' } | { kind: 'nominal'; grams: string } | { kind: 'unreadable'; why: string };
+
+/**
+ * Reads a nominal with its unit, as it stands on a weight: "1 kg", "500 mg". A bare number is not taken: 500 of
+ * what is not ours to guess.
+ */
+export function readNominal(typed: string, decimalMark: DecimalMark): ReadNominal {
+  if (typed.trim() === '') return { kind: 'empty' };
+  try {
+    const parsed = parseQuantity(typed, { field: 'nominal', units: ['kg', 'g', 'mg', 'ug'], decimalMark });
+    if (parsed.uncertainty !== null || parsed.unit === null) {
+      return {
+        kind: 'unreadable',
+        why: `Write a number and its unit, such as 1 kg or 500 mg; received "${typed.trim()}".`,
+      };
+    }
+    return { kind: 'nominal', grams: decimalText(convertUnit(parsed.value, parsed.unit, 'g')) };
+  } catch (error) {
+    if (!(error instanceof EngineError)) throw error;
+    return { kind: 'unreadable', why: error.message.replace(/^[^:]*: r/, 'R') };
+  }
+}
+
+/** The unit a nominal is engraved in: mg below 1 g, g below 1 kg, kg from there on (OIML R 111-1:2004, 13). */
+export function nominalUnit(grams: string): Extract<Unit, 'kg' | 'g' | 'mg'> {
+  const value = new Decimal(grams);
+  if (value.gte(1000)) return 'kg';
+  return value.gte(1) ? 'g' : 'mg';
+}
+
+/** A nominal as one says it: "1 kg", "500 mg". */
+export function nominalText(grams: string, decimalMark: DecimalMark = '.'): string {
+  const style = { decimalMark, uncertainty: 'plus-minus' as const };
+  return quantityLine(quantityText({ value: grams, shownIn: nominalUnit(grams) }, style));
+}
+
+/** A nominal as it is engraved and typed, with a plain space: the first proposal for a marking. */
+export function nominalMarking(grams: string): string {
+  const unit = nominalUnit(grams);
+  return `${decimalText(convertUnit(new Decimal(grams), 'g', unit))} ${unit}`;
+}
+
+/** Knobs from 1 g up, wires or sheets below (common practice after OIML R 111-1:2004, 6). */
+export function usualShape(grams: string, below1g: Extract<Shape, 'wire' | 'sheet'> = 'wire'): Shape {
+  return new Decimal(grams).gte(1) ? 'knob' : below1g;
+}
+
+/** From here on a weight is lifted with care, and the forms say so. Common practice, no source. */
+export function isHeavy(grams: string): boolean {
+  return new Decimal(grams).gte(10_000);
+}
