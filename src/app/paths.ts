@@ -13,6 +13,12 @@ export const paths = {
   newSet: { path: '/standards/new-set', href: () => '/standards/new-set' },
   standard: { path: '/standards/:standardId', href: (standardId: string) => `/standards/${standardId}` },
   calibrations: { path: '/calibrations', href: () => '/calibrations' },
+  newDraft: {
+    path: '/calibrations/drafts/new',
+    /** @param standardId the weight that the first line is about */
+    href: (standardId?: string) =>
+      standardId ? `/calibrations/drafts/new?standard=${standardId}` : '/calibrations/drafts/new',
+  },
   calibrationDraft: {
     path: '/calibrations/drafts/:draftId',
     href: (draftId: string) => `/calibrations/drafts/${draftId}`,
