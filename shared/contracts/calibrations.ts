@@ -209,11 +209,14 @@ export const OpenPoint = z.object({
   clause: z.string().nullable(),
   /** `missing`/`wrong` block; `question` blocks until confirmed; `note` does not. */
   kind: z.enum(['missing', 'wrong', 'question', 'note']),
+  /** What a question is about; its answer is `unitConfirmed` or `signConfirmed`. */
+  asks: z.enum(['unit', 'sign']).optional(),
 });
 export type OpenPoint = z.infer<typeof OpenPoint>;
 
 /** A check of one line against its reference, shown while the draft is written. */
 export const DraftCheck = z.object({
+  /** Place in `content.lines`, from 0. */
   line: z.number().int(),
   referenceUid: Id.nullable(),
   rule: z.string(),

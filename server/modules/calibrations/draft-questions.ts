@@ -42,6 +42,7 @@ function unitPoints(
     expected,
     clause,
     kind: 'question' as const,
+    asks: 'unit' as const,
   }));
 }
 
@@ -70,6 +71,7 @@ function signPoints(
       expected: 'value minus nominal, or confirmed',
       clause: null,
       kind: 'question',
+      asks: 'sign',
     },
   ];
 }
