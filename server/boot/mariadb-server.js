@@ -9,7 +9,7 @@ import { ensureMariadbFolder, mariadbFolder } from './mariadb-folder.js';
 import { mariadbProgram, mariadbUser } from './mariadb-programs.js';
 import { freePort } from './ports.js';
 import { lastLines } from './run-command.js';
-import { socketPath } from './socket-path.js';
+import { discardSocketFolder, socketPath } from './socket-path.js';
 import { closeAtEnd, isStopping } from './supervise.js';
 
 /**
@@ -40,17 +40,23 @@ export async function startMariadb(options) {
   await ensureMariadbFolder(folder);
   const credentials = credentialsOf(folder);
   const port = await freePort();
+  const socket = socketPath(folder);
   const accountsFile = path.join(folder, 'accounts.sql');
   writeFileSync(accountsFile, accountsSql(credentials, { withAdmin: options.withAdmin ?? false }), {
     mode: 0o600,
   });
   const logFile = path.join(folder, 'mariadb.log');
   const log = openSync(logFile, 'w', 0o600);
-  const child = startChild(mariadbProgram('mariadbd'), mariadbArguments(options, port, accountsFile), {
-    cwd: folder,
-    stdio: ['ignore', log, log, options.lock],
-  });
+  const child = startChild(
+    mariadbProgram('mariadbd'),
+    mariadbArguments(options, { port, socket, accountsFile }),
+    {
+      cwd: folder,
+      stdio: ['ignore', log, log, options.lock],
+    },
+  );
   closeSync(log);
+  void child.ended.then(() => discardSocketFolder(folder, socket));
   // A stop may take as long as writing every changed page does.
   const stop = () => child.end(60_000);
   const forget = closeAtEnd('the database', stop);
@@ -71,16 +77,15 @@ export async function startMariadb(options) {
 
 /**
  * @param {MariadbOptions} options
- * @param {number} port
- * @param {string} accountsFile
+ * @param {{ port: number, socket: string, accountsFile: string }} places
  * @returns {string[]}
  */
-function mariadbArguments({ folder, isThrowaway = false }, port, accountsFile) {
+function mariadbArguments({ folder, isThrowaway = false }, { port, socket, accountsFile }) {
   return [
     '--no-defaults',
     ...mariadbUser(),
     `--datadir=${mariadbFolder(folder)}`,
-    `--socket=${socketPath(folder)}`,
+    `--socket=${socket}`,
     `--port=${port}`,
     `--init-file=${accountsFile}`,
     '--bind-address=127.0.0.1',

@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { lstatSync, mkdirSync, mkdtempSync } from 'node:fs';
+import { lstatSync, mkdirSync, mkdtempSync, rmSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 
@@ -29,4 +29,13 @@ export function socketPath(folder, temporaryFolder = os.tmpdir()) {
     isOurs ? privateFolder : mkdtempSync(path.join(temporaryFolder, 'exagium-')),
     'mariadb.sock',
   );
+}
+
+/**
+ * @param {string} folder the data folder, which stays
+ * @param {string} socket of a database that has ended
+ * @returns {void}
+ */
+export function discardSocketFolder(folder, socket) {
+  if (path.dirname(socket) !== folder) rmSync(path.dirname(socket), { recursive: true, force: true });
 }

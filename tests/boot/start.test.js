@@ -1,6 +1,7 @@
 import assert from 'node:assert/strict';
 import { readFileSync, readdirSync, statSync, writeFileSync } from 'node:fs';
 import net from 'node:net';
+import os from 'node:os';
 import path from 'node:path';
 import { after, before, test } from 'node:test';
 import mariadb from 'mariadb';
@@ -28,6 +29,8 @@ for (const name of ['a folder with spaces', `a-long-path-${'x'.repeat(120)}`]) {
     await started.isReady();
     assert.deepEqual((await started.health()).notes, ['first half', 'second half']);
     await stop(started);
+    const isPrivate = (/** @type {string} */ entry) => /^exagium-[0-9a-f]{16}$/.test(entry);
+    assert.deepEqual(readdirSync(os.tmpdir()).filter(isPrivate), []);
     remove();
   });
 }
