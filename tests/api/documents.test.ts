@@ -3,6 +3,7 @@ import { readdir, stat, writeFile } from 'node:fs/promises';
 import path from 'node:path';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { readRow } from '#server/db/read.ts';
+import { lineOf, makeCalibration, makeStandard } from '#tests/support/calibration-factories.ts';
 import { makeLaboratory, makePerson, type TestPerson } from '#tests/support/factories.ts';
 import { testApp } from '#tests/support/test-app.ts';
 
@@ -165,6 +166,35 @@ describe('GET /api/documents/:documentId', () => {
       );
     },
   );
+
+  it('gives the certificate that a holder registered to its issuer too, and to nobody else', async () => {
+    const [issuer, holder, rival] = [
+      await makeLaboratory(app),
+      await makeLaboratory(app),
+      await makeLaboratory(app),
+    ];
+    const metrologist = await app.signIn(await makePerson(app, 'metrologist', holder.id));
+    const { body } = await metrologist
+      .post('/api/documents')
+      .query({ laboratory: holder.id, name: 'c.pdf' })
+      .set('Content-Type', 'application/pdf')
+      .send(pdf());
+    const readBy = async (laboratoryId: string) => {
+      const agent = await app.signIn(await makePerson(app, 'reader', laboratoryId));
+      return (await agent.get(`/api/documents/${body.id}`)).status;
+    };
+    expect([await readBy(holder.id), await readBy(issuer.id), await readBy(rival.id)]).toEqual([
+      200, 404, 404,
+    ]);
+    const standard = await makeStandard(app, holder.id);
+    await makeCalibration(app, holder.id, '2025-03-01', [lineOf(standard.id)], {
+      issuerId: issuer.id,
+      documentId: body.id,
+    });
+    expect([await readBy(holder.id), await readBy(issuer.id), await readBy(rival.id)]).toEqual([
+      200, 200, 404,
+    ]);
+  });
 
   it('does not hand out a file that was changed on disk', async () => {
     const { body } = await send('metrologist', pdf());

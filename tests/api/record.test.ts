@@ -1,9 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { readRow, readRows } from '#server/db/read.ts';
-import { createScaleVersion, assertScopeLine } from '#server/modules/network/index.ts';
+import { adoptPolicy, assertScopeLine, createScaleVersion } from '#server/modules/network/index.ts';
 import { RECORDED_TABLES, verifyRecord } from '#server/modules/record/index.ts';
+import { withdrawCalibration } from '#server/modules/calibrations/index.ts';
+import { lineOf, makeCalibration, makeStandard } from '#tests/support/calibration-factories.ts';
 import { makeLaboratory, makePerson } from '#tests/support/factories.ts';
 import { testApp } from '#tests/support/test-app.ts';
+import { looseCalibration, makeScene } from './walk/scene.ts';
 
 const app = await testApp();
 
@@ -50,9 +53,89 @@ describe('the record of acts', () => {
       validFrom: '2021-02-01',
       validTo: null,
     });
+    await adoptPolicy(app.context(), {
+      name: `policy ${laboratory.code}`,
+      edition: '1',
+      content: { z: '0.10', a: { list: [1, 1e-7, null, true], text: 'ü' } },
+      validFrom: '2021-02-01',
+      validTo: null,
+    });
     const report = await verifyRecord(app.database);
     expect(report.acts).toBeGreaterThan(before + 5);
     expect(report.problems.filter((problem) => problem.actSeq > before)).toEqual([]);
+  });
+
+  it('holds for weights, calibrations with their links and sources, a revision and a withdrawal', async () => {
+    const before = await lastActSeq();
+    const scene = await makeScene(app);
+    const sheet = await looseCalibration(scene);
+    await withdrawCalibration(app.context(), sheet.revisionId, {
+      reason: 'The balance was not level',
+      effectiveOn: '2024-09-01',
+    });
+    const [first, second] = [await makeStandard(app, scene.home.id), await makeStandard(app, scene.home.id)];
+    await makeCalibration(
+      app,
+      scene.home.id,
+      '2024-10-01',
+      [
+        lineOf(first.id, {
+          sources: [{ sourceUid: first.volumeSourceUid!, sensitivity: 1e-6 }],
+          components: [
+            {
+              name: 'Repeatability',
+              evaluation: 'A',
+              distribution: 'normal',
+              standardUncertainty: 0.0001,
+              sensitivity: 1,
+              degreesOfFreedom: 9,
+            },
+          ],
+        }),
+        lineOf(second.id),
+      ],
+      {
+        group: {
+          covariance: [
+            [1e-8, 2e-9],
+            [2e-9, 1e-8],
+          ],
+          degreesOfFreedom: 9,
+        },
+      },
+    );
+    const report = await verifyRecord(app.database);
+    expect(report.problems.filter((problem) => problem.actSeq > before)).toEqual([]);
+    const links = await readRows(app.database, 'SELECT child_id FROM value_link LIMIT 1');
+    const sources = await readRows(app.database, 'SELECT child_id FROM source_link LIMIT 1');
+    const covariances = await readRows(app.database, 'SELECT group_id FROM group_covariance LIMIT 1');
+    const components = await readRows(app.database, 'SELECT value_id FROM component LIMIT 1');
+    expect([links, sources, covariances, components].map((rows) => rows.length)).toEqual([1, 1, 1, 1]);
+  });
+
+  it('finds a link whose sensitivity was changed, a value that was shifted and an end that was taken back', async () => {
+    const scene = await makeScene(app);
+    const sheet = await looseCalibration(scene);
+    await withdrawCalibration(app.context(), sheet.revisionId, {
+      reason: 'Mistaken',
+      effectiveOn: '2024-09-01',
+    });
+    const before = await verifyRecord(app.database);
+    await app.owner.query(
+      `UPDATE value_link SET sensitivity = 0.999 WHERE child_id = (SELECT id FROM assigned_value WHERE uid = '${scene.valueUid}')`,
+    );
+    await app.owner.query(
+      `UPDATE assigned_value SET deviation = deviation + 0.000000000001 WHERE uid = '${scene.referenceUid}'`,
+    );
+    await app.owner.query(
+      `DELETE FROM value_end WHERE value_id IN (SELECT id FROM assigned_value WHERE revision_id = '${sheet.revisionId}')`,
+    );
+    const after = await verifyRecord(app.database);
+    const known = new Set(before.problems.map((problem) => problem.sentence));
+    const found = after.problems
+      .filter((problem) => !known.has(problem.sentence))
+      .map((problem) => problem.where);
+    expect(found.sort()).toEqual(['assigned_value', 'value_end', 'value_link']);
   });
 
   it('numbers acts without gaps when many run at once', async () => {

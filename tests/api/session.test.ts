@@ -3,6 +3,7 @@ import supertest from 'supertest';
 import { describe, expect, it } from 'vitest';
 import { readRow } from '#server/db/read.ts';
 import { assertMembership, createAccount, setPassword } from '#server/modules/identity/index.ts';
+import { adoptPolicy } from '#server/modules/network/index.ts';
 import { makeLaboratory, makePerson } from '#tests/support/factories.ts';
 import { testApp } from '#tests/support/test-app.ts';
 
@@ -220,6 +221,21 @@ describe('DELETE /api/session', () => {
     ).toBeNull();
     expect((await stranger().get('/api/session').set('Cookie', cookie)).body.person).toBeNull();
     expect((await stranger().delete('/api/session').set('Cookie', cookie)).status).toBe(401);
+  });
+});
+
+describe('the demo network', () => {
+  // Last, since nothing is ever taken out of the register again.
+  it('is told apart by its policy', async () => {
+    expect((await stranger().get('/api/session')).body.isDemo).toBe(false);
+    await adoptPolicy(app.context(), {
+      name: 'demo network',
+      edition: '1',
+      content: {},
+      validFrom: '2015-01-01',
+      validTo: null,
+    });
+    expect((await stranger().get('/api/session')).body.isDemo).toBe(true);
   });
 });
 

@@ -22,22 +22,14 @@ export function documentByContent(
   );
 }
 
-/**
- * The laboratories whose document it is: who keeps it, and of a certificate its issuer, who registered it,
- * and the holder. A certificate over weights of several holders is nobody's but the issuer's: it would show
- * one customer to another.
- */
+/** The laboratories whose document it is: who keeps it, and of a certificate its issuer and who registered it. */
 export async function laboratoriesOfDocument(database: Sequelize, document: DocumentRow): Promise<string[]> {
-  const rows = await readRows<{ issuerId: string; registeredById: string; holderId: string }>(
+  const rows = await readRows<{ issuerId: string; registeredById: string }>(
     database,
-    `SELECT DISTINCT c.laboratory_id AS issuerId, c.registered_by_id AS registeredById, v.holder_id AS holderId
-     FROM revision r
-     JOIN calibration c ON c.id = r.calibration_id
-     JOIN assigned_value v ON v.revision_id = r.id
+    `SELECT DISTINCT c.laboratory_id AS issuerId, c.registered_by_id AS registeredById
+     FROM revision r JOIN calibration c ON c.id = r.calibration_id
      WHERE r.document_id = :id`,
     { id: document.id },
   );
-  const holders = new Set(rows.map((row) => row.holderId));
-  const issuers = rows.flatMap((row) => [row.issuerId, row.registeredById]);
-  return [...new Set([document.laboratoryId, ...issuers, ...(holders.size === 1 ? holders : [])])];
+  return [...new Set([document.laboratoryId, ...rows.flatMap((row) => [row.issuerId, row.registeredById])])];
 }
