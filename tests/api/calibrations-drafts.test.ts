@@ -156,6 +156,45 @@ describe('GET /api/drafts/:draftId', () => {
   });
 });
 
+describe('the checks shown as a draft is written', () => {
+  interface Check {
+    line: number;
+    rule: string;
+    outcome: string;
+    referenceUid: string | null;
+    sentence: string;
+  }
+
+  async function checksOf(
+    line: object,
+    expandedU = '0.00016',
+  ): Promise<{ checks: Check[]; rootUid: string }> {
+    const [above, below] = [await makeStandard(app, laboratory.id), await makeStandard(app, laboratory.id)];
+    const root = await makeCalibration(app, laboratory.id, '2023-06-10', [lineOf(above.id, { expandedU })]);
+    const rootUid = root.valueUids[0]!;
+    const references = [{ valueUid: rootUid }];
+    const { id } = await draft(contentOf(below.id, { issuerId: laboratory.id }, { references, ...line }));
+    const reply = await agents.metrologist.get(`/api/drafts/${id}`);
+    expect(reply.status).toBe(200);
+    return { checks: reply.body.checks, rootUid };
+  }
+
+  it('hold for an honest result, each in words with its clause', async () => {
+    const { checks, rootUid } = await checksOf({ value: '0.12', underAccreditation: false });
+    expect(checks.filter((check) => check.outcome === 'fails')).toEqual([]);
+    const carried = checks.find((check) => check.rule === 'B-21');
+    expect(carried).toMatchObject({ line: 0, outcome: 'holds', clause: expect.any(String) as string });
+    const dated = checks.find((check) => check.rule === 'B-12');
+    expect(dated).toMatchObject({ referenceUid: rootUid, outcome: 'holds' });
+    expect(dated!.sentence).toMatch(/2023-06-10/);
+  });
+
+  it('fail where U is less than the reference brings, while the question of issuing stays the person’s', async () => {
+    const { checks } = await checksOf({ expandedU: '0.50', underAccreditation: false }, '0.0012');
+    expect(checks.find((check) => check.rule === 'B-21')).toMatchObject({ outcome: 'fails' });
+  });
+});
+
 describe('PUT /api/drafts/:draftId', () => {
   it('is refused without sign-in, malformed, without the role and elsewhere', async () => {
     const { id } = await draft();

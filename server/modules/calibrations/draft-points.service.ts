@@ -10,6 +10,8 @@ import { issueProblems } from './issue-rules.ts';
 export interface JudgedDraft extends DraftSurroundings {
   /** Null while a point keeps the draft from being issued. */
   input: CalibrationInput | null;
+  /** Complete enough to be checked, whatever questions and rules are still open. */
+  read: CalibrationInput | null;
   points: OpenPoint[];
 }
 
@@ -21,12 +23,12 @@ export async function judgeDraft(
 ): Promise<JudgedDraft> {
   const surroundings = await draftSurroundings(context.database, laboratoryId, content, today(context));
   const { input, points } = readDraft(content, surroundings.facts);
-  if (!input) return { ...surroundings, input: null, points };
+  if (!input) return { ...surroundings, input: null, read: null, points };
   const rules = await rulePoints(context, input);
   // The question of the unit is asked by the reading already, beside the others.
   const asked = new Set(points.map((point) => point.field));
   const all = [...points, ...rules.filter((point) => !asked.has(point.field))];
-  return { ...surroundings, input: all.some(isBlocking) ? null : input, points: all };
+  return { ...surroundings, input: all.some(isBlocking) ? null : input, read: input, points: all };
 }
 
 /** Whether a point keeps the draft from being issued. */

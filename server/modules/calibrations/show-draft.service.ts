@@ -1,6 +1,7 @@
 import type { DraftCheck, OpenPoint, ReferenceChoice } from '#shared/contracts/calibrations.ts';
 import type { SignedInContext } from '#server/http/route.ts';
 import { documentById } from '#server/modules/documents/index.ts';
+import { draftChecks } from './draft-checks.service.ts';
 import type { DraftStandard } from './draft-facts.queries.ts';
 import { judgeDraft } from './draft-points.service.ts';
 import type { DraftRow } from './draft.queries.ts';
@@ -17,7 +18,11 @@ export interface ShownDraft {
 
 /** Reads a draft anew: its open points and checks are those of this moment, never stored. */
 export async function showDraft(context: SignedInContext, draft: DraftRow): Promise<ShownDraft> {
-  const { standards, references, points } = await judgeDraft(context, draft.laboratory.id, draft.content);
+  const { read, standards, references, points } = await judgeDraft(
+    context,
+    draft.laboratory.id,
+    draft.content,
+  );
   const { documentId } = draft.content;
   const document = documentId ? await documentById(context.database, documentId) : null;
   const isOwn = document?.laboratoryId === draft.laboratory.id;
@@ -27,6 +32,6 @@ export async function showDraft(context: SignedInContext, draft: DraftRow): Prom
     standards,
     references,
     points: draft.state === 'issued' ? [] : points,
-    checks: [],
+    checks: read ? await draftChecks(context, read) : [],
   };
 }

@@ -88,7 +88,7 @@ export async function writeRevision(
   return { revisionId, values: ids, content, contentSha256 };
 }
 
-async function carriedByLine(
+export async function carriedByLine(
   context: Context,
   input: CalibrationInput,
   facts: IssueFacts,
@@ -102,7 +102,7 @@ async function carriedByLine(
   return carriedVariances(input.lines, facts, network);
 }
 
-function valueColumns(
+export function valueColumns(
   line: CalibrationLine,
   at: number,
   input: CalibrationInput,

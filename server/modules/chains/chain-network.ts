@@ -2,7 +2,7 @@ import type { Network, NetworkGroup, NetworkLink, NetworkValue } from '#shared/e
 import { maximumPermissibleError } from '#shared/engine/conformity/maximum-permissible-error.ts';
 import { Decimal } from '#shared/decimal.ts';
 import type { Closure } from './chain-store.ts';
-import type { StoredGroup, StoredValue } from './stored.ts';
+import type { StoredGroup, StoredLink, StoredValue } from './stored.ts';
 
 const MILLIGRAMS_PER_GRAM = 1000;
 
@@ -57,7 +57,7 @@ function linksOf(value: StoredValue, byId: Map<number, StoredValue>, closure: Cl
       const parent = byId.get(link.parentId)!;
       const base = { child: value.uid, parent: parent.uid, sensitivity: link.sensitivity };
       return link.usedAs === 'class limit'
-        ? { ...base, classLimit: { standardUncertainty: classLimitU(parent) } }
+        ? { ...base, classLimit: { standardUncertainty: classLimitU(parent, link) } }
         : base;
     });
   const sources = value.sources.map((link) => ({
@@ -68,17 +68,18 @@ function linksOf(value: StoredValue, byId: Map<number, StoredValue>, closure: Cl
   return [...references, ...sources];
 }
 
-/** Nominal +/- MPE used as it stands: rectangular, u = MPE / sqrt 3 (g). */
-function classLimitU(parent: StoredValue): number {
+/** Nominal +/- MPE used as it stands: rectangular, u = MPE / sqrt 3 (g); by the limit on the link where the value has no class. */
+function classLimitU(parent: StoredValue, link: StoredLink): number {
   const limit = parent.class
     ? maximumPermissibleError(
         parent.class as Parameters<typeof maximumPermissibleError>[0],
         new Decimal(parent.nominal),
       )
     : null;
-  if (!limit)
+  if (limit) return limit.div(MILLIGRAMS_PER_GRAM).toNumber() / Math.sqrt(3);
+  if (link.usedExpandedU === null)
     throw new Error(`${parent.registryNo} was used by its class limit but has no class at its nominal`);
-  return limit.div(MILLIGRAMS_PER_GRAM).toNumber() / Math.sqrt(3);
+  return Number(link.usedExpandedU) / Number(link.usedK ?? Math.sqrt(3));
 }
 
 function estimateOf(
