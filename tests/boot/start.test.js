@@ -1,5 +1,5 @@
 import assert from 'node:assert/strict';
-import { readFileSync, readdirSync, statSync, writeFileSync } from 'node:fs';
+import { mkdtempSync, readFileSync, readdirSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import net from 'node:net';
 import os from 'node:os';
 import path from 'node:path';
@@ -25,12 +25,16 @@ async function stop(started) {
 for (const name of ['a folder with spaces', `a-long-path-${'x'.repeat(120)}`]) {
   test(`starts and stops in ${name.slice(0, 20)}`, async () => {
     const { folder, remove } = standInProject(name);
-    const started = await openStart(folder);
+    const temporary = mkdtempSync(path.join(os.tmpdir(), 'exagium-tmp-'));
+    const started = await openStart(folder, { TMPDIR: temporary });
     await started.isReady();
     assert.deepEqual((await started.health()).notes, ['first half', 'second half']);
     await stop(started);
-    const isPrivate = (/** @type {string} */ entry) => /^exagium-[0-9a-f]{16}$/.test(entry);
-    assert.deepEqual(readdirSync(os.tmpdir()).filter(isPrivate), []);
+    assert.deepEqual(
+      readdirSync(temporary).filter((entry) => entry.startsWith('exagium-')),
+      [],
+    );
+    rmSync(temporary, { recursive: true });
     remove();
   });
 }
