@@ -48,7 +48,7 @@ export function createApp(parts: AppParts): App {
   app.use(
     pinoHttp({
       logger: parts.logger,
-      autoLogging: { ignore: (request) => !request.url?.startsWith('/api') },
+      autoLogging: { ignore: isQuiet },
     }),
   );
   app.use(requestContext(parts.database, clock, parts.dataDir));
@@ -68,6 +68,11 @@ export function createApp(parts: AppParts): App {
   for (const handler of parts.client ?? []) app.use(handler);
   app.use(errorHandler(parts.logger));
   return { express: app, close: () => sessions.close() };
+}
+
+/** Not in the log: the page's own files, and a monitor that asks every few seconds whether all is well. */
+function isQuiet(request: { url?: string | undefined }): boolean {
+  return !request.url?.startsWith('/api') || request.url.startsWith('/api/health');
 }
 
 const noStore: RequestHandler = (_request, response, next) => {
