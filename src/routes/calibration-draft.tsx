@@ -1,6 +1,42 @@
-import { Page } from '#src/components/layout/page.tsx';
+import { useQuery } from '@tanstack/react-query';
+import { useState } from 'react';
+import { useNavigate, useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router';
+import { paths } from '#src/app/paths.ts';
+import { queryClient } from '#src/app/query-client.ts';
+import { draftQuery } from '#src/features/calibrations/api.ts';
+import { DraftPlace } from '#src/features/calibrations/draft/draft-place.tsx';
 
-/** Keeps the place of the screen at this address. */
+const NEW = 'new';
+
+/** Primes the draft; one that its first change will create has nothing to be primed. */
+export async function loader({ params }: LoaderFunctionArgs): Promise<null> {
+  const { draftId = NEW } = params;
+  if (draftId !== NEW) await queryClient.query({ ...draftQuery(draftId), staleTime: 1000 });
+  return null;
+}
+
+/** A draft, or the sheet on which one begins. */
 export function Component() {
-  return <Page title="Calibration draft">{null}</Page>;
+  const { draftId = NEW } = useParams();
+  const [parameters] = useSearchParams();
+  const navigate = useNavigate();
+  const { data } = useQuery({ ...draftQuery(draftId), enabled: draftId !== NEW });
+  // A draft that gets its id while somebody types is still the same sheet: the key does not change under it.
+  const [createdHere, setCreatedHere] = useState<string | null>(null);
+  return (
+    <DraftPlace
+      key={draftId === createdHere ? NEW : draftId}
+      draft={data ?? null}
+      laboratoryId={parameters.get('laboratory') ?? undefined}
+      firstStandardId={parameters.get('standard') ?? undefined}
+      onCreated={(draft) => {
+        setCreatedHere(draft.id);
+        void navigate(paths.calibrationDraft.href(draft.id), { replace: true, preventScrollReset: true });
+      }}
+      onIssued={({ revisionId }) =>
+        void navigate(paths.calibration.href(revisionId), { replace: true, state: 'just issued' })
+      }
+      onDiscarded={() => void navigate(paths.calibrations.href())}
+    />
+  );
 }

@@ -35,6 +35,8 @@ export interface Autosave {
   settle: (saved: DraftContent) => void;
   /** Whether the server has every entry. */
   isClean: () => boolean;
+  /** What the server had when this typing began; null when it had nothing. */
+  acknowledged: () => DraftContent | null;
   /** The draft is left: what is not saved is sent, without waiting. */
   stop: () => void;
 }
@@ -82,6 +84,7 @@ export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosav
 
   return {
     isClean,
+    acknowledged: () => acknowledged,
     changed: () => {
       if (isHalted || isClean()) return;
       onState({ kind: 'typing' });

@@ -1,5 +1,5 @@
 import { createContext, useContext } from 'react';
-import type { DraftResponse, ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { ReferenceChoice } from '#shared/contracts/calibrations.ts';
 import type { WeightClass } from '#shared/contracts/common.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 
@@ -38,9 +38,4 @@ export function knownFromRow(row: StandardRow): KnownStandard {
   const { id, registryNo, marking, nominal, value } = row;
   const isLast = value?.quantity === 'conventional mass';
   return { id, registryNo, marking, nominal, class: row.class, lastValue: isLast ? value : null };
-}
-
-/** The weights the server named with the draft; its word wins over what was chosen from a list. */
-export function knownFromDraft(draft: DraftResponse | null): KnownStandard[] {
-  return draft?.standards ?? [];
 }

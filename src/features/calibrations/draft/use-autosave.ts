@@ -1,7 +1,7 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useCallback, useEffect, useRef, useState } from 'react';
 import type { UseFormReturn } from 'react-hook-form';
-import type { DraftResponse } from '#shared/contracts/calibrations.ts';
+import type { DraftContent, DraftResponse } from '#shared/contracts/calibrations.ts';
 import { useLostSince } from '#src/lib/connection-state.ts';
 import { useLocalDraft } from '#src/lib/local-draft.ts';
 import { usePerson } from '#src/lib/session.ts';
@@ -9,12 +9,15 @@ import { createDraft, draftQuery, saveDraft } from '../api.ts';
 import { makeAutosave, type Autosave, type SaveState } from './autosave.ts';
 import { contentOf, isSameContent, type DraftValues } from './draft-values.ts';
 
-interface Saving {
+/** How the draft is being kept. */
+export interface Saving {
   state: SaveState;
   /** When what the form was filled with was typed, where it had not reached the server; else null. */
   restoredFrom: number | null;
   /** Saves at once; says whether the server now has every entry. */
   saveNow: () => Promise<boolean>;
+  /** What the server had when this typing began; null where that is not known. */
+  base: () => DraftContent | null;
   /** Takes these values as what should stand, upon the version the server has. */
   settle: (theirs: DraftResponse, values: DraftValues) => void;
   /** Forgets what this browser keeps of the draft. */
@@ -110,5 +113,6 @@ export function useAutosave(
     [form, queries],
   );
   const saveNow = useCallback(() => saver.current?.now() ?? Promise.resolve(false), []);
-  return { state, restoredFrom, saveNow, settle, forget: clear };
+  const base = useCallback(() => saver.current?.acknowledged() ?? null, []);
+  return { state, restoredFrom, saveNow, base, settle, forget: clear };
 }

@@ -1,0 +1,140 @@
+import { useState } from 'react';
+import { Link } from 'react-router';
+import type { CalibrationResponse } from '#shared/contracts/calibrations.ts';
+import { paths } from '#src/app/paths.ts';
+import { Button, LinkButton } from '#src/components/ui/button.tsx';
+import { DateText } from '#src/components/ui/date-text.tsx';
+import { Notice } from '#src/components/ui/notice.tsx';
+import { StateMark } from '#src/components/ui/state-mark.tsx';
+import { TwoColumns } from '#src/components/layout/columns.tsx';
+import { Facts } from '#src/components/layout/facts.tsx';
+import { Page, Section } from '#src/components/layout/page.tsx';
+import { can } from '#src/lib/abilities.ts';
+import { stateOfValue } from '#src/lib/states.ts';
+import { LineTable } from './line-table.tsx';
+import { PerformedText } from './performed-text.tsx';
+import { WithdrawDialog } from './withdraw-dialog.tsx';
+
+interface CalibrationSheetProps extends CalibrationResponse {
+  /** It was issued a moment ago, from this browser. */
+  isJustIssued: boolean;
+}
+
+/** One issued calibration, read like the certificate it is. */
+export function CalibrationSheet(props: CalibrationSheetProps) {
+  const { calibration, revisions, lines, isJustIssued } = props;
+  const [first] = lines;
+  const isOwn = calibration.issuer.id === calibration.registeredBy.id;
+  return (
+    <Page
+      title={`Certificate ${calibration.certificateNo}`}
+      sub={
+        <>
+          {calibration.issuer.name} · revision {calibration.revisionN} · issued{' '}
+          <DateText value={calibration.issuedOn} />
+        </>
+      }
+      value={<StateMark state={stateOfValue(calibration.state)}>{calibration.state}</StateMark>}
+      valueNote={calibration.reason ?? undefined}
+    >
+      {isJustIssued && (
+        <Notice role="status" tone="sound" title="Issued">
+          {lines.length === 1 ? 'The value is' : `All ${lines.length} values are`} in the register and can be
+          leaned on.
+        </Notice>
+      )}
+      <TwoColumns
+        sideWidth="narrow"
+        side={
+          <>
+            <Section title="Calibration">
+              <Facts
+                facts={[
+                  ['Performed', <PerformedText {...calibration} />],
+                  ['Method', calibration.method],
+                  ['Decision rule', calibration.decisionRule],
+                  ['Entered by', isOwn ? null : calibration.registeredBy.name],
+                  ['Signatory', calibration.signatory],
+                  ['Document', calibration.document && <DocumentLink {...calibration.document} />],
+                  ['Recorded', <DateText value={calibration.recordedAt} />],
+                  ['SHA-256', <Fingerprint value={calibration.contentSha256} />],
+                ]}
+              />
+            </Section>
+            {revisions.length > 1 && <Revisions revisions={revisions} shown={calibration.revisionId} />}
+            <div className="flex flex-wrap gap-2">
+              {first && (
+                <LinkButton to={paths.chain.href(first.uid)} weight="primary">
+                  {lines.length === 1 ? 'Open the chain' : `Open the chain of ${first.standard.marking}`}
+                </LinkButton>
+              )}
+              <Withdraw {...props} />
+            </div>
+          </>
+        }
+      >
+        <Section title="Results">
+          <LineTable lines={lines} />
+        </Section>
+      </TwoColumns>
+    </Page>
+  );
+}
+
+function Withdraw({ calibration, lines, abilities }: CalibrationResponse) {
+  const [isAsked, setAsked] = useState(false);
+  if (!can({ abilities }, 'calibration:withdraw') || calibration.state === 'withdrawn') return null;
+  return (
+    <>
+      <Button weight="destructive" onClick={() => setAsked(true)}>
+        Withdraw this calibration
+      </Button>
+      {isAsked && (
+        <WithdrawDialog calibration={calibration} weights={lines.length} onClose={() => setAsked(false)} />
+      )}
+    </>
+  );
+}
+
+function Revisions({ revisions, shown }: { revisions: CalibrationResponse['revisions']; shown: string }) {
+  return (
+    <Section title="Revisions">
+      <ul className="border-t border-rule">
+        {revisions.map(({ revisionId, n, issuedOn, reason }) => (
+          <li key={revisionId} className="border-b border-rule py-1">
+            {revisionId === shown ? (
+              <span className="font-medium">Revision {n}, this one</span>
+            ) : (
+              <Link to={paths.calibration.href(revisionId)} className="underline underline-offset-3">
+                Revision {n}
+              </Link>
+            )}
+            , <DateText value={issuedOn} />
+            {reason && <span className="block text-ink-2">{reason}</span>}
+          </li>
+        ))}
+      </ul>
+    </Section>
+  );
+}
+
+function DocumentLink({ id, name, size }: { id: string; name: string; size: number }) {
+  const kilobytes = Math.max(1, Math.round(size / 1000));
+  return (
+    <a href={`/api/documents/${id}`} className="break-all underline underline-offset-3">
+      {name} <span className="text-ink-3">{kilobytes} kB</span>
+    </a>
+  );
+}
+
+/** The first and last signs are enough to compare by eye; all of them can be read and copied. */
+function Fingerprint({ value }: { value: string }) {
+  return (
+    <details>
+      <summary className="font-mono text-sm">
+        {value.slice(0, 8)}…{value.slice(-8)}
+      </summary>
+      <span className="font-mono text-xs break-all text-ink-2">{value}</span>
+    </details>
+  );
+}

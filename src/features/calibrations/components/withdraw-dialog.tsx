@@ -1,0 +1,67 @@
+import { useState } from 'react';
+import { WithdrawBody, type CalibrationResponse } from '#shared/contracts/calibrations.ts';
+import { Button } from '#src/components/ui/button.tsx';
+import { Dialog } from '#src/components/ui/dialog.tsx';
+import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
+import { DateField, Textarea } from '#src/components/ui/text-field.tsx';
+import { errorAt, showFieldProblems, useZodForm } from '#src/lib/form.ts';
+import { useWithdraw } from '../api.ts';
+
+interface WithdrawDialogProps {
+  calibration: CalibrationResponse['calibration'];
+  weights: number;
+  onClose: () => void;
+}
+
+/** Says exactly what a withdrawal does, and asks for the reason and the day. */
+export function WithdrawDialog({ calibration, weights, onClose }: WithdrawDialogProps) {
+  const form = useZodForm(WithdrawBody, {
+    defaultValues: { reason: '', effectiveOn: new Date().toISOString().slice(0, 10) },
+  });
+  const withdraw = useWithdraw(calibration.revisionId);
+  const [isShownAtFields, setShownAtFields] = useState(false);
+  const { errors } = form.formState;
+  const submit = form.handleSubmit((body) =>
+    withdraw.mutate(body, {
+      onSuccess: onClose,
+      onError: (error) =>
+        setShownAtFields(showFieldProblems(error, form, (path) => path in form.getValues())),
+    }),
+  );
+  return (
+    <Dialog
+      title={`Withdraw certificate ${calibration.certificateNo}`}
+      onClose={onClose}
+      actions={
+        <>
+          <Button weight="destructive" type="submit" form="withdraw" isBusy={withdraw.isPending}>
+            Withdraw {weights === 1 ? 'its value' : `all ${weights} values`}
+          </Button>
+          <Button onClick={onClose}>Let it stand</Button>
+        </>
+      }
+    >
+      <p className="text-ink-2">
+        From the day given, {weights === 1 ? 'its value is' : `all ${weights} of its values are`} no longer in
+        force, and every chain that leans on {weights === 1 ? 'it' : 'them'} shows the break. The certificate
+        stays readable with your reason, and what it said before that day stays on record. This cannot be
+        undone; a new calibration takes its place.
+      </p>
+      <form id="withdraw" noValidate onSubmit={(event) => void submit(event)} className="flex flex-col gap-3">
+        <Textarea
+          label="Reason"
+          hint="Those who lean on it will read this"
+          maxLength={300}
+          error={errorAt(errors, 'reason')}
+          {...form.register('reason')}
+        />
+        <DateField
+          label="No longer in force from"
+          error={errorAt(errors, 'effectiveOn')}
+          {...form.register('effectiveOn')}
+        />
+      </form>
+      {withdraw.error && !isShownAtFields && <ErrorNotice error={withdraw.error} />}
+    </Dialog>
+  );
+}

@@ -1,0 +1,63 @@
+import { useFormContext } from 'react-hook-form';
+import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import { SelectField, type Choice } from '#src/components/ui/select-field.tsx';
+import { TextField } from '#src/components/ui/text-field.tsx';
+import { Toolbar } from '#src/components/layout/columns.tsx';
+import type { DraftValues } from './draft-values.ts';
+import { CLASSES, QUANTITIES, UNIT_CHOICES, VALUE_FORMS } from './line-choices.ts';
+import { ReferenceBox } from './reference-box.tsx';
+
+/** What is usually the same on a whole certificate, said once for all its lines. */
+export function ForAllLines({ lines }: { lines: readonly DraftLine[] }) {
+  const { setValue, getValues } = useFormContext<DraftValues>();
+  const change = (changes: Partial<DraftLine>): void =>
+    setValue(
+      'lines',
+      getValues('lines').map((line) => ({ ...line, ...changes })),
+      { shouldDirty: true },
+    );
+  const choose = (field: keyof DraftLine, label: string, choices: readonly Choice[], width: string) => (
+    <SelectField
+      label={label}
+      choices={choices}
+      placeholder={field === 'class' ? 'none' : 'differ'}
+      className={width}
+      value={(common(lines, field) as string | null) ?? ''}
+      onChange={(event) => {
+        const chosen = event.target.value;
+        if (chosen !== '' || field === 'class') change({ [field]: chosen || null });
+      }}
+    />
+  );
+  return (
+    <Toolbar label="For all lines">
+      {choose('quantity', 'Quantity', QUANTITIES, 'w-42')}
+      {choose('valueIs', 'Printed as', VALUE_FORMS, 'w-32')}
+      {choose('unit', 'in', UNIT_CHOICES, 'w-18')}
+      {choose('uUnit', 'U in', UNIT_CHOICES, 'w-18')}
+      <TextField
+        label="k"
+        className="w-14"
+        inputMode="decimal"
+        placeholder="differ"
+        value={(common(lines, 'k') as string | null) ?? ''}
+        onChange={(event) => change({ k: event.target.value })}
+      />
+      {choose('class', 'Class stated', CLASSES, 'w-22')}
+      <ReferenceBox
+        label="Reference of all lines"
+        className="min-w-48 flex-1"
+        quantity={(common(lines, 'quantity') as DraftLine['quantity'] | null) ?? undefined}
+        onChosen={({ valueUid }) =>
+          change({ references: [{ valueUid, sensitivity: '', usedAs: 'certificate' }] })
+        }
+      />
+    </Toolbar>
+  );
+}
+
+/** The value that all lines share; null where they differ. */
+function common(lines: readonly DraftLine[], field: keyof DraftLine): unknown {
+  const [first, ...rest] = lines;
+  return first && rest.every((line) => line[field] === first[field]) ? first[field] : null;
+}

@@ -1,0 +1,128 @@
+import { useState } from 'react';
+import { z } from 'zod';
+import type { DraftResponse } from '#shared/contracts/calibrations.ts';
+import { IssueDraftBody, type IssuedResponse } from '#shared/contracts/calibrations.ts';
+import { Button } from '#src/components/ui/button.tsx';
+import { Dialog } from '#src/components/ui/dialog.tsx';
+import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
+import { Quantity } from '#src/components/ui/quantity.tsx';
+import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
+import { TextField } from '#src/components/ui/text-field.tsx';
+import { Facts } from '#src/components/layout/facts.tsx';
+import { errorAt, showFieldProblems, useZodForm } from '#src/lib/form.ts';
+import { useIssueDraft } from '../api.ts';
+import { useKnown } from './known.ts';
+import { readLine } from './read-line.ts';
+
+const Signature = z.object({ password: IssueDraftBody.shape.password });
+
+interface IssueDialogProps {
+  draft: DraftResponse;
+  issuerName: string;
+  onIssued: (issued: IssuedResponse) => void;
+  onClose: () => void;
+}
+
+/** Shows exactly what will be fixed, and asks for the signatory's password again. */
+export function IssueDialog({ draft, issuerName, onIssued, onClose }: IssueDialogProps) {
+  const form = useZodForm(Signature, { defaultValues: { password: '' } });
+  const issue = useIssueDraft(draft.id);
+  const [isShownAtField, setShownAtField] = useState(false);
+  const { content } = draft;
+
+  const submit = form.handleSubmit(({ password }) =>
+    issue.mutate(
+      { version: draft.version, password },
+      {
+        onSuccess: onIssued,
+        onError: (error) => setShownAtField(showFieldProblems(error, form, (path) => path === 'password')),
+      },
+    ),
+  );
+
+  return (
+    <Dialog
+      title="Issue this calibration"
+      onClose={onClose}
+      actions={
+        <>
+          <Button weight="primary" type="submit" form="issue" isBusy={issue.isPending}>
+            Sign and issue
+          </Button>
+          <Button onClick={onClose}>Not yet</Button>
+        </>
+      }
+    >
+      <Facts
+        facts={[
+          ['Certificate', <span className="font-mono text-sm">{content.certificateNo}</span>],
+          ['Issued by', `${issuerName}, ${content.issuedOn}`],
+          ['Performed', daysOf(content.performedBegin, content.performedEnd)],
+          ['Method', content.method],
+        ]}
+      />
+      <FixedLines draft={draft} />
+      <p className="text-ink-2">
+        Once issued, nothing of this changes any more: these values enter the register under your name, and
+        others lean on them. A mistake is mended by a revision or a withdrawal, which stays visible.
+      </p>
+      <form id="issue" noValidate onSubmit={(event) => void submit(event)}>
+        <TextField
+          label="Your password again: it is your signature"
+          type="password"
+          autoComplete="current-password"
+          className="max-w-72"
+          error={errorAt(form.formState.errors, 'password')}
+          {...form.register('password')}
+        />
+      </form>
+      {issue.error && !isShownAtField && <ErrorNotice error={issue.error} />}
+    </Dialog>
+  );
+}
+
+function FixedLines({ draft }: { draft: DraftResponse }) {
+  const known = useKnown();
+  return (
+    <Table caption="What will be fixed" isScrolled={draft.content.lines.length > 12}>
+      <thead>
+        <tr>
+          <Head>Weight</Head>
+          <Head align="right">Deviation</Head>
+          <Head align="right">U</Head>
+          <Head align="right">k</Head>
+          <Head>Reference</Head>
+        </tr>
+      </thead>
+      <tbody>
+        {draft.content.lines.map((line) => {
+          const standard = known.standards.get(line.standardId ?? '');
+          const { deviation, expandedU, k } = readLine(line, standard);
+          const references = line.references.map(
+            ({ valueUid }) => known.references.get(valueUid)?.registryNo ?? '?',
+          );
+          return (
+            <Row key={line.key}>
+              <Cell isHeading>
+                <span className="font-mono text-sm whitespace-nowrap">{standard?.registryNo ?? '?'}</span>{' '}
+                <span className="whitespace-nowrap">{standard?.marking}</span>
+              </Cell>
+              <Cell align="right">
+                {deviation ? <Quantity value={deviation} kind="deviation" shownIn={line.unit} /> : '?'}
+              </Cell>
+              <Cell align="right">
+                {expandedU ? <Quantity value={expandedU} shownIn={line.uUnit} /> : 'not stated'}
+              </Cell>
+              <Cell align="right">{k ?? ''}</Cell>
+              <Cell isMono>{references.join(', ') || 'none'}</Cell>
+            </Row>
+          );
+        })}
+      </tbody>
+    </Table>
+  );
+}
+
+function daysOf(begin: string, end: string): string {
+  return begin === end ? begin : `${begin} to ${end}`;
+}

@@ -1,0 +1,105 @@
+import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import { Quantity } from '#src/components/ui/quantity.tsx';
+import { StateMark } from '#src/components/ui/state-mark.tsx';
+import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
+import { Section } from '#src/components/layout/page.tsx';
+import { useKnown } from './known.ts';
+import { readLine } from './read-line.ts';
+
+/** What the entries mean: each result as the register will hold it, worked out while one types. */
+export function ResultsAside({ lines }: { lines: readonly DraftLine[] }) {
+  const known = useKnown();
+  if (lines.length === 0) return null;
+  return (
+    <Section title="Results, as they are read">
+      <Table caption="Results, as they are read">
+        <thead>
+          <tr>
+            <Head>Weight</Head>
+            <Head align="right">Deviation</Head>
+            <Head align="right">U</Head>
+            <Head align="right">Since last</Head>
+            <Head>U, a third of limit</Head>
+          </tr>
+        </thead>
+        <tbody>
+          {lines.map((line, at) => {
+            const standard = known.standards.get(line.standardId ?? '');
+            const { deviation, expandedU, k, change, third } = readLine(line, standard);
+            return (
+              <Row key={line.key}>
+                <Cell isHeading className="whitespace-nowrap">
+                  {standard?.marking ?? `line ${at + 1}`}
+                </Cell>
+                <Cell align="right">
+                  {deviation ? (
+                    <Quantity
+                      value={deviation}
+                      kind="deviation"
+                      shownIn="auto"
+                      expandedUncertainty={expandedU}
+                      coverageFactor={k}
+                      hidesUncertainty
+                    />
+                  ) : (
+                    <Nothing />
+                  )}
+                </Cell>
+                <Cell align="right">
+                  {expandedU ? (
+                    <Quantity value={expandedU} kind="uncertainty" shownIn="auto" coverageFactor={k} />
+                  ) : line.uNotStated ? (
+                    'not stated'
+                  ) : (
+                    <Nothing />
+                  )}
+                </Cell>
+                <Cell align="right">
+                  {change ? <Change {...change} expandedU={expandedU} /> : <Nothing />}
+                </Cell>
+                <Cell>
+                  {third ? (
+                    <StateMark state={third.isWithin ? 'sound' : 'caution'}>
+                      {third.isWithin ? 'within' : 'above'}{' '}
+                      <span className="whitespace-nowrap">{third.class}</span>
+                    </StateMark>
+                  ) : (
+                    <Nothing />
+                  )}
+                </Cell>
+              </Row>
+            );
+          })}
+        </tbody>
+      </Table>
+    </Section>
+  );
+}
+
+function Change({
+  deviation,
+  ratio,
+  expandedU,
+}: {
+  deviation: string;
+  ratio: number | null;
+  expandedU: string | null;
+}) {
+  return (
+    <span title={ratio === null ? undefined : `${ratio.toFixed(2)} of the U of the change`}>
+      <Quantity
+        value={deviation}
+        kind="deviation"
+        shownIn="auto"
+        expandedUncertainty={expandedU}
+        hidesUncertainty
+        className={ratio !== null && ratio > 1 ? 'text-caution' : ''}
+      />
+      {ratio !== null && <span className="block text-xs text-ink-2">E = {ratio.toFixed(2)}</span>}
+    </span>
+  );
+}
+
+function Nothing() {
+  return <span className="text-ink-3">–</span>;
+}

@@ -1,0 +1,64 @@
+import type { StandardRow } from '#shared/contracts/standards.ts';
+import { Combobox, type ComboboxOption } from '#src/components/ui/combobox.tsx';
+import { findStandards } from '../api.ts';
+import { useDraft } from './draft-context.ts';
+import { useKnown } from './known.ts';
+
+/** One weight, or a whole set in the order of its numbers. */
+interface WeightOption extends ComboboxOption {
+  weights: () => Promise<StandardRow[]>;
+}
+
+interface StandardBoxProps {
+  label: string;
+  isLabelHidden?: boolean;
+  /** Offers whole sets beside single weights. */
+  hasSets?: boolean;
+  onChosen: (weights: StandardRow[]) => void;
+  className?: string;
+}
+
+const LONGEST_LIST = 30;
+const LARGEST_SET = 200;
+
+/** Finds weights of the laboratory by part of a number or marking; a set comes as a whole. */
+export function StandardBox({ label, isLabelHidden, hasSets, onChosen, className }: StandardBoxProps) {
+  const { laboratoryId } = useDraft();
+  const { learnStandards } = useKnown();
+  return (
+    <Combobox<WeightOption>
+      {...{ label, isLabelHidden, className }}
+      placeholder={hasSets ? 'registry number or marking; a set by its number' : 'registry number or marking'}
+      emptyText="No weight of this laboratory by that number or marking"
+      value={null}
+      onChange={(option) => {
+        void option?.weights().then((weights) => {
+          learnStandards(weights);
+          onChosen(weights);
+        });
+      }}
+      search={async (text, signal) => {
+        const rows = await findStandards(laboratoryId, text, LONGEST_LIST, signal);
+        return [...(hasSets ? setOptions(rows, laboratoryId) : []), ...rows.map(weightOption)];
+      }}
+    />
+  );
+}
+
+function weightOption(row: StandardRow): WeightOption {
+  const detail = [row.marking, row.class && `class ${row.class}`].filter(Boolean).join(', ');
+  return { id: row.id, label: row.registryNo, detail, weights: async () => [row] };
+}
+
+function setOptions(rows: readonly StandardRow[], laboratoryId: string): WeightOption[] {
+  const sets = new Map(rows.flatMap(({ set }) => (set ? [[set.id, set] as const] : [])));
+  return [...sets.values()].map(({ id, registryNo }) => ({
+    id,
+    label: `Whole set ${registryNo}`,
+    detail: 'every weight of it, a line each',
+    weights: async () => {
+      const members = await findStandards(laboratoryId, registryNo, LARGEST_SET);
+      return members.filter(({ set }) => set?.id === id);
+    },
+  }));
+}
