@@ -88,20 +88,24 @@ describe('plotGeometry', () => {
   });
 
   it('keeps labels within the frame and apart, on a telephone too', () => {
-    for (const width of [328, 720, 1400]) {
+    for (const width of [328, 358, 720, 1400]) {
       const { marks, frame } = draw(HISTORY, { width, dueOn: '2021-06-01' });
-      const spans = marks.map((mark) => {
-        const length = mark.text.length * 6;
-        return mark.anchor === 'end' ? [mark.x - length, mark.x] : [mark.x, mark.x + length];
+      const spans = marks.map(({ anchor, text, textX }) => {
+        const length = text.length * 6.5;
+        return anchor === 'end' ? { from: textX - length, to: textX } : { from: textX, to: textX + length };
       });
-      for (const [from, to] of spans) {
-        expect(from).toBeGreaterThanOrEqual(frame.left - 8);
-        expect(to).toBeLessThanOrEqual(frame.right + 8);
+      for (const { from, to } of spans) {
+        expect(from).toBeGreaterThanOrEqual(frame.left);
+        expect(to).toBeLessThanOrEqual(frame.right);
       }
       const [first, second] = spans;
-      const areApart = first![1]! <= second![0]! || second![1]! <= first![0]!;
+      const areApart = first!.to <= second!.from || second!.to <= first!.from;
       expect(areApart || marks[0]!.row !== marks[1]!.row).toBe(true);
     }
+  });
+
+  it('shortens a label before it is cut off', () => {
+    expect(draw(HISTORY, { width: 328 }).marks[0]!.text).toBe('adjusted 2021-03-02');
   });
 
   it('draws the error limit where it fits the values, else a third of it, else nothing', () => {

@@ -4,7 +4,7 @@ import type { Unit } from '#shared/engine/quantity/units.ts';
 import type { z } from 'zod';
 import { convertText, deviationUnit } from '#src/lib/format-decimal.ts';
 import { dayNumber, possibleDays } from './days.ts';
-import { placeLabels, type PlacedLabel } from './plot-labels.ts';
+import { placeLabels, type Mark, type PlacedLabel } from './plot-labels.ts';
 import { chooseBand, valueDomain, type Band, type Domain } from './plot-domain.ts';
 import { timeTicks, valueTicks, type Tick } from './ticks.ts';
 
@@ -85,7 +85,7 @@ export function plotGeometry(input: PlotInput): PlotGeometry | null {
       at: y(at),
       label: new Decimal(at).toFixed(),
     })),
-    timeTicks: timeTicks(days.low, days.high, (right - AXIS_ROOM) / 64).map((tick) => ({
+    timeTicks: timeTicks(days.low, days.high, (right - AXIS_ROOM) / 84).map((tick) => ({
       ...tick,
       at: x(tick.at),
     })),
@@ -156,21 +156,24 @@ function linesOf(points: readonly PlotPoint[]): { x: number; y: number }[][] {
 }
 
 /** The first epoch begins with the weight itself and needs no mark. */
-function marksOf({ epochs, dueOn }: PlotInput, x: (day: number) => number) {
+function marksOf({ epochs, dueOn }: PlotInput, x: (day: number) => number): Mark[] {
   const interventions = epochs
     .filter((epoch) => epoch.n > 1)
-    .map((epoch) => ({
-      kind: 'epoch' as const,
-      x: x(dayNumber(epoch.beginsOn)),
-      text: `${epoch.reason} ${epoch.beginsOn}, new epoch`,
-    }));
-  return dueOn
-    ? [...interventions, { kind: 'due' as const, x: x(dayNumber(dueOn)), text: `due ${dueOn}` }]
-    : interventions;
+    .map((epoch): Mark => {
+      const text = `${epoch.reason} ${epoch.beginsOn}`;
+      return {
+        kind: 'epoch',
+        day: epoch.beginsOn,
+        x: x(dayNumber(epoch.beginsOn)),
+        texts: [`${text}, new epoch`, text],
+      };
+    });
+  if (!dueOn) return interventions;
+  return [...interventions, { kind: 'due', day: dueOn, x: x(dayNumber(dueOn)), texts: [`due ${dueOn}`] }];
 }
 
 function widened(domain: Domain, halfWidth: number): Domain {
-  const room = halfWidth * 1.08;
+  const room = halfWidth * 1.22;
   return { low: Math.min(domain.low, -room), high: Math.max(domain.high, room) };
 }
 

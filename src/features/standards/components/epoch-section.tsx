@@ -1,0 +1,48 @@
+import { useState } from 'react';
+import type { StandardResponse } from '#shared/contracts/standards.ts';
+import { Facts } from '#src/components/layout/facts.tsx';
+import { Section } from '#src/components/layout/page.tsx';
+import { Button } from '#src/components/ui/button.tsx';
+import { DateText } from '#src/components/ui/date-text.tsx';
+import { can } from '#src/lib/abilities.ts';
+import { EpochDialog } from './epoch-dialog.tsx';
+
+/** The stretches of the weight's life; nothing is drawn, fitted or compared across their ends. */
+export function EpochSection({ sheet }: { sheet: StandardResponse }) {
+  const [isOpening, setOpening] = useState(false);
+  const canChange = can(sheet, 'standard:change');
+  if (!canChange && sheet.epochs.length < 2) return null;
+  return (
+    <Section
+      title="Epochs"
+      actions={
+        canChange && (
+          <Button weight="text" onClick={() => setOpening(true)}>
+            Open a new epoch
+          </Button>
+        )
+      }
+    >
+      <Facts
+        facts={sheet.epochs
+          .toReversed()
+          .map((epoch) => [`Epoch ${epoch.n}`, <EpochText key={epoch.n} epoch={epoch} />] as const)}
+      />
+      {isOpening && <EpochDialog sheet={sheet} onClose={() => setOpening(false)} />}
+    </Section>
+  );
+}
+
+function EpochText({ epoch }: { epoch: StandardResponse['epochs'][number] }) {
+  return (
+    <>
+      {epoch.reason}, from <DateText value={epoch.beginsOn} />
+      {epoch.lastGoodOn && (
+        <>
+          ; last known good <DateText value={epoch.lastGoodOn} />
+        </>
+      )}
+      {epoch.note && <span className="block text-sm text-ink-2">{epoch.note}</span>}
+    </>
+  );
+}
