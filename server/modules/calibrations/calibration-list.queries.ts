@@ -1,7 +1,8 @@
 import type { Sequelize } from 'sequelize';
 import type { CalibrationListQuery, CalibrationListResponse } from '#shared/contracts/calibrations.ts';
 import { knownAt } from '#server/db/in-force.ts';
-import { readRow, readRows } from '#server/db/read.ts';
+import { boundedCount } from '#server/db/bounded-count.ts';
+import { readRows } from '#server/db/read.ts';
 import { STATE_ON_DAY } from '#server/db/value-state.ts';
 import { cursorAfter, placeOf, type Place } from '#server/http/cursor.ts';
 
@@ -13,8 +14,6 @@ export interface CalibrationList {
   count: number;
   isCountExact: boolean;
 }
-
-const COUNTED = 10_000;
 
 /** Numbers compare byte by byte in their columns; people search them in either case. */
 const ANY_CASE = 'COLLATE utf8mb4_uca1400_ai_ci';
@@ -69,11 +68,6 @@ export async function calibrationList(
   const page = await pageOf(database, query, { from, conditions, replacements, place });
   const shown = page.slice(0, query.limit);
   const last = page.length > query.limit ? shown.at(-1) : undefined;
-  const counted = await readRow<{ count: number }>(
-    database,
-    `SELECT COUNT(*) AS count FROM (SELECT r.id FROM ${from} WHERE ${conditions} LIMIT ${COUNTED + 1}) c`,
-    replacements,
-  );
   return {
     calibrations: await rowsOf(
       database,
@@ -81,8 +75,7 @@ export async function calibrationList(
       day,
     ),
     nextCursor: last ? cursorAfter(query.sort, { value: last.sortKey, id: last.id }) : null,
-    count: Math.min(counted?.count ?? 0, COUNTED),
-    isCountExact: (counted?.count ?? 0) <= COUNTED,
+    ...(await boundedCount(database, `FROM ${from} WHERE ${conditions}`, replacements, page.length)),
   };
 }
 

@@ -1,13 +1,11 @@
 import type { Sequelize } from 'sequelize';
 import type { StandardListQuery } from '#shared/contracts/standards.ts';
 import { IN_FORCE, knownAt } from '#server/db/in-force.ts';
-import { readRow, readRows } from '#server/db/read.ts';
+import { boundedCount } from '#server/db/bounded-count.ts';
+import { readRows } from '#server/db/read.ts';
 import { cursorAfter, placeOf, type Place } from '#server/http/cursor.ts';
 import { factOnDay } from './standard-laboratory.queries.ts';
 import { standardRows, type StandardRecord } from './standard-rows.queries.ts';
-
-/** Beyond this a list says "more than": nobody reads so far, and counting a million takes its time. */
-const COUNTED = 10_000;
 
 export interface StandardList {
   standards: StandardRecord[];
@@ -63,11 +61,6 @@ export async function standardList(
   const page = await pageOf(database, query, { conditions, replacements, place });
   const shown = page.slice(0, query.limit);
   const last = page.length > query.limit ? shown.at(-1) : undefined;
-  const counted = await readRow<{ count: number }>(
-    database,
-    `SELECT COUNT(*) AS count FROM (SELECT s.id FROM standard s WHERE ${conditions} LIMIT ${COUNTED + 1}) c`,
-    replacements,
-  );
   return {
     standards: await standardRows(
       database,
@@ -75,8 +68,7 @@ export async function standardList(
       day,
     ),
     nextCursor: last ? cursorAfter(query.sort, { value: last.sortKey, id: last.id }) : null,
-    count: Math.min(counted?.count ?? 0, COUNTED),
-    isCountExact: (counted?.count ?? 0) <= COUNTED,
+    ...(await boundedCount(database, `FROM standard s WHERE ${conditions}`, replacements, page.length)),
   };
 }
 
