@@ -27,13 +27,19 @@ const LINK_RULES = RULES.filter((rule) => rule.scope === 'link');
 const VALUE_RULES = RULES.filter((rule) => rule.scope === 'value');
 const CHAIN_RULES = RULES.filter((rule) => rule.scope === 'chain');
 
+/** How the steps of a chain are judged: anew, or as somebody who asked before found them. */
+export interface StepJudges {
+  judgeLink(link: LinkFacts, question: Question): Check[];
+  judgeValue(value: ValueFacts, question: Question): Check[];
+}
+
 /** Runs every rule over a chain. A link that only informs is not judged by link rules: nothing flows through it. */
-export function judgeChain(chain: ChainFacts): ChainJudgement {
+export function judgeChain(chain: ChainFacts, steps: StepJudges = { judgeLink, judgeValue }): ChainJudgement {
   const { question } = chain;
   const links = chain.links.filter((link) => link.role === 'reference');
   const checks = [
-    ...links.flatMap((link) => judgeLink(link, question)),
-    ...chain.values.flatMap((value) => judgeValue(value, question)),
+    ...links.flatMap((link) => steps.judgeLink(link, question)),
+    ...chain.values.flatMap((value) => steps.judgeValue(value, question)),
     ...checksOf(CHAIN_RULES, { type: 'chain' }, chain, question),
   ];
   return { checks, links: standingsOf(chain, checks), rules: rulesInWords(question.day) };

@@ -76,19 +76,51 @@ export class ChainStore {
 
   /** What is known of these standards, duplicates' partners included. */
   async standards(ids: Iterable<string>): Promise<Map<string, StandardDossier>> {
-    const wanted = new Set(ids);
-    await this.#loadStandards(wanted);
-    const partners = new Set([...wanted].flatMap((id) => this.#standards.get(id)?.duplicateIds ?? []));
-    await this.#loadStandards(partners);
-    return this.#standards;
+    const found = await this.#standardsOf(ids);
+    const partners = [...found.values()].flatMap((dossier) => dossier.duplicateIds);
+    for (const [id, dossier] of await this.#standardsOf(partners)) found.set(id, dossier);
+    return found;
   }
 
   /** What is known of these laboratories. */
   async laboratories(ids: Iterable<string>): Promise<Map<string, LaboratoryDossier>> {
-    const missing = [...new Set(ids)].filter((id) => !this.#laboratories.has(id));
-    for (const dossier of await laboratoryDossiers(this.#database, missing))
-      this.#laboratories.set(dossier.id, dossier);
-    return this.#laboratories;
+    return this.#dossiers(this.#laboratories, ids, async (missing) => {
+      const dossiers = await laboratoryDossiers(this.#database, missing);
+      return dossiers.map((dossier) => [dossier.id, dossier]);
+    });
+  }
+
+  #standardsOf(ids: Iterable<string>): Promise<Map<string, StandardDossier>> {
+    return this.#dossiers(this.#standards, ids, async (missing) => {
+      const dossiers = await standardDossiers(this.#database, missing);
+      return dossiers.map((dossier) => [dossier.standardId, dossier]);
+    });
+  }
+
+  /**
+   * From memory, or read and remembered. Those found are handed out as a map of their own: an act may empty the
+   * memory while a chain is worked out. What was read while an act came in may be older than it, and is not kept.
+   */
+  async #dossiers<Dossier>(
+    memory: Map<string, Dossier>,
+    ids: Iterable<string>,
+    read: (missing: string[]) => Promise<(readonly [string, Dossier])[]>,
+  ): Promise<Map<string, Dossier>> {
+    const found = new Map<string, Dossier>();
+    const missing: string[] = [];
+    for (const id of new Set(ids)) {
+      const known = memory.get(id);
+      if (known) found.set(id, known);
+      else missing.push(id);
+    }
+    const seq = this.#seq;
+    for (const chunk of chunks(missing, 1_000)) {
+      for (const [id, dossier] of await read(chunk)) {
+        found.set(id, dossier);
+        if (this.#seq === seq) memory.set(id, dossier);
+      }
+    }
+    return found;
   }
 
   async #lookForActs(): Promise<void> {
@@ -109,7 +141,7 @@ export class ChainStore {
     );
     if (rows.length > WHOLE_REGISTER) return;
     await this.#loadValues(rows.map((row) => row.id));
-    await this.#loadStandards(new Set(rows.map((row) => row.standardId)));
+    await this.standards(rows.map((row) => row.standardId));
     await this.laboratories(rows.flatMap((row) => [row.issuerId, row.holderId]));
   }
 
@@ -166,16 +198,6 @@ export class ChainStore {
       for (const source of sources) this.#sources.set(source.id, source);
       for (const group of groups) this.#groups.set(group.id, group);
       for (const value of values) this.#values.set(value.id, value);
-    }
-  }
-
-  async #loadStandards(ids: Set<string>): Promise<void> {
-    for (const chunk of chunks(
-      [...ids].filter((id) => !this.#standards.has(id)),
-      1_000,
-    )) {
-      for (const dossier of await standardDossiers(this.#database, chunk))
-        this.#standards.set(dossier.standardId, dossier);
     }
   }
 

@@ -10,6 +10,7 @@ import { contributionsOf } from './contributions.ts';
 import { historyBefore } from './history.ts';
 import { improvementsOf } from './improvements.ts';
 import { sideBySide } from './side-by-side.ts';
+import { StepMemory } from './step-memory.ts';
 import type { LaboratoryDossier, StandardDossier, StoredValue } from './stored.ts';
 import { tiersOf } from './tiers.ts';
 
@@ -28,12 +29,16 @@ export interface Chain {
   sideBySide: ReturnType<typeof sideBySide>;
 }
 
-/** Chains already worked out, valid until the next act. */
-const LONGEST_MEMORY = 300;
+/** What was worked out already, valid until the next act. */
 interface Remembered {
   seq: number;
   chains: Map<string, Chain>;
+  /** By question. */
+  steps: Map<string, StepMemory>;
 }
+/** Bounds of that memory: a chain is up to 1 MB, a step about 10 kB. */
+const MOST_CHAINS = 300;
+const MOST_STEPS = 10_000;
 const memories = new WeakMap<ChainStore, Remembered>();
 
 /**
@@ -52,36 +57,44 @@ export async function chainOf(
     known: asked.known ?? today(context),
     programmeEndedAfterUse: 'said',
   };
-  const key = `${focusId} ${question.day} ${question.known}`;
   const memory = memoryOf(store);
-  const remembered = memory.get(key);
+  const key = `${focusId} ${question.day} ${question.known}`;
+  const remembered = memory.chains.get(key);
   if (remembered) return remembered;
-  const chain = await workOut(store, focusId, question);
-  if (memory.size >= LONGEST_MEMORY) memory.delete(memory.keys().next().value!);
-  memory.set(key, chain);
+  const chain = await workOut(store, focusId, stepsOf(memory, question));
+  if (memory.chains.size >= MOST_CHAINS) memory.chains.delete(memory.chains.keys().next().value!);
+  memory.chains.set(key, chain);
   return chain;
 }
 
-function memoryOf(store: ChainStore): Map<string, Chain> {
+function memoryOf(store: ChainStore): Remembered {
   const memory = memories.get(store);
-  if (memory?.seq === store.seq) return memory.chains;
-  const fresh = { seq: store.seq, chains: new Map<string, Chain>() };
+  if (memory?.seq === store.seq) return memory;
+  const fresh = { seq: store.seq, chains: new Map<string, Chain>(), steps: new Map<string, StepMemory>() };
   memories.set(store, fresh);
-  return fresh.chains;
+  return fresh;
 }
 
-async function workOut(store: ChainStore, focusId: number, question: Question): Promise<Chain> {
+function stepsOf({ steps }: Remembered, question: Question): StepMemory {
+  const key = `${question.day} ${question.known}`;
+  const known = steps.get(key);
+  if (known) return known;
+  const size = [...steps.values()].reduce((sum, memory) => sum + memory.size, 0);
+  if (size >= MOST_STEPS) steps.clear();
+  const fresh = new StepMemory(question);
+  steps.set(key, fresh);
+  return fresh;
+}
+
+async function workOut(store: ChainStore, focusId: number, steps: StepMemory): Promise<Chain> {
+  const { question } = steps;
   const closure = await store.closure([focusId]);
   const focus = closure.values.find((value) => value.id === focusId)!;
   const [standards, laboratories] = await Promise.all([
     store.standards(closure.values.map((value) => value.standardId)),
     store.laboratories(closure.values.flatMap((value) => [value.issuerId, value.holderId])),
   ]);
-  const earlier = closure.values.flatMap((value) => {
-    const before = historyBefore(standards.get(value.standardId)!, value);
-    return before ? [before.id] : [];
-  });
-  const widened = await store.closure([focusId, ...earlier]);
+  const widened = await store.closure([focusId, ...earlierThan(closure, steps, standards)]);
   const numbers = chainNumbers(widened, focus.uid);
   const contributions = contributionsOf(widened, numbers.propagation);
   const parts: FactParts = {
@@ -91,7 +104,7 @@ async function workOut(store: ChainStore, focusId: number, question: Question): 
     numbers,
     byId: new Map(widened.values.map((value) => [value.id, value])),
   };
-  const facts = chainFacts(closure, focus, parts, contributions);
+  const facts = chainFacts(closure, focus, parts, contributions, steps);
   return {
     question,
     focus,
@@ -100,7 +113,7 @@ async function workOut(store: ChainStore, focusId: number, question: Question): 
     laboratories,
     numbers,
     tiers: tiersOf(closure, focus),
-    judgement: judgeChain(facts),
+    judgement: judgeChain(facts, steps),
     contributions,
     improvements: improvementsOf(closure, focus, numbers.propagation, standards, endOfDay(question.known)),
     sideBySide: sideBySide(
@@ -112,19 +125,34 @@ async function workOut(store: ChainStore, focusId: number, question: Question): 
   };
 }
 
+/** The values that the steps not judged yet are compared with: their covariances are needed. */
+function earlierThan(closure: Closure, steps: StepMemory, standards: Map<string, StandardDossier>): number[] {
+  return closure.values.flatMap((value) => {
+    const before = steps.knows(value) ? null : historyBefore(standards.get(value.standardId)!, value);
+    return before ? [before.id] : [];
+  });
+}
+
 function chainFacts(
   closure: Closure,
   focus: StoredValue,
   parts: FactParts,
   contributions: Chain['contributions'],
+  steps: StepMemory,
 ): ChainFacts {
-  const values = new Map(closure.values.map((value) => [value.id, valueFacts(value, parts)]));
+  const values = new Map(
+    closure.values.map((value) => [value.id, steps.value(value, () => valueFacts(value, parts))]),
+  );
   return {
     question: parts.question,
     focusUid: focus.uid,
     values: [...values.values()],
     links: closure.values.flatMap((value) =>
-      value.parents.map((link) => linkFacts(values.get(value.id)!, values.get(link.parentId)!, link, parts)),
+      value.parents.map((link) =>
+        steps.link(value, link, () =>
+          linkFacts(values.get(value.id)!, values.get(link.parentId)!, link, parts),
+        ),
+      ),
     ),
     contributions: contributionFacts(contributions, closure),
     varianceNow: parts.numbers.variance(focus.uid),
