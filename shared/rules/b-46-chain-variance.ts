@@ -54,17 +54,16 @@ function judgeExcess(
 ) {
   const expanded = Math.sqrt(variance) * Number(k);
   const excess = expanded / Number(focus.expandedU) - 1;
-  const deficits = chain.values.filter(isDeficit).map(certificateText);
   const parameters = {
     ...known,
     carried: amountText(expanded, focus),
     excess: percentText(Math.max(0, excess)),
-    deficits: deficits.join('; '),
   };
   const verdict = coverage(focus, k, variance);
   if (verdict === 'holds') return holds('covers', parameters);
   if (verdict === 'within rounding') return holds('rounding', parameters);
-  if (deficits.length > 0) return fails('inherits', parameters);
+  const deficits = chain.values.filter(isDeficit).map(certificateText);
+  if (deficits.length > 0) return fails('inherits', { ...parameters, deficits: deficits.join('; ') });
   return excess > ROUNDING_SHARE
     ? fails('exceeds', parameters)
     : holds('rounding', parameters, 'information');

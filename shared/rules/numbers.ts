@@ -6,17 +6,17 @@ import type { ResultFacts } from './facts.ts';
 /** Standard uncertainty in g as the certificate states it, U/k; null where U or k is not stated. */
 export function statedU(result: Pick<ResultFacts, 'expandedU' | 'k'>): number | null {
   if (result.expandedU === null || result.k === null) return null;
-  return new Decimal(result.expandedU).div(result.k).toNumber();
+  return Number(result.expandedU) / Number(result.k);
 }
 
 /** A deviation in g as a number, for comparisons against an uncertainty only. */
 export function deviationOf(result: Pick<ResultFacts, 'deviation'>): number {
-  return new Decimal(result.deviation).toNumber();
+  return Number(result.deviation);
 }
 
 /** Grams in the reported unit. */
 export function inReportedUnit(result: Pick<ResultFacts, 'reportedUnit'>, grams: string | number): Decimal {
-  return new Decimal(grams).times(new Decimal(10).pow(-UNIT_DEFINITIONS[result.reportedUnit].exponent));
+  return new Decimal(grams).times(`1e${-UNIT_DEFINITIONS[result.reportedUnit].exponent}`);
 }
 
 /** Half of the value's last printed digit, g. */
@@ -114,5 +114,5 @@ function quantityText(
 }
 
 function halfDigitAt(result: Pick<ResultFacts, 'reportedUnit'>, decimals: number): Decimal {
-  return new Decimal(10).pow(UNIT_DEFINITIONS[result.reportedUnit].exponent - decimals).div(2);
+  return new Decimal(`5e${UNIT_DEFINITIONS[result.reportedUnit].exponent - decimals - 1}`);
 }

@@ -38,12 +38,15 @@ export function inferLocal(a: {
   }
   requireNonNegative(a.carriedVariance, 'carriedVariance');
   const decimals = text.split('.')[1]?.length ?? 0;
-  const half = new Decimal(10).pow(-decimals).div(2);
-  const varianceOf = (expanded: Decimal) => expanded.div(a.coverageFactor).pow(2);
+  const half = new Decimal(`5e${-decimals - 1}`);
+  const varianceOf = (expanded: Decimal) => {
+    const u = expanded.div(a.coverageFactor);
+    return u.times(u);
+  };
   const carried = new Decimal(a.carriedVariance);
   const stated = new Decimal(text);
   if (carried.gt(varianceOf(stated.plus(half)))) return { local: 0, verdict: 'deficit' };
   if (carried.gte(varianceOf(Decimal.max(0, stated.minus(half)))))
     return { local: 0, verdict: 'within rounding' };
-  return { local: varianceOf(stated).minus(carried).sqrt().toNumber(), verdict: 'holds' };
+  return { local: Math.sqrt(varianceOf(stated).minus(carried).toNumber()), verdict: 'holds' };
 }
