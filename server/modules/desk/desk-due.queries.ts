@@ -32,23 +32,22 @@ export async function deskDue(
     Omit<Due, 'holder'> & { holderId: string; holderCode: string; holderName: string }
   >(
     database,
-    `SELECT s.id AS standardId, s.registry_no AS registryNo, s.marking, d.lastCalibrated,
-            DATE_ADD(d.lastCalibrated, INTERVAL d.months MONTH) AS dueOn,
+    `SELECT s.id AS standardId, s.registry_no AS registryNo, s.marking, d.lastCalibrated, d.dueOn,
             l.id AS holderId, l.code AS holderCode, l.name AS holderName
      FROM (
-       SELECT p.standard_id, p.laboratory_id, p.interval_months AS months,
-              (SELECT MAX(v.performed_end) FROM assigned_value v
-               WHERE v.standard_id = p.standard_id AND ${IN_FORCE}) AS lastCalibrated
+       SELECT p.standard_id, p.laboratory_id, MAX(v.performed_end) AS lastCalibrated,
+              DATE_ADD(MAX(v.performed_end), INTERVAL p.interval_months MONTH) AS dueOn
        FROM programme p
+       JOIN assigned_value v ON v.standard_id = p.standard_id AND ${IN_FORCE}
        WHERE p.laboratory_id IN (:laboratoryIds)
-         AND p.valid_from <= :day AND (p.valid_to IS NULL OR p.valid_to >= :day) AND ${IS_LATEST}) d
+         AND p.valid_from <= :day AND (p.valid_to IS NULL OR p.valid_to >= :day) AND ${IS_LATEST}
+       GROUP BY p.id
+       HAVING dueOn <= DATE_ADD(:day, INTERVAL ${DAYS_AHEAD} DAY)) d
      JOIN standard s ON s.id = d.standard_id
      JOIN laboratory l ON l.id = d.laboratory_id
-     WHERE d.lastCalibrated IS NOT NULL
-       AND DATE_ADD(d.lastCalibrated, INTERVAL d.months MONTH) <= DATE_ADD(:day, INTERVAL ${DAYS_AHEAD} DAY)
-       AND COALESCE(${factOnDay('state', 's.id')}, 'in service') = 'in service'
+     WHERE COALESCE(${factOnDay('state', 's.id')}, 'in service') = 'in service'
        AND COALESCE(${factOnDay('custodian', 's.id')}, s.laboratory_id) = d.laboratory_id
-     ORDER BY dueOn, registryNo LIMIT ${SHOWN}`,
+     ORDER BY d.dueOn, s.registry_no LIMIT ${SHOWN}`,
     { laboratoryIds, day, knownAt },
   );
   return rows.map(({ holderId, holderCode, holderName, ...due }) => ({
