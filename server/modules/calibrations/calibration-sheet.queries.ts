@@ -67,7 +67,8 @@ const HEAD = `
 const LINES = `
   SELECT v.id, v.uid, v.line, s.id AS standardId, s.registry_no AS registryNo, s.marking, v.nominal,
     h.id AS holderId, h.code AS holderCode, h.name AS holderName, v.quantity, v.medium, v.stage, v.deviation,
-    v.reported_unit AS reportedUnit, v.reported_decimals AS reportedDecimals, v.expanded_u AS expandedU, v.k,
+    v.reported_unit AS reportedUnit, v.reported_decimals AS reportedDecimals,
+    v.reported_u_decimals AS reportedUDecimals, v.expanded_u AS expandedU, v.k,
     v.coverage, v.class, v.under_accreditation AS underAccreditation,
     ${STATE_ON_DAY} AS state, ${STATE_SINCE} AS stateSince
   FROM assigned_value v

@@ -85,6 +85,7 @@ function presentLine(
     deviation: decimalText(line.deviation),
     reportedUnit: line.reportedUnit,
     reportedDecimals: line.reportedDecimals,
+    reportedUDecimals: line.reportedUDecimals,
     expandedU: textOrNull(line.expandedU),
     k: textOrNull(line.k),
     coverage: textOrNull(line.coverage),

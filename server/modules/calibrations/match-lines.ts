@@ -1,6 +1,6 @@
 import { Decimal } from '#shared/decimal.ts';
 import type { CalibrationLine } from '#shared/contracts/calibrations.ts';
-import type { IssueProblem } from './issue-rules.ts';
+import type { IssueProblem } from './issue-problem.ts';
 
 /** A line of the revision being superseded. */
 export interface ReplacedLine {

@@ -29,13 +29,14 @@ export function readMass(
   if (text.trim() === '') {
     return { point: { field, message: ask, received: null, expected, clause, kind: 'missing' } };
   }
-  return reading(field, text, expected, () => {
-    const parsed = parseQuantity(text, { field, units: MASS_UNITS, defaultUnit: unit });
-    if (parsed.uncertainty) {
-      throw new EngineError('two-numbers', field, 'Write the uncertainty in its own field.');
-    }
-    return { value: parsed.value, unit: parsed.unit as MassUnit, decimals: parsed.decimals };
-  });
+  const quantity = reading(field, text, expected, () =>
+    parseQuantity(text, { field, units: MASS_UNITS, defaultUnit: unit }),
+  );
+  if ('point' in quantity) return quantity;
+  const { value, decimals, uncertainty } = quantity.value;
+  if (uncertainty === null) return { value: { value, unit: quantity.value.unit as MassUnit, decimals } };
+  const message = 'Write the uncertainty in its own field.';
+  return { point: { field, message, received: text, expected, clause: null, kind: 'wrong' } };
 }
 
 /** A coverage factor, or a sensitivity (which may be negative and has no other limits here). */
@@ -79,13 +80,12 @@ function plainNumber(text: string, field: string): string {
   return decimalText(isNegative ? value.negated() : value);
 }
 
-/** The engine's refusals name the field and what came before they say why; a point has places of its own for those. */
+/** An engine's refusal as a point, which has places of its own for the field and for what was received. */
 function reading<T>(field: string, received: string, expected: string, read: () => T): Reading<T> {
   try {
     return { value: read() };
   } catch (error) {
     if (!(error instanceof EngineError)) throw error;
-    const message = error.message.replace(/^\S+: received ".*?"\. /s, '');
-    return { point: { field, message, received, expected, clause: null, kind: 'wrong' } };
+    return { point: { field, message: error.expected, received, expected, clause: null, kind: 'wrong' } };
   }
 }

@@ -12,7 +12,8 @@ import { valueEndModel } from './graph.model.ts';
 import type { IssueFacts } from './issue-facts.ts';
 import { issueFacts } from './issue-facts.queries.ts';
 import type { IssuedCalibration } from './issue-calibration.service.ts';
-import { issueProblems, refuseProblems, type IssueProblem } from './issue-rules.ts';
+import type { IssueProblem } from './issue-problem.ts';
+import { issueProblems, refuseProblems } from './issue-rules.ts';
 import { matchLines, type ReplacedLine } from './match-lines.ts';
 import { writeRevision } from './write-revision.ts';
 
