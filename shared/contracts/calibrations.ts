@@ -366,6 +366,8 @@ export const CalibrationResponse = z.object({
       reportedUnit: MassUnit,
       reportedDecimals: z.number().int(),
       expandedU: DecimalString.nullable(),
+      /** Decimals of U in `reportedUnit` as printed; null where U is not stated. */
+      reportedUDecimals: z.number().int().nullable(),
       k: DecimalString.nullable(),
       coverage: DecimalString.nullable(),
       class: WeightClass.nullable(),

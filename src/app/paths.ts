@@ -33,6 +33,9 @@ export const paths = {
   laboratory: { path: '/network/:laboratoryId', href: (laboratoryId: string) => `/network/${laboratoryId}` },
 } as const;
 
+/** State of a navigation that gives the screen an address of its own and leaves the focus where it is. */
+export const SAME_SCREEN = 'same screen';
+
 /** The sections of the rail that exist. */
 export const SECTIONS = [
   { label: 'Desk', href: paths.desk.href() },

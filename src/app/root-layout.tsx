@@ -17,7 +17,7 @@ import { AccountMenu } from '#src/features/identity/components/account-menu.tsx'
 import { ConnectionNotice } from '#src/lib/connection.tsx';
 import { PersonContext } from '#src/lib/session.ts';
 import { foundHref } from './found-href.ts';
-import { paths, SECTIONS } from './paths.ts';
+import { paths, SAME_SCREEN, SECTIONS } from './paths.ts';
 import { queryClient } from './query-client.ts';
 
 /** Lets signed-in people past; everybody else signs in first and comes back to where they wanted to go. */
@@ -34,7 +34,7 @@ export function RootLayout() {
   const location = useLocation();
   const navigate = useNavigate();
   const isMoving = useNavigation().state === 'loading';
-  useFocusOnScreen(location.pathname);
+  useFocusOnScreen(location.pathname, location.state === SAME_SCREEN);
   if (!data.person) return <Navigate to={paths.signIn.href(location.pathname + location.search)} replace />;
   return (
     <PersonContext value={data.person}>
@@ -56,11 +56,12 @@ export function RootLayout() {
 }
 
 /** After a move to another screen the keyboard starts at that screen, not in the rail of the last one. */
-function useFocusOnScreen(pathname: string): void {
+function useFocusOnScreen(pathname: string, isSameScreen: boolean): void {
   const shown = useRef(pathname);
   useEffect(() => {
     if (shown.current === pathname) return;
     shown.current = pathname;
+    if (isSameScreen) return;
     document.getElementById('screen')?.focus({ preventScroll: true });
-  }, [pathname]);
+  }, [pathname, isSameScreen]);
 }

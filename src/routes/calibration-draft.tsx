@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { useNavigate, useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router';
-import { paths } from '#src/app/paths.ts';
+import { paths, SAME_SCREEN } from '#src/app/paths.ts';
 import { queryClient } from '#src/app/query-client.ts';
 import { draftQuery } from '#src/features/calibrations/api.ts';
 import { DraftPlace } from '#src/features/calibrations/draft/draft-place.tsx';
@@ -31,7 +31,11 @@ export function Component() {
       firstStandardId={parameters.get('standard') ?? undefined}
       onCreated={(draft) => {
         setCreatedHere(draft.id);
-        void navigate(paths.calibrationDraft.href(draft.id), { replace: true, preventScrollReset: true });
+        void navigate(paths.calibrationDraft.href(draft.id), {
+          replace: true,
+          preventScrollReset: true,
+          state: SAME_SCREEN,
+        });
       }}
       onIssued={({ revisionId }) =>
         void navigate(paths.calibration.href(revisionId), { replace: true, state: 'just issued' })

@@ -43,7 +43,7 @@ export function CalibrationList({ search, onSearch }: CalibrationListProps) {
   }
 
   return (
-    <Page title="Calibrations" value={mayDraft && newLink}>
+    <Page title="Calibrations" value={mayDraft && <span className="font-sans text-base">{newLink}</span>}>
       {first && first.drafts.length > 0 && !isNarrowed(search) && (
         <Section title="Drafts" note="of your laboratories">
           <DraftTable drafts={first.drafts} />

@@ -65,8 +65,8 @@ function Peek({ calibration, lines }: CalibrationResponse) {
               <Cell isHeading>
                 <Link to={paths.standard.href(standard.id)} className="hover:underline">
                   <span className="font-mono text-sm">{standard.registryNo}</span>
-                </Link>{' '}
-                <span className="whitespace-nowrap text-ink-2">{standard.marking}</span>
+                </Link>
+                <span className="ml-2 whitespace-nowrap text-ink-2">{standard.marking}</span>
               </Cell>
               <Cell align="right">
                 <Quantity

@@ -6,12 +6,12 @@ import { Button, LinkButton } from '#src/components/ui/button.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
-import { TwoColumns } from '#src/components/layout/columns.tsx';
 import { Facts } from '#src/components/layout/facts.tsx';
 import { Page, Section } from '#src/components/layout/page.tsx';
 import { can } from '#src/lib/abilities.ts';
 import { stateOfValue } from '#src/lib/states.ts';
 import { LineTable } from './line-table.tsx';
+import { sharedWords } from './shared-words.ts';
 import { PerformedText } from './performed-text.tsx';
 import { WithdrawDialog } from './withdraw-dialog.tsx';
 
@@ -43,40 +43,36 @@ export function CalibrationSheet(props: CalibrationSheetProps) {
           leaned on.
         </Notice>
       )}
-      <TwoColumns
-        sideWidth="narrow"
-        side={
-          <>
-            <Section title="Calibration">
-              <Facts
-                facts={[
-                  ['Performed', <PerformedText {...calibration} />],
-                  ['Method', calibration.method],
-                  ['Decision rule', calibration.decisionRule],
-                  ['Entered by', isOwn ? null : calibration.registeredBy.name],
-                  ['Signatory', calibration.signatory],
-                  ['Document', calibration.document && <DocumentLink {...calibration.document} />],
-                  ['Recorded', <DateText value={calibration.recordedAt} />],
-                  ['SHA-256', <Fingerprint value={calibration.contentSha256} />],
-                ]}
-              />
-            </Section>
-            {revisions.length > 1 && <Revisions revisions={revisions} shown={calibration.revisionId} />}
-            <div className="flex flex-wrap gap-2">
-              {first && (
-                <LinkButton to={paths.chain.href(first.uid)} weight="primary">
-                  {lines.length === 1 ? 'Open the chain' : `Open the chain of ${first.standard.marking}`}
-                </LinkButton>
-              )}
-              <Withdraw {...props} />
-            </div>
-          </>
-        }
-      >
-        <Section title="Results">
-          <LineTable lines={lines} />
-        </Section>
-      </TwoColumns>
+      <div className="grid grid-cols-1 gap-x-10 gap-y-1 md:grid-cols-2 columns:grid-cols-[auto_auto_1fr]">
+        <Facts
+          facts={[
+            ['Performed', <PerformedText {...calibration} />],
+            ['Method', calibration.method],
+            ['Decision rule', calibration.decisionRule],
+            ['Entered by', isOwn ? null : calibration.registeredBy.name],
+          ]}
+        />
+        <Facts
+          facts={[
+            ['Signatory', calibration.signatory],
+            ['Document', calibration.document && <DocumentLink {...calibration.document} />],
+            ['Recorded', <DateText value={calibration.recordedAt} />],
+            ['SHA-256', <Fingerprint value={calibration.contentSha256} />],
+          ]}
+        />
+        <div className="flex flex-wrap content-start items-start gap-2 max-columns:pt-3 md:max-columns:col-span-2 columns:justify-end">
+          {first && (
+            <LinkButton to={paths.chain.href(first.uid)} weight="primary">
+              {lines.length === 1 ? 'Open the chain' : `Open the chain of ${first.standard.marking}`}
+            </LinkButton>
+          )}
+          <Withdraw {...props} />
+        </div>
+      </div>
+      <Section title="Results" note={sharedWords(lines)}>
+        <LineTable lines={lines} />
+      </Section>
+      {revisions.length > 1 && <Revisions revisions={revisions} shown={calibration.revisionId} />}
     </Page>
   );
 }

@@ -6,6 +6,7 @@ import { Quantity } from '#src/components/ui/quantity.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
 import { stateOfValue } from '#src/lib/states.ts';
+import { quantityWords, sharedFacts, type SharedFacts } from './shared-words.ts';
 
 type Line = CalibrationResponse['lines'][number];
 
@@ -13,12 +14,13 @@ const LINK = 'underline decoration-rule underline-offset-3 hover:decoration-ink'
 
 /** The results of a certificate, digit for digit as they were printed. */
 export function LineTable({ lines }: { lines: readonly Line[] }) {
+  const shared = sharedFacts(lines);
   return (
     <Table caption="Results">
       <thead>
         <tr>
           <Head>Weight</Head>
-          <Head>Quantity</Head>
+          {!shared.quantity && <Head>Quantity</Head>}
           <Head align="right">Deviation</Head>
           <Head align="right">U</Head>
           <Head align="right">k</Head>
@@ -30,16 +32,15 @@ export function LineTable({ lines }: { lines: readonly Line[] }) {
       </thead>
       <tbody>
         {lines.map((line) => (
-          <LineRow key={line.uid} line={line} />
+          <LineRow key={line.uid} line={line} shared={shared} />
         ))}
       </tbody>
     </Table>
   );
 }
 
-function LineRow({ line }: { line: Line }) {
-  const { standard, quantity, medium, stage, deviation, reportedUnit, reportedDecimals, expandedU, k } = line;
-  const circumstances = [medium === 'air' ? null : `in ${medium}`, stage].filter((part) => part !== null);
+function LineRow({ line, shared }: { line: Line; shared: SharedFacts }) {
+  const { standard, deviation, reportedUnit, reportedDecimals, reportedUDecimals, expandedU, k } = line;
   return (
     <Row>
       <Cell isHeading className="whitespace-nowrap">
@@ -48,17 +49,14 @@ function LineRow({ line }: { line: Line }) {
         </Link>
         , {standard.marking}
       </Cell>
-      <Cell>
-        {quantity}
-        {circumstances.length > 0 && <span className="text-ink-2">, {circumstances.join(', ')}</span>}
-      </Cell>
+      {!shared.quantity && <Cell>{quantityWords(line).join(', ')}</Cell>}
       <Cell align="right">
         {/* As printed: the certificate can be read back digit for digit. */}
         <Quantity value={deviation} kind="deviation" shownIn={reportedUnit} decimals={reportedDecimals} />
       </Cell>
       <Cell align="right">
         {expandedU ? (
-          <Quantity value={expandedU} shownIn={reportedUnit} />
+          <Quantity value={expandedU} shownIn={reportedUnit} decimals={reportedUDecimals ?? undefined} />
         ) : (
           <span className="text-ink-2">not stated</span>
         )}
@@ -66,9 +64,11 @@ function LineRow({ line }: { line: Line }) {
       <Cell align="right">{k && new Decimal(k).toFixed()}</Cell>
       <Cell>
         {line.class ?? ''}
-        {line.underAccreditation && <span className="block text-sm text-ink-2">accredited</span>}
+        {!shared.accreditation && line.underAccreditation && (
+          <span className="block text-sm text-ink-2">accredited</span>
+        )}
       </Cell>
-      <Cell>
+      <Cell className="whitespace-nowrap">
         <StateMark state={stateOfValue(line.state)}>
           {line.state}
           {line.stateSince && line.state !== 'in force' && ` ${line.stateSince}`}
