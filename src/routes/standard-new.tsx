@@ -1,6 +1,31 @@
+import { Link, useNavigate } from 'react-router';
+import { paths } from '#src/app/paths.ts';
 import { Page } from '#src/components/layout/page.tsx';
+import { StandardForm } from '#src/features/standards/components/standard-form.tsx';
+import { laboratoriesOf, usePerson } from '#src/lib/session.ts';
 
-/** Keeps the place of the screen at this address. */
+/** Registers one weight, and goes on to its page. */
 export function Component() {
-  return <Page title="Register a weight">{null}</Page>;
+  const person = usePerson();
+  const navigate = useNavigate();
+  return (
+    <Page
+      title="Register a weight"
+      sub={
+        <>
+          A box of weights is quicker as{' '}
+          <Link to={paths.newSet.href()} className="underline underline-offset-3">
+            a whole set
+          </Link>
+          .
+        </>
+      }
+    >
+      <StandardForm
+        accountId={person.accountId}
+        laboratories={laboratoriesOf(person).map(({ id, name }) => ({ value: id, label: name }))}
+        onRegistered={(standardId) => void navigate(paths.standard.href(standardId))}
+      />
+    </Page>
+  );
 }

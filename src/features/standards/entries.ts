@@ -1,3 +1,5 @@
+import type { FieldError } from 'react-hook-form';
+
 /** An entry left empty is not known, which is null in the register: for `setValueAs`. */
 export function emptyAsNull(entry: string | null): string | null {
   return entry === null || entry.trim() === '' ? null : entry;
@@ -8,4 +10,12 @@ export function monthsEntry(entry: string | number | null): number | null {
   if (entry === null || String(entry).trim() === '') return null;
   const months = Number(entry);
   return Number.isFinite(months) ? months : (entry as number);
+}
+
+/** What is wrong with the months: the server's own words, or one sentence for whatever the schema refuses. */
+export function monthsError(error: FieldError | undefined): string | undefined {
+  if (!error) return undefined;
+  return error.type === 'server'
+    ? error.message
+    : 'Write whole months from 1 to 240, or leave it empty where the weight is no reference.';
 }

@@ -78,7 +78,7 @@ export function StandardFilters({ search, laboratories, onChange }: StandardFilt
         onChange={choose('standing')}
       />
       <RangeEnd
-        label="Nominal from"
+        label="Nominal, from"
         value={search.nominalFrom}
         onRead={(nominalFrom) => onChange({ nominalFrom })}
       />
@@ -133,7 +133,7 @@ function RangeEnd({ label, value, onRead }: RangeEndProps) {
   return (
     <NominalField
       label={label}
-      className="w-20"
+      className="w-24"
       placeholder="any"
       value={held.text}
       onChange={(text) => setHeld({ ...held, text })}

@@ -1,0 +1,62 @@
+import { z } from 'zod';
+import { RegisterSetBody } from '#shared/contracts/standards.ts';
+
+const Member = RegisterSetBody.shape.members.element;
+
+/** What all weights of a set share, or all those below 1 g. */
+const Body = Member.pick({ material: true, density: true });
+
+/**
+ * A set as it is typed: class, material and density once for all its weights, and once more for those below
+ * 1 g where they are of another material.
+ */
+export const SetEntries = RegisterSetBody.omit({ members: true })
+  .extend({
+    class: Member.shape.class,
+    ...Body.shape,
+    below1g: Body.nullable(),
+    members: z
+      .array(Member.pick({ nominal: true, marking: true, serial: true, shape: true }))
+      .min(1, 'A set has at least one weight')
+      .max(60, 'A set has at most 60 weights; register the others as a second set'),
+  })
+  .superRefine((entries, context) => {
+    const seen = new Map<string, number>();
+    entries.members.forEach(({ nominal, marking }, index) => {
+      const first = seen.get(`${nominal} ${marking}`);
+      if (first === undefined) {
+        seen.set(`${nominal} ${marking}`, index);
+        return;
+      }
+      context.addIssue({
+        code: 'custom',
+        path: ['members', index, 'marking'],
+        message: `Same nominal and marking as row ${first + 1}: add a star or a dot, as it is engraved (OIML R 111-1:2004, 13).`,
+      });
+    });
+  });
+
+export type SetEntries = z.output<typeof SetEntries>;
+export type SetEntriesInput = z.input<typeof SetEntries>;
+export type MemberEntry = SetEntriesInput['members'][number];
+
+/** The request that registers what was typed. */
+export function toSetBody(entries: SetEntries): RegisterSetBody {
+  const { class: weightClass, material, density, below1g, members, ...set } = entries;
+  return {
+    ...set,
+    members: members.map((member) => ({
+      ...member,
+      class: weightClass,
+      ...(below1g && Number(member.nominal) < 1 ? below1g : { material, density }),
+    })),
+  };
+}
+
+const COLUMNS = ['nominal', 'marking', 'serial', 'shape'] as const;
+
+/** A column of the table of weights that can be typed into. */
+export type MemberColumn = (typeof COLUMNS)[number];
+
+/** The columns of the table in their order, for moving and pasting. */
+export const MEMBER_COLUMNS: readonly MemberColumn[] = COLUMNS;
