@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { RegisterSetBody } from '#shared/contracts/standards.ts';
+import { nominalMarking } from './nominal.ts';
 
 const Member = RegisterSetBody.shape.members.element;
 
@@ -60,3 +61,24 @@ export type MemberColumn = (typeof COLUMNS)[number];
 
 /** The columns of the table in their order, for moving and pasting. */
 export const MEMBER_COLUMNS: readonly MemberColumn[] = COLUMNS;
+
+/** The name one would write on the lid: "E2 set, 1 mg to 1 kg". */
+export function proposedName(
+  weightClass: string | null,
+  members: readonly Pick<MemberEntry, 'nominal'>[],
+): string {
+  const nominals = members.map((member) => member.nominal).toSorted((a, b) => Number(a) - Number(b));
+  const [smallest, largest] = [nominals[0], nominals.at(-1)];
+  if (!smallest || !largest) return '';
+  const range =
+    smallest === largest
+      ? nominalMarking(smallest)
+      : `${nominalMarking(smallest)} to ${nominalMarking(largest)}`;
+  return weightClass ? `${weightClass} set, ${range}` : `Set, ${range}`;
+}
+
+/** Whether two lists hold the same weights, cell by cell. */
+export function isSameMembers(a: readonly MemberEntry[], b: readonly MemberEntry[]): boolean {
+  const text = (member: MemberEntry): string => COLUMNS.map((column) => member[column] ?? '').join('\t');
+  return a.length === b.length && a.every((member, index) => text(member) === text(b[index]!));
+}
