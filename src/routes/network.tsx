@@ -1,6 +1,16 @@
-import { Page } from '#src/components/layout/page.tsx';
+import { useSuspenseQuery } from '@tanstack/react-query';
+import { queryClient } from '#src/app/query-client.ts';
+import { laboratoryListQuery } from '#src/features/network/api.ts';
+import { LaboratoryList } from '#src/features/network/components/laboratory-list.tsx';
 
-/** Keeps the place of the screen at this address. */
+/** Primes the list while its module is still on the way. */
+export async function loader(): Promise<null> {
+  await queryClient.query({ ...laboratoryListQuery, staleTime: 5_000 });
+  return null;
+}
+
+/** The laboratories of the network. */
 export function Component() {
-  return <Page title="Network">{null}</Page>;
+  const { data } = useSuspenseQuery(laboratoryListQuery);
+  return <LaboratoryList laboratories={data.laboratories} />;
 }

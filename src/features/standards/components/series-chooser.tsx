@@ -46,7 +46,7 @@ export function SeriesChooser({ isEdited, onFill }: SeriesChooserProps) {
       <div className="flex flex-wrap items-end gap-x-4 gap-y-3">
         <SelectField
           label="Series"
-          className="w-44"
+          className="w-60"
           choices={[
             ...SERIES.map((series) => ({
               value: series.id,
