@@ -24,6 +24,8 @@ export interface AppParts {
   /** Serves the client: built files in production, Vite in development, nothing in API tests. */
   client?: RequestHandler[];
   isDevelopment?: boolean;
+  /** False in production only, where large replies are checked by sample. */
+  checksEveryReply?: boolean;
 }
 
 export interface App {
@@ -40,6 +42,8 @@ export function createApp(parts: AppParts): App {
   const clock = parts.clock ?? systemClock;
   const app = express();
   app.disable('x-powered-by');
+  // Replies are never stored (below), so nobody would ask by their tag; the built files have tags of their own.
+  app.disable('etag');
   if (parts.isBehindTls) app.set('trust proxy', 1);
   const sessions = sessionStore(parts.database, parts.sessionSecret, parts.isBehindTls);
   const passport = makePassport(parts.database, clock);
@@ -51,7 +55,8 @@ export function createApp(parts: AppParts): App {
       autoLogging: { ignore: isQuiet },
     }),
   );
-  app.use(requestContext(parts.database, clock, parts.dataDir));
+  const { dataDir, checksEveryReply = true } = parts;
+  app.use(requestContext(parts.database, { clock, dataDir, checksEveryReply }));
   app.use(
     '/api',
     noStore,

@@ -22,6 +22,7 @@ const app = createApp({
   isBehindTls: config.isBehindTls,
   dataDir: config.dataDir,
   isDevelopment: config.isDevelopment,
+  checksEveryReply: config.isDevelopment,
   client: development?.handlers ?? builtClient(path.resolve('dist/client')),
 });
 

@@ -29,6 +29,8 @@ export interface Context {
   dataDir: string | null;
   /** Null where no browser asks. */
   session: SessionControl | null;
+  /** Whether every reply is checked against its contract; in production the large ones are sampled. */
+  checksEveryReply: boolean;
   /** Ten bytes for the next identifier; seeded for the demo network, from the system otherwise. */
   randomness(): Uint8Array;
 }
@@ -41,6 +43,7 @@ export function makeContext(parts: Partial<Context> & { database: Sequelize }): 
     user: null,
     dataDir: null,
     session: null,
+    checksEveryReply: true,
     randomness: () => randomBytes(10),
     ...parts,
   };

@@ -7,12 +7,15 @@ const contexts = new WeakMap<Request, Context>();
 const REQUEST_ID = /^[A-Za-z0-9._-]{8,64}$/;
 
 /** Gives every request its context. The id comes from the client where it is well-formed, so that both logs name it. */
-export function requestContext(database: Sequelize, clock: Clock, dataDir: string): RequestHandler {
+export function requestContext(
+  database: Sequelize,
+  parts: { clock: Clock; dataDir: string; checksEveryReply: boolean },
+): RequestHandler {
   return (request, response, next) => {
     const asked = request.get('x-request-id');
     const requestId = asked && REQUEST_ID.test(asked) ? asked : randomUUID();
     response.setHeader('X-Request-Id', requestId);
-    contexts.set(request, makeContext({ requestId, database, clock, dataDir }));
+    contexts.set(request, makeContext({ requestId, database, ...parts }));
     next();
   };
 }

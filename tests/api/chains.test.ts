@@ -1,7 +1,10 @@
 import { randomUUID } from 'node:crypto';
 import { describe, expect, it } from 'vitest';
-import type { ChainResponse } from '#shared/contracts/chains.ts';
+import { ChainResponse } from '#shared/contracts/chains.ts';
 import { issueCalibration, withdrawCalibration } from '#server/modules/calibrations/index.ts';
+import { chainSubject } from '#server/modules/chains/chain-subject.queries.ts';
+import { presentChain } from '#server/modules/chains/chain.presenter.ts';
+import { chainOf, storeOf } from '#server/modules/chains/index.ts';
 import { registerStandard } from '#server/modules/standards/index.ts';
 import { freeRegistryNo, makeLaboratory, makePerson } from '#tests/support/factories.ts';
 import { testApp } from '#tests/support/test-app.ts';
@@ -212,4 +215,15 @@ describe('GET /api/chains/:valueUid', () => {
     const yesterday = await chain(person, fresh.a.uid, '?day=2020-05-31');
     expect(yesterday.nodes.find((node) => node.uid === fresh.w.uid)).toMatchObject({ state: 'in force' });
   });
+});
+
+it('presents a chain in its final form: where only a sample is checked, the contract would change nothing', async () => {
+  for (const person of [metrologist, institutes]) {
+    const context = { ...app.context(person.user), user: person.user };
+    const uid = person === metrologist ? network.a.uid : network.w.uid;
+    const subject = await chainSubject(context, uid);
+    const worked = await chainOf(context, storeOf(app.database), subject.id, {});
+    const reply = presentChain(worked, person.user, subject);
+    expect(ChainResponse.parse(reply)).toEqual(reply);
+  }
 });

@@ -29,16 +29,13 @@ export interface Chain {
   sideBySide: ReturnType<typeof sideBySide>;
 }
 
-/** What was worked out already, valid until the next act. */
+/** Steps judged already, by question, valid until the next act. */
 interface Remembered {
   seq: number;
-  chains: Map<string, Chain>;
-  /** By question. */
   steps: Map<string, StepMemory>;
 }
-/** Bounds of that memory: a chain is up to 1 MB, a step about 10 kB. */
-const MOST_CHAINS = 300;
-const MOST_STEPS = 10_000;
+/** Bound of that memory: a step is about 10 kB. */
+const MOST_STEPS = 20_000;
 const memories = new WeakMap<ChainStore, Remembered>();
 
 /**
@@ -57,20 +54,13 @@ export async function chainOf(
     known: asked.known ?? today(context),
     programmeEndedAfterUse: 'said',
   };
-  const memory = memoryOf(store);
-  const key = `${focusId} ${question.day} ${question.known}`;
-  const remembered = memory.chains.get(key);
-  if (remembered) return remembered;
-  const chain = await workOut(store, focusId, stepsOf(memory, question));
-  if (memory.chains.size >= MOST_CHAINS) memory.chains.delete(memory.chains.keys().next().value!);
-  memory.chains.set(key, chain);
-  return chain;
+  return workOut(store, focusId, stepsOf(memoryOf(store), question));
 }
 
 function memoryOf(store: ChainStore): Remembered {
   const memory = memories.get(store);
   if (memory?.seq === store.seq) return memory;
-  const fresh = { seq: store.seq, chains: new Map<string, Chain>(), steps: new Map<string, StepMemory>() };
+  const fresh = { seq: store.seq, steps: new Map<string, StepMemory>() };
   memories.set(store, fresh);
   return fresh;
 }

@@ -43,6 +43,7 @@ export const chainRoutes: Route[] = [
     subject: (context, { params }) => chainSubject(context, params.valueUid),
     act: (context, { query }, subject) => chainOf(context, storeOf(context.database), subject.id, query),
     response: ChainResponse,
+    isLarge: true,
     present: (chain, context, subject) => presentChain(chain, context.user, subject),
   }),
   route({

@@ -1,4 +1,5 @@
 import type { Sequelize } from 'sequelize';
+import { decimalText } from '#shared/decimal.ts';
 import { groupBy } from '#shared/group-by.ts';
 import { readRows } from '#server/db/read.ts';
 import { plainDecimals } from './plain-decimals.ts';
@@ -86,6 +87,7 @@ export async function storedValues(database: Sequelize, ids: number[]): Promise<
   return values.map((row) => ({
     ...row,
     ...plainDecimals(row),
+    nominal: decimalText(row.nominal),
     underAccreditation: Boolean(row.underAccreditation),
     unitConfirmed: Boolean(row.unitConfirmed),
     parents: (parents.get(row.id) ?? []).map(({ childId: _, ...link }) => link),
