@@ -1,4 +1,4 @@
-import { closeSync, openSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { closeSync, mkdirSync, openSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import net from 'node:net';
 import path from 'node:path';
 import { accountsSql, adminName, applicationName, databaseName, ownerName } from './accounts.js';
@@ -41,6 +41,9 @@ export async function startMariadb(options) {
   const credentials = credentialsOf(folder);
   const port = await freePort();
   const socket = socketPath(folder);
+  // A server that starts clears abandoned tables from its temporary folder: never one that it shares.
+  const temporary = path.join(folder, 'database-tmp');
+  mkdirSync(temporary, { recursive: true, mode: 0o700 });
   const accountsFile = path.join(folder, 'accounts.sql');
   writeFileSync(accountsFile, accountsSql(credentials, { withAdmin: options.withAdmin ?? false }), {
     mode: 0o600,
@@ -49,7 +52,7 @@ export async function startMariadb(options) {
   const log = openSync(logFile, 'w', 0o600);
   const child = startChild(
     mariadbProgram('mariadbd'),
-    mariadbArguments(options, { port, socket, accountsFile }),
+    mariadbArguments(options, { port, socket, accountsFile, temporary }),
     {
       cwd: folder,
       stdio: ['ignore', log, log, options.lock],
@@ -77,14 +80,15 @@ export async function startMariadb(options) {
 
 /**
  * @param {MariadbOptions} options
- * @param {{ port: number, socket: string, accountsFile: string }} places
+ * @param {{ port: number, socket: string, accountsFile: string, temporary: string }} places
  * @returns {string[]}
  */
-function mariadbArguments({ folder, isThrowaway = false }, { port, socket, accountsFile }) {
+function mariadbArguments({ folder, isThrowaway = false }, { port, socket, accountsFile, temporary }) {
   return [
     '--no-defaults',
     ...mariadbUser(),
     `--datadir=${mariadbFolder(folder)}`,
+    `--tmpdir=${temporary}`,
     `--socket=${socket}`,
     `--port=${port}`,
     `--init-file=${accountsFile}`,

@@ -21,6 +21,11 @@ export function worksIn(user: User, laboratoryId: string, ...roles: LaboratoryRo
   );
 }
 
+/** Whether the person writes in the laboratory's name: its metrologists and administrators, and the registrar. */
+export function writesFor(user: User, laboratoryId: string): boolean {
+  return user.isRegistrar || worksIn(user, laboratoryId, 'metrologist', 'laboratory administrator');
+}
+
 /** Whether the person reads this laboratory's holdings in full: its own people, its assessor, the registrar. */
 export function readsInFull(user: User, laboratoryId: string): boolean {
   return user.isRegistrar || worksIn(user, laboratoryId) || user.assessedLaboratoryIds.includes(laboratoryId);

@@ -61,8 +61,8 @@ const OF_HOME = {
 };
 
 const READERS: Who[] = ['registrar', 'administrator', 'metrologist', 'signatory', 'reader', 'assessor'];
-const WORKERS: Who[] = ['administrator', 'metrologist', 'signatory', 'reader'];
-const WRITERS: Who[] = ['administrator', 'metrologist'];
+const WORKERS: Who[] = ['registrar', 'administrator', 'metrologist', 'signatory', 'reader'];
+const WRITERS: Who[] = ['registrar', 'administrator', 'metrologist'];
 const INSTITUTE_PEOPLE: Who[] = ['metrologist of the institute', 'signatory of the institute'];
 
 /** Who may, of a thing of home; everybody else may not. */

@@ -1,5 +1,5 @@
 import { permission, type Permission } from '#server/policy/permission.ts';
-import { readsInFull, worksIn, type User } from '#server/policy/user.ts';
+import { readsInFull, worksIn, writesFor, type User } from '#server/policy/user.ts';
 
 /** Whose calibration it is: who issued it, who entered it, and who holds the weights. */
 export interface CalibrationSubject {
@@ -26,13 +26,13 @@ export const withdrawCalibrationPermission = permission<CalibrationSubject>(
 /** Of a laboratory: beginning drafts for it and looking up references. */
 export const draftCalibration = permission<{ laboratoryId: string }>(
   'calibration:draft',
-  (user, { laboratoryId }) => worksIn(user, laboratoryId, 'metrologist', 'laboratory administrator'),
+  (user, { laboratoryId }) => writesFor(user, laboratoryId),
 );
 
 /** Looking up what a result may name as reference: for everybody who works in the laboratory. */
 export const findReferences = permission<{ laboratoryId: string }>(
   'reference:find',
-  (user, { laboratoryId }) => worksIn(user, laboratoryId),
+  (user, { laboratoryId }) => user.isRegistrar || worksIn(user, laboratoryId),
 );
 
 /** A draft, with whether this person may sign for its laboratory today. */
@@ -47,12 +47,13 @@ export const readDraftPermission = permission<DraftSubject>('draft:read', (user,
 );
 
 export const writeDraftPermission = permission<DraftSubject>('draft:write', (user, { laboratoryId }) =>
-  worksIn(user, laboratoryId, 'metrologist', 'laboratory administrator'),
+  writesFor(user, laboratoryId),
 );
 
 /** Sending a draft to sign, taking it back or discarding it; a signatory sends back what is not complete. */
-export const sendDraftPermission = permission<DraftSubject>('draft:send', (user, { laboratoryId }) =>
-  worksIn(user, laboratoryId, 'metrologist', 'laboratory administrator', 'signatory'),
+export const sendDraftPermission = permission<DraftSubject>(
+  'draft:send',
+  (user, { laboratoryId }) => writesFor(user, laboratoryId) || worksIn(user, laboratoryId, 'signatory'),
 );
 
 /** Issuing: a signatory whose authorisation to sign calibrations is in force (ISO/IEC 17025:2017, 6.2.6). */
@@ -66,6 +67,8 @@ export function somewhere<Subject extends { laboratoryId: string }>(
   user: User,
   wanted: Permission<Subject>,
 ): Record<string, boolean> {
-  const may = user.memberships.some(({ laboratoryId }) => wanted.allows(user, { laboratoryId } as Subject));
+  const may =
+    user.isRegistrar ||
+    user.memberships.some(({ laboratoryId }) => wanted.allows(user, { laboratoryId } as Subject));
   return { [wanted.name]: may };
 }

@@ -238,7 +238,9 @@ function rootShares(chain: Chain): ChainResponse['rootShares'] {
 }
 
 function definitionOf(chain: Chain): ChainResponse['definition'] {
-  const roots = chain.closure.values.filter((value) => value.rootKind !== null);
+  // Runs that only inform a consensus value determined nothing in this chain.
+  const { sensitivities } = chain.numbers.propagation;
+  const roots = chain.closure.values.filter((value) => value.rootKind !== null && value.uid in sensitivities);
   const before = roots.filter((value) => value.performedEnd < REDEFINITION).length;
   if (before === 0) return 'planck constant';
   return before === roots.length ? 'international prototype' : 'both';

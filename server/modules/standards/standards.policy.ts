@@ -1,5 +1,5 @@
 import { permission } from '#server/policy/permission.ts';
-import { readsInFull, worksIn } from '#server/policy/user.ts';
+import { readsInFull, writesFor } from '#server/policy/user.ts';
 import type { StandardSubject } from './standard-laboratory.queries.ts';
 
 /** Opening a standard: for those who read its owner or its custodian in full. */
@@ -11,12 +11,12 @@ export const readStandard = permission<StandardSubject>(
 /** Registering standards and sets of a laboratory. */
 export const registerStandardPermission = permission<{ laboratoryId: string }>(
   'standard:register',
-  (user, { laboratoryId }) => worksIn(user, laboratoryId, 'metrologist', 'laboratory administrator'),
+  (user, { laboratoryId }) => writesFor(user, laboratoryId),
 );
 
 /** Saying what happened to a standard: for its owner's people. */
 export const changeStandard = permission<StandardSubject>('standard:change', (user, { ownerId }) =>
-  worksIn(user, ownerId, 'metrologist', 'laboratory administrator'),
+  writesFor(user, ownerId),
 );
 
 /** Every permission over a standard, for the abilities sent with it. */

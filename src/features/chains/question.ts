@@ -9,6 +9,8 @@ const Question = z.object({
   known: z.iso.date().optional().catch(undefined),
   draw: z.enum(['flow', 'plain']).catch('flow'),
   verdict: z.enum(['conduct', 'today']).catch('today'),
+  /** Shared effects below 1 % are left out of the drawing until asked for; the table has them all. */
+  effects: z.enum(['main', 'all']).catch('main'),
   only: z.enum(['fails']).optional().catch(undefined),
   /** What is selected: a node's uid, or child and parent of a link joined by a dot. */
   at: z.string().max(80).optional().catch(undefined),
@@ -23,7 +25,7 @@ export function readQuestion(parameters: URLSearchParams): ChainQuestion {
 /** The address's parameters with a change; what is at its default is left out. */
 export function withChange(question: ChainQuestion, change: Partial<ChainQuestion>): Record<string, string> {
   const next = { ...question, ...change };
-  const defaults: Record<string, string> = { draw: 'flow', verdict: 'today' };
+  const defaults: Record<string, string> = { draw: 'flow', verdict: 'today', effects: 'main' };
   return Object.fromEntries(
     Object.entries(next).flatMap(([name, value]) =>
       value && value !== defaults[name] ? [[name, value]] : [],

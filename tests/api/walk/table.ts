@@ -35,10 +35,16 @@ export const READERS: readonly Walker[] = [
   'reader',
   'assessor',
 ];
-const AT_HOME: readonly Walker[] = ['laboratory administrator', 'metrologist', 'signatory', 'reader'];
+const AT_HOME: readonly Walker[] = [
+  'registrar',
+  'laboratory administrator',
+  'metrologist',
+  'signatory',
+  'reader',
+];
 
 /** Who writes in home's name. */
-const WRITERS: readonly Walker[] = ['laboratory administrator', 'metrologist'];
+const WRITERS: readonly Walker[] = ['registrar', 'laboratory administrator', 'metrologist'];
 
 const WEIGHT = {
   nominal: '1000',

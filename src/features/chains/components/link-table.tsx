@@ -32,7 +32,7 @@ export function LinkTable({ chain, question, onSelect }: LinkTableProps) {
       <tbody>
         {rows.map((link) => (
           <Row key={linkKey(link)} isSelected={linkKey(link) === question.at}>
-            <Cell isMono>
+            <Cell className="font-mono text-sm">
               <RowButton onClick={() => onSelect(linkKey(link))}>
                 {names.get(link.parentUid)} <span aria-label="to">→</span> {names.get(link.childUid)}
               </RowButton>
@@ -71,12 +71,13 @@ function flowText(link: Link, decimalMark: '.' | ','): string {
   return link.flow === null ? 'unknown' : shareText(link.flow, decimalMark);
 }
 
-/** From the focus upwards, tier by tier; within a tier the widest flow first. */
+/** References first, from the focus upwards and the widest flow first; then what is shared, by its weight. */
 function linksUpwards(chain: ChainResponse): Link[] {
   const tiers = new Map(chain.nodes.map((node) => [node.uid, node.tier]));
+  const isShared = (link: Link) => Number(link.role === 'source');
+  const tier = (link: Link) => (link.role === 'source' ? 0 : tiers.get(link.childUid)!);
   return chain.links.toSorted(
-    (a, b) =>
-      tiers.get(a.childUid)! - tiers.get(b.childUid)! || Math.abs(b.flow ?? 0) - Math.abs(a.flow ?? 0),
+    (a, b) => isShared(a) - isShared(b) || tier(a) - tier(b) || Math.abs(b.flow ?? 0) - Math.abs(a.flow ?? 0),
   );
 }
 

@@ -42,6 +42,11 @@ export function QuestionBar({ question, answered, onChange }: QuestionBarProps) 
         ]}
       />
       <Checkbox
+        label="Small shared effects"
+        checked={question.effects === 'all'}
+        onChange={(event) => onChange({ effects: event.target.checked ? 'all' : 'main' })}
+      />
+      <Checkbox
         label="Only what fails"
         checked={question.only === 'fails'}
         onChange={(event) => onChange({ only: event.target.checked ? 'fails' : undefined })}

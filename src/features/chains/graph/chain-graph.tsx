@@ -6,6 +6,7 @@ import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { linkKey, type ChainQuestion } from '../question.ts';
 import { BandNode } from './band-node.tsx';
+import { drawnPart } from './drawn-part.ts';
 import { displayList, layoutInput, type DisplayList, type Plate } from './display-list.ts';
 import { PlateNode } from './plate-node.tsx';
 import { RibbonEdge } from './ribbon-edge.tsx';
@@ -23,7 +24,8 @@ interface ChainGraphProps {
 }
 
 /** The chain drawn as a conserved flow from the definition down to the weight. The table beside it says the same. */
-export function ChainGraph({ chain, question, onSelect }: ChainGraphProps) {
+export function ChainGraph({ chain: whole, question, onSelect }: ChainGraphProps) {
+  const { chain } = useMemo(() => drawnPart(whole, question.effects), [whole, question.effects]);
   const input = useMemo(() => layoutInput(chain, question.draw), [chain, question.draw]);
   const placement = useLayout(input);
   const list = useMemo(
@@ -37,7 +39,7 @@ export function ChainGraph({ chain, question, onSelect }: ChainGraphProps) {
   if (!drawn) return <Waiting>Laying the chain out</Waiting>;
   return (
     <ReactFlow
-      key={`${chain.focusUid} ${question.draw}`}
+      key={`${chain.focusUid} ${question.draw} ${question.effects}`}
       nodes={drawn.nodes}
       edges={drawn.edges}
       nodeTypes={nodeTypes}

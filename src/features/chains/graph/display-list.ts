@@ -57,11 +57,13 @@ export interface DisplayList {
 /** What the layout needs of a chain. In the plain drawing every link is a hairline. */
 export function layoutInput(chain: ChainResponse, draw: ChainQuestion['draw']): LayoutInput {
   const isPlain = draw === 'plain';
+  // A consensus value that runs inform is a root with something above it: it stays below them.
+  const informed = new Set(chain.links.map((link) => link.childUid));
   return {
     nodes: chain.nodes.map((node) => ({
       id: node.uid,
       tier: node.tier,
-      isRoot: node.type === 'value' && node.rootKind !== null,
+      isRoot: node.type === 'value' && node.rootKind !== null && !informed.has(node.uid),
       hasStub: stubOf(node, isPlain) !== null,
     })),
     links: chain.links.map((link) => ({
