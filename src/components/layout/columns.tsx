@@ -2,7 +2,7 @@ import type { ReactNode } from 'react';
 
 const SIDES = {
   narrow: 'columns:grid-cols-[minmax(0,1fr)_minmax(18rem,22rem)]',
-  normal: 'columns:grid-cols-[minmax(0,7fr)_minmax(22rem,3fr)]',
+  normal: 'columns:grid-cols-[minmax(0,7fr)_minmax(25rem,3fr)]',
   wide: 'columns:grid-cols-[minmax(0,6fr)_minmax(24rem,5fr)]',
 };
 

@@ -9,7 +9,7 @@ const Question = z.object({
   known: z.iso.date().optional().catch(undefined),
   draw: z.enum(['flow', 'plain']).catch('flow'),
   verdict: z.enum(['conduct', 'today']).catch('today'),
-  /** Shared effects below 1 % are left out of the drawing until asked for; the table has them all. */
+  /** Shared effects below 1 % are counted, and shown when asked for. */
   effects: z.enum(['main', 'all']).catch('main'),
   only: z.enum(['fails']).optional().catch(undefined),
   /** What is selected: a node's uid, or child and parent of a link joined by a dot. */

@@ -66,7 +66,7 @@ export function ChainScreen({ chain, question, onChange, actionsFor, actions }: 
         side={
           <>
             <Verdict chain={chain} question={question} />
-            <LinkTable chain={chain} question={question} onSelect={select} />
+            <LinkTable chain={chain} question={question} onChange={onChange} />
             <Contributions chain={chain} />
             <BothKinds chain={chain} />
             {actions}

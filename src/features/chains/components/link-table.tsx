@@ -3,17 +3,19 @@ import { DateText } from '#src/components/ui/date-text.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, RowButton, Table } from '#src/components/ui/table.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
+import { drawnPart } from '../drawn-part.ts';
 import { linkKey, type ChainQuestion } from '../question.ts';
 import { shareText } from '../share-text.ts';
 
 interface LinkTableProps {
   chain: ChainResponse;
   question: ChainQuestion;
-  onSelect: (at: string) => void;
+  onChange: (change: Partial<ChainQuestion>) => void;
 }
 
 /** The same facts as the drawing, one row per link from the weight upwards. */
-export function LinkTable({ chain, question, onSelect }: LinkTableProps) {
+export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) {
+  const { chain, leftOut } = drawnPart(whole, question.effects);
   const { decimalMark } = usePreferences();
   const names = namesOf(chain);
   const rows = linksUpwards(chain).filter(
@@ -33,8 +35,9 @@ export function LinkTable({ chain, question, onSelect }: LinkTableProps) {
         {rows.map((link) => (
           <Row key={linkKey(link)} isSelected={linkKey(link) === question.at}>
             <Cell className="font-mono text-sm">
-              <RowButton onClick={() => onSelect(linkKey(link))}>
-                {names.get(link.parentUid)} <span aria-label="to">→</span> {names.get(link.childUid)}
+              <RowButton onClick={() => onChange({ at: linkKey(link) })}>
+                <span className="whitespace-nowrap">{names.get(link.parentUid)}</span>{' '}
+                <span className="whitespace-nowrap">→ {names.get(link.childUid)}</span>
               </RowButton>
             </Cell>
             <Cell>{link.usedEnd ? <DateText value={link.usedEnd} /> : ''}</Cell>
@@ -45,11 +48,20 @@ export function LinkTable({ chain, question, onSelect }: LinkTableProps) {
               {link.role === 'reference' ? (
                 <StateMark state={link[question.verdict]} />
               ) : (
-                <span className="text-ink-3">{link.role === 'informs' ? 'informs' : 'shared effect'}</span>
+                <span className="text-ink-3">{link.role === 'informs' ? 'informs' : 'shared'}</span>
               )}
             </Cell>
           </Row>
         ))}
+        {leftOut > 0 && (
+          <Row>
+            <Cell colSpan={4}>
+              <RowButton onClick={() => onChange({ effects: 'all' })}>
+                and {leftOut} shared {leftOut === 1 ? 'effect' : 'effects'} below 1 %
+              </RowButton>
+            </Cell>
+          </Row>
+        )}
         {rows.length === 0 && (
           <Row>
             <Cell colSpan={4}>

@@ -6,7 +6,7 @@ import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { linkKey, type ChainQuestion } from '../question.ts';
 import { BandNode } from './band-node.tsx';
-import { drawnPart } from './drawn-part.ts';
+import { drawnPart } from '../drawn-part.ts';
 import { displayList, layoutInput, type DisplayList, type Plate } from './display-list.ts';
 import { PlateNode } from './plate-node.tsx';
 import { RibbonEdge } from './ribbon-edge.tsx';

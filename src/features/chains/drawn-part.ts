@@ -1,12 +1,12 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
-import type { ChainQuestion } from '../question.ts';
+import type { ChainQuestion } from './question.ts';
 
-/** Below this share a shared effect is drawn only when asked for. */
+/** Below this share a shared effect is shown only when asked for. */
 const WORTH_DRAWING = 0.01;
 
 /**
- * The part of a chain that is drawn. Effort is commensurate with contribution (JCGM 200:2012, 2.41 note 4): shared
- * effects below 1 % stay in the table unless asked for.
+ * The part of a chain that is shown. Effort is commensurate with contribution (JCGM 200:2012, 2.41 note 4): shared
+ * effects below 1 % are counted, and shown when asked for.
  * @returns the chain itself, or with fewer sources and links; and how many effects were left out
  */
 export function drawnPart(
