@@ -43,7 +43,7 @@ export function CalibrationSheet(props: CalibrationSheetProps) {
           leaned on.
         </Notice>
       )}
-      <div className="grid grid-cols-1 gap-x-10 gap-y-1 md:grid-cols-2 columns:grid-cols-[auto_auto_1fr]">
+      <div className="grid grid-cols-1 items-start gap-x-10 gap-y-1 md:grid-cols-2 columns:grid-cols-[auto_auto_1fr]">
         <Facts
           facts={[
             ['Performed', <PerformedText {...calibration} />],

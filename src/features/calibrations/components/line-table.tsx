@@ -100,7 +100,7 @@ function References({ references }: { references: Line['references'] }) {
       <StateMark state={stateOfValue(state)} isMarkOnly={state === 'in force'}>
         {state}
       </StateMark>
-      <span className="block text-xs text-ink-2">
+      <span className="text-ink-2 columns:ml-2 max-columns:block">
         {certificateNo}
         {sensitivity !== 1 && `, × ${sensitivity}`}
       </span>

@@ -11,7 +11,7 @@ export type SaveState =
   | { kind: 'untouched' }
   | { kind: 'typing' }
   | { kind: 'saved'; at: number }
-  | { kind: 'unreachable' }
+  | { kind: 'unreachable'; isAnswered: boolean }
   | { kind: 'refused'; error: ApiProblem }
   | { kind: 'conflict'; theirs: DraftResponse };
 
@@ -109,7 +109,9 @@ export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosav
 
 function stateAfter(error: unknown): SaveState {
   if (!(error instanceof ApiProblem)) throw error;
-  if (error.status === 0 || error.status >= 500 || error.status === 429) return { kind: 'unreachable' };
+  if (error.status === 0 || error.status >= 500 || error.status === 429) {
+    return { kind: 'unreachable', isAnswered: error.status !== 0 };
+  }
   const theirs = DraftResponseSchema.safeParse(error.document['current']);
   if (error.id === 'stale' && theirs.success) return { kind: 'conflict', theirs: theirs.data };
   return { kind: 'refused', error };

@@ -62,8 +62,7 @@ export function DraftActions(props: DraftActionsProps) {
       </div>
       {!isComplete && (
         <p className="text-sm text-ink-3">
-          {openPoints === 1 ? 'One point is' : `${openPoints} points are`} open. A draft can be left like
-          this; it is issued once every point is settled.
+          A draft can be left like this; it is issued once every point and question is settled.
         </p>
       )}
       {isSent && <p className="text-sm text-ink-2">It waits for a signatory. A change opens it again.</p>}

@@ -50,6 +50,7 @@ export function DraftEditor(props: DraftEditorProps) {
   const issuer = data?.laboratories.find(({ id }) => id === values.issuerId);
   const points = currentPoints(draft, values);
   const openPoints = points.filter(isBlocking).length;
+  const questions = points.filter(({ kind }) => kind === 'question').length;
   const isLocked = draft !== null && !can(draft, 'draft:write');
 
   function goTo(path: string): void {
@@ -71,7 +72,7 @@ export function DraftEditor(props: DraftEditorProps) {
               <span role="status">
                 {draft?.state === 'sent to sign' ? 'Sent to sign' : 'Draft'} · {laboratory.name} ·{' '}
                 <SaveStatus state={saving.state} updatedAt={draft?.updatedAt ?? null} />
-                {draft && ` · ${countOf(openPoints).toLowerCase()}`}
+                {draft && ` · ${countOf(openPoints - questions, questions).toLowerCase()}`}
               </span>
             }
           >

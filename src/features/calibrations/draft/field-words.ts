@@ -21,7 +21,7 @@ const WORDS: Record<string, string> = {
   uUnit: 'Unit of U',
   uNotStated: 'U not stated',
   k: 'k',
-  coverage: 'Coverage probability',
+  coverage: 'Coverage',
   class: 'Class stated',
   underAccreditation: 'Under accreditation',
   unitConfirmed: 'Unit confirmed',

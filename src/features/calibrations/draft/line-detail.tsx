@@ -25,7 +25,7 @@ export function LineDetail({ at, line, standard, onRemove }: LineDetailProps) {
   return (
     <div className="flex flex-col gap-3">
       <LineReferences at={at} line={line} standard={standard} />
-      <div className="grid grid-cols-2 gap-x-5 gap-y-3 sm:grid-cols-4">
+      <div className="grid grid-cols-2 items-end gap-x-5 gap-y-3 sm:grid-cols-[1.4fr_1.2fr_1fr_1fr]">
         <div data-field={`${path}.quantity`}>
           <SelectField label="Quantity" choices={QUANTITIES} {...register(`${path}.quantity`)} />
         </div>
@@ -47,7 +47,7 @@ export function LineDetail({ at, line, standard, onRemove }: LineDetailProps) {
         </div>
         <div data-field={`${path}.coverage`}>
           <TextField
-            label="Coverage probability"
+            label="Coverage"
             isOptional
             placeholder="95.45 %"
             error={errorOf(`${path}.coverage`)}

@@ -2,7 +2,7 @@ import type { OpenPoint } from '#shared/contracts/calibrations.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Section } from '#src/components/layout/page.tsx';
 import { useDraft } from './draft-context.ts';
-import { fieldWords } from './field-words.ts';
+import { gatherPoints } from './gather-points.ts';
 import { pointLine } from './points.ts';
 
 const SHOWN_AT_ONCE = 12;
@@ -18,32 +18,32 @@ export function OpenPoints({ points, weightOf }: OpenPointsProps) {
   const blocking = points.filter(({ kind }) => kind === 'missing' || kind === 'wrong');
   const notes = points.filter(({ kind }) => kind === 'note');
   if (blocking.length + notes.length === 0) return null;
-  const item = (point: OpenPoint, index: number) => (
-    <li key={`${point.field} ${index}`} className="border-b border-rule py-1">
-      <Button weight="text" className="text-left" onClick={() => goTo(point.field)}>
-        {fieldWords(point.field, weightOf)}
-      </Button>{' '}
-      <span className={point.kind === 'wrong' ? 'text-broken' : 'text-ink-2'}>{pointLine(point)}</span>
-    </li>
+  const items = [...gatherPoints(blocking, weightOf), ...gatherPoints(notes, weightOf)].map(
+    ({ point, where }, index) => (
+      <li key={`${point.field} ${index}`} className="border-b border-rule py-1">
+        <Button weight="text" className="text-left" onClick={() => goTo(point.field)}>
+          {where}
+        </Button>{' '}
+        <span className={point.kind === 'wrong' ? 'text-broken' : 'text-ink-2'}>{pointLine(point)}</span>
+      </li>
+    ),
   );
   return (
     <Section title={countOf(blocking.length)} note={blocking.length > 0 && 'before it can be issued'}>
-      <ul className="border-t border-rule">{blocking.slice(0, SHOWN_AT_ONCE).map(item)}</ul>
-      {blocking.length > SHOWN_AT_ONCE && (
+      <ul className="border-t border-rule">{items.slice(0, SHOWN_AT_ONCE)}</ul>
+      {items.length > SHOWN_AT_ONCE && (
         <details>
-          <summary className="text-ink-2">and {blocking.length - SHOWN_AT_ONCE} more</summary>
-          <ul className="border-t border-rule">{blocking.slice(SHOWN_AT_ONCE).map(item)}</ul>
+          <summary className="text-ink-2">and {items.length - SHOWN_AT_ONCE} more</summary>
+          <ul className="border-t border-rule">{items.slice(SHOWN_AT_ONCE)}</ul>
         </details>
-      )}
-      {notes.length > 0 && (
-        <ul className={blocking.length === 0 ? 'border-t border-rule' : ''}>{notes.map(item)}</ul>
       )}
     </Section>
   );
 }
 
-/** "No open points", "One open point", "7 open points". */
-export function countOf(points: number): string {
-  if (points === 0) return 'No open points';
-  return points === 1 ? 'One open point' : `${points} open points`;
+/** "No open points", "One open point", "7 open points"; questions are counted by themselves. */
+export function countOf(points: number, questions = 0): string {
+  const open = points === 1 ? 'One open point' : `${points === 0 ? 'No' : points} open points`;
+  if (questions === 0) return open;
+  return `${open}, ${questions === 1 ? 'one question' : `${questions} questions`}`;
 }

@@ -4,6 +4,7 @@ import { useFormContext, useWatch } from 'react-hook-form';
 import { Button } from '#src/components/ui/button.tsx';
 import { Dialog } from '#src/components/ui/dialog.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
+import { SelectField } from '#src/components/ui/select-field.tsx';
 import { Textarea } from '#src/components/ui/text-field.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { findStandards } from '../api.ts';
@@ -17,8 +18,15 @@ import { readPastedRows, readPastedTable, type Column } from './read-paste.ts';
 const WEIGHTS_LOOKED_AT = 200;
 const LONGEST_DRAFT = 200;
 
+interface PasteDialogProps {
+  text: string;
+  /** Gets the pasted names of lines that found no weight, by key of the line. */
+  onPut: (names: ReadonlyMap<string, string>) => void;
+  onClose: () => void;
+}
+
 /** A table from a spreadsheet: what was understood is shown before anything is put in. */
-export function PasteDialog({ text: pasted, onClose }: { text: string; onClose: () => void }) {
+export function PasteDialog({ text: pasted, onPut, onClose }: PasteDialogProps) {
   const { control, getValues, setValue } = useFormContext<DraftValues>();
   const { laboratoryId } = useDraft();
   const { decimalMark } = usePreferences();
@@ -26,6 +34,7 @@ export function PasteDialog({ text: pasted, onClose }: { text: string; onClose: 
   const lines = useWatch({ control, name: 'lines' });
   const [text, setText] = useState(pasted);
   const [columns, setColumns] = useState<Column[] | null>(null);
+  const [set, setSet] = useState('');
   const [turnsSign, setTurnsSign] = useState<boolean | null>(null);
   const others = useQuery({
     queryKey: ['standards', 'to match', laboratoryId],
@@ -35,11 +44,15 @@ export function PasteDialog({ text: pasted, onClose }: { text: string; onClose: 
   const read = useMemo(() => readPastedTable(text), [text]);
   const table = { ...read, columns: columns ?? read.columns };
   const { unit, uUnit } = lines[0] ?? { unit: 'mg' as const, uUnit: 'mg' as const };
+  const sets = new Map(
+    (others.data ?? []).flatMap(({ set: one }) => (one ? [[one.id, one.registryNo] as const] : [])),
+  );
+  const candidates = (others.data ?? []).filter((row) => set === '' || row.set?.id === set);
   const inResults = lines.flatMap(({ standardId }) => known.standards.get(standardId ?? '') ?? []);
   const rows = understandRows(
     readPastedRows(table, { unit, uUnit, decimalMark }),
     inResults,
-    (others.data ?? []).map(knownFromRow),
+    candidates.map(knownFromRow),
   );
   const asksSign = read.isCorrection && turnsSign === null;
   const result = putRows(lines, rows, turnsSign ?? false);
@@ -47,7 +60,9 @@ export function PasteDialog({ text: pasted, onClose }: { text: string; onClose: 
 
   function put(): void {
     known.learnStandards(others.data ?? []);
-    setValue('lines', putRows(getValues('lines'), rows, turnsSign ?? false), { shouldDirty: true });
+    const names = new Map<string, string>();
+    setValue('lines', putRows(getValues('lines'), rows, turnsSign ?? false, names), { shouldDirty: true });
+    onPut(names);
     onClose();
   }
 
@@ -75,6 +90,16 @@ export function PasteDialog({ text: pasted, onClose }: { text: string; onClose: 
           setTurnsSign(null);
         }}
       />
+      {sets.size > 0 && (
+        <SelectField
+          label="Weights of"
+          placeholder="the results, then any set"
+          className="max-w-64"
+          choices={[...sets].map(([value, registryNo]) => ({ value, label: `set ${registryNo}` }))}
+          value={set}
+          onChange={(event) => setSet(event.target.value)}
+        />
+      )}
       {read.isCorrection && (
         <Notice
           tone="caution"

@@ -29,13 +29,15 @@ describe('putRows', () => {
       [TWO_HUNDRED],
       [ONE_HUNDRED],
     );
-    const lines = putRows(before, rows, false);
+    const names = new Map<string, string>();
+    const lines = putRows(before, rows, false, names);
     expect(lines.map(({ standardId, value, class: stated }) => [standardId, value, stated])).toEqual([
       [TWO_HUNDRED.id, '-0.031', 'E2'],
       [ONE_HUNDRED.id, '0.011', 'E2'],
       [null, '0.5', 'E2'],
     ]);
     expect(lines[0]?.key).toBe(before[0]?.key);
+    expect([...names]).toEqual([[lines[2]?.key, 'unknown']]);
   });
 
   it('turns corrections into deviations, and leaves whole values alone', () => {

@@ -3,7 +3,7 @@ import { Decimal } from '#shared/decimal.ts';
 import { newLine } from './draft-values.ts';
 import type { KnownStandard } from './known.ts';
 import { readMass } from './read-line.ts';
-import { matchWeight, type PastedNumber, type PastedRow } from './read-paste.ts';
+import { matchWeight, nominalOf, type PastedNumber, type PastedRow } from './read-paste.ts';
 
 /** A pasted row as it will stand in the results. */
 export interface UnderstoodRow {
@@ -24,24 +24,28 @@ export function understandRows(
 ): UnderstoodRow[] {
   return rows.map((row) => {
     const standard = matchWeight(row.weight, inResults) ?? matchWeight(row.weight, others);
-    return { row, standard, isWhole: isWhole(row.value, standard) };
+    const nominal = standard ? new Decimal(standard.nominal) : nominalOf(row.weight);
+    return { row, standard, isWhole: isWhole(row.value, nominal) };
   });
 }
 
 /**
  * Puts pasted rows into the results: into the line of the same weight where there is one, else as a new line.
+ * @param names gets the pasted names of lines that found no weight, by key of the line
  * @param turnsSign the column held corrections, which have the opposite sign of deviations
  */
 export function putRows(
   lines: readonly DraftLine[],
   rows: readonly UnderstoodRow[],
   turnsSign: boolean,
+  names: Map<string, string> = new Map(),
 ): DraftLine[] {
   const result = [...lines];
   for (const { row, standard, isWhole } of rows) {
     const at = standard ? result.findIndex(({ standardId }) => standardId === standard.id) : -1;
-    const line = result[at] ?? newLine(standard?.id ?? null, result.at(-1));
+    const line = result[at] ?? newLine(standard?.id ?? null, result[0]);
     const filled = { ...line, ...valueOf(row.value, isWhole, turnsSign), ...uOf(row.expandedU) };
+    if (!standard && row.weight !== '') names.set(line.key, row.weight);
     if (row.k !== '') filled.k = row.k.slice(0, 20);
     if (at >= 0) result[at] = filled;
     else result.push(filled);
@@ -66,9 +70,9 @@ export function turned(text: string): string {
   return `-${text.replace(/^\+/, '')}`;
 }
 
-function isWhole(value: PastedNumber, standard: KnownStandard | null): boolean {
-  if (!standard || !value || 'problem' in value) return false;
+function isWhole(value: PastedNumber, nominal: Decimal | null): boolean {
+  if (!nominal || !value || 'problem' in value) return false;
   const grams = readMass(value.text, value.unit);
-  const distance = grams?.minus(standard.nominal).abs().div(new Decimal(standard.nominal));
+  const distance = grams?.minus(nominal).abs().div(nominal);
   return distance?.lt(WHOLE_WITHIN) ?? false;
 }

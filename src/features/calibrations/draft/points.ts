@@ -3,10 +3,10 @@ import type { DraftResponse, OpenPoint } from '#shared/contracts/calibrations.ts
 import { isSameValue } from './same-value.ts';
 import type { DraftValues } from './draft-values.ts';
 
-/** What a point says in one line: what is wrong, what is wanted, and where that is laid down. */
-export function pointLine({ message, expected, clause }: OpenPoint): string {
+/** What a point says in one line: what is wrong, what is wanted where the message does not say it, and the clause. */
+export function pointLine({ message, expected, clause, kind }: OpenPoint): string {
   const sentence = message.replace(/[.\s]*$/, '');
-  const wanted = expected ? `; expected ${expected}` : '';
+  const wanted = expected && kind !== 'missing' ? `; expected ${expected}` : '';
   return `${sentence}${wanted}${clause ? ` (${clause})` : ''}.`;
 }
 

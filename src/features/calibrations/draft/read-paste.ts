@@ -169,7 +169,8 @@ function starsOf(text: string): number {
   return (plain(text).match(/\*/g) ?? []).length;
 }
 
-function nominalOf(text: string): Decimal | null {
+/** The nominal a name states, in grams: "200 g *" is 200; null where it states none. */
+export function nominalOf(text: string): Decimal | null {
   const match = /^\s*([\d.,\s]+?)\s*(kg|mg|g)\b/.exec(text);
   if (!match) return null;
   const read = readCell(`${match[1]} ${match[2]}`, 'g', '.');

@@ -13,13 +13,15 @@ import { StandardBox } from './standard-box.tsx';
 interface ResultRowProps {
   at: number;
   standard: KnownStandard | undefined;
+  /** What a pasted row called the weight, where none was found by that name. */
+  pastedName: string | undefined;
   isOpen: boolean;
   onOpen: (isOpen: boolean) => void;
   onRemove: () => void;
 }
 
 /** One result: weight, value, U, k and reference in a row, everything else of it below when opened. */
-export function ResultRow({ at, standard, isOpen, onOpen, onRemove }: ResultRowProps) {
+export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }: ResultRowProps) {
   const { control, register, setValue } = useFormContext<DraftValues>();
   const line = useWatch({ control, name: `lines.${at}` });
   const errorOf = usePointAt();
@@ -45,6 +47,7 @@ export function ResultRow({ at, standard, isOpen, onOpen, onRemove }: ResultRowP
               <StandardBox
                 label={`Weight of line ${at + 1}`}
                 isLabelHidden
+                hint={pastedName && `pasted as ${pastedName}`}
                 className="w-36"
                 onChosen={([weight]) =>
                   weight && setValue(`${path}.standardId`, weight.id, { shouldDirty: true })

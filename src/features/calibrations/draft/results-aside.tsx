@@ -11,67 +11,64 @@ export function ResultsAside({ lines }: { lines: readonly DraftLine[] }) {
   const known = useKnown();
   if (lines.length === 0) return null;
   return (
-    <Section title="Results, as they are read">
-      <Table caption="Results, as they are read">
-        <thead>
-          <tr>
-            <Head>Weight</Head>
-            <Head align="right">Deviation</Head>
-            <Head align="right">U</Head>
-            <Head align="right">Since last</Head>
-            <Head>U, a third of limit</Head>
-          </tr>
-        </thead>
-        <tbody>
-          {lines.map((line, at) => {
-            const standard = known.standards.get(line.standardId ?? '');
-            const { deviation, expandedU, k, change, third } = readLine(line, standard);
-            return (
-              <Row key={line.key}>
-                <Cell isHeading className="whitespace-nowrap">
-                  {standard?.marking ?? `line ${at + 1}`}
-                </Cell>
-                <Cell align="right">
-                  {deviation ? (
-                    <Quantity
-                      value={deviation}
-                      kind="deviation"
-                      shownIn="auto"
-                      expandedUncertainty={expandedU}
-                      coverageFactor={k}
-                      hidesUncertainty
-                    />
-                  ) : (
-                    <Nothing />
-                  )}
-                </Cell>
-                <Cell align="right">
-                  {expandedU ? (
-                    <Quantity value={expandedU} kind="uncertainty" shownIn="auto" coverageFactor={k} />
-                  ) : line.uNotStated ? (
-                    'not stated'
-                  ) : (
-                    <Nothing />
-                  )}
-                </Cell>
-                <Cell align="right">
-                  {change ? <Change {...change} expandedU={expandedU} /> : <Nothing />}
-                </Cell>
-                <Cell>
-                  {third ? (
-                    <StateMark state={third.isWithin ? 'sound' : 'caution'}>
-                      {third.isWithin ? 'within' : 'above'}{' '}
-                      <span className="whitespace-nowrap">{third.class}</span>
-                    </StateMark>
-                  ) : (
-                    <Nothing />
-                  )}
-                </Cell>
-              </Row>
-            );
-          })}
-        </tbody>
-      </Table>
+    <Section title="Results, as they are read" note="class: U within a third of its limit">
+      <div className="min-w-0 overflow-x-auto">
+        <Table caption="Results, as they are read">
+          <thead>
+            <tr>
+              <Head>Weight</Head>
+              <Head align="right">Deviation</Head>
+              <Head align="right">U</Head>
+              <Head align="right">Since last</Head>
+              <Head>Class</Head>
+            </tr>
+          </thead>
+          <tbody>
+            {lines.map((line, at) => {
+              const standard = known.standards.get(line.standardId ?? '');
+              const { deviation, expandedU, change, third } = readLine(line, standard);
+              return (
+                <Row key={line.key}>
+                  <Cell isHeading className="whitespace-nowrap">
+                    {standard?.marking ?? `line ${at + 1}`}
+                  </Cell>
+                  <Cell align="right">
+                    {deviation ? (
+                      <Quantity value={deviation} kind="deviation" shownIn={line.unit} />
+                    ) : (
+                      <Nothing />
+                    )}
+                  </Cell>
+                  <Cell align="right">
+                    {expandedU ? (
+                      <Quantity value={expandedU} shownIn={line.uUnit} />
+                    ) : line.uNotStated ? (
+                      'not stated'
+                    ) : (
+                      <Nothing />
+                    )}
+                  </Cell>
+                  <Cell align="right">
+                    {change ? <Change {...change} expandedU={expandedU} /> : <Nothing />}
+                  </Cell>
+                  <Cell>
+                    {third ? (
+                      <StateMark state={third.isWithin ? 'sound' : 'caution'}>
+                        {third.class}
+                        <span className="sr-only">
+                          : U is {third.isWithin ? 'within' : 'above'} a third of the limit
+                        </span>
+                      </StateMark>
+                    ) : (
+                      <Nothing />
+                    )}
+                  </Cell>
+                </Row>
+              );
+            })}
+          </tbody>
+        </Table>
+      </div>
     </Section>
   );
 }

@@ -25,6 +25,7 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
   const { fields, append, remove } = useFieldArray({ control, name: 'lines', keyName: 'rowId' });
   const lines = useWatch({ control, name: 'lines' });
   const [pasted, setPasted] = useState<string | null>(null);
+  const [names, setNames] = useState<ReadonlyMap<string, string>>(new Map());
   const known = useKnown();
 
   function add(weights: readonly StandardRow[]): void {
@@ -79,6 +80,7 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
                   key={rowId}
                   at={at}
                   standard={known.standards.get(lines[at]?.standardId ?? '')}
+                  pastedName={names.get(key)}
                   isOpen={open === key}
                   onOpen={(isOpen) => onOpen(isOpen ? key : null)}
                   onRemove={() => remove(at)}
@@ -96,7 +98,13 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
           <StandardBox label="Add a weight or a set" hasSets onChosen={add} className="max-w-120" />
         </div>
       </div>
-      {pasted !== null && <PasteDialog text={pasted} onClose={() => setPasted(null)} />}
+      {pasted !== null && (
+        <PasteDialog
+          text={pasted}
+          onPut={(found) => setNames(new Map([...names, ...found]))}
+          onClose={() => setPasted(null)}
+        />
+      )}
     </Section>
   );
 }

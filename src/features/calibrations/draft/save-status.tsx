@@ -12,7 +12,9 @@ export function SaveStatus({ state, updatedAt }: { state: SaveState; updatedAt: 
       return <>saved {clockTime(state.at)}</>;
     case 'unreachable':
       return (
-        <span className="text-caution">not saved: the server does not answer; kept in this browser</span>
+        <span className="text-caution">
+          not saved: the server {state.isAnswered ? 'failed' : 'does not answer'}; kept in this browser
+        </span>
       );
     case 'refused':
       return <span className="text-broken">not saved: the server refused it; kept in this browser</span>;

@@ -14,6 +14,7 @@ interface StandardBoxProps {
   isLabelHidden?: boolean;
   /** Offers whole sets beside single weights. */
   hasSets?: boolean;
+  hint?: string;
   onChosen: (weights: StandardRow[]) => void;
   className?: string;
 }
@@ -22,13 +23,13 @@ const LONGEST_LIST = 30;
 const LARGEST_SET = 200;
 
 /** Finds weights of the laboratory by part of a number or marking; a set comes as a whole. */
-export function StandardBox({ label, isLabelHidden, hasSets, onChosen, className }: StandardBoxProps) {
+export function StandardBox({ label, isLabelHidden, hint, hasSets, onChosen, className }: StandardBoxProps) {
   const { laboratoryId } = useDraft();
   const { learnStandards } = useKnown();
   return (
     <Combobox<WeightOption>
-      {...{ label, isLabelHidden, className }}
-      placeholder={hasSets ? 'registry number or marking; a set by its number' : 'registry number or marking'}
+      {...{ label, isLabelHidden, hint, className }}
+      placeholder={hasSets ? 'registry number or marking; a set by its number' : 'number or marking'}
       emptyText="No weight of this laboratory by that number or marking"
       value={null}
       onChange={(option) => {
