@@ -1,6 +1,7 @@
 export { Decimal } from '#shared/decimal.ts';
-export { EngineError } from './errors.ts';
+export { EngineError, ENGINE_ERROR_CODES } from './errors.ts';
 export { ENGINE_VERSION } from './version.ts';
+export type { EngineErrorCode } from './errors.ts';
 
 // quantities
 export { UNITS, UNIT_DEFINITIONS, unitOfText, convertUnit, convertDecimals } from './quantity/units.ts';
@@ -126,7 +127,7 @@ export { isPositiveSemidefinite } from './linear/matrix.ts';
 export type { Matrix } from './linear/matrix.ts';
 
 // comparisons
-export { referenceValue } from './comparison/reference-value.ts';
+export { referenceValue, ESTIMATORS } from './comparison/reference-value.ts';
 export { degreesOfEquivalence, pairwise } from './comparison/degrees-of-equivalence.ts';
 export { consistency, chiSquaredAbout } from './comparison/consistency.ts';
 export { largestConsistentSubset } from './comparison/largest-consistent-subset.ts';

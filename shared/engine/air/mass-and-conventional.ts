@@ -38,8 +38,8 @@ function requireEnough(standardUncertainty: number, volumePart: number): void {
   throw new EngineError(
     'uncertainty-below-volume-part',
     'standardUncertainty',
-    `standardUncertainty is ${standardUncertainty} g, less than the ${volumePart} g that the volume alone brings. ` +
-      'Give the whole uncertainty of the value, or the smaller uncertainty of the volume.',
+    `${standardUncertainty} g`,
+    `The volume alone brings ${volumePart} g. Give the whole uncertainty of the value, or the smaller uncertainty of the volume.`,
   );
 }
 

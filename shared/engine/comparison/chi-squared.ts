@@ -1,22 +1,16 @@
-import { EngineError } from '../errors.ts';
+import { requireNumber, requireWhole } from '../quantity/domain.ts';
 import { normalUpperTail } from '../uncertainty/normal-distribution.ts';
 
 /**
  * Probability that a chi-squared variable exceeds `x`, by the finite sum for whole degrees of freedom
  * (Abramowitz and Stegun 26.4.4 and 26.4.5, from memory); all terms are positive, so the far tail keeps its digits.
  * @param degreesOfFreedom whole, at least 0; with 0 the variable is 0 itself
- * @throws EngineError `out-of-range`
+ * @throws EngineError `not-whole`, `not-finite`, `out-of-range`
  */
 export function chiSquaredUpperTail(x: number, degreesOfFreedom: number): number {
-  if (!Number.isInteger(degreesOfFreedom) || degreesOfFreedom < 0) {
-    throw new EngineError(
-      'out-of-range',
-      'degreesOfFreedom',
-      `${degreesOfFreedom} degrees of freedom; a whole number of at least 0 is expected.`,
-    );
-  }
-  if (!(x >= 0))
-    throw new EngineError('out-of-range', 'x', `Chi-squared is ${x}; a number of at least 0 is expected.`);
+  requireWhole(degreesOfFreedom, 'degreesOfFreedom', { min: 0 });
+  if (x === Infinity) return degreesOfFreedom === 0 ? 1 : 0;
+  requireNumber(x, 'x', { min: 0 });
   if (x === 0 || degreesOfFreedom === 0) return x === 0 ? 1 : 0;
   const half = x / 2;
   const odd = degreesOfFreedom % 2 === 1;
@@ -34,16 +28,11 @@ export function chiSquaredUpperTail(x: number, degreesOfFreedom: number): number
  * The value a chi-squared variable exceeds with the given probability, by bisection to the last digits.
  * @param probability above 0, below 1
  * @param degreesOfFreedom whole, at least 1
- * @throws EngineError `out-of-range`
+ * @throws EngineError `not-whole`, `not-finite`, `out-of-range`
  */
 export function chiSquaredUpperPoint(probability: number, degreesOfFreedom: number): number {
-  if (!(probability > 0 && probability < 1)) {
-    throw new EngineError(
-      'out-of-range',
-      'probability',
-      `The probability is ${probability}; between 0 and 1 is expected.`,
-    );
-  }
+  requireNumber(probability, 'probability', { above: 0, below: 1 });
+  requireWhole(degreesOfFreedom, 'degreesOfFreedom', { min: 1 });
   let low = 0;
   let high = degreesOfFreedom + 1;
   while (chiSquaredUpperTail(high, degreesOfFreedom) > probability) high *= 2;

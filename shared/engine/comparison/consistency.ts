@@ -1,7 +1,7 @@
-import { EngineError } from '../errors.ts';
 import { inverseSymmetric } from '../linear/matrix.ts';
+import { requireLevel } from '../quantity/domain.ts';
 import { chiSquaredUpperPoint, chiSquaredUpperTail } from './chi-squared.ts';
-import { checkedResults, type Results, statedCovariance } from './results.ts';
+import { checkedResults, requireMembers, type Results, statedCovariance } from './results.ts';
 import { weightedMean } from './weighted-mean.ts';
 
 /** Whether results agree with one another within their stated uncertainties. */
@@ -25,19 +25,12 @@ export type Consistency = {
  * @throws EngineError `uncertainties-missing`, `out-of-range`, those of `checkedResults`; `too-few-values` for fewer than two
  */
 export function consistency(r: Results, level = 0.05): Consistency {
-  if (!(level > 0 && level < 1)) {
-    throw new EngineError('out-of-range', 'level', `The level is ${level}; between 0 and 1 is expected.`);
-  }
+  requireLevel(level);
   const checked = checkedResults(r);
+  // One result cannot be consistent or not.
+  requireMembers(checked, 2);
   const { chiSquared } = weightedMean(checked, statedCovariance(checked), checked.members);
   const degreesOfFreedom = checked.members.length - 1;
-  if (degreesOfFreedom === 0) {
-    throw new EngineError(
-      'too-few-values',
-      'counts',
-      'One result cannot be consistent or not; let at least two count.',
-    );
-  }
   const critical = chiSquaredUpperPoint(level, degreesOfFreedom);
   return {
     ...observed(chiSquared, degreesOfFreedom),

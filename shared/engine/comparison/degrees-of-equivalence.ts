@@ -1,5 +1,5 @@
-import { EngineError } from '../errors.ts';
 import { quadraticForm } from '../linear/matrix.ts';
+import { requireSize } from '../quantity/domain.ts';
 import type { ReferenceValue } from './reference-value.ts';
 import { checkedResults, type Results, statedCovariance } from './results.ts';
 
@@ -28,13 +28,7 @@ export function degreesOfEquivalence(
 ): DegreeOfEquivalence[] {
   const checked = checkedResults(r);
   const covariance = statedCovariance(checked);
-  if (ref.coefficients.length !== checked.values.length) {
-    throw new EngineError(
-      'size-mismatch',
-      'ref.coefficients',
-      `The reference value has ${ref.coefficients.length} coefficients for ${checked.values.length} results.`,
-    );
-  }
+  requireSize(ref.coefficients.length, checked.values.length, 'ref.coefficients', 'results');
   const added = options.includeBetweenVariance ? (ref.betweenVariance ?? 0) : 0;
   const widened = covariance.map((row, i) => row.map((value, j) => (i === j ? value + added : value)));
   return checked.values.map((x, i) => {

@@ -7,7 +7,7 @@ export type DriftModel = 'line' | 'bracketing' | 'none';
  * Weights of the pilot's visits in the reference value at `time`; they sum to 1. `line`: the least squares line
  * through all visits; `bracketing`: straight between the visit before and the one after (petals, where the standard
  * may wander); `none`: the mean of all visits.
- * @throws EngineError `too-few-visits`, `not-bracketed`
+ * @throws EngineError `one-date`, `not-bracketed`
  */
 export function visitWeights(
   model: DriftModel,
@@ -24,8 +24,9 @@ function lineWeights(visits: readonly number[], time: number, field: string): nu
   const spread = visits.reduce((sum, visit) => sum + (visit - mean) ** 2, 0);
   if (spread === 0) {
     throw new EngineError(
-      'too-few-visits',
+      'one-date',
       field,
+      'visits on one day',
       'A drift line needs visits of the pilot on at least two days.',
     );
   }
@@ -48,7 +49,8 @@ export function bracket(visits: readonly number[], time: number, field: string):
   throw new EngineError(
     'not-bracketed',
     field,
-    `No visit of the pilot lies on both sides of time ${time}; add one or fit a line.`,
+    time,
+    'A time between two visits of the pilot is expected; add a visit or fit a line.',
   );
 }
 

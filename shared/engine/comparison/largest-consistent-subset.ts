@@ -1,4 +1,4 @@
-import { EngineError } from '../errors.ts';
+import { requireLevel } from '../quantity/domain.ts';
 import { chiSquaredUpperPoint } from './chi-squared.ts';
 import { type CheckedResults, checkedResults, type Results, statedCovariance } from './results.ts';
 import { subsetsOfSize } from './subsets.ts';
@@ -36,9 +36,7 @@ type Subset = { members: number[]; chiSquared: number };
  * @throws EngineError `uncertainties-missing`, `out-of-range`, those of `checkedResults`
  */
 export function largestConsistentSubset(r: Results, level = 0.05): ConsistentSubset {
-  if (!(level > 0 && level < 1)) {
-    throw new EngineError('out-of-range', 'level', `The level is ${level}; between 0 and 1 is expected.`);
-  }
+  requireLevel(level);
   const checked = checkedResults(r);
   const covariance = statedCovariance(checked);
   const critical = (size: number) => (size === 1 ? 0 : chiSquaredUpperPoint(level, size - 1));

@@ -56,9 +56,9 @@ describe('link: a regional comparison to another (synthetic, mpmath at 50 digits
     [[], 'no-link', 'linking'],
     [[{ reference: 9, regional: 0, covariance: 0 }], 'out-of-range', 'linking[0].reference'],
     [[{ reference: 0, regional: 7, covariance: 0 }], 'out-of-range', 'linking[0].regional'],
-    [[{ reference: 0.5, regional: 0, covariance: 0 }], 'out-of-range', 'linking[0].reference'],
+    [[{ reference: 0.5, regional: 0, covariance: 0 }], 'not-whole', 'linking[0].reference'],
     [[{ reference: 0, regional: 0, covariance: NaN }], 'not-finite', 'linking[0].covariance'],
-    [[{ reference: 0, regional: 0, covariance: 1 }], 'not-a-covariance', 'covariance[0][9]'],
+    [[{ reference: 0, regional: 0, covariance: 1 }], 'not-positive-semidefinite', 'covariance[0][9]'],
   ])('refuses %j', (wrong, code, field) => {
     expect(() => link({ ...LINK_SET, linking: wrong })).toThrow(expect.objectContaining({ code, field }));
   });

@@ -1,6 +1,6 @@
 import { EngineError } from '../errors.ts';
 import { multiplyVector, quadraticForm } from '../linear/matrix.ts';
-import { requireNumber } from '../quantity/domain.ts';
+import { requireNumber, requireWhole } from '../quantity/domain.ts';
 import { observed } from './consistency.ts';
 import { type DegreeOfEquivalence, equivalence } from './degrees-of-equivalence.ts';
 import { type ReferenceValue, referenceValue } from './reference-value.ts';
@@ -34,7 +34,7 @@ export type Link = {
  * Metrologia 39 Tech. Suppl. 01005; Elster, Link and Woeger 2003 Metrologia 40 189), in matrix form over the joint
  * covariance of all results. For ratios give relative deviations or logarithms.
  * @param a.published reference value as published, if another estimator than the weighted mean was used
- * @throws EngineError `no-link`, `size-mismatch`, `out-of-range`, `not-finite`, `not-a-covariance`, those of
+ * @throws EngineError `no-link`, `size-mismatch`, `out-of-range`, `not-finite`, `not-whole`, `not-positive-semidefinite`, those of
  * `checkedResults` and `referenceValue`
  */
 export function link(a: {
@@ -121,23 +121,15 @@ function checkLinking(
     throw new EngineError(
       'no-link',
       'linking',
-      'No participant took part in both comparisons; at least one has to.',
+      'no participant',
+      'At least one has to have taken part in both comparisons.',
     );
   }
   linking.forEach((one, l) => {
-    requirePlace(one.reference, referenceCount, `linking[${l}].reference`);
-    requirePlace(one.regional, regionalCount, `linking[${l}].regional`);
+    requireWhole(one.reference, `linking[${l}].reference`, { min: 0, max: referenceCount - 1 });
+    requireWhole(one.regional, `linking[${l}].regional`, { min: 0, max: regionalCount - 1 });
     requireNumber(one.covariance, `linking[${l}].covariance`);
   });
-}
-
-function requirePlace(place: number, count: number, field: string): void {
-  if (Number.isInteger(place) && place >= 0 && place < count) return;
-  throw new EngineError(
-    'out-of-range',
-    field,
-    `${field} is ${place}; a place from 0 to ${count - 1} is expected.`,
-  );
 }
 
 /** The linking differences and their generalised least squares mean. */

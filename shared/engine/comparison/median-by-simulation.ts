@@ -1,5 +1,5 @@
-import { EngineError } from '../errors.ts';
 import { cholesky } from '../linear/matrix.ts';
+import { requireWhole } from '../quantity/domain.ts';
 import { coverageInterval } from '../uncertainty/coverage-interval.ts';
 import { randomSource } from '../uncertainty/random.ts';
 import type { CheckedResults } from './results.ts';
@@ -23,21 +23,14 @@ const LEAST_DRAWS = 1000;
 /**
  * Procedure B of Cox 2002 Metrologia 39 589: vectors drawn from the results' joint normal distribution, the median
  * of the members taken each time; value = mean, uncertainty = standard deviation of these medians.
- * @throws EngineError `out-of-range` for fewer than 1000 draws; `not-positive-definite` for complete correlations
+ * @throws EngineError `not-whole`; `out-of-range` for fewer than 1000 draws; `not-positive-definite` for complete correlations
  */
 export function medianBySimulation(
   checked: CheckedResults,
   covariance: readonly (readonly number[])[],
   options: { draws?: number; seed?: number },
 ): SimulatedMedian {
-  const draws = options.draws ?? 100_000;
-  if (!Number.isInteger(draws) || draws < LEAST_DRAWS) {
-    throw new EngineError(
-      'out-of-range',
-      'draws',
-      `${draws} draws; a whole number of at least ${LEAST_DRAWS} is expected.`,
-    );
-  }
+  const draws = requireWhole(options.draws ?? 100_000, 'draws', { min: LEAST_DRAWS });
   const { medians, differences, timesMiddle } = simulate(
     checked,
     sampler(checked, covariance, options.seed ?? 1),

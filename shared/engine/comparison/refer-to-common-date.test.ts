@@ -133,7 +133,7 @@ describe('referToCommonDate: petals and several standards', () => {
     [
       'a line through one day',
       { drift: 'line', observations: [first!, observation] },
-      'too-few-visits',
+      'one-date',
       'observations[1].time',
     ],
     [
@@ -145,7 +145,7 @@ describe('referToCommonDate: petals and several standards', () => {
     [
       'a result without uncertainty',
       { observations: [first!, { ...observation, standardUncertainty: undefined }] },
-      'uncertainties-missing',
+      'missing-uncertainties',
       'observations[1].standardUncertainty',
     ],
     [
@@ -157,7 +157,7 @@ describe('referToCommonDate: petals and several standards', () => {
     [
       'two results without their common part',
       { observations: [...petal.observations, observation] },
-      'common-uncertainty-missing',
+      'missing-common-uncertainty',
       'observations[2].commonUncertainty',
     ],
     [

@@ -3,7 +3,6 @@ import { inverseSymmetric, multiply, transpose } from '../linear/matrix.ts';
 import { requireNumber } from '../quantity/domain.ts';
 import { type DriftFit, driftFit } from './drift-fit.ts';
 import { type DriftModel, visitWeights, wanderCovariance } from './drift-models.ts';
-import { requirePositive } from './results.ts';
 
 /** One measurement of one travelling standard. Visits of the pilot carry no uncertainty of their own. */
 export type Observation = {
@@ -45,8 +44,8 @@ export type CommonDateResults = {
  * evaluated together; a participant with several observations gets their generalised least squares mean. The pilot
  * enters once, with its systematic part. (Line model: Sutton and Clarkson 1993 Metrologia 30 487; star circulation
  * and random walk: Elster, Woeger and Cox 2005 Meas. Tech. 48 883.)
- * @throws EngineError `no-visit`, `too-few-visits`, `not-bracketed`, `uncertainties-missing`,
- * `common-uncertainty-missing`, `not-finite`, `out-of-range`
+ * @throws EngineError `no-visit`, `one-date`, `not-bracketed`, `missing-uncertainties`,
+ * `missing-common-uncertainty`, `not-finite`, `out-of-range`
  */
 export function referToCommonDate(circulation: Circulation): CommonDateResults {
   checkCirculation(circulation);
@@ -88,7 +87,8 @@ function referred(circulation: Circulation, observation: Observation, field: str
     throw new EngineError(
       'no-visit',
       `${field}.standard`,
-      `The pilot never measured "${observation.standard}"; add its visits.`,
+      `"${observation.standard}"`,
+      'The pilot never measured this standard; add its visits.',
     );
   }
   const times = visits.map(({ time }) => time);
@@ -138,8 +138,8 @@ function participantMeans(participants: string[], terms: readonly Referred[], co
 }
 
 function checkCirculation(circulation: Circulation): void {
-  requirePositive(circulation.pilotRepeatability, 'pilotRepeatability');
-  requirePositive(circulation.pilotSystematic, 'pilotSystematic');
+  requireNumber(circulation.pilotRepeatability, 'pilotRepeatability', { above: 0 });
+  requireNumber(circulation.pilotSystematic, 'pilotSystematic', { above: 0 });
   requireNumber(circulation.transport ?? 0, 'transport', { min: 0 });
   requireNumber(circulation.randomWalk ?? 0, 'randomWalk', { min: 0 });
   const counts = new Map<string, number>();
@@ -162,17 +162,19 @@ function checkUncertainties(
 ): void {
   if (standardUncertainty === undefined) {
     throw new EngineError(
-      'uncertainties-missing',
+      'missing-uncertainties',
       `${field}.standardUncertainty`,
+      'nothing',
       'A participant states the standard uncertainty of each result.',
     );
   }
-  requirePositive(standardUncertainty, `${field}.standardUncertainty`);
+  requireNumber(standardUncertainty, `${field}.standardUncertainty`, { above: 0 });
   if (!isRepeated) return;
   if (commonUncertainty === undefined) {
     throw new EngineError(
-      'common-uncertainty-missing',
+      'missing-common-uncertainty',
       `${field}.commonUncertainty`,
+      'nothing',
       'A participant with several results states which part of the uncertainty they share; 0 if none.',
     );
   }

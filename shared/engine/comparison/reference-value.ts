@@ -1,5 +1,5 @@
-import { EngineError } from '../errors.ts';
 import { quadraticForm } from '../linear/matrix.ts';
+import { requireChoice } from '../quantity/domain.ts';
 import { algorithmA, type RobustValue } from './algorithm-a.ts';
 import { observed } from './consistency.ts';
 import { medianBySimulation, type SimulatedDifference } from './median-by-simulation.ts';
@@ -15,14 +15,19 @@ import {
 } from './results.ts';
 import { type WeightedMean, weightedMean } from './weighted-mean.ts';
 
-export type Estimator =
-  | 'weighted-mean'
-  | 'arithmetic-mean'
-  | 'median'
-  | 'mandel-paule'
-  | 'dersimonian-laird'
-  | 'algorithm-a'
-  | 'q-hampel';
+/** Estimators of a reference value; `referenceValue` says what each does. */
+export const ESTIMATORS = [
+  'weighted-mean',
+  'arithmetic-mean',
+  'median',
+  'mandel-paule',
+  'dersimonian-laird',
+  'algorithm-a',
+  'q-hampel',
+] as const;
+
+/** An estimator of a reference value. */
+export type Estimator = (typeof ESTIMATORS)[number];
 
 /** What a person should look at before the value is used. */
 export type ReferenceWarning = 'negative-weights' | 'between-variance-cut-at-zero';
@@ -64,7 +69,7 @@ type Estimate = Omit<
  *   median with `u = 1.858 MAD / sqrt(n - 1)` (Mueller 2000 J. Res. NIST 105 551).
  * - `mandel-paule`, `dersimonian-laird`: random effects, with the covariance where given.
  * - `algorithm-a`, `q-hampel`: ISO 13528:2015 annex C, `u = 1.25 s* / sqrt n`; stated uncertainties are not used.
- * @throws EngineError `uncertainties-missing`, `too-few-values`, `unknown-estimator`, `singular`, those of
+ * @throws EngineError `missing-uncertainties`, `too-few-values`, `unknown-choice`, `singular`, those of
  * `checkedResults` and `medianBySimulation`
  */
 export function referenceValue(
@@ -85,7 +90,7 @@ function estimateOf(
   estimator: Estimator,
   options: { draws?: number; seed?: number },
 ): Estimate & { warnings?: ReferenceWarning[] } {
-  switch (estimator) {
+  switch (requireChoice(estimator, 'estimator', ESTIMATORS)) {
     case 'weighted-mean':
       return fromMean(weightedMean(checked, statedCovariance(checked), checked.members), 0);
     case 'arithmetic-mean':
@@ -95,17 +100,11 @@ function estimateOf(
       return { ...medianBySimulation(checked, checked.covariance, options), betweenVariance: 0 };
     case 'mandel-paule':
     case 'dersimonian-laird':
-      return randomEffects(checked, estimator);
+      return randomEffects(checked, estimator as 'mandel-paule' | 'dersimonian-laird');
     case 'algorithm-a':
       return robust(checked, algorithmA);
     case 'q-hampel':
       return robust(checked, qHampel);
-    default:
-      throw new EngineError(
-        'unknown-estimator',
-        'estimator',
-        `"${String(estimator)}" is not an estimator known here.`,
-      );
   }
 }
 

@@ -20,7 +20,7 @@ describe('results outside the domain are refused with their field', () => {
     [
       'an uncertainty that is no number',
       { values: [1], uncertainties: [NaN] },
-      'out-of-range',
+      'not-finite',
       'uncertainties[0]',
     ],
     [
@@ -32,7 +32,7 @@ describe('results outside the domain are refused with their field', () => {
           [2, 1],
         ],
       },
-      'not-a-covariance',
+      'not-positive-semidefinite',
       'covariance[0][1]',
     ],
     [
@@ -48,7 +48,7 @@ describe('results outside the domain are refused with their field', () => {
       'covariance[1][1]',
     ],
     ['nobody who counts', { ...right, counts: [false, false, false] }, 'too-few-values', 'counts'],
-    ['no uncertainties', { values: [1, 2] }, 'uncertainties-missing', 'uncertainties'],
+    ['no uncertainties', { values: [1, 2] }, 'missing-uncertainties', 'uncertainties'],
     [
       'complete correlation',
       {
@@ -82,7 +82,7 @@ describe('results outside the domain are refused with their field', () => {
 
   it('an estimator that is not known, a level outside 0 to 1, coefficients of another comparison', () => {
     expect(() => referenceValue(right, 'mode' as Estimator)).toThrow(
-      expect.objectContaining({ code: 'unknown-estimator' }),
+      expect.objectContaining({ code: 'unknown-choice' }),
     );
     for (const level of [0, 1, NaN]) {
       expect(() => largestConsistentSubset(right, level)).toThrow(

@@ -1,6 +1,7 @@
 import { EngineError } from '../errors.ts';
-import { isPositiveSemidefinite } from '../linear/matrix.ts';
+import { requirePositiveSemidefinite } from '../linear/matrix.ts';
 import { requireNumbers } from '../linear/requirements.ts';
+import { requireNumber, requireSize } from '../quantity/domain.ts';
 
 /**
  * Results of a comparison, by participant, in one unit; best as deviations from nominal, since doubles keep no
@@ -31,27 +32,17 @@ export type CheckedResults = {
 /**
  * Checks results for length and domain.
  * @throws EngineError `too-few-values`, `not-finite`, `size-mismatch`, `out-of-range` (an uncertainty not above 0),
- * `not-a-covariance`, and those of `isPositiveSemidefinite`
+ * and those of `requirePositiveSemidefinite`
  */
 export function checkedResults(r: Results): CheckedResults {
   requireNumbers(r.values, 'values');
   const count = r.values.length;
   for (const field of ['uncertainties', 'covariance', 'counts'] as const) {
-    if ((r[field]?.length ?? count) !== count) {
-      throw new EngineError(
-        'size-mismatch',
-        field,
-        `${field} has ${r[field]!.length} entries for ${count} values.`,
-      );
-    }
+    requireSize(r[field]?.length ?? count, count, field, 'values');
   }
   const members = r.values.map((_, i) => i).filter((i) => r.counts?.[i] ?? true);
   if (members.length === 0) {
-    throw new EngineError(
-      'too-few-values',
-      'counts',
-      'No result counts in the reference value; let at least one count.',
-    );
+    throw new EngineError('too-few-values', 'counts', 'no result that counts', 'Let at least one count.');
   }
   const covariance = r.covariance ? checkedCovariance(r.covariance) : diagonal(r.uncertainties);
   const independent = !r.covariance?.some((row, i) => row.some((value, j) => i !== j && value !== 0));
@@ -59,36 +50,23 @@ export function checkedResults(r: Results): CheckedResults {
 }
 
 function diagonal(uncertainties: readonly number[] | undefined): number[][] | null {
-  uncertainties?.forEach((u, i) => requirePositive(u, `uncertainties[${i}]`));
+  uncertainties?.forEach((u, i) => requireNumber(u, `uncertainties[${i}]`, { above: 0 }));
   return uncertainties?.map((u, i) => uncertainties.map((_, j) => (i === j ? u * u : 0))) ?? null;
 }
 
 function checkedCovariance(covariance: number[][]): number[][] {
-  const { ok, offending } = isPositiveSemidefinite(covariance);
-  if (!ok) {
-    const [i, j] = offending!;
-    throw new EngineError(
-      'not-a-covariance',
-      `covariance[${i}][${j}]`,
-      `No set of results can have this covariance; see entry ${covariance[i]![j]!} of results ${i + 1} and ${j + 1}.`,
-    );
-  }
-  covariance.forEach((row, i) => requirePositive(row[i]!, `covariance[${i}][${i}]`));
+  requirePositiveSemidefinite(covariance, 'covariance', (i) => `result ${i + 1}`);
+  covariance.forEach((row, i) => requireNumber(row[i], `covariance[${i}][${i}]`, { above: 0 }));
   return covariance;
 }
 
-/** Refuses what is not a finite number above 0. @throws EngineError `out-of-range` */
-export function requirePositive(value: number, field: string): void {
-  if (Number.isFinite(value) && value > 0) return;
-  throw new EngineError('out-of-range', field, `${field} is ${value}; a finite number above 0 is expected.`);
-}
-
-/** The covariance matrix. @throws EngineError `uncertainties-missing` where none is stated */
+/** The covariance matrix. @throws EngineError `missing-uncertainties` where none is stated */
 export function statedCovariance(checked: CheckedResults): readonly (readonly number[])[] {
   if (checked.covariance) return checked.covariance;
   throw new EngineError(
-    'uncertainties-missing',
+    'missing-uncertainties',
     'uncertainties',
+    'nothing',
     'This evaluation weighs results by their uncertainties; give uncertainties or a covariance.',
   );
 }
@@ -99,6 +77,7 @@ export function requireMembers(checked: CheckedResults, least: number): void {
   throw new EngineError(
     'too-few-values',
     'counts',
-    `${checked.members.length} results count in the reference value; this estimator needs at least ${least}.`,
+    `${checked.members.length} results that count`,
+    `At least ${least} are needed here.`,
   );
 }

@@ -1,5 +1,4 @@
 import { requireNumber } from '../quantity/domain.ts';
-import { requirePositive } from './results.ts';
 
 /**
  * Normalised error `(x - x_pt) / sqrt(U^2(x) + U^2(x_pt))` (ISO 13528:2015 9.7): both U at the same coverage factor,
@@ -64,7 +63,7 @@ export function zScoreAllowed(a: {
   standardDeviation: number;
 }): boolean {
   requireNumber(a.referenceStandardUncertainty, 'referenceStandardUncertainty', { min: 0 });
-  requirePositive(a.standardDeviation, 'standardDeviation');
+  requireNumber(a.standardDeviation, 'standardDeviation', { above: 0 });
   return a.referenceStandardUncertainty < 0.3 * a.standardDeviation;
 }
 
@@ -80,6 +79,6 @@ function ratio(value: number, reference: number, parts: [string, number][]): num
   requireNumber(reference, 'reference');
   parts.forEach(([field, part]) => requireNumber(part, field, { min: 0 }));
   const scale = Math.hypot(...parts.map(([, part]) => part));
-  requirePositive(scale, parts[0]![0]);
+  requireNumber(scale, parts[0]![0], { above: 0 });
   return (value - reference) / scale;
 }

@@ -19,6 +19,7 @@ export function requireLimits(
     throw new EngineError(
       'missing-limit',
       names[0],
+      'nothing',
       `Give ${names[0]}, ${names[1]} or both: there is no limit.`,
     );
   }

@@ -31,6 +31,7 @@ export function guardBandedAcceptance(a: {
     throw new EngineError(
       'empty-acceptance',
       'expandedUncertainty',
+      a.expandedUncertainty,
       `Guard bands of ${guard} leave nothing between ${a.lower} and ${a.upper}. A smaller uncertainty is needed.`,
     );
   }

@@ -1,5 +1,6 @@
 import { EngineError } from '../errors.ts';
 import { build, entry, item, type Matrix } from './entries.ts';
+import { requireSize } from '../quantity/domain.ts';
 import { asymmetry, requireSquare, requireSymmetric } from './requirements.ts';
 import { symmetricEigen } from './symmetric-eigen.ts';
 
@@ -20,13 +21,7 @@ export function transpose(matrix: Matrix): number[][] {
 export function multiply(left: Matrix, right: Matrix): number[][] {
   const inner = right.length;
   const columns = left[0]?.length ?? 0;
-  if (columns !== inner) {
-    throw new EngineError(
-      'size-mismatch',
-      'right',
-      `A matrix of ${columns} columns cannot multiply one of ${inner} rows.`,
-    );
-  }
+  requireSize(inner, columns, 'right', 'columns of left');
   return build(left.length, right[0]?.length ?? 0, (i, j) => {
     let sum = 0;
     for (let k = 0; k < inner; k += 1) sum += entry(left, i, k) * entry(right, k, j);
@@ -62,7 +57,8 @@ export function cholesky(matrix: Matrix, field = 'matrix'): number[][] {
     throw new EngineError(
       'not-positive-definite',
       `${field}[${failedAt}]`,
-      `${field} is not positive definite: row ${failedAt + 1} depends on the rows above it, or contradicts them.`,
+      `row ${failedAt + 1}`,
+      'Rows that do not depend on those above them, and do not contradict them, are expected.',
     );
   }
   return lower;
@@ -102,13 +98,7 @@ function equilibrium(matrix: Matrix): number[] {
  * @throws EngineError `singular` naming a row that depends on others; `size-mismatch`; those of `requireSymmetric`
  */
 export function solveSymmetric(matrix: Matrix, right: readonly number[], field = 'matrix'): number[] {
-  if (right.length !== matrix.length) {
-    throw new EngineError(
-      'size-mismatch',
-      'right',
-      `${right.length} right-hand values for ${matrix.length} equations.`,
-    );
-  }
+  requireSize(right.length, matrix.length, 'right', 'equations');
   return solveColumns(
     matrix,
     right.map((value) => [value]),
@@ -156,7 +146,8 @@ function eliminateColumn(rows: number[][], k: number, field: string): void {
     throw new EngineError(
       'singular',
       `${field}[${k}]`,
-      `${field} is singular: column ${k + 1} depends on those before it.`,
+      `column ${k + 1}`,
+      'Columns that do not depend on those before them are expected.',
     );
   }
   rows[best] = item(rows, k);
@@ -219,4 +210,27 @@ function negativeCombination(matrix: Matrix): [number, number] | undefined {
     }
   }
   return worst;
+}
+
+/**
+ * Refuses a matrix that cannot be the covariance or correlation matrix of anything, and names the pair to look at.
+ * @param nameOf how the message names row `i`
+ * @throws EngineError `not-positive-semidefinite`; those of `requireSymmetric`
+ */
+export function requirePositiveSemidefinite(
+  matrix: Matrix,
+  field: string,
+  nameOf: (i: number) => string,
+): void {
+  requireSymmetric(matrix, field, nameOf);
+  const { offending } = isPositiveSemidefinite(matrix);
+  if (offending === undefined) return;
+  const [i, j] = offending;
+  const pair = i === j ? nameOf(i) : `${nameOf(i)} and ${nameOf(j)}`;
+  throw new EngineError(
+    'not-positive-semidefinite',
+    `${field}[${i}][${j}]`,
+    `${entry(matrix, i, j)} for ${pair}`,
+    'No quantities can vary together like this: some combination would have a variance below zero. Look at this entry first.',
+  );
 }

@@ -12,25 +12,19 @@ export function requireRectangular(matrix: Matrix, field = 'matrix'): void {
     throw new EngineError(
       'not-rectangular',
       field,
-      `${field} is empty; give at least one row and one column.`,
+      'an empty matrix',
+      'At least one row and one column are expected.',
     );
   matrix.forEach((row, i) => {
     if (row.length !== columns) {
       throw new EngineError(
         'not-rectangular',
         `${field}[${i}]`,
-        `Row ${i + 1} of ${field} has ${row.length} columns where ${columns} are expected.`,
+        `${row.length} columns`,
+        `All rows have one length; the first has ${columns} columns.`,
       );
     }
-    for (const [j, value] of row.entries()) {
-      if (!Number.isFinite(value)) {
-        throw new EngineError(
-          'not-finite',
-          `${field}[${i}][${j}]`,
-          `${field}[${i}][${j}] is ${value}; a finite number is expected.`,
-        );
-      }
-    }
+    row.forEach((value, j) => requireNumber(value, `${field}[${i}][${j}]`));
   });
 }
 
@@ -45,27 +39,34 @@ export function requireSquare(matrix: Matrix, field = 'matrix'): void {
     throw new EngineError(
       'not-square',
       field,
-      `${field} has ${matrix.length} rows and ${columns} columns; a square matrix is expected.`,
+      `${matrix.length} rows and ${columns} columns`,
+      'A square matrix is expected.',
     );
   }
 }
 
 /**
  * Refuses a matrix that is not square and symmetric (relative difference above 1e-9 of the larger diagonal scale).
+ * @param nameOf how the message names row `i`
  * @throws EngineError `not-square`, `not-symmetric`, `not-rectangular`, `not-finite`
  */
-export function requireSymmetric(matrix: Matrix, field = 'matrix'): void {
+export function requireSymmetric(matrix: Matrix, field = 'matrix', nameOf = numbered): void {
   requireSquare(matrix, field);
   const pair = asymmetry(matrix);
   if (pair) {
     const [i, j] = pair;
-    const found = `${entry(matrix, i, j)} and ${entry(matrix, j, i)}`;
+    const found = `${entry(matrix, i, j)} and ${entry(matrix, j, i)} for ${nameOf(i)} and ${nameOf(j)}`;
     throw new EngineError(
       'not-symmetric',
       `${field}[${i}][${j}]`,
-      `${field} is not symmetric: entries ${i + 1},${j + 1} and ${j + 1},${i + 1} are ${found}.`,
+      found,
+      'The same number on both sides of the diagonal is expected.',
     );
   }
+}
+
+function numbered(i: number): string {
+  return `row ${i + 1}`;
 }
 
 /** The first pair of mirrored entries that differ, or undefined for a symmetric matrix. */
@@ -94,7 +95,8 @@ export function requireNumbers(values: readonly number[], field: string, atLeast
     throw new EngineError(
       'too-few-values',
       field,
-      `${field} has ${values.length} values; at least ${atLeast} are needed.`,
+      `${values.length} values`,
+      `At least ${atLeast} are needed.`,
     );
   }
   values.forEach((value, i) => requireNumber(value, `${field}[${i}]`));

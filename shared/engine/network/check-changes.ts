@@ -1,6 +1,6 @@
 import { EngineError } from '../errors.ts';
+import { requireNumber } from '../quantity/domain.ts';
 import type { Change, Notice } from './changes.ts';
-import { requireNonNegative } from './check-network.ts';
 import type { CompiledNetwork } from './compiled-network.ts';
 import { requireNode } from './walk.ts';
 
@@ -15,17 +15,18 @@ export function checkChanges(net: CompiledNetwork, changes: readonly Change[]): 
     const field = `changes[${at}]`;
     if (change.kind === 'notice') return checkNotice(net, change, field);
     requireValue(net, change.value, `${field}.value`);
-    if (change.kind === 'shift') requireFinite(change.delta, `${field}.delta`);
+    if (change.kind === 'shift') requireNumber(change.delta, `${field}.delta`);
     if (change.kind === 'raise')
-      requireNonNegative(change.addedStandardUncertainty, `${field}.addedStandardUncertainty`);
+      requireNumber(change.addedStandardUncertainty, `${field}.addedStandardUncertainty`, { min: 0 });
     if (change.kind !== 'replace') return;
     requireValue(net, change.by, `${field}.by`);
-    requireFinite(change.delta, `${field}.delta`);
+    requireNumber(change.delta, `${field}.delta`);
     if (successors.has(change.value)) {
       throw new EngineError(
         'replaced-twice',
         `${field}.value`,
-        `"${change.value}" is replaced twice; name one successor.`,
+        `"${change.value}"`,
+        'It is replaced twice; name one successor.',
       );
     }
     successors.set(change.value, change.by);
@@ -36,13 +37,18 @@ export function checkChanges(net: CompiledNetwork, changes: readonly Change[]): 
 
 function checkNotice(net: CompiledNetwork, notice: Notice, field: string): void {
   if (net.nodeOf(notice.id) !== undefined) {
-    throw new EngineError('duplicate-id', `${field}.id`, `The id "${notice.id}" is already in the network.`);
+    throw new EngineError(
+      'duplicate-id',
+      `${field}.id`,
+      `"${notice.id}"`,
+      'The id is already in the network; choose another one.',
+    );
   }
-  requireNonNegative(notice.standardUncertainty, `${field}.standardUncertainty`);
+  requireNumber(notice.standardUncertainty, `${field}.standardUncertainty`, { min: 0 });
   notice.terms.forEach((term, at) => {
     requireValue(net, term.value, `${field}.terms[${at}].value`);
-    requireFinite(term.shift, `${field}.terms[${at}].shift`);
-    requireFinite(term.sensitivity, `${field}.terms[${at}].sensitivity`);
+    requireNumber(term.shift, `${field}.terms[${at}].shift`);
+    requireNumber(term.sensitivity, `${field}.terms[${at}].sensitivity`);
   });
   notice.alreadyApplied?.forEach((link, at) => {
     requireValue(net, link.child, `${field}.alreadyApplied[${at}].child`);
@@ -52,12 +58,12 @@ function checkNotice(net: CompiledNetwork, notice: Notice, field: string): void 
 
 function requireValue(net: CompiledNetwork, id: string, field: string): void {
   if (requireNode(net, id, field) < net.valueCount) return;
-  throw new EngineError('not-a-value', field, `"${id}" is a source; only values can be changed this way.`);
-}
-
-function requireFinite(value: number, field: string): void {
-  if (Number.isFinite(value)) return;
-  throw new EngineError('not-finite', field, `${field} is ${value}; a finite number is expected.`);
+  throw new EngineError(
+    'not-a-value',
+    field,
+    `"${id}"`,
+    'This is a source; only values can be changed this way.',
+  );
 }
 
 function refuseCircle(successors: Map<string, string>, value: string, field: string): void {
@@ -66,7 +72,8 @@ function refuseCircle(successors: Map<string, string>, value: string, field: str
     throw new EngineError(
       'replaced-in-a-circle',
       field,
-      `"${value}" would stand in its own place; name a later value.`,
+      `a successor of "${value}"`,
+      'It would stand in its own place in the end; name a later value.',
     );
   }
 }
@@ -77,7 +84,8 @@ function refuseWithdrawnAndReplaced(changes: readonly Change[], successors: Map<
     throw new EngineError(
       'withdrawn-and-replaced',
       `changes[${at}].value`,
-      `"${change.value}" is both withdrawn and replaced; a value with a successor is replaced.`,
+      `"${change.value}"`,
+      'It is both withdrawn and replaced; a value with a successor is replaced.',
     );
   });
 }

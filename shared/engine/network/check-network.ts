@@ -1,21 +1,6 @@
 import { EngineError } from '../errors.ts';
+import { requireDegreesOfFreedom, requireNumber } from '../quantity/domain.ts';
 import type { Network } from './network.ts';
-
-/** Refuses what is not a finite number of at least zero. @throws EngineError `out-of-range` */
-export function requireNonNegative(value: number, field: string): void {
-  if (Number.isFinite(value) && value >= 0) return;
-  throw new EngineError(
-    'out-of-range',
-    field,
-    `${field} is ${value}; a finite number of at least 0 is expected.`,
-  );
-}
-
-/** Refuses degrees of freedom that are not positive; infinity is allowed. @throws EngineError `out-of-range` */
-export function requireDegreesOfFreedom(value: number, field: string): void {
-  if (value > 0) return;
-  throw new EngineError('out-of-range', field, `${field} is ${value}; degrees of freedom must be above 0.`);
-}
 
 /**
  * Refuses a network whose names clash, whose links lead nowhere or whose numbers cannot be uncertainties.
@@ -27,12 +12,12 @@ export function checkNetwork(network: Network): void {
   const sources = new Set<string>();
   network.values.forEach((value, at) => {
     addId(value.id, `values[${at}].id`, values, sources);
-    if (value.local !== null) requireNonNegative(value.local, `values[${at}].local`);
+    if (value.local !== null) requireNumber(value.local, `values[${at}].local`, { min: 0 });
     requireDegreesOfFreedom(value.degreesOfFreedom ?? Infinity, `values[${at}].degreesOfFreedom`);
   });
   network.sources?.forEach((source, at) => {
     addId(source.id, `sources[${at}].id`, sources, values);
-    requireNonNegative(source.standardUncertainty, `sources[${at}].standardUncertainty`);
+    requireNumber(source.standardUncertainty, `sources[${at}].standardUncertainty`, { min: 0 });
     requireDegreesOfFreedom(source.degreesOfFreedom ?? Infinity, `sources[${at}].degreesOfFreedom`);
   });
   network.groups?.forEach((group, index) => {
@@ -48,14 +33,16 @@ function addId(id: string, field: string, own: Set<string>, other: Set<string>):
     throw new EngineError(
       'duplicate-id',
       field,
-      `The id "${id}" is given twice; values and sources share one list of ids.`,
+      `"${id}"`,
+      'The id is given twice; values and sources share one list of ids.',
     );
   }
   if (id.startsWith('group:')) {
     throw new EngineError(
       'reserved-id',
       field,
-      `The id "${id}" begins with "group:", which names groups; choose another id.`,
+      `"${id}"`,
+      'Ids that begin with "group:" name groups; choose another id.',
     );
   }
   own.add(id);
@@ -68,25 +55,27 @@ function checkLinks(links: Network['links'], values: Set<string>, sources: Set<s
       throw new EngineError(
         'source-as-child',
         `${field}.child`,
-        `"${link.child}" is a source; a source leans on nothing.`,
+        `"${link.child}"`,
+        'This is a source; a source leans on nothing.',
       );
     }
     if (!values.has(link.child)) throw unknownNode(link.child, `${field}.child`);
     if (!values.has(link.parent) && !sources.has(link.parent))
       throw unknownNode(link.parent, `${field}.parent`);
-    if (!Number.isFinite(link.sensitivity)) {
-      throw new EngineError(
-        'not-finite',
-        `${field}.sensitivity`,
-        `The sensitivity is ${link.sensitivity}; a finite number is expected.`,
-      );
-    }
+    requireNumber(link.sensitivity, `${field}.sensitivity`);
     if (link.classLimit)
-      requireNonNegative(link.classLimit.standardUncertainty, `${field}.classLimit.standardUncertainty`);
+      requireNumber(link.classLimit.standardUncertainty, `${field}.classLimit.standardUncertainty`, {
+        min: 0,
+      });
   });
 }
 
 /** The error for an id that no value or source of the network bears. */
 export function unknownNode(id: string, field: string): EngineError {
-  return new EngineError('unknown-node', field, `"${id}" is neither a value nor a source of this network.`);
+  return new EngineError(
+    'unknown-node',
+    field,
+    `"${id}"`,
+    'The id of a value or a source of this network is expected.',
+  );
 }

@@ -44,7 +44,7 @@ describe('compileNetwork refuses', () => {
     ['a negative local part', 'out-of-range', 'values[0].local', { values: [{ id: 'a', local: -1 }] }],
     [
       'a local part that is no number',
-      'out-of-range',
+      'not-finite',
       'values[0].local',
       { values: [{ id: 'a', local: NaN }] },
     ],
@@ -76,7 +76,7 @@ describe('compileNetwork refuses', () => {
     ['a covariance of another size', 'size-mismatch', 'groups[0].covariance', group(['a', 'b'], [[1]])],
     [
       'an impossible covariance',
-      'not-a-covariance',
+      'not-positive-semidefinite',
       'groups[0].covariance[0][1]',
       group(
         ['a', 'b'],

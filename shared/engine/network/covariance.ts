@@ -55,7 +55,8 @@ function partVariance(net: CompiledNetwork, node: number, shared: number, other:
     throw new EngineError(
       'unknown-local',
       net.idOf(node),
-      `The local uncertainty of "${net.idOf(node)}" is not known and both values depend on it; give it or infer it first.`,
+      'an unknown local uncertainty',
+      'Both values depend on it; give it or infer it first.',
     );
   }
   return shared * net.ownVariance[node]!;

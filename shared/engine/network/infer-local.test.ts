@@ -30,10 +30,10 @@ describe('inferLocal', () => {
   });
 
   it.each([
-    ['1e-3', 2, 0, 'not-a-decimal', 'expandedUncertainty'],
-    ['-1', 2, 0, 'not-a-decimal', 'expandedUncertainty'],
+    ['1e-3', 2, 0, 'not-a-number', 'expandedUncertainty'],
+    ['-1', 2, 0, 'not-a-number', 'expandedUncertainty'],
     ['0.1', 0, 0, 'out-of-range', 'coverageFactor'],
-    ['0.1', Infinity, 0, 'out-of-range', 'coverageFactor'],
+    ['0.1', Infinity, 0, 'not-finite', 'coverageFactor'],
     ['0.1', 2, -1, 'out-of-range', 'carriedVariance'],
   ])(
     'refuses U = %s, k = %d, carried variance %d',

@@ -1,6 +1,6 @@
 import { Decimal } from '#shared/decimal.ts';
 import { EngineError } from '../errors.ts';
-import { requireNonNegative } from './check-network.ts';
+import { requireNumber } from '../quantity/domain.ts';
 
 const PLAIN_DECIMAL = /^\d+(\.\d+)?$/;
 
@@ -11,7 +11,7 @@ const PLAIN_DECIMAL = /^\d+(\.\d+)?$/;
  * uncertainty lies in the interval, so l cannot be told from 0; `holds`: l is told from 0.
  * @param a.expandedUncertainty text as printed, since its last digit matters, in the network's unit
  * @param a.carriedVariance variance the parents bring, each with its uncertainty as used
- * @throws EngineError `not-a-decimal`, `out-of-range`
+ * @throws EngineError `not-a-number`, `not-finite`, `out-of-range`
  */
 export function inferLocal(a: {
   expandedUncertainty: string;
@@ -24,19 +24,14 @@ export function inferLocal(a: {
   const text = a.expandedUncertainty.trim();
   if (!PLAIN_DECIMAL.test(text)) {
     throw new EngineError(
-      'not-a-decimal',
+      'not-a-number',
       'expandedUncertainty',
-      `"${a.expandedUncertainty}" is not a plain decimal such as 0.030; write U as printed, without exponent or unit.`,
+      `"${a.expandedUncertainty}"`,
+      'Write U as printed, a plain decimal such as 0.030 without exponent or unit.',
     );
   }
-  if (!(Number.isFinite(a.coverageFactor) && a.coverageFactor > 0)) {
-    throw new EngineError(
-      'out-of-range',
-      'coverageFactor',
-      `k is ${a.coverageFactor}; a number above 0 is expected.`,
-    );
-  }
-  requireNonNegative(a.carriedVariance, 'carriedVariance');
+  requireNumber(a.coverageFactor, 'coverageFactor', { above: 0 });
+  requireNumber(a.carriedVariance, 'carriedVariance', { min: 0 });
   const decimals = text.split('.')[1]?.length ?? 0;
   const half = new Decimal(`5e${-decimals - 1}`);
   const varianceOf = (expanded: Decimal) => {

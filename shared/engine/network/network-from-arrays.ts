@@ -1,6 +1,6 @@
 import { EngineError } from '../errors.ts';
 import { checkGroups } from './check-groups.ts';
-import { requireDegreesOfFreedom, requireNonNegative } from './check-network.ts';
+import { requireDegreesOfFreedom, requireNumber, requireSize } from '../quantity/domain.ts';
 import type { CompiledGroup, CompiledNetwork } from './compiled-network.ts';
 import { topologicalOrder } from './topological-order.ts';
 
@@ -53,11 +53,11 @@ export function networkFromArrays(arrays: NetworkArrays): CompiledNetwork {
 
 function checkArrays(arrays: NetworkArrays, nodeCount: number): void {
   const { child, parent, sensitivity, classLimit, degreesOfFreedom, ids } = arrays;
-  requireLength('parent', parent.length, child.length);
-  requireLength('sensitivity', sensitivity.length, child.length);
-  requireLength('classLimit', classLimit?.length ?? child.length, child.length);
-  requireLength('degreesOfFreedom', degreesOfFreedom?.length ?? nodeCount, nodeCount);
-  requireLength('ids', ids?.length ?? nodeCount, nodeCount);
+  requireSize(parent.length, child.length, 'parent', 'links');
+  requireSize(sensitivity.length, child.length, 'sensitivity', 'links');
+  requireSize(classLimit?.length ?? child.length, child.length, 'classLimit', 'links');
+  requireSize(degreesOfFreedom?.length ?? nodeCount, nodeCount, 'degreesOfFreedom', 'nodes');
+  requireSize(ids?.length ?? nodeCount, nodeCount, 'ids', 'nodes');
   for (let at = 0; at < child.length; at += 1) {
     requireNode('child', child[at]!, arrays.local.length, at);
     requireNode('parent', parent[at]!, nodeCount, at);
@@ -65,13 +65,12 @@ function checkArrays(arrays: NetworkArrays, nodeCount: number): void {
     if (classLimit) requireFinite('classLimit', classLimit[at]!, at);
   }
   arrays.local.forEach((value, at) => requireFinite('local', value, at));
-  arrays.sourceUncertainty?.forEach((value, at) => requireNonNegative(value, `sourceUncertainty[${at}]`));
-  degreesOfFreedom?.forEach((value, at) => requireDegreesOfFreedom(value, `degreesOfFreedom[${at}]`));
-}
-
-function requireLength(field: string, length: number, expected: number): void {
-  if (length === expected) return;
-  throw new EngineError('size-mismatch', field, `${field} has ${length} entries; ${expected} are expected.`);
+  arrays.sourceUncertainty?.forEach((value, at) => {
+    if (!(value >= 0 && value < Infinity)) requireNumber(value, `sourceUncertainty[${at}]`, { min: 0 });
+  });
+  degreesOfFreedom?.forEach((value, at) => {
+    if (!(value > 0)) requireDegreesOfFreedom(value, `degreesOfFreedom[${at}]`);
+  });
 }
 
 function requireNode(field: string, node: number, count: number, at: number): void {
@@ -79,17 +78,14 @@ function requireNode(field: string, node: number, count: number, at: number): vo
   throw new EngineError(
     'unknown-node',
     `${field}[${at}]`,
-    `Link ${at} names ${field} ${node}; the nodes allowed there are 0 to ${count - 1}.`,
+    `node ${node}`,
+    `The nodes allowed there are 0 to ${count - 1}.`,
   );
 }
 
+/** Names the field only where something is wrong: a million names would cost more than the checks. */
 function requireFinite(field: string, value: number, at: number): void {
-  if (Number.isFinite(value)) return;
-  throw new EngineError(
-    'not-finite',
-    `${field}[${at}]`,
-    `${field}[${at}] is ${value}; a finite number is expected.`,
-  );
+  if (!Number.isFinite(value)) requireNumber(value, `${field}[${at}]`);
 }
 
 function naming(

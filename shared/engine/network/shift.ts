@@ -1,4 +1,4 @@
-import { EngineError } from '../errors.ts';
+import { requireNumber } from '../quantity/domain.ts';
 import { compiled } from './compile-network.ts';
 import type { CompiledNetwork } from './compiled-network.ts';
 import type { Network } from './network.ts';
@@ -18,9 +18,7 @@ export function shift(
 ): Record<string, number> {
   const net = compiled(network);
   const start = requireNode(net, from, 'from');
-  if (!Number.isFinite(delta)) {
-    throw new EngineError('not-finite', 'delta', `The shift is ${delta}; a finite number is expected.`);
-  }
+  requireNumber(delta, 'delta');
   const shifts = new Map([[start, delta]]);
   for (const node of descendantsOf(net, start)) {
     let sum = 0;

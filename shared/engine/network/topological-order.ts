@@ -71,6 +71,7 @@ function circleError(
   return new EngineError(
     'circle',
     'links',
-    `The links run in a circle: ${[...members, members[0]].join(' leans on ')}. A value can lean only on earlier ones; remove one of these links.`,
+    `a circle: ${[...members, members[0]].join(' leans on ')}`,
+    'A value can lean only on earlier ones; remove one of these links.',
   );
 }

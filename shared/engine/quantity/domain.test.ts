@@ -7,17 +7,17 @@ describe('requireNumber', () => {
     expect(requireNumber(15, 't', { min: 15, max: 27 })).toBe(15);
     expect(requireNumber(27, 't', { min: 15, max: 27 })).toBe(27);
     expect(() => requireNumber(14.99, 't', { min: 15, max: 27, unit: 'degC' })).toThrow(
-      't is to be at least 15 and at most 27 degC; received 14.99.',
+      't: received 14.99. A number of at least 15 and of at most 27 degC is expected.',
     );
     expect(() => requireNumber(27.01, 't', { min: 15, max: 27 })).toThrow('received 27.01');
   });
 
   it('keeps the ends out where the domain is open', () => {
     expect(() => requireNumber(0, 'p', { above: 0, below: 1 })).toThrow(
-      'p is to be more than 0 and less than 1',
+      'p: received 0. A number above 0 and below 1 is expected.',
     );
     expect(() => requireNumber(1, 'p', { above: 0, below: 1 })).toThrow('received 1');
-    expect(() => requireNumber(1, 'p', { below: 1 })).toThrow('p is to be less than 1; received 1.');
+    expect(() => requireNumber(1, 'p', { below: 1 })).toThrow('p: received 1. A number below 1 is expected.');
     expect(requireNumber(0.5, 'p', { above: 0, below: 1 })).toBe(0.5);
   });
 
@@ -43,7 +43,7 @@ describe('requireDecimal', () => {
 describe('requireChoice', () => {
   it('names what is allowed', () => {
     expect(() => requireChoice('x', 'kind', ['mass', 'conventional'])).toThrow(
-      'one of mass, conventional; received x',
+      'kind: received "x". One of mass, conventional is expected.',
     );
   });
 });

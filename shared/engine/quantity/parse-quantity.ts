@@ -1,5 +1,5 @@
 import { Decimal } from '#shared/decimal.ts';
-import { EngineError } from '../errors.ts';
+import { EngineError, type EngineErrorCode } from '../errors.ts';
 import { evidentDecimalMark, readNumber, type DecimalMark, type WrittenNumber } from './read-number.ts';
 import { UNIT_DEFINITIONS, UNITS, unitOfText, type Unit } from './units.ts';
 
@@ -44,8 +44,8 @@ const PLUS_MINUS = /\u00b1|\+\/-|\+\/\u2212/;
 /** Number without a sign, then its uncertainty in brackets, then whatever is left as unit. */
 const NUMBER_AND_UNIT = /^([\d.,][\d., ]*?)(?: ?\(([^()]*)\))?(?: ?([^\d.,\s()].*))?$/;
 
-function refuse(code: string, options: ParseOptions, received: string, why: string): never {
-  throw new EngineError(code, options.field, `${options.field}: received "${received}". ${why}`);
+function refuse(code: EngineErrorCode, options: ParseOptions, received: string, why: string): never {
+  throw new EngineError(code, options.field, `"${received}"`, why);
 }
 
 /** The pieces of one side of a plus-minus sign, still as text. */

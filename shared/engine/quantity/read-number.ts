@@ -1,5 +1,5 @@
 import { Decimal } from '#shared/decimal.ts';
-import { EngineError } from '../errors.ts';
+import { EngineError, type EngineErrorCode } from '../errors.ts';
 
 /** The sign between the whole number and its decimals. */
 export type DecimalMark = '.' | ',';
@@ -22,8 +22,8 @@ const FRACTION = /^(\d+|(\d{3} )+\d{1,3})$/;
 /** One to three digits, a comma, exactly three digits: a decimal comma or the thousands of another country. */
 const THOUSANDS_OR_DECIMAL = /^[1-9]\d{0,2},\d{3}$/;
 
-function refuse(code: string, field: string, received: string, why: string): never {
-  throw new EngineError(code, field, `${field}: received "${received}". ${why}`);
+function refuse(code: EngineErrorCode, field: string, received: string, why: string): never {
+  throw new EngineError(code, field, `"${received}"`, why);
 }
 
 /**

@@ -71,7 +71,8 @@ function shiftBetween(from: Unit, to: Unit): number {
     throw new EngineError(
       'unit-mismatch',
       'to',
-      `${from} is a unit of ${source.dimension} and ${to} of ${target.dimension}: there is no conversion.`,
+      to,
+      `A unit of ${source.dimension} is expected, as ${from} is one; ${to} is one of ${target.dimension}.`,
     );
   }
   return source.exponent - target.exponent;

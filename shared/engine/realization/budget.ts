@@ -1,5 +1,4 @@
 import type { Decimal } from '#shared/decimal.ts';
-import { EngineError } from '../errors.ts';
 import { requireNumber } from '../quantity/domain.ts';
 
 /** One line of an uncertainty budget; `contribution` is sensitivity times standard uncertainty, in kg, with sign. */
@@ -29,13 +28,4 @@ export function realized(mass: Decimal, entries: readonly BudgetEntry[]): Realiz
     return { ...line, contribution: line.sensitivity * line.standardUncertainty };
   });
   return { mass, standardUncertainty: Math.hypot(...budget.map(({ contribution }) => contribution)), budget };
-}
-
-/**
- * Refuses what is no whole number above 0: counts of junctions, plateau numbers.
- * @throws EngineError `not-whole`
- */
-export function requireWhole(value: number, field: string): void {
-  if (Number.isInteger(value) && value > 0) return;
-  throw new EngineError('not-whole', field, `${field} is ${value}; a whole number above 0 is expected.`);
 }

@@ -169,11 +169,11 @@ describe('crystalDensityMass', () => {
   it.each<[string, Partial<CrystalSphere>, string, string]>([
     ['no volume', { volume: 0 }, 'out-of-range', 'volume'],
     ['no lattice', { latticeParameter: Number.NaN }, 'not-finite', 'latticeParameter'],
-    ['no isotopes', { isotopes: [] }, 'no-isotopes', 'isotopes'],
+    ['no isotopes', { isotopes: [] }, 'too-few-values', 'isotopes'],
     [
       'fractions that miss 1',
       { isotopes: [{ fraction: 0.9, relativeAtomicMass: 28 }] },
-      'fractions',
+      'fractions-not-one',
       'isotopes',
     ],
     [

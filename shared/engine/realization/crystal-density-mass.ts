@@ -1,7 +1,7 @@
 import { Decimal } from '#shared/decimal.ts';
 import { EngineError } from '../errors.ts';
 import { item } from '../linear/entries.ts';
-import { requireNumber } from '../quantity/domain.ts';
+import { requireNumber, requireSize } from '../quantity/domain.ts';
 import { type BudgetEntry, realized, type RealizedMass } from './budget.ts';
 import { PLANCK_CONSTANT, SPEED_OF_LIGHT } from './constants.ts';
 
@@ -51,7 +51,7 @@ const ATOMS_PER_CELL = 8;
  * fraction counts with the difference of the two atomic masses only.
  *
  * Source: mise en pratique for the definition of the kilogram, section 2.2 (from memory).
- * @throws EngineError `not-finite`, `out-of-range`, `no-isotopes`, `fractions`, `size-mismatch`
+ * @throws EngineError `not-finite`, `out-of-range`, `too-few-values`, `fractions-not-one`, `size-mismatch`
  */
 export function crystalDensityMass(a: CrystalSphere, u: CrystalUncertainties): RealizedMass {
   checkSphere(a, u);
@@ -101,8 +101,9 @@ function checkSphere(a: CrystalSphere, u: CrystalUncertainties): void {
   for (const field of ['rydberg', 'fineStructure', 'electronRelativeMass'] as const) {
     requireNumber(a.constants[field], `constants.${field}`, { above: 0 });
   }
-  if (a.isotopes.length === 0)
-    throw new EngineError('no-isotopes', 'isotopes', 'No isotope is given; give at least one.');
+  if (a.isotopes.length === 0) {
+    throw new EngineError('too-few-values', 'isotopes', 'no isotope', 'At least one is needed.');
+  }
   a.isotopes.forEach((isotope, i) => {
     requireNumber(isotope.fraction, `isotopes[${i}].fraction`, { min: 0, max: 1 });
     requireNumber(isotope.relativeAtomicMass, `isotopes[${i}].relativeAtomicMass`, { above: 0 });
@@ -111,18 +112,13 @@ function checkSphere(a: CrystalSphere, u: CrystalUncertainties): void {
   // Fractions are printed to ten digits; a mass good to 1e-9 needs their sum to hold that far.
   if (sum.minus(1).abs().gt(1e-9)) {
     throw new EngineError(
-      'fractions',
+      'fractions-not-one',
       'isotopes',
-      `The fractions of the isotopes sum to ${sum.toFixed()}; 1 is expected.`,
+      `fractions that sum to ${sum.toFixed()}`,
+      'A sum of 1 is expected.',
     );
   }
-  if (u.isotopes.length !== a.isotopes.length) {
-    throw new EngineError(
-      'size-mismatch',
-      'u.isotopes',
-      `${u.isotopes.length} uncertainties for ${a.isotopes.length} isotopes.`,
-    );
-  }
+  requireSize(u.isotopes.length, a.isotopes.length, 'u.isotopes', 'isotopes');
 }
 
 /** Quantities the core is a product of powers of. */

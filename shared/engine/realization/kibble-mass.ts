@@ -1,6 +1,6 @@
 import { Decimal } from '#shared/decimal.ts';
-import { requireNumber } from '../quantity/domain.ts';
-import { type BudgetEntry, realized, type RealizedMass, requireWhole } from './budget.ts';
+import { requireNumber, requireWhole } from '../quantity/domain.ts';
+import { type BudgetEntry, realized, type RealizedMass } from './budget.ts';
 import { PLANCK_CONSTANT } from './constants.ts';
 import { correctionLines, type KibbleCorrections } from './kibble-corrections.ts';
 
@@ -80,10 +80,10 @@ export function kibbleMass(a: KibbleRun, u: KibbleUncertainties): RealizedMass {
 
 function checkRun(a: KibbleRun): void {
   for (const phase of ['weighing', 'moving'] as const) {
-    requireWhole(a[phase].junctions, `${phase}.junctions`);
+    requireWhole(a[phase].junctions, `${phase}.junctions`, { min: 1 });
     requireNumber(a[phase].frequency, `${phase}.frequency`, { above: 0, unit: 'Hz' });
   }
-  requireWhole(a.resistance.plateau, 'resistance.plateau');
+  requireWhole(a.resistance.plateau, 'resistance.plateau', { min: 1 });
   requireNumber(a.resistance.ratio, 'resistance.ratio', { above: 0 });
   requireNumber(a.velocity, 'velocity', { above: 0, unit: 'm/s' });
   requireNumber(a.gravity, 'gravity', { above: 0, unit: 'm/s2' });

@@ -18,7 +18,7 @@ export function dayNumber(date: string, field: string): number {
     : Number.NaN;
   // Date.UTC takes 30 February as 1 or 2 March; a date that does not come back unchanged does not exist.
   if (!Number.isFinite(milliseconds) || new Date(milliseconds).toISOString().slice(0, 10) !== date) {
-    throw new EngineError('not-a-date', field, `${field} is ${date}; a date such as 2026-03-01 is expected.`);
+    throw new EngineError('not-a-date', field, `"${date}"`, 'A date such as 2026-03-01 is expected.');
   }
   return milliseconds / DAY;
 }

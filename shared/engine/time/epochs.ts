@@ -58,7 +58,8 @@ function checkInterventions(interventions: readonly Intervention[]): Bounds[] {
       throw new EngineError(
         'backwards',
         `interventions[${i}]`,
-        `The last good day ${intervention.lastGood} is after the first bad day ${intervention.firstBad}.`,
+        `${intervention.lastGood} to ${intervention.firstBad}`,
+        'The last good day is not to be after the first bad one.',
       );
     }
     return { lastGood, firstBad };
@@ -69,7 +70,8 @@ function checkInterventions(interventions: readonly Intervention[]): Bounds[] {
       throw new EngineError(
         'overlapping-interventions',
         'interventions',
-        'Two interventions overlap in time; join them to one.',
+        'two that overlap in time',
+        'Join them to one.',
       );
     }
   });

@@ -36,7 +36,7 @@ describe('GUM-H3: straight line with covariance', () => {
 describe('fitLinear', () => {
   it('refuses bases, covariances and abscissae that do not fit', () => {
     const one = [[1]];
-    expect(() => fitLinear([[1], [1]], [1], one)).toThrow(expect.objectContaining({ code: 'size-mismatch', field: 'covariance' })); // prettier-ignore
+    expect(() => fitLinear([[1], [1]], [1], one)).toThrow(expect.objectContaining({ code: 'size-mismatch', field: 'basis' })); // prettier-ignore
     expect(() => fitLinear([[1], [1]], [1, 2], one)).toThrow(
       expect.objectContaining({ code: 'size-mismatch' }),
     );

@@ -9,6 +9,7 @@ import {
   transpose,
 } from '../linear/matrix.ts';
 import { requireNumbers } from '../linear/requirements.ts';
+import { requireSize } from '../quantity/domain.ts';
 
 /** Parameters with their covariance, and how well they agree with the observations. */
 export type LinearFit = {
@@ -29,13 +30,8 @@ export type LinearFit = {
 export function fitLinear(basis: Matrix, values: readonly number[], covariance: Matrix): LinearFit {
   requireNumbers(values, 'values');
   cholesky(covariance, 'covariance');
-  if (covariance.length !== values.length || basis.length !== values.length) {
-    throw new EngineError(
-      'size-mismatch',
-      'covariance',
-      `The covariance has ${covariance.length} rows for ${values.length} values.`,
-    );
-  }
+  requireSize(covariance.length, values.length, 'covariance', 'values');
+  requireSize(basis.length, values.length, 'basis', 'values');
   const weights = inverseSymmetric(covariance, 'covariance');
   const weighted = multiply(transpose(basis), weights);
   const normal = multiply(weighted, basis);
@@ -64,7 +60,12 @@ export function fitLinear(basis: Matrix, values: readonly number[], covariance: 
 export function fitLine(x: readonly number[], y: readonly number[], covariance: Matrix): LinearFit {
   requireNumbers(x, 'x', 2);
   if (x.every((value) => value === x[0])) {
-    throw new EngineError('one-abscissa', 'x', 'All points lie at the same place; a line needs two places.');
+    throw new EngineError(
+      'one-abscissa',
+      'x',
+      `${x[0]} for every point`,
+      'A line needs points at two places.',
+    );
   }
   return fitLinear(
     x.map((value) => [1, value]),

@@ -14,7 +14,8 @@ export function checkHistory(history: readonly HistoryEntry[], atLeast: number):
     throw new EngineError(
       'too-few-values',
       'history',
-      `The history has ${history.length} calibrations; at least ${atLeast} are needed.`,
+      `${history.length} calibrations`,
+      `At least ${atLeast} are needed.`,
     );
   }
   return history.map((entry, i) => {

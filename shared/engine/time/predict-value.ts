@@ -1,5 +1,6 @@
 import { EngineError } from '../errors.ts';
 import { entry, item } from '../linear/entries.ts';
+import { quadraticForm } from '../linear/matrix.ts';
 import { requireNumber } from '../quantity/domain.ts';
 import { coverageFactor } from '../uncertainty/coverage-factor.ts';
 import { dayNumber, yearsBetween } from './calendar.ts';
@@ -55,35 +56,35 @@ export function predictValue(
   const days = checkHistory(history, 2);
   const when = dayNumber(at, 'at');
   if (days.every((day) => day === days[0])) {
-    throw new EngineError(
-      'one-date',
-      'history',
-      'All calibrations bear the same date; a drift needs two dates.',
-    );
+    throw new EngineError('one-date', 'history', 'calibrations of one date', 'A drift needs two dates.');
   }
   requireOneEpoch(history, at, options.interventions ?? []);
-  // Years from the date asked for: the intercept is the prediction, its covariance comes along without rounding.
+  // The line is fitted about the middle of the history, where intercept and slope hardly depend on each other, and
+  // read off at the date asked for: fitted about a far date they would lose digits to each other.
+  const middle = days.reduce((sum, day) => sum + day, 0) / days.length;
   const fit = fitLine(
-    days.map((day) => yearsBetween(when, day)),
+    days.map((day) => yearsBetween(middle, day)),
     history.map(({ value }) => value),
     options.covariance ?? diagonalCovariance(history.map(({ standardUncertainty }) => standardUncertainty)),
   );
-  return summarize(fit, options);
+  return summarize(fit, yearsBetween(middle, when), options);
 }
 
-function summarize(fit: LinearFit, options: PredictionOptions): Prediction {
+/** @param years from the origin of the fit to the date asked for */
+function summarize(fit: LinearFit, years: number, options: PredictionOptions): Prediction {
   const { chiSquared, degreesOfFreedom } = fit;
   const observed = options.scatter === 'observed';
   if (observed && degreesOfFreedom === 0) {
     throw new EngineError(
       'no-scatter',
       'options.scatter',
+      'observed, with two calibrations',
       'Two calibrations show no scatter about their line; use stated.',
     );
   }
   const birgeRatio = degreesOfFreedom > 0 ? Math.sqrt(chiSquared / degreesOfFreedom) : 1;
   const widening = observed ? Math.max(1, birgeRatio) : 1;
-  const standardUncertainty = widening * Math.sqrt(entry(fit.covariance, 0, 0));
+  const standardUncertainty = widening * Math.sqrt(quadraticForm(fit.covariance, [1, years]));
   const next = requireNumber(options.nextStandardUncertainty ?? 0, 'options.nextStandardUncertainty', {
     min: 0,
   });
@@ -93,11 +94,12 @@ function summarize(fit: LinearFit, options: PredictionOptions): Prediction {
   });
   const k = coverageFactor(probability, observed ? degreesOfFreedom : Infinity);
   const halfWidth = k * Math.hypot(standardUncertainty, next);
-  const value = item(fit.parameters, 0);
+  const slope = item(fit.parameters, 1);
+  const value = item(fit.parameters, 0) + slope * years;
   return {
     value,
     standardUncertainty,
-    slope: item(fit.parameters, 1),
+    slope,
     slopeUncertainty: widening * Math.sqrt(entry(fit.covariance, 1, 1)),
     degreesOfFreedom,
     chiSquared,
@@ -113,6 +115,7 @@ function requireOneEpoch(history: HistoryEntry[], at: string, interventions: Int
   throw new EngineError(
     'crosses-epoch',
     'history',
-    `The history or the date asked for crosses the intervention of ${crossed.firstBad}; use the calibrations of one epoch.`,
+    `dates on both sides of the intervention of ${crossed.firstBad}`,
+    'Use the calibrations of one epoch, and a date in it.',
   );
 }

@@ -62,7 +62,8 @@ export function recalibrationInterval(
     throw new EngineError(
       'backwards',
       'minimumMonths',
-      `The shortest interval ${minimum} is longer than the longest ${maximum}.`,
+      minimum,
+      `At most the longest interval of ${maximum} months is expected.`,
     );
   }
   requireChoice(a.method, 'method', ['staircase', 'control-chart', 'in-use-time']);

@@ -1,6 +1,6 @@
 import { item } from '../linear/entries.ts';
 import { normalUpperTail } from '../uncertainty/normal-distribution.ts';
-import { requireLevel } from '../weighing/f-distribution.ts';
+import { requireLevel } from '../quantity/domain.ts';
 import { yearsBetween } from './calendar.ts';
 import { diagonalCovariance, fitLinear } from './fit-line.ts';
 import { checkHistory, type HistoryEntry } from './history.ts';

@@ -158,13 +158,13 @@ describe('combine', () => {
       [0, 0.99, 1, -0.5],
       [0, 0.99, -0.5, 1],
     ];
-    expect(() => combine(four, matrix)).toThrow(/correlation of "[bcd]" and "[bcd]"/);
+    expect(() => combine(four, matrix)).toThrow(/for "[bcd]" and "[bcd]"/);
   });
 
   it('refuses a matrix of another size, one that is not symmetric, and coefficients beyond 1', () => {
     const two = [line('a', 1), line('b', 1)];
-    expect(() => combine(two, [[1]])).toThrow(expect.objectContaining({ code: 'wrong-size' }));
-    expect(() => combine(two, [[1, 0], [0]])).toThrow(expect.objectContaining({ code: 'wrong-size' }));
+    expect(() => combine(two, [[1]])).toThrow(expect.objectContaining({ code: 'size-mismatch' }));
+    expect(() => combine(two, [[1, 0], [0]])).toThrow(expect.objectContaining({ code: 'size-mismatch' }));
     expect(() =>
       combine(two, [
         [1, 0.5],
@@ -188,7 +188,7 @@ describe('combine', () => {
   });
 
   it('refuses an empty budget and lines that are none', () => {
-    expect(() => combine([])).toThrow(expect.objectContaining({ code: 'empty' }));
+    expect(() => combine([])).toThrow(expect.objectContaining({ code: 'too-few-values' }));
     expect(() => combine([line('a', -1)])).toThrow(
       expect.objectContaining({ code: 'out-of-range', field: 'components[0].standardUncertainty' }),
     );

@@ -1,7 +1,6 @@
-import { EngineError } from '../errors.ts';
-import { entry, item } from '../linear/entries.ts';
-import { isPositiveSemidefinite } from '../linear/matrix.ts';
-import { requireNumber } from '../quantity/domain.ts';
+import { item } from '../linear/entries.ts';
+import { requirePositiveSemidefinite } from '../linear/matrix.ts';
+import { requireNumber, requireSize } from '../quantity/domain.ts';
 import { effectiveDegreesOfFreedom } from './effective-degrees-of-freedom.ts';
 
 /** One line of an uncertainty budget. */
@@ -26,9 +25,6 @@ export interface CombinedUncertainty {
   degreesOfFreedom: number | null;
 }
 
-/** Rounding room of a printed or computed coefficient. */
-const TOLERANCE = 1e-9;
-
 /**
  * Combines the components of a budget to the standard uncertainty of its result.
  *
@@ -36,7 +32,7 @@ const TOLERANCE = 1e-9;
  *
  * @param components budget lines, at least one
  * @param correlation correlation coefficients in the order of the components, 1 on the diagonal
- * @throws EngineError `empty`, `not-finite`, `out-of-range`, `conflicting-degrees-of-freedom`, `wrong-size`,
+ * @throws EngineError `too-few-values`, `not-finite`, `out-of-range`, `conflicting-degrees-of-freedom`, `size-mismatch`,
  *   `not-symmetric`, or `not-positive-semidefinite` naming the two components whose correlation is impossible
  */
 export function combine(
@@ -73,43 +69,17 @@ function correlated(contributions: number[], correlation: readonly (readonly num
   return Math.sqrt(Math.max(0, variance)) * scale;
 }
 
-function refusePair(
-  code: string,
-  components: readonly BudgetComponent[],
-  i: number,
-  j: number,
-  why: string,
-): never {
-  const names = `"${item(components, i).name}" and "${item(components, j).name}"`;
-  throw new EngineError(code, `correlation[${i}][${j}]`, `correlation of ${names}: ${why}`);
-}
-
 function checkCorrelation(
   components: readonly BudgetComponent[],
   correlation: readonly (readonly number[])[],
 ): void {
   const size = components.length;
-  if (correlation.length !== size || correlation.some((row) => row.length !== size)) {
-    const received = `${correlation.length} rows of ${correlation.map((row) => row.length).join(', ')}`;
-    throw new EngineError(
-      'wrong-size',
-      'correlation',
-      `correlation is to have ${size} rows of ${size}; received ${received}.`,
-    );
-  }
+  requireSize(correlation.length, size, 'correlation', 'components');
   correlation.forEach((row, i) => {
+    requireSize(row.length, size, `correlation[${i}]`, 'components');
     row.forEach((value, j) => {
-      const mirrored = entry(correlation, j, i);
       requireNumber(value, `correlation[${i}][${j}]`, i === j ? { min: 1, max: 1 } : { min: -1, max: 1 });
-      if (Math.abs(value - mirrored) <= TOLERANCE) return;
-      refusePair('not-symmetric', components, i, j, `${value} one way and ${mirrored} the other.`);
     });
   });
-  const { offending } = isPositiveSemidefinite(correlation);
-  if (offending === undefined) return;
-  const [i, j] = offending;
-  const why =
-    `${entry(correlation, i, j)} cannot stand beside the other coefficients: some combination of the components ` +
-    'would have a variance below zero. Look at this pair first.';
-  refusePair('not-positive-semidefinite', components, i, j, why);
+  requirePositiveSemidefinite(correlation, 'correlation', (i) => `"${item(components, i).name}"`);
 }

@@ -1,19 +1,10 @@
 import { EngineError } from '../errors.ts';
-import { requireNumber } from '../quantity/domain.ts';
+import { requireDegreesOfFreedom, requireNumber } from '../quantity/domain.ts';
 import { normalQuantile } from './normal-distribution.ts';
 import { studentAreas } from './student-t.ts';
 
 /** From here on three terms of the expansion in 1/nu are exact to the last digit of a double. */
 const LARGE_DEGREES_OF_FREEDOM = 1e5;
-
-/**
- * Checks a number of degrees of freedom: any real number above zero, or Infinity where the uncertainty is known exactly.
- *
- * @throws EngineError `not-finite` or `out-of-range`
- */
-export function requireDegreesOfFreedom(value: number, field: string): number {
-  return value === Infinity ? value : requireNumber(value, field, { above: 0 });
-}
 
 /** Student's quantile from the normal one (Abramowitz and Stegun, 26.7.5, from memory). */
 function nearlyNormal(z: number, degreesOfFreedom: number): number {
@@ -74,6 +65,7 @@ function refuseFactor(probability: number, degreesOfFreedom: number): never {
   throw new EngineError(
     'out-of-range',
     'degreesOfFreedom',
-    `With degreesOfFreedom ${degreesOfFreedom} the factor for probability ${probability} is beyond 1e150.`,
+    degreesOfFreedom,
+    `More is expected: the factor for probability ${probability} would be beyond 1e150.`,
   );
 }

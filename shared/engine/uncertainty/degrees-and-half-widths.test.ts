@@ -161,7 +161,7 @@ describe('effectiveDegreesOfFreedom', () => {
         field: 'components[1].degreesOfFreedom',
       }),
     );
-    expect(() => of([])).toThrow(expect.objectContaining({ code: 'empty' }));
+    expect(() => of([])).toThrow(expect.objectContaining({ code: 'too-few-values' }));
     expect(() => of([[NaN, 5]])).toThrow(expect.objectContaining({ field: 'components[0].contribution' }));
     expect(() => of([[1, 0]])).toThrow(expect.objectContaining({ code: 'out-of-range' }));
   });

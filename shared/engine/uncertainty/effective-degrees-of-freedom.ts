@@ -1,7 +1,6 @@
 import { EngineError } from '../errors.ts';
 import { item } from '../linear/entries.ts';
-import { requireNumber } from '../quantity/domain.ts';
-import { requireDegreesOfFreedom } from './coverage-factor.ts';
+import { requireDegreesOfFreedom, requireNumber } from '../quantity/domain.ts';
 
 /** One contribution to a combined uncertainty, for its degrees of freedom. */
 export interface EffectiveComponent {
@@ -29,8 +28,8 @@ function addTo(shares: Map<string, EstimateShare>, key: string, one: EstimateSha
     throw new EngineError(
       'conflicting-degrees-of-freedom',
       field,
-      `${field}: the estimate "${key}" has ${known.degreesOfFreedom} degrees of freedom elsewhere and ` +
-        `${one.degreesOfFreedom} here. One estimate has one number.`,
+      one.degreesOfFreedom,
+      `The estimate "${key}" has ${known.degreesOfFreedom} elsewhere, and one estimate has one number.`,
     );
   }
   known.square += one.square;
@@ -43,10 +42,11 @@ function addTo(shares: Map<string, EstimateShare>, key: string, one: EstimateSha
  * Source: JCGM 100:2008, annex G.4.1, equation (G.2b), with the squares that rest on one estimate added first.
  *
  * @returns Infinity where no contribution has a finite number of degrees of freedom
- * @throws EngineError `empty`, `not-finite`, `out-of-range` or `conflicting-degrees-of-freedom`, naming the component
+ * @throws EngineError `too-few-values`, `not-finite`, `out-of-range` or `conflicting-degrees-of-freedom`, naming the component
  */
 export function effectiveDegreesOfFreedom(components: readonly EffectiveComponent[]): number {
-  if (components.length === 0) throw new EngineError('empty', 'components', 'There is no component.');
+  if (components.length === 0)
+    throw new EngineError('too-few-values', 'components', 'no component', 'At least one is needed.');
   const contributions = components.map((one, i) =>
     requireNumber(one.contribution, `components[${i}].contribution`),
   );

@@ -1,6 +1,4 @@
-import { EngineError } from '../errors.ts';
-import { requireNumber } from '../quantity/domain.ts';
-import { requireDegreesOfFreedom } from './coverage-factor.ts';
+import { requireChoice, requireDegreesOfFreedom, requireNumber } from '../quantity/domain.ts';
 import type { RandomSource } from './random.ts';
 
 /** A distribution assigned to an input quantity of a Monte Carlo evaluation. */
@@ -8,6 +6,9 @@ export type Distribution =
   | { distribution: 'normal'; mean: number; standardUncertainty: number }
   | { distribution: 'rectangular' | 'triangular' | 'u-shaped'; lower: number; upper: number }
   | { distribution: 'student-t'; mean: number; scale: number; degreesOfFreedom: number };
+
+/** Distributions an input quantity may have. */
+const INPUT_DISTRIBUTIONS = ['normal', 'rectangular', 'triangular', 'u-shaped', 'student-t'] as const;
 
 /** Draws one value. */
 export type Sampler = (random: RandomSource) => number;
@@ -39,6 +40,7 @@ function studentSampler(mean: number, scale: number, degreesOfFreedom: number): 
  * @throws EngineError `unknown-choice`, `not-finite` or `out-of-range`
  */
 export function samplerOf(input: Distribution, field: string): Sampler {
+  requireChoice(input.distribution, `${field}.distribution`, INPUT_DISTRIBUTIONS);
   switch (input.distribution) {
     case 'normal': {
       const mean = requireNumber(input.mean, `${field}.mean`);
@@ -62,15 +64,6 @@ export function samplerOf(input: Distribution, field: string): Sampler {
       const scale = requireNumber(input.scale, `${field}.scale`, { min: 0 });
       const degrees = requireDegreesOfFreedom(input.degreesOfFreedom, `${field}.degreesOfFreedom`);
       return studentSampler(mean, scale, degrees);
-    }
-    default: {
-      const received = String((input as { distribution?: unknown }).distribution);
-      const known = 'normal, rectangular, triangular, u-shaped, student-t';
-      throw new EngineError(
-        'unknown-choice',
-        `${field}.distribution`,
-        `${field}.distribution is to be one of ${known}; received ${received}.`,
-      );
     }
   }
 }

@@ -208,7 +208,9 @@ describe('monteCarlo: the procedure', () => {
   });
 
   it('refuses no input at all', () => {
-    expect(() => monteCarlo(() => 1, [], { seed: 1 })).toThrow(expect.objectContaining({ code: 'empty' }));
+    expect(() => monteCarlo(() => 1, [], { seed: 1 })).toThrow(
+      expect.objectContaining({ code: 'too-few-values' }),
+    );
   });
 });
 

@@ -100,7 +100,8 @@ function runBlock(values: Float64Array, draw: () => number[], model: (x: number[
       throw new EngineError(
         'model-not-finite',
         'model',
-        `The model gave ${value} for some values of its inputs. Restrict the inputs to where the model holds.`,
+        `${value} from some values of its inputs`,
+        'Restrict the inputs to where the model holds.',
       );
     }
     values[i] = value;
@@ -116,14 +117,15 @@ function runBlock(values: Float64Array, draw: () => number[], model: (x: number[
  * @param model the measurement model; it is given one value per input and must not keep the array
  * @param inputs distribution of each input, at least one
  * @param options seed, digits, most trials, probability, interval
- * @throws EngineError `empty`, `unknown-choice`, `not-finite`, `out-of-range`, or `model-not-finite`
+ * @throws EngineError `too-few-values`, `unknown-choice`, `not-finite`, `out-of-range`, or `model-not-finite`
  */
 export function monteCarlo(
   model: (x: number[]) => number,
   inputs: readonly Distribution[],
   options: MonteCarloOptions,
 ): MonteCarloResult {
-  if (inputs.length === 0) throw new EngineError('empty', 'inputs', 'There is no input quantity.');
+  if (inputs.length === 0)
+    throw new EngineError('too-few-values', 'inputs', 'no input quantity', 'At least one is needed.');
   const samplers = inputs.map((input, i) => samplerOf(input, `inputs[${i}]`));
   const random = randomSource(options.seed);
   const settings = settle(options);

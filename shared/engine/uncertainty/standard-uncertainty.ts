@@ -40,7 +40,8 @@ export function standardUncertainty(a: {
     throw new EngineError(
       'needless-coverage-factor',
       'coverageFactor',
-      `A ${distribution} half-width has no coverage factor; received ${a.coverageFactor}. Leave it out, or choose normal.`,
+      a.coverageFactor,
+      `A ${distribution} half-width has no coverage factor. Leave it out, or choose normal.`,
     );
   }
   return halfWidth / DIVISORS[distribution];
@@ -51,6 +52,7 @@ function requireFactor(coverageFactor: number | undefined): number {
     throw new EngineError(
       'missing-coverage-factor',
       'coverageFactor',
+      'nothing',
       'A normal half-width is an expanded uncertainty: give its coverage factor, 2 for most certificates.',
     );
   }

@@ -1,3 +1,5 @@
+import { betaFraction } from './beta-fraction.ts';
+
 /**
  * Logarithm of Gamma(x + 1/2) / Gamma(x), without the cancellation of two large logarithms: the asymptotic series
  * from 20 on, and the recurrence of the Gamma function below.
@@ -15,28 +17,6 @@ function logHalfStepRatio(x: number): number {
   const square = inverse * inverse;
   const bracket = -1 / 8 + square * (1 / 192 + square * (-1 / 640 + square * (17 / 14336)));
   return recurrence + 0.5 * Math.log(shifted) + inverse * bracket;
-}
-
-/**
- * The continued fraction of the incomplete beta function by Lentz's method. For x below (a + 1)/(a + b + 2), as here,
- * every denominator is positive.
- */
-function betaFraction(x: number, a: number, b: number): number {
-  let c = 1;
-  let d = 1 / (1 - ((a + b) * x) / (a + 1));
-  let product = d;
-  for (let m = 1; m <= 20_000; m += 1) {
-    const even = (m * (b - m) * x) / ((a + 2 * m - 1) * (a + 2 * m));
-    d = 1 / (1 + even * d);
-    c = 1 + even / c;
-    product *= d * c;
-    const odd = (-(a + m) * (a + b + m) * x) / ((a + 2 * m) * (a + 2 * m + 1));
-    d = 1 / (1 + odd * d);
-    c = 1 + odd / c;
-    product *= d * c;
-    if (Math.abs(d * c - 1) < 1e-15) break;
-  }
-  return product;
 }
 
 /** What is known of Student's distribution at one point, of the absolute value. */
@@ -71,4 +51,12 @@ export function studentAreas(t: number, degreesOfFreedom: number): StudentAreas 
   }
   const outside = (front / half) * betaFraction(Math.exp(-logRoot), half, 0.5);
   return { inside: 1 - outside, outside, density };
+}
+
+/**
+ * Two-sided probability of a Student t at least as large in size as `t`, for any real number of degrees of freedom
+ * above 0; keeps its digits in the far tail.
+ */
+export function studentTwoSidedTail(t: number, degreesOfFreedom: number): number {
+  return t === 0 ? 1 : studentAreas(Math.abs(t), degreesOfFreedom).outside;
 }

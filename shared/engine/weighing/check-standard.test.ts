@@ -29,9 +29,9 @@ describe('checkStandardTest', () => {
       () =>
         checkStandardTest({ value, history: { ...history, ...change } });
     expect(test({ count: 1 })).toThrow(
-      expect.objectContaining({ code: 'too-few-values', field: 'history.count' }),
+      expect.objectContaining({ code: 'out-of-range', field: 'history.count' }),
     );
-    expect(test({ count: 2.5 })).toThrow(expect.objectContaining({ code: 'too-few-values' }));
+    expect(test({ count: 2.5 })).toThrow(expect.objectContaining({ code: 'not-whole' }));
     expect(test({ standardDeviation: 0 })).toThrow(
       expect.objectContaining({ code: 'out-of-range', field: 'history.standardDeviation' }),
     );

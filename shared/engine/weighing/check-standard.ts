@@ -1,7 +1,7 @@
-import { EngineError } from '../errors.ts';
-import { requireNumber } from '../quantity/domain.ts';
+import { requireLevel, requireNumber, requireWhole } from '../quantity/domain.ts';
 import { coverageFactor } from '../uncertainty/coverage-factor.ts';
-import { fCriticalValue, fUpperTail, requireLevel, studentTwoSidedTail } from './f-distribution.ts';
+import { studentTwoSidedTail } from '../uncertainty/student-t.ts';
+import { fCriticalValue, fUpperTail } from './f-distribution.ts';
 import type { PrecisionEstimate } from './pooled-standard-deviation.ts';
 
 /** What a test against history says; a question to the person, never a deletion. */
@@ -21,7 +21,7 @@ export type HistoryTest = {
  * history is itself uncertain, hence the factor 1 + 1/count under the root; with a long one it is the test of
  * NIST/SEMATECH e-Handbook of Statistical Methods, 2.3.5.2 (from memory). Any unit, the same throughout.
  * @param a.level probability of a false alarm, 0.05 unless given
- * @throws EngineError `too-few-values` under two values; `out-of-range`, `not-finite`
+ * @throws EngineError `not-whole`, `out-of-range` (a history of one value has no standard deviation), `not-finite`
  */
 export function checkStandardTest(a: {
   value: number;
@@ -31,14 +31,7 @@ export function checkStandardTest(a: {
   requireNumber(a.value, 'value');
   requireNumber(a.history.mean, 'history.mean');
   requireNumber(a.history.standardDeviation, 'history.standardDeviation', { above: 0 });
-  const { count } = a.history;
-  if (!Number.isInteger(count) || count < 2) {
-    throw new EngineError(
-      'too-few-values',
-      'history.count',
-      `A history of ${count} values has no standard deviation; at least 2 are needed.`,
-    );
-  }
+  const count = requireWhole(a.history.count, 'history.count', { min: 2 });
   const scale = a.history.standardDeviation * Math.sqrt(1 + 1 / count);
   const statistic = (a.value - a.history.mean) / scale;
   const criticalValue = coverageFactor(1 - requireLevel(a.level ?? 0.05), count - 1);

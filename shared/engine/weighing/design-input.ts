@@ -1,8 +1,8 @@
 import { EngineError } from '../errors.ts';
-import { build, entry, type Matrix } from '../linear/entries.ts';
-import { cholesky, isPositiveSemidefinite } from '../linear/matrix.ts';
+import { build, type Matrix } from '../linear/entries.ts';
+import { cholesky, requirePositiveSemidefinite } from '../linear/matrix.ts';
 import { requireNumbers, requireRectangular } from '../linear/requirements.ts';
-import { requireNumber } from '../quantity/domain.ts';
+import { requireNumber, requireSize } from '../quantity/domain.ts';
 import { requireDetermined } from './design-rank.ts';
 
 /** What is known beforehand: a combination of the weights and its value. */
@@ -45,9 +45,9 @@ export type CheckedDesign = {
 export function checkDesign(a: WeighingDesignInput): CheckedDesign {
   requireRectangular(a.design, 'design');
   requireNumbers(a.differences, 'differences');
-  const columns = a.design[0]?.length;
-  requireSize(a.differences.length, a.design.length, 'differences');
-  requireSize(a.names?.length ?? columns, columns, 'names');
+  const columns = a.design[0]?.length ?? 0;
+  requireSize(a.differences.length, a.design.length, 'differences', 'weighings');
+  requireSize(a.names?.length ?? columns, columns, 'names', 'weights');
   for (const field of ['betweenStandardDeviation', 'withinStandardDeviation'] as const) {
     requireNumber(a[field] ?? 0, field, { min: 0 });
   }
@@ -65,11 +65,11 @@ export function checkDesign(a: WeighingDesignInput): CheckedDesign {
   };
 }
 
-function checkRestraints(restraints: Restraint[], field: string, columns: number | undefined): void {
+function checkRestraints(restraints: Restraint[], field: string, columns: number): void {
   restraints.forEach((restraint, i) => {
     const path = field === 'restraint' ? field : `${field}[${i}]`;
     requireNumbers(restraint.weights, `${path}.weights`);
-    requireSize(restraint.weights.length, columns, `${path}.weights`);
+    requireSize(restraint.weights.length, columns, `${path}.weights`, 'weights');
     requireNumber(restraint.value, `${path}.value`);
     requireNumber(restraint.standardUncertainty ?? 0, `${path}.standardUncertainty`, { min: 0 });
   });
@@ -81,20 +81,12 @@ function checkObservationCovariance(a: WeighingDesignInput): void {
     throw new EngineError(
       'two-variances',
       'withinStandardDeviation',
-      'Both observationCovariance and withinStandardDeviation are given; give one of them.',
+      a.withinStandardDeviation,
+      'There is an observationCovariance as well; give one of the two.',
     );
   }
   cholesky(a.observationCovariance, 'observationCovariance');
-  requireSize(a.observationCovariance.length, a.design.length, 'observationCovariance');
-}
-
-function requireSize(found: number | undefined, expected: number | undefined, field: string): void {
-  if (found === expected) return;
-  throw new EngineError(
-    'size-mismatch',
-    field,
-    `${field} has ${found} entries where the design asks for ${expected}.`,
-  );
+  requireSize(a.observationCovariance.length, a.design.length, 'observationCovariance', 'weighings');
 }
 
 /** The restraints, from whichever of the two arguments holds them. */
@@ -103,17 +95,14 @@ function requireRestraints(a: WeighingDesignInput): {
   restraints: Restraint[];
 } {
   if (a.restraint && a.restraints) {
-    throw new EngineError(
-      'two-restraints',
-      'restraint',
-      'Both restraint and restraints are given; give one of them.',
-    );
+    throw new EngineError('two-restraints', 'restraint', 'restraint and restraints', 'Give one of the two.');
   }
   const restraints = a.restraint ? [a.restraint] : (a.restraints ?? []);
   if (restraints.length === 0) {
     throw new EngineError(
       'no-restraint',
       'restraint',
+      'nothing',
       'Differences alone fix no mass; give at least one restraint.',
     );
   }
@@ -126,16 +115,8 @@ function restraintCovariance(a: WeighingDesignInput, restraints: Restraint[]): M
     return build(restraints.length, restraints.length, (i, j) =>
       i === j ? uncertainty(restraints, i) ** 2 : 0,
     );
-  const { ok, offending } = isPositiveSemidefinite(given);
-  requireSize(given.length, restraints.length, 'restraintCovariance');
-  if (!ok) {
-    const [i, j] = offending ?? [0, 0];
-    throw new EngineError(
-      'not-a-covariance',
-      `restraintCovariance[${i}][${j}]`,
-      `restraintCovariance is no covariance matrix; look at the entry ${entry(given, i, j)} of restraints ${i + 1} and ${j + 1}.`,
-    );
-  }
+  requirePositiveSemidefinite(given, 'restraintCovariance', (i) => `restraint ${i + 1}`);
+  requireSize(given.length, restraints.length, 'restraintCovariance', 'restraints');
   return given;
 }
 

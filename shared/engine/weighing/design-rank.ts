@@ -58,7 +58,8 @@ export function requireDetermined(design: Matrix, restraints: Matrix, names?: re
     throw new EngineError(
       'dependent-restraints',
       'restraints',
-      'One restraint is a combination of the others; keep only restraints that each say something new.',
+      'one that is a combination of the others',
+      'Keep only restraints that each say something new.',
     );
   }
   const open = undeterminedWeights(design, restraints);
@@ -67,6 +68,7 @@ export function requireDetermined(design: Matrix, restraints: Matrix, names?: re
   throw new EngineError(
     'not-determined',
     'design',
-    `Weighings and restraints do not determine ${list}; add a weighing or a restraint that connects them.`,
+    `weighings and restraints that leave ${list} open`,
+    'Add a weighing or a restraint that connects them.',
   );
 }

@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { coverageFactor } from '../uncertainty/coverage-factor.ts';
-import { fCriticalValue, fUpperTail, studentTwoSidedTail } from './f-distribution.ts';
+import { studentTwoSidedTail } from '../uncertainty/student-t.ts';
+import { fCriticalValue, fUpperTail } from './f-distribution.ts';
 
 const positive = (max: number) => fc.integer({ min: 0, max: max * 100 }).map((n) => 1 + n / 100);
 

@@ -1,8 +1,8 @@
-import { requireNumber } from '../quantity/domain.ts';
+import { requireLevel, requireNumber } from '../quantity/domain.ts';
+import { betaFraction } from '../uncertainty/beta-fraction.ts';
 
 /**
- * Probability that F with `numerator` and `denominator` degrees of freedom exceeds `ratio`. With
- * `numerator` 1 and `ratio` t squared it is the two-sided probability of Student's t.
+ * Probability that F with `numerator` and `denominator` degrees of freedom exceeds `ratio`.
  * Domain: ratio >= 0, degrees of freedom finite and at least 1; about 1e-12 absolute.
  * @throws EngineError `out-of-range`, `not-finite`
  */
@@ -11,14 +11,6 @@ export function fUpperTail(ratio: number, numerator: number, denominator: number
   requireNumber(numerator, 'numerator', { min: 1 });
   requireNumber(denominator, 'denominator', { min: 1 });
   return incompleteBeta((numerator / denominator) * ratio, denominator / 2, numerator / 2);
-}
-
-/**
- * A significance level: a probability, and not so small that its critical value outgrows a double.
- * @throws EngineError `not-finite`, `out-of-range`
- */
-export function requireLevel(level: number): number {
-  return requireNumber(level, 'level', { min: 1e-100, below: 1 });
 }
 
 /**
@@ -39,11 +31,6 @@ export function fCriticalValue(upperTail: number, numerator: number, denominator
   return Math.exp((low + high) / 2);
 }
 
-/** Two-sided probability of a Student t at least as large in size as `t`. */
-export function studentTwoSidedTail(t: number, degreesOfFreedom: number): number {
-  return fUpperTail(t * t, 1, degreesOfFreedom);
-}
-
 /** Regularised incomplete beta function of `1 / (1 + odds)`; the two parts keep digits near 0 and near 1. */
 function incompleteBeta(odds: number, p: number, q: number): number {
   const x = 1 / (1 + odds);
@@ -53,31 +40,6 @@ function incompleteBeta(odds: number, p: number, q: number): number {
   const scale = Math.exp(p * Math.log(x) + q * Math.log(y) + logGamma(p + q) - logGamma(p) - logGamma(q));
   if (x < (p + 1) / (p + q + 2)) return (scale * betaFraction(x, p, q)) / p;
   return 1 - (scale * betaFraction(y, q, p)) / q;
-}
-
-/** Continued fraction of the incomplete beta function (Abramowitz and Stegun 26.5.8), evaluated forwards. */
-function betaFraction(x: number, p: number, q: number): number {
-  const tiny = 1e-300;
-  let c = 1;
-  let d = 1 / awayFromZero(1 - ((p + q) * x) / (p + 1), tiny);
-  let value = d;
-  for (let m = 1; m < 2000; m += 1) {
-    const even = (m * (q - m) * x) / ((p + 2 * m - 1) * (p + 2 * m));
-    const odd = (-(p + m) * (p + q + m) * x) / ((p + 2 * m) * (p + 2 * m + 1));
-    let change = 1;
-    for (const term of [even, odd]) {
-      d = 1 / awayFromZero(1 + term * d, tiny);
-      c = awayFromZero(1 + term / c, tiny);
-      change = c * d;
-      value *= change;
-    }
-    if (Math.abs(change - 1) < 1e-15) break;
-  }
-  return value;
-}
-
-function awayFromZero(value: number, tiny: number): number {
-  return Math.abs(value) < tiny ? tiny : value;
 }
 
 /** Natural logarithm of the gamma function for x > 0: Stirling's series after shifting x above 15. */

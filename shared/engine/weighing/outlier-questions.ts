@@ -1,9 +1,8 @@
-import { EngineError } from '../errors.ts';
 import { item } from '../linear/entries.ts';
 import { requireNumbers } from '../linear/requirements.ts';
-import { requireNumber } from '../quantity/domain.ts';
+import { requireLevel, requireNumber, requireWhole } from '../quantity/domain.ts';
 import { coverageFactor } from '../uncertainty/coverage-factor.ts';
-import { requireLevel, studentTwoSidedTail } from './f-distribution.ts';
+import { studentTwoSidedTail } from '../uncertainty/student-t.ts';
 import type { PrecisionEstimate } from './pooled-standard-deviation.ts';
 
 /** One value that lies far from its fellows, put as a question; the value stays where it is. */
@@ -92,16 +91,10 @@ function leftOutStudent(deviations: number[], index: number): number {
 /**
  * Grubbs' critical value for the farthest of `count` values: the largest distance from the mean, in standard
  * deviations of the series, that passes at `level` (two-sided).
- * @throws EngineError `too-few-values` under three values; `out-of-range`
+ * @throws EngineError `not-whole`, `not-finite`, `out-of-range` (fewer than three values have no outlier test)
  */
 export function grubbsCriticalValue(count: number, level: number): number {
-  if (!Number.isInteger(count) || count < 3) {
-    throw new EngineError(
-      'too-few-values',
-      'count',
-      `A series of ${count} values has no outlier test; at least 3 are needed.`,
-    );
-  }
+  requireWhole(count, 'count', { min: 3 });
   const t = coverageFactor(1 - requireLevel(level) / count, count - 2);
   return ((count - 1) / Math.sqrt(count)) * Math.sqrt((t * t) / (count - 2 + t * t));
 }

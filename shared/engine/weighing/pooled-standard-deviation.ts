@@ -11,7 +11,7 @@ export type PrecisionEstimate = { standardDeviation: number; degreesOfFreedom: n
  */
 export function pooledStandardDeviation(estimates: readonly PrecisionEstimate[]): PrecisionEstimate {
   if (estimates.length === 0) {
-    throw new EngineError('too-few-values', 'estimates', 'No standard deviation to pool; give at least one.');
+    throw new EngineError('too-few-values', 'estimates', 'no standard deviation', 'At least one is needed.');
   }
   let degreesOfFreedom = 0;
   let sum = 0;

@@ -33,7 +33,7 @@ describe('sensitivityFromWeight', () => {
     [{ density: 0 }, 'out-of-range', 'density'],
     [{ massUncertainty: -1 }, 'out-of-range', 'massUncertainty'],
     [{ readingUncertainty: -1 }, 'out-of-range', 'readingUncertainty'],
-    [{ airDensity: 8000 }, 'air-as-dense', 'density'],
+    [{ airDensity: 8000 }, 'out-of-range', 'density'],
   ])('refuses %o', (change, code, field) => {
     expect(() => sensitivityFromWeight({ ...weighing, ...change })).toThrow(
       expect.objectContaining({ code, field }),

@@ -19,7 +19,7 @@ export type SensitivityWeighing = {
  * Mass in mg for one unit of reading, from a small weight of known mass added to the load. Multiply differences
  * by it; its uncertainty counts in proportion to the difference, so it matters little near balance.
  * Source: OIML R 111-1:2004, C.6.4 (from memory).
- * @throws EngineError `out-of-range`, `not-finite`, `air-as-dense`, `no-response`
+ * @throws EngineError `out-of-range`, `not-finite`, `no-response`
  */
 export function sensitivityFromWeight(a: SensitivityWeighing): {
   sensitivity: number;
@@ -28,22 +28,17 @@ export function sensitivityFromWeight(a: SensitivityWeighing): {
   requireNumber(a.readingWithout, 'readingWithout');
   requireNumber(a.readingWith, 'readingWith');
   requireNumber(a.mass, 'mass', { above: 0 });
-  requireNumber(a.density, 'density', { above: 0 });
   for (const field of ['massUncertainty', 'airDensity', 'readingUncertainty'] as const)
     requireNumber(a[field], field, { min: 0 });
-  if (a.airDensity >= a.density) {
-    throw new EngineError(
-      'air-as-dense',
-      'density',
-      `A weight of ${a.density} kg/m3 floats in air of ${a.airDensity} kg/m3.`,
-    );
-  }
+  // A weight no denser than the air would float.
+  requireNumber(a.density, 'density', { above: a.airDensity, unit: 'kg/m3' });
   const change = a.readingWith - a.readingWithout;
   if (change === 0) {
     throw new EngineError(
       'no-response',
       'readingWith',
-      `The reading stayed at ${a.readingWith}; the comparator did not answer to the weight.`,
+      a.readingWith,
+      'Another reading than without the weight is expected; the comparator did not answer.',
     );
   }
   const sensitivity = (a.mass * (1 - a.airDensity / a.density)) / change;

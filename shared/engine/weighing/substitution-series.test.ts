@@ -111,10 +111,10 @@ describe('substitutionSeries', () => {
     [{ readings: [1, 2], cycle: 'ABA' }, 'too-few-values', 'readings'],
     [{ readings: [1, Number.NaN, 3], cycle: 'ABA' }, 'not-finite', 'readings[1]'],
     [{ readings: [1, 2, 3], cycle: 'ABC' }, 'unknown-choice', 'cycle'],
-    [{ readings: [1, 2, 3], cycle: 'ABA', testCount: 2 }, 'not-whole', 'testCount'],
-    [{ readings: [1, 2, 3], cycle: 'AB1..BnA', testCount: 0 }, 'not-whole', 'testCount'],
+    [{ readings: [1, 2, 3], cycle: 'ABA', testCount: 2 }, 'out-of-range', 'testCount'],
+    [{ readings: [1, 2, 3], cycle: 'AB1..BnA', testCount: 0 }, 'out-of-range', 'testCount'],
     [{ readings: [1, 2, 3], cycle: 'AB1..BnA', testCount: 1.5 }, 'not-whole', 'testCount'],
-    [{ readings: [1, 2, 3], cycle: 'ABA', sensitivity: 0 }, 'zero-sensitivity', 'sensitivity'],
+    [{ readings: [1, 2, 3], cycle: 'ABA', sensitivity: 0 }, 'no-response', 'sensitivity'],
     [{ readings: [1, 2, 3], cycle: 'ABA', sensitivity: Number.NaN }, 'not-finite', 'sensitivity'],
   ])('refuses %o', (input, code, field) => {
     expect(() => substitutionSeries(input as Parameters<typeof substitutionSeries>[0])).toThrow(

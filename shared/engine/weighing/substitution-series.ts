@@ -1,11 +1,14 @@
 import { EngineError } from '../errors.ts';
 import { item } from '../linear/entries.ts';
 import { requireNumbers } from '../linear/requirements.ts';
-import { requireNumber } from '../quantity/domain.ts';
+import { requireChoice, requireNumber, requireWhole } from '../quantity/domain.ts';
 import { pooledStandardDeviation } from './pooled-standard-deviation.ts';
 
 /** A reference (A) and one or several test weights (B), weighed in turn; one word per cycle. */
-export type SubstitutionCycle = 'ABBA' | 'ABA' | 'AB1..BnA';
+export const SUBSTITUTION_CYCLES = ['ABBA', 'ABA', 'AB1..BnA'] as const;
+
+/** How the weights of a series take turns. */
+export type SubstitutionCycle = (typeof SUBSTITUTION_CYCLES)[number];
 
 export type SubstitutionSeries = {
   /** Comparator readings in the order taken, cycle after cycle, equally spaced in time within a cycle. */
@@ -41,7 +44,8 @@ type CycleResult = { differences: number[]; drift: number };
  * cycle (the mean of n cycles has it divided by the root of n); 0 with 0 degrees of freedom says that one cycle
  * tells nothing about repeatability, and a pooled standard deviation has to serve.
  * Source: OIML R 111-1:2004, C.4 (cycles; from memory), least squares for a line plus a step.
- * @throws EngineError `incomplete-cycle`, `unknown-choice`, `not-whole`, `not-finite`, `too-few-values`, `zero-sensitivity`
+ * @throws EngineError `incomplete-cycle`, `unknown-choice`, `not-whole`, `not-finite`, `too-few-values`,
+ * `out-of-range`, `no-response` for a sensitivity of 0
  */
 export function substitutionSeries(a: SubstitutionSeries): SubstitutionResult {
   const testCount = requireTestCount(a);
@@ -66,31 +70,19 @@ export function substitutionSeries(a: SubstitutionSeries): SubstitutionResult {
 }
 
 function requireTestCount(a: SubstitutionSeries): number {
-  const testCount = a.testCount ?? 1;
-  if (!Number.isInteger(testCount) || testCount < 1) {
-    throw new EngineError(
-      'not-whole',
-      'testCount',
-      `testCount is ${testCount}; a whole number of test weights is expected.`,
-    );
-  }
-  if (testCount > 1 && a.cycle !== 'AB1..BnA') {
-    throw new EngineError(
-      'not-whole',
-      'testCount',
-      `A cycle ${a.cycle} has one test weight, not ${testCount}; use AB1..BnA.`,
-    );
-  }
-  return testCount;
+  const cycle = requireChoice(a.cycle, 'cycle', SUBSTITUTION_CYCLES);
+  const most = cycle === 'AB1..BnA' ? undefined : 1;
+  return requireWhole(a.testCount ?? 1, 'testCount', { min: 1, max: most });
 }
 
 function requireSensitivity(sensitivity: number): number {
   requireNumber(sensitivity, 'sensitivity');
   if (sensitivity === 0) {
     throw new EngineError(
-      'zero-sensitivity',
+      'no-response',
       'sensitivity',
-      'The sensitivity is 0; a comparator that does not answer weighs nothing.',
+      0,
+      'A comparator that does not answer weighs nothing; another number is expected.',
     );
   }
   return sensitivity;
@@ -100,19 +92,13 @@ function requireSensitivity(sensitivity: number): number {
 function splitCycles(a: SubstitutionSeries, testCount: number): number[][] {
   const lengths: Record<SubstitutionCycle, number> = { ABBA: 4, ABA: 3, 'AB1..BnA': testCount + 2 };
   const length = lengths[a.cycle];
-  if (length === undefined) {
-    throw new EngineError(
-      'unknown-choice',
-      'cycle',
-      `The cycle ${String(a.cycle)} is not known; use ABBA, ABA or AB1..BnA.`,
-    );
-  }
   requireNumbers(a.readings, 'readings', length);
   if (a.readings.length % length !== 0) {
     throw new EngineError(
       'incomplete-cycle',
       'readings',
-      `${a.readings.length} readings do not make whole cycles ${a.cycle} of ${length}; complete or remove the last cycle.`,
+      `${a.readings.length} readings`,
+      `Whole cycles ${a.cycle} of ${length} are expected; complete or remove the last one.`,
     );
   }
   return Array.from({ length: a.readings.length / length }, (_, i) =>

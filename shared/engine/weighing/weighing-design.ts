@@ -1,6 +1,7 @@
 import { EngineError } from '../errors.ts';
 import { build, entry, item, type Matrix } from '../linear/entries.ts';
 import { inverseSymmetric, multiply, multiplyVector, quadraticForm, transpose } from '../linear/matrix.ts';
+import { requireSize } from '../quantity/domain.ts';
 import { checkDesign, type CheckedDesign, type WeighingDesignInput } from './design-input.ts';
 
 export type WeighingDesignResult = {
@@ -47,8 +48,8 @@ type Solution = {
  *
  * Source: JCGM 102:2011 (generalised least squares, from memory); e-Handbook 2.3.4.1 for published designs.
  * @throws EngineError `not-determined` naming the weights left open, `dependent-restraints`, `no-restraint`,
- * `two-restraints`, `two-variances`, `size-mismatch`, `not-rectangular`, `not-finite`, `out-of-range`, `not-a-covariance`,
- * `not-positive-definite`, and `no-within-standard-deviation` when no residuals are left to estimate one from
+ * `two-restraints`, `two-variances`, `size-mismatch`, `not-rectangular`, `not-finite`, `out-of-range`, `not-symmetric`,
+ * `not-positive-semidefinite`, `not-positive-definite`, and `no-within-standard-deviation` when no residuals are left to estimate one from
  */
 export function solveWeighingDesign(a: WeighingDesignInput): WeighingDesignResult {
   const checked = checkDesign(a);
@@ -132,6 +133,7 @@ function withinVariance(
   throw new EngineError(
     'no-within-standard-deviation',
     'withinStandardDeviation',
+    'nothing',
     'The design leaves no residuals to estimate a standard deviation from; give a pooled one.',
   );
 }
@@ -182,13 +184,7 @@ export function designFactors(
     withinStandardDeviation: 0,
     betweenStandardDeviation: 1,
   }).designCovariance;
-  if (combination.length !== within.length) {
-    throw new EngineError(
-      'size-mismatch',
-      'combination',
-      `${combination.length} coefficients for ${within.length} weights.`,
-    );
-  }
+  requireSize(combination.length, within.length, 'combination', 'weights');
   const root = (matrix: Matrix) => Math.sqrt(Math.max(0, quadraticForm(matrix, combination)));
   return { within: root(within), between: root(between) };
 }
