@@ -1,0 +1,70 @@
+/**
+ * Prints the product's speed as ratios within one run, against the demo network: `npm run bench`.
+ * Not a test: nothing here fails because a machine is slow.
+ */
+import { spawnSync } from 'node:child_process';
+import path from 'node:path';
+import { openDatabase } from '#server/db/sequelize.ts';
+import { readRow, readRows } from '#server/db/read.ts';
+import { restartServer } from '#tests/support/restart-server.ts';
+import { demoSession } from '#tests/support/signed-in-client.ts';
+import { toolEnvironment } from '#tests/support/tool-environment.ts';
+import { asker, chainRound, ROUND_HEAD, roundInWords } from './chain-rounds.ts';
+import { firstLoad } from './first-load.ts';
+
+const VALUES = 200;
+/** Any number: another one draws other values. */
+const SEED = 20_260_520;
+const ENTRY_LIMIT_KB = 200;
+
+const { baseUrl, databaseUrl, pidFile } = toolEnvironment();
+
+await benchChains();
+benchFirstLoad();
+benchEngine();
+
+async function benchChains(): Promise<void> {
+  const database = openDatabase(databaseUrl, 2);
+  const size = await readRow<{ standards: number; values: number; links: number }>(
+    database,
+    `SELECT (SELECT COUNT(*) FROM standard) AS standards, (SELECT COUNT(*) FROM assigned_value) AS \`values\`,
+            (SELECT COUNT(*) FROM value_link) AS links`,
+  );
+  const rows = await readRows<{ uid: string }>(
+    database,
+    'SELECT uid FROM assigned_value ORDER BY MD5(CONCAT(uid, :seed)) LIMIT :count',
+    { seed: SEED, count: VALUES },
+  );
+  await database.close();
+  const uids = rows.map((row) => row.uid);
+  console.log(
+    `\nChains of ${uids.length} random values; the register holds ${size?.standards} standards, ${size?.values} assigned values, ${size?.links} links`,
+  );
+  if (pidFile) await restartServer(pidFile, baseUrl);
+  else
+    console.log('No SERVER_PID_FILE: the server is not restarted, and the first round is as cold as it is.');
+  const { cookie } = await demoSession(baseUrl, 'registrar@network.example');
+  const ask = asker(baseUrl, cookie);
+  const first = await ask(`/api/chains/${uids[0]}`);
+  console.log(`first chain after a start, which reads the register: ${first.milliseconds.toFixed(0)} ms`);
+  console.log(ROUND_HEAD);
+  console.log(roundInWords('each for the first time', await chainRound(ask, uids)));
+  console.log(roundInWords('each again', await chainRound(ask, uids)));
+  console.log('aim: p95 at most 3 times that of select 1');
+}
+
+function benchFirstLoad(): void {
+  const { entry, screens } = firstLoad(path.resolve('dist/client'));
+  const [largest] = screens;
+  console.log(
+    `\nFirst-load JavaScript, gzip: entry ${entry.toFixed(1)} kB; largest screen with it ` +
+      `${largest?.kilobytes.toFixed(1)} kB (${largest?.chunk}), the chain's drawing apart; aim: below ${ENTRY_LIMIT_KB} kB`,
+  );
+}
+
+function benchEngine(): void {
+  console.log('\nExact variances of a generated register');
+  const program = path.resolve('tests/bench/network-variances.ts');
+  const { status } = spawnSync(process.execPath, ['--import', 'tsx', program], { stdio: 'inherit' });
+  if (status !== 0) process.exitCode = 1;
+}
