@@ -82,3 +82,11 @@ export function bestCapabilityOf(laboratory: string, quantity: Quantity, nominal
   if (!range) return null;
   return new Decimal(range.relative).times(nominal).plus(range.constant).toNumber();
 }
+
+/** A scope that rested for some months, and was restored. */
+export const SUSPENSION = { laboratory: 'HM', from: '2021-02-01', to: '2021-07-31' } as const;
+
+/** Whether a laboratory's scope rests on some day of a period. */
+export function isSuspended(laboratory: string, first: string, last: string): boolean {
+  return laboratory === SUSPENSION.laboratory && first <= SUSPENSION.to && last >= SUSPENSION.from;
+}

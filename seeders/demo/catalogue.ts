@@ -19,3 +19,8 @@ export interface CatalogueEntry extends LineOfCertificate {
   /** Other rules that report the same slip; they are no false alarms. */
   alsoFoundBy: string[];
 }
+
+/** Where a value stands. */
+export function placeOf({ certificateNo, revision, line }: LineOfCertificate): LineOfCertificate {
+  return { certificateNo, revision, line };
+}

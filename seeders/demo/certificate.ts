@@ -1,11 +1,11 @@
 import { combined, effect, type Effects } from './effects.ts';
 import { laboratoryOf } from './laboratories.ts';
-import { leanedEffects } from './leaning.ts';
+import { carriedAsPrinted, leanedEffects } from './leaning.ts';
 import type { PlannedCertificate, PlannedLine } from './plan.ts';
 import type { Result } from './result.ts';
 import type { DemoValue } from './value.ts';
 import { classLimitOf } from './weight.ts';
-import { nextCertificateNo, type World } from './world.ts';
+import { nextCertificateNo, type IssuedSheet, type World } from './world.ts';
 
 /** A result as it goes onto a certificate. */
 export interface Entry {
@@ -43,23 +43,78 @@ export interface Sheet {
 /** Issues a certificate: a step of the plan, and values that later work can lean on. */
 export function issue(world: World, sheet: Sheet): DemoValue[] {
   const certificateNo = nextCertificateNo(world, sheet.issuer, sheet.issued);
-  const values = sheet.entries.map((entry, at) => valueOf(sheet, entry, certificateNo, at + 1));
+  const values = sheet.entries.map((entry, at) => valueOf(sheet, entry, certificateNo, at + 1, 1));
   world.steps.push({
     day: sheet.issued,
     does: 'issue',
     certificate: certificateOf(sheet, certificateNo, values),
     keys: values.map((value) => value.key),
   });
-  for (const value of values) {
-    world.values.set(value.key, value);
-    value.weight.values.push(value);
-  }
+  enter(world, { sheet, revision: 1, values });
   for (const { result } of sheet.entries) {
     for (const { value } of result.task.leaning.uses) {
       if (sheet.end > value.weight.lastUsedOn) value.weight.lastUsedOn = sheet.end;
     }
   }
   return values;
+}
+
+/** How a certificate is issued again. */
+export interface Reissue {
+  day: string;
+  reason: string;
+  /** Gives each line anew; the same line where value and U stay. */
+  correct?(entry: Entry): Entry;
+}
+
+/** Issues a certificate again: every line, and the ends of the lines before. */
+export function reissue(world: World, certificateNo: string, { day, reason, correct }: Reissue): DemoValue[] {
+  const before = world.sheets.get(certificateNo);
+  if (!before) throw new Error(`There is no certificate ${certificateNo} to issue again`);
+  const entries = before.sheet.entries.map((entry) => correct?.(entry) ?? entry);
+  const sheet = { ...before.sheet, issued: day, entries };
+  const revision = before.revision + 1;
+  const values = entries.map((entry, at) => valueOf(sheet, entry, certificateNo, at + 1, revision));
+  for (const [at, value] of before.values.entries()) {
+    const isSame = values[at]!.deviation === value.deviation && values[at]!.expandedU === value.expandedU;
+    value.ends.push({ effectiveOn: day, knownOn: day, changesValue: !isSame });
+  }
+  world.steps.push({
+    day,
+    does: 'revise',
+    certificate: certificateOf(sheet, certificateNo, values),
+    reason,
+    effectiveOn: day,
+    keys: values.map((value) => value.key),
+  });
+  enter(world, { sheet, revision, values });
+  return values;
+}
+
+/** Withdraws a certificate on a day, from another day on. */
+export function withdraw(
+  world: World,
+  certificateNo: string,
+  { day, reason, effectiveOn }: { day: string; reason: string; effectiveOn: string },
+): void {
+  const { sheet, values } = world.sheets.get(certificateNo)!;
+  for (const value of values) value.ends.push({ effectiveOn, knownOn: day, changesValue: true });
+  world.steps.push({
+    day,
+    does: 'withdraw',
+    laboratory: sheet.registeredBy,
+    certificateNo,
+    reason,
+    effectiveOn,
+  });
+}
+
+function enter(world: World, issued: IssuedSheet): void {
+  world.sheets.set(issued.values[0]!.certificateNo, issued);
+  for (const value of issued.values) {
+    world.values.set(value.key, value);
+    value.weight.values.push(value);
+  }
 }
 
 /** The sheet as the services take it. */
@@ -84,14 +139,23 @@ export function certificateOf(
   };
 }
 
-function valueOf(sheet: Sheet, entry: Entry, certificateNo: string, line: number): DemoValue {
-  const { task, printed, localU, carried } = entry.result;
-  const key = `${certificateNo}/${line}`;
+function valueOf(
+  sheet: Sheet,
+  entry: Entry,
+  certificateNo: string,
+  line: number,
+  revision: number,
+): DemoValue {
+  const { task, printed, localU } = entry.result;
+  const key = `${certificateNo}/${line}${revision === 1 ? '' : `@${revision}`}`;
   // Without a budget the register takes the own part from the printed U: so does the plan.
-  const own = entry.hasBudget ? localU : Math.sqrt(Math.max(0, (printed.expandedU / 2) ** 2 - carried));
+  const own = entry.hasBudget
+    ? localU
+    : Math.sqrt(Math.max(0, (printed.expandedU / 2) ** 2 - carriedAsPrinted(task.leaning)));
   return {
     key,
     certificateNo,
+    revision,
     line,
     weight: task.weight,
     quantity: task.quantity,

@@ -70,8 +70,14 @@ export function leanedEffects({ uses, sources }: Leaning, own: string): Effects 
   ]);
 }
 
-/** Variance that what a result leans on brings with it, each with its u as used, with covariance; g2. */
-export function carriedVariance({ uses, sources }: Leaning): number {
+/** Variance that what a result leans on brings with it, with covariance; g2. */
+export function carriedVariance(leaning: Leaning): number {
+  const effects = leanedEffects(leaning, 'own');
+  return covarianceOf(effects, effects);
+}
+
+/** The same as a certificate tells it: each reference with its printed u, which rounding has moved; g2. */
+export function carriedAsPrinted({ uses, sources }: Leaning): number {
   const parts = [
     ...uses.map((use, at) => ({ ...useEffects(use, `limit${at}`), u: uAsUsed(use) })),
     ...sources.map((source) => ({ ...sourceEffects(source), u: source.u })),

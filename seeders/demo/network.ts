@@ -10,23 +10,32 @@ const CONVENTIONAL = ['conventional mass'] as const;
 const BOTH = ['conventional mass', 'mass'] as const;
 
 /** The working standards of a laboratory, by level. */
-interface Pools {
+export interface Pools {
   institute: Weight[];
   heavy: Weight[];
   e1: Map<string, Weight[]>;
   e2: Map<string, Weight[]>;
+  f1: Map<string, Weight[]>;
   f2: Map<string, Weight[]>;
 }
 
 /** Registers the weights of the network and says who calibrates what, against what, when. */
-export function addNetwork(world: World): Series[] {
-  const pools: Pools = { institute: [], heavy: [], e1: new Map(), e2: new Map(), f2: new Map() };
-  return [
+export function addNetwork(world: World): { series: Series[]; pools: Pools } {
+  const pools: Pools = {
+    institute: [],
+    heavy: [],
+    e1: new Map(),
+    e2: new Map(),
+    f1: new Map(),
+    f2: new Map(),
+  };
+  const series = [
     ...addInstitute(world, pools),
     ...SECOND_LEVEL.flatMap((code, at) => addSecondLevel(world, pools, code, at)),
     ...THIRD_LEVEL.flatMap((code, at) => addThirdLevel(world, pools, code, at)),
     ...WORKS_LABORATORIES.flatMap((code, at) => addWorks(world, pools, code, at)),
   ];
+  return { series, pools };
 }
 
 function addInstitute(world: World, pools: Pools): Series[] {
@@ -236,6 +245,7 @@ function addThirdLevel(world: World, pools: Pools, code: string, at: number): Se
     class: 'F2',
     nominals: [...heavy.toReversed(), ...GRAM_SET],
   });
+  pools.f1.set(code, f1);
   pools.f2.set(code, f2);
   return [
     {
@@ -252,7 +262,7 @@ function addThirdLevel(world: World, pools: Pools, code: string, at: number): Se
       begins: roundsFrom(`${code} reference set`, `${start}-18`, 24),
       workDays: 4,
       issueDays: 7,
-      isLeaf: (weight) => weight.grams < 1,
+      isLeaf: (weight) => weight.grams < 0.5,
     },
     {
       id: `${code} working set`,

@@ -1,4 +1,6 @@
 import type { RandomSource } from '#shared/engine/uncertainty/random.ts';
+import { isSuspended } from './capabilities.ts';
+import { placeOf } from './catalogue.ts';
 import { issue, type Entry } from './certificate.ts';
 import { daysAfter, workday } from './days.ts';
 import { between, drawsFor } from './draws.ts';
@@ -6,6 +8,7 @@ import { buoyancy, type Use } from './leaning.ts';
 import { measure, type Result } from './result.ts';
 import { ADOPTION, CONSENSUS, onConsensusScale, REALIZED } from './scales.ts';
 import { answer, type Series } from './series.ts';
+import { withSlips } from './faults.ts';
 import { performDesign } from './perform-design.ts';
 import type { DemoValue } from './value.ts';
 import { classLimitOf, trueValue, type Quantity, type Weight } from './weight.ts';
@@ -28,38 +31,66 @@ export interface ReadyJob extends Job {
   usesOf(weight: Weight, quantity: Quantity): Use[];
 }
 
-/** Days, references and chance of a job; null while a reference is not there, so that the work has to wait. */
+/** Days, references and chance of a job; null while something is not there, so that the work has to wait. */
 export function ready(job: Job): ReadyJob | null {
   const { series, begin, round } = job;
-  const end = workday(daysAfter(begin, series.workDays));
+  const kept = series.keepsDays ? (day: string) => day : workday;
+  const end = kept(daysAfter(begin, series.workDays));
+  const issued = kept(daysAfter(end, series.issueDays));
+  if (series.isAccredited && !series.ignoresScope && isSuspended(series.issuer, begin, issued)) return null;
   const uses = new Map<string, Use[]>();
   for (const weight of series.weights) {
     for (const quantity of series.quantities) {
-      const found = series.wishesFor(weight, begin).map((wish): Use | null => {
-        const value = answer(wish, quantity, begin, end);
-        return value && { value, sensitivity: wish.sensitivity, usedAs: wish.usedAs ?? 'certificate' };
-      });
-      if (found.includes(null)) return null;
-      uses.set(`${weight.registryNo} ${quantity}`, found as Use[]);
+      const found = usesFor(job, weight, quantity, end);
+      if (!found) return null;
+      uses.set(`${weight.registryNo} ${quantity}`, found);
     }
   }
   const draws = drawsFor(`${series.id} ${round}`);
   return {
     ...job,
     end,
-    issued: workday(daysAfter(end, series.issueDays)),
+    issued,
     air: between(draws, 0.001165, 0.001215),
     draws,
     usesOf: (weight, quantity) => uses.get(`${weight.registryNo} ${quantity}`)!,
   };
 }
 
+function usesFor(
+  { series, round, begin }: Job,
+  weight: Weight,
+  quantity: Quantity,
+  end: string,
+): Use[] | null {
+  if (series.how === 'recognized certificate') return [];
+  const found = series.wishesFor(weight, begin).map((wish): Use | null => {
+    const value = series.picks ? series.picks(round, wish) : answer(wish, quantity, begin, end);
+    return value && { value, sensitivity: wish.sensitivity, usedAs: wish.usedAs ?? 'certificate' };
+  });
+  return found.includes(null) ? null : (found as Use[]);
+}
+
 /** Does the work and issues its certificate. */
 export function perform(world: World, job: ReadyJob): DemoValue[] {
+  const { series, round } = job;
+  const values =
+    series.how === 'subdivision' || series.how === 'build-up'
+      ? performDesign(world, job)
+      : performEach(world, job);
+  world.rounds.set(`${series.id}/${round}`, values);
+  series.after?.(round, values);
+  return values;
+}
+
+function performEach(world: World, job: ReadyJob): DemoValue[] {
   const { series } = job;
-  if (series.how === 'subdivision' || series.how === 'build-up') return performDesign(world, job);
-  const entries = series.weights.flatMap((weight) => entriesFor(world, job, weight));
-  return issue(world, {
+  const { entries, slips } = withSlips(
+    world,
+    job,
+    series.weights.flatMap((weight) => entriesFor(world, job, weight)),
+  );
+  const values = issue(world, {
     issuer: series.issuer,
     registeredBy: series.weights[0]!.owner,
     begin: job.begin,
@@ -68,6 +99,8 @@ export function perform(world: World, job: ReadyJob): DemoValue[] {
     method: series.method,
     entries,
   });
+  for (const slip of slips) world.catalogue.push({ ...slip, ...placeOf(values[slip.line - 1]!) });
+  return values;
 }
 
 function entriesFor(world: World, job: ReadyJob, weight: Weight): Entry[] {
@@ -104,20 +137,34 @@ function measureIn(
     ownU: series.ownU ?? series.ownShare * classLimitOf(weight.class, weight.nominal),
     isAccredited: series.isAccredited,
   };
-  return measure(task, job.draws, { twin });
+  return measure(task, job.draws, { twin, wanted: isToBeQuestion(job, weight) ? 'question' : 'quiet' });
+}
+
+/** Now and then an honest value lies beyond U of the change: one pair in twenty does. */
+function isToBeQuestion({ series, round }: Job, weight: Weight): boolean {
+  return (
+    round > 0 && series.quantities.length === 1 && drawsFor(`${weight.registryNo} ${round}`).uniform() < 0.025
+  );
 }
 
 function entryOf(series: Series, result: Result): Entry {
-  if (series.how !== 'recognized certificate') return { result, hasBudget: series.hasBudget };
+  // After a slip the right value is questioned at issue; the person looks and confirms it.
+  const isUnitConfirmed = result.task.weight.values.at(-1)?.isFaulty ?? false;
+  if (series.how !== 'recognized certificate') {
+    return { result, hasBudget: series.hasBudget, isUnitConfirmed };
+  }
   const scale = result.task.leaning.sources.length > 0 ? CONSENSUS : REALIZED;
   return { result, hasBudget: false, rootKind: 'recognized certificate', scale };
 }
 
-/** Weights from F2 down are adjusted when they near their limit, unless somebody still works with them. */
+/** Weights from F2 down are adjusted when they near their limit or were knocked, unless somebody still works with them. */
 function mayBeAdjusted({ begin }: ReadyJob, weight: Weight, { printed }: Result): boolean {
-  if (!weight.class || ['E1', 'E2', 'F1'].includes(weight.class) || weight.values.length === 0) return false;
+  const last = weight.values.at(-1);
+  if (!weight.class || ['E1', 'E2', 'F1'].includes(weight.class) || !last) return false;
   const limit = classLimitOf(weight.class, weight.nominal);
-  return Math.abs(printed.deviation) + printed.expandedU > 0.97 * limit && weight.lastUsedOn < begin;
+  const isNearLimit = Math.abs(printed.deviation) + printed.expandedU > 0.97 * limit;
+  const isKnocked = !last.isFaulty && Math.abs(printed.deviation - last.deviation) > 0.8 * limit;
+  return (isNearLimit || isKnocked) && weight.lastUsedOn < begin;
 }
 
 /** As found, then adjusted on the first day, then as left: a new epoch. */

@@ -64,8 +64,8 @@ function startOfPair(set: SetDescription, nominal: string, isSecond: boolean): {
   const isPair = set.nominals.filter((other) => other === nominal).length > 1;
   if (!isPair) return {};
   const draws = drawsFor(`${set.registryNo} pair ${nominal}`);
-  const apart = between(draws, 0.1, 0.48);
-  return { startShare: isSecond ? -apart : apart };
+  const first = between(draws, 0.1, 0.66);
+  return { startShare: isSecond ? -0.15 * first : first };
 }
 
 /** Density as known for a weight of a class: measured where it matters, from the maker, or assumed. kg/m3. */

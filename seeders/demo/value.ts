@@ -6,6 +6,7 @@ export interface DemoValue {
   /** `<certificate>/<line>`, with `@<revision>` from the second revision on. */
   key: string;
   certificateNo: string;
+  revision: number;
   line: number;
   weight: Weight;
   quantity: Quantity;

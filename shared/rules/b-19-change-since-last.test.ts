@@ -99,3 +99,21 @@ it('does not compare with a value that was exchanged with the duplicate', () => 
   const elsewhere = { ...partner, history: [past('0.00121', 2027)] };
   expect(judge('0.0002', history, { duplicates: [elsewhere] }).outcome).toBe('fails');
 });
+
+it('leaves a change that was found and adjusted in the same calibration', () => {
+  const nextEpoch = {
+    reason: 'adjusted',
+    beginsOn: '2025-02-17',
+    lastGoodOn: null,
+    recordedAt: '2025-02-17T08:00:00.000000Z',
+  };
+  const found = { stage: 'as found', nextEpoch, performedEnd: '2025-02-19' } as const;
+  expect(judge('0.0002', [past('0.0009')], found)).toMatchObject({
+    outcome: 'holds',
+    severity: 'information',
+    sentence: 'adjusted',
+  });
+  expect(judge('0.0002', [past('0.0009')], { ...found, stage: null }).outcome).toBe('fails');
+  const later = { ...nextEpoch, beginsOn: '2025-06-02' };
+  expect(judge('0.0002', [past('0.0009')], { ...found, nextEpoch: later }).outcome).toBe('fails');
+});

@@ -35,6 +35,8 @@ export const changeSinceLast: ValueRule = {
       'Changed from {previousValue} (certificate {previous}, {previousDate}) to {value} (certificate {certificate}): {ratio} of its U. Find the cause, or open a new epoch for {registryNo}.',
     returned:
       'Differs from certificate {previous} ({previousValue}) by {ratio} of its U, but agrees with the value before it: the question belongs to {previous}.',
+    adjusted:
+      'Found at {value}, {ratio} of its U away from {previousValue} (certificate {previous}, {previousDate}), and {reason} in the same calibration: the change has been dealt with.',
     wear: 'Changed from {previousValue} to {value}, {ratio} of its U, within what class {class} allows for wear.',
     first: 'There is no earlier value of {registryNo} in this epoch to compare with.',
     'asked elsewhere':
@@ -62,6 +64,9 @@ export const changeSinceLast: ValueRule = {
     };
     if (ratio <= 1) return holds('small', parameters);
     if (ratio <= CLEAR_CHANGE) return holds('question', parameters, 'information');
+    if (isAdjustedSince(value)) {
+      return holds('adjusted', { ...parameters, reason: value.nextEpoch?.reason ?? '' }, 'information');
+    }
     if (isWear(value, previous)) return holds('wear', parameters, 'information');
     const hasReturned = before.some((past) => (changeRatio(value, past) ?? Infinity) <= 1);
     return hasReturned ? holds('returned', parameters, 'information') : fails('large', parameters);
@@ -96,6 +101,11 @@ function comparable(value: ValueFacts): HistoryFacts[] {
       );
     })
     .reverse();
+}
+
+/** A change that was found and ended in an intervention within the same calibration has its new epoch already. */
+function isAdjustedSince({ stage, nextEpoch, performedEnd }: ValueFacts): boolean {
+  return stage === 'as found' && nextEpoch !== null && nextEpoch.beginsOn <= performedEnd;
 }
 
 function isWear(value: ValueFacts, previous: HistoryFacts): boolean {
