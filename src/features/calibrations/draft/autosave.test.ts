@@ -88,6 +88,17 @@ describe('makeAutosave', () => {
     expect(autosave.isClean()).toBe(true);
   });
 
+  it('is at rest again when what was typed is taken back', async () => {
+    const autosave = start();
+    type('A');
+    autosave.changed();
+    type('');
+    autosave.changed();
+    expect(states).toEqual(['typing', 'untouched']);
+    await vi.advanceTimersByTimeAsync(5000);
+    expect(send).not.toHaveBeenCalled();
+  });
+
   it('tries again while the server does not answer', async () => {
     const autosave = start();
     send.mockRejectedValueOnce(problem(0));

@@ -50,6 +50,7 @@ export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosav
   let timer: ReturnType<typeof setTimeout> | undefined;
   let running: Promise<void> | null = null;
   let isHalted = false;
+  let atRest: SaveState = { kind: 'untouched' };
 
   const isClean = (): boolean => acknowledged !== null && isSameContent(read(), acknowledged);
 
@@ -72,7 +73,8 @@ export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosav
     try {
       await send(content);
       acknowledged = content;
-      onState({ kind: 'saved', at: Date.now() });
+      atRest = { kind: 'saved', at: Date.now() };
+      onState(atRest);
       if (!isClean()) later(PAUSE_MS);
     } catch (error) {
       const state = stateAfter(error);
@@ -86,7 +88,12 @@ export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosav
     isClean,
     acknowledged: () => acknowledged,
     changed: () => {
-      if (isHalted || isClean()) return;
+      if (isHalted) return;
+      if (isClean()) {
+        clearTimeout(timer);
+        onState(atRest);
+        return;
+      }
       onState({ kind: 'typing' });
       later(PAUSE_MS);
     },
@@ -98,7 +105,8 @@ export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosav
     settle: (content) => {
       acknowledged = content;
       isHalted = false;
-      onState({ kind: 'saved', at: Date.now() });
+      atRest = { kind: 'saved', at: Date.now() };
+      onState(atRest);
     },
     stop: () => {
       void run();

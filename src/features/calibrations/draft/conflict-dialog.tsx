@@ -31,7 +31,7 @@ export function ConflictDialog({ mine, theirs, base, onSettled, onClose }: Confl
     );
   return (
     <Dialog
-      title="Someone else saved a newer version"
+      title="Two versions of this draft"
       onClose={onClose}
       actions={
         <>
@@ -44,13 +44,13 @@ export function ConflictDialog({ mine, theirs, base, onSettled, onClose }: Confl
       }
     >
       <p className="text-ink-2">
-        {theirs.updatedBy} saved at <DateText value={theirs.updatedAt} />.{' '}
+        {theirs.updatedBy} saved a newer version at <DateText value={theirs.updatedAt} />.{' '}
         {differences.length === 0
           ? 'Both versions say the same.'
           : 'Choose part by part what stands; what you changed is chosen already.'}
       </p>
       {differences.length > 0 && (
-        <Table caption="Where the two versions differ" isScrolled>
+        <Table caption="Where the two versions differ" isScrolled={differences.length > 8}>
           <thead>
             <tr>
               <Head>Part</Head>

@@ -37,7 +37,7 @@ export function DraftConflict({ saving, mine }: DraftConflictProps) {
     <ConflictDialog
       mine={mine()}
       theirs={theirs}
-      base={saving.restoredFrom === null ? saving.base() : null}
+      base={saving.base()}
       onSettled={(content) => settle(theirs, { ...content, version: theirs.version })}
       onClose={() => setPutOff(theirs.version)}
     />

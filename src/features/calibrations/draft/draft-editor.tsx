@@ -84,13 +84,13 @@ export function DraftEditor(props: DraftEditorProps) {
                 tone="brass"
                 title="Filled again from this browser"
                 answers={
-                  <Button weight="text" onClick={() => saving.forget()}>
+                  <Button weight="text" onClick={() => saving.dismiss()}>
                     Good
                   </Button>
                 }
               >
                 What was typed until {new Date(saving.restoredFrom).toTimeString().slice(0, 8)} had not
-                reached the server; it is here again and is being saved.
+                reached the server. It is here again.
               </Notice>
             )}
             <fieldset disabled={isLocked} className="contents">

@@ -19,7 +19,7 @@ export function SaveStatus({ state, updatedAt }: { state: SaveState; updatedAt: 
     case 'refused':
       return <span className="text-broken">not saved: the server refused it; kept in this browser</span>;
     case 'conflict':
-      return <span className="text-caution">not saved: someone else saved a newer version</span>;
+      return <span className="text-caution">not saved: a newer version was saved elsewhere</span>;
   }
 }
 

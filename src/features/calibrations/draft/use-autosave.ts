@@ -7,7 +7,10 @@ import { useLocalDraft } from '#src/lib/local-draft.ts';
 import { usePerson } from '#src/lib/session.ts';
 import { createDraft, draftQuery, saveDraft } from '../api.ts';
 import { makeAutosave, type Autosave, type SaveState } from './autosave.ts';
-import { contentOf, isSameContent, type DraftValues } from './draft-values.ts';
+import { contentOf, type DraftValues } from './draft-values.ts';
+
+/** Longer than the local copy waits before it is written. */
+const FORGET_AFTER_MS = 500;
 
 /** How the draft is being kept. */
 export interface Saving {
@@ -20,8 +23,8 @@ export interface Saving {
   base: () => DraftContent | null;
   /** Takes these values as what should stand, upon the version the server has. */
   settle: (theirs: DraftResponse, values: DraftValues) => void;
-  /** Forgets what this browser keeps of the draft. */
-  forget: () => void;
+  /** The person has seen that entries were restored. */
+  dismiss: () => void;
 }
 
 /**
@@ -38,7 +41,12 @@ export function useAutosave(
   const queries = useQueryClient();
   const { accountId } = usePerson();
   const [state, setState] = useState<SaveState>({ kind: 'untouched' });
-  const { restoredFrom, clear } = useLocalDraft(accountId, `calibration:${draft?.id ?? 'new'}`, form);
+  const local = useLocalDraft(accountId, `calibration:${draft?.id ?? 'new'}`, form);
+  const { clear } = local;
+  const [restoredFrom, setRestoredFrom] = useState<number | null>(null);
+  /** Entries restored from this browser may have begun from any version. */
+  const isBaseKnown = useRef(true);
+  const keptAt = useRef(local.restoredFrom);
   const latest = useRef({ draft, laboratoryId, onCreated, clear });
   useEffect(() => {
     latest.current = { draft, laboratoryId, onCreated, clear };
@@ -51,6 +59,12 @@ export function useAutosave(
     let id = latest.current.draft?.id ?? null;
     let isLeft = false;
     const read = () => contentOf(form.getValues());
+    let forgetting: ReturnType<typeof setTimeout> | undefined;
+    // What the server has needs no copy here, and the copy's own last write must not bring it back.
+    const forgetLater = (): void => {
+      clearTimeout(forgetting);
+      if (autosave.isClean()) forgetting = setTimeout(() => latest.current.clear(), FORGET_AFTER_MS);
+    };
     const autosave = makeAutosave({
       read,
       // A sheet that was only looked at makes no draft.
@@ -70,17 +84,26 @@ export function useAutosave(
           clearNew.current = latest.current.clear;
           if (!isLeft) latest.current.onCreated(answer);
         }
-        if (isSameContent(read(), content)) latest.current.clear();
+        isBaseKnown.current = true;
+        if (isLeft) latest.current.clear();
         return answer;
       },
-      onState: setState,
+      onState: (next) => {
+        setState(next);
+        forgetLater();
+      },
     });
     saver.current = autosave;
     const unsubscribe = form.subscribe({ formState: { values: true }, callback: autosave.changed });
+    if (!autosave.isClean() && keptAt.current !== null) {
+      isBaseKnown.current = false;
+      setRestoredFrom(keptAt.current);
+    }
     // What was restored from this browser goes to the server now.
     autosave.changed();
     return () => {
       isLeft = true;
+      clearTimeout(forgetting);
       unsubscribe();
       autosave.stop();
     };
@@ -113,6 +136,7 @@ export function useAutosave(
     [form, queries],
   );
   const saveNow = useCallback(() => saver.current?.now() ?? Promise.resolve(false), []);
-  const base = useCallback(() => saver.current?.acknowledged() ?? null, []);
-  return { state, restoredFrom, saveNow, base, settle, forget: clear };
+  const base = useCallback(() => (isBaseKnown.current ? (saver.current?.acknowledged() ?? null) : null), []);
+  const dismiss = useCallback(() => setRestoredFrom(null), []);
+  return { state, restoredFrom, saveNow, base, settle, dismiss };
 }
