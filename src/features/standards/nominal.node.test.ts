@@ -1,5 +1,14 @@
 import { describe, expect, it } from 'vitest';
-import { isHeavy, nominalMarking, nominalText, nominalUnit, readNominal, usualShape } from './nominal.ts';
+import {
+  isGrams,
+  isHeavy,
+  nominalEntry,
+  nominalMarking,
+  nominalText,
+  nominalUnit,
+  readNominal,
+  usualShape,
+} from './nominal.ts';
 
 const grams = (typed: string) => {
   const read = readNominal(typed, '.');
@@ -28,6 +37,18 @@ describe('readNominal', () => {
   it('says what it wants', () => {
     const read = readNominal('500', '.');
     expect(read.kind === 'unreadable' && read.why).toContain('such as 1 kg or 500 mg; received "500"');
+  });
+});
+
+describe('what a form holds of a nominal', () => {
+  it('is grams, or an entry that no schema takes for grams', () => {
+    expect(nominalEntry('20 kg', '.')).toBe('20000');
+    expect(['20', '20 k', ' 1 kgg '].map((typed) => nominalEntry(typed, '.'))).toEqual([
+      '20 ?',
+      '20 k',
+      '1 kgg',
+    ]);
+    expect(['20', '20 ?', '0', ''].map(isGrams)).toEqual([true, false, false, false]);
   });
 });
 

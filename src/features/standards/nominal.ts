@@ -31,6 +31,22 @@ export function readNominal(typed: string, decimalMark: DecimalMark): ReadNomina
   }
 }
 
+/**
+ * What a form holds of an entry: grams once it can be read, else the text as typed. A bare number would pass for
+ * grams there, so it is held with the question it leaves open.
+ */
+export function nominalEntry(typed: string, decimalMark: DecimalMark): string {
+  const read = readNominal(typed, decimalMark);
+  if (read.kind === 'nominal') return read.grams;
+  const text = typed.trim();
+  return isGrams(text) ? `${text} ?` : text;
+}
+
+/** Whether an entry holds a nominal in grams, and not something still being written. */
+export function isGrams(entry: string): boolean {
+  return /^\d+(\.\d+)?$/.test(entry) && Number(entry) > 0;
+}
+
 /** The unit a nominal is engraved in: mg below 1 g, g below 1 kg, kg from there on (OIML R 111-1:2004, 13). */
 export function nominalUnit(grams: string): Extract<Unit, 'kg' | 'g' | 'mg'> {
   const value = new Decimal(grams);

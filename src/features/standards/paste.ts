@@ -1,4 +1,4 @@
-import { readNominal, nominalMarking, usualShape } from './nominal.ts';
+import { isGrams, nominalEntry, nominalMarking, usualShape } from './nominal.ts';
 import { MEMBER_COLUMNS, type MemberColumn, type MemberEntry } from './set-entries.ts';
 
 /** Rows and cells of text copied from a spreadsheet; a single cell is left to the browser. */
@@ -35,8 +35,7 @@ export function withPasted(
 
 function withCell(row: MemberEntry, column: MemberColumn, cell: string, decimalMark: '.' | ','): MemberEntry {
   if (column === 'nominal') {
-    const read = readNominal(cell, decimalMark);
-    return { ...row, nominal: read.kind === 'nominal' ? read.grams : cell };
+    return { ...row, nominal: nominalEntry(cell, decimalMark) };
   }
   if (column === 'serial') return { ...row, serial: cell === '' ? null : cell };
   if (column === 'shape') return { ...row, shape: cell.toLowerCase() as MemberEntry['shape'] };
@@ -45,7 +44,6 @@ function withCell(row: MemberEntry, column: MemberColumn, cell: string, decimalM
 
 /** A pasted row that says only its nominal gets the usual marking and shape. */
 function completed(row: MemberEntry): MemberEntry {
-  const isNominal = /^\d+(\.\d+)?$/.test(row.nominal) && Number(row.nominal) > 0;
-  if (!isNominal || row.marking !== '') return row;
+  if (!isGrams(row.nominal) || row.marking !== '') return row;
   return { ...row, marking: nominalMarking(row.nominal), shape: usualShape(row.nominal) };
 }

@@ -1,6 +1,6 @@
 import { z } from 'zod';
-import { RegisterSetBody } from '#shared/contracts/standards.ts';
-import { nominalMarking } from './nominal.ts';
+import { RegisterSetBody, Shape } from '#shared/contracts/standards.ts';
+import { isGrams, nominalMarking, readNominal } from './nominal.ts';
 
 const Member = RegisterSetBody.shape.members.element;
 
@@ -67,7 +67,10 @@ export function proposedName(
   weightClass: string | null,
   members: readonly Pick<MemberEntry, 'nominal'>[],
 ): string {
-  const nominals = members.map((member) => member.nominal).toSorted((a, b) => Number(a) - Number(b));
+  const nominals = members
+    .map((member) => member.nominal)
+    .filter(isGrams)
+    .toSorted((a, b) => Number(a) - Number(b));
   const [smallest, largest] = [nominals[0], nominals.at(-1)];
   if (!smallest || !largest) return '';
   const range =
@@ -81,4 +84,16 @@ export function proposedName(
 export function isSameMembers(a: readonly MemberEntry[], b: readonly MemberEntry[]): boolean {
   const text = (member: MemberEntry): string => COLUMNS.map((column) => member[column] ?? '').join('\t');
   return a.length === b.length && a.every((member, index) => text(member) === text(b[index]!));
+}
+
+/** What is wrong with a cell, in the words of the table where the schema knows only texts. */
+export function cellProblem(member: MemberEntry, column: MemberColumn, message: string): string {
+  if (column === 'nominal' && !isGrams(member.nominal)) {
+    const read = readNominal(member.nominal, '.');
+    return read.kind === 'unreadable' ? read.why : 'Write a nominal and its unit, such as 1 kg or 500 mg.';
+  }
+  if (column === 'shape' && !Shape.safeParse(member.shape).success) {
+    return `Received "${member.shape}"; expected ${Shape.options.join(', ')}.`;
+  }
+  return message;
 }

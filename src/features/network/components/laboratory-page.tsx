@@ -21,42 +21,44 @@ export function LaboratoryPage({ sheet, actions }: LaboratoryPageProps) {
       title={laboratory.name}
       sub={`${laboratory.kind} · ${laboratory.place}, ${laboratory.country} · ${laboratory.code}`}
     >
-      <TwoColumns
-        sideWidth="narrow"
-        side={
+      <Section
+        title="Scope"
+        note={
           <>
-            <Section title={recognitions.length > 1 ? 'Recognitions' : 'Recognition'}>
-              <Stack>
-                {recognitions.map((recognition) => (
-                  <RecognitionFacts
-                    key={`${recognition.kind} ${recognition.number}`}
-                    recognition={recognition}
-                  />
-                ))}
-                {recognitions.length === 0 && (
-                  <p className="text-ink-2">None is in the register for today.</p>
-                )}
-              </Stack>
-            </Section>
-            {people && people.length > 0 && (
-              <Section title="People">
-                <PeopleTable people={people} />
-              </Section>
-            )}
-            {actions && <Toolbar>{actions}</Toolbar>}
+            best measurement capability as a function of the nominal{' '}
+            <span className="font-serif italic">m</span>
           </>
         }
       >
-        <Section title="Scope" note="best measurement capability as a function of the nominal m">
-          {scope.length > 0 ? (
-            <ScopeTable lines={scope} />
-          ) : (
-            <EmptyState>
-              What this laboratory may do, and how well at best, stands here once the registrar has entered
-              its scope.
-            </EmptyState>
-          )}
+        {scope.length > 0 ? (
+          <ScopeTable lines={scope} />
+        ) : (
+          <EmptyState>
+            What this laboratory may do, and how well at best, stands here once the registrar has entered its
+            scope.
+          </EmptyState>
+        )}
+      </Section>
+      <TwoColumns
+        sideWidth="wide"
+        side={
+          people &&
+          people.length > 0 && (
+            <Section title="People">
+              <PeopleTable people={people} />
+            </Section>
+          )
+        }
+      >
+        <Section title={recognitions.length > 1 ? 'Recognitions' : 'Recognition'}>
+          <Stack>
+            {recognitions.map((recognition) => (
+              <RecognitionFacts key={`${recognition.kind} ${recognition.number}`} recognition={recognition} />
+            ))}
+            {recognitions.length === 0 && <p className="text-ink-2">None is in the register for today.</p>}
+          </Stack>
         </Section>
+        {actions && <Toolbar>{actions}</Toolbar>}
       </TwoColumns>
     </Page>
   );

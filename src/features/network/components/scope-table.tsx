@@ -15,7 +15,7 @@ export function ScopeTable({ lines }: { lines: readonly Line[] }) {
           <Head align="right">Line</Head>
           <Head>Quantity</Head>
           <Head>
-            Nominal <span className="font-serif italic">m</span>
+            Nominal <span className="font-serif leading-none italic">m</span>
           </Head>
           <Head>Method</Head>
           <Head>Best U</Head>

@@ -46,7 +46,7 @@ export function EpochDialog({ sheet, onClose }: { sheet: StandardResponse; onClo
           After an intervention the weight is another weight: its history breaks, and no drift is drawn or
           predicted across the day. Values already issued stay as they are. This cannot be taken back.
         </p>
-        <div className="grid grid-cols-1 gap-x-4 gap-y-4 min-[30rem]:grid-cols-3">
+        <div className="grid grid-cols-1 gap-x-4 items-start gap-y-4 min-[30rem]:grid-cols-3">
           <SelectField
             label="What happened"
             choices={REASONS}
@@ -60,7 +60,7 @@ export function EpochDialog({ sheet, onClose }: { sheet: StandardResponse; onClo
             {...form.register('beginsOn')}
           />
           <DateField
-            label="Last known good"
+            label="Last good"
             isOptional
             className="w-full"
             error={errorAt(errors, 'lastGoodOn')}

@@ -2,7 +2,7 @@ import { Decimal, decimalText } from '#shared/decimal.ts';
 import type { WeightClass } from '#shared/contracts/common.ts';
 import { maximumPermissibleError } from '#shared/engine/conformity/maximum-permissible-error.ts';
 import { Quantity } from '#src/components/ui/quantity.tsx';
-import { nominalText } from '../nominal.ts';
+import { isGrams, nominalText } from '../nominal.ts';
 
 interface ErrorLimitNoteProps {
   weightClass: WeightClass | null;
@@ -12,7 +12,7 @@ interface ErrorLimitNoteProps {
 
 /** What a class asks of a weight of this nominal, as one chooses them (OIML R 111-1:2004, Table 1). */
 export function ErrorLimitNote({ weightClass, nominal }: ErrorLimitNoteProps) {
-  if (weightClass === null || !(Number(nominal) > 0)) {
+  if (weightClass === null || !isGrams(nominal)) {
     return (
       <p className="text-ink-2">Choose a class and a nominal to see the error limit that goes with them.</p>
     );
@@ -37,7 +37,7 @@ export function ErrorLimitNote({ weightClass, nominal }: ErrorLimitNoteProps) {
 
 /** Maximum permissible error in grams as text; null where the table has none or the nominal is no number yet. */
 export function errorLimit(weightClass: WeightClass | null, nominal: string): string | null {
-  if (weightClass === null || !/^\d+(\.\d+)?$/.test(nominal) || !(Number(nominal) > 0)) return null;
+  if (weightClass === null || !isGrams(nominal)) return null;
   const limit = maximumPermissibleError(weightClass, new Decimal(nominal));
   return limit && decimalText(limit.div(1000));
 }

@@ -37,7 +37,7 @@ export function HistorySection({ sheet, quantity, onQuantity, firstStep }: Histo
   return (
     <Section
       title="History"
-      note={kinds.size > 1 ? undefined : quantity}
+      note={kinds.size === 1 ? quantity : undefined}
       actions={
         kinds.size > 1 && (
           <Switch
@@ -63,7 +63,7 @@ export function HistorySection({ sheet, quantity, onQuantity, firstStep }: Histo
               summary={historySummary({ ...sheet, history: values }, quantity)}
             />
           </div>
-          <p className="pb-2 text-sm text-ink-3">{historyLegend(values)}</p>
+          <p className="pb-2 text-sm text-ink-3">{historyLegend(geometry.points)}</p>
           <HistoryTable sheet={{ ...sheet, history: values }} />
         </>
       ) : (

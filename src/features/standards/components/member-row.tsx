@@ -8,6 +8,7 @@ import { TextField } from '#src/components/ui/text-field.tsx';
 import { errorAt } from '#src/lib/form.ts';
 import { emptyAsNull } from '../entries.ts';
 import { memberNo } from '../series.ts';
+import { cellProblem, type MemberColumn } from '../set-entries.ts';
 import { errorLimit } from './error-limit-note.tsx';
 import type { SetForm } from './member-table.tsx';
 import { NominalField } from './nominal-field.tsx';
@@ -28,6 +29,10 @@ export function MemberRow({ form, index, onRemove }: MemberRowProps) {
     name: ['registryNo', 'class', `${path}.nominal`],
   });
   const { errors } = form.formState;
+  const errorOf = (column: MemberColumn) => {
+    const message = errorAt(errors, `${path}.${column}`);
+    return message && cellProblem(form.getValues(path), column, message);
+  };
   const limit = errorLimit(weightClass, nominal ?? '');
   const number = memberNo(setNo.trim() || 'set', index);
   return (
@@ -45,7 +50,7 @@ export function MemberRow({ form, index, onRemove }: MemberRowProps) {
               label={`Nominal of ${number}`}
               isLabelHidden
               className="ml-auto w-28"
-              error={errorAt(errors, `${path}.nominal`)}
+              error={errorOf('nominal')}
             />
           )}
         />
@@ -56,7 +61,7 @@ export function MemberRow({ form, index, onRemove }: MemberRowProps) {
           isLabelHidden
           autoComplete="off"
           className="w-36"
-          error={errorAt(errors, `${path}.marking`)}
+          error={errorOf('marking')}
           {...form.register(`${path}.marking`)}
         />
       </Cell>
@@ -67,7 +72,7 @@ export function MemberRow({ form, index, onRemove }: MemberRowProps) {
           isMono
           autoComplete="off"
           className="w-28"
-          error={errorAt(errors, `${path}.serial`)}
+          error={errorOf('serial')}
           {...form.register(`${path}.serial`, { setValueAs: emptyAsNull })}
         />
       </Cell>
@@ -77,7 +82,7 @@ export function MemberRow({ form, index, onRemove }: MemberRowProps) {
           isLabelHidden
           className="w-28"
           choices={SHAPES}
-          error={errorAt(errors, `${path}.shape`)}
+          error={errorOf('shape')}
           {...form.register(`${path}.shape`)}
         />
       </Cell>

@@ -1,7 +1,7 @@
 import { useState, type ComponentProps } from 'react';
 import { CONTROL_CLASS, Field, type FieldProps } from '#src/components/ui/field.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { nominalText, readNominal } from '../nominal.ts';
+import { isGrams, nominalEntry, nominalText, readNominal } from '../nominal.ts';
 
 interface NominalFieldProps
   extends
@@ -21,19 +21,17 @@ export function NominalField(props: NominalFieldProps) {
   const [typed, setTyped] = useState(() => shown(value ?? '', decimalMark));
   const [isLeft, setLeft] = useState(true);
   const read = readNominal(typed, decimalMark);
-  const held = read.kind === 'nominal' ? read.grams : typed.trim();
+  const held = nominalEntry(typed, decimalMark);
   // What is held outside wins after a reset, a restored draft or a pasted row.
   const [heldOutside, setHeldOutside] = useState(value ?? '');
   if ((value ?? '') !== heldOutside) {
     setHeldOutside(value ?? '');
     if ((value ?? '') !== held) setTyped(shown(value ?? '', decimalMark));
   }
-  const problem = read.kind === 'unreadable' && isLeft ? read.why : undefined;
+  // While it is being typed an entry is not wrong yet, unless the form already said so.
+  const problem = read.kind === 'unreadable' && (isLeft || error) ? read.why : error;
   return (
-    <Field
-      {...{ label, hint, isOptional, isLabelHidden, className }}
-      error={problem ?? (isLeft ? error : undefined)}
-    >
+    <Field {...{ label, hint, isOptional, isLabelHidden, className }} error={problem}>
       {(wiring) => (
         <input
           autoComplete="off"
@@ -50,8 +48,7 @@ export function NominalField(props: NominalFieldProps) {
           }}
           onChange={(event) => {
             setTyped(event.target.value);
-            const next = readNominal(event.target.value, decimalMark);
-            onChange(next.kind === 'nominal' ? next.grams : event.target.value.trim());
+            onChange(nominalEntry(event.target.value, decimalMark));
           }}
           className={`${CONTROL_CLASS} text-right font-mono`}
         />
@@ -62,5 +59,5 @@ export function NominalField(props: NominalFieldProps) {
 
 /** Grams from outside as one says them; anything else is an entry still being written. */
 function shown(value: string, decimalMark: '.' | ','): string {
-  return /^\d+(\.\d+)?$/.test(value) && Number(value) > 0 ? nominalText(value, decimalMark) : value;
+  return isGrams(value) ? nominalText(value, decimalMark) : value;
 }

@@ -1,7 +1,7 @@
 import type { FieldErrors } from 'react-hook-form';
 import { Notice } from '#src/components/ui/notice.tsx';
-import { nominalText } from '../nominal.ts';
-import { MEMBER_COLUMNS, type SetEntriesInput } from '../set-entries.ts';
+import { isGrams, nominalText } from '../nominal.ts';
+import { cellProblem, MEMBER_COLUMNS, type SetEntriesInput } from '../set-entries.ts';
 
 interface RowProblemsProps {
   errors: FieldErrors<SetEntriesInput>;
@@ -14,7 +14,9 @@ export function RowProblems({ errors, members }: RowProblemsProps) {
     const row = errors.members?.[index];
     return MEMBER_COLUMNS.flatMap((column) => {
       const message = row?.[column]?.message;
-      return message ? [{ index, column, message, nominal: member.nominal }] : [];
+      return message
+        ? [{ index, column, message: cellProblem(member, column, message), nominal: member.nominal }]
+        : [];
     });
   });
   const whole = errors.members?.root?.message ?? errors.members?.message;
@@ -26,8 +28,7 @@ export function RowProblems({ errors, members }: RowProblemsProps) {
         {problems.map(({ index, column, message, nominal }) => (
           <li key={`${index} ${column}`}>
             Row {index + 1}
-            {/^\d+(\.\d+)?$/.test(nominal) && Number(nominal) > 0 && `, ${nominalText(nominal)}`}, {column}:{' '}
-            {message}
+            {isGrams(nominal) && `, ${nominalText(nominal)}`}, {column}: {message}
           </li>
         ))}
       </ul>

@@ -7,7 +7,7 @@ import type { Choice } from '#src/components/ui/select-field.tsx';
 import { showFieldProblems, useZodForm } from '#src/lib/form.ts';
 import { useLocalDraft } from '#src/lib/local-draft.ts';
 import { useRegisterSet } from '../api.ts';
-import { isHeavy } from '../nominal.ts';
+import { isGrams, isHeavy } from '../nominal.ts';
 import { seriesMembers, type SeriesMember } from '../series.ts';
 import { isSameMembers, proposedName, SetEntries, toSetBody, type MemberEntry } from '../set-entries.ts';
 import { HeavyCaution } from './heavy-caution.tsx';
@@ -84,7 +84,14 @@ export function SetForm({ accountId, laboratories, onRegistered }: SetFormProps)
 
   const count = members.length === 1 ? '1 weight' : `${members.length} weights`;
   return (
-    <form noValidate onSubmit={(event) => void submit(event)} className="flex flex-col gap-6">
+    <form
+      noValidate
+      onSubmit={(event) => {
+        register.reset();
+        void submit(event);
+      }}
+      className="flex flex-col gap-6"
+    >
       <RestoredNotice restoredFrom={draft.restoredFrom} onDiscard={draft.discard} />
       <SetIdentityFields
         form={form}
@@ -96,7 +103,7 @@ export function SetForm({ accountId, laboratories, onRegistered }: SetFormProps)
         <Stack>
           <SeriesChooser isEdited={!isSameMembers(members, filled)} onFill={fill} />
           {isSubmitted && <RowProblems errors={errors} members={members} />}
-          {members.some(({ nominal }) => Number(nominal) > 0 && isHeavy(nominal)) && <HeavyCaution />}
+          {members.some(({ nominal }) => isGrams(nominal) && isHeavy(nominal)) && <HeavyCaution />}
           <MemberTable form={form} />
         </Stack>
       </Section>

@@ -30,16 +30,12 @@ export function ShortFacts({ sheet }: { sheet: StandardResponse }) {
                 kind="deviation"
                 shownIn="auto"
               />
-              , {value.quantity}
+              {value.expandedU === null ? ', U not stated' : value.k !== null && ` (k = ${value.k})`},{' '}
+              {value.quantity}
             </>
           ) : (
             'no value in force'
           ),
-        ],
-        [
-          'U',
-          value &&
-            (value.expandedU === null ? 'not stated on the certificate' : `k = ${value.k ?? 'not stated'}`),
         ],
         ['Calibrated', value && dateAsKnown(value)],
         ['Certificate', value && <span className="font-mono text-sm">{value.certificateNo}</span>],

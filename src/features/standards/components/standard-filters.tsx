@@ -6,6 +6,7 @@ import { Button } from '#src/components/ui/button.tsx';
 import { SelectField, type Choice } from '#src/components/ui/select-field.tsx';
 import { TextField } from '#src/components/ui/text-field.tsx';
 import { isNarrowed, type Filters, type ListSearch } from '../list-search.ts';
+import { isGrams } from '../nominal.ts';
 import { KIND_WORDS } from '../words.ts';
 import { NominalField } from './nominal-field.tsx';
 
@@ -38,11 +39,7 @@ export function StandardFilters({ search, laboratories, onChange }: StandardFilt
     onChange({ [name]: event.target.value || undefined });
   return (
     <Toolbar label="Narrow the list">
-      <SearchBox
-        key={search.q === undefined ? 'empty' : 'asked'}
-        q={search.q ?? ''}
-        onSearch={(q) => onChange({ q })}
-      />
+      <SearchBox q={search.q ?? ''} onSearch={(q) => onChange({ q })} />
       {laboratories.length > 1 && (
         <SelectField
           label="Laboratory"
@@ -94,6 +91,12 @@ export function StandardFilters({ search, laboratories, onChange }: StandardFilt
 
 function SearchBox({ q, onSearch }: { q: string; onSearch: (q: string | undefined) => void }) {
   const [typed, setTyped] = useState(q);
+  // The address answers a moment later: only a question that was not ours replaces what is being typed.
+  const [asked, setAsked] = useState({ address: q, sent: q });
+  if (asked.address !== q) {
+    setAsked({ ...asked, address: q });
+    if (q !== asked.sent) setTyped(q);
+  }
   const latest = useRef(onSearch);
   useEffect(() => {
     latest.current = onSearch;
@@ -101,7 +104,10 @@ function SearchBox({ q, onSearch }: { q: string; onSearch: (q: string | undefine
   useEffect(() => {
     const text = typed.trim();
     if (text === q) return undefined;
-    const timer = setTimeout(() => latest.current(text === '' ? undefined : text), PAUSE_MS);
+    const timer = setTimeout(() => {
+      setAsked((before) => ({ ...before, sent: text }));
+      latest.current(text === '' ? undefined : text);
+    }, PAUSE_MS);
     return () => clearTimeout(timer);
   }, [typed, q]);
   return (
@@ -127,7 +133,7 @@ function RangeEnd({ label, value, onRead }: RangeEndProps) {
   const [held, setHeld] = useState({ asked: value, text: value ?? '' });
   if (held.asked !== value) setHeld({ asked: value, text: value ?? '' });
   const ask = () => {
-    const grams = /^\d+(\.\d+)?$/.test(held.text) ? held.text : undefined;
+    const grams = isGrams(held.text) ? held.text : undefined;
     if (grams !== value && (grams !== undefined || held.text === '')) onRead(grams);
   };
   return (

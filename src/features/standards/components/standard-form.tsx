@@ -1,6 +1,6 @@
 import { useState } from 'react';
 import { Controller, type SubmitHandler } from 'react-hook-form';
-import { Nominal as NominalSchema, WeightClass } from '#shared/contracts/common.ts';
+import { WeightClass } from '#shared/contracts/common.ts';
 import { RegisterStandardBody, Shape } from '#shared/contracts/standards.ts';
 import { Stack, Toolbar, TwoColumns } from '#src/components/layout/columns.tsx';
 import { Section } from '#src/components/layout/page.tsx';
@@ -12,7 +12,7 @@ import { errorAt, showFieldProblems, useZodForm } from '#src/lib/form.ts';
 import { useLocalDraft } from '#src/lib/local-draft.ts';
 import { useRegisterStandard } from '../api.ts';
 import { emptyAsNull, monthsEntry, monthsError } from '../entries.ts';
-import { isHeavy, nominalMarking, usualShape } from '../nominal.ts';
+import { isGrams, isHeavy, nominalMarking, usualShape } from '../nominal.ts';
 import { DensityFields } from './density-fields.tsx';
 import { ErrorLimitNote } from './error-limit-note.tsx';
 import { HeavyCaution } from './heavy-caution.tsx';
@@ -62,8 +62,8 @@ export function StandardForm({ accountId, laboratories, onRegistered }: Standard
   function changeNominal(next: string): void {
     const { nominal: before, marking, shape } = form.getValues();
     form.setValue('nominal', next, { shouldDirty: true, shouldValidate: form.formState.isSubmitted });
-    if (!NominalSchema.safeParse(next).success) return;
-    const wasProposed = NominalSchema.safeParse(before).success ? before : null;
+    if (!isGrams(next)) return;
+    const wasProposed = isGrams(before) ? before : null;
     if (marking === '' || (wasProposed && marking === nominalMarking(wasProposed))) {
       form.setValue('marking', nominalMarking(next));
     }
@@ -84,7 +84,13 @@ export function StandardForm({ accountId, laboratories, onRegistered }: Standard
     );
 
   return (
-    <form noValidate onSubmit={(event) => void form.handleSubmit(send)(event)}>
+    <form
+      noValidate
+      onSubmit={(event) => {
+        register.reset();
+        void form.handleSubmit(send)(event);
+      }}
+    >
       <TwoColumns
         sideWidth="narrow"
         side={
@@ -92,7 +98,7 @@ export function StandardForm({ accountId, laboratories, onRegistered }: Standard
             <Section title="Error limit">
               <ErrorLimitNote weightClass={weightClass} nominal={nominal} />
             </Section>
-            {Number(nominal) > 0 && isHeavy(nominal) && <HeavyCaution />}
+            {isGrams(nominal) && isHeavy(nominal) && <HeavyCaution />}
           </>
         }
       >

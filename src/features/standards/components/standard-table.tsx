@@ -56,7 +56,12 @@ export function StandardTable({ rows, search, onSort, hrefOf }: StandardTablePro
             <Cell className="whitespace-nowrap">
               {row.class ?? (row.kind === 'weight' ? '' : KIND_WORDS[row.kind])}
             </Cell>
-            <Cell className="max-w-56 truncate">{row.holder.name}</Cell>
+            <Cell className="max-w-56 truncate">
+              <span className="max-[76rem]:hidden">{row.holder.name}</span>
+              <span className="font-mono text-sm min-[76rem]:hidden" title={row.holder.name}>
+                {row.holder.code}
+              </span>
+            </Cell>
             <Cell isMono>{row.set?.registryNo}</Cell>
             <ValueCells value={row.value} />
             <Cell>{row.dueOn && <DueMark dueOn={row.dueOn} isShort />}</Cell>

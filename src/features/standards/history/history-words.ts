@@ -2,7 +2,7 @@ import type { QuantityKind } from '#shared/contracts/common.ts';
 import type { StandardResponse } from '#shared/contracts/standards.ts';
 import { quantityLine, quantityText } from '#src/lib/quantity-text.ts';
 import { dateAsKnown } from './days.ts';
-import type { PlotValue } from './plot-geometry.ts';
+import { isSpanSeen, type PlotPoint, type PlotValue } from './plot-geometry.ts';
 
 /** The drawing in sentences, for those who hear it; numbers one by one are in the table. */
 export function historySummary(
@@ -28,14 +28,16 @@ export function historySummary(
 }
 
 /** What the signs of the drawing mean; only those that occur. */
-export function historyLegend(values: readonly PlotValue[]): string {
+export function historyLegend(points: readonly PlotPoint[]): string {
+  const values = points.map((point) => point.value);
   const factors = [...new Set(values.flatMap((value) => (value.k === null ? [] : [value.k])))];
   const has = (test: (value: PlotValue) => boolean): boolean => values.some(test);
   const parts = [
     factors.length > 0 && `Bars: U at k = ${factors.join(' or ')}, as stated`,
     has((value) => value.expandedU === null) && 'no bar: U not stated on the certificate',
-    has((value) => value.datePrecision !== 'day') &&
-      'a horizontal stroke spans the days in which it was determined',
+    points.some(isSpanSeen)
+      ? 'a horizontal stroke spans the days in which it was determined'
+      : has((value) => value.datePrecision !== 'day') && 'some dates are known to the month or the year only',
     has((value) => value.state === 'superseded') && 'dashed: superseded',
     has((value) => value.state === 'withdrawn') && 'cross: withdrawn',
     values.filter((value) => value.state === 'in force').length > 1 && 'the line joins values of one epoch',

@@ -36,6 +36,11 @@ export interface PlotPoint {
   isBeyond: boolean;
 }
 
+/** Whether the stretch of days reaches beyond the ring of the point, so that there is something to see. */
+export function isSpanSeen({ whisker }: PlotPoint): boolean {
+  return whisker !== null && whisker.right - whisker.left > 12;
+}
+
 export interface PlotFrame {
   left: number;
   right: number;
