@@ -29,6 +29,7 @@ const problem = (status: number, members: Record<string, unknown> = {}) =>
 
 let content: DraftContent;
 let states: SaveState['kind'][];
+const onSaved = vi.fn<(draft: DraftResponse) => void>();
 const send = vi.fn<(sent: DraftContent) => Promise<DraftResponse>>();
 
 const start = () =>
@@ -36,6 +37,7 @@ const start = () =>
     read: () => content,
     saved: contentOf(emptyDraft()),
     send,
+    onSaved,
     onState: (state) => states.push(state.kind),
   });
 const type = (certificateNo: string): void => {
@@ -46,6 +48,7 @@ beforeEach(() => {
   vi.useFakeTimers();
   content = contentOf(emptyDraft());
   states = [];
+  onSaved.mockReset();
   send.mockReset().mockImplementation(async (sent) => answer(sent));
 });
 afterEach(() => vi.useRealTimers());
@@ -125,6 +128,15 @@ describe('makeAutosave', () => {
     autosave.changed();
     await vi.advanceTimersByTimeAsync(800);
     expect(send).toHaveBeenCalledTimes(2);
+  });
+
+  it('takes a conflict with its own lost answer for what it is', async () => {
+    const autosave = start();
+    type('A');
+    send.mockRejectedValueOnce(problem(409, { current: answer(content, 3) }));
+    expect(await autosave.now()).toBe(true);
+    expect(states.at(-1)).toBe('saved');
+    expect(onSaved.mock.calls.map(([draft]) => draft.version)).toEqual([3]);
   });
 
   it('says what was refused and waits for the next keystroke', async () => {

@@ -22,6 +22,8 @@ interface Autosaved {
   saved: DraftContent | null;
   /** Sends the entries. @throws ApiProblem */
   send: (content: DraftContent) => Promise<DraftResponse>;
+  /** The server has these entries, as this version. */
+  onSaved: (draft: DraftResponse) => void;
   onState: (state: SaveState) => void;
 }
 
@@ -39,13 +41,15 @@ export interface Autosave {
   acknowledged: () => DraftContent | null;
   /** The draft is left: what is not saved is sent, without waiting. */
   stop: () => void;
+  /** Another saver takes over: nothing more is sent from here. */
+  drop: () => void;
 }
 
 /**
  * One request at a time, 800 ms after the last keystroke. Without an answer it tries again every few seconds; a
  * conflict stops it until a person has chosen; any other refusal waits for the next keystroke.
  */
-export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosave {
+export function makeAutosave({ read, saved, send, onSaved, onState }: Autosaved): Autosave {
   let acknowledged = saved;
   let timer: ReturnType<typeof setTimeout> | undefined;
   let running: Promise<void> | null = null;
@@ -71,7 +75,7 @@ export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosav
   async function attempt(): Promise<void> {
     const content = structuredClone(read());
     try {
-      await send(content);
+      await sendOnce(content);
       acknowledged = content;
       atRest = { kind: 'saved', at: Date.now() };
       onState(atRest);
@@ -81,6 +85,17 @@ export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosav
       isHalted = state.kind === 'conflict';
       onState(state);
       if (state.kind === 'unreachable') later(AGAIN_MS);
+    }
+  }
+
+  /** A save whose answer was lost is met again as a conflict with itself. */
+  async function sendOnce(content: DraftContent): Promise<void> {
+    try {
+      onSaved(await send(content));
+    } catch (error) {
+      const state = stateAfter(error);
+      if (state.kind !== 'conflict' || !isSameContent(state.theirs.content, content)) throw error;
+      onSaved(state.theirs);
     }
   }
 
@@ -112,6 +127,7 @@ export function makeAutosave({ read, saved, send, onState }: Autosaved): Autosav
       void run();
       clearTimeout(timer);
     },
+    drop: () => clearTimeout(timer),
   };
 }
 

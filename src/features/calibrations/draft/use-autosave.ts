@@ -69,24 +69,23 @@ export function useAutosave(
       read,
       // A sheet that was only looked at makes no draft.
       saved: latest.current.draft?.content ?? contentOf(form.formState.defaultValues as DraftValues),
-      send: async (content) => {
+      send: (content) =>
+        id === null
+          ? createDraft(latest.current.laboratoryId, content)
+          : saveDraft(id, form.getValues('version'), content),
+      onSaved: (answer) => {
         const isNew = id === null;
-        const answer =
-          id === null
-            ? await createDraft(latest.current.laboratoryId, content)
-            : await saveDraft(id, form.getValues('version'), content);
         id = answer.id;
         form.setValue('version', answer.version);
         queries.setQueryData(draftQuery(answer.id).queryKey, answer);
         void queries.invalidateQueries({ queryKey: ['calibrations', 'list'] });
         void queries.invalidateQueries({ queryKey: ['desk'] });
-        if (isNew) {
-          clearNew.current = latest.current.clear;
-          if (!isLeft) latest.current.onCreated(answer);
-        }
         isBaseKnown.current = true;
         if (isLeft) latest.current.clear();
-        return answer;
+        else if (isNew) {
+          clearNew.current = latest.current.clear;
+          latest.current.onCreated(answer);
+        }
       },
       onState: (next) => {
         setState(next);
@@ -105,7 +104,8 @@ export function useAutosave(
       isLeft = true;
       clearTimeout(forgetting);
       unsubscribe();
-      autosave.stop();
+      // In development React takes every effect back once and does it again: then nobody has left.
+      queueMicrotask(() => (saver.current === autosave ? autosave.stop() : autosave.drop()));
     };
   }, [form, queries]);
 
@@ -123,7 +123,9 @@ export function useAutosave(
 
   const lostSince = useLostSince();
   useEffect(() => {
-    if (lostSince === null) void saver.current?.now();
+    if (lostSince === null) return undefined;
+    // Runs as the connection comes back.
+    return () => void saver.current?.now();
   }, [lostSince]);
 
   const settle = useCallback(
