@@ -27,7 +27,13 @@ export async function judgeUnissued(context: Context, values: readonly StoredVal
     programmeEndedAfterUse: 'said',
   };
   const parts = await partsFor(context, store, question, values);
-  const facts = new Map([...parts.byId.values()].map((value) => [value.id, valueFacts(value, parts)]));
+  // What lies above an earlier value is there for its variance only; its weights were not asked for.
+  const judged = new Set(values.flatMap((value) => [value.id, ...value.parents.map((link) => link.parentId)]));
+  const facts = new Map(
+    [...parts.byId.values()]
+      .filter(({ id }) => judged.has(id))
+      .map((value) => [value.id, valueFacts(value, parts)]),
+  );
   return values.map((value) => {
     const own = facts.get(value.id)!;
     const links = value.parents
