@@ -28,7 +28,9 @@ export async function judgeUnissued(context: Context, values: readonly StoredVal
   };
   const parts = await partsFor(context, store, question, values);
   // What lies above an earlier value is there for its variance only; its weights were not asked for.
-  const judged = new Set(values.flatMap((value) => [value.id, ...value.parents.map((link) => link.parentId)]));
+  const judged = new Set(
+    values.flatMap((value) => [value.id, ...value.parents.map((link) => link.parentId)]),
+  );
   const facts = new Map(
     [...parts.byId.values()]
       .filter(({ id }) => judged.has(id))
