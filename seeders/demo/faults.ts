@@ -18,10 +18,12 @@ interface Spoilt {
 const SLIPS = [
   { kind: 'unit slip, too large', times: 3, make: unitTooLarge },
   { kind: 'sign flip', times: 5, make: signFlip },
-  { kind: 'duplicates exchanged', times: 3, make: exchange },
   { kind: 'U below what is carried', times: 4, make: uBelowCarried },
-  { kind: 'unit slip, too small', times: 2, make: unitTooSmall },
+  { kind: 'unit slip, too small', times: 3, make: unitTooSmall },
 ] as const;
+
+/** Pairs that are far enough apart are rare: an exchange has the first try. */
+const EXCHANGES = 3;
 
 /** How likely a certificate that could hold a slip holds one. */
 const CHANCE = 0.5;
@@ -31,8 +33,9 @@ export function withSlips(world: World, job: ReadyJob, entries: Entry[]): Spoilt
   const draws = drawsFor(`${job.series.id} ${job.round} slip`);
   if (!job.series.isLeaf || job.round < 2 || draws.uniform() > CHANCE) return { entries, slips: [] };
   const first = Math.floor(SLIPS.length * draws.uniform());
-  for (let at = 0; at < SLIPS.length; at += 1) {
-    const { kind, times, make } = SLIPS[(first + at) % SLIPS.length]!;
+  const turns = SLIPS.map((_, at) => SLIPS[(first + at) % SLIPS.length]!);
+  const tries = [{ kind: 'duplicates exchanged', times: EXCHANGES, make: exchange }, ...turns];
+  for (const { kind, times, make } of tries) {
     const made = new Set(world.catalogue.filter((entry) => entry.kind === kind).map((e) => e.certificateNo));
     if (made.size >= times) continue;
     const spoilt = make(job, entries, kind);

@@ -84,7 +84,7 @@ const OF_LINES: (Likeness & { applies(line: Line): boolean })[] = [
       value.expandedU < uses[0]!.value.expandedU,
   },
   {
-    kind: 'found beyond its limit, then adjusted',
+    kind: 'found knocked or near its limit, then adjusted',
     rule: 'B-19',
     verdict: 'today',
     applies: ({ value }) => value.stage === 'as found',
@@ -96,7 +96,7 @@ const OF_LINES: (Likeness & { applies(line: Line): boolean })[] = [
     applies: ({ value }) => value.stage === 'as left',
   },
   {
-    kind: 'right value after a slip, confirmed when it was questioned',
+    kind: 'right value after a slip of the unit, confirmed when it was questioned',
     rule: 'B-18',
     verdict: 'today',
     applies: ({ entry }) => entry.isUnitConfirmed === true,

@@ -6,7 +6,8 @@ import { perform, ready, type Job } from './perform.ts';
 import type { DemoPlan } from './plan.ts';
 import { LAST_DAY, type Series } from './series.ts';
 import { addDamage, addSpecials } from './specials.ts';
-import { addStories, type Happening } from './stories.ts';
+import { addStories } from './stories.ts';
+import type { Happening } from './story-cast.ts';
 import { emptyWorld, type World } from './world.ts';
 
 /**

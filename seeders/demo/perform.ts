@@ -57,15 +57,10 @@ export function ready(job: Job): ReadyJob | null {
   };
 }
 
-function usesFor(
-  { series, round, begin }: Job,
-  weight: Weight,
-  quantity: Quantity,
-  end: string,
-): Use[] | null {
+function usesFor({ series, begin }: Job, weight: Weight, quantity: Quantity, end: string): Use[] | null {
   if (series.how === 'recognized certificate') return [];
   const found = series.wishesFor(weight, begin).map((wish): Use | null => {
-    const value = series.picks ? series.picks(round, wish) : answer(wish, quantity, begin, end);
+    const value = series.picks ? series.picks() : answer(wish, quantity, begin, end);
     return value && { value, sensitivity: wish.sensitivity, usedAs: wish.usedAs ?? 'certificate' };
   });
   return found.includes(null) ? null : (found as Use[]);
@@ -148,13 +143,20 @@ function isToBeQuestion({ series, round }: Job, weight: Weight): boolean {
 }
 
 function entryOf(series: Series, result: Result): Entry {
-  // After a slip the right value is questioned at issue; the person looks and confirms it.
-  const isUnitConfirmed = result.task.weight.values.at(-1)?.isFaulty ?? false;
+  const isUnitConfirmed = followsUnitSlip(result);
   if (series.how !== 'recognized certificate') {
     return { result, hasBudget: series.hasBudget, isUnitConfirmed };
   }
   const scale = result.task.leaning.sources.length > 0 ? CONSENSUS : REALIZED;
   return { result, hasBudget: false, rootKind: 'recognized certificate', scale };
+}
+
+/** After a slip of the unit the right value is questioned at issue; the person looks and confirms it. */
+function followsUnitSlip({ task, printed }: Result): boolean {
+  const last = task.weight.values.at(-1);
+  if (!last?.isFaulty) return false;
+  const ratio = last.expandedU / printed.expandedU;
+  return ratio > 100 || ratio < 0.01;
 }
 
 /** Weights from F2 down are adjusted when they near their limit or were knocked, unless somebody still works with them. */

@@ -37,8 +37,8 @@ export interface Series {
   workDays: number;
   /** Days from the end of the work to the certificate. */
   issueDays: number;
-  /** Picks the reference value of a round itself, rightly or wrongly; null: it is not there yet. */
-  picks?(round: number, wish: Wish): DemoValue | null;
+  /** Picks the reference value itself, rightly or wrongly. */
+  picks?(): DemoValue;
   /** Says of each round what was special. */
   after?(round: number, values: readonly DemoValue[]): void;
   /** Keeps its days, weekends or not: a story hangs on them. */

@@ -2,16 +2,14 @@ import { placeOf } from './catalogue.ts';
 import { daysAfter } from './days.ts';
 import { between, drawsFor } from './draws.ts';
 import { INSTITUTE } from './laboratories.ts';
-import type { Pools } from './network.ts';
+import { BOTH, CONVENTIONAL, SUBSTITUTION, type Pools } from './pools.ts';
 import { addSet, addWeight, densityOf } from './pieces.ts';
 import { fromPool, roundsFrom, type Series } from './series.ts';
 import { SUSPENSION } from './capabilities.ts';
 import { classLimitOf, type Weight } from './weight.ts';
 import type { World } from './world.ts';
 
-const CONVENTIONAL = ['conventional mass'] as const;
-const BOTH = ['conventional mass', 'mass'] as const;
-const COMPARISON = { method: 'Substitution weighing', how: 'comparison', workDays: 1, issueDays: 2 } as const;
+const COMPARISON = { method: SUBSTITUTION, how: 'comparison', workDays: 1, issueDays: 2 } as const;
 const RECEIVED = { ...COMPARISON, isAccredited: true, hasBudget: false } as const;
 const IN_HOUSE = { ...COMPARISON, isAccredited: false, hasBudget: true, quantities: CONVENTIONAL } as const;
 
