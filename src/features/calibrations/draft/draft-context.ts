@@ -6,6 +6,8 @@ interface DraftInUse {
   draft: DraftResponse | null;
   /** Whose draft it is or becomes. */
   laboratoryId: string;
+  /** This person reads it and does not write it. */
+  isLocked: boolean;
   /** The open points that still speak of what stands in the form. */
   points: readonly OpenPoint[];
   /** Opens the line of a field where needed and moves the focus to the field. */

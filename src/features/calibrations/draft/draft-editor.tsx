@@ -64,7 +64,7 @@ export function DraftEditor(props: DraftEditorProps) {
   const title = values.certificateNo.trim() || 'New calibration, from a certificate';
   return (
     <KnownContext value={known}>
-      <DraftContext value={{ draft, laboratoryId: laboratory.id, points, goTo }}>
+      <DraftContext value={{ draft, laboratoryId: laboratory.id, isLocked, points, goTo }}>
         <FormProvider {...form}>
           <Page
             title={title}
@@ -93,21 +93,21 @@ export function DraftEditor(props: DraftEditorProps) {
                 reached the server. It is here again.
               </Notice>
             )}
-            <fieldset disabled={isLocked} className="contents">
-              <TwoColumns
-                side={
-                  <DraftAside
-                    values={values}
-                    issuerName={issuer?.name ?? ''}
-                    {...{ openPoints, onIssued, onDiscarded }}
-                    saveNow={saving.saveNow}
-                  />
-                }
-              >
+            <TwoColumns
+              side={
+                <DraftAside
+                  values={values}
+                  issuerName={issuer?.name ?? ''}
+                  {...{ openPoints, onIssued, onDiscarded }}
+                  saveNow={saving.saveNow}
+                />
+              }
+            >
+              <fieldset disabled={isLocked} className="contents">
                 <CertificateFields laboratoryId={laboratory.id} />
-                <ResultsTable open={open} onOpen={setOpen} />
-              </TwoColumns>
-            </fieldset>
+              </fieldset>
+              <ResultsTable open={open} onOpen={setOpen} />
+            </TwoColumns>
           </Page>
         </FormProvider>
       </DraftContext>

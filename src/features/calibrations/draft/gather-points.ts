@@ -31,8 +31,8 @@ export function gatherPoints(
   });
 }
 
-/** Numbers of lines as people write them: "1 to 5, 7". */
-function runsOf(lines: readonly number[]): string {
+/** Lines, counted from 0, as people write them: "1 to 5, 7". */
+export function runsOf(lines: readonly number[]): string {
   const runs: [number, number][] = [];
   for (const line of lines.toSorted((a, b) => a - b)) {
     const last = runs.at(-1);

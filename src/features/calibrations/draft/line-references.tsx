@@ -104,7 +104,7 @@ function ReferenceFacts({ uid }: { uid: string }) {
     <p>
       <span className="font-mono text-sm">{registryNo}</span>, {marking}{' '}
       <StateMark state={stateOfValue(state)}>{state}</StateMark>
-      <span className="block text-ink-2">
+      <span className="block text-ink-2 [&>*]:whitespace-nowrap">
         <Quantity
           value={deviation}
           kind="deviation"
@@ -112,7 +112,7 @@ function ReferenceFacts({ uid }: { uid: string }) {
           expandedUncertainty={expandedU}
           coverageFactor={k}
         />
-        , {certificateNo}, {performedEnd}
+        , <span>{certificateNo}</span>, <span>{performedEnd}</span>
       </span>
     </p>
   );

@@ -4,6 +4,7 @@ import { Button } from '#src/components/ui/button.tsx';
 import { DecimalField } from '#src/components/ui/decimal-field.tsx';
 import { Cell, Row } from '#src/components/ui/table.tsx';
 import { TextField } from '#src/components/ui/text-field.tsx';
+import { useDraft } from './draft-context.ts';
 import type { DraftValues } from './draft-values.ts';
 import { useKnown, type KnownStandard } from './known.ts';
 import { LineDetail } from './line-detail.tsx';
@@ -25,6 +26,7 @@ export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }
   const { control, register, setValue } = useFormContext<DraftValues>();
   const line = useWatch({ control, name: `lines.${at}` });
   const errorOf = usePointAt();
+  const { isLocked } = useDraft();
   const detailId = useId();
   // A line just removed is drawn once more before its row goes.
   if (!line) return null;
@@ -67,6 +69,7 @@ export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }
                   isLabelHidden
                   maxLength={300}
                   unit={line.unit}
+                  readOnly={isLocked}
                   error={errorOf(`${path}.value`)}
                   {...field}
                 />
@@ -88,6 +91,7 @@ export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }
                     isLabelHidden
                     maxLength={300}
                     unit={line.uUnit}
+                    readOnly={isLocked}
                     error={errorOf(`${path}.expandedU`)}
                     {...field}
                   />
@@ -106,6 +110,7 @@ export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }
                 inputMode="decimal"
                 autoComplete="off"
                 maxLength={20}
+                readOnly={isLocked}
                 error={errorOf(`${path}.k`)}
                 {...register(`${path}.k`)}
               />
@@ -133,7 +138,9 @@ export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }
         <tr id={detailId}>
           <td colSpan={6} className="border-b border-rule bg-raised px-3 py-3">
             <div className="max-rail:sticky max-rail:left-3 max-rail:w-[calc(100vw-4rem)]">
-              <LineDetail at={at} line={line} standard={standard} onRemove={onRemove} />
+              <fieldset disabled={isLocked}>
+                <LineDetail at={at} line={line} standard={standard} onRemove={onRemove} />
+              </fieldset>
             </div>
           </td>
         </tr>

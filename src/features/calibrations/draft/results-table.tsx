@@ -5,6 +5,7 @@ import { Button } from '#src/components/ui/button.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { Head, Table } from '#src/components/ui/table.tsx';
 import { Section } from '#src/components/layout/page.tsx';
+import { useDraft } from './draft-context.ts';
 import { newLine, type DraftValues } from './draft-values.ts';
 import { focusField } from './focus-field.ts';
 import { ForAllLines } from './for-all-lines.tsx';
@@ -27,6 +28,7 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
   const [pasted, setPasted] = useState<string | null>(null);
   const [names, setNames] = useState<ReadonlyMap<string, string>>(new Map());
   const known = useKnown();
+  const { isLocked } = useDraft();
 
   function add(weights: readonly StandardRow[]): void {
     const chosen = new Set(lines.map(({ standardId }) => standardId));
@@ -43,9 +45,11 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
     <Section
       title="Results"
       actions={
-        <Button weight="text" onClick={() => setPasted('')}>
-          Paste from a spreadsheet
-        </Button>
+        !isLocked && (
+          <Button weight="text" onClick={() => setPasted('')}>
+            Paste from a spreadsheet
+          </Button>
+        )
       }
     >
       {/* A table on the clipboard is never meant for one field. */}
@@ -54,12 +58,12 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
         onKeyDown={moveInColumn}
         onPaste={(event) => {
           const text = event.clipboardData.getData('text/plain');
-          if (!/\t|\n./.test(text)) return;
+          if (isLocked || !/\t|\n./.test(text)) return;
           event.preventDefault();
           setPasted(text);
         }}
       >
-        {fields.length > 0 && <ForAllLines lines={lines} />}
+        {fields.length > 0 && !isLocked && <ForAllLines lines={lines} />}
         {fields.length > 0 ? (
           <Table caption="Results">
             <thead>
@@ -94,9 +98,11 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
             of results from a spreadsheet.
           </EmptyState>
         )}
-        <div data-field="lines">
-          <StandardBox label="Add a weight or a set" hasSets onChosen={add} className="max-w-120" />
-        </div>
+        {!isLocked && (
+          <div data-field="lines">
+            <StandardBox label="Add a weight or a set" hasSets onChosen={add} className="max-w-120" />
+          </div>
+        )}
       </div>
       {pasted !== null && (
         <PasteDialog
