@@ -1,3 +1,4 @@
+import { formatDecimal } from '#src/lib/format-decimal.ts';
 import type { State } from '#src/lib/states.ts';
 import { dayNumber } from './history/days.ts';
 
@@ -21,7 +22,7 @@ export function dueState(
 export function dueDistance(dueOn: string, today: string = todayText()): string {
   const days = daysUntil(dueOn, today);
   if (days === 0) return 'today';
-  const count = Math.abs(days) === 1 ? '1 day' : `${Math.abs(days)} days`;
+  const count = Math.abs(days) === 1 ? '1 day' : `${formatDecimal(String(Math.abs(days)))} days`;
   return days > 0 ? `in ${count}` : `${count} ago`;
 }
 

@@ -28,8 +28,8 @@ export function ErrorLimitNote({ weightClass, nominal }: ErrorLimitNoteProps) {
   return (
     <p>
       <span className="font-serif">±</span>
-      <Quantity value={limit} shownIn="mg" /> for conventional mass at {nominalText(nominal)}, class{' '}
-      {weightClass}; U of its calibration at most a third of it.
+      <Quantity value={limit} shownIn={limitUnit(limit)} /> for conventional mass at {nominalText(nominal)},
+      class {weightClass}; U of its calibration at most a third of it.
       <span className="block text-sm text-ink-3">OIML R 111-1:2004, 5.1, 5.2 and Table 1</span>
     </p>
   );
@@ -40,4 +40,9 @@ export function errorLimit(weightClass: WeightClass | null, nominal: string): st
   if (weightClass === null || !isGrams(nominal)) return null;
   const limit = maximumPermissibleError(weightClass, new Decimal(nominal));
   return limit && decimalText(limit.div(1000));
+}
+
+/** Limits are read in mg, as the table prints them, and in g once they are that large. */
+export function limitUnit(limit: string): 'mg' | 'g' {
+  return Number(limit) < 1 ? 'mg' : 'g';
 }

@@ -64,7 +64,9 @@ export function HistorySection({ sheet, quantity, onQuantity, firstStep }: Histo
             />
           </div>
           <p className="pb-2 text-sm text-ink-3">{historyLegend(geometry.points)}</p>
-          <HistoryTable sheet={{ ...sheet, history: values }} />
+          <div className="overflow-x-auto">
+            <HistoryTable sheet={{ ...sheet, history: values }} />
+          </div>
         </>
       ) : (
         <EmptyState action={firstStep}>

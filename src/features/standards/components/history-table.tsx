@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import type { StandardResponse } from '#shared/contracts/standards.ts';
 import { paths } from '#src/app/paths.ts';
+import { DateText } from '#src/components/ui/date-text.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
@@ -37,7 +38,9 @@ export function HistoryTable({ sheet }: { sheet: StandardResponse }) {
               {value.certificateNo}
               {value.revisionN > 1 && `, rev. ${value.revisionN}`}
             </Cell>
-            <Cell className="max-w-56 truncate">{value.issuer.name}</Cell>
+            <Cell className="max-w-44 truncate" title={value.issuer.name}>
+              {value.issuer.name}
+            </Cell>
             <Cell align="right">
               <Quantity
                 value={value.deviation}
@@ -55,9 +58,14 @@ export function HistoryTable({ sheet }: { sheet: StandardResponse }) {
               <Change value={value} isFirstAfter={value.epochN > 1 && firstOfEpoch.has(value.uid)} />
             </Cell>
             <Cell>
-              <StateMark state={stateOfValue(value.state)} className="whitespace-nowrap">
+              <StateMark state={stateOfValue(value.state)}>
                 {value.state}
-                {value.state !== 'in force' && value.stateSince && ` ${value.stateSince}`}
+                {value.state !== 'in force' && value.stateSince && (
+                  <>
+                    {' '}
+                    <DateText value={value.stateSince} />
+                  </>
+                )}
               </StateMark>
             </Cell>
           </Row>

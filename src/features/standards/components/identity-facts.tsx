@@ -4,6 +4,7 @@ import { paths } from '#src/app/paths.ts';
 import { Facts } from '#src/components/layout/facts.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { PROPERTIES } from '../words.ts';
+import { limitUnit } from './error-limit-note.tsx';
 import { PropertyValue } from './property-value.tsx';
 
 /** What the standard is, apart from its values. */
@@ -43,7 +44,7 @@ function ErrorLimit({ limit }: { limit: string }) {
   return (
     <>
       <span className="font-serif">±</span>
-      <Quantity value={limit} shownIn="mg" />; a third of it for U
+      <Quantity value={limit} shownIn={limitUnit(limit)} />; a third of it for U
     </>
   );
 }

@@ -9,7 +9,7 @@ import { errorAt } from '#src/lib/form.ts';
 import { emptyAsNull } from '../entries.ts';
 import { memberNo } from '../series.ts';
 import { cellProblem, type MemberColumn } from '../set-entries.ts';
-import { errorLimit } from './error-limit-note.tsx';
+import { errorLimit, limitUnit } from './error-limit-note.tsx';
 import type { SetForm } from './member-table.tsx';
 import { NominalField } from './nominal-field.tsx';
 
@@ -90,7 +90,7 @@ export function MemberRow({ form, index, onRemove }: MemberRowProps) {
         {limit ? (
           <>
             <span className="font-serif">±</span>
-            <Quantity value={limit} shownIn="mg" />
+            <Quantity value={limit} shownIn={limitUnit(limit)} />
           </>
         ) : (
           ''

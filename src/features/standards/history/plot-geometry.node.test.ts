@@ -151,6 +151,23 @@ describe('plotGeometry', () => {
     expect(draw(HISTORY).valueTicks.map((tick) => tick.label)).toContain('0');
   });
 
+  it('gives all marks of the axis the same decimals', () => {
+    const far = [
+      value('2016-01-01', '-0.094244', { expandedU: '0.000029' }),
+      value('2018-01-01', '-0.094229', { expandedU: '0.000037' }),
+    ];
+    const labels = draw(far, { errorLimit: null }).valueTicks.map((tick) => tick.label);
+    expect(new Set(labels.map((label) => label.split('.')[1]?.length))).toEqual(new Set([2]));
+  });
+
+  it('cuts no label off at the end of the time axis', () => {
+    for (let width = 320; width < 900; width += 7) {
+      for (const { at, label } of draw(HISTORY, { width }).timeTicks) {
+        expect(at + label.length * 3.4).toBeLessThanOrEqual(width);
+      }
+    }
+  });
+
   it('puts every point inside the frame at every width', () => {
     for (const width of [300, 500, 1000]) {
       const { points, frame } = draw(HISTORY, { width });

@@ -66,6 +66,9 @@ const AXIS_ROOM = 58;
 const FOOT_ROOM = 24;
 const HEAD_ROOM = 16;
 const LABEL_ROW = 17;
+const RIGHT_ROOM = 10;
+/** Half of a label such as 2030-01: it stands below the end of the axis and must not be cut. */
+const HALF_YEAR_LABEL = 26;
 
 /** Where everything of a history stands. Pure; null when there is nothing to draw. */
 export function plotGeometry(input: PlotInput): PlotGeometry | null {
@@ -76,7 +79,7 @@ export function plotGeometry(input: PlotInput): PlotGeometry | null {
   const band = chooseBand(input.errorLimit, input.weightClass, domain, inUnit);
   const values = band ? widened(domain, band.halfWidth) : domain;
   const days = dayDomain(input);
-  const right = input.width - 10;
+  const right = input.width - RIGHT_ROOM;
   const x = scale(days, AXIS_ROOM, right);
   const marks = placeLabels(marksOf(input, x), { left: AXIS_ROOM, right });
   const top = HEAD_ROOM + LABEL_ROW * Math.max(0, ...marks.map((mark) => mark.row + 1));
@@ -86,14 +89,10 @@ export function plotGeometry(input: PlotInput): PlotGeometry | null {
   return {
     unit,
     frame,
-    valueTicks: valueTicks(values.low, values.high, (frame.bottom - frame.top) / 46).map((at) => ({
-      at: y(at),
-      label: new Decimal(at).toFixed(),
-    })),
-    timeTicks: timeTicks(days.low, days.high, (right - AXIS_ROOM) / 84).map((tick) => ({
-      ...tick,
-      at: x(tick.at),
-    })),
+    valueTicks: labelled(valueTicks(values.low, values.high, (frame.bottom - frame.top) / 46), y),
+    timeTicks: timeTicks(days.low, days.high, (right - AXIS_ROOM) / 84)
+      .map((tick) => ({ ...tick, at: x(tick.at) }))
+      .filter((tick) => tick.at <= right - HALF_YEAR_LABEL + RIGHT_ROOM),
     points,
     lines: linesOf(points),
     band: band && { ...band, top: y(band.halfWidth), bottom: y(-band.halfWidth) },
@@ -175,6 +174,15 @@ function marksOf({ epochs, dueOn }: PlotInput, x: (day: number) => number): Mark
     });
   if (!dueOn) return interventions;
   return [...interventions, { kind: 'due', day: dueOn, x: x(dayNumber(dueOn)), texts: [`due ${dueOn}`] }];
+}
+
+/** All marks of an axis with as many decimals as the finest needs. */
+function labelled(marks: readonly number[], y: (value: number) => number): Tick[] {
+  const decimals = Math.max(0, ...marks.map((mark) => new Decimal(mark).decimalPlaces()));
+  return marks.map((mark) => ({
+    at: y(mark),
+    label: mark === 0 ? '0' : new Decimal(mark).toFixed(decimals),
+  }));
 }
 
 function widened(domain: Domain, halfWidth: number): Domain {
