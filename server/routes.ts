@@ -1,5 +1,6 @@
 import { deskRoutes } from '#server/modules/desk/index.ts';
 import { chainRoutes } from '#server/modules/chains/index.ts';
+import { downstreamRoutes } from '#server/modules/downstream/index.ts';
 import { documentRoutes } from '#server/modules/documents/index.ts';
 import { healthRoutes } from '#server/modules/health/index.ts';
 import { identityRoutes } from '#server/modules/identity/index.ts';
@@ -17,5 +18,6 @@ export const routes: readonly Route[] = [
   ...standardRoutes,
   ...calibrationRoutes,
   ...chainRoutes,
+  ...downstreamRoutes,
   ...deskRoutes,
 ];

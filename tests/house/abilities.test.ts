@@ -84,6 +84,7 @@ const MAY: Record<string, Who[]> = {
   'draft:send': [...WRITERS, 'signatory'],
   'reference:find': WORKERS,
   'chain:read': [],
+  'downstream:read': [],
 };
 
 describe('the matrix of abilities', () => {

@@ -138,6 +138,46 @@ export const WALK: Readonly<Record<string, WalkRow>> = {
     ok: 200,
     otherwise: 404,
   },
+  'GET /api/chains/:valueUid/distance': {
+    request: ({ valueUid }) => ({ path: `/api/chains/${valueUid}/distance` }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'POST /api/chains/together': {
+    request: ({ valueUid, referenceUid }) => ({
+      path: '/api/chains/together',
+      body: { valueUids: [valueUid, referenceUid] },
+    }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  // downstream
+  'GET /api/downstream/:uid': {
+    request: ({ valueUid }) => ({ path: `/api/downstream/${valueUid}` }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'GET /api/exposure/:standardId': {
+    request: ({ standardId }) => ({
+      path: `/api/exposure/${standardId}`,
+      query: { lastGood: '2024-06-10', firstBad: '2024-12-10' },
+    }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'POST /api/what-if': {
+    request: ({ valueUid }) => ({
+      path: '/api/what-if',
+      body: { changes: [{ kind: 'shift', valueUid, shift: '0.0001' }] },
+    }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
   // standards
   'GET /api/standards': {
     request: fixed('/api/standards', { q: 'kg' }),

@@ -1,0 +1,139 @@
+import type { Sequelize } from 'sequelize';
+import { readRow, readRows } from '#server/db/read.ts';
+import type { GraphEndRow, GraphLinkRow, GraphValueRow } from './graph-arrays.ts';
+
+/** Masses as doubles: deviations of up to 1 000 g keep all their twelve decimals in one. */
+const VALUE_COLUMNS = `
+  v.id, v.standard_id AS standardId, v.holder_id AS holderId, v.issuer_id AS issuerId, v.nominal, v.class, v.quantity,
+  r.decision_rule AS decisionRule, TO_DAYS(v.performed_end) AS performedDay, TO_DAYS(v.effective_from) AS effectiveDay,
+  TO_DAYS(v.recorded_at) AS recordedDay, CAST(v.deviation AS DOUBLE) AS deviation,
+  CAST(v.expanded_u AS DOUBLE) AS expandedU, v.u,
+  CASE v.reported_unit WHEN 'kg' THEN 3 WHEN 'g' THEN 0 WHEN 'mg' THEN -3 ELSE -6 END - CAST(v.reported_u_decimals AS SIGNED) AS uPlace`;
+const VALUES = `SELECT ${VALUE_COLUMNS} FROM assigned_value v JOIN revision r ON r.id = v.revision_id`;
+
+const LINK_COLUMNS = `
+  l.child_id AS childId, l.parent_id AS parentId, l.sensitivity, TO_DAYS(l.used_begin) AS usedBeginDay,
+  TO_DAYS(l.used_end) AS usedEndDay, l.used_as = 'class limit' AS isClassLimit,
+  CAST(l.used_expanded_u AS DOUBLE) AS usedExpandedU`;
+
+const ENDS = `
+  SELECT x.value_id AS valueId, TO_DAYS(x.effective_on) AS effectiveDay, TO_DAYS(x.recorded_at) AS recordedDay
+  FROM value_end x`;
+
+/** Values and all that leans on them through references; UNION removes the repeats that shared references bring. */
+const BELOW = `
+  WITH RECURSIVE below (id) AS (
+    SELECT CAST(v.id AS UNSIGNED) FROM assigned_value v WHERE v.id IN (:ids)
+    UNION
+    SELECT l.child_id FROM below b JOIN value_link l ON l.parent_id = b.id AND l.role = 'reference')`;
+
+/** Room in memory for one statement: at the default a million descendants go through the disk. */
+const WIDE = 'SET STATEMENT tmp_memory_table_size = 268435456, max_heap_table_size = 268435456 FOR';
+
+/** The newest act, and how many values and links there are to make room for. */
+export async function registerSize(
+  database: Sequelize,
+): Promise<{ seq: number; values: number; links: number; lastId: number }> {
+  const row = await readRow<{ seq: number | null; values: number; links: number; lastId: number | null }>(
+    database,
+    `SELECT (SELECT MAX(seq) FROM act) AS seq, (SELECT COUNT(*) FROM assigned_value) AS \`values\`,
+       (SELECT COUNT(*) FROM value_link) AS links, (SELECT MAX(id) FROM assigned_value) AS lastId`,
+  );
+  return { seq: row?.seq ?? 0, values: row?.values ?? 0, links: row?.links ?? 0, lastId: row?.lastId ?? 0 };
+}
+
+/** The newest act. */
+export async function newestAct(database: Sequelize): Promise<number> {
+  const row = await readRow<{ seq: number | null }>(database, 'SELECT MAX(seq) AS seq FROM act');
+  return row?.seq ?? 0;
+}
+
+/** A page of all values recorded by act `seq`, by id. */
+export async function valuePage(
+  database: Sequelize,
+  seq: number,
+  afterId: number,
+  limit: number,
+): Promise<GraphValueRow[]> {
+  return readRows<GraphValueRow>(
+    database,
+    `${VALUES} WHERE v.id > :afterId AND v.act_seq <= :seq ORDER BY v.id LIMIT ${limit}`,
+    { afterId, seq },
+  );
+}
+
+/** The links of children with ids in a range, both ends in. */
+export async function linkPage(database: Sequelize, from: number, to: number): Promise<GraphLinkRow[]> {
+  return readRows<GraphLinkRow>(
+    database,
+    `SELECT ${LINK_COLUMNS} FROM value_link l WHERE l.child_id BETWEEN :from AND :to AND l.role = 'reference'`,
+    { from, to },
+  );
+}
+
+/** What acts after `after` and up to `seq` recorded. A value's links are recorded in the same act. */
+export async function recordedSince(
+  database: Sequelize,
+  after: number,
+  seq: number,
+): Promise<{ values: GraphValueRow[]; links: GraphLinkRow[]; ends: GraphEndRow[] }> {
+  const range = { after, seq };
+  const [values, links, ends] = await Promise.all([
+    readRows<GraphValueRow>(
+      database,
+      `${VALUES} WHERE v.act_seq > :after AND v.act_seq <= :seq ORDER BY v.id`,
+      range,
+    ),
+    readRows<GraphLinkRow>(
+      database,
+      `SELECT ${LINK_COLUMNS} FROM assigned_value v JOIN value_link l ON l.child_id = v.id AND l.role = 'reference'
+       WHERE v.act_seq > :after AND v.act_seq <= :seq`,
+      range,
+    ),
+    endsSince(database, after, seq),
+  ]);
+  return { values, links, ends };
+}
+
+/** Ends that acts after `after` and up to `seq` recorded. */
+export async function endsSince(database: Sequelize, after: number, seq: number): Promise<GraphEndRow[]> {
+  return readRows(database, `${ENDS} WHERE x.act_seq > :after AND x.act_seq <= :seq`, { after, seq });
+}
+
+/** For standards, one value of each that was recorded by act `seq`. */
+export async function anyValueOf(
+  database: Sequelize,
+  standardIds: readonly string[],
+  seq: number,
+): Promise<{ standardId: string; valueId: number }[]> {
+  if (standardIds.length === 0) return [];
+  return readRows(
+    database,
+    `SELECT standard_id AS standardId, MIN(id) AS valueId FROM assigned_value
+     WHERE standard_id IN (:standardIds) AND act_seq <= :seq GROUP BY standard_id`,
+    { standardIds, seq },
+  );
+}
+
+/** Values and everything below them, read from the database alone. */
+export async function partBelow(
+  database: Sequelize,
+  ids: readonly number[],
+): Promise<{ values: GraphValueRow[]; links: GraphLinkRow[]; ends: GraphEndRow[] }> {
+  if (ids.length === 0) return { values: [], links: [], ends: [] };
+  const [values, links, ends] = await Promise.all([
+    readRows<GraphValueRow>(
+      database,
+      `${WIDE} ${BELOW} SELECT ${VALUE_COLUMNS} FROM below b JOIN assigned_value v ON v.id = b.id
+       JOIN revision r ON r.id = v.revision_id`,
+      { ids },
+    ),
+    readRows<GraphLinkRow>(
+      database,
+      `${WIDE} ${BELOW} SELECT ${LINK_COLUMNS} FROM below b JOIN value_link l ON l.child_id = b.id AND l.role = 'reference'`,
+      { ids },
+    ),
+    readRows<GraphEndRow>(database, `${WIDE} ${BELOW} ${ENDS} JOIN below b ON b.id = x.value_id`, { ids }),
+  ]);
+  return { values, links, ends };
+}
