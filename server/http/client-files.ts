@@ -18,7 +18,8 @@ export function builtClient(folder: string): RequestHandler[] {
     (request, response, next) => {
       if (request.method !== 'GET' || !request.accepts('html')) return next();
       response.setHeader('Cache-Control', 'no-cache');
-      response.sendFile(page);
+      // With a root, a hidden folder above the project does not count as a hidden file.
+      response.sendFile('index.html', { root: path.dirname(page) });
     },
   ];
 }
