@@ -15,3 +15,10 @@ export const STATE_SINCE = `
   ELSE (SELECT e.effective_on FROM value_end e
     WHERE e.value_id = v.id AND e.effective_on <= :day AND e.recorded_at <= :knownAt
     ORDER BY e.kind = 'withdrawn' DESC, e.effective_on LIMIT 1) END`;
+
+/** The reason given for `STATE_SINCE`; null where it is null. */
+export const STATE_REASON = `
+  CASE WHEN v.effective_from > :day THEN NULL
+  ELSE (SELECT e.reason FROM value_end e
+    WHERE e.value_id = v.id AND e.effective_on <= :day AND e.recorded_at <= :knownAt
+    ORDER BY e.kind = 'withdrawn' DESC, e.effective_on LIMIT 1) END`;

@@ -374,6 +374,8 @@ export const CalibrationResponse = z.object({
       underAccreditation: z.boolean(),
       state: ValueState,
       stateSince: Day.nullable(),
+      /** Why it is superseded or withdrawn. */
+      stateReason: z.string().nullable(),
       references: z.array(
         z.object({
           valueUid: Id,

@@ -3,7 +3,7 @@ import type { z } from 'zod';
 import type { Sequelize } from 'sequelize';
 import { knownAt } from '#server/db/in-force.ts';
 import { readRow, readRows } from '#server/db/read.ts';
-import { STATE_ON_DAY, STATE_SINCE } from '#server/db/value-state.ts';
+import { STATE_ON_DAY, STATE_REASON, STATE_SINCE } from '#server/db/value-state.ts';
 import { notFound } from '#server/http/app-error.ts';
 import { CALIBRATION_ROW, type CalibrationRecord } from './calibration-list.queries.ts';
 
@@ -70,7 +70,8 @@ const LINES = `
     v.reported_unit AS reportedUnit, v.reported_decimals AS reportedDecimals,
     v.reported_u_decimals AS reportedUDecimals, v.expanded_u AS expandedU, v.k,
     v.coverage, v.class, v.under_accreditation AS underAccreditation,
-    ${STATE_ON_DAY} AS state, ${STATE_SINCE} AS stateSince
+    ${STATE_ON_DAY} AS state, ${STATE_SINCE} AS stateSince,
+    ${STATE_REASON} AS stateReason
   FROM assigned_value v
   JOIN standard s ON s.id = v.standard_id
   JOIN laboratory h ON h.id = v.holder_id

@@ -93,6 +93,7 @@ function presentLine(
     underAccreditation: Boolean(line.underAccreditation),
     state: line.state,
     stateSince: line.stateSince,
+    stateReason: line.stateReason,
     references: references
       .filter((reference) => reference.childId === line.id)
       .map(({ childId: _, ...reference }) => reference),

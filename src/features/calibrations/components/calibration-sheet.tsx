@@ -37,12 +37,13 @@ export function CalibrationSheet(props: CalibrationSheetProps) {
       value={<StateMark state={stateOfValue(calibration.state)}>{calibration.state}</StateMark>}
       valueNote={calibration.reason ?? undefined}
     >
-      {isJustIssued && (
+      {isJustIssued && calibration.state === 'in force' && (
         <Notice role="status" tone="sound" title="Issued">
           {lines.length === 1 ? 'The value is' : `All ${lines.length} values are`} in the register and can be
           leaned on.
         </Notice>
       )}
+      <EndReason lines={lines} />
       <div className="grid grid-cols-1 items-start gap-x-10 gap-y-1 md:grid-cols-2 columns:grid-cols-[auto_auto_1fr]">
         <Facts
           facts={[
@@ -75,6 +76,30 @@ export function CalibrationSheet(props: CalibrationSheetProps) {
       {revisions.length > 1 && <Revisions revisions={revisions} shown={calibration.revisionId} />}
     </Page>
   );
+}
+
+/** Why the values no longer stand, once for each reason given. */
+function EndReason({ lines }: { lines: CalibrationResponse['lines'] }) {
+  const reasons = new Map(lines.flatMap((line) => (line.stateReason ? [[line.stateReason, line]] : [])));
+  return [...reasons].map(([reason, { state, stateSince }]) => (
+    <Notice
+      key={reason}
+      tone={state === 'withdrawn' ? 'broken' : 'caution'}
+      title={
+        <>
+          {state === 'withdrawn' ? 'Withdrawn' : 'Superseded'}
+          {stateSince && (
+            <>
+              {' '}
+              from <DateText value={stateSince} />
+            </>
+          )}
+        </>
+      }
+    >
+      {reason}
+    </Notice>
+  ));
 }
 
 function Withdraw({ calibration, lines, abilities }: CalibrationResponse) {

@@ -97,21 +97,34 @@ function FixedLines({ draft }: { draft: DraftResponse }) {
       <tbody>
         {draft.content.lines.map((line) => {
           const standard = known.standards.get(line.standardId ?? '');
-          const { deviation, expandedU, k } = readLine(line, standard);
+          const { deviation, written, expandedU, writtenU, k } = readLine(line, standard);
           const references = line.references.map(
             ({ valueUid }) => known.references.get(valueUid)?.registryNo ?? '?',
           );
           return (
             <Row key={line.key}>
               <Cell isHeading>
-                <span className="font-mono text-sm whitespace-nowrap">{standard?.registryNo ?? '?'}</span>{' '}
-                <span className="whitespace-nowrap">{standard?.marking}</span>
+                <span className="font-mono text-sm whitespace-nowrap">{standard?.registryNo ?? '?'}</span>
+                <span className="ml-2 whitespace-nowrap">{standard?.marking}</span>
               </Cell>
               <Cell align="right">
-                {deviation ? <Quantity value={deviation} kind="deviation" shownIn={line.unit} /> : '?'}
+                {deviation ? (
+                  <Quantity
+                    value={deviation}
+                    kind="deviation"
+                    shownIn={written.unit}
+                    decimals={written.decimals}
+                  />
+                ) : (
+                  '?'
+                )}
               </Cell>
               <Cell align="right">
-                {expandedU ? <Quantity value={expandedU} shownIn={line.uUnit} /> : 'not stated'}
+                {expandedU ? (
+                  <Quantity value={expandedU} shownIn={writtenU.unit} decimals={writtenU.decimals} />
+                ) : (
+                  'not stated'
+                )}
               </Cell>
               <Cell align="right">{k ?? ''}</Cell>
               <Cell isMono>{references.join(', ') || 'none'}</Cell>

@@ -21,13 +21,21 @@ describe('readLine', () => {
     expect(asWhole.deviation).toBe('0.00041');
   });
 
+  it('keeps unit and decimals as written, zeros included', () => {
+    const { written, writtenU } = readLine(line({ value: '+0.410', expandedU: '50 µg' }), KILOGRAM);
+    expect([written, writtenU]).toEqual([
+      { unit: 'mg', decimals: 3 },
+      { unit: 'ug', decimals: 0 },
+    ]);
+  });
+
   it('lets a unit written beside the number win', () => {
     expect(readLine(line({ value: '-31 µg', unit: 'mg' }), KILOGRAM).deviation).toBe('-0.000031');
   });
 
   it('says nothing about what cannot be read, and invents no U', () => {
     const reading = readLine(line({ value: '0.1 2', expandedU: 'small' }), KILOGRAM);
-    expect(reading).toEqual({ deviation: null, expandedU: null, k: '2', change: null, third: null });
+    expect(reading).toMatchObject({ deviation: null, expandedU: null, k: '2', change: null, third: null });
     expect(readLine(line({ value: '1', expandedU: '1', uNotStated: true }), KILOGRAM).expandedU).toBeNull();
   });
 

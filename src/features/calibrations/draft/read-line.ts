@@ -7,10 +7,20 @@ import { parseQuantity } from '#shared/engine/quantity/parse-quantity.ts';
 import { convertUnit } from '#shared/engine/quantity/units.ts';
 import type { KnownStandard } from './known.ts';
 
+/** How a number is written: in which unit, with how many decimals. */
+interface Written {
+  unit: MassUnit;
+  decimals: number;
+}
+
 /** What a line says by its entries alone, all in grams as text; null where it says nothing that can be read. */
 export interface LineReading {
   deviation: string | null;
+  /** Unit and decimals in which the value is written. */
+  written: Written;
   expandedU: string | null;
+  /** The same of U. */
+  writtenU: Written;
   k: string | null;
   /** Deviation minus the weight's last value, and its size in the U of the change where both are stated. */
   change: { deviation: string; ratio: number | null } | null;
@@ -20,14 +30,18 @@ export interface LineReading {
 
 /** Reads a line as the server will: the same numbers, so that the preview and the register agree. */
 export function readLine(line: DraftLine, standard: KnownStandard | undefined): LineReading {
-  const value = readMass(line.value, line.unit);
+  const read = readWritten(line.value, line.unit);
+  const value = read?.grams ?? null;
   const isDeviation = line.valueIs === 'deviation';
   const nominal = standard ? new Decimal(standard.nominal) : null;
   const deviation = value === null ? null : isDeviation ? value : nominal && value.minus(nominal);
-  const expandedU = line.uNotStated ? null : readMass(line.expandedU, line.uUnit);
+  const readU = line.uNotStated ? null : readWritten(line.expandedU, line.uUnit);
+  const expandedU = readU?.grams ?? null;
   const k = line.uNotStated ? null : readFactor(line.k);
   return {
     deviation: deviation && decimalText(deviation),
+    written: { unit: read?.unit ?? line.unit, decimals: read?.decimals ?? 0 },
+    writtenU: { unit: readU?.unit ?? line.uUnit, decimals: readU?.decimals ?? 0 },
     expandedU: expandedU?.gt(0) ? decimalText(expandedU) : null,
     k: k && decimalText(k),
     change: deviation && standard ? changeSince(deviation, expandedU, standard) : null,
@@ -37,11 +51,17 @@ export function readLine(line: DraftLine, standard: KnownStandard | undefined): 
 
 /** A mass as typed, in grams; a unit written beside the number wins over the one chosen. */
 export function readMass(text: string, unit: MassUnit): Decimal | null {
+  return readWritten(text, unit)?.grams ?? null;
+}
+
+function readWritten(text: string, unit: MassUnit): (Written & { grams: Decimal }) | null {
   if (text.trim() === '') return null;
   try {
     const options = { field: 'value', units: ['kg', 'g', 'mg', 'ug'] as const, defaultUnit: unit };
     const parsed = parseQuantity(text, options);
-    return parsed.uncertainty ? null : convertUnit(parsed.value, parsed.unit ?? unit, 'g');
+    if (parsed.uncertainty) return null;
+    const own = (parsed.unit ?? unit) as MassUnit;
+    return { unit: own, decimals: parsed.decimals, grams: convertUnit(parsed.value, own, 'g') };
   } catch (error) {
     if (error instanceof EngineError) return null;
     throw error;

@@ -26,7 +26,7 @@ export function ResultsAside({ lines }: { lines: readonly DraftLine[] }) {
           <tbody>
             {lines.map((line, at) => {
               const standard = known.standards.get(line.standardId ?? '');
-              const { deviation, expandedU, change, third } = readLine(line, standard);
+              const { deviation, written, expandedU, writtenU, change, third } = readLine(line, standard);
               return (
                 <Row key={line.key}>
                   <Cell isHeading className="whitespace-nowrap">
@@ -34,14 +34,19 @@ export function ResultsAside({ lines }: { lines: readonly DraftLine[] }) {
                   </Cell>
                   <Cell align="right">
                     {deviation ? (
-                      <Quantity value={deviation} kind="deviation" shownIn={line.unit} />
+                      <Quantity
+                        value={deviation}
+                        kind="deviation"
+                        shownIn={written.unit}
+                        decimals={written.decimals}
+                      />
                     ) : (
                       <Nothing />
                     )}
                   </Cell>
                   <Cell align="right">
                     {expandedU ? (
-                      <Quantity value={expandedU} shownIn={line.uUnit} />
+                      <Quantity value={expandedU} shownIn={writtenU.unit} decimals={writtenU.decimals} />
                     ) : line.uNotStated ? (
                       'not stated'
                     ) : (
