@@ -1,9 +1,9 @@
 import type { ClassVerdict, WhatIfInput } from '#shared/contracts/downstream.ts';
 import type { SignedInContext } from '#server/http/route.ts';
-import { below, type Below } from './below.ts';
+import { below } from './below.ts';
 import { judgeClassOf } from './class-verdict.ts';
-import type { DryRun } from './dry-run.ts';
-import { effectsOf, type Effects, type GraphChange } from './effects.ts';
+import { consequenceOf, dryRun, type DryRun } from './dry-run.ts';
+import type { GraphChange } from './effects.ts';
 import type { GraphArrays } from './graph-arrays.ts';
 import { graphBelow } from './graph-memory.ts';
 import { groupKeyOf } from './groups.ts';
@@ -18,9 +18,8 @@ import {
   type RowDetails,
 } from './row-details.queries.ts';
 import { visibleRows } from './rows.ts';
-import { SIGHT, sightOf } from './sight.ts';
+import { SIGHT } from './sight.ts';
 import type { DownstreamSubject } from './downstream.policy.ts';
-import { wordOf } from './what-if-word.ts';
 import { WhatIfGroups, type WhatIfGroupSums } from './what-if-groups.ts';
 import { standingsOf } from './what-if-order.ts';
 
@@ -55,15 +54,12 @@ export async function whatIf(
   const graph = await graphBelow(context.database, ids.flat());
   const starts = new Set(ids.flat().map((id) => graph.nodeOf(id)));
   const found = below(graph, starts);
-  const effects = effectsOf(graph, found, changesOf(graph, ids, input));
+  const run = dryRun(graph, found, {
+    changes: changesOf(graph, ids, input),
+    user: context.user,
+    threshold: input.threshold,
+  });
   const days = askedDays(context, input);
-  const run: DryRun = {
-    graph,
-    found,
-    sight: sightOf(graph, found, context.user),
-    effects,
-    word: wordsOf(graph, found, effects, input.threshold),
-  };
   const named = namedNodes(graph, ids, input);
   const rows = visibleRows(graph, found, {
     sight: run.sight,
@@ -131,39 +127,6 @@ function namedNodes(graph: GraphArrays, ids: number[][], input: WhatIfInput): Se
   );
 }
 
-/** Places in `WORDS`, by place. */
-function wordsOf(graph: GraphArrays, found: Below, effects: Effects, threshold: number): Uint8Array {
-  const judge = judgeClassOf(graph);
-  return Uint8Array.from(found.nodes, (node, place) =>
-    wordOf(consequence(graph, node, place, effects, judge), threshold),
-  );
-}
-
-function consequence(
-  graph: GraphArrays,
-  node: number,
-  place: number,
-  effects: Effects,
-  judge: ReturnType<typeof judgeClassOf>,
-) {
-  const shift = effects.shift[place]!;
-  const added = effects.addedVariance[place]!;
-  const isUntouched = shift === 0 && added === 0;
-  const before = judge(node, 0, 0);
-  const u = graph.u[node]!;
-  const expandedU = graph.expandedU[node]!;
-  return {
-    shift,
-    expandedU,
-    expandedUAfter: added === 0 ? expandedU : (expandedU / u) * Math.sqrt(u * u + added),
-    isRaised: added > 0,
-    isLost: effects.isLost[place] === 1,
-    isBeyondLimit: effects.isBeyondLimit[place] === 1,
-    before,
-    after: isUntouched ? before : judge(node, shift, added),
-  };
-}
-
 /** Of two values of one weight the one with the stronger word stands for it, of equals the one that shifts more. */
 function isStronger({ effects, word, graph, found }: DryRun, a: number, b: number): boolean {
   const difference = word[a]! - word[b]!;
@@ -178,7 +141,7 @@ async function pageOf(
   places: readonly number[],
   input: WhatIfInput,
 ): Promise<WhatIf['page']> {
-  const { graph, found, effects, sight, word } = run;
+  const { graph, sight, word } = run;
   const group = input.group!;
   const page = pageAfter(standingsOf(run, places, input.sort), {
     order: `${input.sort} ${input.by} ${group}`,
@@ -191,7 +154,7 @@ async function pageOf(
   );
   const judge = judgeClassOf(graph);
   const rows = page.rows.map(({ place, id }): WhatIfFound => {
-    const { before, after, ...numbers } = consequence(graph, found.nodes[place]!, place, effects, judge);
+    const { before, after, ...numbers } = consequenceOf(run, place, judge);
     return {
       ...numbers,
       sight: sight[place]!,
