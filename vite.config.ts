@@ -1,10 +1,26 @@
 import tailwindcss from '@tailwindcss/vite';
 import react from '@vitejs/plugin-react';
 import { defineConfig } from 'vitest/config';
+import type { Plugin } from 'vite';
+
+/**
+ * dagre and graphlib look for `require` before they ask for their own parts, and for `window` otherwise. The bundle
+ * holds the parts, and a worker has neither: the question is answered here.
+ */
+function dagreInWorkers(): Plugin {
+  return {
+    name: 'dagre-in-workers',
+    transform: (code, id) =>
+      /node_modules\/(dagre|graphlib)\//.test(id) && code.includes('typeof require === "function"')
+        ? { code: code.replaceAll('typeof require === "function"', 'true'), map: null }
+        : null,
+  };
+}
 
 /** One file configures the client build, the server bundle (`vite build --ssr`) and the tests. */
 export default defineConfig(({ isSsrBuild }) => ({
   plugins: [react(), tailwindcss()],
+  worker: { format: 'es', plugins: () => [dagreInWorkers()] },
   // The server lists no data folders for the watcher: a database file that changes must not reload a page.
   server: { watch: { ignored: ['**/.data/**', '**/.data-test/**', '**/.cache/**'] } },
   build: {
