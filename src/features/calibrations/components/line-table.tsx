@@ -100,7 +100,7 @@ function References({ references }: { references: Line['references'] }) {
       <StateMark state={stateOfValue(state)} isMarkOnly={state === 'in force'}>
         {state}
       </StateMark>
-      <span className="text-ink-2 columns:ml-2 max-columns:block">
+      <span className="ml-2 text-ink-2">
         {certificateNo}
         {sensitivity !== 1 && `, × ${sensitivity}`}
       </span>

@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import { useQuery } from '@tanstack/react-query';
 import { Controller, useFormContext } from 'react-hook-form';
 import { Combobox, type ComboboxOption } from '#src/components/ui/combobox.tsx';
@@ -21,13 +22,13 @@ const DECISION_RULES = [
 ];
 
 /** The head of the certificate: who issued it, its number, its days, its method, and the file itself. */
-export function CertificateFields({ laboratoryId }: { laboratoryId: string }) {
+export const CertificateFields = memo(function CertificateFields({ laboratoryId }: { laboratoryId: string }) {
   const { register, control } = useFormContext<DraftValues>();
   const errorOf = usePointAt();
   return (
     <Section title="Certificate">
-      <div className="grid grid-cols-1 gap-x-5 gap-y-3 sm:grid-cols-2 xl:grid-cols-4">
-        <div data-field="issuerId" className="sm:col-span-2">
+      <div className="grid grid-cols-2 gap-x-5 gap-y-3 xl:grid-cols-4">
+        <div data-field="issuerId" className="col-span-2">
           <IssuerField error={errorOf('issuerId')} />
         </div>
         <div data-field="certificateNo">
@@ -69,7 +70,7 @@ export function CertificateFields({ laboratoryId }: { laboratoryId: string }) {
             )}
           />
         </div>
-        <div data-field="method" className="sm:col-span-2">
+        <div data-field="method" className="col-span-2">
           <TextField
             label="Method"
             placeholder="as the certificate names it"
@@ -78,13 +79,13 @@ export function CertificateFields({ laboratoryId }: { laboratoryId: string }) {
             {...register('method')}
           />
         </div>
-        <div data-field="documentId" className="sm:col-span-2">
+        <div data-field="documentId" className="col-span-2">
           <CertificateFile laboratoryId={laboratoryId} />
         </div>
       </div>
     </Section>
   );
-}
+});
 
 function IssuerField({ error }: { error: string | undefined }) {
   const { control } = useFormContext<DraftValues>();

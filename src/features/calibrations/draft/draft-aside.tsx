@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import type { IssuedResponse } from '#shared/contracts/calibrations.ts';
 import { ChecksAside } from './checks-aside.tsx';
 import { DraftActions } from './draft-actions.tsx';
@@ -10,23 +11,27 @@ import { Questions } from './questions.tsx';
 import { ReferencesAside } from './references-aside.tsx';
 import { ResultsAside } from './results-aside.tsx';
 
+/** Where the person goes once the draft has come to its end. */
+export interface DraftEnds {
+  onIssued: (issued: IssuedResponse) => void;
+  onDiscarded: () => void;
+}
+
 interface DraftAsideProps {
   values: DraftValues;
   issuerName: string;
   openPoints: number;
   saveNow: () => Promise<boolean>;
-  onIssued: (issued: IssuedResponse) => void;
-  onDiscarded: () => void;
+  ends: DraftEnds;
 }
 
 /** What the entries mean right now, and what can be done with them. */
-export function DraftAside({
+export const DraftAside = memo(function DraftAside({
   values,
   issuerName,
   openPoints,
   saveNow,
-  onIssued,
-  onDiscarded,
+  ends,
 }: DraftAsideProps) {
   const { draft, points } = useDraft();
   const known = useKnown();
@@ -48,7 +53,7 @@ export function DraftAside({
       )}
       <ReferencesAside lines={lines} />
       {draft && <ChecksAside checks={draft.checks} weightOf={weightOf} />}
-      {draft && <DraftActions {...{ draft, issuerName, openPoints, saveNow, onIssued, onDiscarded }} />}
+      {draft && <DraftActions {...{ draft, issuerName, openPoints, saveNow, ...ends }} />}
     </>
   );
-}
+});

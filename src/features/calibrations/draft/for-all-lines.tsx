@@ -1,4 +1,4 @@
-import { useFormContext } from 'react-hook-form';
+import { useFormContext, useWatch } from 'react-hook-form';
 import type { DraftLine } from '#shared/contracts/calibrations.ts';
 import { SelectField, type Choice } from '#src/components/ui/select-field.tsx';
 import { TextField } from '#src/components/ui/text-field.tsx';
@@ -8,8 +8,9 @@ import { CLASSES, QUANTITIES, UNIT_CHOICES, VALUE_FORMS } from './line-choices.t
 import { ReferenceBox } from './reference-box.tsx';
 
 /** What is usually the same on a whole certificate, said once for all its lines. */
-export function ForAllLines({ lines }: { lines: readonly DraftLine[] }) {
-  const { setValue, getValues } = useFormContext<DraftValues>();
+export function ForAllLines() {
+  const { control, setValue, getValues } = useFormContext<DraftValues>();
+  const lines = useWatch({ control, name: 'lines' });
   const change = (changes: Partial<DraftLine>): void =>
     setValue(
       'lines',

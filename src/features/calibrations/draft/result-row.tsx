@@ -1,4 +1,4 @@
-import { useId } from 'react';
+import { memo, useId } from 'react';
 import { Controller, useFormContext, useWatch } from 'react-hook-form';
 import { Button } from '#src/components/ui/button.tsx';
 import { DecimalField } from '#src/components/ui/decimal-field.tsx';
@@ -6,30 +6,34 @@ import { Cell, Row } from '#src/components/ui/table.tsx';
 import { TextField } from '#src/components/ui/text-field.tsx';
 import { useDraft } from './draft-context.ts';
 import type { DraftValues } from './draft-values.ts';
-import { useKnown, type KnownStandard } from './known.ts';
+import { useKnown } from './known.ts';
 import { LineDetail } from './line-detail.tsx';
 import { usePointAt } from './point-at.ts';
 import { StandardBox } from './standard-box.tsx';
 
 interface ResultRowProps {
   at: number;
-  standard: KnownStandard | undefined;
+  lineKey: string;
   /** What a pasted row called the weight, where none was found by that name. */
   pastedName: string | undefined;
   isOpen: boolean;
-  onOpen: (isOpen: boolean) => void;
-  onRemove: () => void;
+  /** Opens the line with this key; null closes. */
+  onOpen: (key: string | null) => void;
+  onRemove: (at: number) => void;
 }
 
 /** One result: weight, value, U, k and reference in a row, everything else of it below when opened. */
-export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }: ResultRowProps) {
+export const ResultRow = memo(function ResultRow(props: ResultRowProps) {
+  const { at, lineKey, pastedName, isOpen, onOpen, onRemove } = props;
   const { control, register, setValue } = useFormContext<DraftValues>();
   const line = useWatch({ control, name: `lines.${at}` });
   const errorOf = usePointAt();
   const { isLocked } = useDraft();
+  const known = useKnown();
   const detailId = useId();
   // A line just removed is drawn once more before its row goes.
   if (!line) return null;
+  const standard = known.standards.get(line.standardId ?? '');
   const path = `lines.${at}` as const;
   const name = standard ? `${standard.registryNo}, ${standard.marking}` : `line ${at + 1}`;
   return (
@@ -128,7 +132,7 @@ export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }
             aria-expanded={isOpen}
             aria-controls={detailId}
             aria-label={`${isOpen ? 'Less' : 'More'} of ${name}`}
-            onClick={() => onOpen(!isOpen)}
+            onClick={() => onOpen(isOpen ? null : lineKey)}
           >
             {isOpen ? 'Less' : 'More'}
           </Button>
@@ -139,7 +143,7 @@ export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }
           <td colSpan={6} className="border-b border-rule bg-raised px-3 py-3">
             <div className="max-rail:sticky max-rail:left-3 max-rail:w-[calc(100vw-4rem)]">
               <fieldset disabled={isLocked}>
-                <LineDetail at={at} line={line} standard={standard} onRemove={onRemove} />
+                <LineDetail at={at} line={line} standard={standard} onRemove={() => onRemove(at)} />
               </fieldset>
             </div>
           </td>
@@ -147,7 +151,7 @@ export function ResultRow({ at, standard, pastedName, isOpen, onOpen, onRemove }
       )}
     </>
   );
-}
+});
 
 function ReferenceSummary({ uids }: { uids: readonly string[] }) {
   const known = useKnown();

@@ -1,10 +1,12 @@
+import { memo } from 'react';
 import type { DraftLine } from '#shared/contracts/calibrations.ts';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
 import { Section } from '#src/components/layout/page.tsx';
-import { useKnown } from './known.ts';
+import { useKnown, type KnownStandard } from './known.ts';
 import { readLine } from './read-line.ts';
+import { isSameValue } from './same-value.ts';
 
 /** What the entries mean: each result as the register will hold it, worked out while one types. */
 export function ResultsAside({ lines }: { lines: readonly DraftLine[] }) {
@@ -24,59 +26,71 @@ export function ResultsAside({ lines }: { lines: readonly DraftLine[] }) {
             </tr>
           </thead>
           <tbody>
-            {lines.map((line, at) => {
-              const standard = known.standards.get(line.standardId ?? '');
-              const { deviation, written, expandedU, writtenU, change, third } = readLine(line, standard);
-              return (
-                <Row key={line.key}>
-                  <Cell isHeading className="whitespace-nowrap">
-                    {standard?.marking ?? `line ${at + 1}`}
-                  </Cell>
-                  <Cell align="right">
-                    {deviation ? (
-                      <Quantity
-                        value={deviation}
-                        kind="deviation"
-                        shownIn={written.unit}
-                        decimals={written.decimals}
-                      />
-                    ) : (
-                      <Nothing />
-                    )}
-                  </Cell>
-                  <Cell align="right">
-                    {expandedU ? (
-                      <Quantity value={expandedU} shownIn={writtenU.unit} decimals={writtenU.decimals} />
-                    ) : line.uNotStated ? (
-                      'not stated'
-                    ) : (
-                      <Nothing />
-                    )}
-                  </Cell>
-                  <Cell align="right">
-                    {change ? <Change {...change} expandedU={expandedU} /> : <Nothing />}
-                  </Cell>
-                  <Cell>
-                    {third ? (
-                      <StateMark state={third.isWithin ? 'sound' : 'caution'}>
-                        {third.class}
-                        <span className="sr-only">
-                          : U is {third.isWithin ? 'within' : 'above'} a third of the limit
-                        </span>
-                      </StateMark>
-                    ) : (
-                      <Nothing />
-                    )}
-                  </Cell>
-                </Row>
-              );
-            })}
+            {lines.map((line, at) => (
+              <ReadRow
+                key={line.key}
+                line={line}
+                at={at}
+                standard={known.standards.get(line.standardId ?? '')}
+              />
+            ))}
           </tbody>
         </Table>
       </div>
     </Section>
   );
 }
+
+interface ReadRowProps {
+  line: DraftLine;
+  at: number;
+  standard: KnownStandard | undefined;
+}
+
+/** Drawn again only when its own line says something else: a certificate may have 200. */
+const ReadRow = memo(
+  function ReadRow({ line, at, standard }: ReadRowProps) {
+    const { deviation, written, expandedU, writtenU, change, third } = readLine(line, standard);
+    return (
+      <Row>
+        <Cell isHeading className="whitespace-nowrap">
+          {standard?.marking ?? `line ${at + 1}`}
+        </Cell>
+        <Cell align="right">
+          {deviation ? (
+            <Quantity value={deviation} kind="deviation" shownIn={written.unit} decimals={written.decimals} />
+          ) : (
+            <Nothing />
+          )}
+        </Cell>
+        <Cell align="right">
+          {expandedU ? (
+            <Quantity value={expandedU} shownIn={writtenU.unit} decimals={writtenU.decimals} />
+          ) : line.uNotStated ? (
+            'not stated'
+          ) : (
+            <Nothing />
+          )}
+        </Cell>
+        <Cell align="right">{change ? <Change {...change} expandedU={expandedU} /> : <Nothing />}</Cell>
+        <Cell>
+          {third ? (
+            <StateMark state={third.isWithin ? 'sound' : 'caution'}>
+              {third.class}
+              <span className="sr-only">
+                : U is {third.isWithin ? 'within' : 'above'} a third of the limit
+              </span>
+            </StateMark>
+          ) : (
+            <Nothing />
+          )}
+        </Cell>
+      </Row>
+    );
+  },
+  (before, after) =>
+    before.at === after.at && before.standard === after.standard && isSameValue(before.line, after.line),
+);
 
 function Change({
   deviation,

@@ -1,5 +1,5 @@
-import { useState, type KeyboardEvent } from 'react';
-import { useFieldArray, useFormContext, useWatch } from 'react-hook-form';
+import { memo, useState, type KeyboardEvent } from 'react';
+import { useFieldArray, useFormContext } from 'react-hook-form';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
@@ -9,7 +9,6 @@ import { useDraft } from './draft-context.ts';
 import { newLine, type DraftValues } from './draft-values.ts';
 import { focusField } from './focus-field.ts';
 import { ForAllLines } from './for-all-lines.tsx';
-import { useKnown } from './known.ts';
 import { PasteDialog } from './paste-dialog.tsx';
 import { ResultRow } from './result-row.tsx';
 import { StandardBox } from './standard-box.tsx';
@@ -21,16 +20,15 @@ interface ResultsTableProps {
 }
 
 /** One line for each weight of the certificate: typed, added as a set, or pasted from a spreadsheet. */
-export function ResultsTable({ open, onOpen }: ResultsTableProps) {
-  const { control } = useFormContext<DraftValues>();
+export const ResultsTable = memo(function ResultsTable({ open, onOpen }: ResultsTableProps) {
+  const { control, getValues } = useFormContext<DraftValues>();
   const { fields, append, remove } = useFieldArray({ control, name: 'lines', keyName: 'rowId' });
-  const lines = useWatch({ control, name: 'lines' });
   const [pasted, setPasted] = useState<string | null>(null);
   const [names, setNames] = useState<ReadonlyMap<string, string>>(new Map());
-  const known = useKnown();
   const { isLocked } = useDraft();
 
   function add(weights: readonly StandardRow[]): void {
+    const lines = getValues('lines');
     const chosen = new Set(lines.map(({ standardId }) => standardId));
     const added = weights.filter(({ id }) => weights.length === 1 || !chosen.has(id));
     append(
@@ -63,7 +61,7 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
           setPasted(text);
         }}
       >
-        {fields.length > 0 && !isLocked && <ForAllLines lines={lines} />}
+        {fields.length > 0 && !isLocked && <ForAllLines />}
         {fields.length > 0 ? (
           <Table caption="Results">
             <thead>
@@ -83,11 +81,11 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
                 <ResultRow
                   key={rowId}
                   at={at}
-                  standard={known.standards.get(lines[at]?.standardId ?? '')}
                   pastedName={names.get(key)}
+                  lineKey={key}
                   isOpen={open === key}
-                  onOpen={(isOpen) => onOpen(isOpen ? key : null)}
-                  onRemove={() => remove(at)}
+                  onOpen={onOpen}
+                  onRemove={remove}
                 />
               ))}
             </tbody>
@@ -113,7 +111,7 @@ export function ResultsTable({ open, onOpen }: ResultsTableProps) {
       )}
     </Section>
   );
-}
+});
 
 /** Enter and the arrow keys go to the same field of the next or the last line, as in a spreadsheet. */
 function moveInColumn(event: KeyboardEvent<HTMLElement>): void {

@@ -88,7 +88,8 @@ export function useAutosave(
         }
       },
       onState: (next) => {
-        setState(next);
+        // Every keystroke says "typing"; the screen needs to hear it once.
+        setState((before) => (before.kind === 'typing' && next.kind === 'typing' ? before : next));
         forgetLater();
       },
     });
