@@ -1,4 +1,5 @@
 import { keepPreviousData, useInfiniteQuery, useQuery } from '@tanstack/react-query';
+import { useLayoutEffect, useRef } from 'react';
 import { useSearchParams, type LoaderFunctionArgs, type ShouldRevalidateFunctionArgs } from 'react-router';
 import type { StandardResponse } from '#shared/contracts/standards.ts';
 import { paths } from '#src/app/paths.ts';
@@ -34,11 +35,15 @@ export function Component() {
   const search = readListSearch(parameters);
   const list = useInfiniteQuery({ ...standardListQuery(search), placeholderData: keepPreviousData });
   const laboratories = useLaboratoryChoices();
-  const change = (next: Partial<ListSearch>) =>
-    setParameters(writeListSearch(changeListSearch(search, next)), {
-      replace: true,
-      preventScrollReset: true,
-    });
+  // A second change may come before the first is drawn: it builds on what was asked, not on what is shown.
+  const asked = useRef(search);
+  useLayoutEffect(() => {
+    asked.current = readListSearch(parameters);
+  }, [parameters]);
+  const change = (next: Partial<ListSearch>) => {
+    asked.current = changeListSearch(asked.current, next);
+    setParameters(writeListSearch(asked.current), { replace: true, preventScrollReset: true });
+  };
   const more = async () => {
     const { isSuccess } = await list.fetchNextPage();
     if (isSuccess) change({ pages: search.pages + 1 });

@@ -65,7 +65,7 @@ describe('HistorySection', () => {
       .getAllByRole('row')
       .slice(1)
       .map((row) => row.textContent);
-    expect(rows[0]).toContain('2024-09-12C-2024-09-12Tarn Valley Standards+41');
+    expect(rows[0]).toContain('2024-09-12C-2024-09-12Tarn Valley StandardsTV+41');
     expect(rows[0]).toContain('E = 0.09');
     expect(rows[1]).toContain('new epoch');
     expect(rows[2]).not.toContain('new epoch');

@@ -38,8 +38,11 @@ export function HistoryTable({ sheet }: { sheet: StandardResponse }) {
               {value.certificateNo}
               {value.revisionN > 1 && `, rev. ${value.revisionN}`}
             </Cell>
-            <Cell className="max-w-44 truncate" title={value.issuer.name}>
-              {value.issuer.name}
+            <Cell className="max-w-56 truncate">
+              <span className="max-[84rem]:hidden">{value.issuer.name}</span>
+              <span className="font-mono text-sm min-[84rem]:hidden" title={value.issuer.name}>
+                {value.issuer.code}
+              </span>
             </Cell>
             <Cell align="right">
               <Quantity
