@@ -11,13 +11,10 @@ function certificates({ steps }: DemoPlan): PlannedCertificate[] {
 }
 
 describe('the plan of the demo network', () => {
-  it('is the same each time', () => {
-    const again = makePlan();
-    expect(certificates(again)).toEqual(certificates(plan));
-    expect(again.catalogue).toEqual(plan.catalogue);
-    expect(again.steps.map(({ day, does }) => `${day} ${does}`)).toEqual(
-      plan.steps.map(({ day, does }) => `${day} ${does}`),
-    );
+  it('is the same each time', { timeout: 30_000 }, () => {
+    // As text: comparing some hundred thousand members one by one takes longer than making them.
+    const textOf = (made: DemoPlan) => JSON.stringify([certificates(made), made.catalogue]);
+    expect(textOf(makePlan()) === textOf(plan)).toBe(true);
   });
 
   it('does everything in the order of the days, and ends before the day it is looked at', () => {
