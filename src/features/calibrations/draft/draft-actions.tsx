@@ -1,10 +1,11 @@
+import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { DraftResponse, IssuedResponse } from '#shared/contracts/calibrations.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Dialog } from '#src/components/ui/dialog.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { can } from '#src/lib/abilities.ts';
-import { useSetDraftState } from '../api.ts';
+import { draftQuery, useSetDraftState } from '../api.ts';
 import { IssueDialog } from './issue-dialog.tsx';
 
 interface DraftActionsProps {
@@ -22,14 +23,17 @@ interface DraftActionsProps {
 export function DraftActions(props: DraftActionsProps) {
   const { draft, issuerName, openPoints, saveNow, onIssued, onDiscarded } = props;
   const [asks, setAsks] = useState<'issue' | 'discard' | null>(null);
+  const queries = useQueryClient();
   const state = useSetDraftState(draft.id);
   const maySend = can(draft, 'draft:send');
   const isSent = draft.state === 'sent to sign';
   const isComplete = openPoints === 0;
 
   const ifSaved = (act: () => void) => () => void saveNow().then((isSaved) => isSaved && act());
+  // The save just made may have given a newer version than the one drawn here.
+  const version = (): number => queries.getQueryData(draftQuery(draft.id).queryKey)?.version ?? draft.version;
   const setState = (to: 'open' | 'sent to sign' | 'discarded', onSuccess?: () => void): void =>
-    state.mutate({ version: draft.version, state: to }, { onSuccess });
+    state.mutate({ version: version(), state: to }, { onSuccess });
 
   return (
     <div className="flex flex-col gap-3">
