@@ -183,6 +183,7 @@ export const ChainResponse = z.object({
     /** "unknown, because ...": one sentence per value that states no U. */
     missing: z.array(z.object({ uid: Id, because: z.string() })),
   }),
+  /** What reaches the focus through each root that something flows from, as a share of its variance. */
   rootShares: z.array(z.object({ uid: Id, share: z.number() })),
   contributions: z.array(Contribution),
   improvements: z.array(Improvement),

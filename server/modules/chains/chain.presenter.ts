@@ -59,7 +59,7 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
       degreesOfFreedom: Number.isFinite(propagation.degreesOfFreedom) ? propagation.degreesOfFreedom : null,
       missing: propagation.missing.map((uid) => ({ uid, because: missingBecause(chain, uid) })),
     },
-    rootShares: rootShares(chain),
+    rootShares: rootShares(chain, shares),
     contributions: (chain.contributions ?? []).map((row) => ({
       ...row,
       uids: row.uids.filter((uid) => nodeUids.has(uid) || row.kind === 'source'),
@@ -228,13 +228,12 @@ function presentLinks(chain: Chain, shares: Shares): z.input<typeof ChainLink>[]
   });
 }
 
-function rootShares(chain: Chain): ChainResponse['rootShares'] {
-  const roots = new Set(
-    chain.closure.values.filter((value) => value.rootKind !== null).map((value) => value.uid),
-  );
-  return (chain.contributions ?? [])
-    .filter((row) => row.kind === 'root' && row.uids.some((uid) => roots.has(uid)))
-    .map((row) => ({ uid: row.uids[0]!, share: row.share }));
+/** What reaches the focus through each root, its scale version included; a root that only informs carries nothing. */
+function rootShares(chain: Chain, shares: Shares): ChainResponse['rootShares'] {
+  return chain.closure.values.flatMap(({ uid, rootKind }) => {
+    const share = shares.through.get(uid);
+    return rootKind === null || share === undefined ? [] : [{ uid, share }];
+  });
 }
 
 function definitionOf(chain: Chain): ChainResponse['definition'] {
