@@ -1,0 +1,56 @@
+import type { Page } from '@playwright/test';
+import type { DemoPlaces } from '#tests/support/demo-places.ts';
+
+/** One screen as it is looked at. */
+export interface Screen {
+  name: string;
+  path: (places: DemoPlaces) => string;
+  /** Looked at without sign-in. */
+  isPublic?: true;
+  /** Brings the screen into the state to look at, or waits for what it fetches late. */
+  prepare?: (page: Page) => Promise<void>;
+}
+
+const drawn = async (page: Page) => {
+  await page.locator('.react-flow__node').first().waitFor();
+  // The table twin comes with it; the drawing is fitted once its layout has come from the worker.
+  await page.locator('.react-flow__edge').first().waitFor({ state: 'attached' });
+};
+
+/** Every screen of the product. */
+export const SCREENS: readonly Screen[] = [
+  { name: 'sign-in', path: () => '/sign-in', isPublic: true },
+  { name: 'desk', path: () => '/desk' },
+  { name: 'standards', path: () => '/standards' },
+  { name: 'standards-none-found', path: () => '/standards?q=nothing+by+this+name' },
+  { name: 'standards-open', path: ({ standardId }) => `/standards?open=${standardId}` },
+  { name: 'standard', path: ({ standardId }) => `/standards/${standardId}` },
+  { name: 'standard-of-a-set', path: ({ setMemberId }) => `/standards/${setMemberId}` },
+  { name: 'standard-new', path: () => '/standards/new' },
+  { name: 'set-new', path: () => '/standards/new-set' },
+  { name: 'calibrations', path: () => '/calibrations' },
+  { name: 'calibration', path: ({ revisionId }) => `/calibrations/${revisionId}` },
+  { name: 'calibration-new', path: () => '/calibrations/drafts/new' },
+  { name: 'chains', path: () => '/chains' },
+  { name: 'chain', path: ({ valueUid }) => `/chains/${valueUid}`, prepare: drawn },
+  {
+    name: 'chain-selected',
+    path: ({ valueUid }) => `/chains/${valueUid}?at=${valueUid}`,
+    prepare: async (page) => {
+      await drawn(page);
+      await page.getByRole('dialog').waitFor();
+    },
+  },
+  { name: 'network', path: () => '/network' },
+  { name: 'laboratory', path: ({ laboratoryId }) => `/network/${laboratoryId}` },
+  { name: 'not-found', path: () => '/no-such-place' },
+];
+
+/** Opens a screen and waits until it stands: heading, fonts, nothing on its way. */
+export async function openScreen(page: Page, screen: Screen, places: DemoPlaces): Promise<void> {
+  await page.goto(screen.path(places));
+  await page.getByRole('heading', { level: 1 }).first().waitFor();
+  await screen.prepare?.(page);
+  await page.waitForLoadState('networkidle');
+  await page.evaluate(() => document.fonts.ready.then(() => undefined));
+}
