@@ -28,6 +28,7 @@ export interface Entry {
   statesClass?: boolean;
 }
 
+/** A certificate before it has its number. */
 export interface Sheet {
   issuer: string;
   /** The laboratory that enters the certificate: the holder of the weights. */

@@ -4,6 +4,7 @@
  */
 export type Effects = ReadonlyMap<string, number>;
 
+/** Something as a part of a sum: its effects, and how strongly it counts. */
 export interface WeightedEffects {
   sensitivity: number;
   effects: Effects;

@@ -25,6 +25,7 @@ export const THIRD_LEVEL = ['FC', 'QH', 'WF', 'AB', 'DS', 'NC'] as const;
 /** Calibrate their own working weights only. */
 export const WORKS_LABORATORIES = ['SH', 'OM', 'LM'] as const;
 
+/** Every laboratory, the institute first. */
 export const LABORATORIES: readonly DemoLaboratory[] = [
   {
     code: INSTITUTE,

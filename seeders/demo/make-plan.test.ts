@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { bestCapabilityOf } from './capabilities.ts';
 import { LABORATORIES } from './laboratories.ts';
 import { makePlan } from './make-plan.ts';
+import { trueValue } from './weight.ts';
 import type { DemoPlan, PlannedCertificate } from './plan.ts';
 
 const plan = makePlan();
@@ -71,6 +72,28 @@ describe('the plan of the demo network', () => {
       }
     }
     expect(claims).toBeGreaterThan(1500);
+  });
+
+  it('measures what is there: errors of sound values are of the size of their u', () => {
+    const weights = plan.steps.flatMap((step) =>
+      step.does === 'register set' ? step.weights : step.does === 'register weight' ? [step.weight] : [],
+    );
+    const sound = weights.flatMap((weight) =>
+      weight.values.filter((value) => !value.isFaulty && value.stage !== 'as found'),
+    );
+    const errors = sound.map(
+      ({ weight, quantity, performedEnd, deviation, u }) =>
+        (deviation - trueValue(weight, quantity, performedEnd)) / u,
+    );
+    const beyond = (limit: number) =>
+      errors.filter((error) => Math.abs(error) > limit).length / errors.length;
+    expect(errors.length).toBeGreaterThan(4000);
+    expect(Math.sqrt(errors.reduce((sum, error) => sum + error ** 2, 0) / errors.length)).toBeLessThan(1.1);
+    expect(Math.sqrt(errors.reduce((sum, error) => sum + error ** 2, 0) / errors.length)).toBeGreaterThan(
+      0.5,
+    );
+    expect(beyond(2)).toBeLessThan(0.06);
+    expect(beyond(3.5)).toBe(0);
   });
 
   it('names no country that exists', () => {

@@ -1,9 +1,10 @@
 import type { Role } from '#shared/contracts/identity.ts';
-import { INSTITUTE, LABORATORIES } from './laboratories.ts';
+import { LABORATORIES } from './laboratories.ts';
 
 /** The password of every account of the demo network. */
 export const DEMO_PASSWORD = 'exagium demo';
 
+/** A person with an account and the roles they hold. */
 export interface DemoPerson {
   email: string;
   name: string;
@@ -50,11 +51,3 @@ export function demoPeople(): DemoPerson[] {
     ...staff,
   ];
 }
-
-/** The e-mail of the person who signs for a laboratory; abroad nobody of this register does. */
-export function signatoryOf(code: string): string | null {
-  const laboratory = LABORATORIES.find((one) => one.code === code);
-  return laboratory && laboratory.kind !== 'external institute' ? `signatory@${laboratory.domain}` : null;
-}
-
-export const INSTITUTE_SIGNATORY = signatoryOf(INSTITUTE)!;

@@ -14,6 +14,7 @@ export const GRAM_SET = ['1000', ...DECADES.slice(0, 3).flatMap(DECADE)];
 /** The heavy weights of a laboratory. */
 export const HEAVY_SET = ['2000', '2000', '5000', '10000', '20000'];
 
+/** A set before its weights are drawn. */
 export interface SetDescription {
   owner: string;
   registryNo: string;

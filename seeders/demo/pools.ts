@@ -11,6 +11,7 @@ export interface Pools {
   f2: Map<string, Weight[]>;
 }
 
+/** Methods and kinds of quantity as the series share them; conventional mass comes first. */
 export const SUBSTITUTION = 'Substitution weighing';
 export const CONVENTIONAL = ['conventional mass'] as const;
 export const BOTH = ['conventional mass', 'mass'] as const;

@@ -7,6 +7,7 @@ export const CONSENSUS = 'Consensus value 2021';
 /** From this day values are disseminated from the consensus value. */
 export const ADOPTION = '2021-03-01';
 
+/** Versions of the mass scale as they are registered. */
 export const SCALES = [
   {
     name: REALIZED,

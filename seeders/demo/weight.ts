@@ -5,6 +5,7 @@ import { cutNormal, drawsFor } from './draws.ts';
 import { drawTruth, trueDeviation, type Truth } from './truth.ts';
 import type { DemoValue } from './value.ts';
 
+/** The two kinds of mass; they are never mixed. */
 export type Quantity = 'mass' | 'conventional mass';
 
 /** A density as the register holds it, kg/m3, k = 2. */
@@ -42,6 +43,7 @@ export interface Weight {
   lastUsedOn: string;
 }
 
+/** What is said of a weight when it is made; the rest is drawn or follows. */
 export type WeightDescription = Pick<Weight, 'registryNo' | 'owner' | 'nominal' | 'inServiceFrom'> &
   Partial<Pick<Weight, 'kind' | 'class' | 'marking' | 'shape' | 'material' | 'serial' | 'density'>> & {
     intervalMonths?: number | null;

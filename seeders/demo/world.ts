@@ -18,12 +18,14 @@ export interface World {
   rounds: Map<string, DemoValue[]>;
 }
 
+/** A certificate as it stands: its latest revision. */
 export interface IssuedSheet {
   sheet: Sheet;
   revision: number;
   values: DemoValue[];
 }
 
+/** The network before its first day. */
 export function emptyWorld(): World {
   return {
     steps: [],
