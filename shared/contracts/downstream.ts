@@ -107,7 +107,10 @@ export type DownstreamResponse = z.infer<typeof DownstreamResponse>;
 
 // --- what if ------------------------------------------------------------------------------------------
 
-const Shift = Deviation.refine((text) => !new Decimal(text).isZero(), 'Expected a shift other than zero');
+const Shift = Deviation.refine(
+  (text) => !new Decimal(text).isZero() && new Decimal(text).abs().lte(1_000_000),
+  'Expected a shift other than zero, of up to 1 000 kg',
+);
 
 /** A notice: one shared effect on all values of an issuer that it covers, inherited below them through links. */
 const NoticeChange = z
@@ -181,7 +184,8 @@ export type ClassVerdict = z.infer<typeof ClassVerdict>;
 export const WhatIfFullRow = FullRow.extend({
   /** Null where it cannot be computed: something above it is withdrawn. */
   shift: z.number().nullable(),
-  deviationAfter: Deviation.nullable(),
+  /** Exact decimal text. */
+  deviationAfter: z.string().nullable(),
   /** Shift over U as stated, signed; null without U or shift. */
   ratio: z.number().nullable(),
   /** U at the k of the certificate. */

@@ -179,6 +179,12 @@ describe('POST /api/what-if', () => {
     expect(await words('0.0012', 10)).toEqual({ none: 0, material: 0, verdictChanges: 2 });
   });
 
+  it('answers the largest shift that it takes, and refuses a larger one', async () => {
+    const rows = await rowsOf('registrar', [shift(homes.uid, '-1000000')]);
+    expect(rows.get(customers.registryNo)).toMatchObject({ deviationAfter: '-999999.999745' });
+    expect((await send('registrar', [shift(homes.uid, '1000000.000000000001')])).status).toBe(400);
+  });
+
   it('adds a larger u in quadrature, down the chain', async () => {
     const rows = await rowsOf('customer', [{ kind: 'raise', valueUid: homes.uid, addedU: 0.0002 }]);
     const row = rows.get(customers.registryNo);
