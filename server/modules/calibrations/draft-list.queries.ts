@@ -15,7 +15,11 @@ interface Row extends Omit<Summary, 'laboratory' | 'updatedAt'> {
 }
 
 /** Drafts of these laboratories that are still open or wait for a signature, newest first. */
-export async function openDrafts(database: Sequelize, laboratoryIds: readonly string[]): Promise<Summary[]> {
+export async function openDrafts(
+  database: Sequelize,
+  laboratoryIds: readonly string[],
+  states: readonly ('open' | 'sent to sign')[] = ['open', 'sent to sign'],
+): Promise<Summary[]> {
   if (laboratoryIds.length === 0) return [];
   const rows = await readRows<Row>(
     database,
@@ -27,9 +31,9 @@ export async function openDrafts(database: Sequelize, laboratoryIds: readonly st
      JOIN laboratory l ON l.id = d.laboratory_id
      JOIN account a ON a.id = d.updated_by
      LEFT JOIN laboratory i ON i.id = JSON_VALUE(d.content, '$.issuerId')
-     WHERE d.laboratory_id IN (:laboratoryIds) AND d.state IN ('open', 'sent to sign')
+     WHERE d.laboratory_id IN (:laboratoryIds) AND d.state IN (:states)
      ORDER BY d.updated_at DESC, d.id DESC LIMIT ${SHOWN}`,
-    { laboratoryIds },
+    { laboratoryIds, states },
   );
   return rows.map(({ laboratoryId, laboratoryCode, laboratoryName, updatedAt, ...row }) => ({
     ...row,

@@ -2,3 +2,4 @@ export { issueCalibration, type IssuedCalibration } from './issue-calibration.se
 export { reviseCalibration } from './revise-calibration.service.ts';
 export { withdrawCalibration } from './withdraw-calibration.service.ts';
 export { calibrationRoutes } from './calibrations.routes.ts';
+export { openDrafts } from './draft-list.queries.ts';

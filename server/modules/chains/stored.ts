@@ -3,14 +3,34 @@
  * microseconds, decimals exact text in grams, uncertainties numbers in grams.
  */
 
-/** An assigned value with the certificate line it stands on. Never changes once recorded. */
-export interface StoredValue {
+/** A result as its certificate states it, wherever it is met. */
+interface StoredResult {
   id: number;
   uid: string;
   calibrationId: string;
   revisionId: string;
-  revisionN: number;
   certificateNo: string;
+  revisionN: number;
+  quantity: 'mass' | 'conventional mass';
+  medium: 'air' | 'vacuum' | 'inert gas';
+  stage: 'as found' | 'as left' | null;
+  epochN: number;
+  deviation: string;
+  reportedUnit: 'kg' | 'g' | 'mg' | 'ug';
+  reportedDecimals: number;
+  expandedU: string | null;
+  reportedUDecimals: number | null;
+  k: string | null;
+  performedBegin: string;
+  performedEnd: string;
+  datePrecision: 'day' | 'month' | 'year';
+  issuedOn: string;
+  recordedAt: string;
+  changed: 'new' | 'text' | 'value';
+}
+
+/** An assigned value with the certificate line it stands on. Never changes once recorded. */
+export interface StoredValue extends StoredResult {
   line: number;
   issuerId: string;
   holderId: string;
@@ -20,18 +40,8 @@ export interface StoredValue {
   marking: string;
   standardKind: string;
   setId: string | null;
-  epochN: number;
   epochBeginsOn: string;
-  quantity: 'mass' | 'conventional mass';
-  medium: 'air' | 'vacuum' | 'inert gas';
-  stage: 'as found' | 'as left' | null;
   nominal: string;
-  deviation: string;
-  reportedUnit: 'kg' | 'g' | 'mg' | 'ug';
-  reportedDecimals: number;
-  expandedU: string | null;
-  reportedUDecimals: number | null;
-  k: string | null;
   coverage: string | null;
   nuEff: number | null;
   uStated: number | null;
@@ -50,14 +60,8 @@ export interface StoredValue {
   class: string | null;
   underAccreditation: boolean;
   unitConfirmed: boolean;
-  changed: 'new' | 'text' | 'value';
   decisionRule: 'guarded' | 'simple' | null;
   method: string;
-  performedBegin: string;
-  performedEnd: string;
-  datePrecision: 'day' | 'month' | 'year';
-  issuedOn: string;
-  recordedAt: string;
   parents: StoredLink[];
   sources: StoredSourceLink[];
   /** How many other lines of the same revision name a reference. */
@@ -121,29 +125,7 @@ export interface StoredEnd {
 }
 
 /** One value in the life of a standard, as its history tells it. */
-export interface StoredHistoryValue {
-  id: number;
-  uid: string;
-  calibrationId: string;
-  revisionId: string;
-  certificateNo: string;
-  revisionN: number;
-  quantity: 'mass' | 'conventional mass';
-  medium: 'air' | 'vacuum' | 'inert gas';
-  stage: 'as found' | 'as left' | null;
-  epochN: number;
-  deviation: string;
-  reportedUnit: 'kg' | 'g' | 'mg' | 'ug';
-  reportedDecimals: number;
-  expandedU: string | null;
-  reportedUDecimals: number | null;
-  k: string | null;
-  performedBegin: string;
-  performedEnd: string;
-  datePrecision: 'day' | 'month' | 'year';
-  issuedOn: string;
-  recordedAt: string;
-  changed: 'new' | 'text' | 'value';
+export interface StoredHistoryValue extends StoredResult {
   ends: StoredEnd[];
 }
 

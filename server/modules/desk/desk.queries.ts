@@ -1,3 +1,4 @@
+import { openDrafts } from '#server/modules/calibrations/index.ts';
 import type { DeskResponse } from '#shared/contracts/desk.ts';
 import type { Sequelize } from 'sequelize';
 import { knownAt } from '#server/db/in-force.ts';
@@ -5,7 +6,6 @@ import { readRow, readRows } from '#server/db/read.ts';
 import { today, type Context } from '#server/http/context.ts';
 import { standingOn } from '#server/modules/network/index.ts';
 import type { User } from '#server/policy/user.ts';
-import { deskDrafts } from './desk-drafts.queries.ts';
 import { deskDue } from './desk-due.queries.ts';
 import { deskUpstream } from './desk-upstream.queries.ts';
 
@@ -19,8 +19,8 @@ export async function deskOf(context: Context, user: User): Promise<DeskResponse
     .map(({ laboratoryId }) => laboratoryId);
   const [laboratories, toSign, drafts, due, upstream, register, assessments] = await Promise.all([
     laboratoryNames(database, own),
-    deskDrafts(database, signsFor, 'sent to sign'),
-    deskDrafts(database, own, 'open'),
+    openDrafts(database, signsFor, ['sent to sign']),
+    openDrafts(database, own, ['open']),
     deskDue(database, own, day, knownAt(day)),
     deskUpstream(database, own, day, knownAt(day)),
     user.isRegistrar ? registerSize(database) : null,

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { bestU, nominalUnit, partsOfBestU } from './best-capability.ts';
+import { nominalUnit } from '#src/lib/nominal.ts';
+import { bestU, partsOfBestU } from './best-capability.ts';
 
 const line = { bestUConstant: '0.0000008', bestURelative: 5e-8 };
 

@@ -1,6 +1,5 @@
 import { Decimal, decimalText } from '#shared/decimal.ts';
 import type { ScopeLine } from '#shared/contracts/network.ts';
-import type { Unit } from '#shared/engine/quantity/units.ts';
 import type { z } from 'zod';
 
 export type Line = z.infer<typeof ScopeLine>;
@@ -25,11 +24,4 @@ export function partsOfBestU(line: Pick<Line, 'bestUConstant' | 'bestURelative'>
     constant: isConstant || !isRelative ? line.bestUConstant : null,
     relative: isRelative ? decimalText(new Decimal(line.bestURelative)) : null,
   };
-}
-
-/** The unit in which a nominal is engraved: mg below 1 g, g below 1 kg, kg from there on. */
-export function nominalUnit(grams: string): Extract<Unit, 'kg' | 'g' | 'mg'> {
-  const value = new Decimal(grams);
-  if (value.gte(1000)) return 'kg';
-  return value.gte(1) ? 'g' : 'mg';
 }

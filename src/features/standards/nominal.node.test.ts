@@ -1,14 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import {
-  isGrams,
-  isHeavy,
-  nominalEntry,
-  nominalMarking,
-  nominalText,
-  nominalUnit,
-  readNominal,
-  usualShape,
-} from './nominal.ts';
+import { nominalText, nominalUnit } from '#src/lib/nominal.ts';
+import { isGrams, isHeavy, nominalEntry, nominalMarking, readNominal, usualShape } from './nominal.ts';
 
 const grams = (typed: string) => {
   const read = readNominal(typed, '.');

@@ -2,9 +2,9 @@ import { Decimal, decimalText } from '#shared/decimal.ts';
 import { EngineError } from '#shared/engine/errors.ts';
 import { parseQuantity } from '#shared/engine/quantity/parse-quantity.ts';
 import type { DecimalMark } from '#shared/engine/quantity/read-number.ts';
-import { convertUnit, type Unit } from '#shared/engine/quantity/units.ts';
+import { convertUnit } from '#shared/engine/quantity/units.ts';
 import type { Shape } from '#shared/contracts/standards.ts';
-import { quantityLine, quantityText } from '#src/lib/quantity-text.ts';
+import { nominalUnit } from '#src/lib/nominal.ts';
 
 /** What became of a nominal as typed: nothing there, grams as canonical text, or why it cannot be read. */
 export type ReadNominal =
@@ -45,19 +45,6 @@ export function nominalEntry(typed: string, decimalMark: DecimalMark): string {
 /** Whether an entry holds a nominal in grams, and not something still being written. */
 export function isGrams(entry: string): boolean {
   return /^\d+(\.\d+)?$/.test(entry) && Number(entry) > 0;
-}
-
-/** The unit a nominal is engraved in: mg below 1 g, g below 1 kg, kg from there on (OIML R 111-1:2004, 13). */
-export function nominalUnit(grams: string): Extract<Unit, 'kg' | 'g' | 'mg'> {
-  const value = new Decimal(grams);
-  if (value.gte(1000)) return 'kg';
-  return value.gte(1) ? 'g' : 'mg';
-}
-
-/** A nominal as one says it: "1 kg", "500 mg". */
-export function nominalText(grams: string, decimalMark: DecimalMark = '.'): string {
-  const style = { decimalMark, uncertainty: 'plus-minus' as const };
-  return quantityLine(quantityText({ value: grams, shownIn: nominalUnit(grams) }, style));
 }
 
 /** A nominal as it is engraved and typed, with a plain space: the first proposal for a marking. */

@@ -7,7 +7,9 @@ import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
+import { ValueCells } from '#src/components/ui/value-cells.tsx';
 import { TextField } from '#src/components/ui/text-field.tsx';
+import { nominalUnit } from '#src/lib/nominal.ts';
 import { chainChoicesQuery } from '../api.ts';
 
 interface ChainChooserProps {
@@ -62,38 +64,14 @@ export function ChainChooser({ q, onSearch, hrefOf }: ChainChooserProps) {
                   <RowLink to={hrefOf(value.uid)}>{value.registryNo}</RowLink>
                 </Cell>
                 <Cell align="right">
-                  <Quantity
-                    value={value.nominal}
-                    shownIn={Number(value.nominal) >= 1000 ? 'kg' : Number(value.nominal) >= 1 ? 'g' : 'mg'}
-                  />
+                  <Quantity value={value.nominal} shownIn={nominalUnit(value.nominal)} />
                 </Cell>
                 <Cell>{value.holder.name}</Cell>
                 <Cell isMono>{value.certificateNo}</Cell>
                 <Cell>
                   <DateText value={value.performedEnd} />
                 </Cell>
-                <Cell align="right">
-                  <Quantity
-                    value={value.deviation}
-                    expandedUncertainty={value.expandedU}
-                    coverageFactor={value.k}
-                    kind="deviation"
-                    shownIn="auto"
-                    hidesUncertainty
-                  />
-                </Cell>
-                <Cell align="right">
-                  {value.expandedU ? (
-                    <Quantity
-                      value={value.expandedU}
-                      kind="uncertainty"
-                      coverageFactor={value.k}
-                      shownIn="auto"
-                    />
-                  ) : (
-                    'not stated'
-                  )}
-                </Cell>
+                <ValueCells {...value} />
               </Row>
             ))}
           </tbody>

@@ -5,7 +5,7 @@ import { Page, Section } from '#src/components/layout/page.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { Coverage, Quantity } from '#src/components/ui/quantity.tsx';
 import { Decimal, decimalText } from '#shared/decimal.ts';
-import { quantityLine, quantityText } from '#src/lib/quantity-text.ts';
+import { nominalText } from '#src/lib/nominal.ts';
 import type { ChainQuestion } from '../question.ts';
 import { BothKinds } from './both-kinds.tsx';
 import { Contributions } from './contributions.tsx';
@@ -95,9 +95,5 @@ export function ChainScreen({ chain, question, onChange, actionsFor, actions }: 
 }
 
 function titleOf(focus: ValueNode): string {
-  const unit = Number(focus.nominal) >= 1000 ? 'kg' : Number(focus.nominal) >= 1 ? 'g' : 'mg';
-  const nominal = quantityLine(
-    quantityText({ value: focus.nominal, shownIn: unit }, { decimalMark: '.', uncertainty: 'plus-minus' }),
-  );
-  return `${focus.registryNo}, ${nominal}${focus.class ? `, class ${focus.class}` : ''}`;
+  return `${focus.registryNo}, ${nominalText(focus.nominal)}${focus.class ? `, class ${focus.class}` : ''}`;
 }

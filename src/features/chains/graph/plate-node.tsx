@@ -3,6 +3,7 @@ import { Handle, Position, type NodeProps } from 'reactflow';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
+import { nominalUnit } from '#src/lib/nominal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { shareText } from '../share-text.ts';
 import type { Plate, Stub } from './display-list.ts';
@@ -84,10 +85,9 @@ function SourceFace({ node }: { node: Extract<Plate['node'], { type: 'source' }>
 
 /** Nominal in the unit it is spoken of, with the class: "1 kg E2". */
 export function NominalAndClass({ nominal, weightClass }: { nominal: string; weightClass: string | null }) {
-  const unit = Number(nominal) >= 1000 ? 'kg' : Number(nominal) >= 1 ? 'g' : 'mg';
   return (
     <>
-      <Quantity value={nominal} shownIn={unit} />
+      <Quantity value={nominal} shownIn={nominalUnit(nominal)} />
       {weightClass && ` ${weightClass}`}
     </>
   );

@@ -2,7 +2,8 @@ import { Decimal, decimalText } from '#shared/decimal.ts';
 import type { WeightClass } from '#shared/contracts/common.ts';
 import { maximumPermissibleError } from '#shared/engine/conformity/maximum-permissible-error.ts';
 import { Quantity } from '#src/components/ui/quantity.tsx';
-import { isGrams, nominalText } from '../nominal.ts';
+import { nominalText } from '#src/lib/nominal.ts';
+import { isGrams } from '../nominal.ts';
 
 interface ErrorLimitNoteProps {
   weightClass: WeightClass | null;

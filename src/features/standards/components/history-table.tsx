@@ -5,12 +5,12 @@ import { DateText } from '#src/components/ui/date-text.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
+import { ValueCells } from '#src/components/ui/value-cells.tsx';
 import { formatDecimal } from '#src/lib/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { stateOfValue } from '#src/lib/states.ts';
 import { dateAsKnown } from '../history/days.ts';
 import type { PlotValue } from '../history/plot-geometry.ts';
-import { Uncertainty } from './uncertainty.tsx';
 
 /** The values of one quantity, newest first; a row opens its calibration. */
 export function HistoryTable({ sheet }: { sheet: StandardResponse }) {
@@ -44,19 +44,7 @@ export function HistoryTable({ sheet }: { sheet: StandardResponse }) {
                 {value.issuer.code}
               </span>
             </Cell>
-            <Cell align="right">
-              <Quantity
-                value={value.deviation}
-                expandedUncertainty={value.expandedU}
-                coverageFactor={value.k}
-                kind="deviation"
-                shownIn="auto"
-                hidesUncertainty
-              />
-            </Cell>
-            <Cell align="right">
-              <Uncertainty {...value} />
-            </Cell>
+            <ValueCells {...value} />
             <Cell className="whitespace-nowrap">
               <Change value={value} isFirstAfter={value.epochN > 1 && firstOfEpoch.has(value.uid)} />
             </Cell>

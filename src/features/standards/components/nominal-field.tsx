@@ -1,7 +1,8 @@
 import { useState, type ComponentProps } from 'react';
 import { CONTROL_CLASS, Field, type FieldProps } from '#src/components/ui/field.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { isGrams, nominalEntry, nominalText, readNominal } from '../nominal.ts';
+import { nominalText } from '#src/lib/nominal.ts';
+import { isGrams, nominalEntry, readNominal } from '../nominal.ts';
 
 interface NominalFieldProps
   extends

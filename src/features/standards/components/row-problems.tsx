@@ -1,6 +1,7 @@
 import type { FieldErrors } from 'react-hook-form';
 import { Notice } from '#src/components/ui/notice.tsx';
-import { isGrams, nominalText } from '../nominal.ts';
+import { nominalText } from '#src/lib/nominal.ts';
+import { isGrams } from '../nominal.ts';
 import { cellProblem, MEMBER_COLUMNS, type SetEntriesInput } from '../set-entries.ts';
 
 interface RowProblemsProps {

@@ -8,7 +8,7 @@ import { Facts } from '#src/components/layout/facts.tsx';
 import { Page, Section } from '#src/components/layout/page.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { formatDecimal } from '#src/lib/format-decimal.ts';
-import { nominalText } from '../nominal.ts';
+import { nominalText } from '#src/lib/nominal.ts';
 import { KIND_WORDS, monthsText } from '../words.ts';
 import { DueMark } from './due-mark.tsx';
 import { EpochSection } from './epoch-section.tsx';

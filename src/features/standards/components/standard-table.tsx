@@ -1,12 +1,11 @@
 import type { StandardRow } from '#shared/contracts/standards.ts';
-import { Quantity } from '#src/components/ui/quantity.tsx';
 import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
+import { ValueCells } from '#src/components/ui/value-cells.tsx';
 import { dateAsKnown } from '../history/days.ts';
 import { nextSort, sortOf, type ListSearch, type Sortable } from '../list-search.ts';
 import { KIND_WORDS } from '../words.ts';
 import { DueMark } from './due-mark.tsx';
 import { Nominal } from './nominal.tsx';
-import { Uncertainty } from './uncertainty.tsx';
 
 interface StandardTableProps {
   rows: readonly StandardRow[];
@@ -63,7 +62,7 @@ export function StandardTable({ rows, search, onSort, hrefOf }: StandardTablePro
               </span>
             </Cell>
             <Cell isMono>{row.set?.registryNo}</Cell>
-            <ValueCells value={row.value} />
+            <CurrentValueCells value={row.value} />
             <Cell>{row.dueOn && <DueMark dueOn={row.dueOn} isShort />}</Cell>
           </Row>
         ))}
@@ -72,7 +71,7 @@ export function StandardTable({ rows, search, onSort, hrefOf }: StandardTablePro
   );
 }
 
-function ValueCells({ value }: { value: StandardRow['value'] }) {
+function CurrentValueCells({ value }: { value: StandardRow['value'] }) {
   if (!value) {
     return (
       <Cell colSpan={4} className="pl-6 text-ink-3">
@@ -82,19 +81,7 @@ function ValueCells({ value }: { value: StandardRow['value'] }) {
   }
   return (
     <>
-      <Cell align="right">
-        <Quantity
-          value={value.deviation}
-          expandedUncertainty={value.expandedU}
-          coverageFactor={value.k}
-          kind="deviation"
-          shownIn="auto"
-          hidesUncertainty
-        />
-      </Cell>
-      <Cell align="right">
-        <Uncertainty {...value} />
-      </Cell>
+      <ValueCells {...value} />
       <Cell className="text-ink-2">{value.quantity === 'mass' ? 'mass' : 'conventional'}</Cell>
       <Cell className="whitespace-nowrap">{dateAsKnown(value)}</Cell>
     </>
