@@ -1,20 +1,9 @@
 import type { Sequelize } from 'sequelize';
 import { readRow, readRows } from '#server/db/read.ts';
 import type { GraphEndRow, GraphLinkRow, GraphValueRow } from './graph-arrays.ts';
+import { LINK_COLUMNS, unpackLink, unpackValue, VALUE_COLUMNS, type Packed } from './packed-rows.ts';
 
-/** Masses as doubles: deviations of up to 1 000 g keep all their twelve decimals in one. */
-const VALUE_COLUMNS = `
-  v.id, v.standard_id AS standardId, v.holder_id AS holderId, v.issuer_id AS issuerId, v.nominal, v.class, v.quantity,
-  r.decision_rule AS decisionRule, TO_DAYS(v.performed_end) AS performedDay, TO_DAYS(v.effective_from) AS effectiveDay,
-  TO_DAYS(v.recorded_at) AS recordedDay, CAST(v.deviation AS DOUBLE) AS deviation,
-  CAST(v.expanded_u AS DOUBLE) AS expandedU, v.u,
-  CASE v.reported_unit WHEN 'kg' THEN 3 WHEN 'g' THEN 0 WHEN 'mg' THEN -3 ELSE -6 END - CAST(v.reported_u_decimals AS SIGNED) AS uPlace`;
 const VALUES = `SELECT ${VALUE_COLUMNS} FROM assigned_value v JOIN revision r ON r.id = v.revision_id`;
-
-const LINK_COLUMNS = `
-  l.child_id AS childId, l.parent_id AS parentId, l.sensitivity, TO_DAYS(l.used_begin) AS usedBeginDay,
-  TO_DAYS(l.used_end) AS usedEndDay, l.used_as = 'class limit' AS isClassLimit,
-  CAST(l.used_expanded_u AS DOUBLE) AS usedExpandedU`;
 
 const ENDS = `
   SELECT x.value_id AS valueId, TO_DAYS(x.effective_on) AS effectiveDay, TO_DAYS(x.recorded_at) AS recordedDay
@@ -29,6 +18,24 @@ const BELOW = `
 
 /** Room in memory for one statement: at the default a million descendants go through the disk. */
 const WIDE = 'SET STATEMENT tmp_memory_table_size = 268435456, max_heap_table_size = 268435456 FOR';
+
+type Replacements = Parameters<typeof readRows>[2];
+
+async function valueRows(
+  database: Sequelize,
+  sql: string,
+  replacements: Replacements,
+): Promise<GraphValueRow[]> {
+  return (await readRows<Packed>(database, sql, replacements)).map(unpackValue);
+}
+
+async function linkRows(
+  database: Sequelize,
+  sql: string,
+  replacements: Replacements,
+): Promise<GraphLinkRow[]> {
+  return (await readRows<Packed>(database, sql, replacements)).map(unpackLink);
+}
 
 /** The newest act, and how many values and links there are to make room for. */
 export async function registerSize(
@@ -55,7 +62,7 @@ export async function valuePage(
   afterId: number,
   limit: number,
 ): Promise<GraphValueRow[]> {
-  return readRows<GraphValueRow>(
+  return valueRows(
     database,
     `${VALUES} WHERE v.id > :afterId AND v.act_seq <= :seq ORDER BY v.id LIMIT ${limit}`,
     { afterId, seq },
@@ -64,7 +71,7 @@ export async function valuePage(
 
 /** The links of children with ids in a range, both ends in. */
 export async function linkPage(database: Sequelize, from: number, to: number): Promise<GraphLinkRow[]> {
-  return readRows<GraphLinkRow>(
+  return linkRows(
     database,
     `SELECT ${LINK_COLUMNS} FROM value_link l WHERE l.child_id BETWEEN :from AND :to AND l.role = 'reference'`,
     { from, to },
@@ -79,12 +86,8 @@ export async function recordedSince(
 ): Promise<{ values: GraphValueRow[]; links: GraphLinkRow[]; ends: GraphEndRow[] }> {
   const range = { after, seq };
   const [values, links, ends] = await Promise.all([
-    readRows<GraphValueRow>(
-      database,
-      `${VALUES} WHERE v.act_seq > :after AND v.act_seq <= :seq ORDER BY v.id`,
-      range,
-    ),
-    readRows<GraphLinkRow>(
+    valueRows(database, `${VALUES} WHERE v.act_seq > :after AND v.act_seq <= :seq ORDER BY v.id`, range),
+    linkRows(
       database,
       `SELECT ${LINK_COLUMNS} FROM assigned_value v JOIN value_link l ON l.child_id = v.id AND l.role = 'reference'
        WHERE v.act_seq > :after AND v.act_seq <= :seq`,
@@ -122,13 +125,13 @@ export async function partBelow(
 ): Promise<{ values: GraphValueRow[]; links: GraphLinkRow[]; ends: GraphEndRow[] }> {
   if (ids.length === 0) return { values: [], links: [], ends: [] };
   const [values, links, ends] = await Promise.all([
-    readRows<GraphValueRow>(
+    valueRows(
       database,
       `${WIDE} ${BELOW} SELECT ${VALUE_COLUMNS} FROM below b JOIN assigned_value v ON v.id = b.id
        JOIN revision r ON r.id = v.revision_id`,
       { ids },
     ),
-    readRows<GraphLinkRow>(
+    linkRows(
       database,
       `${WIDE} ${BELOW} SELECT ${LINK_COLUMNS} FROM below b JOIN value_link l ON l.child_id = b.id AND l.role = 'reference'`,
       { ids },
