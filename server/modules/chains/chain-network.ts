@@ -68,18 +68,21 @@ function linksOf(value: StoredValue, byId: Map<number, StoredValue>, closure: Cl
   return [...references, ...sources];
 }
 
-/** Nominal +/- MPE used as it stands: rectangular, u = MPE / sqrt 3 (g); by the limit on the link where the value has no class. */
+/**
+ * The u (g) with which a class limit was used: as fixed on the link at issue, else nominal +/- MPE taken as
+ * rectangular, u = MPE / sqrt 3.
+ */
 function classLimitU(parent: StoredValue, link: StoredLink): number {
+  if (link.usedExpandedU !== null) return Number(link.usedExpandedU) / Number(link.usedK ?? Math.sqrt(3));
   const limit = parent.class
     ? maximumPermissibleError(
         parent.class as Parameters<typeof maximumPermissibleError>[0],
         new Decimal(parent.nominal),
       )
     : null;
-  if (limit) return limit.div(MILLIGRAMS_PER_GRAM).toNumber() / Math.sqrt(3);
-  if (link.usedExpandedU === null)
-    throw new Error(`${parent.registryNo} was used by its class limit but has no class at its nominal`);
-  return Number(link.usedExpandedU) / Number(link.usedK ?? Math.sqrt(3));
+  if (!limit)
+    throw new Error(`${parent.registryNo} was used by its class limit, but neither link nor value says which`);
+  return limit.div(MILLIGRAMS_PER_GRAM).toNumber() / Math.sqrt(3);
 }
 
 function estimateOf(
