@@ -81,7 +81,9 @@ function classLimitU(parent: StoredValue, link: StoredLink): number {
       )
     : null;
   if (!limit)
-    throw new Error(`${parent.registryNo} was used by its class limit, but neither link nor value says which`);
+    throw new Error(
+      `${parent.registryNo} was used by its class limit, but neither link nor value says which`,
+    );
   return limit.div(MILLIGRAMS_PER_GRAM).toNumber() / Math.sqrt(3);
 }
 
