@@ -155,7 +155,7 @@ export const ResultRow = memo(function ResultRow(props: ResultRowProps) {
 
 function ReferenceSummary({ uids }: { uids: readonly string[] }) {
   const known = useKnown();
-  if (uids.length === 0) return <span className="text-ink-3">none named</span>;
+  if (uids.length === 0) return <span className="whitespace-nowrap text-ink-3">none named</span>;
   return uids.map((uid) => {
     const reference = known.references.get(uid);
     return (

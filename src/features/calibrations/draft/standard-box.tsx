@@ -40,7 +40,12 @@ export function StandardBox({ label, isLabelHidden, hint, hasSets, onChosen, cla
       }}
       search={async (text, signal) => {
         const rows = await findStandards(laboratoryId, text, LONGEST_LIST, signal);
-        return [...(hasSets ? setOptions(rows, laboratoryId) : []), ...rows.map(weightOption)];
+        const weights = rows.map(weightOption);
+        if (!hasSets) return weights;
+        // Whoever types a whole number means that weight, not the set it belongs to.
+        const isOne = rows[0]?.registryNo.toLowerCase() === text.trim().toLowerCase();
+        const sets = setOptions(rows, laboratoryId);
+        return isOne ? [...weights, ...sets] : [...sets, ...weights];
       }}
     />
   );
