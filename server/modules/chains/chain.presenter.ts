@@ -57,7 +57,7 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
       stated: chain.focus.uStated,
       carried: carried === null ? null : Math.sqrt(carried),
       degreesOfFreedom: Number.isFinite(propagation.degreesOfFreedom) ? propagation.degreesOfFreedom : null,
-      missing: propagation.missing.map((uid) => ({ uid, because: missingBecause(chain, uid) })),
+      missing: missingOf(chain),
     },
     rootShares: rootShares(chain, shares),
     contributions: (chain.contributions ?? []).map((row) => ({
@@ -245,10 +245,19 @@ function definitionOf(chain: Chain): ChainResponse['definition'] {
   return before === roots.length ? 'international prototype' : 'both';
 }
 
-function missingBecause(chain: Chain, uid: string): string {
-  const value = chain.closure.values.find((candidate) => candidate.uid === uid);
-  if (!value) return 'its own part is not known';
-  return `certificate ${value.certificateNo} for ${value.registryNo} states no uncertainty`;
+/**
+ * Why the uncertainty is unknown: the certificates that state none. A value whose own part cannot be told apart for
+ * that reason is named only where no such certificate is.
+ */
+function missingOf(chain: Chain): ChainResponse['uncertainty']['missing'] {
+  const missing = new Set(chain.numbers.propagation.missing);
+  const values = chain.closure.values.filter((value) => missing.has(value.uid));
+  const silent = values.filter((value) => value.uStated === null);
+  const sentence = silent.length > 0 ? 'states no uncertainty' : 'leaves its own part open';
+  return (silent.length > 0 ? silent : values).map(({ uid, certificateNo, registryNo }) => ({
+    uid,
+    because: `certificate ${certificateNo} for ${registryNo} ${sentence}`,
+  }));
 }
 
 /** What a rule says of another laboratory's weight from its history and budget stays there; its outcome is shown. */
