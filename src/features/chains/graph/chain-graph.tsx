@@ -85,7 +85,9 @@ function nodesOf(list: DisplayList, at: string | undefined): Node[] {
 }
 
 function edgesOf(list: DisplayList, at: string | undefined): Edge[] {
-  return list.ribbons.map((ribbon) => ({
+  // The widest first: what is drawn later lies above, and a thin line's label stays readable.
+  const widestFirst = list.ribbons.toSorted((a, b) => b.width - a.width);
+  return widestFirst.map((ribbon) => ({
     id: ribbon.id,
     type: 'ribbon',
     source: ribbon.link.parentUid,

@@ -75,8 +75,8 @@ function SourceFace({ node }: { node: Extract<Plate['node'], { type: 'source' }>
   return (
     <>
       <div className="flex items-baseline justify-between gap-1 text-xs">
-        <span className="font-mono text-sm">{node.registryNo ?? node.kind}</span>
-        <span className="text-ink-2">shared effect</span>
+        <span className="font-mono text-sm whitespace-nowrap">{node.registryNo ?? node.kind}</span>
+        <span className="truncate text-ink-2">shared effect</span>
       </div>
       <div className="line-clamp-2 text-xs">{node.name}</div>
     </>

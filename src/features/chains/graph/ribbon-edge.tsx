@@ -22,6 +22,9 @@ export const RibbonEdge = memo(function RibbonEdge({ data }: EdgeProps<RibbonDat
       <title>{titleOf(ribbon)}</title>
       <path d={ribbon.path} fill="none" stroke="transparent" strokeWidth={Math.max(14, ribbon.width)} />
       <path d={ribbon.path} fill="none" {...strokeOf(ribbon, isSelected)} />
+      {ribbon.isNegative && ribbon.width > 3 && (
+        <path d={ribbon.path} fill="none" className="stroke-paper" strokeWidth={ribbon.width - 2} />
+      )}
       {ribbon.state === 'caution' && (
         <path
           d={ribbon.path}
@@ -50,7 +53,6 @@ function strokeOf(ribbon: Ribbon, isSelected: boolean) {
       className: 'stroke-ink-2',
       strokeWidth: Math.max(1, ribbon.width),
       strokeDasharray: '6 4',
-      strokeOpacity: 0.55,
     };
   if (isSelected) return { className: 'stroke-brass', strokeWidth: Math.max(2, ribbon.width) };
   return { className: ribbon.isToScale ? 'stroke-flow' : 'stroke-ink-3', strokeWidth: ribbon.width };
