@@ -26,15 +26,15 @@ export function ReferencesAside({ lines }: { lines: readonly DraftLine[] }) {
         <tbody>
           {references.map(({ valueUid, registryNo, marking, performedEnd, state, isNewest }) => (
             <Row key={valueUid}>
-              <Cell isHeading>
+              <Cell isHeading className="whitespace-nowrap">
                 <Link to={paths.chain.href(valueUid)} className="hover:underline">
                   <span className="font-mono text-sm">{registryNo}</span>, {marking}
                 </Link>
               </Cell>
-              <Cell>
+              <Cell className="whitespace-nowrap">
                 <StateMark state={stateOfValue(state)}>{state}</StateMark>
               </Cell>
-              <Cell>
+              <Cell className="whitespace-nowrap">
                 <StateMark state={isNewest ? 'sound' : 'caution'}>
                   {isNewest ? `newest, ${performedEnd}` : `newer than ${performedEnd} exists`}
                 </StateMark>
