@@ -1,3 +1,4 @@
+import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { DraftResponse, IssuedResponse } from '#shared/contracts/calibrations.ts';
 import { paths } from '#src/app/paths.ts';
@@ -8,7 +9,7 @@ import { SelectField } from '#src/components/ui/select-field.tsx';
 import { Page } from '#src/components/layout/page.tsx';
 import { can } from '#src/lib/abilities.ts';
 import { usePerson } from '#src/lib/session.ts';
-import { useSetDraftState } from '../api.ts';
+import { laboratoriesQuery, useSetDraftState } from '../api.ts';
 import { DraftEditor } from './draft-editor.tsx';
 
 interface DraftPlaceProps {
@@ -86,9 +87,12 @@ function ClosedDraft({ draft }: { draft: DraftResponse }) {
   );
 }
 
-/** The laboratories for which this person may begin a draft. The server decides again. */
-function usePlaces(): { id: string; code: string; name: string }[] {
+/** The laboratories for which this person may begin a draft: for the registrar all. The server decides again. */
+function usePlaces(): { id: string; name: string }[] {
   const { roles } = usePerson();
+  const isRegistrar = roles.some(({ role }) => role === 'registrar');
+  const { data } = useQuery({ ...laboratoriesQuery, enabled: isRegistrar });
+  if (isRegistrar) return data?.laboratories ?? [];
   const entering = roles.filter(({ role }) => role === 'metrologist' || role === 'laboratory administrator');
   const byId = new Map(
     entering.flatMap(({ laboratory }) => (laboratory ? [[laboratory.id, laboratory]] : [])),
