@@ -68,6 +68,7 @@ export type { GlobalRiskInput, GlobalRisks } from './conformity/global-risks.ts'
 export { standardUncertainty, HALF_WIDTH_DISTRIBUTIONS } from './uncertainty/standard-uncertainty.ts';
 export { combine } from './uncertainty/combine.ts';
 export { effectiveDegreesOfFreedom } from './uncertainty/effective-degrees-of-freedom.ts';
+export { truncateDegreesOfFreedom } from './uncertainty/effective-degrees-of-freedom.ts';
 export { coverageFactor } from './uncertainty/coverage-factor.ts';
 export { monteCarlo, numericalTolerance } from './uncertainty/monte-carlo.ts';
 export { randomSource } from './uncertainty/random.ts';

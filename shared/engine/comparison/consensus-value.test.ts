@@ -3,7 +3,7 @@ import { consensusValue } from './consensus-value.ts';
 import { referenceValue } from './reference-value.ts';
 
 describe('consensusValue', () => {
-  // CCM-TGPfD-kg, Calculation of the Consensus Value for the Kilogram 2020, 2023, 2026; second-hand copy, in ug.
+  // P02, KG-rule: CCM-TGPfD-kg, Calculation of the Consensus Value for the Kilogram 2020, 2023, 2026; second-hand copy, in ug.
   it.each([
     [[0, 12.4, -18.8], 0, -2.1333, -2],
     [[12.4, -18.8, -15.2], -2, -7.2, -7],

@@ -7,7 +7,7 @@ import { referenceValue } from './reference-value.ts';
 const linking = LINK_SET.linking.map(({ common, ...places }) => ({ ...places, covariance: common ** 2 }));
 const found = link({ ...LINK_SET, linking });
 
-describe('link: a regional comparison to another (synthetic, mpmath at 50 digits)', () => {
+describe('link: S7, a regional comparison to another (synthetic, mpmath at 50 digits)', () => {
   it('finds the offset by the linking laboratories, weighted by what their results do not share', () => {
     expect(found.offset).toBeCloseTo(LINK_SET.offset, 13);
     expect(found.offsetUncertainty).toBeCloseTo(LINK_SET.uOffset, 13);
@@ -38,6 +38,7 @@ describe('link: a regional comparison to another (synthetic, mpmath at 50 digits
     expect(found.reference.value).toBe(ref.value);
     expect(ref.value).toBeCloseTo(LINK_SET.value, 13);
     expect(ref.standardUncertainty).toBeCloseTo(LINK_SET.u, 14);
+    expect(ref.chiSquared).toBeCloseTo(6.706458906380556, 11);
     degreesOfEquivalence(LINK_SET.reference, ref).forEach((degree, i) => {
       expect(degree.difference).toBeCloseTo(LINK_SET.ofReference[i]!.difference, 13);
       expect(degree.expandedUncertainty).toBeCloseTo(LINK_SET.ofReference[i]!.expanded, 12);

@@ -11,7 +11,7 @@ function nearly(found: number[], expected: number[], digits = 12): void {
   found.forEach((value, i) => expect(value).toBeCloseTo(expected[i]!, digits));
 }
 
-describe('referToCommonDate: two loops with drift (synthetic, mpmath at 50 digits)', () => {
+describe('referToCommonDate: S3, two loops with drift (synthetic, mpmath at 50 digits)', () => {
   const found = referToCommonDate(circulation);
 
   it('finds both drift lines and tells which is significant', () => {
@@ -39,11 +39,11 @@ describe('referToCommonDate: two loops with drift (synthetic, mpmath at 50 digit
     expect(ref.standardUncertainty).toBeCloseTo(DRIFT_SET.u, 13);
     expect(ref.chiSquared).toBeCloseTo(DRIFT_SET.chiSquared, 10);
     nearly(ref.coefficients, DRIFT_SET.weights);
-    nearly(
-      degreesOfEquivalence(found, ref).map((d) => d.en),
-      DRIFT_SET.en,
-      10,
-    );
+    expect(ref.pValue).toBeCloseTo(DRIFT_SET.pValue, 12);
+    const degrees = degreesOfEquivalence(found, ref);
+    nearly(degrees.map((d) => d.difference), DRIFT_SET.differences, 13); // prettier-ignore
+    nearly(degrees.map((d) => d.expandedUncertainty), DRIFT_SET.expanded, 13); // prettier-ignore
+    nearly(degrees.map((d) => d.en), DRIFT_SET.en, 10); // prettier-ignore
   });
 
   it('without drift takes the mean of the visits', () => {

@@ -38,7 +38,7 @@ function published(): number[] {
   }, []);
 }
 
-describe('notices that map one mass-scale version to the next', () => {
+describe('KG-cv1, KG-cv2, KG-rule, KG-phases: notices that map one mass-scale version to the next', () => {
   it('carry the published offsets 0, -2, -7, -12 by steps of -2, -5, -5', () => {
     const offsets = [0, ...published()];
     expect(offsets).toEqual([0, -2, -7, -12]);

@@ -1,6 +1,6 @@
 import { compiled } from './compile-network.ts';
 import type { CompiledNetwork } from './compiled-network.ts';
-import { type VarianceTerm, welchSatterthwaite } from './degrees-of-freedom.ts';
+import { chainDegreesOfFreedom, type VarianceTerm } from './degrees-of-freedom.ts';
 import { groupKey, type Network } from './network.ts';
 import { groupPull, requireNode, type Walk, walkUp } from './walk.ts';
 
@@ -45,7 +45,7 @@ export function propagate(network: Network | CompiledNetwork, focus: string): Pr
   return {
     standardUncertainty: missing.length > 0 ? null : Math.sqrt(Math.max(0, variance)),
     missing: missing.map(net.idOf),
-    degreesOfFreedom: welchSatterthwaite(origins.terms),
+    degreesOfFreedom: chainDegreesOfFreedom(origins.terms),
     sensitivities: named(walk.gain),
     contributions: origins.contributions,
     covarianceWithFocus: named(covariances),

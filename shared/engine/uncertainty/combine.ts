@@ -21,7 +21,7 @@ export interface BudgetComponent {
 export interface CombinedUncertainty {
   /** In the unit of the result. */
   standardUncertainty: number;
-  /** Effective degrees of freedom; null with a correlation matrix, for which they are not defined. */
+  /** Effective degrees of freedom, not truncated; null with a correlation matrix, for which they are not defined. */
   degreesOfFreedom: number | null;
 }
 

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { coverageFactor } from './coverage-factor.ts';
-import { effectiveDegreesOfFreedom } from './effective-degrees-of-freedom.ts';
+import { effectiveDegreesOfFreedom, truncateDegreesOfFreedom } from './effective-degrees-of-freedom.ts';
 import { standardUncertainty } from './standard-uncertainty.ts';
 
 describe('standardUncertainty', () => {
@@ -164,5 +164,18 @@ describe('effectiveDegreesOfFreedom', () => {
     expect(() => of([])).toThrow(expect.objectContaining({ code: 'too-few-values' }));
     expect(() => of([[NaN, 5]])).toThrow(expect.objectContaining({ field: 'components[0].contribution' }));
     expect(() => of([[1, 0]])).toThrow(expect.objectContaining({ code: 'out-of-range' }));
+  });
+});
+
+describe('truncateDegreesOfFreedom', () => {
+  it.each([
+    [18.999, 18],
+    [16.7, 16],
+    [19, 19],
+    [19 * (1 - 2e-16), 19],
+    [Infinity, Infinity],
+    [0.9, 0],
+  ])('%d is stated as %d', (real, stated) => {
+    expect(truncateDegreesOfFreedom(real)).toBe(stated);
   });
 });

@@ -12,10 +12,38 @@ export interface EffectiveComponent {
   estimate?: string;
 }
 
-/** Squares of the contributions that rest on one variance estimate, with its degrees of freedom. */
-interface EstimateShare {
-  square: number;
+/** The variance that rests on one variance estimate, any one unit, with the estimate's degrees of freedom. */
+export interface EstimateShare {
+  variance: number;
   degreesOfFreedom: number;
+}
+
+/**
+ * The formula of Welch and Satterthwaite over distinct estimates, not truncated: `u^4 / sum(u_q^4 / nu_q)`.
+ *
+ * Source: JCGM 100:2008, annex G.4.1, equation (G.2b).
+ *
+ * @returns Infinity where no share has a finite number of degrees of freedom, or there is no variance
+ */
+export function welchSatterthwaite(shares: readonly EstimateShare[]): number {
+  const total = shares.reduce((sum, { variance }) => sum + variance, 0);
+  if (total <= 0) return Infinity;
+  const spread = shares.reduce(
+    (sum, { variance, degreesOfFreedom }) => sum + (variance / total) ** 2 / degreesOfFreedom,
+    0,
+  );
+  return 1 / spread;
+}
+
+/**
+ * Effective degrees of freedom as they are stated and as a table of Student's factors is entered: truncated to the
+ * next lower integer. Infinity stays.
+ *
+ * Source: JCGM 100:2008, annex G.4.1, note 1 (from memory).
+ */
+export function truncateDegreesOfFreedom(degreesOfFreedom: number): number {
+  // A quotient that is an integer on paper may come out a last bit below it.
+  return Math.floor(degreesOfFreedom * (1 + 1e-12));
 }
 
 function addTo(shares: Map<string, EstimateShare>, key: string, one: EstimateShare, field: string): void {
@@ -32,12 +60,14 @@ function addTo(shares: Map<string, EstimateShare>, key: string, one: EstimateSha
       `The estimate "${key}" has ${known.degreesOfFreedom} elsewhere, and one estimate has one number.`,
     );
   }
-  known.square += one.square;
+  known.variance += one.variance;
 }
 
 /**
  * Welch-Satterthwaite over distinct variance estimates: a pooled standard deviation used several times counts once.
- * Not truncated. Contributions are taken as uncorrelated otherwise.
+ * Contributions are taken as uncorrelated otherwise. The number is the real one, 18.999 in the example of the
+ * document; whoever states it, or a coverage factor with it, truncates it (`truncateDegreesOfFreedom`), as
+ * `propagate` does.
  *
  * Source: JCGM 100:2008, annex G.4.1, equation (G.2b), with the squares that rest on one estimate added first.
  *
@@ -56,12 +86,9 @@ export function effectiveDegreesOfFreedom(components: readonly EffectiveComponen
   components.forEach((one, i) => {
     const field = `components[${i}].degreesOfFreedom`;
     const degreesOfFreedom = requireDegreesOfFreedom(one.degreesOfFreedom, field);
-    const square = (item(contributions, i) / largest) ** 2;
+    const variance = (item(contributions, i) / largest) ** 2;
     // A name cannot begin with a colon and a number of its own: unnamed estimates stay apart.
-    addTo(shares, one.estimate ?? `:${i}`, { square, degreesOfFreedom }, field);
+    addTo(shares, one.estimate ?? `:${i}`, { variance, degreesOfFreedom }, field);
   });
-  const all = [...shares.values()];
-  const variance = all.reduce((sum, { square }) => sum + square, 0);
-  const spread = all.reduce((sum, share) => sum + (share.square * share.square) / share.degreesOfFreedom, 0);
-  return spread === 0 ? Infinity : (variance * variance) / spread;
+  return welchSatterthwaite([...shares.values()]);
 }

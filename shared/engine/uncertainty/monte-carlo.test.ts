@@ -1,5 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { combine } from './combine.ts';
+import { coverageFactor } from './coverage-factor.ts';
 import { coverageInterval } from './coverage-interval.ts';
 import type { Distribution } from './input-distribution.ts';
 import { monteCarlo, numericalTolerance } from './monte-carlo.ts';
@@ -52,6 +54,26 @@ describe('monteCarlo: JCGM101-9.3, mass calibration', () => {
     const low = Math.abs(1.234 - 1.959964 * u - interval[0]);
     expect(Math.abs(low - 0.0451)).toBeLessThan(0.003);
     expect(low).toBeGreaterThan(0.005);
+  });
+
+  it('with the second order terms, [1.087, 1.381] with u = 0.075, the first order and Monte Carlo agree', () => {
+    // The products of the air density and each density: m u(rho_a) u(rho) / rho^2, in mg.
+    const product = (density: number) =>
+      ((100_000 * 0.1) / Math.sqrt(3)) * (density / Math.sqrt(3) / 8000 ** 2);
+    const line = (name: string, standardUncertainty: number) => ({
+      name,
+      standardUncertainty,
+      sensitivity: 1,
+    });
+    const budget = [line('reference', 0.05), line('difference', 0.02), line('weight', product(1000)), line('standard', product(50))]; // prettier-ignore
+    const u = combine(budget).standardUncertainty;
+    expect(Math.abs(u - 0.075)).toBeLessThan(0.0001);
+    const k = coverageFactor(0.95, Infinity);
+    expect(Math.abs(1.234 - k * u - 1.087)).toBeLessThan(0.0005);
+    expect(Math.abs(1.234 + k * u - 1.381)).toBeLessThan(0.0005);
+    const { interval } = monteCarlo(model, inputs, { seed: 1, digits: 1 });
+    expect(Math.abs(1.234 - k * u - interval[0])).toBeLessThan(0.005);
+    expect(Math.abs(1.234 + k * u - interval[1])).toBeLessThan(0.005);
   });
 });
 

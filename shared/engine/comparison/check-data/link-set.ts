@@ -1,4 +1,4 @@
-/** A regional comparison linked to another by two participants: synthetic, computed with mpmath at 50 digits, in mg. */
+/** S7: a regional comparison linked to another by two participants: synthetic, computed with mpmath at 50 digits, in mg. */
 export const LINK_SET = {
   reference: {
     values: [0.214, 0.195, 0.24, 0.188, 0.221, 0.203, 0.232, 0.209, 0.181],

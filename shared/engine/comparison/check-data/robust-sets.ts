@@ -1,4 +1,4 @@
-/** Robust values of ISO 13528:2015 annex C, computed by an independent program; checked at full convergence. */
+/** P15, P16, S0 to S2, S5: robust values of ISO 13528:2015 annex C, computed by an independent program; checked at full convergence. */
 export const ROBUST_SETS: {
   id: string;
   source: string;

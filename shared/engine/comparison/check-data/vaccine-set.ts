@@ -1,4 +1,4 @@
-/** dat.bcg, 13 values with their variances, from the test suite of R metafor; estimates of R metafor 3.8.1. */
+/** P14: dat.bcg, 13 values with their variances, from the test suite of R metafor; estimates of R metafor 3.8.1. */
 export const VACCINE_SET = {
   values: [
     -0.889311333920205, -1.58538865720143, -1.34807314829969, -1.44155119002131, -0.217547322211296,
