@@ -88,7 +88,7 @@ function ClosedDraft({ draft }: { draft: DraftResponse }) {
 }
 
 /** The laboratories for which this person may begin a draft: for the registrar all. The server decides again. */
-function usePlaces(): { id: string; name: string }[] {
+function usePlaces(): { id: string; code: string; name: string }[] {
   const { roles } = usePerson();
   const isRegistrar = roles.some(({ role }) => role === 'registrar');
   const { data } = useQuery({ ...laboratoriesQuery, enabled: isRegistrar });
