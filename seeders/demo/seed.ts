@@ -1,6 +1,7 @@
 import type { Sequelize } from 'sequelize';
 import { makeContext, type Context } from '#server/http/context.ts';
 import { drawsFor } from './draws.ts';
+import { leaveDrafts } from './drafts.ts';
 import { makePlan } from './make-plan.ts';
 import type { DemoPlan } from './plan.ts';
 import { admitNetwork, type Admitted } from './seed-network.ts';
@@ -38,6 +39,7 @@ export async function seedDemoNetwork(database: Sequelize, say: Say): Promise<Se
     clock.turnTo(step.day);
     await runStep(await signedBy(context, admitted, step), step, admitted);
   }
+  await leaveDrafts(context, admitted);
   say(`  ${year}: ${admitted.valueUids.size} values in all`);
   return { plan, valueUids: admitted.valueUids };
 }

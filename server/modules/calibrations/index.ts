@@ -3,3 +3,4 @@ export { reviseCalibration } from './revise-calibration.service.ts';
 export { withdrawCalibration } from './withdraw-calibration.service.ts';
 export { calibrationRoutes } from './calibrations.routes.ts';
 export { openDrafts } from './draft-list.queries.ts';
+export { createDraft, setDraftState } from './draft-store.ts';
