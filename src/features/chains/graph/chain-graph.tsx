@@ -7,7 +7,7 @@ import { Waiting } from '#src/components/ui/progress.tsx';
 import { linkKey, type ChainQuestion } from '../question.ts';
 import { BandNode } from './band-node.tsx';
 import { drawnPart } from '../drawn-part.ts';
-import { displayList, layoutInput, type DisplayList, type Plate } from './display-list.ts';
+import { displayList, layoutInput, type DisplayList } from './display-list.ts';
 import { PlateNode } from './plate-node.tsx';
 import { RibbonEdge } from './ribbon-edge.tsx';
 import { useLayout } from './use-layout.ts';
@@ -79,7 +79,6 @@ function nodesOf(list: DisplayList, at: string | undefined): Node[] {
     type: 'plate',
     position: { x: plate.x, y: plate.y },
     data: { plate, isSelected: plate.id === at },
-    ariaLabel: plateLabel(plate),
   }));
   return [band, ...plates];
 }
@@ -94,10 +93,4 @@ function edgesOf(list: DisplayList, at: string | undefined): Edge[] {
     target: ribbon.link.childUid,
     data: { ribbon, isSelected: linkKey(ribbon.link) === at },
   }));
-}
-
-function plateLabel({ node, isFocus }: Plate): string {
-  if (node.type === 'source') return `Shared effect: ${node.name}`;
-  const kind = node.rootKind ? `, ${node.rootKind}` : '';
-  return `${isFocus ? 'The weight itself: ' : ''}${node.registryNo}${kind}, certificate ${node.certificateNo}, ${node.state}`;
 }

@@ -46,7 +46,11 @@ function ValueFace({ plate, node }: { plate: Plate; node: Extract<Plate['node'],
   return (
     <>
       <div className="flex items-baseline justify-between gap-1 text-xs">
-        <span className="font-mono text-sm">{node.registryNo}</span>
+        <span className="font-mono text-sm">
+          {plate.isFocus && <span className="sr-only">The weight itself: </span>}
+          {node.registryNo}
+          <span className="sr-only">, certificate {node.certificateNo}</span>
+        </span>
         <span className="truncate text-ink-2">
           {node.rootKind ?? <NominalAndClass nominal={node.nominal} weightClass={node.class} />}
         </span>
