@@ -15,7 +15,7 @@ import { firstLoad } from './first-load.ts';
 const VALUES = 200;
 /** Any number: another one draws other values. */
 const SEED = 20_260_520;
-const ENTRY_LIMIT_KB = 200;
+const LIMIT_KB = 200;
 
 const { baseUrl, databaseUrl, pidFile } = toolEnvironment();
 
@@ -55,11 +55,12 @@ async function benchChains(): Promise<void> {
 
 function benchFirstLoad(): void {
   const { entry, screens } = firstLoad(path.resolve('dist/client'));
-  const [largest] = screens;
-  console.log(
-    `\nFirst-load JavaScript, gzip: entry ${entry.toFixed(1)} kB; largest screen with it ` +
-      `${largest?.kilobytes.toFixed(1)} kB (${largest?.chunk}), the chain's drawing apart; aim: below ${ENTRY_LIMIT_KB} kB`,
-  );
+  console.log(`\nFirst-load JavaScript, gzip, the chain's drawing apart; aim: below ${LIMIT_KB} kB`);
+  console.log(`  entry ${entry.toFixed(1)} kB`);
+  for (const { chunk, kilobytes } of screens) {
+    const name = chunk.replace(/-[\w-]{8}\.js$/, '');
+    console.log(`  ${name} ${kilobytes.toFixed(1)} kB${kilobytes > LIMIT_KB ? ', above the aim' : ''}`);
+  }
 }
 
 function benchEngine(): void {
