@@ -40,6 +40,7 @@ export default defineConfig(({ isSsrBuild }) => ({
             'server/**/*.test.ts',
             'seeders/**/*.test.ts',
             'tests/house/**/*.test.ts',
+            'tests/golden/**/*.test.ts',
             'src/**/*.node.test.ts',
           ],
         },

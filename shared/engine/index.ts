@@ -18,6 +18,7 @@ export { WEIGHT_CLASSES, MPE_SOURCE, DENSITY_SOURCE } from './conformity/r111-20
 export { POLARIZATION_SOURCE, SUSCEPTIBILITY_SOURCE } from './conformity/r111-2004.ts';
 export { maximumPermissibleError } from './conformity/maximum-permissible-error.ts';
 export { classConformity, DECISION_RULES } from './conformity/class-conformity.ts';
+export { reachableClasses } from './conformity/reachable-classes.ts';
 export { densityLimits, densityLimitsByRule } from './conformity/density-limits.ts';
 export { polarizationLimit, susceptibilityLimit } from './conformity/magnetic-limits.ts';
 export type { WeightClass, LimitsSource, DensityInterval } from './conformity/r111-2004.ts';
@@ -51,6 +52,7 @@ export { covariance, covarianceMatrix } from './network/covariance.ts';
 export { inferLocal } from './network/infer-local.ts';
 export { shift } from './network/shift.ts';
 export { applyChanges } from './network/apply-changes.ts';
+export { distanceToLimit } from './network/distance-to-limit.ts';
 export { groupKey } from './network/network.ts';
 export type { Network, NetworkValue, NetworkSource, NetworkGroup, NetworkLink } from './network/network.ts';
 export type { Propagation } from './network/propagate.ts';

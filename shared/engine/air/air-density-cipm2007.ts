@@ -91,6 +91,8 @@ const STEPS = { temperature: 0.01, pressure: 10, relativeHumidity: 1e-3, carbonD
  * How the CIPM-2007 air density changes with each quantity measured, by central differences of the formula at the
  * state given; correct to better than a part in 1e6.
  *
+ * Source: as `airDensityCipm2007`.
+ *
  * @throws EngineError `not-finite` or `out-of-range`, naming the quantity
  */
 export function airDensitySensitivities(a: AirState): AirDensitySensitivities {

@@ -55,6 +55,8 @@ export function compressibility(temperature: number, pressure: number, fraction:
 /**
  * The relative humidity, 0 to 1, that a dew point stands for, for those who measure it with a chilled mirror.
  *
+ * Source: Picard et al. 2008, appendix A1 (from memory): both give the same mole fraction of water vapour.
+ *
  * @param a.dewPoint degC, at most the temperature
  * @param a.temperature degC
  * @param a.pressure Pa

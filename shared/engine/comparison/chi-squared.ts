@@ -26,6 +26,7 @@ export function chiSquaredUpperTail(x: number, degreesOfFreedom: number): number
 
 /**
  * The value a chi-squared variable exceeds with the given probability, by bisection to the last digits.
+ * Source: solved from `chiSquaredUpperTail`, not read from a table.
  * @param probability above 0, below 1
  * @param degreesOfFreedom whole, at least 1
  * @throws EngineError `not-whole`, `not-finite`, `out-of-range`

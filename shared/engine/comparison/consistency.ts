@@ -1,5 +1,5 @@
 import { inverseSymmetric } from '../linear/matrix.ts';
-import { requireLevel } from '../quantity/domain.ts';
+import { requireLevel, requireNumber } from '../quantity/domain.ts';
 import { chiSquaredUpperPoint, chiSquaredUpperTail } from './chi-squared.ts';
 import { checkedResults, requireMembers, type Results, statedCovariance } from './results.ts';
 import { weightedMean } from './weighted-mean.ts';
@@ -22,7 +22,7 @@ export type Consistency = {
  * Chi-squared test of the results that count about their own weighted mean, with the full covariance; the upper
  * point counts (one-sided). It passes or fails the set as a whole and says nothing about single pairs.
  * @param level probability of calling consistent results inconsistent; 0.05 by custom
- * @throws EngineError `uncertainties-missing`, `out-of-range`, those of `checkedResults`; `too-few-values` for fewer than two
+ * @throws EngineError `missing-uncertainties`, `out-of-range`, those of `checkedResults`; `too-few-values` for fewer than two
  */
 export function consistency(r: Results, level = 0.05): Consistency {
   requireLevel(level);
@@ -59,9 +59,11 @@ export function observed(
 /**
  * Chi-squared of all results, members or not, about a given value: some reports sum over more participants than
  * define the reference value, and then state their own degrees of freedom.
- * @throws EngineError `uncertainties-missing`, `singular`, those of `checkedResults`
+ * Source: JCGM 102:2011, quadratic form of the residuals (from memory).
+ * @throws EngineError `not-finite`, `missing-uncertainties`, `singular`, those of `checkedResults`
  */
 export function chiSquaredAbout(r: Results, value: number): number {
+  requireNumber(value, 'value');
   const checked = checkedResults(r);
   const weights = inverseSymmetric(statedCovariance(checked), 'covariance');
   const residuals = checked.values.map((x) => x - value);

@@ -19,7 +19,7 @@ export type DegreeOfEquivalence = {
  * inverse-variance mean and the plus sign of outsiders (Cox 2002 Metrologia 39 589) both follow from it.
  * Written with `1 - c_i = sum of the other c`, so that one dominant laboratory does not come out with U = 0.
  * @param options.includeBetweenVariance count the variance between laboratories as part of each result's own
- * @throws EngineError `uncertainties-missing`, `size-mismatch`, those of `checkedResults`
+ * @throws EngineError `missing-uncertainties`, `size-mismatch`, those of `checkedResults`
  */
 export function degreesOfEquivalence(
   r: Results,
@@ -55,8 +55,8 @@ export function equivalence(difference: number, variance: number): DegreeOfEquiv
 
 /**
  * Every pair of results: the difference and its U at k = 2, `u^2 = V_ii + V_jj - 2 V_ij`. The reference value cancels,
- * so a pair may disagree in a comparison that is consistent as a whole.
- * @throws EngineError `uncertainties-missing`, those of `checkedResults`
+ * so a pair may disagree in a comparison that is consistent as a whole. Source: Cox 2002 Metrologia 39 589.
+ * @throws EngineError `missing-uncertainties`, those of `checkedResults`
  */
 export function pairwise(
   r: Results,

@@ -4,6 +4,7 @@ import { type CheckedResults, checkedResults, type Results, statedCovariance } f
 import { subsetsOfSize } from './subsets.ts';
 import { weightedMean } from './weighted-mean.ts';
 
+/** The subset kept, and how far another would have served as well. */
 export type ConsistentSubset = {
   /** Places of the results kept. */
   members: number[];
@@ -33,7 +34,7 @@ type Subset = { members: number[]; chiSquared: number };
  * that size the one with the smallest chi-squared (Cox 2007 Metrologia 44 187). It need not be unique.
  * The degrees of equivalence of all results follow from the general formula with the subset as those that count.
  * @param level of the test, 0.05 by custom
- * @throws EngineError `uncertainties-missing`, `out-of-range`, those of `checkedResults`
+ * @throws EngineError `missing-uncertainties`, `out-of-range`, those of `checkedResults`
  */
 export function largestConsistentSubset(r: Results, level = 0.05): ConsistentSubset {
   requireLevel(level);

@@ -10,6 +10,7 @@ import { weightedMean } from './weighted-mean.ts';
 /** A participant of both comparisons: its places, and the covariance of its two results (the common part squared). */
 export type LinkingParticipant = { reference: number; regional: number; covariance: number };
 
+/** A regional comparison on the scale of another. */
 export type Link = {
   /** Of the reference comparison; linking never moves it. */
   reference: Pick<ReferenceValue, 'value' | 'coefficients' | 'standardUncertainty'>;

@@ -15,6 +15,7 @@ export type Observation = {
   commonUncertainty?: number;
 };
 
+/** All measurements of the travelling standards of one comparison. */
 export type Circulation = {
   observations: Observation[];
   pilot: string;

@@ -32,6 +32,7 @@ export type Estimator = (typeof ESTIMATORS)[number];
 /** What a person should look at before the value is used. */
 export type ReferenceWarning = 'negative-weights' | 'between-variance-cut-at-zero';
 
+/** A reference value with what it rests on, in the unit of the results. */
 export type ReferenceValue = {
   value: number;
   standardUncertainty: number;

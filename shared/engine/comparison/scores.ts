@@ -57,7 +57,10 @@ export function zPrimeScore(a: {
   ]);
 }
 
-/** Whether the reference value is certain enough for a z score: `u(x_pt) < 0.3 sigma_pt` (ISO 13528:2015 9.2.1). */
+/**
+ * Whether the reference value is certain enough for a z score: `u(x_pt) < 0.3 sigma_pt` (ISO 13528:2015 9.2.1).
+ * @throws EngineError `not-finite`, `out-of-range`
+ */
 export function zScoreAllowed(a: {
   referenceStandardUncertainty: number;
   standardDeviation: number;
@@ -67,7 +70,10 @@ export function zScoreAllowed(a: {
   return a.referenceStandardUncertainty < 0.3 * a.standardDeviation;
 }
 
-/** What a z, z' or zeta score signals: above 2 a warning, from 3 on an action (ISO 13528:2015 9.4.2). */
+/**
+ * What a z, z' or zeta score signals: above 2 a warning, from 3 on an action (ISO 13528:2015 9.4.2).
+ * @throws EngineError `not-finite`
+ */
 export function scoreSignal(score: number): 'none' | 'warning' | 'action' {
   const size = Math.abs(requireNumber(score, 'score'));
   if (size >= 3) return 'action';

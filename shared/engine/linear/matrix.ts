@@ -162,7 +162,8 @@ function eliminateColumn(rows: number[][], k: number, field: string): void {
 /**
  * Whether a matrix can be a covariance matrix. Where it cannot, `offending` names the pair to look at: mirrored
  * entries that differ, a negative variance (i = j), a correlation beyond 1, or the pair that pulls the variance
- * of some combination below zero the most.
+ * of some combination below zero the most. Source: JCGM 102:2011, 3.11, note 3 (from memory): a covariance matrix is
+ * positive semidefinite.
  * @throws EngineError `not-rectangular`, `not-finite`, `not-square`
  */
 export function isPositiveSemidefinite(matrix: Matrix): { ok: boolean; offending?: [number, number] } {

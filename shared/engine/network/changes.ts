@@ -16,6 +16,7 @@ export type Change =
   | { kind: 'replace'; value: string; by: string; delta: number }
   | Notice;
 
+/** One shared effect on several values; see `Change`. Shifts and the uncertainty are in the network's unit. */
 export type Notice = {
   kind: 'notice';
   id: string;

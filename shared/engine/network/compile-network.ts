@@ -4,7 +4,7 @@ import type { Network } from './network.ts';
 import { networkFromArrays } from './network-from-arrays.ts';
 
 /**
- * Compiles a network for repeated walks.
+ * Compiles a network for repeated walks. Source: the linear model of JCGM 102:2011, 6.2, as `Network` writes it.
  * @throws EngineError `circle` naming its members, those of `checkNetwork` and of `checkGroups`
  */
 export function compileNetwork(network: Network): CompiledNetwork {

@@ -5,7 +5,7 @@ import type { Network } from './network.ts';
 import { groupPull, requireNode, type Walk, walkUp } from './walk.ts';
 
 /**
- * Covariance of two values or sources through everything they share: the same walk from both.
+ * Covariance of two values or sources through everything they share: the same walk from both (JCGM 102:2011, 6.2).
  * @throws EngineError `unknown-node`; `unknown-local` naming a shared value whose local part is not known; those of
  * `compileNetwork`
  */
@@ -16,7 +16,7 @@ export function covariance(network: Network | CompiledNetwork, a: string, b: str
 }
 
 /**
- * Covariance matrix of the values or sources named, in that order; symmetric to the last digit.
+ * Covariance matrix of the values or sources named, in that order; symmetric to the last digit (JCGM 102:2011, 6.2).
  * @throws EngineError as `covariance`
  */
 export function covarianceMatrix(network: Network | CompiledNetwork, ids: readonly string[]): number[][] {

@@ -9,6 +9,7 @@ const PLAIN_DECIMAL = /^\d+(\.\d+)?$/;
  * at issue. U is rounded, so it stands for the interval (U +/- half a last digit)/k:
  * `deficit` (l = 0): even the upper end is below what the parents carry; `within rounding` (l = 0): the carried
  * uncertainty lies in the interval, so l cannot be told from 0; `holds`: l is told from 0.
+ * Source: JCGM 100:2008, 4.3.3 for U/k; the interval of a rounded number is a definition of our own.
  * @param a.expandedUncertainty text as printed, since its last digit matters, in the network's unit
  * @param a.carriedVariance variance the parents bring, each with its uncertainty as used
  * @throws EngineError `not-a-number`, `not-finite`, `out-of-range`

@@ -1,3 +1,5 @@
+import { requireWhole } from '../quantity/domain.ts';
+
 /**
  * A network of assigned values, as the callers write it. One unit throughout: uncertainties are standard
  * uncertainties, covariances are in the square of that unit, sensitivities bring a parent's unit to its child's.
@@ -51,7 +53,10 @@ export type NetworkLink = {
   classLimit?: { standardUncertainty: number };
 };
 
-/** The key under which a group's variance appears among the contributions: `group:` and its place in the list. */
+/**
+ * The key under which a group's variance appears among the contributions: `group:` and its place in the list.
+ * @throws EngineError `not-whole` or `out-of-range`
+ */
 export function groupKey(index: number): string {
-  return `group:${index}`;
+  return `group:${requireWhole(index, 'index', { min: 0 })}`;
 }

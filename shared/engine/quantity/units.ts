@@ -1,6 +1,6 @@
 import { Decimal } from '#shared/decimal.ts';
 import { EngineError } from '../errors.ts';
-import { requireChoice, requireDecimal } from './domain.ts';
+import { requireChoice, requireDecimal, requireWhole } from './domain.ts';
 
 /** Codes of the units the product keeps, as they are stored and sent. */
 export const UNITS = ['kg', 'g', 'mg', 'ug', 'kg/m3', 'cm3', 'hPa', 'Pa', 'degC', '%'] as const;
@@ -55,7 +55,9 @@ const SPELLINGS: ReadonlyMap<string, Unit> = new Map<string, Unit>([
 ]);
 
 /**
- * The unit a piece of text names, or null when it names none.
+ * The unit a piece of text names, or null when it names none; never throws.
+ *
+ * Source: SI Brochure, 9th edition, 5.2, for the symbols; other spellings are common practice, no source.
  *
  * @param text the unit as written, without spaces around it
  */
@@ -94,8 +96,8 @@ export function convertUnit(value: Decimal, from: Unit, to: Unit): Decimal {
  * How many decimals a value reported with `decimals` decimals has after a change of unit: 0.012 mg is 12 ug.
  * Zero is the least; the places before the decimal sign that were not reported are not shown by this number.
  *
- * @throws EngineError `unknown-choice` or `unit-mismatch`
+ * @throws EngineError `not-whole`, `out-of-range`, `unknown-choice` or `unit-mismatch`
  */
 export function convertDecimals(decimals: number, from: Unit, to: Unit): number {
-  return Math.max(0, decimals - shiftBetween(from, to));
+  return Math.max(0, requireWhole(decimals, 'decimals', { min: 0 }) - shiftBetween(from, to));
 }

@@ -16,6 +16,7 @@ export type ElectronConstants = {
   electronRelativeMass: number;
 };
 
+/** A silicon sphere as measured. */
 export type CrystalSphere = {
   /** Volume of the silicon core in m3 and lattice parameter in m, at the same temperature and in vacuum. */
   volume: number;
@@ -86,8 +87,13 @@ export function crystalDensityMass(a: CrystalSphere, u: CrystalUncertainties): R
   ]);
 }
 
-/** Mass of the electron in kg: `2 h R / (c alpha2)`. Source: definition of the Rydberg constant; h and c exact. */
+/**
+ * Mass of the electron in kg: `2 h R / (c alpha2)`. Source: definition of the Rydberg constant; h and c exact.
+ * @throws EngineError `not-finite` or `out-of-range`
+ */
 export function electronMass(a: Pick<ElectronConstants, 'rydberg' | 'fineStructure'>): Decimal {
+  requireNumber(a.rydberg, 'constants.rydberg', { above: 0, unit: '1/m' });
+  requireNumber(a.fineStructure, 'constants.fineStructure', { above: 0 });
   return PLANCK_CONSTANT.times(2)
     .times(a.rydberg)
     .div(SPEED_OF_LIGHT.times(new Decimal(a.fineStructure).pow(2)));
@@ -98,9 +104,7 @@ function checkSphere(a: CrystalSphere, u: CrystalUncertainties): void {
   requireNumber(a.latticeParameter, 'latticeParameter', { above: 0, unit: 'm' });
   requireNumber(a.surfaceLayer, 'surfaceLayer', { unit: 'kg' });
   requireNumber(a.pointDefects, 'pointDefects', { unit: 'kg' });
-  for (const field of ['rydberg', 'fineStructure', 'electronRelativeMass'] as const) {
-    requireNumber(a.constants[field], `constants.${field}`, { above: 0 });
-  }
+  requireNumber(a.constants.electronRelativeMass, 'constants.electronRelativeMass', { above: 0 });
   if (a.isotopes.length === 0) {
     throw new EngineError('too-few-values', 'isotopes', 'no isotope', 'At least one is needed.');
   }

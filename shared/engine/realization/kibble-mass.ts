@@ -7,6 +7,7 @@ import { correctionLines, type KibbleCorrections } from './kibble-corrections.ts
 /** A voltage as a Josephson array shows it: so many junctions on their first step at one frequency in Hz. */
 export type JosephsonVoltage = { junctions: number; frequency: number };
 
+/** One run of a Kibble balance: weighing phase, moving phase, and where it stands. */
 export type KibbleRun = {
   /** Voltage across the resistor while the coil current holds the weight. */
   weighing: JosephsonVoltage;

@@ -19,6 +19,7 @@ export type EpochSplit<T> = { epochs: T[][]; undetermined: T[] };
  * last good day belongs before, one on the first bad day after, one in between to neither; where both are the
  * same day, as-found is before and as-left after, and without a condition it is undetermined.
  * Epochs come in the order of time, one more than interventions, and may be empty.
+ * Source: as-found and as-left as in ISO/IEC 17025:2017, 7.8.4.1 d (from memory); the rest is a definition of our own.
  * @throws EngineError `not-a-date`, `backwards` when lastGood is after firstBad, `overlapping-interventions`
  */
 export function splitByEpochs<T extends Dated>(

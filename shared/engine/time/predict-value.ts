@@ -8,6 +8,7 @@ import { crossedIntervention, type Intervention } from './epochs.ts';
 import { diagonalCovariance, fitLine, type LinearFit } from './fit-line.ts';
 import { checkHistory, type HistoryEntry } from './history.ts';
 
+/** How a history is to be read. */
 export type PredictionOptions = {
   /**
    * Covariance of the calibrations in the order of the history, variances included: calibrations that share a
@@ -24,6 +25,7 @@ export type PredictionOptions = {
   probability?: number;
 };
 
+/** What the line says at the date asked for, in the unit of the history. */
 export type Prediction = {
   value: number;
   standardUncertainty: number;

@@ -16,6 +16,7 @@ export type StepQuestion = {
   question: string;
 };
 
+/** A question, none, or why the history cannot tell. */
 export type StepAnswer =
   | { outcome: 'question'; question: StepQuestion }
   | { outcome: 'no question' }
@@ -26,6 +27,7 @@ export type StepAnswer =
  * standard (a new epoch), never an answer: nothing is split or removed. Each place between two calibrations is
  * tried with a line plus a step, by stated uncertainties; the probability is multiplied by the number of places.
  * Fewer than four calibrations cannot tell a step from a drift.
+ * Source: generalised least squares with a step as third column (own); Bonferroni's bound over the places.
  * @param options.level probability of a false question, 0.01 unless given
  * @throws EngineError `too-few-values` without calibrations, `not-a-date`, `not-finite`, `out-of-range`,
  * `size-mismatch`, `not-positive-definite`, `out-of-range`

@@ -40,10 +40,11 @@ export function welchSatterthwaite(shares: readonly EstimateShare[]): number {
  * next lower integer. Infinity stays.
  *
  * Source: JCGM 100:2008, annex G.4.1, note 1 (from memory).
+ * @throws EngineError `not-finite` or `out-of-range`
  */
 export function truncateDegreesOfFreedom(degreesOfFreedom: number): number {
   // A quotient that is an integer on paper may come out a last bit below it.
-  return Math.floor(degreesOfFreedom * (1 + 1e-12));
+  return Math.floor(requireDegreesOfFreedom(degreesOfFreedom, 'degreesOfFreedom') * (1 + 1e-12));
 }
 
 function addTo(shares: Map<string, EstimateShare>, key: string, one: EstimateShare, field: string): void {

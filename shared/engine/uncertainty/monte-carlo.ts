@@ -1,6 +1,6 @@
 import { EngineError } from '../errors.ts';
 import { item } from '../linear/entries.ts';
-import { requireChoice, requireNumber } from '../quantity/domain.ts';
+import { requireChoice, requireNumber, requireWhole } from '../quantity/domain.ts';
 import { coverageInterval, INTERVAL_KINDS, type IntervalKind } from './coverage-interval.ts';
 import { samplerOf, type Distribution } from './input-distribution.ts';
 import { randomSource } from './random.ts';
@@ -54,8 +54,14 @@ const FEWEST_BLOCKS = 10;
  * Numerical tolerance of a standard uncertainty: half a unit in its last significant digit.
  *
  * Source: JCGM 101:2008, 7.9.2.
+ *
+ * @param standardUncertainty any unit, not negative
+ * @param digits its significant digits that count, 1 to 15
+ * @throws EngineError `not-finite`, `not-whole` or `out-of-range`
  */
 export function numericalTolerance(standardUncertainty: number, digits: number): number {
+  requireNumber(standardUncertainty, 'standardUncertainty', { min: 0 });
+  requireWhole(digits, 'digits', { min: 1, max: 15 });
   if (standardUncertainty === 0) return 0;
   const exponent = Number(standardUncertainty.toExponential(digits - 1).split('e')[1]);
   return 0.5 * 10 ** (exponent - (digits - 1));

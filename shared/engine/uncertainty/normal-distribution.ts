@@ -39,9 +39,15 @@ export function normalUpperTail(z: number): number {
   return z < SERIES_LIMIT ? 0.5 - areaFromZero(z) : areaAbove(z);
 }
 
-/** Probability that a standard normal quantity is at most z; infinite z allowed. */
+/**
+ * Probability that a standard normal quantity is at most z; infinite z allowed.
+ *
+ * Source: as `normalUpperTail`.
+ *
+ * @throws EngineError `not-finite` for what is no number
+ */
 export function normalDistribution(z: number): number {
-  return normalUpperTail(-z);
+  return normalUpperTail(Math.abs(z) === Infinity ? -z : -requireNumber(z, 'z'));
 }
 
 /** Probability that a standard normal quantity lies between two deviates; loses no digits in either tail. */
@@ -53,6 +59,8 @@ export function normalBetween(lower: number, upper: number): number {
 
 /**
  * The deviate a standard normal quantity stays below with a given probability.
+ *
+ * Source: solved from `normalUpperTail`, not read from a table.
  *
  * @param probability more than 1e-300 and less than 1
  * @throws EngineError `not-finite` or `out-of-range`

@@ -91,6 +91,8 @@ function leftOutStudent(deviations: number[], index: number): number {
 /**
  * Grubbs' critical value for the farthest of `count` values: the largest distance from the mean, in standard
  * deviations of the series, that passes at `level` (two-sided).
+ *
+ * Source: ISO 5725-2, Grubbs' test (from memory); solved from Student's distribution, not read from a table.
  * @throws EngineError `not-whole`, `not-finite`, `out-of-range` (fewer than three values have no outlier test)
  */
 export function grubbsCriticalValue(count: number, level: number): number {

@@ -1,6 +1,7 @@
 import { EngineError } from '../errors.ts';
 import { requireNumber } from '../quantity/domain.ts';
 
+/** A weighing with and without a small weight of known mass on the load. */
 export type SensitivityWeighing = {
   /** Reading before and after the sensitivity weight was added. */
   readingWithout: number;

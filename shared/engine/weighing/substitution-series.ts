@@ -10,6 +10,7 @@ export const SUBSTITUTION_CYCLES = ['ABBA', 'ABA', 'AB1..BnA'] as const;
 /** How the weights of a series take turns. */
 export type SubstitutionCycle = (typeof SUBSTITUTION_CYCLES)[number];
 
+/** A substitution series as weighed. */
 export type SubstitutionSeries = {
   /** Comparator readings in the order taken, cycle after cycle, equally spaced in time within a cycle. */
   readings: number[];
@@ -25,6 +26,7 @@ export type SubstitutionSeries = {
 /** What one test weight got: its difference to the reference, cycle by cycle and on average. */
 export type TestDifference = { difference: number; differences: number[]; standardDeviation: number };
 
+/** The first test weight's difference, and that of each. */
 export type SubstitutionResult = TestDifference & {
   /** Degrees of freedom of `standardDeviation`: cycles - 1, times the test weights pooled. */
   degreesOfFreedom: number;

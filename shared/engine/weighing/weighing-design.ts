@@ -1,9 +1,11 @@
 import { EngineError } from '../errors.ts';
 import { build, entry, item, type Matrix } from '../linear/entries.ts';
 import { inverseSymmetric, multiply, multiplyVector, quadraticForm, transpose } from '../linear/matrix.ts';
+import { requireNumbers } from '../linear/requirements.ts';
 import { requireSize } from '../quantity/domain.ts';
 import { checkDesign, type CheckedDesign, type WeighingDesignInput } from './design-input.ts';
 
+/** What a design gives for its weights, in the unit of the differences. */
 export type WeighingDesignResult = {
   /** Deviation of each weight, in the order of the columns. */
   estimates: number[];
@@ -168,7 +170,9 @@ function sandwich(matrix: Matrix, covariance: Matrix): number[][] {
 /**
  * How uncertain a combination of the weights is, apart from the restraint: `within` as a multiple of the
  * standard deviation of one weighing, `between` of the day-to-day standard deviation of one weight. These are
- * the factors published beside weighing designs (e-Handbook 2.3.4.1, K1 and K2).
+ * the factors published beside weighing designs.
+ *
+ * Source: NIST/SEMATECH e-Handbook of Statistical Methods, 2.3.4.1, K1 and K2.
  * @throws EngineError those of `solveWeighingDesign`
  */
 export function designFactors(
@@ -184,6 +188,7 @@ export function designFactors(
     withinStandardDeviation: 0,
     betweenStandardDeviation: 1,
   }).designCovariance;
+  requireNumbers(combination, 'combination');
   requireSize(combination.length, within.length, 'combination', 'weights');
   const root = (matrix: Matrix) => Math.sqrt(Math.max(0, quadraticForm(matrix, combination)));
   return { within: root(within), between: root(between) };
