@@ -28,10 +28,29 @@ export const paths = {
     href: (revisionId: string) => `/calibrations/${revisionId}`,
   },
   chains: { path: '/chains', href: () => '/chains' },
-  chain: { path: '/chains/:valueUid', href: (valueUid: string) => `/chains/${valueUid}` },
+  chain: {
+    path: '/chains/:valueUid',
+    /** @param days in force on, as known on; today where left out */
+    href: (valueUid: string, days: Days = {}) => `/chains/${valueUid}${daysText(days)}`,
+  },
+  downstream: {
+    path: '/chains/:valueUid/downstream',
+    /** @param days in force on, as known on; today where left out */
+    href: (valueUid: string, days: Days = {}) => `/chains/${valueUid}/downstream${daysText(days)}`,
+  },
   network: { path: '/network', href: () => '/network' },
   laboratory: { path: '/network/:laboratoryId', href: (laboratoryId: string) => `/network/${laboratoryId}` },
 } as const;
+
+interface Days {
+  day?: string | undefined;
+  known?: string | undefined;
+}
+
+function daysText({ day, known }: Days): string {
+  const parameters = new URLSearchParams({ ...(day && { day }), ...(known && { known }) });
+  return parameters.size > 0 ? `?${parameters.toString()}` : '';
+}
 
 /** State of a navigation that gives the screen an address of its own and leaves the focus where it is. */
 export const SAME_SCREEN = 'same screen';

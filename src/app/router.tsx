@@ -28,6 +28,7 @@ export const routes: RouteObject[] = [
       screen(paths.calibration.path, () => import('#src/routes/calibration.tsx')),
       screen(paths.chains.path, () => import('#src/routes/chains.tsx')),
       screen(paths.chain.path, () => import('#src/routes/chain.tsx')),
+      screen(paths.downstream.path, () => import('#src/routes/downstream.tsx')),
       screen(paths.network.path, () => import('#src/routes/network.tsx')),
       screen(paths.laboratory.path, () => import('#src/routes/laboratory.tsx')),
       screen('*', () => import('#src/routes/not-found.tsx')),

@@ -1,5 +1,6 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router';
+import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { paths } from '#src/app/paths.ts';
 import { queryClient } from '#src/app/query-client.ts';
 import { Toolbar } from '#src/components/layout/columns.tsx';
@@ -8,6 +9,8 @@ import { chainQuery } from '#src/features/chains/api.ts';
 import { ChainScreen } from '#src/features/chains/components/chain-screen.tsx';
 import type { ValueNode } from '#src/features/chains/components/selection-sheet.tsx';
 import { readQuestion, withChange, type ChainQuestion } from '#src/features/chains/question.ts';
+import { distanceQuery } from '#src/features/downstream/api.ts';
+import { DistanceSection } from '#src/features/downstream/components/distance-section.tsx';
 
 /** Primes the chain, so that the drawing and its numbers are on the way together. */
 export async function loader({ params, request }: LoaderFunctionArgs): Promise<null> {
@@ -32,10 +35,33 @@ export function Component() {
   if (!data) return null;
   const change = (next: Partial<ChainQuestion>) =>
     setParameters(withChange(question, next), { replace: 'at' in next, preventScrollReset: true });
-  return <ChainScreen chain={data} question={question} onChange={change} actionsFor={actionsFor} />;
+  return (
+    <ChainScreen
+      chain={data}
+      question={question}
+      onChange={change}
+      actionsFor={(node) => actionsFor(node, question)}
+      actions={<Further chain={data} question={question} />}
+    />
+  );
 }
 
-function actionsFor(node: ValueNode) {
+/** Where the chain leads on: who leans on the weight, and how wrong what it leans on may be. */
+function Further({ chain, question }: { chain: ChainResponse; question: ChainQuestion }) {
+  const focus = chain.nodes.find(({ uid }) => uid === chain.focusUid);
+  const isFull = focus?.type === 'value' && focus.view === 'full';
+  const { data: distance } = useQuery({ ...distanceQuery(chain.focusUid), enabled: isFull });
+  return (
+    <>
+      <Toolbar>
+        <LinkButton to={paths.downstream.href(chain.focusUid, question)}>Who leans on this</LinkButton>
+      </Toolbar>
+      {isFull && distance && <DistanceSection distance={distance} />}
+    </>
+  );
+}
+
+function actionsFor(node: ValueNode, question: ChainQuestion) {
   return (
     <Toolbar>
       {node.revisionId && (
@@ -45,6 +71,7 @@ function actionsFor(node: ValueNode) {
         <LinkButton to={paths.standard.href(node.standardId)}>Open the standard</LinkButton>
       )}
       {node.tier > 0 && <LinkButton to={paths.chain.href(node.uid)}>Its own chain</LinkButton>}
+      <LinkButton to={paths.downstream.href(node.uid, question)}>Who leans on this</LinkButton>
     </Toolbar>
   );
 }

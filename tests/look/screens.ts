@@ -41,6 +41,7 @@ export const SCREENS: readonly Screen[] = [
       await page.getByRole('dialog').waitFor();
     },
   },
+  { name: 'downstream', path: ({ valueUid }) => `/chains/${valueUid}/downstream` },
   { name: 'network', path: () => '/network' },
   { name: 'laboratory', path: ({ laboratoryId }) => `/network/${laboratoryId}` },
   { name: 'not-found', path: () => '/no-such-place' },

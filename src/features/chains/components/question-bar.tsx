@@ -1,7 +1,6 @@
-import { useState } from 'react';
 import { Checkbox } from '#src/components/ui/checkbox.tsx';
+import { DayField } from '#src/components/ui/day-field.tsx';
 import { Switch } from '#src/components/ui/switch.tsx';
-import { DateField } from '#src/components/ui/text-field.tsx';
 import { Toolbar } from '#src/components/layout/columns.tsx';
 import type { ChainQuestion } from '../question.ts';
 
@@ -52,44 +51,5 @@ export function QuestionBar({ question, answered, onChange }: QuestionBarProps) 
         onChange={(event) => onChange({ only: event.target.checked ? 'fails' : undefined })}
       />
     </Toolbar>
-  );
-}
-
-const DAY = /^\d{4}-\d{2}-\d{2}$/;
-
-/** Asks anew once a whole day stands there; a day that is none is said, and nothing is asked. */
-function DayField({
-  label,
-  value,
-  onDay,
-}: {
-  label: string;
-  value: string;
-  onDay: (day: string | undefined) => void;
-}) {
-  const [typed, setTyped] = useState<string | null>(null);
-  const [error, setError] = useState<string | undefined>();
-  const settle = () => {
-    if (typed === null) return;
-    const text = typed.trim();
-    const isDay =
-      DAY.test(text) && !Number.isNaN(Date.parse(text)) && new Date(text).toISOString().startsWith(text);
-    if (text !== '' && !isDay) {
-      setError(`"${text}" is no day. Write it as 2025-02-20.`);
-      return;
-    }
-    setError(undefined);
-    setTyped(null);
-    if (text !== value) onDay(text === '' ? undefined : text);
-  };
-  return (
-    <DateField
-      label={label}
-      value={typed ?? value}
-      error={error}
-      onChange={(event) => setTyped(event.target.value)}
-      onBlur={settle}
-      onKeyDown={(event) => event.key === 'Enter' && settle()}
-    />
   );
 }

@@ -1,0 +1,125 @@
+import { useRef, type ReactNode } from 'react';
+import { type DownstreamBy } from '#shared/contracts/downstream.ts';
+import { Toolbar, TwoColumns } from '#src/components/layout/columns.tsx';
+import { Page } from '#src/components/layout/page.tsx';
+import { DayField } from '#src/components/ui/day-field.tsx';
+import { Coverage, Quantity } from '#src/components/ui/quantity.tsx';
+import { Switch } from '#src/components/ui/switch.tsx';
+import { Decimal, decimalText } from '#shared/decimal.ts';
+import type { DownstreamSearch } from '../search.ts';
+import { supposedChange } from '../supposed-change.ts';
+import { Leaning } from './leaning.tsx';
+import { WhatIfForm, type Asked } from './what-if-form.tsx';
+import { WhatIf } from './what-if.tsx';
+
+/** The value that is asked about, as its chain tells it. */
+export interface DownstreamSubject {
+  uid: string;
+  registryNo: string;
+  nominal: string;
+  deviation: string;
+  expandedU: string | null;
+  k: string | null;
+  quantity: string;
+  certificateNo: string;
+  /** Null where this person may not open the certificate. */
+  revisionId: string | null;
+}
+
+interface DownstreamScreenProps {
+  subject: DownstreamSubject;
+  /** What stands below the title: what the weight is, and the way back to its chain. */
+  sub: ReactNode;
+  /** The days the answer is about, where the address names none. */
+  answered: { day: string; known: string };
+  search: DownstreamSearch;
+  onChange: (change: Partial<DownstreamSearch>) => void;
+}
+
+const GROUPINGS = [
+  { value: 'laboratory', label: 'Laboratory' },
+  { value: 'class', label: 'Class' },
+  { value: 'nominal', label: 'Nominal' },
+  { value: 'year', label: 'Year' },
+] as const satisfies readonly { value: DownstreamBy; label: string }[];
+
+/** Who leans on a value, and what if it were otherwise. */
+export function DownstreamScreen({ subject, sub, answered, search, onChange }: DownstreamScreenProps) {
+  const answer = useRef<HTMLDivElement>(null);
+  const change = supposedChange(search, subject);
+  const onOpen = (group: string | undefined) => onChange({ group });
+  const ask = (asked: Asked) => {
+    onChange({ ...asked, sort: 'word' });
+    // On a phone the answer stands above the form: it comes into sight, and is read out next.
+    answer.current?.focus();
+  };
+  const leave = () => {
+    onChange({ suppose: undefined, amount: undefined, sort: 'word' });
+    answer.current?.focus();
+  };
+  return (
+    <Page
+      title={`Who leans on ${subject.registryNo}`}
+      sub={sub}
+      value={
+        <Quantity
+          value={decimalText(new Decimal(subject.nominal).plus(subject.deviation))}
+          expandedUncertainty={subject.expandedU}
+          coverageFactor={subject.k}
+          isOfRecord
+        />
+      }
+      valueNote={
+        <>
+          {subject.quantity}
+          {subject.k && (
+            <>
+              , <Coverage coverageFactor={subject.k} />
+            </>
+          )}
+        </>
+      }
+    >
+      <Toolbar label="What is asked">
+        <DayField label="In force on" value={search.day ?? answered.day} onDay={(day) => onChange({ day })} />
+        <DayField
+          label="As known on"
+          value={search.known ?? answered.known}
+          onDay={(known) => onChange({ known })}
+        />
+        <Switch
+          label="Grouped by"
+          value={search.by}
+          onChange={(by) => onChange({ by })}
+          choices={GROUPINGS}
+        />
+      </Toolbar>
+      <TwoColumns
+        sideWidth="narrow"
+        side={
+          <WhatIfForm
+            key={`${search.suppose} ${search.amount} ${search.beyond}`}
+            asked={search}
+            certificateNo={subject.revisionId === null ? null : subject.certificateNo}
+            onAsk={ask}
+            onLeave={leave}
+          />
+        }
+      >
+        <div ref={answer} tabIndex={-1} className="outline-none">
+          {search.suppose !== undefined && change !== null ? (
+            <WhatIf
+              change={change}
+              suppose={search.suppose}
+              search={search}
+              onOpen={onOpen}
+              onSort={(sort) => onChange({ sort })}
+            />
+          ) : (
+            <Leaning uid={subject.uid} search={search} onOpen={onOpen} />
+          )}
+        </div>
+      </TwoColumns>
+    </Page>
+  );
+}

@@ -1,0 +1,55 @@
+import { keepPreviousData, useInfiniteQuery, useQuery } from '@tanstack/react-query';
+import { Section } from '#src/components/layout/page.tsx';
+import { EmptyState } from '#src/components/ui/empty-state.tsx';
+import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
+import { Waiting } from '#src/components/ui/progress.tsx';
+import { downstreamQuery, downstreamRowsQuery } from '../api.ts';
+import { leaningHeadline } from '../headlines.ts';
+import { openedFrom } from '../opened-from.ts';
+import type { DownstreamSearch } from '../search.ts';
+import { LeaningTable } from './leaning-table.tsx';
+
+interface LeaningProps {
+  uid: string;
+  search: DownstreamSearch;
+  onOpen: (key: string | undefined) => void;
+}
+
+/** Who leans on a value, fetched in groups first and row by row where a group is opened. */
+export function Leaning({ uid, search, onOpen }: LeaningProps) {
+  const asked = { day: search.day, known: search.known, by: search.by };
+  const groups = useQuery({ ...downstreamQuery(uid, asked), placeholderData: keepPreviousData });
+  const rows = useInfiniteQuery({
+    ...downstreamRowsQuery(uid, asked, search.group ?? ''),
+    enabled: search.group !== undefined,
+  });
+  if (groups.error) return <ErrorNotice error={groups.error} onRetry={() => void groups.refetch()} />;
+  if (!groups.data) return <Waiting>Reading who leans on it</Waiting>;
+  const { total, question } = groups.data;
+  return (
+    <Section title={leaningHeadline(total)}>
+      {total.count === 0 ? (
+        <EmptyState>
+          On {question.day}, as known on {question.known}, no value in force leans on this one. A weight that
+          is calibrated against it will stand here.
+        </EmptyState>
+      ) : (
+        <>
+          {total.warned > 0 && (
+            <p className="text-ink-2">
+              {total.warned === total.count ? 'They' : `${total.warned} of them`} belong to others and are
+              told as laboratory and weight only.
+            </p>
+          )}
+          <LeaningTable
+            groups={groups.data.groups}
+            by={question.by}
+            open={search.group}
+            opened={openedFrom(rows)}
+            onOpen={onOpen}
+          />
+        </>
+      )}
+    </Section>
+  );
+}

@@ -1,0 +1,126 @@
+import { useState, type FormEvent } from 'react';
+import { Section } from '#src/components/layout/page.tsx';
+import { Button } from '#src/components/ui/button.tsx';
+import { DecimalField } from '#src/components/ui/decimal-field.tsx';
+import { SelectField } from '#src/components/ui/select-field.tsx';
+import { TextField } from '#src/components/ui/text-field.tsx';
+import { groupDigits } from '#src/lib/format-decimal.ts';
+import { usePreferences } from '#src/lib/preferences.ts';
+import { unitSymbol } from '#src/lib/quantity-text.ts';
+import { amountProblem, amountText, readAmount, type ReadAmount } from '../read-amount.ts';
+import type { DownstreamSearch, Suppose } from '../search.ts';
+
+/** What the form asks. */
+export type Asked = Pick<DownstreamSearch, 'suppose' | 'amount' | 'beyond'>;
+
+interface WhatIfFormProps {
+  asked: Asked;
+  /** Null where the certificate is not this person's to open: then its withdrawal is not theirs to try. */
+  certificateNo: string | null;
+  onAsk: (asked: Asked) => void;
+  /** Back to who leans on it. */
+  onLeave: () => void;
+}
+
+const SUPPOSITIONS: { value: Suppose; label: string }[] = [
+  { value: 'shift', label: 'The value shifts' },
+  { value: 'raise', label: 'Its u is larger' },
+  { value: 'withdraw', label: 'Its certificate is withdrawn' },
+];
+
+const LARGEST_BEYOND = 1000;
+
+/** Puts one supposition about the value; what it would do is worked out, and nothing is changed. */
+export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormProps) {
+  const { decimalMark } = usePreferences();
+  const [suppose, setSuppose] = useState<Suppose>(asked.suppose ?? 'shift');
+  const [amount, setAmount] = useState(() => typedFrom(asked.amount, decimalMark));
+  const [beyond, setBeyond] = useState(String(asked.beyond));
+  // What came with the address is judged at once, what is being typed once it is left.
+  const [isJudged, setJudged] = useState(asked.suppose !== undefined);
+  const read = readAmount(amount, decimalMark);
+  const problems = {
+    amount: suppose === 'withdraw' ? undefined : amountProblem(read, suppose),
+    beyond: beyondProblem(beyond),
+  };
+  const submit = (event: FormEvent) => {
+    event.preventDefault();
+    setJudged(true);
+    if (problems.amount || problems.beyond) return;
+    const kept = suppose !== 'withdraw' && read.kind === 'amount' ? amountText(read.shown) : undefined;
+    onAsk({ suppose, amount: kept, beyond: Number(beyond) });
+  };
+  return (
+    <Section title="What if it were otherwise?">
+      <p className="text-ink-2">
+        A dry run: it works out what would follow for all that leans on this value, and changes nothing.
+      </p>
+      <form onSubmit={submit} noValidate className="mt-1 flex flex-col gap-3">
+        <SelectField
+          label="Suppose"
+          value={suppose}
+          onChange={(event) => setSuppose(event.target.value as Suppose)}
+          choices={SUPPOSITIONS.filter(({ value }) => value !== 'withdraw' || certificateNo !== null)}
+        />
+        {suppose === 'withdraw' ? (
+          <p className="text-ink-2">
+            Every value on certificate <span className="font-mono text-sm">{certificateNo}</span> falls.
+          </p>
+        ) : (
+          <TextField
+            label={suppose === 'shift' ? 'Shift, with its unit' : 'Standard uncertainty added, with its unit'}
+            placeholder="20 µg"
+            autoComplete="off"
+            spellCheck={false}
+            isMono
+            value={amount}
+            onChange={(event) => setAmount(event.target.value)}
+            onBlur={() => setJudged(amount.trim() !== '')}
+            hint={amountHint(read, suppose, decimalMark)}
+            error={isJudged ? problems.amount : undefined}
+          />
+        )}
+        <DecimalField
+          label="Material beyond"
+          unit="% of U"
+          value={beyond}
+          onChange={setBeyond}
+          error={problems.beyond}
+        />
+        <div className="flex flex-wrap items-baseline gap-x-4 gap-y-2">
+          <Button type="submit" weight="primary">
+            Work it out
+          </Button>
+          {asked.suppose && (
+            <Button weight="text" onClick={onLeave}>
+              Back to who leans on it
+            </Button>
+          )}
+        </div>
+      </form>
+    </Section>
+  );
+}
+
+/** How the amount was read, with its sign said, so that nobody shifts the wrong way. */
+function amountHint(read: ReadAmount, suppose: Suppose, mark: '.' | ','): string | undefined {
+  if (read.kind !== 'amount') return suppose === 'shift' ? 'Minus makes it lighter.' : 'Added in quadrature.';
+  const { value, unit } = read.shown;
+  const text = `${groupDigits(value.replace(/^-/, ''), mark)}\u2009${unitSymbol(unit)}`;
+  if (suppose === 'raise') return `Read as ${text}, added in quadrature`;
+  return `Read as ${text} ${value.startsWith('-') ? 'lighter' : 'heavier'}`;
+}
+
+function beyondProblem(text: string): string | undefined {
+  const percent = Number(text);
+  if (text !== '' && percent >= 0 && percent <= LARGEST_BEYOND) return undefined;
+  return `Write a part of U from 0 to ${LARGEST_BEYOND} %; received "${text}".`;
+}
+
+/** The address writes a point and a unit code; the field shows them as this reader writes. */
+function typedFrom(amount: string | undefined, mark: '.' | ','): string {
+  if (amount === undefined) return '';
+  const read = readAmount(amount, '.');
+  if (read.kind !== 'amount') return amount;
+  return `${groupDigits(read.shown.value, mark)} ${unitSymbol(read.shown.unit)}`;
+}

@@ -1,0 +1,113 @@
+import { Fragment } from 'react';
+import type { WhatIfGroup, WhatIfRow, WhatIfSort, DownstreamBy } from '#shared/contracts/downstream.ts';
+import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
+import { usePreferences } from '#src/lib/preferences.ts';
+import { GROUPED_BY, groupName, inOrder } from '../groups.ts';
+import { whatIfCsv } from '../rows-csv.ts';
+import { saveText } from '../save-text.ts';
+import type { Suppose } from '../search.ts';
+import { GroupNameCell, InnerHead, OpenedFoot, type OpenedGroup } from './group-rows.tsx';
+import { WeightCells } from './weight-cells.tsx';
+import { COLUMNS } from './what-if-columns.tsx';
+import { ClassVerdicts, WhatIfWordMark } from './what-if-word.tsx';
+
+interface WhatIfTableProps {
+  groups: readonly WhatIfGroup[];
+  suppose: Suppose;
+  by: DownstreamBy;
+  sort: WhatIfSort;
+  /** Key of the group that is open. */
+  open: string | undefined;
+  opened: OpenedGroup<WhatIfRow>;
+  onOpen: (key: string | undefined) => void;
+  onSort: (sort: WhatIfSort) => void;
+}
+
+/** What a change would do, group by group and, in the group that is open, row by row; the worst first. */
+export function WhatIfTable(props: WhatIfTableProps) {
+  const { groups, suppose, by, sort, open, opened, onOpen, onSort } = props;
+  const { decimalMark } = usePreferences();
+  const columns = COLUMNS[suppose];
+  const colSpan = columns.length + 5;
+  const sortOf = (own: WhatIfSort | undefined) =>
+    own && { sort: sort === own ? ('descending' as const) : ('none' as const), onSort: () => onSort(own) };
+  return (
+    <Table caption="What it would do">
+      <thead>
+        <tr>
+          <Head colSpan={2}>{GROUPED_BY[by]}</Head>
+          <Head align="right">Weights</Head>
+          {columns.map((column) => (
+            <Head key={column.name} align="right" {...sortOf(column.sort)}>
+              {column.groupName ?? column.name}
+            </Head>
+          ))}
+          <Head align="right">Material</Head>
+          <Head align="right" {...sortOf('word')}>
+            Verdict changes
+          </Head>
+        </tr>
+      </thead>
+      <tbody>
+        {inOrder(groups, sort).map((group) => {
+          const isOpen = group.key === open;
+          return (
+            <Fragment key={group.key}>
+              <Row>
+                <GroupNameCell
+                  name={groupName(group, by, decimalMark)}
+                  isOpen={isOpen}
+                  onToggle={() => onOpen(isOpen ? undefined : group.key)}
+                  colSpan={2}
+                />
+                <Cell align="right">{group.count}</Cell>
+                {columns.map((column) => (
+                  <Cell key={column.name} align="right">
+                    {column.ofGroup(group)}
+                  </Cell>
+                ))}
+                <Cell align="right">{group.words.material}</Cell>
+                <Cell align="right">{group.words.verdictChanges}</Cell>
+              </Row>
+              {isOpen && (
+                <>
+                  {opened.rows.length > 0 && (
+                    <InnerHead
+                      heads={[
+                        { name: 'Weight' },
+                        { name: 'Nominal' },
+                        { name: 'Class', align: 'right' },
+                        ...columns.map(({ name }) => ({ name, align: 'right' as const })),
+                        { name: 'Comes to', align: 'right', colSpan: 2 },
+                      ]}
+                    />
+                  )}
+                  {opened.rows.map((row) => (
+                    <Row key={row.view === 'full' ? row.uid : row.registryNo}>
+                      <WeightCells row={row} by={by} />
+                      <Cell align="right">{row.view === 'full' && <ClassVerdicts row={row} />}</Cell>
+                      {columns.map((column) => (
+                        <Cell key={column.name} align="right">
+                          {column.ofRow(row)}
+                        </Cell>
+                      ))}
+                      <Cell colSpan={2} align="right">
+                        <WhatIfWordMark word={row.word} />
+                      </Cell>
+                    </Row>
+                  ))}
+                  <OpenedFoot
+                    opened={opened}
+                    count={group.count}
+                    colSpan={colSpan}
+                    onSave={() => saveText('what-it-would-do.csv', whatIfCsv(opened.rows))}
+                  />
+                </>
+              )}
+            </Fragment>
+          );
+        })}
+      </tbody>
+    </Table>
+  );
+}
