@@ -1,6 +1,7 @@
 import { expect, test } from '@playwright/test';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { fillCertificate, choose, issueOpenDraft, waitUntilSaved } from './support/calibration.ts';
+import { daysAgo } from './support/days.ts';
 import { METROLOGIST, PASSWORD, signIn, SIGNATORY } from './support/people.ts';
 import { recompute } from './support/recompute.ts';
 import { freeRegistryNo, Register } from './support/register.ts';
@@ -47,8 +48,8 @@ test('a metrologist registers a weight and its calibration, a signatory issues i
     await fillCertificate(metrologist, {
       issuer: 'Port Alder Calibration',
       certificateNo,
-      day: '2026-11-20',
-      begunOn: '2026-11-18',
+      day: daysAgo(10),
+      begunOn: daysAgo(12),
       method: 'ABBA against one reference',
     });
     const name = `${registryNo}, 1 kg`;

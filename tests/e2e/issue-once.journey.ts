@@ -1,5 +1,6 @@
 import { expect, test } from '@playwright/test';
 import { choose, fillCertificate, waitUntilSaved } from './support/calibration.ts';
+import { daysAgo } from './support/days.ts';
 import { JourneyLaboratory, recognizedInstitute } from './support/laboratory.ts';
 import { PASSWORD, signIn } from './support/people.ts';
 import { Register } from './support/register.ts';
@@ -17,7 +18,7 @@ test('a double click issues once', async ({ page }) => {
   await fillCertificate(page, {
     issuer: institute.name,
     certificateNo: `J ${registryNo}`,
-    day: '2026-10-05',
+    day: daysAgo(50),
     method: 'Comparison',
   });
   await choose(page, 'Add a weight or a set', registryNo, new RegExp(registryNo));
