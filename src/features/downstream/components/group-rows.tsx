@@ -26,8 +26,8 @@ interface GroupNameCellProps {
 export function GroupNameCell({ name, isOpen, onToggle, colSpan }: GroupNameCellProps) {
   return (
     <Cell isHeading colSpan={colSpan}>
-      <RowButton aria-expanded={isOpen} onClick={onToggle}>
-        <span aria-hidden="true" className="inline-block w-4 font-mono text-ink-3">
+      <RowButton aria-expanded={isOpen} onClick={onToggle} className="inline-flex items-baseline">
+        <span aria-hidden="true" className="w-4 shrink-0 font-mono text-ink-3">
           {isOpen ? '−' : '+'}
         </span>
         {name}

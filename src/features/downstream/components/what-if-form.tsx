@@ -41,14 +41,19 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormP
   const read = readAmount(amount, decimalMark);
   const problems = {
     amount: suppose === 'withdraw' ? undefined : amountProblem(read, suppose),
-    beyond: beyondProblem(beyond),
+    beyond: suppose === 'withdraw' ? undefined : beyondProblem(beyond),
   };
+  const shownProblem = isJudged ? problems.amount : undefined;
   const submit = (event: FormEvent) => {
     event.preventDefault();
     setJudged(true);
     if (problems.amount || problems.beyond) return;
     const kept = suppose !== 'withdraw' && read.kind === 'amount' ? amountText(read.shown) : undefined;
-    onAsk({ suppose, amount: kept, beyond: Number(beyond) });
+    onAsk({
+      suppose,
+      amount: kept,
+      beyond: suppose === 'withdraw' ? asked.beyond : Number(beyond),
+    });
   };
   return (
     <Section title="What if it were otherwise?">
@@ -76,17 +81,19 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormP
             value={amount}
             onChange={(event) => setAmount(event.target.value)}
             onBlur={() => setJudged(amount.trim() !== '')}
-            hint={amountHint(read, suppose, decimalMark)}
-            error={isJudged ? problems.amount : undefined}
+            hint={shownProblem ? undefined : amountHint(read, suppose, decimalMark)}
+            error={shownProblem}
           />
         )}
-        <DecimalField
-          label="Material beyond"
-          unit="% of U"
-          value={beyond}
-          onChange={setBeyond}
-          error={problems.beyond}
-        />
+        {suppose !== 'withdraw' && (
+          <DecimalField
+            label="Material beyond"
+            unit="% of U"
+            value={beyond}
+            onChange={setBeyond}
+            error={problems.beyond}
+          />
+        )}
         <div className="flex flex-wrap items-baseline gap-x-4 gap-y-2">
           <Button type="submit" weight="primary">
             Work it out

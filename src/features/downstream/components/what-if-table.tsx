@@ -29,24 +29,10 @@ export function WhatIfTable(props: WhatIfTableProps) {
   const { decimalMark } = usePreferences();
   const columns = COLUMNS[suppose];
   const colSpan = columns.length + 5;
-  const sortOf = (own: WhatIfSort | undefined) =>
-    own && { sort: sort === own ? ('descending' as const) : ('none' as const), onSort: () => onSort(own) };
   return (
     <Table caption="What it would do">
       <thead>
-        <tr>
-          <Head colSpan={2}>{GROUPED_BY[by]}</Head>
-          <Head align="right">Weights</Head>
-          {columns.map((column) => (
-            <Head key={column.name} align="right" {...sortOf(column.sort)}>
-              {column.groupName ?? column.name}
-            </Head>
-          ))}
-          <Head align="right">Material</Head>
-          <Head align="right" {...sortOf('word')}>
-            Verdict changes
-          </Head>
-        </tr>
+        <GroupHeads {...{ suppose, by, sort, onSort }} />
       </thead>
       <tbody>
         {inOrder(groups, sort).map((group) => {
@@ -60,41 +46,23 @@ export function WhatIfTable(props: WhatIfTableProps) {
                   onToggle={() => onOpen(isOpen ? undefined : group.key)}
                   colSpan={2}
                 />
-                <Cell align="right">{group.count}</Cell>
+                <Cell align="right">{group.words.verdictChanges}</Cell>
+                <Cell align="right">{group.words.material}</Cell>
                 {columns.map((column) => (
                   <Cell key={column.name} align="right">
                     {column.ofGroup(group)}
                   </Cell>
                 ))}
-                <Cell align="right">{group.words.material}</Cell>
-                <Cell align="right">{group.words.verdictChanges}</Cell>
+                <Cell align="right">{group.count}</Cell>
               </Row>
               {isOpen && (
                 <>
-                  {opened.rows.length > 0 && (
-                    <InnerHead
-                      heads={[
-                        { name: 'Weight' },
-                        { name: 'Nominal' },
-                        { name: 'Class', align: 'right' },
-                        ...columns.map(({ name }) => ({ name, align: 'right' as const })),
-                        { name: 'Comes to', align: 'right', colSpan: 2 },
-                      ]}
-                    />
-                  )}
+                  {opened.rows.length > 0 && <InnerHead heads={innerHeads(suppose)} />}
                   {opened.rows.map((row) => (
-                    <Row key={row.view === 'full' ? row.uid : row.registryNo}>
-                      <WeightCells row={row} by={by} />
-                      <Cell align="right">{row.view === 'full' && <ClassVerdicts row={row} />}</Cell>
-                      {columns.map((column) => (
-                        <Cell key={column.name} align="right">
-                          {column.ofRow(row)}
-                        </Cell>
-                      ))}
-                      <Cell colSpan={2} align="right">
-                        <WhatIfWordMark word={row.word} />
-                      </Cell>
-                    </Row>
+                    <RowOfGroup
+                      key={row.view === 'full' ? row.uid : row.registryNo}
+                      {...{ row, suppose, by }}
+                    />
                   ))}
                   <OpenedFoot
                     opened={opened}
@@ -109,5 +77,57 @@ export function WhatIfTable(props: WhatIfTableProps) {
         })}
       </tbody>
     </Table>
+  );
+}
+
+function GroupHeads({
+  suppose,
+  by,
+  sort,
+  onSort,
+}: Pick<WhatIfTableProps, 'suppose' | 'by' | 'sort' | 'onSort'>) {
+  const sorted = (own: WhatIfSort | undefined) =>
+    own && { sort: sort === own ? ('descending' as const) : ('none' as const), onSort: () => onSort(own) };
+  return (
+    <tr>
+      <Head colSpan={2}>{GROUPED_BY[by]}</Head>
+      <Head align="right" {...sorted('word')}>
+        Verdict changes
+      </Head>
+      <Head align="right">Material</Head>
+      {COLUMNS[suppose].map((column) => (
+        <Head key={column.name} align="right" {...sorted(column.sort)}>
+          {column.groupName ?? column.name}
+        </Head>
+      ))}
+      <Head align="right">Weights</Head>
+    </tr>
+  );
+}
+
+function innerHeads(suppose: Suppose) {
+  return [
+    { name: 'Weight' },
+    { name: 'Nominal' },
+    { name: 'Comes to', align: 'right', colSpan: 2 },
+    ...COLUMNS[suppose].map(({ name }) => ({ name, align: 'right' }) as const),
+    { name: 'Class', align: 'right' },
+  ] as const;
+}
+
+function RowOfGroup({ row, suppose, by }: { row: WhatIfRow; suppose: Suppose; by: DownstreamBy }) {
+  return (
+    <Row>
+      <WeightCells row={row} by={by} />
+      <Cell colSpan={2} align="right">
+        <WhatIfWordMark word={row.word} />
+      </Cell>
+      {COLUMNS[suppose].map((column) => (
+        <Cell key={column.name} align="right">
+          {column.ofRow(row)}
+        </Cell>
+      ))}
+      <Cell align="right">{row.view === 'full' && <ClassVerdicts row={row} />}</Cell>
+    </Row>
   );
 }

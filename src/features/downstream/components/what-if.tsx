@@ -32,7 +32,10 @@ export function WhatIf({ change, suppose, search, onOpen, onSort }: WhatIfProps)
   if (answer.error) return <ErrorNotice error={answer.error} onRetry={() => void answer.refetch()} />;
   if (!answer.data) return <Waiting>Working it out</Waiting>;
   return (
-    <Section title={whatIfHeadline(answer.data.total)} note="a dry run: nothing was changed">
+    <Section
+      title={whatIfHeadline(answer.data.total)}
+      note={<span className="inline-block">a dry run: nothing was changed</span>}
+    >
       <Totals answer={answer.data} suppose={suppose} />
       {answer.data.total.count > 0 && (
         <WhatIfTable
