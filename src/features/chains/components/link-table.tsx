@@ -26,7 +26,7 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
       <thead>
         <tr>
           <Head>Link</Head>
-          <Head>Used</Head>
+          <Head className="max-sm:hidden">Used</Head>
           <Head align="right">Flow</Head>
           <Head>Judged</Head>
         </tr>
@@ -40,7 +40,7 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
                 <span className="whitespace-nowrap">→ {names.get(link.childUid)}</span>
               </RowButton>
             </Cell>
-            <Cell>{link.usedEnd ? <DateText value={link.usedEnd} /> : ''}</Cell>
+            <Cell className="max-sm:hidden">{link.usedEnd ? <DateText value={link.usedEnd} /> : ''}</Cell>
             <Cell align="right" className="whitespace-nowrap">
               {flowText(link, decimalMark)}
             </Cell>
