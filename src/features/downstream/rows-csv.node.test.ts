@@ -16,8 +16,8 @@ describe('whatIfCsv', () => {
   const [head, row] = whatIfCsv([WARNING]).split('\r\n');
 
   it('has a field for every head and leaves empty what is not told', () => {
-    expect(head!.split(',')).toHaveLength(14);
-    expect(row).toContain(',,,,-0.0001,,,,,,material');
+    expect(head!.split(',')).toHaveLength(15);
+    expect(row).toContain(',,,,,-0.0001,,,,,,material');
   });
 
   it('quotes what needs it and starts no formula', () => {

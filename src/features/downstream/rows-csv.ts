@@ -7,6 +7,7 @@ const WEIGHT: Column<DownstreamRow | WhatIfRow>[] = [
   ['nominal g', (row) => row.nominal],
   ['class', (row) => row.class],
   ['laboratory', (row) => (row.view === 'full' ? row.holder.name : row.laboratory.name)],
+  ['kind', (row) => (row.view === 'full' ? row.quantity : null)],
   ['deviation g', (row) => (row.view === 'full' ? row.deviation : null)],
   ['U g', (row) => (row.view === 'full' ? row.expandedU : null)],
   ['k', (row) => (row.view === 'full' ? row.k : null)],

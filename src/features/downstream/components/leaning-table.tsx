@@ -35,7 +35,7 @@ export function LeaningTable({ groups, by, open, opened, onOpen }: LeaningTableP
       <thead>
         <tr>
           <Head colSpan={3}>{GROUPED_BY[by]}</Head>
-          <Head align="right">Weights</Head>
+          <Head align="right">In all</Head>
           <Head align="right">Of others</Head>
         </tr>
       </thead>

@@ -36,10 +36,7 @@ export function Leaning({ uid, search, onOpen }: LeaningProps) {
       ) : (
         <>
           {total.warned > 0 && (
-            <p className="text-ink-2">
-              {total.warned === total.count ? 'They' : `${total.warned} of them`} belong to others and are
-              told as laboratory and weight only.
-            </p>
+            <p className="text-ink-2">Weights of others are told as laboratory and weight only.</p>
           )}
           <LeaningTable
             groups={groups.data.groups}

@@ -9,7 +9,7 @@ interface WeightCellsProps {
   by: DownstreamBy;
 }
 
-/** Weight and nominal: all that is told of the weights of others. One's own open their chain. */
+/** Weight and nominal: all that is told of the weights of others. One's own open their chain; a weight may stand with its mass beside its conventional mass. */
 export function WeightCells({ row, by }: WeightCellsProps) {
   const laboratory = row.view === 'full' ? row.holder : row.laboratory;
   return (
@@ -26,6 +26,7 @@ export function WeightCells({ row, by }: WeightCellsProps) {
       </Cell>
       <Cell>
         <NominalText row={row} />
+        {row.view === 'full' && row.quantity === 'mass' && <span className="text-ink-2">, mass</span>}
       </Cell>
     </>
   );

@@ -100,7 +100,7 @@ function GroupHeads({
           {column.groupName ?? column.name}
         </Head>
       ))}
-      <Head align="right">Weights</Head>
+      <Head align="right">In all</Head>
     </tr>
   );
 }
