@@ -133,7 +133,8 @@ describe('WhatIfForm', () => {
   });
 
   it('offers no withdrawal of a certificate that is not open to the reader', () => {
-    showForm();
+    showForm({ suppose: 'withdraw' });
+    expect(screen.getByLabelText('Shift, with its unit')).toBeTruthy();
     expect(screen.queryByRole('option', { name: 'Its certificate is withdrawn' })).toBeNull();
   });
 });

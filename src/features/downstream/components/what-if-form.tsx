@@ -33,7 +33,7 @@ const LARGEST_BEYOND = 1000;
 /** Puts one supposition about the value; what it would do is worked out, and nothing is changed. */
 export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormProps) {
   const { decimalMark } = usePreferences();
-  const [suppose, setSuppose] = useState<Suppose>(asked.suppose ?? 'shift');
+  const [suppose, setSuppose] = useState(() => firstSupposition(asked, certificateNo));
   const [amount, setAmount] = useState(() => typedFrom(asked.amount, decimalMark));
   const [beyond, setBeyond] = useState(String(asked.beyond));
   // What came with the address is judged at once, what is being typed once it is left.
@@ -43,7 +43,6 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormP
     amount: suppose === 'withdraw' ? undefined : amountProblem(read, suppose),
     beyond: suppose === 'withdraw' ? undefined : beyondProblem(beyond),
   };
-  const shownProblem = isJudged ? problems.amount : undefined;
   const submit = (event: FormEvent) => {
     event.preventDefault();
     setJudged(true);
@@ -72,17 +71,13 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormP
             Every value on certificate <span className="font-mono text-sm">{certificateNo}</span> falls.
           </p>
         ) : (
-          <TextField
-            label={suppose === 'shift' ? 'Shift, with its unit' : 'Standard uncertainty added, with its unit'}
-            placeholder="20 µg"
-            autoComplete="off"
-            spellCheck={false}
-            isMono
+          <AmountField
+            suppose={suppose}
             value={amount}
-            onChange={(event) => setAmount(event.target.value)}
-            onBlur={() => setJudged(amount.trim() !== '')}
-            hint={shownProblem ? undefined : amountHint(read, suppose, decimalMark)}
-            error={shownProblem}
+            onChange={setAmount}
+            onLeft={() => setJudged(amount.trim() !== '')}
+            read={read}
+            problem={isJudged ? problems.amount : undefined}
           />
         )}
         {suppose !== 'withdraw' && (
@@ -109,8 +104,40 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormP
   );
 }
 
+interface AmountFieldProps {
+  suppose: 'shift' | 'raise';
+  value: string;
+  onChange: (value: string) => void;
+  onLeft: () => void;
+  read: ReadAmount;
+  problem: string | undefined;
+}
+
+function AmountField({ suppose, value, onChange, onLeft, read, problem }: AmountFieldProps) {
+  const { decimalMark } = usePreferences();
+  return (
+    <TextField
+      label={suppose === 'shift' ? 'Shift, with its unit' : 'Standard uncertainty added, with its unit'}
+      placeholder="20 µg"
+      autoComplete="off"
+      spellCheck={false}
+      isMono
+      value={value}
+      onChange={(event) => onChange(event.target.value)}
+      onBlur={onLeft}
+      hint={problem ? undefined : amountHint(read, suppose, decimalMark)}
+      error={problem}
+    />
+  );
+}
+
+/** A link may suppose a withdrawal that its reader may not try: then the form begins as it does for everyone. */
+function firstSupposition({ suppose = 'shift' }: Asked, certificateNo: string | null): Suppose {
+  return suppose === 'withdraw' && certificateNo === null ? 'shift' : suppose;
+}
+
 /** How the amount was read, with its sign said, so that nobody shifts the wrong way. */
-function amountHint(read: ReadAmount, suppose: Suppose, mark: '.' | ','): string | undefined {
+function amountHint(read: ReadAmount, suppose: 'shift' | 'raise', mark: '.' | ','): string | undefined {
   if (read.kind !== 'amount') return suppose === 'shift' ? 'Minus makes it lighter.' : 'Added in quadrature.';
   const { value, unit } = read.shown;
   const text = `${groupDigits(value.replace(/^-/, ''), mark)}\u2009${unitSymbol(unit)}`;
