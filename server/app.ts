@@ -53,6 +53,11 @@ export function createApp(parts: AppParts): App {
     pinoHttp({
       logger: parts.logger,
       autoLogging: { ignore: isQuiet },
+      // No headers: a session's cookie in a log is a key in a drawer.
+      serializers: {
+        req: ({ id, method, url }: Record<string, unknown>) => ({ id, method, url }),
+        res: ({ statusCode }: Record<string, unknown>) => ({ statusCode }),
+      },
     }),
   );
   const { dataDir, checksEveryReply = true } = parts;

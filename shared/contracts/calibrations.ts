@@ -272,9 +272,11 @@ export const DraftResponse = z.object({
 });
 export type DraftResponse = z.infer<typeof DraftResponse>;
 
-/** GET /api/references?laboratory=&q=&quantity=: own values by part of the number, others' by the whole registry number. */
+/** GET /api/references?laboratory=&issuer=&q=&quantity=: own values by part of the number, the issuer's by a whole number. */
 export const ReferenceQuery = z.object({
   laboratory: Id,
+  /** Who issued the certificate that names the reference. */
+  issuer: Id.optional(),
   q: z.string().trim().min(1).max(80),
   quantity: QuantityKind.optional(),
 });

@@ -337,15 +337,16 @@ describe('GET /api/references', () => {
   it('is refused without sign-in, without a word to look for, and for another laboratory', async () => {
     const query = { laboratory: laboratory.id, q: 'T' };
     expect((await app.request.get('/api/references').query(query)).status).toBe(401);
-    const empty = await agents.reader.get('/api/references').query({ ...query, q: '' });
+    const empty = await agents.metrologist.get('/api/references').query({ ...query, q: '' });
     expect([empty.status, Object.keys(empty.body.fields)]).toEqual([400, ['q']]);
+    expect((await agents.reader.get('/api/references').query(query)).status).toBe(403);
     expect((await agents.foreigner.get('/api/references').query(query)).status).toBe(403);
-    expect((await agents.reader.get('/api/references').query({ ...query, laboratory: NOBODY })).status).toBe(
-      404,
-    );
+    expect(
+      (await agents.metrologist.get('/api/references').query({ ...query, laboratory: NOBODY })).status,
+    ).toBe(404);
   });
 
-  it('finds own values by part of the number, others by the whole number only', async () => {
+  it('finds own values by part of the number, the newest of the issuer by the whole number only, of nobody else', async () => {
     const other = await makeLaboratory(app);
     const [own, foreign] = [await makeStandard(app, laboratory.id), await makeStandard(app, other.id)];
     for (const [lab, weight] of [
@@ -355,10 +356,10 @@ describe('GET /api/references', () => {
       await makeCalibration(app, lab.id, '2023-01-10', [lineOf(weight.id)]);
       await makeCalibration(app, lab.id, '2024-01-10', [lineOf(weight.id)]);
     }
-    const find = async (q: string, quantity?: string) => {
-      const reply = await agents.reader
+    const find = async (q: string, quantity?: string, issuer?: string) => {
+      const reply = await agents.metrologist
         .get('/api/references')
-        .query({ laboratory: laboratory.id, q, quantity });
+        .query({ laboratory: laboratory.id, q, quantity, issuer });
       return reply.body.references.map((one: { performedEnd: string; isNewest: boolean }) => [
         one.performedEnd,
         one.isNewest,
@@ -369,8 +370,9 @@ describe('GET /api/references', () => {
       ['2023-01-10', false],
     ];
     expect(await find(own.registryNo.slice(0, -1).toLowerCase())).toEqual(both);
-    expect(await find(foreign.registryNo)).toEqual(both);
-    expect(await find(foreign.registryNo.slice(0, -1))).toEqual([]);
-    expect(await find(foreign.registryNo, 'mass')).toEqual([]);
+    expect(await find(foreign.registryNo)).toEqual([]);
+    expect(await find(foreign.registryNo, undefined, other.id)).toEqual([['2024-01-10', true]]);
+    expect(await find(foreign.registryNo.slice(0, -1), undefined, other.id)).toEqual([]);
+    expect(await find(foreign.registryNo, 'mass', other.id)).toEqual([]);
   });
 });

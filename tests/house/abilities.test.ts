@@ -61,7 +61,6 @@ const OF_HOME = {
 };
 
 const READERS: Who[] = ['registrar', 'administrator', 'metrologist', 'signatory', 'reader', 'assessor'];
-const WORKERS: Who[] = ['registrar', 'administrator', 'metrologist', 'signatory', 'reader'];
 const WRITERS: Who[] = ['registrar', 'administrator', 'metrologist'];
 const INSTITUTE_PEOPLE: Who[] = ['metrologist of the institute', 'signatory of the institute'];
 
@@ -82,7 +81,7 @@ const MAY: Record<string, Who[]> = {
   'draft:read': READERS,
   'draft:write': WRITERS,
   'draft:send': [...WRITERS, 'signatory'],
-  'reference:find': WORKERS,
+  'reference:find': WRITERS,
   'chain:read': [],
   'downstream:read': [],
 };

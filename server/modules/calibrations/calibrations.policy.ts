@@ -29,10 +29,10 @@ export const draftCalibration = permission<{ laboratoryId: string }>(
   (user, { laboratoryId }) => writesFor(user, laboratoryId),
 );
 
-/** Looking up what a result may name as reference: for everybody who works in the laboratory. */
+/** Looking up what a result may name as reference: for those who write drafts. */
 export const findReferences = permission<{ laboratoryId: string }>(
   'reference:find',
-  (user, { laboratoryId }) => user.isRegistrar || worksIn(user, laboratoryId),
+  (user, { laboratoryId }) => writesFor(user, laboratoryId),
 );
 
 /** A draft, with whether this person may sign for its laboratory today. */

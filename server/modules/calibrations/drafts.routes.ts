@@ -118,7 +118,7 @@ export const draftRoutes: Route[] = [
     method: 'get',
     path: '/api/references',
     summary:
-      'Values a result may name as reference: own ones by part of the number, others by the whole number.',
+      'Values a result may name as reference: own ones by part of the number, the issuer’s by a whole number.',
     permission: findReferences,
     query: ReferenceQuery,
     subject: async (context, { query }) => {
@@ -128,6 +128,7 @@ export const draftRoutes: Route[] = [
     act: (context, { query }) =>
       referenceChoices(context.database, {
         laboratoryId: query.laboratory,
+        issuerId: query.issuer ?? null,
         q: query.q,
         quantity: query.quantity ?? null,
         day: today(context),

@@ -31,12 +31,19 @@ interface ChoiceRow extends Omit<ReferenceChoice, 'holder' | 'isNewest'> {
 }
 
 /**
- * Values a result may name as its reference: the laboratory's own by part of the registry number, another's by
- * the whole number only, which is what its certificate shows. In force first, newest first.
+ * Values a result may name as its reference: the laboratory's own by part of the registry number; of the
+ * certificate's issuer what such a certificate shows: the newest value of a weight named by its whole number (or of
+ * each piece of a set), or the values of one certificate by its whole number. Nothing of anybody else.
  */
 export async function referenceChoices(
   database: Sequelize,
-  wanted: { laboratoryId: string; q: string; quantity: QuantityKind | null; day: string },
+  wanted: {
+    laboratoryId: string;
+    issuerId: string | null;
+    q: string;
+    quantity: QuantityKind | null;
+    day: string;
+  },
 ): Promise<ReferenceChoice[]> {
   const number = wanted.q.toUpperCase();
   const kind = wanted.quantity ? 'AND v.quantity = :quantity' : '';
@@ -44,17 +51,26 @@ export async function referenceChoices(
   const rows = await readRows<ChoiceRow>(
     database,
     `(${CHOICE} WHERE v.holder_id = :laboratoryId AND s.registry_no LIKE :part ${kind} ${order})
-     UNION (${CHOICE} WHERE s.registry_no = :number ${kind} ${order}) ${order}`,
+     UNION (${CHOICE} WHERE v.holder_id = :issuerId AND (s.registry_no = :number OR s.registry_no LIKE :pieces) ${kind}
+            HAVING isNewest AND state = 'in force' ${order})
+     UNION (${CHOICE} WHERE v.holder_id = :issuerId AND c.certificate_no = :certificate ${kind} ${order}) ${order}`,
     {
       laboratoryId: wanted.laboratoryId,
+      issuerId: wanted.issuerId,
       number,
-      part: `%${number.replace(/[\\%_]/g, (sign) => `\\${sign}`)}%`,
+      part: `%${escaped(number)}%`,
+      pieces: `${escaped(number)}-%`,
+      certificate: wanted.q,
       quantity: wanted.quantity,
       day: wanted.day,
       knownAt: knownAt(wanted.day),
     },
   );
   return rows.map(choiceOf);
+}
+
+function escaped(text: string): string {
+  return text.replace(/[\\%_]/g, (sign) => `\\${sign}`);
 }
 
 /** The values with these uids, in no order; what is not in the register is left out. */

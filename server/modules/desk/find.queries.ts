@@ -13,20 +13,25 @@ export type Found = z.input<typeof FindResponse>['found'][number];
 const SHOWN = 8;
 
 /**
- * Anything by registry number, marking, serial, certificate number or laboratory. In the laboratories that
- * this person reads in full, any part of the number or marking is enough; elsewhere a standard or set is found
- * by its whole registry number only. Laboratories are known to everybody signed in.
+ * Anything by registry number, marking, serial, certificate number or laboratory, in the laboratories that this
+ * person reads in full. Laboratories are known to everybody signed in.
  */
-export async function findAnything(database: Sequelize, user: User, text: string): Promise<Found[]> {
+export async function findAnything(database: Sequelize, user: User, typed: string): Promise<Found[]> {
+  const text = asRegistryNo(typed);
   const ids = readableLaboratoryIds(user);
   const found = await Promise.all([
-    exactNumbers(database, text),
     ids === null ? standardsEverywhere(database, text) : standardsOf(database, text, ids),
     certificates(database, text, ids),
     laboratories(database, text),
   ]);
   const byKey = new Map(found.flat().map((one) => [`${one.kind} ${one.id}`, one]));
   return [...byKey.values()];
+}
+
+/** "pa0411" is PA 0411; anything else stays as it was typed. */
+function asRegistryNo(typed: string): string {
+  const match = /^([A-Za-z]{2,4}) ?(\d{4}(?:-\d{1,3})?)$/.exec(typed.trim());
+  return match ? `${match[1]!.toUpperCase()} ${match[2]}` : typed;
 }
 
 interface StandardRow {
@@ -44,15 +49,6 @@ const STANDARD = `
 const SET = `
   SELECT w.id, 'set' AS kind, w.registry_no AS label, CONCAT(w.name, ', ', l.name) AS detail
   FROM weight_set w JOIN laboratory l ON l.id = w.laboratory_id`;
-
-async function exactNumbers(database: Sequelize, text: string): Promise<Found[]> {
-  const registryNo = text.toUpperCase();
-  const [standards, sets] = await Promise.all([
-    readRows<StandardRow>(database, `${STANDARD} WHERE s.registry_no = :registryNo`, { registryNo }),
-    readRows<Found>(database, `${SET} WHERE w.registry_no = :registryNo`, { registryNo }),
-  ]);
-  return [...standards.map(presentStandard), ...sets];
-}
 
 /** Within some laboratories: the holdings are few enough to look into each number and marking. */
 async function standardsOf(database: Sequelize, text: string, ids: readonly string[]): Promise<Found[]> {

@@ -71,7 +71,7 @@ export async function findStandards(
 
 /** Values a result may name as its reference. */
 export async function findReferences(
-  asked: { laboratory: string; q: string; quantity?: QuantityKind },
+  asked: { laboratory: string; issuer?: string | undefined; q: string; quantity?: QuantityKind },
   signal?: AbortSignal,
 ): Promise<ReferenceChoice[]> {
   return (await get('/api/references', ReferenceListResponse, { query: asked, signal })).references;

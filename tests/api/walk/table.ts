@@ -35,13 +35,6 @@ export const READERS: readonly Walker[] = [
   'reader',
   'assessor',
 ];
-const AT_HOME: readonly Walker[] = [
-  'registrar',
-  'laboratory administrator',
-  'metrologist',
-  'signatory',
-  'reader',
-];
 
 /** Who writes in home's name. */
 const WRITERS: readonly Walker[] = ['registrar', 'laboratory administrator', 'metrologist'];
@@ -289,7 +282,7 @@ export const WALK: Readonly<Record<string, WalkRow>> = {
       path: '/api/references',
       query: { laboratory: home.id, q: referenceNo, quantity: 'conventional mass' },
     }),
-    may: AT_HOME,
+    may: WRITERS,
     ok: 200,
     otherwise: 403,
   },

@@ -1,9 +1,11 @@
+import { useFormContext } from 'react-hook-form';
 import type { ReferenceChoice } from '#shared/contracts/calibrations.ts';
 import type { QuantityKind } from '#shared/contracts/common.ts';
 import { Combobox, type ComboboxOption } from '#src/components/ui/combobox.tsx';
 import { findReferences } from '../api.ts';
 import { useDraft } from './draft-context.ts';
 import { useKnown } from './known.ts';
+import type { DraftValues } from './draft-values.ts';
 
 interface ReferenceOption extends ComboboxOption {
   reference: ReferenceChoice;
@@ -18,15 +20,16 @@ interface ReferenceBoxProps {
   className?: string;
 }
 
-/** Finds the assigned value a result leans on: own ones by part of the number, others by the whole number. */
+/** Finds the assigned value a result leans on: own ones by part of the number, the issuer's by a whole one. */
 export function ReferenceBox({ label, isLabelHidden, quantity, onChosen, className }: ReferenceBoxProps) {
   const { laboratoryId } = useDraft();
+  const { getValues } = useFormContext<DraftValues>();
   const { learnReferences } = useKnown();
   return (
     <Combobox<ReferenceOption>
       {...{ label, isLabelHidden, className }}
       placeholder="registry number"
-      emptyText="No value by that number. Another laboratory’s is found by its whole registry number."
+      emptyText="No value by that number. The issuer’s weights are found by their whole registry number, or by the certificate’s."
       value={null}
       onChange={(option) => {
         if (!option) return;
@@ -34,7 +37,12 @@ export function ReferenceBox({ label, isLabelHidden, quantity, onChosen, classNa
         onChosen(option.reference);
       }}
       search={async (q, signal) =>
-        (await findReferences({ laboratory: laboratoryId, q, quantity }, signal)).map(optionOf)
+        (
+          await findReferences(
+            { laboratory: laboratoryId, issuer: getValues('issuerId') ?? undefined, q, quantity },
+            signal,
+          )
+        ).map(optionOf)
       }
     />
   );
