@@ -23,13 +23,24 @@ interface DraftActionsProps {
 export function DraftActions(props: DraftActionsProps) {
   const { draft, issuerName, openPoints, saveNow, onIssued, onDiscarded } = props;
   const [asks, setAsks] = useState<'issue' | 'discard' | null>(null);
+  const [isSaving, setSaving] = useState(false);
   const queries = useQueryClient();
   const state = useSetDraftState(draft.id);
   const maySend = can(draft, 'draft:send');
   const isSent = draft.state === 'sent to sign';
   const isComplete = openPoints === 0;
 
-  const ifSaved = (act: () => void) => () => void saveNow().then((isSaved) => isSaved && act());
+  const isBusy = isSaving || state.isPending;
+
+  /** Saves, then acts; a second click meanwhile does nothing, and what an earlier try was refused for is gone. */
+  const ifSaved = (act: () => void) => () => {
+    if (isBusy) return;
+    state.reset();
+    setSaving(true);
+    void saveNow()
+      .then((isSaved) => isSaved && act())
+      .finally(() => setSaving(false));
+  };
   // The save just made may have given a newer version than the one drawn here.
   const version = (): number => queries.getQueryData(draftQuery(draft.id).queryKey)?.version ?? draft.version;
   const setState = (to: 'open' | 'sent to sign' | 'discarded', onSuccess?: () => void): void =>
@@ -39,22 +50,26 @@ export function DraftActions(props: DraftActionsProps) {
     <div className="flex flex-col gap-3">
       <div className="flex flex-wrap items-baseline gap-2">
         {can(draft, 'calibration:issue') && (
-          <Button weight="primary" disabled={!isComplete} onClick={ifSaved(() => setAsks('issue'))}>
+          <Button weight="primary" disabled={!isComplete || isBusy} onClick={ifSaved(() => setAsks('issue'))}>
             Issue
           </Button>
         )}
         {maySend && !isSent && (
           <Button
             weight={can(draft, 'calibration:issue') ? 'plain' : 'primary'}
-            disabled={!isComplete}
-            isBusy={state.isPending}
+            disabled={!isComplete || isBusy}
+            isBusy={isBusy}
             onClick={ifSaved(() => setState('sent to sign'))}
           >
             Send to sign
           </Button>
         )}
         {maySend && isSent && (
-          <Button isBusy={state.isPending} onClick={() => setState('open')}>
+          <Button
+            isBusy={isBusy}
+            // The second half of a double click on "Send to sign" lands here.
+            onClick={({ detail }) => detail < 2 && setState('open')}
+          >
             {can(draft, 'calibration:issue') ? 'Send back' : 'Take it back'}
           </Button>
         )}

@@ -7,6 +7,7 @@ import { unitSymbol } from '#src/lib/quantity-text.ts';
 import { useDraft } from './draft-context.ts';
 import type { DraftValues } from './draft-values.ts';
 import { fieldWords, lineOf } from './field-words.ts';
+import { ownUnit } from './own-unit.ts';
 import { turned } from './paste-lines.ts';
 
 const SMALLER: Record<MassUnit, MassUnit | null> = { kg: 'g', g: 'mg', mg: 'ug', ug: null };
@@ -26,12 +27,13 @@ export function Questions({ points, weightOf }: QuestionsProps) {
 
 function Question({ point, title }: { point: OpenPoint; title: string }) {
   const { getValues, setValue } = useFormContext<DraftValues>();
-  const { goTo } = useDraft();
+  const { goTo, isLocked } = useDraft();
   const at = lineOf(point.field);
   if (at === null) return null;
   const path = `lines.${at}` as const;
   const isSign = point.asks === 'sign';
-  const smaller = SMALLER[getValues(`${path}.unit`)];
+  const value = ownUnit(getValues(`${path}.value`), getValues(`${path}.unit`));
+  const smaller = SMALLER[value.unit];
 
   function keep(): void {
     setValue(isSign ? `${path}.signConfirmed` : `${path}.unitConfirmed`, true, { shouldDirty: true });
@@ -40,9 +42,14 @@ function Question({ point, title }: { point: OpenPoint; title: string }) {
     setValue(`${path}.value`, turned(getValues(`${path}.value`)), { shouldDirty: true });
   }
   function shrink(unit: MassUnit): void {
+    const U = ownUnit(getValues(`${path}.expandedU`), getValues(`${path}.uUnit`));
     // A slip of the unit is made for value and U together, as they stand on one line of the certificate.
-    if (getValues(`${path}.unit`) === getValues(`${path}.uUnit`))
+    if (U.unit === value.unit) {
+      setValue(`${path}.expandedU`, U.text, { shouldDirty: true });
       setValue(`${path}.uUnit`, unit, { shouldDirty: true });
+    }
+    // The unit written beside the number, if there was one, gives way to the answer.
+    setValue(`${path}.value`, value.text, { shouldDirty: true });
     setValue(`${path}.unit`, unit, { shouldDirty: true });
   }
 
@@ -56,24 +63,26 @@ function Question({ point, title }: { point: OpenPoint; title: string }) {
         </>
       }
       answers={
-        <>
-          {isSign ? (
-            <Button weight="text" onClick={turn}>
-              Turn the sign
+        !isLocked && (
+          <>
+            {isSign ? (
+              <Button weight="text" onClick={turn}>
+                Turn the sign
+              </Button>
+            ) : smaller ? (
+              <Button weight="text" onClick={() => shrink(smaller)}>
+                It is in {unitSymbol(smaller)}
+              </Button>
+            ) : (
+              <Button weight="text" onClick={() => goTo(point.field)}>
+                Mend the value
+              </Button>
+            )}
+            <Button weight="text" onClick={keep}>
+              It is right, keep it
             </Button>
-          ) : smaller ? (
-            <Button weight="text" onClick={() => shrink(smaller)}>
-              It is in {unitSymbol(smaller)}
-            </Button>
-          ) : (
-            <Button weight="text" onClick={() => goTo(point.field)}>
-              Mend the value
-            </Button>
-          )}
-          <Button weight="text" onClick={keep}>
-            It is right, keep it
-          </Button>
-        </>
+          </>
+        )
       }
     >
       {point.message}

@@ -1,13 +1,13 @@
 import { memo, useId } from 'react';
-import { Controller, useFormContext, useWatch } from 'react-hook-form';
+import { useFormContext, useWatch } from 'react-hook-form';
 import { Button } from '#src/components/ui/button.tsx';
-import { DecimalField } from '#src/components/ui/decimal-field.tsx';
 import { Cell, Row } from '#src/components/ui/table.tsx';
 import { TextField } from '#src/components/ui/text-field.tsx';
 import { useDraft } from './draft-context.ts';
 import type { DraftValues } from './draft-values.ts';
 import { useKnown } from './known.ts';
 import { LineDetail } from './line-detail.tsx';
+import { MassCell } from './mass-cell.tsx';
 import { usePointAt } from './point-at.ts';
 import { StandardBox } from './standard-box.tsx';
 
@@ -49,6 +49,8 @@ export const ResultRow = memo(function ResultRow(props: ResultRowProps) {
               </span>
             ) : line.standardId ? (
               <span className="text-ink-2">not loaded yet</span>
+            ) : isLocked ? (
+              <span className="text-ink-2">no weight named</span>
             ) : (
               <StandardBox
                 label={`Weight of line ${at + 1}`}
@@ -64,20 +66,12 @@ export const ResultRow = memo(function ResultRow(props: ResultRowProps) {
         </Cell>
         <Cell align="right">
           <div data-field={`${path}.value`} className="ml-auto w-38">
-            <Controller
-              control={control}
-              name={`${path}.value`}
-              render={({ field }) => (
-                <DecimalField
-                  label={`Value of ${name}`}
-                  isLabelHidden
-                  maxLength={300}
-                  unit={line.unit}
-                  readOnly={isLocked}
-                  error={errorOf(`${path}.value`)}
-                  {...field}
-                />
-              )}
+            <MassCell
+              at={at}
+              part="value"
+              label={`Value of ${name}`}
+              isLocked={isLocked}
+              error={errorOf(`${path}.value`)}
             />
           </div>
         </Cell>
@@ -86,20 +80,12 @@ export const ResultRow = memo(function ResultRow(props: ResultRowProps) {
             {line.uNotStated ? (
               <span className="block pt-1.5 text-ink-2">not stated</span>
             ) : (
-              <Controller
-                control={control}
-                name={`${path}.expandedU`}
-                render={({ field }) => (
-                  <DecimalField
-                    label={`U of ${name}`}
-                    isLabelHidden
-                    maxLength={300}
-                    unit={line.uUnit}
-                    readOnly={isLocked}
-                    error={errorOf(`${path}.expandedU`)}
-                    {...field}
-                  />
-                )}
+              <MassCell
+                at={at}
+                part="expandedU"
+                label={`U of ${name}`}
+                isLocked={isLocked}
+                error={errorOf(`${path}.expandedU`)}
               />
             )}
           </div>

@@ -13,7 +13,10 @@ export function ResultsAside({ lines }: { lines: readonly DraftLine[] }) {
   const known = useKnown();
   if (lines.length === 0) return null;
   return (
-    <Section title="Results, as they are read" note="class: U within a third of its limit">
+    <Section
+      title="Results, as they are read"
+      note="U at k = 2 against a third of the limit of its class; the value is not judged"
+    >
       <div className="min-w-0 overflow-x-auto">
         <Table caption="Results, as they are read">
           <thead>
@@ -22,7 +25,7 @@ export function ResultsAside({ lines }: { lines: readonly DraftLine[] }) {
               <Head align="right">Deviation</Head>
               <Head align="right">U</Head>
               <Head align="right">Since last</Head>
-              <Head>Class</Head>
+              <Head>U and limit</Head>
             </tr>
           </thead>
           <tbody>
@@ -75,12 +78,12 @@ const ReadRow = memo(
         <Cell align="right">{change ? <Change {...change} expandedU={expandedU} /> : <Nothing />}</Cell>
         <Cell>
           {third ? (
-            <StateMark state={third.isWithin ? 'sound' : 'caution'}>
-              {third.class}
-              <span className="sr-only">
-                : U is {third.isWithin ? 'within' : 'above'} a third of the limit
-              </span>
-            </StateMark>
+            <span className="whitespace-nowrap" title={`MPE of class ${third.class}, OIML R 111-1:2004, 5.2`}>
+              <StateMark state={third.isWithin ? 'sound' : 'caution'}>
+                {third.isWithin ? 'U \u2264 MPE/3' : 'U > MPE/3'}
+              </StateMark>
+              <span className="block text-xs text-ink-2">MPE of {third.class}</span>
+            </span>
           ) : (
             <Nothing />
           )}
