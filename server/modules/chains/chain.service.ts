@@ -95,6 +95,7 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory): P
     byId: new Map(widened.values.map((value) => [value.id, value])),
   };
   const facts = chainFacts(closure, focus, parts, contributions, steps);
+  const judgement = judgeChain(facts, steps);
   return {
     question,
     focus,
@@ -103,15 +104,17 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory): P
     laboratories,
     numbers,
     tiers: tiersOf(closure, focus),
-    judgement: judgeChain(facts, steps),
+    judgement,
     contributions,
-    improvements: improvementsOf(closure, focus, numbers.propagation, standards, endOfDay(question.known)),
-    sideBySide: sideBySide(
+    improvements: improvementsOf(
+      closure,
       focus,
-      standards.get(focus.standardId)!,
-      numbers.propagation.standardUncertainty,
+      numbers.propagation,
+      contributions,
+      standards,
       endOfDay(question.known),
     ),
+    sideBySide: bothKinds(focus, standards.get(focus.standardId)!, question, judgement),
   };
 }
 
@@ -166,4 +169,20 @@ function contributionFacts(
     share,
     isTop: uids.every((uid) => top.has(uid)),
   }));
+}
+
+/** Both kinds of mass; none is named to type into a balance while a link of the chain is broken. */
+function bothKinds(
+  focus: StoredValue,
+  dossier: StandardDossier,
+  question: Question,
+  judgement: ChainJudgement,
+): Chain['sideBySide'] {
+  const both = sideBySide(focus, dossier, endOfDay(question.known));
+  const isBroken = judgement.links.some((link) => link.conduct === 'broken' || link.today === 'broken');
+  if (!isBroken) return both;
+  return {
+    sides: both.sides.map((side) => ({ ...side, isTheOneToType: false })),
+    note: 'A link of this chain fails a check: settle that before a value is typed into a balance.',
+  };
 }

@@ -1,11 +1,12 @@
 import type { z } from 'zod';
-import type { Improvement } from '#shared/contracts/chains.ts';
+import type { Contribution, Improvement } from '#shared/contracts/chains.ts';
 import type { Propagation } from '#shared/engine/network/propagate.ts';
 import { assertedOn } from './asserted-on.ts';
 import type { Closure } from './chain-store.ts';
 import type { StandardDossier, StoredSource, StoredValue } from './stored.ts';
 
 type ImprovementRow = z.infer<typeof Improvement>;
+type ContributionRow = z.infer<typeof Contribution>;
 
 /** Relative standard uncertainty of a density measured by hydrostatic weighing. Common practice, no source. */
 const MEASURED_DENSITY_RELATIVE_U = 1e-4;
@@ -22,6 +23,7 @@ export function improvementsOf(
   closure: Closure,
   focus: StoredValue,
   propagation: Propagation,
+  contributions: ContributionRow[] | null,
   standards: Map<string, StandardDossier>,
   horizon: string,
 ): ImprovementRow[] {
@@ -30,7 +32,7 @@ export function improvementsOf(
   const k = Number(focus.k ?? '2');
   const candidates = [
     ...densityCandidates(closure, propagation, standards, horizon),
-    ...referenceCandidates(closure, focus, propagation),
+    ...referenceCandidates(closure, focus, contributions ?? [], variance),
     ...ownCandidate(focus, propagation),
   ];
   return candidates
@@ -90,20 +92,53 @@ function measuredVolumeU(
   return volume * MEASURED_DENSITY_RELATIVE_U;
 }
 
-/** Halving the u of one direct reference saves three quarters of the variance that it brings by itself. */
-function referenceCandidates(closure: Closure, focus: StoredValue, propagation: Propagation): Candidate[] {
+/**
+ * A reference with half the uncertainty halves what reaches the focus through it alone. What also arrives on
+ * another way, such as the volume of the reference in its own calibration and in its use, stays as it is.
+ */
+function referenceCandidates(
+  closure: Closure,
+  focus: StoredValue,
+  contributions: ContributionRow[],
+  variance: number,
+): Candidate[] {
+  const reach = reachOf(closure);
   const byId = new Map(closure.values.map((value) => [value.id, value]));
-  return focus.parents
+  const references = focus.parents
     .filter((link) => link.role === 'reference')
-    .map((link) => {
-      const parent = byId.get(link.parentId)!;
-      const flow = propagation.flows.find((row) => row.child === focus.uid && row.parent === parent.uid);
-      return {
-        action: `Use a reference with half the uncertainty of ${parent.registryNo}`,
-        uids: [parent.uid],
-        saves: 0.75 * Math.max(0, flow?.variance ?? 0),
-      };
-    });
+    .map((link) => byId.get(link.parentId)!);
+  const own = new Set(focus.sources.map((link) => closure.sources.get(link.sourceId)!.uid));
+  return references.map((reference) => {
+    const elsewhere = new Set([
+      ...own,
+      ...references.flatMap((other) => (other === reference ? [] : [...reach.get(other.id)!])),
+    ]);
+    const isItsAlone = (uid: string) => reach.get(reference.id)!.has(uid) && !elsewhere.has(uid);
+    const share = contributions
+      .filter((row) => row.uids.every(isItsAlone))
+      .reduce((sum, row) => sum + row.share, 0);
+    return {
+      action: `Use a reference with half the uncertainty of ${reference.registryNo}`,
+      uids: [reference.uid],
+      saves: 0.75 * share * variance,
+    };
+  });
+}
+
+/** By value: the uids of itself and of all it leans on, sources included. */
+function reachOf(closure: Closure): Map<number, Set<string>> {
+  const reach = new Map<number, Set<string>>();
+  for (const value of closure.values) {
+    const uids = new Set([
+      value.uid,
+      ...value.sources.map((link) => closure.sources.get(link.sourceId)!.uid),
+    ]);
+    for (const { parentId, role } of value.parents) {
+      if (role === 'reference') for (const uid of reach.get(parentId)!) uids.add(uid);
+    }
+    reach.set(value.id, uids);
+  }
+  return reach;
 }
 
 function ownCandidate(focus: StoredValue, propagation: Propagation): Candidate[] {

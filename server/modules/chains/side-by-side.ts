@@ -17,10 +17,10 @@ const CONVENTIONAL_AIR_DENSITY = 1.2;
 export function sideBySide(
   focus: StoredValue,
   dossier: StandardDossier,
-  u: number | null,
   knownAt: string,
 ): { sides: Side[]; note: string | null } {
-  const own = side(focus, 'stated', u === null ? null : u * Number(focus.k ?? '2'));
+  const u = focus.uStated;
+  const own = side(focus, 'stated', focus.expandedU === null ? null : Number(focus.expandedU));
   const other = statedOther(focus, dossier);
   if (other) return { sides: inOrder([own, side(other, 'stated', Number(other.expandedU))]), note: null };
   const density = assertedOn(
@@ -34,7 +34,8 @@ export function sideBySide(
       note: `The density of ${focus.registryNo} is not recorded: the other kind cannot be worked out.`,
     };
   }
-  if (u === null) return { sides: [own], note: 'Without an uncertainty the other kind is not worked out.' };
+  if (u === null)
+    return { sides: [own], note: 'The certificate states no U: the other kind is not worked out.' };
   const computed = computedOther(focus, density, u);
   return typeof computed === 'string'
     ? { sides: [own], note: computed }
