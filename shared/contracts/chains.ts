@@ -135,6 +135,8 @@ export const ChainRule = z.object({
   edition: z.string(),
   severity: Severity,
   scope: z.enum(['link', 'value', 'chain']),
+  /** What it finds for the conduct is a flaw of the result itself, and counts for today as well. */
+  isLasting: z.boolean(),
   sentences: z.record(z.string(), z.string()),
 });
 
@@ -167,6 +169,11 @@ const SideValue = z.object({
 export const ChainResponse = z.object({
   question: z.object({ valueUid: Id, day: Day, known: Day, ruleSet: z.string(), engine: z.string() }),
   focusUid: Id,
+  /**
+   * Where the focus was not in force yet on the day, or not known yet: the value of the same weight and kind that
+   * was; null where there was none, where the focus stands, and in a statement.
+   */
+  inForceInstead: z.object({ uid: Id, certificateNo: z.string() }).nullable(),
   nodes: z.array(z.discriminatedUnion('type', [ChainValue, ChainSource])),
   links: z.array(ChainLink),
   /** The definition in force when the roots were determined. */

@@ -69,8 +69,8 @@ export const RULES: readonly Rule[] = [
  * @param day the day whose editions apply
  */
 export function rulesInWords(day: string): z.infer<typeof ChainRule>[] {
-  return RULES.map(({ id, title, severity, scope, sentences }) => {
+  return RULES.map(({ id, title, severity, scope, isLasting = false, sentences }) => {
     const { clause, edition } = clauseOn(id, day);
-    return { id, title, clause, edition, severity, scope, sentences: { ...sentences } };
+    return { id, title, clause, edition, severity, scope, isLasting, sentences: { ...sentences } };
   });
 }

@@ -41,6 +41,7 @@ export function Component() {
       question={question}
       onChange={change}
       actionsFor={(node) => actionsFor(node, question)}
+      hrefOf={(uid) => paths.chain.href(uid, question)}
       actions={<Further chain={data} question={question} />}
     />
   );

@@ -89,7 +89,15 @@ async function smallNetwork() {
   const w = await issue(working.id, '2020-02-10', '0.000045', 2e-5, r.uid);
   const a = await issue(first.id, '2020-03-10', '0.00021', 1e-4, w.uid, laboratory.id);
   const b = await issue(second.id, '2020-03-11', '0.00013', 6e-5, w.uid, laboratory.id);
-  return { institute, laboratory, r, w, a, b };
+  return {
+    institute,
+    laboratory,
+    r,
+    w,
+    a,
+    b,
+    issueAgain: (day: string) => issue(first.id, day, '0.00021', 1e-4, w.uid, laboratory.id),
+  };
 }
 
 /** A certificate prints value and U in milligrams to the same place. */
@@ -188,6 +196,32 @@ describe('GET /api/chains/:valueUid', () => {
     expect(reply.improvements).toEqual([]);
   });
 
+  it('names what stood of the weight on a day before the value was in force', async () => {
+    const fresh = await smallNetwork();
+    const person = await makePerson(app, 'metrologist', fresh.laboratory.id);
+    const later = await fresh.issueAgain('2021-05-10');
+    const before = await chain(person, later.uid, '?day=2021-05-09');
+    expect(before.nodes.find((node) => node.uid === later.uid)).toMatchObject({ state: 'not yet in force' });
+    const focus = before.nodes.find((node) => node.uid === later.uid);
+    const earlier = (await chain(person, fresh.a.uid)).nodes.find((node) => node.uid === fresh.a.uid);
+    expect(before.inForceInstead).toEqual({
+      uid: fresh.a.uid,
+      certificateNo: earlier?.type === 'value' ? earlier.certificateNo : undefined,
+    });
+    expect(focus?.type === 'value' && focus.certificateNo).not.toBe(before.inForceInstead!.certificateNo);
+    expect((await chain(person, later.uid, '?day=2021-05-10')).inForceInstead).toBeNull();
+    expect((await chain(person, fresh.a.uid, '?day=2020-03-09')).inForceInstead).toBeNull();
+    expect((await chain(person, later.uid, '?known=2021-05-09')).inForceInstead).toBeNull();
+  });
+
+  it('finds the choice of a chain by its number in small letters, without the space', async () => {
+    const agent = await app.signIn(metrologist);
+    const node = (await chain(metrologist, network.a.uid)).nodes.find(({ uid }) => uid === network.a.uid)!;
+    const number = node.registryNo!.toLowerCase().replaceAll(' ', '');
+    const reply = await agent.get('/api/chains').query({ q: number });
+    expect(reply.body.values.map((value: { uid: string }) => value.uid)).toEqual([network.a.uid]);
+  });
+
   it('gives the covariance of two siblings: what they share', async () => {
     const agent = await app.signIn(metrologist);
     const reply = await agent.get(`/api/chains/${network.a.uid}/covariance/${network.b.uid}`);
@@ -213,6 +247,7 @@ describe('GET /api/chains/:valueUid', () => {
     const link = after.links.find((row) => row.childUid === fresh.a.uid)!;
     expect([link.conduct, link.today]).toEqual(['sound', 'broken']);
     const yesterday = await chain(person, fresh.a.uid, '?day=2020-05-31');
+    expect(yesterday.inForceInstead).toBeNull();
     expect(yesterday.nodes.find((node) => node.uid === fresh.w.uid)).toMatchObject({ state: 'in force' });
   });
 });

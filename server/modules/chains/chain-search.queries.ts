@@ -22,7 +22,10 @@ export interface FoundValue {
 
 const LONGEST_LIST = 30;
 
-/** Values in force of weights this person reads in full, by the beginning of the registry number; newest first. */
+/**
+ * Values in force of weights this person reads in full, by the beginning of the registry number, in capitals or
+ * not, with its space or without; newest first.
+ */
 export async function chainChoices(context: SignedInContext, q: string): Promise<FoundValue[]> {
   const laboratoryIds = readableLaboratoryIds(context.user);
   if (laboratoryIds?.length === 0) return [];
@@ -37,11 +40,14 @@ export async function chainChoices(context: SignedInContext, q: string): Promise
      JOIN revision r ON r.id = v.revision_id
      JOIN calibration c ON c.id = r.calibration_id
      JOIN laboratory h ON h.id = v.holder_id
-     WHERE ${laboratoryIds ? 'v.holder_id IN (:laboratoryIds) AND' : ''} s.registry_no LIKE :beginning AND ${IN_FORCE}
+     WHERE ${laboratoryIds ? 'v.holder_id IN (:laboratoryIds) AND' : ''} REPLACE(s.registry_no, ' ', '') LIKE :beginning AND ${IN_FORCE}
      ORDER BY v.performed_end DESC, v.id DESC LIMIT ${LONGEST_LIST}`,
     {
       laboratoryIds: laboratoryIds ?? [],
-      beginning: `${q.toUpperCase().replace(/[\\%_]/g, (sign) => `\\${sign}`)}%`,
+      beginning: `${q
+        .toUpperCase()
+        .replace(/\s/g, '')
+        .replace(/[\\%_]/g, (sign) => `\\${sign}`)}%`,
       day,
       knownAt: knownAt(day),
     },

@@ -8,7 +8,7 @@ import type {
 } from '#shared/contracts/chains.ts';
 import { ENGINE_VERSION } from '#shared/engine/version.ts';
 import { RULE_SET_VERSION } from '#shared/rules/rule-set.ts';
-import { stateAt } from '#shared/state-at.ts';
+import { stateAt, type ValueEnd, type ValueStanding } from '#shared/state-at.ts';
 import { readsInFull, type User } from '#server/policy/user.ts';
 import { valueView } from '#server/policy/value-view.ts';
 import type { Chain } from './chain.service.ts';
@@ -44,6 +44,7 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
       engine: ENGINE_VERSION,
     },
     focusUid: chain.focus.uid,
+    inForceInstead: isFull(chain.focus.uid) ? inForceInstead(chain) : null,
     nodes: [
       ...chain.closure.values.map((value) => presentValue(value, chain, isFull(value.uid), shares)),
       ...[...chain.closure.sources.values()].map((source) => presentSource(source, chain, user, shares)),
@@ -103,14 +104,9 @@ function presentValue(
   isFull: boolean,
   shares: Shares,
 ): z.input<typeof ChainValue> {
-  const { numbers, standards, laboratories, question } = chain;
+  const { numbers, standards, laboratories } = chain;
   const ends = standards.get(value.standardId)!.history.find((row) => row.id === value.id)?.ends ?? [];
-  const standing = stateAt(
-    { effectiveFrom: value.issuedOn, recordedAt: value.recordedAt },
-    ends,
-    question.day,
-    question.known,
-  );
+  const standing = standingOn(chain, value, ends);
   const carried = numbers.carried(value).variance;
   const variance = numbers.variance(value.uid);
   const isKnown = shares.total !== null;
@@ -150,6 +146,29 @@ function presentValue(
     localShare: isKnown && value.localU !== null ? (shares.local.get(value.uid) ?? 0) : null,
     share: isKnown ? (shares.through.get(value.uid) ?? 0) : null,
   };
+}
+
+function standingOn(
+  { question }: Chain,
+  value: { issuedOn: string; recordedAt: string },
+  ends: readonly ValueEnd[],
+): ValueStanding {
+  const { day, known } = question;
+  return stateAt({ effectiveFrom: value.issuedOn, recordedAt: value.recordedAt }, ends, day, known);
+}
+
+/** What stood of this weight in the focus's kind while the focus did not yet: the latest determined. */
+function inForceInstead(chain: Chain): ChainResponse['inForceInstead'] {
+  const { focus } = chain;
+  const { state } = standingOn(chain, focus, []);
+  if (state === 'in force') return null;
+  // The history is in the order of determination.
+  const stood = chain.standards
+    .get(focus.standardId)!
+    .history.findLast(
+      (row) => row.quantity === focus.quantity && standingOn(chain, row, row.ends).state === 'in force',
+    );
+  return stood ? { uid: stood.uid, certificateNo: stood.certificateNo } : null;
 }
 
 function originOf(value: StoredValue): z.input<typeof ChainValue>['uOrigin'] {

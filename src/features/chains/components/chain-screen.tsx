@@ -11,6 +11,7 @@ import { BothKinds } from './both-kinds.tsx';
 import { Contributions } from './contributions.tsx';
 import { Legend } from './legend.tsx';
 import { LinkTable } from './link-table.tsx';
+import { NotYetNotice } from './not-yet-notice.tsx';
 import { QuestionBar } from './question-bar.tsx';
 import { SelectionSheet, type ValueNode } from './selection-sheet.tsx';
 import { Verdict } from './verdict.tsx';
@@ -25,12 +26,14 @@ interface ChainScreenProps {
   question: ChainQuestion;
   onChange: (change: Partial<ChainQuestion>) => void;
   actionsFor: (node: ValueNode) => ReactNode;
+  /** The address of another value's chain, on the same days. */
+  hrefOf: (valueUid: string) => string;
   /** Actions for the whole chain, at the foot of the side. */
   actions?: ReactNode;
 }
 
 /** The heart: the weight at the bottom, the SI at the top, and what flows between them. */
-export function ChainScreen({ chain, question, onChange, actionsFor, actions }: ChainScreenProps) {
+export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, actions }: ChainScreenProps) {
   const focus = chain.nodes.find(
     (node): node is ValueNode => node.uid === chain.focusUid && node.type === 'value',
   )!;
@@ -60,12 +63,13 @@ export function ChainScreen({ chain, question, onChange, actionsFor, actions }: 
         </>
       }
     >
+      <NotYetNotice chain={chain} hrefOf={hrefOf} />
       <QuestionBar question={question} answered={chain.question} onChange={onChange} />
       <TwoColumns
         isSideFirstOnPhones
         side={
           <>
-            <Verdict chain={chain} question={question} />
+            <Verdict chain={chain} question={question} onChange={onChange} />
             <LinkTable chain={chain} question={question} onChange={onChange} />
             <Contributions chain={chain} />
             <BothKinds chain={chain} />

@@ -45,23 +45,10 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
               {flowText(link, decimalMark)}
             </Cell>
             <Cell>
-              {link.role === 'reference' ? (
-                <StateMark state={link[question.verdict]} />
-              ) : (
-                <span className="text-ink-3">{link.role === 'informs' ? 'informs' : 'shared'}</span>
-              )}
+              <Judged chain={chain} link={link} verdict={question.verdict} />
             </Cell>
           </Row>
         ))}
-        {leftOut > 0 && (
-          <Row>
-            <Cell colSpan={4}>
-              <RowButton onClick={() => onChange({ effects: 'all' })}>
-                and {leftOut} shared {leftOut === 1 ? 'effect' : 'effects'} below 1 %
-              </RowButton>
-            </Cell>
-          </Row>
-        )}
         {rows.length === 0 && (
           <Row>
             <Cell colSpan={4}>
@@ -71,12 +58,43 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
             </Cell>
           </Row>
         )}
+        {leftOut > 0 && question.only !== 'fails' && (
+          <Row>
+            <Cell colSpan={4}>
+              <RowButton onClick={() => onChange({ effects: 'all' })}>
+                and {leftOut} shared {leftOut === 1 ? 'effect' : 'effects'} below 1 %
+              </RowButton>
+            </Cell>
+          </Row>
+        )}
       </tbody>
     </Table>
   );
 }
 
 type Link = ChainResponse['links'][number];
+
+interface JudgedProps {
+  chain: ChainResponse;
+  link: Link;
+  verdict: ChainQuestion['verdict'];
+}
+
+/** How the link stands; one that lies after the day, or after what was known, is not judged before it was made. */
+function Judged({ chain, link, verdict }: JudgedProps) {
+  if (link.role !== 'reference')
+    return <span className="text-ink-3">{link.role === 'informs' ? 'informs' : 'shared'}</span>;
+  const before = beforeLink(chain, link);
+  return before ? <span className="text-ink-3">{before}</span> : <StateMark state={link[verdict]} />;
+}
+
+function beforeLink(chain: ChainResponse, link: Link): string | null {
+  const { day } = chain.question;
+  if (link.usedBegin !== null && link.usedBegin > day) return 'not yet made';
+  const child = chain.nodes.find((node) => node.uid === link.childUid);
+  const isUnknown = child?.type === 'value' && child.state === 'not yet in force' && child.issuedOn <= day;
+  return isUnknown ? 'not yet recorded' : null;
+}
 
 function flowText(link: Link, decimalMark: '.' | ','): string {
   if (link.role === 'informs') return '–';

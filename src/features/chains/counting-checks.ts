@@ -1,0 +1,37 @@
+import type { ChainResponse } from '#shared/contracts/chains.ts';
+import type { State } from '#src/lib/states.ts';
+import type { ChainQuestion } from './question.ts';
+
+type Check = ChainResponse['checks'][number];
+
+/**
+ * The checks of values and links that count under a verdict, as the links' standings count them: for today also a
+ * flaw of the result itself that was found for the conduct; nothing of a value that only informs.
+ */
+export function countingChecks(chain: ChainResponse, verdict: ChainQuestion['verdict']): Check[] {
+  const lasting = new Set(chain.rules.filter((rule) => rule.isLasting).map((rule) => rule.id));
+  const leaning = new Set([
+    chain.focusUid,
+    ...chain.links
+      .filter((link) => link.role === 'reference')
+      .flatMap((link) => [link.childUid, link.parentUid]),
+  ]);
+  return chain.checks.filter(
+    ({ subject, rule, verdict: spokenFor }) =>
+      (spokenFor === verdict || (verdict === 'today' && lasting.has(rule))) &&
+      (subject.type === 'link' || (subject.type === 'value' && leaning.has(subject.uid))),
+  );
+}
+
+const GRAVE = ['block', 'critical', 'major'];
+const WORST_FIRST: State[] = ['broken', 'not judged', 'caution', 'sound'];
+
+/** The worst of a value's own checks and its standing, for the mark on its plate. */
+export function worstOf(checks: readonly Check[], standing: State): State {
+  const states = checks.map((check): State => {
+    const isGrave = GRAVE.includes(check.severity);
+    if (check.outcome === 'fails') return isGrave ? 'broken' : 'caution';
+    return check.outcome === 'cannot be judged' && isGrave ? 'not judged' : 'sound';
+  });
+  return WORST_FIRST.find((state) => state === standing || states.includes(state)) ?? 'sound';
+}
