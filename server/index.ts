@@ -5,6 +5,8 @@ import { createApp } from './app.ts';
 import { readConfig } from './config.ts';
 import { openDatabase } from './db/sequelize.ts';
 import { builtClient, developmentClient } from './http/client-files.ts';
+import { storeOf } from './modules/chains/index.ts';
+import { memoryOf } from './modules/downstream/index.ts';
 
 /** Longest wait for requests under way when the process is told to stop. */
 const DRAIN_MILLISECONDS = 8_000;
@@ -33,7 +35,17 @@ const server = app.express.listen(config.port, config.host, (error?: Error) => {
   }
   const { port } = server.address() as AddressInfo;
   logger.info(`Listening on http://${config.host}:${port}`);
+  warmUp();
 });
+
+/** Reads what the first visitor would wait for. Until it is there, and where it fails, the database answers. */
+function warmUp(): void {
+  const note = (error: unknown) => logger.warn({ err: error }, 'The register was not read ahead');
+  storeOf(database)
+    .catchUp()
+    .then(() => memoryOf(database).load())
+    .catch(note);
+}
 
 let isStopping = false;
 /** Stops accepting, lets requests under way end, closes the pool, leaves. */

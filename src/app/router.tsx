@@ -1,4 +1,11 @@
-import { createBrowserRouter, redirect, type RouteObject } from 'react-router';
+import type { ComponentType } from 'react';
+import {
+  createBrowserRouter,
+  redirect,
+  type LoaderFunction,
+  type LoaderFunctionArgs,
+  type RouteObject,
+} from 'react-router';
 import { ErrorPage } from './error-page.tsx';
 import { paths } from './paths.ts';
 import { requirePerson, RootLayout } from './root-layout.tsx';
@@ -6,6 +13,29 @@ import { requirePerson, RootLayout } from './root-layout.tsx';
 /** A screen whose module is fetched when it is first asked for; its failure leaves the rail standing. */
 function screen(path: string, lazy: RouteObject['lazy']): RouteObject {
   return { path, lazy, ErrorBoundary: ErrorPage } as RouteObject;
+}
+
+/**
+ * A screen behind sign-in. Loaders run side by side: this one waits until the person is known, so that a stranger's
+ * browser asks for nothing it would be refused.
+ */
+function signedInScreen(path: string, lazy: () => Promise<ScreenModule>): RouteObject {
+  return screen(path, async () => {
+    const { loader, ...module } = await lazy();
+    if (!loader) return module;
+    return {
+      ...module,
+      loader: async (args: LoaderFunctionArgs) => {
+        await requirePerson(args);
+        return loader(args);
+      },
+    };
+  });
+}
+
+interface ScreenModule {
+  Component: ComponentType;
+  loader?: LoaderFunction;
 }
 
 /** The tree of screens. A route module exports `Component` and, where it primes queries, `loader`. */
@@ -17,21 +47,21 @@ export const routes: RouteObject[] = [
     ErrorBoundary: ErrorPage,
     HydrateFallback: Nothing,
     children: [
-      { path: paths.home.path, loader: () => redirect(paths.desk.href()) },
-      screen(paths.desk.path, () => import('#src/routes/desk.tsx')),
-      screen(paths.standards.path, () => import('#src/routes/standards.tsx')),
-      screen(paths.newStandard.path, () => import('#src/routes/standard-new.tsx')),
-      screen(paths.newSet.path, () => import('#src/routes/set-new.tsx')),
-      screen(paths.standard.path, () => import('#src/routes/standard.tsx')),
-      screen(paths.calibrations.path, () => import('#src/routes/calibrations.tsx')),
-      screen(paths.calibrationDraft.path, () => import('#src/routes/calibration-draft.tsx')),
-      screen(paths.calibration.path, () => import('#src/routes/calibration.tsx')),
-      screen(paths.chains.path, () => import('#src/routes/chains.tsx')),
-      screen(paths.chain.path, () => import('#src/routes/chain.tsx')),
-      screen(paths.downstream.path, () => import('#src/routes/downstream.tsx')),
-      screen(paths.network.path, () => import('#src/routes/network.tsx')),
-      screen(paths.laboratory.path, () => import('#src/routes/laboratory.tsx')),
-      screen('*', () => import('#src/routes/not-found.tsx')),
+      { path: paths.home.path, loader: () => redirect(paths.desk.href()), Component: Nothing },
+      signedInScreen(paths.desk.path, () => import('#src/routes/desk.tsx')),
+      signedInScreen(paths.standards.path, () => import('#src/routes/standards.tsx')),
+      signedInScreen(paths.newStandard.path, () => import('#src/routes/standard-new.tsx')),
+      signedInScreen(paths.newSet.path, () => import('#src/routes/set-new.tsx')),
+      signedInScreen(paths.standard.path, () => import('#src/routes/standard.tsx')),
+      signedInScreen(paths.calibrations.path, () => import('#src/routes/calibrations.tsx')),
+      signedInScreen(paths.calibrationDraft.path, () => import('#src/routes/calibration-draft.tsx')),
+      signedInScreen(paths.calibration.path, () => import('#src/routes/calibration.tsx')),
+      signedInScreen(paths.chains.path, () => import('#src/routes/chains.tsx')),
+      signedInScreen(paths.chain.path, () => import('#src/routes/chain.tsx')),
+      signedInScreen(paths.downstream.path, () => import('#src/routes/downstream.tsx')),
+      signedInScreen(paths.network.path, () => import('#src/routes/network.tsx')),
+      signedInScreen(paths.laboratory.path, () => import('#src/routes/laboratory.tsx')),
+      signedInScreen('*', () => import('#src/routes/not-found.tsx')),
     ],
   },
 ];
