@@ -2,6 +2,22 @@ import { compiled } from './compile-network.ts';
 import type { CompiledNetwork } from './compiled-network.ts';
 import { MaxHeap } from './max-heap.ts';
 import type { Network } from './network.ts';
+import {
+  FIRST_CHILD,
+  GAIN,
+  GROUP,
+  INTEGERS,
+  LINK_END,
+  LINK_START,
+  NUMBERS,
+  OWN,
+  PARENT,
+  SENSITIVITY,
+  STAMP,
+  VARIANCE,
+  type WalkRecords,
+  walkRecords,
+} from './walk-records.ts';
 
 /**
  * The exact variance of every value, in the order given, correlations included; `Infinity` where it depends on a
@@ -17,123 +33,42 @@ import type { Network } from './network.ts';
 export function variances(network: Network | CompiledNetwork): Float64Array {
   const net = compiled(network);
   const state = newState(net);
+  const { numbers, placeOf } = state;
   for (let place = 0; place < net.nodeCount; place += 1) {
-    state.variance[place] = oneParentVariance(state, place) ?? walkedVariance(state, place);
+    numbers[place * NUMBERS + VARIANCE] = oneParentVariance(state, place) ?? walkedVariance(state, place);
   }
-  return Float64Array.from({ length: net.valueCount }, (_, node) => state.variance[state.placeOf[node]!]!);
+  const variance = new Float64Array(net.valueCount);
+  for (let node = 0; node < net.valueCount; node += 1) {
+    variance[node] = numbers[placeOf[node]! * NUMBERS + VARIANCE]!;
+  }
+  return variance;
 }
 
-/** The network renumbered by place in the topological order, with the work arrays of one walk. */
-type State = {
+/** The records with the work of one walk. */
+type State = WalkRecords & {
   net: CompiledNetwork;
-  order: Int32Array;
-  placeOf: Int32Array;
-  linkStart: Int32Array;
-  parent: Int32Array;
-  sensitivity: Float64Array;
-  /** Own variance and class limits; infinite where not known; a group member's limits only. */
-  own: Float64Array;
-  /** For an ungrouped root the lowest place among its children, beyond all places if it has none; else -1. */
-  firstChild: Int32Array;
-  /** Group of a place, -1 for none, and the lowest place of each group's members. */
-  group: Int32Array;
+  /** Lowest place of each group's members. */
   lowestPlace: Int32Array;
-  variance: Float64Array;
-  gain: Float64Array;
-  /** Place + 1 of the walk that wrote `gain` last. */
-  stamp: Int32Array;
   heap: MaxHeap;
-  /** Groups and roots met in the current walk, and the lowest place at which one may be met again. */
+  /** Groups and roots met in the current walk, and the lowest place at which a group may be met again. */
   metGroups: number[];
   metRoots: number[];
   lowestGroup: number;
-  lowestRoot: number;
 };
 
 function newState(net: CompiledNetwork): State {
-  const count = net.nodeCount;
-  const { order, placeOf } = walkOrder(net);
-  const state: State = {
+  const records = walkRecords(net);
+  return {
+    ...records,
     net,
-    order,
-    placeOf,
-    ...linksByPlace(net, order, placeOf),
-    own: new Float64Array(count),
-    firstChild: new Int32Array(count).fill(count),
-    group: Int32Array.from(order, (node) => net.groupOf[node]!),
     lowestPlace: Int32Array.from(net.groups, (group) =>
-      group.members.reduce((lowest, node) => Math.min(lowest, placeOf[node]!), count),
+      group.members.reduce((lowest, node) => Math.min(lowest, records.placeOf[node]!), net.nodeCount),
     ),
-    variance: new Float64Array(count),
-    gain: new Float64Array(count),
-    stamp: new Int32Array(count),
-    heap: new MaxHeap(count),
+    heap: new MaxHeap(net.nodeCount),
     metGroups: [],
     metRoots: [],
-    lowestGroup: count,
-    lowestRoot: count,
+    lowestGroup: net.nodeCount,
   };
-  for (let place = count - 1; place >= 0; place -= 1) {
-    state.own[place] = ownVariance(net, order[place]!);
-    const from = state.linkStart[place]!;
-    const to = state.linkStart[place + 1]!;
-    for (let link = from; link < to; link += 1) state.firstChild[state.parent[link]!] = place;
-    if (from < to || state.group[place]! >= 0) state.firstChild[place] = -1;
-    // Whether an unknown root cancels out is seen only by walking all roads to it.
-    else if (state.own[place] === Infinity) state.firstChild[place] = 0;
-  }
-  return state;
-}
-
-/** Topological order with each root just before its first child: what is met together lies together in memory. */
-function walkOrder(net: CompiledNetwork): { order: Int32Array; placeOf: Int32Array } {
-  const order = new Int32Array(net.nodeCount);
-  const placeOf = new Int32Array(net.nodeCount).fill(-1);
-  let filled = 0;
-  const put = (node: number) => {
-    if (placeOf[node]! >= 0) return;
-    placeOf[node] = filled;
-    order[filled++] = node;
-  };
-  for (const node of net.order) {
-    const from = net.linkStart[node]!;
-    const to = net.linkStart[node + 1]!;
-    if (from === to) continue;
-    for (let link = from; link < to; link += 1) put(net.linkParent[link]!);
-    put(node);
-  }
-  net.order.forEach(put);
-  return { order, placeOf };
-}
-
-function linksByPlace(
-  net: CompiledNetwork,
-  order: Int32Array,
-  placeOf: Int32Array,
-): Pick<State, 'linkStart' | 'parent' | 'sensitivity'> {
-  const linkStart = new Int32Array(net.nodeCount + 1);
-  const parent = new Int32Array(net.linkParent.length);
-  const sensitivity = new Float64Array(net.linkParent.length);
-  let filled = 0;
-  for (let place = 0; place < net.nodeCount; place += 1) {
-    linkStart[place] = filled;
-    const node = order[place]!;
-    for (let link = net.linkStart[node]!; link < net.linkStart[node + 1]!; link += 1) {
-      parent[filled] = placeOf[net.linkParent[link]!]!;
-      sensitivity[filled++] = net.linkSensitivity[link]!;
-    }
-  }
-  linkStart[net.nodeCount] = filled;
-  return { linkStart, parent, sensitivity };
-}
-
-function ownVariance(net: CompiledNetwork, node: number): number {
-  if (net.unknown[node]) return Infinity;
-  let sum = net.ownVariance[node]!;
-  for (let link = net.linkStart[node]!; link < net.linkStart[node + 1]!; link += 1) {
-    sum += net.linkSpread[link]! * net.linkSpread[link]!;
-  }
-  return sum;
 }
 
 /** An infinite variance that enters with sensitivity 0 does not enter. */
@@ -143,66 +78,72 @@ function scaled(gain: number, variance: number): number {
 }
 
 /** The short cut for an ungrouped value with at most one parent; undefined where a walk is needed. */
-function oneParentVariance(state: State, place: number): number | undefined {
-  const from = state.linkStart[place]!;
-  const count = state.linkStart[place + 1]! - from;
-  if (count > 1 || state.group[place]! >= 0) return undefined;
-  if (count === 0) return state.own[place]!;
-  return state.own[place]! + scaled(state.sensitivity[from]!, state.variance[state.parent[from]!]!);
+function oneParentVariance({ numbers, integers }: State, place: number): number | undefined {
+  const at = place * INTEGERS;
+  const count = integers[at + LINK_END]! - integers[at + LINK_START]!;
+  if (count > 1 || integers[at + GROUP]! >= 0) return undefined;
+  const own = numbers[place * NUMBERS + OWN]!;
+  if (count === 0) return own;
+  const parentVariance = numbers[integers[at + PARENT]! * NUMBERS + VARIANCE]!;
+  return own + scaled(numbers[place * NUMBERS + SENSITIVITY]!, parentVariance);
 }
 
+/** One long function on purpose, since a register of a million values spends its time here and calls cost a sixth. */
 function walkedVariance(state: State, focus: number): number {
-  const { heap, gain, stamp } = state;
-  state.metGroups.length = 0;
-  state.metRoots.length = 0;
-  state.lowestGroup = state.net.nodeCount;
-  state.lowestRoot = state.net.nodeCount;
-  gain[focus] = 1;
-  stamp[focus] = focus + 1;
-  let sum = expand(state, focus, focus);
-  while (heap.size > 0) {
-    const place = heap.pop();
+  const { heap, numbers, integers, parent, sensitivity, metRoots } = state;
+  const stamp = focus + 1;
+  startWalk(state, focus);
+  let sum = 0;
+  let lowestRoot = state.net.nodeCount;
+  for (let place = focus; ; place = heap.pop()) {
     // What was met and may be met again above would be correlated with this ancestor: then the walk goes on.
-    if (heap.size === 0 && place < state.lowestGroup && place <= state.lowestRoot) {
-      sum += scaled(gain[place]!, state.variance[place]!) + rootsOfLast(state, place, focus);
+    if (heap.size === 0 && place < state.lowestGroup && place <= lowestRoot && place !== focus) {
+      sum += shareOf(state, place) + rootsOfLast(state, place, stamp);
       break;
     }
-    sum += expand(state, place, focus);
+    const at = place * INTEGERS;
+    const gain = numbers[place * NUMBERS + GAIN]!;
+    sum += scaled(gain, numbers[place * NUMBERS + OWN]!);
+    if (integers[at + GROUP]! >= 0) meetGroup(state, integers[at + GROUP]!);
+    let up = integers[at + PARENT]!;
+    let part = gain * numbers[place * NUMBERS + SENSITIVITY]!;
+    const end = integers[at + LINK_END]!;
+    for (let link = integers[at + LINK_START]!; link < end;) {
+      const first = integers[up * INTEGERS + FIRST_CHILD]!;
+      if (integers[up * INTEGERS + STAMP] === stamp) {
+        numbers[up * NUMBERS + GAIN]! += part;
+      } else if (first === place) {
+        sum += scaled(part, numbers[up * NUMBERS + VARIANCE]!);
+      } else {
+        integers[up * INTEGERS + STAMP] = stamp;
+        numbers[up * NUMBERS + GAIN] = part;
+        if (first < 0) heap.push(up);
+        else metRoots.push(up);
+        if (first >= 0 && first < lowestRoot) lowestRoot = first;
+      }
+      link += 1;
+      if (link === end) break;
+      up = parent[link]!;
+      part = gain * sensitivity[link]!;
+    }
+    if (heap.size === 0) break;
   }
-  for (const root of state.metRoots) sum += scaled(gain[root]!, state.variance[root]!);
-  for (const index of state.metGroups) sum += groupVariance(state, index, focus);
+  for (const root of metRoots) sum += shareOf(state, root);
+  for (const index of state.metGroups) sum += groupVariance(state, index, stamp);
   return Math.max(0, sum);
 }
 
-/** Adds a node's own variance and hands its gain to its parents. */
-function expand(state: State, place: number, focus: number): number {
-  const { gain, stamp, parent, sensitivity, firstChild } = state;
-  const own = gain[place]!;
-  if (state.group[place]! >= 0) meetGroup(state, state.group[place]!);
-  const to = state.linkStart[place + 1]!;
-  let sum = scaled(own, state.own[place]!);
-  for (let link = state.linkStart[place]!; link < to; link += 1) {
-    const up = parent[link]!;
-    const part = own * sensitivity[link]!;
-    if (stamp[up] === focus + 1) {
-      gain[up]! += part;
-      continue;
-    }
-    const first = firstChild[up]!;
-    if (first === place) {
-      sum += scaled(part, state.variance[up]!);
-      continue;
-    }
-    stamp[up] = focus + 1;
-    gain[up] = part;
-    if (first < 0) {
-      state.heap.push(up);
-    } else {
-      state.metRoots.push(up);
-      if (first < state.lowestRoot) state.lowestRoot = first;
-    }
-  }
-  return sum;
+function startWalk(state: State, focus: number): void {
+  state.metGroups.length = 0;
+  state.metRoots.length = 0;
+  state.lowestGroup = state.net.nodeCount;
+  state.numbers[focus * NUMBERS + GAIN] = 1;
+  state.integers[focus * INTEGERS + STAMP] = focus + 1;
+}
+
+/** What a place and all above it bring to the focus. */
+function shareOf({ numbers }: State, place: number): number {
+  return scaled(numbers[place * NUMBERS + GAIN]!, numbers[place * NUMBERS + VARIANCE]!);
 }
 
 function meetGroup(state: State, index: number): void {
@@ -211,23 +152,29 @@ function meetGroup(state: State, index: number): void {
 }
 
 /** Twice the covariance of the last ancestor with the waiting roots whose first child it is. */
-function rootsOfLast(state: State, place: number, focus: number): number {
+function rootsOfLast(
+  { numbers, integers, parent, sensitivity }: State,
+  place: number,
+  stamp: number,
+): number {
+  const gain = numbers[place * NUMBERS + GAIN]!;
+  const end = integers[place * INTEGERS + LINK_END]!;
   let sum = 0;
-  for (let link = state.linkStart[place]!; link < state.linkStart[place + 1]!; link += 1) {
-    const root = state.parent[link]!;
-    if (state.stamp[root] !== focus + 1) continue;
-    const product = state.gain[place]! * state.gain[root]! * state.sensitivity[link]!;
-    if (product !== 0) sum += 2 * product * state.variance[root]!;
+  for (let link = integers[place * INTEGERS + LINK_START]!; link < end; link += 1) {
+    const root = parent[link]!;
+    if (integers[root * INTEGERS + STAMP] !== stamp) continue;
+    const product = gain * numbers[root * NUMBERS + GAIN]! * sensitivity[link]!;
+    if (product !== 0) sum += 2 * product * numbers[root * NUMBERS + VARIANCE]!;
   }
   return sum;
 }
 
 /** `g' K g` over the members this walk has reached. */
-function groupVariance(state: State, index: number, focus: number): number {
+function groupVariance(state: State, index: number, stamp: number): number {
   const { members, covariance } = state.net.groups[index]!;
   const gains = Array.from(members, (node) => {
     const place = state.placeOf[node]!;
-    return state.stamp[place] === focus + 1 ? state.gain[place]! : 0;
+    return state.integers[place * INTEGERS + STAMP] === stamp ? state.numbers[place * NUMBERS + GAIN]! : 0;
   });
   let sum = 0;
   gains.forEach((gain, i) => {
