@@ -1,4 +1,5 @@
 import type { Sequelize } from 'sequelize';
+import { decimalText } from '#shared/decimal.ts';
 import type { DraftContent, DraftLine, ReferenceChoice } from '#shared/contracts/calibrations.ts';
 import { Day, type WeightClass } from '#shared/contracts/common.ts';
 import { readRow, readRows } from '#server/db/read.ts';
@@ -110,7 +111,13 @@ async function standardsOf(
   return rows.map((row) => {
     const lastValues: DraftStandard['lastValues'] = {};
     for (const { standardId, quantity, ...value } of values) {
-      if (standardId === row.id) lastValues[quantity] = value;
+      if (standardId !== row.id) continue;
+      const { deviation, expandedU, performedEnd } = value;
+      lastValues[quantity] = {
+        deviation: decimalText(deviation),
+        expandedU: expandedU && decimalText(expandedU),
+        performedEnd,
+      };
     }
     return { ...row, lastValues };
   });

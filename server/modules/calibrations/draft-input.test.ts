@@ -122,6 +122,20 @@ describe('the references of a line', () => {
     ]);
   });
 
+  it.each([
+    ['0.001', /^1 mg from 1 kg: is TV 0001 really/],
+    ['20000', /^20 kg from 1 kg: is TV 0001 really/],
+    ['100', null],
+    ['10000', null],
+  ])('are asked about, without blocking, where one is far from %s g', (nominal, words) => {
+    const reading = read({ ...named({ valueUid: KILOGRAM }), value: '0' }, {}, factsOf({}, nominal));
+    const notes = reading.points.filter(
+      ({ kind, field }) => kind === 'note' && field === 'lines.0.references',
+    );
+    expect(notes.map(({ message }) => message)).toEqual(words ? [expect.stringMatching(words)] : []);
+    expect(blocking(reading)).toEqual([]);
+  });
+
   it('end a chain at a recognized issuer, and say so', () => {
     const { input, points } = read();
     expect(input?.lines[0]?.rootKind).toBe('recognized certificate');

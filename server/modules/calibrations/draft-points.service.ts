@@ -1,7 +1,7 @@
 import type { CalibrationInput, DraftContent, OpenPoint } from '#shared/contracts/calibrations.ts';
-import { readRow } from '#server/db/read.ts';
 import { today, type Context } from '#server/http/context.ts';
 import { completeSources } from './complete-sources.ts';
+import { dayPoints, repeatedCertificate } from './draft-early-points.ts';
 import { draftSurroundings, type DraftSurroundings } from './draft-facts.queries.ts';
 import { draftField, readDraft } from './draft-input.ts';
 import { issueFacts } from './issue-facts.queries.ts';
@@ -22,13 +22,21 @@ export async function judgeDraft(
   content: DraftContent,
 ): Promise<JudgedDraft> {
   const surroundings = await draftSurroundings(context.database, laboratoryId, content, today(context));
-  const { input, points } = readDraft(content, surroundings.facts);
+  const { input, points: typed } = readDraft(content, surroundings.facts);
+  const points = added(typed, [
+    ...dayPoints(content, today(context)),
+    ...(await repeatedCertificate(context.database, content)),
+  ]);
   if (!input) return { ...surroundings, input: null, read: null, points };
-  const rules = await rulePoints(context, input);
   // The question of the unit is asked by the reading already, beside the others.
-  const asked = new Set(points.map((point) => point.field));
-  const all = [...points, ...rules.filter((point) => !asked.has(point.field))];
+  const all = added(points, await rulePoints(context, input));
   return { ...surroundings, input: all.some(isBlocking) ? null : input, read: input, points: all };
+}
+
+/** The points, and those further ones whose field has none that blocks yet. */
+function added(points: readonly OpenPoint[], further: readonly OpenPoint[]): OpenPoint[] {
+  const asked = new Set(points.filter(isBlocking).map((point) => point.field));
+  return [...points, ...further.filter((point) => !asked.has(point.field))];
 }
 
 /** Whether a point keeps the draft from being issued. */
@@ -39,32 +47,12 @@ export function isBlocking(point: OpenPoint): boolean {
 async function rulePoints(context: Context, input: CalibrationInput): Promise<OpenPoint[]> {
   const facts = await issueFacts(context.database, input, today(context));
   const problems = issueProblems(completeSources(input, facts), facts);
-  const points = problems.map(
-    ({ field, message, received = null, expected = null, clause = null }): OpenPoint => ({
-      field: draftField(field),
-      message,
-      received,
-      expected,
-      clause,
-      kind: 'wrong',
-    }),
-  );
-  const { issuerId, certificateNo } = input;
-  const known = await readRow(
-    context.database,
-    'SELECT id FROM calibration WHERE laboratory_id = :issuerId AND certificate_no = :certificateNo',
-    { issuerId, certificateNo },
-  );
-  if (!known) return points;
-  return [
-    {
-      field: 'certificateNo',
-      message: 'This certificate of this laboratory is already in the register.',
-      received: certificateNo,
-      expected: 'a certificate that is not entered yet',
-      clause: null,
-      kind: 'wrong',
-    },
-    ...points,
-  ];
+  return problems.map(({ field, message, received = null, expected = null, clause = null }): OpenPoint => ({
+    field: draftField(field),
+    message,
+    received,
+    expected,
+    clause,
+    kind: 'wrong',
+  }));
 }

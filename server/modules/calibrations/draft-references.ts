@@ -1,6 +1,7 @@
 import type { z } from 'zod';
-import { Decimal } from '#shared/decimal.ts';
+import { Decimal, decimalText } from '#shared/decimal.ts';
 import type { CalibrationInput, DraftContent, DraftLine, OpenPoint } from '#shared/contracts/calibrations.ts';
+import { convertUnit } from '#shared/engine/quantity/units.ts';
 import type { DraftFacts, DraftStandardFacts } from './draft-facts.ts';
 import { missing, wrong } from './open-points.ts';
 import { readFactor, type Reading } from './read-typed.ts';
@@ -20,6 +21,7 @@ export function readReferences(
   points: OpenPoint[],
 ): ReferenceInput[] {
   if (line.references.length === 0) points.push(...withoutReference(path, facts));
+  points.push(...farReference(line, path, facts, standard));
   return line.references.flatMap(({ valueUid, sensitivity, usedAs }, at) => {
     const field = `${path}.references.${at}`;
     const reference = facts.references.get(valueUid);
@@ -70,6 +72,33 @@ function withoutReference(path: string, facts: DraftFacts): OpenPoint[] {
   }
   const message = `No reference is named: the chain will end at this certificate, as one of a recognized issuer (${issuer.name}).`;
   return [{ field, message, received: null, expected: null, clause: 'ILAC P10', kind: 'note' }];
+}
+
+/**
+ * A single reference more than ten times lighter or heavier than the weight is unusual enough to be asked about;
+ * multiples and parts are calibrated in smaller steps (common practice, no source).
+ */
+function farReference(
+  line: DraftLine,
+  path: string,
+  facts: DraftFacts,
+  standard: DraftStandardFacts | undefined,
+): OpenPoint[] {
+  const [used, ...others] = line.references;
+  const reference = used && facts.references.get(used.valueUid);
+  if (!standard || !reference || others.length > 0 || !new Decimal(reference.nominal).gt(0)) return [];
+  const ratio = new Decimal(standard.nominal).div(reference.nominal);
+  if (ratio.gte('0.1') && ratio.lte(10)) return [];
+  const message = `${nominalWords(standard.nominal)} from ${nominalWords(reference.nominal)}: is ${reference.registryNo} really the reference of this line?`;
+  return [
+    { field: `${path}.references`, message, received: null, expected: null, clause: null, kind: 'note' },
+  ];
+}
+
+/** A nominal as it is engraved: "1 mg", "500 g", "1 kg". */
+function nominalWords(grams: string): string {
+  const unit = new Decimal(grams).gte(1000) ? 'kg' : new Decimal(grams).gte(1) ? 'g' : 'mg';
+  return `${decimalText(convertUnit(new Decimal(grams), 'g', unit))} ${unit}`;
 }
 
 /**

@@ -30,7 +30,11 @@ export function refuseProblems(problems: readonly IssueProblem[]): void {
   throw new AppError('unprocessable', `${first.message}${more}`, { fields });
 }
 
-function dateProblems(input: CalibrationInput, today: string): IssueProblem[] {
+/** Days in an order that cannot be, or in the future. */
+export function dateProblems(
+  input: Pick<CalibrationInput, 'performedBegin' | 'performedEnd' | 'issuedOn'>,
+  today: string,
+): IssueProblem[] {
   const { performedBegin, performedEnd, issuedOn } = input;
   const problems: IssueProblem[] = [];
   if (performedBegin > performedEnd) {

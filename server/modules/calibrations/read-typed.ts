@@ -86,6 +86,8 @@ function reading<T>(field: string, received: string, expected: string, read: () 
     return { value: read() };
   } catch (error) {
     if (!(error instanceof EngineError)) throw error;
-    return { point: { field, message: error.expected, received, expected, clause: null, kind: 'wrong' } };
+    // The engine's own example is a mass with its uncertainty; what is expected here fits the field.
+    const message = error.code === 'not-a-number' ? 'This cannot be read as a number.' : error.expected;
+    return { point: { field, message, received, expected, clause: null, kind: 'wrong' } };
   }
 }
