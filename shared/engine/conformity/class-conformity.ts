@@ -33,6 +33,11 @@ export interface ClassConformity {
   rule: string;
 }
 
+/** Whether an expanded uncertainty is at most a third of a maximum permissible error, the noise of a double allowed. */
+export function isWithinThird(expandedUncertainty: Decimal, mpe: Decimal): boolean {
+  return expandedUncertainty.lte(mpe.div(3).times(new Decimal(1).plus(DOUBLE_NOISE)));
+}
+
 /**
  * Whether an expanded uncertainty is at most a third of a maximum permissible error. The third is exact: a printed
  * 0.17 mg may be 0.166 mg rounded, so it straddles 0.5 mg / 3 and is no finding.
@@ -48,7 +53,7 @@ function judgeUncertainty(
 ): UncertaintyAllowed {
   const held = new Decimal(expandedUncertainty);
   const limit = mpe.div(3);
-  if (held.lte(limit.times(new Decimal(1).plus(DOUBLE_NOISE)))) return true;
+  if (isWithinThird(held, mpe)) return true;
   const halfDigit = new Decimal(10).pow(-(decimals ?? held.decimalPlaces())).div(2);
   return held.minus(halfDigit).lte(limit) ? 'within rounding' : false;
 }

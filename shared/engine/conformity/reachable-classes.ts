@@ -1,10 +1,8 @@
 import { Decimal } from '#shared/decimal.ts';
 import { requireNumber } from '../quantity/domain.ts';
+import { isWithinThird } from './class-conformity.ts';
 import { maximumPermissibleError } from './maximum-permissible-error.ts';
 import { WEIGHT_CLASSES, type WeightClass } from './r111-2004.ts';
-
-/** Relative noise of a double that was computed as MPE/3. */
-const DOUBLE_NOISE = '1e-12';
 
 /**
  * The classes that a weight with this uncertainty can be shown to keep: U <= MPE/3, finest first. A weight calibrated
@@ -20,6 +18,6 @@ export function reachableClasses(nominal: Decimal, expandedUncertainty: number):
   const held = new Decimal(requireNumber(expandedUncertainty, 'expandedUncertainty', { min: 0, unit: 'mg' }));
   return WEIGHT_CLASSES.filter((weightClass) => {
     const mpe = maximumPermissibleError(weightClass, nominal);
-    return mpe !== null && held.lte(mpe.div(3).times(new Decimal(1).plus(DOUBLE_NOISE)));
+    return mpe !== null && isWithinThird(held, mpe);
   });
 }

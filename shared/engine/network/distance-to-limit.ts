@@ -1,5 +1,6 @@
 import { type Decimal } from '#shared/decimal.ts';
 import { EngineError } from '../errors.ts';
+import { requireNumber } from '../quantity/domain.ts';
 
 /** How far something may move either way; null: without limit. */
 export type DistanceToLimit = { upwards: number | null; downwards: number | null };
@@ -8,6 +9,7 @@ export type DistanceToLimit = { upwards: number | null; downwards: number | null
  * How wrong what a value leans on may be before the value itself passes a limit: the room left on each side over the
  * sensitivity, in a linear network. A limit on |deviation|, both in one unit; the answer in that unit over the
  * sensitivity's.
+ * Source: the linear model of JCGM 102:2011, 6.2.
  * @param a.largest the largest |deviation| that is still within the limit
  * @param a.sensitivity change of the value per change of what it leans on; 0 moves nothing, however wrong
  * @throws EngineError `out-of-range` where the value is beyond the limit already, `not-finite` for the sensitivity
@@ -17,9 +19,7 @@ export function distanceToLimit(a: {
   largest: Decimal;
   sensitivity: number;
 }): DistanceToLimit {
-  if (!Number.isFinite(a.sensitivity)) {
-    throw new EngineError('not-finite', 'sensitivity', a.sensitivity, 'A finite number is expected.');
-  }
+  requireNumber(a.sensitivity, 'sensitivity');
   if (a.deviation.abs().gt(a.largest)) {
     throw new EngineError(
       'out-of-range',

@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { consensusValue } from '../comparison/consensus-value.ts';
 import { applyChanges } from './apply-changes.ts';
@@ -66,6 +67,41 @@ describe('KG-cv1, KG-cv2, KG-rule, KG-phases: notices that map one mass-scale ve
     expect(after.shifts[3]).toBeCloseTo(-0.2, 14);
     expect(after.variances[3]! - before.variances[3]!).toBeCloseTo(4, 12);
     expect(after.variances[0]! - before.variances[0]!).toBeCloseTo(400, 10);
+  });
+
+  it('reach a weight with total sensitivity m/1 kg at any depth, by any roads, whichever values the notice names', () => {
+    const step = fc.record({
+      fraction: fc.integer({ min: 1, max: 10 }).map((tenth) => tenth / 10),
+      share: fc.integer({ min: 0, max: 10 }).map((tenth) => tenth / 10),
+      isCovered: fc.boolean(),
+    });
+    fc.assert(
+      fc.property(fc.array(step, { minLength: 1, maxLength: 9 }), (steps) => {
+        // Each step: a subdivision to `fraction` of the mass, by two standards of one kind in the proportion `share`.
+        const masses = steps.reduce((list, { fraction }) => [...list, list.at(-1)! * fraction], [1]);
+        const net: Network = { values: [{ id: 'left 0', local: 1 }, { id: 'right 0', local: 0 }], links: [] }; // prettier-ignore
+        net.links.push({ child: 'right 0', parent: 'left 0', sensitivity: 1 });
+        const terms = [{ value: 'left 0', shift: -12, sensitivity: 1 }];
+        steps.forEach(({ fraction, share, isCovered }, i) => {
+          for (const side of ['left', 'right']) {
+            const child = `${side} ${i + 1}`;
+            net.values.push({ id: child, local: 0.5 });
+            net.links.push({ child, parent: `left ${i}`, sensitivity: fraction * share });
+            net.links.push({ child, parent: `right ${i}`, sensitivity: fraction * (1 - share) });
+            const mass = masses[i + 1]!;
+            if (isCovered) terms.push({ value: child, shift: -12 * mass, sensitivity: mass });
+          }
+        });
+        const before = applyChanges(net, []);
+        const after = applyChanges(net, [{ kind: 'notice', id: 'scale', standardUncertainty: 20, terms }]);
+        net.values.forEach(({ id }, node) => {
+          const mass = masses[Number(id.split(' ')[1])]!;
+          expect(after.shifts[node]! / mass).toBeCloseTo(-12, 10);
+          const added = after.variances[node]! - before.variances[node]!;
+          expect(added / (20 * mass) ** 2).toBeCloseTo(1, 4);
+        });
+      }),
+    );
   });
 
   it('before 2019-05-20 the prototype had u = 0 by definition: a notice without uncertainty adds none', () => {

@@ -79,7 +79,7 @@ describe('propagate', () => {
     expect(result.standardUncertainty! ** 2).toBeLessThan(2e-8 ** 2 + ofReference);
   });
 
-  it('carries the covariance of one weighing design, so that the restraint sum stays exact', () => {
+  it('gives the restraint sum of one weighing design zero local variance, out of the covariance of the design', () => {
     // Three weights of one design whose local errors cancel in the sum: 1 + 1 + 1 = reference.
     const third = 1 / 3;
     const covariance = [0, 1, 2].map((i) => [0, 1, 2].map((j) => (i === j ? 2 : -1) * 0.01));
