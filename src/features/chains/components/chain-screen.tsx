@@ -2,6 +2,8 @@ import { lazy, Suspense, type ReactNode } from 'react';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { TwoColumns } from '#src/components/layout/columns.tsx';
 import { Page, Section } from '#src/components/layout/page.tsx';
+import { Button } from '#src/components/ui/button.tsx';
+import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { Coverage, Quantity } from '#src/components/ui/quantity.tsx';
 import { Decimal, decimalText } from '#shared/decimal.ts';
@@ -78,12 +80,16 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
         }
       >
         <Section title={<span className="sr-only">The chain, drawn</span>}>
-          <div className="h-[clamp(26rem,76dvh,64rem)] border-y border-rule">
-            <Suspense fallback={<Waiting>Fetching the drawing</Waiting>}>
-              <ChainGraph chain={chain} question={question} onSelect={select} />
-            </Suspense>
-          </div>
-          <Legend />
+          {isNothingFailing(chain, question) ? (
+            <NothingFails onShowAll={() => onChange({ only: undefined })} />
+          ) : (
+            <>
+              <Suspense fallback={<Waiting>Fetching the drawing</Waiting>}>
+                <ChainGraph chain={chain} question={question} onSelect={select} />
+              </Suspense>
+              <Legend />
+            </>
+          )}
         </Section>
       </TwoColumns>
       {question.at && (
@@ -95,6 +101,25 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
         />
       )}
     </Page>
+  );
+}
+
+function isNothingFailing(chain: ChainResponse, { only, verdict }: ChainQuestion): boolean {
+  return only === 'fails' && !chain.links.some((link) => ['broken', 'caution'].includes(link[verdict]));
+}
+
+/** In the drawing's place where only what fails was asked for. */
+function NothingFails({ onShowAll }: { onShowAll: () => void }) {
+  return (
+    <EmptyState
+      action={
+        <Button weight="text" onClick={onShowAll}>
+          Draw the whole chain
+        </Button>
+      }
+    >
+      No link fails a check.
+    </EmptyState>
   );
 }
 

@@ -26,8 +26,8 @@ export function QuestionBar({ question, answered, onChange }: QuestionBarProps) 
         value={question.verdict}
         onChange={(verdict) => onChange({ verdict })}
         choices={[
-          { value: 'today', label: 'What is known now' },
-          { value: 'conduct', label: 'What was known at use' },
+          { value: 'today', label: 'Known now' },
+          { value: 'conduct', label: 'Known at use' },
         ]}
       />
       <Switch

@@ -8,13 +8,17 @@ import { linkKey, type ChainQuestion } from '../question.ts';
 import { BandNode } from './band-node.tsx';
 import { drawnPart } from '../drawn-part.ts';
 import { displayList, layoutInput, type DisplayList } from './display-list.ts';
+import { Frame } from './frame.tsx';
+import { PLATE } from './geometry.ts';
 import { PlateNode } from './plate-node.tsx';
 import { RibbonEdge } from './ribbon-edge.tsx';
 import { useLayout } from './use-layout.ts';
+import type { Drawing } from './view-of.ts';
 
 const nodeTypes: NodeTypes = { plate: PlateNode, band: BandNode };
 const edgeTypes: EdgeTypes = { ribbon: RibbonEdge };
-const FIT = { padding: 0.06, maxZoom: 1 };
+/** All of it, however small: what the button of the drawing shows. */
+const WHOLE = { padding: 0.04, maxZoom: 1 };
 
 interface ChainGraphProps {
   chain: ChainResponse;
@@ -36,40 +40,54 @@ export function ChainGraph({ chain: whole, question, onSelect }: ChainGraphProps
     () => list && { nodes: nodesOf(list, question.at), edges: edgesOf(list, question.at) },
     [list, question.at],
   );
-  if (!drawn) return <Waiting>Laying the chain out</Waiting>;
   return (
-    <ReactFlow
-      key={`${chain.focusUid} ${question.draw} ${question.effects}`}
-      nodes={drawn.nodes}
-      edges={drawn.edges}
-      nodeTypes={nodeTypes}
-      edgeTypes={edgeTypes}
-      onNodeClick={(_event, node) => node.type === 'plate' && onSelect(node.id)}
-      onEdgeClick={(_event, edge) => onSelect(edge.id)}
-      nodesDraggable={false}
-      nodesConnectable={false}
-      edgesUpdatable={false}
-      edgesFocusable={false}
-      deleteKeyCode={null}
-      fitView
-      fitViewOptions={FIT}
-      minZoom={0.1}
-      maxZoom={2}
-      preventScrolling={false}
-      zoomOnScroll={false}
-      proOptions={{ hideAttribution: true }}
-      aria-label="The chain, drawn. The table of links holds the same facts."
-    >
-      <Controls showInteractive={false} position="bottom-right" />
-    </ReactFlow>
+    <Frame drawing={list && drawingOf(list)}>
+      {(show) =>
+        drawn ? (
+          <ReactFlow
+            key={`${chain.focusUid} ${question.draw} ${question.effects}`}
+            nodes={drawn.nodes}
+            edges={drawn.edges}
+            nodeTypes={nodeTypes}
+            edgeTypes={edgeTypes}
+            onNodeClick={(_event, node) => node.type === 'plate' && onSelect(node.id)}
+            onEdgeClick={(_event, edge) => onSelect(edge.id)}
+            nodesDraggable={false}
+            nodesConnectable={false}
+            edgesUpdatable={false}
+            edgesFocusable={false}
+            deleteKeyCode={null}
+            onInit={show}
+            minZoom={0.1}
+            maxZoom={2}
+            preventScrolling={false}
+            zoomOnScroll={false}
+            proOptions={{ hideAttribution: true }}
+            aria-label="The chain, drawn. The table of links holds the same facts."
+          >
+            <Controls showInteractive={false} position="top-right" fitViewOptions={WHOLE} />
+          </ReactFlow>
+        ) : (
+          <Waiting>Laying the chain out</Waiting>
+        )
+      }
+    </Frame>
   );
+}
+
+/** Bounds of the drawing, the band's included; the weight itself stays in sight. */
+function drawingOf(list: DisplayList): Drawing {
+  const left = Math.min(0, list.band.x);
+  const width = Math.max(list.width, list.band.width);
+  const focus = list.plates.find((plate) => plate.isFocus)!;
+  return { left, width, height: list.height, focusX: focus.x + PLATE.width / 2 };
 }
 
 function nodesOf(list: DisplayList, at: string | undefined): Node[] {
   const band: Node = {
     id: 'definition',
     type: 'band',
-    position: { x: 0, y: 0 },
+    position: { x: list.band.x, y: 0 },
     data: list.band,
     selectable: false,
     focusable: false,

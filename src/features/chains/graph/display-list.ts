@@ -1,5 +1,7 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { stateOfValue, type State } from '#src/lib/states.ts';
+import { groupBy } from '#shared/group-by.ts';
+import { countingChecks, worstOf } from '../counting-checks.ts';
 import { linkKey, type ChainQuestion } from '../question.ts';
 import { BAND, PLATE, SCALE } from './geometry.ts';
 import type { LayoutInput, Placement, Point } from './layout-input.ts';
@@ -14,6 +16,7 @@ export interface Plate {
   x: number;
   y: number;
   node: Node;
+  /** The worst of the value's own checks and its standing. */
   state: State;
   isFocus: boolean;
   isFaint: boolean;
@@ -49,7 +52,7 @@ export interface DisplayList {
   width: number;
   height: number;
   /** The definition in force when the roots were determined. */
-  band: { width: number; height: number; definition: ChainResponse['definition'] };
+  band: { x: number; width: number; height: number; definition: ChainResponse['definition'] };
   plates: Plate[];
   ribbons: Ribbon[];
 }
@@ -83,17 +86,18 @@ export function displayList(
   const isPlain = question.draw === 'plain';
   const failing = failingNodes(chain, question);
   const isFaint = (uid: string) => failing !== null && !failing.has(uid);
+  const own = ownChecks(chain, question);
   const placeOf = new Map(placement.plates.map((plate) => [plate.id, plate]));
   return {
     width: placement.width,
     height: placement.height,
-    band: { width: placement.width, height: BAND.height, definition: chain.definition },
+    band: bandOver(placement.width, chain.definition),
     plates: chain.nodes.map((node) => ({
       id: node.uid,
       x: placeOf.get(node.uid)!.x,
       y: placeOf.get(node.uid)!.y,
       node,
-      state: node.type === 'value' ? stateOfValue(node.state) : 'sound',
+      state: node.type === 'value' ? worstOf(own.get(node.uid) ?? [], stateOfValue(node.state)) : 'sound',
       isFocus: node.uid === chain.focusUid,
       isFaint: isFaint(node.uid),
       stub: stubOf(node, isPlain),
@@ -114,6 +118,20 @@ export function displayList(
       };
     }),
   };
+}
+
+/** As wide as the drawing, or centred over it and as wide as its words. */
+function bandOver(drawn: number, definition: ChainResponse['definition']): DisplayList['band'] {
+  const width = Math.max(drawn, BAND.leastWidth);
+  return { x: (drawn - width) / 2, width, height: BAND.height, definition };
+}
+
+function ownChecks(chain: ChainResponse, question: ChainQuestion) {
+  const ofValues = countingChecks(chain, question.verdict).flatMap((check) =>
+    check.subject.type === 'value' ? [{ uid: check.subject.uid, check }] : [],
+  );
+  const byUid = groupBy(ofValues, ({ uid }) => uid);
+  return new Map([...byUid].map(([uid, rows]) => [uid, rows.map(({ check }) => check)]));
 }
 
 function stubOf(node: Node, isPlain: boolean): Stub | null {

@@ -4,8 +4,8 @@ export const PLATE = { width: 186, height: 70 } as const;
 /** How far a local contribution's stub reaches out of its plate, its label included. */
 export const STUB_REACH = 66;
 export const GAP = { between: 22, lane: 14, tier: 40 } as const;
-/** Room for the definition's band above the roots. */
-export const BAND = { height: 38, gap: 26 } as const;
+/** Room for the definition's band above the roots, wide and high enough for its longest words in two lines. */
+export const BAND = { leastWidth: 470, height: 48, gap: 26 } as const;
 
 /** Drawn width of a share: true to scale, or a hairline that says it is not. */
 export function ribbonWidth(share: number | null): { width: number; isToScale: boolean } {

@@ -65,14 +65,35 @@ function ValueFace({ plate, node }: { plate: Plate; node: Extract<Plate['node'],
           face="serif"
         />
         <StateMark state={plate.state} isMarkOnly>
-          {node.state}
+          {plate.state}, {node.state}
         </StateMark>
       </div>
-      <div className="truncate text-xs text-ink-2">
-        <DateText value={datedTo(node.performedEnd, node.datePrecision)} /> · {node.issuer.name}
+      <div className="flex justify-between gap-1 text-xs whitespace-nowrap text-ink-2">
+        <span title={node.issuer.name}>
+          <DateText value={datedTo(node.performedEnd, node.datePrecision)} /> · {issuerText(node)}
+        </span>
+        {node.state !== 'in force' && (
+          <span aria-hidden="true" className={STANDING[node.state]}>
+            {node.state}
+          </span>
+        )}
       </div>
     </>
   );
+}
+
+const STANDING = {
+  superseded: 'text-caution',
+  withdrawn: 'text-broken',
+  'not yet in force': 'text-unjudged',
+} as const;
+
+/** Characters of an issuer's name that fit beside the date. */
+const LONGEST_NAME = 16;
+
+/** The issuer's code where its name would be cut, or where the value's standing needs the room. */
+function issuerText({ issuer, state }: Extract<Plate['node'], { type: 'value' }>): string {
+  return state === 'in force' && issuer.name.length <= LONGEST_NAME ? issuer.name : issuer.code;
 }
 
 function SourceFace({ node }: { node: Extract<Plate['node'], { type: 'source' }> }) {
