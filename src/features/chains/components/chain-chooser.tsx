@@ -53,6 +53,7 @@ export function ChainChooser({ q, onSearch, hrefOf }: ChainChooserProps) {
               <Head>Held by</Head>
               <Head>Certificate</Head>
               <Head>Calibrated</Head>
+              <Head>Quantity</Head>
               <Head align="right">Deviation</Head>
               <Head align="right">U</Head>
             </tr>
@@ -71,6 +72,7 @@ export function ChainChooser({ q, onSearch, hrefOf }: ChainChooserProps) {
                 <Cell>
                   <DateText value={value.performedEnd} />
                 </Cell>
+                <Cell>{value.quantity === 'mass' ? 'mass' : 'conventional'}</Cell>
                 <ValueCells {...value} />
               </Row>
             ))}

@@ -2,6 +2,7 @@ import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
+import { cancellations } from '../cancellations.ts';
 import { shareText } from '../share-text.ts';
 
 const LONGEST_LIST = 8;
@@ -42,6 +43,11 @@ export function Contributions({ chain }: { chain: ChainResponse }) {
           />
         )}
       </ol>
+      {cancellations(chain).map((sentence) => (
+        <p key={sentence} className="pt-2 text-ink-2">
+          {sentence}
+        </p>
+      ))}
       {chain.improvements.length > 0 && <Improvements chain={chain} />}
     </Section>
   );
