@@ -22,7 +22,7 @@ export function boxHeight(
   window: { innerWidth: number; innerHeight: number },
 ): number {
   const most = window.innerWidth < PHONE.width ? window.innerHeight * PHONE.share : BOX.most;
-  const needed = drawing.height * zoomFor(drawing, width) + MARGIN.top + MARGIN.foot;
+  const needed = Math.ceil(drawing.height * zoomFor(drawing, width)) + MARGIN.top + MARGIN.foot;
   return Math.round(Math.min(most, Math.max(Math.min(BOX.least, most), needed)));
 }
 
