@@ -19,7 +19,7 @@ export function Frame({ drawing, children }: FrameProps) {
     observer.observe(box.current!);
     return () => observer.disconnect();
   }, []);
-  const height = drawing && width > 0 ? boxHeight(drawing, width, window) : undefined;
+  const height = drawing && width > 0 ? boxHeight(drawing, width, windowNow()) : undefined;
   const view = drawing && height ? viewOf(drawing, { width, height }) : null;
   const { x, y, zoom } = view ?? {};
   useEffect(() => {
@@ -38,4 +38,8 @@ export function Frame({ drawing, children }: FrameProps) {
       )}
     </>
   );
+}
+
+function windowNow() {
+  return { height: window.innerHeight, isByFinger: window.matchMedia('(pointer: coarse)').matches };
 }

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { boxHeight, viewOf, type Drawing } from './view-of.ts';
 
-const DESKTOP = { innerWidth: 1280, innerHeight: 900 };
+const DESKTOP = { height: 900, isByFinger: false };
 const tall: Drawing = { left: -100, width: 470, height: 1400, focusX: 135 };
 const wide: Drawing = { left: 0, width: 2000, height: 700, focusX: 1900 };
 
@@ -24,10 +24,10 @@ describe('frame of the drawing', () => {
     expect(focus).toBeLessThan(620);
   });
 
-  it('ends at 1600 px, and on a phone before the window does; the foot stays in sight', () => {
+  it('ends at 1600 px, and under a finger before the window does; the foot stays in sight', () => {
     const endless = { ...tall, height: 5000 };
     expect(boxHeight(endless, 620, DESKTOP)).toBe(1600);
-    const height = boxHeight(endless, 358, { innerWidth: 390, innerHeight: 800 });
+    const height = boxHeight(endless, 358, { height: 800, isByFinger: true });
     expect(height).toBe(608);
     const { y, zoom } = viewOf(endless, { width: 358, height });
     expect(y + endless.height * zoom).toBeLessThan(height);

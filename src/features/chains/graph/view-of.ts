@@ -12,16 +12,16 @@ const LEAST_ZOOM = 0.85;
 /** Room around the drawing, px; at the top also for the controls. */
 const MARGIN = { side: 20, top: 48, foot: 20 } as const;
 const BOX = { least: 416, most: 1600 } as const;
-/** On a phone, where a finger moves the drawing, the frame leaves room to scroll the page past it. */
-const PHONE = { width: 640, share: 0.76 } as const;
+/** Where a finger moves the drawing, its frame leaves room to scroll the page past it. */
+const SHARE_BY_FINGER = 0.76;
 
 /** Height of the frame, px: as high as the drawing needs at the size that the width allows. */
 export function boxHeight(
   drawing: Drawing,
   width: number,
-  window: { innerWidth: number; innerHeight: number },
+  window: { height: number; isByFinger: boolean },
 ): number {
-  const most = window.innerWidth < PHONE.width ? window.innerHeight * PHONE.share : BOX.most;
+  const most = window.isByFinger ? Math.round(window.height * SHARE_BY_FINGER) : BOX.most;
   const needed = Math.ceil(drawing.height * zoomFor(drawing, width)) + MARGIN.top + MARGIN.foot;
   return Math.round(Math.min(most, Math.max(Math.min(BOX.least, most), needed)));
 }
