@@ -74,7 +74,7 @@ function ValueFace({ plate, node }: { plate: Plate; node: Extract<Plate['node'],
         </span>
         {node.state !== 'in force' && (
           <span aria-hidden="true" className={STANDING[node.state]}>
-            {node.state}
+            {node.state === 'not yet in force' ? 'not yet' : node.state}
           </span>
         )}
       </div>
