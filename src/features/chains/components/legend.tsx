@@ -4,8 +4,7 @@ export function Legend() {
     <p className="text-sm text-ink-2">
       A line is as wide as the share of the weight’s variance that flows through it; grey stubs are what a
       value adds of its own. Dashed: a negative flow, where correlations cancel. Dotted: informs, nothing
-      flows. A hairline is too thin for the scale. Shared effects below 1 % are drawn when asked for; the
-      table has them all.
+      flows. A hairline is too thin for the scale. Shared effects below 1 % are shown when asked for.
     </p>
   );
 }
