@@ -1,3 +1,4 @@
+import { useEffect } from 'react';
 import { useController, useFormContext, useWatch } from 'react-hook-form';
 import { DecimalField } from '#src/components/ui/decimal-field.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
@@ -24,12 +25,14 @@ export function MassCell({ at, part, label, isLocked, error }: MassCellProps) {
   const chosen = useWatch({ control, name: unitPath });
   const held = ownUnit(field.value, chosen);
 
-  function change(next: string): void {
-    const typed = ownUnit(next, held.unit);
-    const read = readDecimal(typed.text, decimalMark);
-    if (typed.unit !== chosen) setValue(unitPath, typed.unit, { shouldDirty: true });
-    field.onChange(read.kind === 'number' ? read.value : typed.text);
-  }
+  // The cell shows what is typed until the unit is complete; then number and unit go to their places.
+  const read = readDecimal(held.text, decimalMark);
+  const parted = !isLocked && held.text !== field.value && read.kind === 'number' ? read.value : null;
+  useEffect(() => {
+    if (parted === null) return;
+    setValue(unitPath, held.unit, { shouldDirty: true });
+    setValue(path, parted, { shouldDirty: true });
+  }, [parted, held.unit, path, unitPath, setValue]);
 
   return (
     <DecimalField
@@ -40,8 +43,7 @@ export function MassCell({ at, part, label, isLocked, error }: MassCellProps) {
       readOnly={isLocked}
       error={error}
       {...field}
-      value={held.text}
-      onChange={change}
+      value={isLocked ? held.text : field.value}
     />
   );
 }

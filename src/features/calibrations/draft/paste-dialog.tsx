@@ -1,7 +1,9 @@
 import { useQuery } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import { useFormContext, useWatch } from 'react-hook-form';
+import type { MassUnit } from '#shared/contracts/common.ts';
 import { Button } from '#src/components/ui/button.tsx';
+import { Checkbox } from '#src/components/ui/checkbox.tsx';
 import { Dialog } from '#src/components/ui/dialog.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
 import { SelectField } from '#src/components/ui/select-field.tsx';
@@ -12,8 +14,8 @@ import { useDraft } from './draft-context.ts';
 import type { DraftValues } from './draft-values.ts';
 import { knownFromRow, useKnown } from './known.ts';
 import { PastedPreview } from './pasted-preview.tsx';
-import { putRows, understandRows } from './paste-lines.ts';
-import { readPastedRows, readPastedTable, type Column } from './read-paste.ts';
+import { putRows, understandRows, whyLeftOut, type UnderstoodRow } from './paste-lines.ts';
+import { decimalSignOf, readPastedRows, readPastedTable, type Column } from './read-paste.ts';
 
 const WEIGHTS_LOOKED_AT = 200;
 const LONGEST_DRAFT = 200;
@@ -35,6 +37,7 @@ export function PasteDialog({ text: pasted, onPut, onClose }: PasteDialogProps) 
   const [text, setText] = useState(pasted);
   const [columns, setColumns] = useState<Column[] | null>(null);
   const [set, setSet] = useState('');
+  const [saysComma, setSaysComma] = useState<boolean | null>(null);
   const [turnsSign, setTurnsSign] = useState<boolean | null>(null);
   const others = useQuery({
     queryKey: ['standards', 'to match', laboratoryId],
@@ -43,25 +46,29 @@ export function PasteDialog({ text: pasted, onPut, onClose }: PasteDialogProps) 
 
   const read = useMemo(() => readPastedTable(text), [text]);
   const table = { ...read, columns: columns ?? read.columns };
-  const { unit, uUnit } = lines[0] ?? { unit: 'mg' as const, uUnit: 'mg' as const };
+  const sign = decimalSignOf(table);
+  const isComma = saysComma ?? (sign === ',' || (sign === 'ambiguous' && decimalMark === ','));
+  const unit = usualUnit(lines.map((line) => line.unit));
+  const uUnit = usualUnit(lines.map((line) => line.uUnit));
   const sets = new Map(
     (others.data ?? []).flatMap(({ set: one }) => (one ? [[one.id, one.registryNo] as const] : [])),
   );
   const candidates = (others.data ?? []).filter((row) => set === '' || row.set?.id === set);
   const inResults = lines.flatMap(({ standardId }) => known.standards.get(standardId ?? '') ?? []);
   const rows = understandRows(
-    readPastedRows(table, { unit, uUnit, decimalMark }),
+    readPastedRows(table, { unit, uUnit, decimalMark: isComma ? ',' : '.' }),
     inResults,
     candidates.map(knownFromRow),
   );
   const asksSign = read.isCorrection && turnsSign === null;
-  const result = putRows(lines, rows, turnsSign ?? false);
+  const goingIn = rows.filter((row) => whyLeftOut(row) === null);
+  const result = putRows(lines, goingIn, turnsSign ?? false);
   const isTooLong = result.length > LONGEST_DRAFT;
 
   function put(): void {
     known.learnStandards(others.data ?? []);
     const names = new Map<string, string>();
-    setValue('lines', putRows(getValues('lines'), rows, turnsSign ?? false, names), { shouldDirty: true });
+    setValue('lines', putRows(getValues('lines'), goingIn, turnsSign ?? false, names), { shouldDirty: true });
     onPut(names);
     onClose();
   }
@@ -72,10 +79,15 @@ export function PasteDialog({ text: pasted, onPut, onClose }: PasteDialogProps) 
       onClose={onClose}
       actions={
         <>
-          <Button weight="primary" disabled={rows.length === 0 || asksSign || isTooLong} onClick={put}>
-            {rows.length === 1 ? 'Put 1 row in' : `Put ${rows.length} rows in`}
+          <Button weight="primary" disabled={goingIn.length === 0 || asksSign || isTooLong} onClick={put}>
+            {`Put ${countOfRows(goingIn.length, rows.length)} in`}
           </Button>
           <Button onClick={onClose}>Put nothing in</Button>
+          {goingIn.length === 0 && (
+            <span className="self-center text-sm text-ink-2">
+              {rows.length === 0 ? 'No rows are pasted yet.' : 'No row can be read.'}
+            </span>
+          )}
         </>
       }
     >
@@ -88,8 +100,21 @@ export function PasteDialog({ text: pasted, onPut, onClose }: PasteDialogProps) 
           setText(event.target.value);
           setColumns(null);
           setTurnsSign(null);
+          setSaysComma(null);
         }}
       />
+      {(sign === ',' || sign === 'ambiguous') && (
+        <Checkbox
+          label="The comma is the decimal sign"
+          hint={
+            sign === 'ambiguous'
+              ? 'Each number has exactly three digits after its comma, so it can be read in two ways.'
+              : undefined
+          }
+          checked={isComma}
+          onChange={(event) => setSaysComma(event.target.checked)}
+        />
+      )}
       {sets.size > 0 && (
         <SelectField
           label="Weights of"
@@ -120,6 +145,7 @@ export function PasteDialog({ text: pasted, onPut, onClose }: PasteDialogProps) 
           {turnsSign !== null && (turnsSign ? ' The signs are turned.' : ' The signs are kept.')}
         </Notice>
       )}
+      <LeftOut rows={rows} />
       {isTooLong && (
         <Notice tone="broken" title="Too many lines">
           A draft takes {LONGEST_DRAFT} lines; with these it would have {result.length}.
@@ -140,4 +166,45 @@ export function PasteDialog({ text: pasted, onPut, onClose }: PasteDialogProps) 
       )}
     </Dialog>
   );
+}
+
+/** The unit most lines have; milligrams where there are none. */
+function usualUnit(units: readonly MassUnit[]): MassUnit {
+  const count = (unit: MassUnit): number => units.filter((one) => one === unit).length;
+  return units.toSorted((a, b) => count(b) - count(a))[0] ?? 'mg';
+}
+
+/** The rows that stay out, each with the reason. */
+function LeftOut({ rows }: { rows: readonly UnderstoodRow[] }) {
+  const out = rows.flatMap((row, at) => {
+    const why = whyLeftOut(row);
+    return why === null ? [] : [{ at, weight: row.row.weight, why }];
+  });
+  if (out.length === 0) return null;
+  return (
+    <Notice
+      tone="caution"
+      role="status"
+      title={
+        out.length === 1
+          ? '1 row cannot be read and stays out'
+          : `${out.length} rows cannot be read and stay out`
+      }
+    >
+      <ul className="max-h-32 overflow-auto">
+        {out.map(({ at, weight, why }) => (
+          <li key={at}>
+            Row {at + 1}
+            {weight && `, ${weight}`}: {why}
+          </li>
+        ))}
+      </ul>
+    </Notice>
+  );
+}
+
+/** "1 row", "12 rows", or "10 of 12 rows" where some stay out. */
+function countOfRows(goingIn: number, all: number): string {
+  const rows = all === 1 ? 'row' : 'rows';
+  return goingIn === all ? `${all} ${rows}` : `${goingIn} of ${all} ${rows}`;
 }

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { newLine } from './draft-values.ts';
 import type { KnownStandard } from './known.ts';
-import { putRows, turned, understandRows } from './paste-lines.ts';
+import { putRows, turned, understandRows, whyLeftOut } from './paste-lines.ts';
 import type { PastedRow } from './read-paste.ts';
 
 const weight = (id: string, marking: string, nominal: string): KnownStandard => ({
@@ -54,6 +54,16 @@ describe('putRows', () => {
     const before = [{ ...newLine(TWO_HUNDRED.id), value: '0.030' }];
     const bad: PastedRow = { ...row('200 g', ''), value: { problem: 'Received "n/a".' } };
     expect(putRows(before, understandRows([bad], [TWO_HUNDRED], []), false)[0]?.value).toBe('0.030');
+  });
+});
+
+describe('whyLeftOut', () => {
+  it('leaves out a row whose value cannot be read, and lets one go in that names a weight only', () => {
+    const bad: PastedRow = { ...row('200 g', ''), value: { problem: 'Received "n/a".' } };
+    const bare: PastedRow = { weight: '100 g', value: null, expandedU: null, k: '' };
+    const empty: PastedRow = { ...bare, weight: ' ' };
+    const why = understandRows([bad, row('200 g', '0.1'), bare, empty], [], []).map(whyLeftOut);
+    expect(why).toEqual(['Received "n/a".', null, null, 'The row says nothing.']);
   });
 });
 

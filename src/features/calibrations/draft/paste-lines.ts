@@ -29,6 +29,14 @@ export function understandRows(
   });
 }
 
+/** Why a pasted row stays out; null where it goes in. */
+export function whyLeftOut({ row }: UnderstoodRow): string | null {
+  if (row.value && 'problem' in row.value) return row.value.problem;
+  if (row.value || row.k !== '') return null;
+  if (row.expandedU) return 'problem' in row.expandedU ? row.expandedU.problem : null;
+  return row.weight.trim() === '' ? 'The row says nothing.' : null;
+}
+
 /**
  * Puts pasted rows into the results: into the line of the same weight where there is one, else as a new line.
  * @param names gets the pasted names of lines that found no weight, by key of the line

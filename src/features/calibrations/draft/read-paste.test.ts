@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { matchWeight, readPastedRows, readPastedTable } from './read-paste.ts';
+import { decimalSignOf, matchWeight, readPastedRows, readPastedTable } from './read-paste.ts';
 
 const READER = { unit: 'mg', uUnit: 'mg', decimalMark: '.' } as const;
 const rowsOf = (text: string, decimalMark: '.' | ',' = '.') =>
@@ -69,6 +69,20 @@ describe('readPastedRows', () => {
   });
 });
 
+describe('decimalSignOf', () => {
+  it.each([
+    ['1 kg\t0,12\t0,050', ','],
+    ['1 kg\t1,234\t5,678\n500 g\t0,1\t0,05', ','],
+    ['1 kg\t1,234\t5,678', 'ambiguous'],
+    ['1 kg\t1.234\t5,6', '.'],
+    ['1 kg\t1,234,567\t5', '.'],
+    ['1 kg\t12\t5\t2,00', null],
+    ['200 g\t200,000 016 g\t5', ','],
+  ])('of "%s" is %s', (text, sign) => {
+    expect(decimalSignOf(readPastedTable(text))).toBe(sign);
+  });
+});
+
 describe('matchWeight', () => {
   const set = [
     { id: 'a', registryNo: 'TV 0300-01', marking: '500 g', nominal: '500' },
@@ -81,6 +95,7 @@ describe('matchWeight', () => {
     ['200 g', 'b'],
     ['200g ∗', 'c'],
     ['0.5 kg', 'a'],
+    ['0,5 kg', 'a'],
     ['100 g', 'd'],
   ])('finds the weight for "%s"', (name, id) => {
     expect(matchWeight(name, set)?.id).toBe(id);

@@ -2,7 +2,7 @@ import { Decimal } from '#shared/decimal.ts';
 import type { MassUnit } from '#shared/contracts/common.ts';
 import { EngineError } from '#shared/engine/errors.ts';
 import { parseQuantity, type ParsedQuantity } from '#shared/engine/quantity/parse-quantity.ts';
-import type { DecimalMark } from '#shared/engine/quantity/read-number.ts';
+import { evidentDecimalMark, type DecimalMark } from '#shared/engine/quantity/read-number.ts';
 import { unitOfText } from '#shared/engine/quantity/units.ts';
 
 /** What a pasted column holds. */
@@ -54,6 +54,24 @@ export function readPastedTable(text: string): PastedTable {
     rows: rows.map((row) => [...row, ...Array<string>(width - row.length).fill('')]),
     isCorrection: head.some((cell) => /correction/i.test(cell)),
   };
+}
+
+/**
+ * Which decimal sign the numbers of a table show. One number without doubt, such as 0,12, decides for all;
+ * `ambiguous` where every number with a comma has exactly three digits after it; null where no number shows one.
+ */
+export function decimalSignOf(table: PastedTable): DecimalMark | 'ambiguous' | null {
+  const numbers = table.rows.flatMap((row) =>
+    row.filter((_, at) => table.columns[at] === 'value' || table.columns[at] === 'U'),
+  );
+  const written = numbers.flatMap((cell) =>
+    (cell.match(/\d(?:[\d.,\s]*\d)?/g) ?? []).map((text) => text.replace(/\s/g, '')),
+  );
+  // More than one comma in a number is a grouping, which only a point can be the decimal sign beside.
+  if (written.some((text) => text.includes('.') || text.split(',').length > 2)) return '.';
+  const withComma = written.filter((text) => text.includes(','));
+  if (withComma.length === 0) return null;
+  return withComma.some((text) => evidentDecimalMark(text) === ',') ? ',' : 'ambiguous';
 }
 
 /** Reads every row by what its columns hold. Nothing is guessed: what cannot be read says why. */
@@ -142,12 +160,12 @@ export function matchWeight<Weight extends Candidate>(
   name: string,
   candidates: readonly Weight[],
 ): Weight | null {
-  const wanted = plain(name);
+  const wanted = plainName(name);
   if (wanted === '') return null;
   const nominal = nominalOf(name);
   const tests: ((weight: Weight) => boolean)[] = [
-    (weight) => plain(weight.registryNo) === wanted,
-    (weight) => plain(weight.marking) === wanted,
+    (weight) => plainName(weight.registryNo) === wanted,
+    (weight) => plainName(weight.marking) === wanted,
     (weight) => nominal !== null && nominal.eq(weight.nominal) && starsOf(weight.marking) === starsOf(name),
   ];
   for (const test of tests) {
@@ -158,7 +176,8 @@ export function matchWeight<Weight extends Candidate>(
   return null;
 }
 
-function plain(text: string): string {
+/** A marking or number without what people write in different ways: case, spaces, kinds of star. */
+export function plainName(text: string): string {
   return text
     .toLowerCase()
     .replace(/\s/g, '')
@@ -166,14 +185,14 @@ function plain(text: string): string {
 }
 
 function starsOf(text: string): number {
-  return (plain(text).match(/\*/g) ?? []).length;
+  return (plainName(text).match(/\*/g) ?? []).length;
 }
 
 /** The nominal a name states, in grams: "200 g *" is 200; null where it states none. */
 export function nominalOf(text: string): Decimal | null {
   const match = /^\s*([\d.,\s]+?)\s*(kg|mg|g)\b/.exec(text);
   if (!match) return null;
-  const read = readCell(`${match[1]} ${match[2]}`, 'g', '.');
+  const read = readCell(`${match[1]} ${match[2]}`, 'g', evidentDecimalMark(match[1] ?? '') ?? '.');
   if (!read || 'problem' in read) return null;
   return new Decimal(read.text).times({ kg: 1000, g: 1, mg: 0.001, ug: 0.000001 }[read.unit]);
 }

@@ -56,15 +56,21 @@ function weightOption(row: StandardRow): WeightOption {
   return { id: row.id, label: row.registryNo, detail, weights: async () => [row] };
 }
 
+/** The pieces of one set, in the order of their numbers. */
+export async function piecesOf(
+  laboratoryId: string,
+  set: { id: string; registryNo: string },
+): Promise<StandardRow[]> {
+  const members = await findStandards(laboratoryId, set.registryNo, LARGEST_SET);
+  return members.filter((row) => row.set?.id === set.id);
+}
+
 function setOptions(rows: readonly StandardRow[], laboratoryId: string): WeightOption[] {
   const sets = new Map(rows.flatMap(({ set }) => (set ? [[set.id, set] as const] : [])));
   return [...sets.values()].map(({ id, registryNo }) => ({
     id,
     label: `Whole set ${registryNo}`,
     detail: 'every weight of it, a line each',
-    weights: async () => {
-      const members = await findStandards(laboratoryId, registryNo, LARGEST_SET);
-      return members.filter(({ set }) => set?.id === id);
-    },
+    weights: () => piecesOf(laboratoryId, { id, registryNo }),
   }));
 }
