@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { decimalText } from '../decimal.ts';
 import {
   Abilities,
   CoverageFactor,
@@ -36,7 +37,16 @@ export const RegistryNo = z
   .trim()
   .regex(/^[A-Z]{2,4} \d{4}(-\d{1,3})?$/, 'Expected a registry number such as TV 0112 or TV 0300-07');
 
-export const Density = DecimalString.refine(
+/** A decimal on the wire whose refusal shows an example that fits the field. */
+const decimalLike = (example: string) =>
+  z
+    .string({ error: `Write a plain number such as ${example}` })
+    .trim()
+    .max(60, 'A number has at most 60 characters')
+    .regex(/^[+-]?\d+(\.\d+)?$/, `Write a plain number such as ${example}`)
+    .transform((text) => decimalText(text));
+
+export const Density = decimalLike('7950').refine(
   (text) => Number(text) >= 500 && Number(text) <= 25_000 && !/\.\d{10}/.test(text),
   'Expected a density from 500 to 25 000 kg/m3, with at most 9 decimals',
 );
@@ -100,20 +110,32 @@ export type StandardListResponse = z.infer<typeof StandardListResponse>;
 
 const PropertyBody = z.strictObject({
   value: Density,
-  expandedU: DecimalString.refine(
-    (text) => Number(text) > 0 && Number(text) <= 25_000 && !/\.\d{10}/.test(text),
-    'Expected an uncertainty above 0 and up to 25 000 kg/m3, with at most 9 decimals',
-  ).nullable(),
+  expandedU: decimalLike('140')
+    .refine(
+      (text) => Number(text) > 0 && Number(text) <= 25_000 && !/\.\d{10}/.test(text),
+      'Expected an uncertainty above 0 and up to 25 000 kg/m3, with at most 9 decimals',
+    )
+    .nullable(),
   k: CoverageFactor.nullable(),
   origin: PropertyOrigin,
 });
 
+const MANUFACTURER_LENGTH = 'A manufacturer has at most 120 characters';
+
 const WeightBody = {
   nominal: Nominal,
-  marking: z.string().trim().min(1, 'Each weight is identified by its marking (OIML R 111-1, 13)').max(80),
-  serial: z.string().trim().max(80).nullable().default(null),
+  marking: z
+    .string()
+    .trim()
+    .min(1, 'Each weight is identified by its marking (OIML R 111-1, 13)')
+    .max(80, 'A marking has at most 80 characters'),
+  serial: z.string().trim().max(80, 'A serial has at most 80 characters').nullable().default(null),
   shape: Shape,
-  material: z.string().trim().min(1, 'Name the material, for example "stainless steel"').max(80),
+  material: z
+    .string()
+    .trim()
+    .min(1, 'Name the material, for example "stainless steel"')
+    .max(80, 'A material has at most 80 characters'),
   class: WeightClass.nullable(),
   density: PropertyBody.nullable(),
 };
@@ -122,7 +144,7 @@ const WeightBody = {
 export const RegisterStandardBody = z.strictObject({
   laboratoryId: Id,
   registryNo: RegistryNo,
-  manufacturer: z.string().trim().max(120).nullable().default(null),
+  manufacturer: z.string().trim().max(120, MANUFACTURER_LENGTH).nullable().default(null),
   inServiceFrom: Day.nullable().default(null),
   /** The holder's own rule for how long it relies on a calibration; null where it is no reference. */
   intervalMonths: z.number().int().min(1).max(240).nullable().default(null),
@@ -137,11 +159,18 @@ export const RegisterSetBody = z.strictObject({
     (text) => !text.includes('-'),
     'A set has a number without suffix, such as TV 0300',
   ),
-  name: z.string().trim().min(1).max(120),
-  manufacturer: z.string().trim().max(120).nullable().default(null),
+  name: z
+    .string()
+    .trim()
+    .min(1, 'Name the set as it stands on the lid, for example "E2 set, 1 mg to 1 kg"')
+    .max(120, 'A name has at most 120 characters'),
+  manufacturer: z.string().trim().max(120, MANUFACTURER_LENGTH).nullable().default(null),
   inServiceFrom: Day.nullable().default(null),
   intervalMonths: z.number().int().min(1).max(240).nullable().default(null),
-  members: z.array(z.strictObject(WeightBody)).min(1).max(60),
+  members: z
+    .array(z.strictObject(WeightBody))
+    .min(1, 'A set has at least one weight')
+    .max(60, 'A set has at most 60 weights; register the others as a second set'),
 });
 export type RegisterSetBody = z.infer<typeof RegisterSetBody>;
 
@@ -157,7 +186,7 @@ export const OpenEpochBody = z.strictObject({
   reason: z.enum(['adjusted', 'repaired', 're-polished', 'damaged']),
   beginsOn: Day,
   lastGoodOn: Day.nullable().default(null),
-  note: z.string().trim().max(300).nullable().default(null),
+  note: z.string().trim().max(300, 'A note has at most 300 characters').nullable().default(null),
 });
 export const EpochResponse = z.object({ id: Id, n: z.number().int() });
 

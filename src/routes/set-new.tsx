@@ -1,25 +1,37 @@
-import { useNavigate } from 'react-router';
+import { useState } from 'react';
 import { paths } from '#src/app/paths.ts';
 import { Page } from '#src/components/layout/page.tsx';
+import { RegisterPlace } from '#src/features/standards/components/register-place.tsx';
+import { RegisteredSet } from '#src/features/standards/components/registered-set.tsx';
 import { SetForm } from '#src/features/standards/components/set-form.tsx';
-import { laboratoriesOf, usePerson } from '#src/lib/session.ts';
+import { usePerson } from '#src/lib/session.ts';
 
-/** Registers a set with all its weights, and goes on to the list of them. */
+/** Registers a set with all its weights, and offers what usually comes next. */
 export function Component() {
   const person = usePerson();
-  const navigate = useNavigate();
+  const [registryNo, setRegistryNo] = useState<string | null>(null);
+  if (registryNo !== null) {
+    const asked = encodeURIComponent(registryNo);
+    return (
+      <Page title="Register a set">
+        <RegisteredSet
+          registryNo={registryNo}
+          draftHref={`${paths.newDraft.href()}?set=${asked}`}
+          listHref={`${paths.standards.href()}?q=${asked}`}
+        />
+      </Page>
+    );
+  }
   return (
     <Page
       title="Register a set"
       sub="Each weight gets its own number after the set's, in the order of the table."
     >
-      <SetForm
-        accountId={person.accountId}
-        laboratories={laboratoriesOf(person).map(({ id, name }) => ({ value: id, label: name }))}
-        onRegistered={(registryNo) =>
-          void navigate(`${paths.standards.href()}?q=${encodeURIComponent(registryNo)}`)
-        }
-      />
+      <RegisterPlace>
+        {(laboratories) => (
+          <SetForm accountId={person.accountId} laboratories={laboratories} onRegistered={setRegistryNo} />
+        )}
+      </RegisterPlace>
     </Page>
   );
 }

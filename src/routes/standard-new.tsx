@@ -1,8 +1,9 @@
 import { Link, useNavigate } from 'react-router';
 import { paths } from '#src/app/paths.ts';
 import { Page } from '#src/components/layout/page.tsx';
+import { RegisterPlace } from '#src/features/standards/components/register-place.tsx';
 import { StandardForm } from '#src/features/standards/components/standard-form.tsx';
-import { laboratoriesOf, usePerson } from '#src/lib/session.ts';
+import { usePerson } from '#src/lib/session.ts';
 
 /** Registers one weight, and goes on to its page. */
 export function Component() {
@@ -21,11 +22,15 @@ export function Component() {
         </>
       }
     >
-      <StandardForm
-        accountId={person.accountId}
-        laboratories={laboratoriesOf(person).map(({ id, name }) => ({ value: id, label: name }))}
-        onRegistered={(standardId) => void navigate(paths.standard.href(standardId))}
-      />
+      <RegisterPlace>
+        {(laboratories) => (
+          <StandardForm
+            accountId={person.accountId}
+            laboratories={laboratories}
+            onRegistered={(standardId) => void navigate(paths.standard.href(standardId))}
+          />
+        )}
+      </RegisterPlace>
     </Page>
   );
 }

@@ -69,6 +69,13 @@ export async function findStandards(
   return (await get('/api/standards', StandardListResponse, { query, signal })).standards;
 }
 
+/** The weights of a set by its whole number, in the order of their own. */
+export async function weightsOfSet(registryNo: string, signal?: AbortSignal): Promise<StandardRow[]> {
+  const query = { q: registryNo, limit: 200 };
+  const { standards } = await get('/api/standards', StandardListResponse, { query, signal });
+  return standards.filter(({ set }) => set?.registryNo === registryNo);
+}
+
 /** Values a result may name as its reference. */
 export async function findReferences(
   asked: { laboratory: string; issuer?: string | undefined; q: string; quantity?: QuantityKind },

@@ -18,17 +18,20 @@ export function readNominal(typed: string, decimalMark: DecimalMark): ReadNomina
   if (typed.trim() === '') return { kind: 'empty' };
   try {
     const parsed = parseQuantity(typed, { field: 'nominal', units: ['kg', 'g', 'mg', 'ug'], decimalMark });
-    if (parsed.uncertainty !== null || parsed.unit === null) {
-      return {
-        kind: 'unreadable',
-        why: `Write a number and its unit, such as 1 kg or 500 mg; received "${typed.trim()}".`,
-      };
-    }
+    if (parsed.uncertainty !== null || parsed.unit === null) return unreadable(EXPECTED, typed);
+    if (!parsed.value.gt(0)) return unreadable('A nominal is above zero', typed);
     return { kind: 'nominal', grams: decimalText(convertUnit(parsed.value, parsed.unit, 'g')) };
   } catch (error) {
     if (!(error instanceof EngineError)) throw error;
+    if (error.code === 'not-a-number' || error.code === 'unknown-unit') return unreadable(EXPECTED, typed);
     return { kind: 'unreadable', why: error.message.replace(/^[^:]*: r/, 'R') };
   }
+}
+
+const EXPECTED = 'Write a number and its unit, such as 1 kg or 500 mg';
+
+function unreadable(what: string, typed: string): ReadNominal {
+  return { kind: 'unreadable', why: `${what}; received "${typed.trim()}".` };
 }
 
 /**

@@ -82,7 +82,7 @@ export function CalibrationList({ search, onSearch }: CalibrationListProps) {
         ) : (
           <EmptyState action={mayDraft && newLink}>
             Issued calibrations stand here: those your laboratories issued or entered, and those of weights
-            they hold. The first one is copied from its certificate.
+            they hold.{mayDraft && ' The first one is copied from its certificate.'}
           </EmptyState>
         )}
         {hasNextPage && (

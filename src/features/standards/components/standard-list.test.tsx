@@ -107,6 +107,6 @@ describe('StandardList', () => {
 
   it('says what belongs there before anything is registered', () => {
     show({});
-    expect(screen.getByText(/The weights of your laboratory stand here/)).toBeTruthy();
+    expect(screen.getByText(/The weights of the laboratories you read in full stand here/)).toBeTruthy();
   });
 });

@@ -92,8 +92,9 @@ function Empty({
   if (!isNarrowed(search)) {
     return (
       <EmptyState action={registerActions && <Toolbar>{registerActions}</Toolbar>}>
-        The weights of your laboratory stand here, each with its value in force. Register one, or a whole set
-        at once.
+        {registerActions
+          ? 'The weights of your laboratory stand here, each with its value in force. Register one, or a whole set at once.'
+          : 'The weights of the laboratories you read in full stand here, each with its value in force. There are none today.'}
       </EmptyState>
     );
   }
