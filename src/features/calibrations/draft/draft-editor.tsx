@@ -2,6 +2,7 @@ import { useMemo } from 'react';
 import { FormProvider } from 'react-hook-form';
 import type { DraftResponse, IssuedResponse } from '#shared/contracts/calibrations.ts';
 import type { LaboratoryName } from '#shared/contracts/common.ts';
+import type { StandardRow } from '#shared/contracts/standards.ts';
 import type { z } from 'zod';
 import { useZodForm } from '#src/lib/form.ts';
 import { DraftForm, emptyDraft, newLine, type DraftValues } from './draft-values.ts';
@@ -10,12 +11,16 @@ import { KnownContext } from './known.ts';
 import { useKnownValues } from './known-values.ts';
 import { useAutosave } from './use-autosave.ts';
 
+const NONE: readonly StandardRow[] = [];
+
 interface DraftEditorProps {
   /** What the server has; null for a draft that its first change will create. */
   draft: DraftResponse | null;
   laboratory: z.infer<typeof LaboratoryName>;
   /** The weight a new draft begins with. */
   firstStandardId?: string;
+  /** The weights of a set that a new draft begins with, a line each. */
+  firstStandards?: readonly StandardRow[];
   onCreated: (draft: DraftResponse) => void;
   onIssued: (issued: IssuedResponse) => void;
   onDiscarded: () => void;
@@ -23,10 +28,19 @@ interface DraftEditorProps {
 
 /** A calibration transcribed from its certificate: the form, how it is kept, and what its entries name. */
 export function DraftEditor(props: DraftEditorProps) {
-  const { draft, laboratory, firstStandardId, onCreated, onIssued, onDiscarded } = props;
-  const form = useZodForm(DraftForm, { defaultValues: valuesOf(draft, firstStandardId) });
+  const {
+    draft,
+    laboratory,
+    firstStandardId,
+    firstStandards = NONE,
+    onCreated,
+    onIssued,
+    onDiscarded,
+  } = props;
+  const firstIds = firstStandardId ? [firstStandardId] : firstStandards.map(({ id }) => id);
+  const form = useZodForm(DraftForm, { defaultValues: valuesOf(draft, firstIds) });
   const saving = useAutosave(form, draft, laboratory.id, onCreated);
-  const known = useKnownValues(draft);
+  const known = useKnownValues(draft, firstStandards);
   // What happens afterwards is the same for the whole life of the editor.
   const ends = useMemo(() => ({ onIssued, onDiscarded }), [onIssued, onDiscarded]);
   return (
@@ -38,8 +52,7 @@ export function DraftEditor(props: DraftEditorProps) {
   );
 }
 
-function valuesOf(draft: DraftResponse | null, firstStandardId: string | undefined): DraftValues {
+function valuesOf(draft: DraftResponse | null, firstIds: readonly string[]): DraftValues {
   if (draft) return { ...draft.content, version: draft.version };
-  const empty = emptyDraft();
-  return firstStandardId ? { ...empty, lines: [newLine(firstStandardId)] } : empty;
+  return { ...emptyDraft(), lines: firstIds.map((id) => newLine(id)) };
 }

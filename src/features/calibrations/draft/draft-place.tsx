@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { DraftResponse, IssuedResponse } from '#shared/contracts/calibrations.ts';
+import type { StandardRow } from '#shared/contracts/standards.ts';
 import { paths } from '#src/app/paths.ts';
 import { Button, LinkButton } from '#src/components/ui/button.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
@@ -17,6 +18,8 @@ interface DraftPlaceProps {
   /** The laboratory a new draft is meant for. */
   laboratoryId?: string;
   firstStandardId?: string;
+  /** The weights of a set that a new draft begins with, a line each. */
+  firstStandards?: readonly StandardRow[];
   onCreated: (draft: DraftResponse) => void;
   onIssued: (issued: IssuedResponse) => void;
   onDiscarded: () => void;

@@ -3,9 +3,12 @@ import type { DraftResponse, ReferenceChoice } from '#shared/contracts/calibrati
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import { knownFromRow, type Known, type KnownStandard } from './known.ts';
 
-/** Gathers the weights and references a draft names: the server's word first, then what was chosen since. */
-export function useKnownValues(draft: DraftResponse | null): Known {
-  const [standards, setStandards] = useState<readonly KnownStandard[]>([]);
+/**
+ * Gathers the weights and references a draft names: the server's word first, then what was chosen since.
+ * @param first weights a new draft begins with
+ */
+export function useKnownValues(draft: DraftResponse | null, first: readonly StandardRow[] = []): Known {
+  const [standards, setStandards] = useState<readonly KnownStandard[]>(() => first.map(knownFromRow));
   const [references, setReferences] = useState<readonly ReferenceChoice[]>([]);
   const learnStandards = useCallback(
     (rows: readonly StandardRow[]) => setStandards((before) => [...before, ...rows.map(knownFromRow)]),
