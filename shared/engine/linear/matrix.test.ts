@@ -189,3 +189,11 @@ describe('lists of numbers', () => {
     expect(codeOf(() => requireNumbers([1, Number.NaN], 'readings'))).toBe('not-finite readings[1]');
   });
 });
+
+describe('requireSymmetric', () => {
+  it('takes what differs by the rounding of its diagonal, and no more', () => {
+    const almost = (difference: number) => () => requireSymmetric([[4, difference], [0, 9]]); // prettier-ignore
+    expect(almost(5e-9)).not.toThrow();
+    expect(almost(7e-9)).toThrow(expect.objectContaining({ code: 'not-symmetric', field: 'matrix[0][1]' }));
+  });
+});
