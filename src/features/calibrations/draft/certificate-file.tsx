@@ -9,11 +9,13 @@ import type { DraftValues } from './draft-values.ts';
 /** The certificate itself, kept beside what was copied from it. */
 export function CertificateFile({ laboratoryId }: { laboratoryId: string }) {
   const { field } = useController<DraftValues, 'documentId'>({ name: 'documentId' });
-  const { draft } = useDraft();
+  const { draft, isLocked } = useDraft();
   const add = useAddDocument(laboratoryId);
   const kept = draft?.document?.id === field.value ? draft?.document?.name : undefined;
   const name = add.data?.id === field.value ? add.data?.name : kept;
   const error = add.error instanceof ApiProblem ? (add.error.detail ?? add.error.title) : undefined;
+  // A file can be dropped on a field that is disabled; who only reads gets none.
+  if (isLocked) return <p className="text-ink-2">Certificate as PDF: {name ?? 'none attached'}</p>;
   return (
     <div className="flex flex-col items-start gap-1 [&>:first-child]:w-full">
       <FileDrop

@@ -54,12 +54,12 @@ export function IssueDialog({ draft, issuerName, onIssued, onClose }: IssueDialo
           ['Certificate as PDF', draft.document?.name ?? 'none attached'],
         ]}
       />
+      <NotHolding checks={draft.checks} />
       <FixedLines draft={draft} />
       <p className="text-ink-2">
         Once issued, nothing of this changes any more: these values enter the register under your name, and
         others lean on them. A mistake is mended by a revision or a withdrawal, which stays visible.
       </p>
-      <NotHolding checks={draft.checks} />
       {/* However long the certificate: what is signed with, and why it was refused, stay in sight. */}
       <form
         noValidate
