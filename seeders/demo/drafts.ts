@@ -1,4 +1,4 @@
-import { DraftContent } from '#shared/contracts/calibrations.ts';
+import { DraftContent } from '#shared/contracts/drafts.ts';
 import { readRow } from '#server/db/read.ts';
 import type { Context } from '#server/http/context.ts';
 import type { SignedInContext } from '#server/http/route.ts';

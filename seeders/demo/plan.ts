@@ -1,4 +1,4 @@
-import type { CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { CalibrationLine } from '#shared/contracts/calibration-input.ts';
 import type { z } from 'zod';
 import type { CatalogueEntry } from './catalogue.ts';
 import type { Weight } from './weight.ts';

@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import type { CalibrationInput } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput } from '#shared/contracts/calibration-input.ts';
 import type { Context } from '#server/http/context.ts';
 import {
   issueCalibration,

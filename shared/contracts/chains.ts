@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { RootKind, UsedAs } from './calibrations.ts';
+import { RootKind, UsedAs } from './calibration-input.ts';
 import {
   Abilities,
   DatePrecision,

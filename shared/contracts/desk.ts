@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { Day, Id, LaboratoryName } from './common.ts';
-import { DraftSummary } from './calibrations.ts';
+import { DraftSummary } from './drafts.ts';
 
 /** GET /api/desk: what needs this person today, by role; empty parts are not sent. */
 export const DeskResponse = z.object({

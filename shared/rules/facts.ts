@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import type { DecisionRule, RootKind, UsedAs } from '#shared/contracts/calibrations.ts';
+import type { DecisionRule, RootKind, UsedAs } from '#shared/contracts/calibration-input.ts';
 import type {
   DatePrecision,
   MassUnit,

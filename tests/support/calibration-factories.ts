@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibration-input.ts';
 import { issueCalibration, type IssuedCalibration } from '#server/modules/calibrations/index.ts';
 import { registerStandard, type StandardRegistration } from '#server/modules/standards/index.ts';
 import { freeRegistryNo } from './factories.ts';

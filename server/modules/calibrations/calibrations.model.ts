@@ -1,5 +1,5 @@
 import { DataTypes } from 'sequelize';
-import type { CalibrationLine, RootKind } from '#shared/contracts/calibrations.ts';
+import type { CalibrationLine, RootKind } from '#shared/contracts/calibration-input.ts';
 import { GRAMS, ID, registerModel } from '#server/db/register-model.ts';
 
 export interface CalibrationColumns {

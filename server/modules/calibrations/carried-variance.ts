@@ -1,5 +1,5 @@
 import { Decimal } from '#shared/decimal.ts';
-import type { CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { CalibrationLine } from '#shared/contracts/calibration-input.ts';
 import { maximumPermissibleError } from '#shared/engine/conformity/maximum-permissible-error.ts';
 import { EngineError } from '#shared/engine/errors.ts';
 import { compileNetwork } from '#shared/engine/network/compile-network.ts';

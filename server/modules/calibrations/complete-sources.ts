@@ -1,4 +1,4 @@
-import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibration-input.ts';
 import type { IssueFacts, SourceFacts } from './issue-facts.ts';
 
 /** Air density of the convention, in g/cm3 (OIML D 28: 1.2 kg/m3). */

@@ -1,4 +1,5 @@
-import type { CalibrationInput, DraftCheck } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput } from '#shared/contracts/calibration-input.ts';
+import type { DraftCheck } from '#shared/contracts/drafts.ts';
 import type { z } from 'zod';
 import { clauseOn } from '#shared/rules/clauses.ts';
 import type { Check } from '#shared/rules/judge.ts';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { DraftContent } from '#shared/contracts/calibrations.ts';
+import { DraftContent } from '#shared/contracts/drafts.ts';
 import { dayPoints } from './draft-early-points.ts';
 
 const fieldsOf = (days: Partial<Record<'performedBegin' | 'performedEnd' | 'issuedOn', string>>) =>

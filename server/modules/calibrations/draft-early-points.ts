@@ -1,5 +1,5 @@
 import type { Sequelize } from 'sequelize';
-import type { DraftContent, OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { DraftContent, OpenPoint } from '#shared/contracts/drafts.ts';
 import { Day } from '#shared/contracts/common.ts';
 import { readRow } from '#server/db/read.ts';
 import { dateProblems } from './issue-rules.ts';

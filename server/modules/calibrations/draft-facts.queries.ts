@@ -1,6 +1,6 @@
 import type { Sequelize } from 'sequelize';
 import { decimalText } from '#shared/decimal.ts';
-import type { DraftContent, DraftLine, ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { DraftContent, DraftLine, ReferenceChoice } from '#shared/contracts/drafts.ts';
 import { Day, type WeightClass } from '#shared/contracts/common.ts';
 import { readRow, readRows } from '#server/db/read.ts';
 import { factOnDay } from '#server/modules/standards/index.ts';

@@ -1,4 +1,4 @@
-import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import type { DraftLine } from '#shared/contracts/drafts.ts';
 import type { WeightClass } from '#shared/contracts/common.ts';
 
 /** What the register knows that the reading of a draft asks for. */

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { DraftContent } from '#shared/contracts/calibrations.ts';
+import { DraftContent } from '#shared/contracts/drafts.ts';
 import type { DraftFacts } from './draft-facts.ts';
 import { readDraft } from './draft-input.ts';
 

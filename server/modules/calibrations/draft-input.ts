@@ -1,11 +1,7 @@
 import type { z } from 'zod';
 import { decimalText } from '#shared/decimal.ts';
-import {
-  CalibrationInput,
-  type DraftContent,
-  type DraftLine,
-  type OpenPoint,
-} from '#shared/contracts/calibrations.ts';
+import { CalibrationInput } from '#shared/contracts/calibration-input.ts';
+import { type DraftContent, type DraftLine, type OpenPoint } from '#shared/contracts/drafts.ts';
 import { Day } from '#shared/contracts/common.ts';
 import { convertDecimals, convertUnit } from '#shared/engine/quantity/units.ts';
 import type { DraftFacts } from './draft-facts.ts';

@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import type { DraftSummary } from '#shared/contracts/calibrations.ts';
+import type { DraftSummary } from '#shared/contracts/drafts.ts';
 import type { Sequelize } from 'sequelize';
 import { readRows } from '#server/db/read.ts';
 

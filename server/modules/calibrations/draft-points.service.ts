@@ -1,4 +1,5 @@
-import type { CalibrationInput, DraftContent, OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput } from '#shared/contracts/calibration-input.ts';
+import type { DraftContent, OpenPoint } from '#shared/contracts/drafts.ts';
 import { today, type Context } from '#server/http/context.ts';
 import { completeSources } from './complete-sources.ts';
 import { dayPoints, repeatedCertificate } from './draft-early-points.ts';

@@ -1,5 +1,6 @@
 import { Decimal } from '#shared/decimal.ts';
-import type { CalibrationLine, DraftLine, OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { CalibrationLine } from '#shared/contracts/calibration-input.ts';
+import type { DraftLine, OpenPoint } from '#shared/contracts/drafts.ts';
 import type { DraftFacts, DraftStandardFacts } from './draft-facts.ts';
 import { unitQuestion } from './unit-question.ts';
 

@@ -1,6 +1,7 @@
 import type { z } from 'zod';
 import { Decimal, decimalText } from '#shared/decimal.ts';
-import type { CalibrationInput, DraftContent, DraftLine, OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput } from '#shared/contracts/calibration-input.ts';
+import type { DraftContent, DraftLine, OpenPoint } from '#shared/contracts/drafts.ts';
 import { convertUnit } from '#shared/engine/quantity/units.ts';
 import type { DraftFacts, DraftStandardFacts } from './draft-facts.ts';
 import { missing, wrong } from './open-points.ts';

@@ -1,5 +1,5 @@
 import { QueryTypes } from 'sequelize';
-import type { DraftContent } from '#shared/contracts/calibrations.ts';
+import type { DraftContent } from '#shared/contracts/drafts.ts';
 import { inTransaction } from '#server/db/transaction.ts';
 import { AppError, notFound, staleVersion } from '#server/http/app-error.ts';
 import { newId } from '#server/http/context.ts';

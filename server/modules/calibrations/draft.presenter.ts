@@ -1,5 +1,5 @@
 import { Decimal, decimalText } from '#shared/decimal.ts';
-import type { DraftResponse } from '#shared/contracts/calibrations.ts';
+import type { DraftResponse } from '#shared/contracts/drafts.ts';
 import { maximumPermissibleError } from '#shared/engine/conformity/maximum-permissible-error.ts';
 import { abilitiesFor } from '#server/policy/permission.ts';
 import type { User } from '#server/policy/user.ts';

@@ -1,5 +1,5 @@
 import type { Sequelize } from 'sequelize';
-import { DraftContent } from '#shared/contracts/calibrations.ts';
+import { DraftContent } from '#shared/contracts/drafts.ts';
 import { readRow } from '#server/db/read.ts';
 
 export type DraftState = 'open' | 'sent to sign' | 'issued' | 'discarded';

@@ -1,14 +1,14 @@
 import { z } from 'zod';
+import { IssuedResponse } from '#shared/contracts/calibrations.ts';
 import {
   CreateDraftBody,
   DraftResponse,
   DraftStateBody,
   IssueDraftBody,
-  IssuedResponse,
   ReferenceListResponse,
   ReferenceQuery,
   SaveDraftBody,
-} from '#shared/contracts/calibrations.ts';
+} from '#shared/contracts/drafts.ts';
 import { Id } from '#shared/ids.ts';
 import { today } from '#server/http/context.ts';
 import { route, type Route, type SignedInContext } from '#server/http/route.ts';

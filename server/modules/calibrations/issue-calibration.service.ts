@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import { CalibrationInput } from '#shared/contracts/calibrations.ts';
+import { CalibrationInput } from '#shared/contracts/calibration-input.ts';
 import { inAct } from '#server/db/act.ts';
 import { insertRow } from '#server/db/base-model.ts';
 import { readRow } from '#server/db/read.ts';

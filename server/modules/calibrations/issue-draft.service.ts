@@ -1,4 +1,4 @@
-import type { OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { OpenPoint } from '#shared/contracts/drafts.ts';
 import type { FieldProblem } from '#shared/errors.ts';
 import { inAct } from '#server/db/act.ts';
 import { AppError, fieldError } from '#server/http/app-error.ts';

@@ -1,5 +1,5 @@
 import type { Sequelize } from 'sequelize';
-import type { CalibrationInput } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput } from '#shared/contracts/calibration-input.ts';
 import { readRow, readRows } from '#server/db/read.ts';
 import { factOnDay } from '#server/modules/standards/index.ts';
 import type {

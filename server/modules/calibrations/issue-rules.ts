@@ -1,4 +1,4 @@
-import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibration-input.ts';
 import { isPositiveSemidefinite } from '#shared/engine/linear/matrix.ts';
 import { AppError } from '#server/http/app-error.ts';
 import type { IssueFacts, StandardFacts } from './issue-facts.ts';

@@ -1,5 +1,5 @@
 import { Decimal } from '#shared/decimal.ts';
-import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibration-input.ts';
 import { inferLocal } from '#shared/engine/network/infer-local.ts';
 import type { LocalOrigin } from './calibrations.model.ts';
 

@@ -1,5 +1,5 @@
 import { Decimal } from '#shared/decimal.ts';
-import type { CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { CalibrationLine } from '#shared/contracts/calibration-input.ts';
 import type { IssueProblem } from './issue-problem.ts';
 
 /** A line of the revision being superseded. */

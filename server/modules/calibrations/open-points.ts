@@ -1,4 +1,4 @@
-import type { OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { OpenPoint } from '#shared/contracts/drafts.ts';
 
 /** A point for what is not there. */
 export function missing(

@@ -1,5 +1,5 @@
 import { decimalText, Decimal } from '#shared/decimal.ts';
-import type { OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { OpenPoint } from '#shared/contracts/drafts.ts';
 import { CoverageFactor, CoverageProbability, type MassUnit } from '#shared/contracts/common.ts';
 import { EngineError } from '#shared/engine/errors.ts';
 import { parseQuantity } from '#shared/engine/quantity/parse-quantity.ts';

@@ -1,4 +1,4 @@
-import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibration-input.ts';
 import { twin } from './complete-sources.ts';
 import type { IssueFacts, ReferenceFacts, StandardFacts } from './issue-facts.ts';
 import type { IssueProblem } from './issue-problem.ts';

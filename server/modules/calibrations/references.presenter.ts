@@ -1,5 +1,5 @@
 import { decimalText } from '#shared/decimal.ts';
-import type { ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { ReferenceChoice } from '#shared/contracts/drafts.ts';
 
 /** References as a picker shows them: decimals in canonical text. */
 export function presentReferences(references: readonly ReferenceChoice[]): ReferenceChoice[] {

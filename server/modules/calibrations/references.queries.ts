@@ -1,4 +1,4 @@
-import type { ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { QuantityKind } from '#shared/contracts/common.ts';
 import type { Sequelize } from 'sequelize';
 import { knownAt } from '#server/db/in-force.ts';

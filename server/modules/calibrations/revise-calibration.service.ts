@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import { RevisionInput, type CalibrationInput } from '#shared/contracts/calibrations.ts';
+import { RevisionInput, type CalibrationInput } from '#shared/contracts/calibration-input.ts';
 import { inAct } from '#server/db/act.ts';
 import { insertRows } from '#server/db/base-model.ts';
 import { readRow, readRows } from '#server/db/read.ts';

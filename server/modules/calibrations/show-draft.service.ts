@@ -1,4 +1,4 @@
-import type { DraftCheck, OpenPoint, ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { DraftCheck, OpenPoint, ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { SignedInContext } from '#server/http/route.ts';
 import { documentById } from '#server/modules/documents/index.ts';
 import { draftChecks } from './draft-checks.service.ts';

@@ -1,5 +1,5 @@
 import { Decimal } from '#shared/decimal.ts';
-import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibrations.ts';
+import type { CalibrationInput, CalibrationLine } from '#shared/contracts/calibration-input.ts';
 import { ENGINE_VERSION } from '#shared/engine/version.ts';
 import { canonicalJson } from '#shared/canonical-json.ts';
 import { sha256 } from '#server/db/act.ts';

@@ -10,13 +10,15 @@ import {
   CalibrationListResponse,
   CalibrationResponse,
   DocumentResponse,
-  DraftResponse,
   IssuedResponse,
+  type WithdrawBody,
+} from '#shared/contracts/calibrations.ts';
+import {
+  DraftResponse,
   ReferenceListResponse,
   type DraftContent,
   type ReferenceChoice,
-  type WithdrawBody,
-} from '#shared/contracts/calibrations.ts';
+} from '#shared/contracts/drafts.ts';
 import type { QuantityKind } from '#shared/contracts/common.ts';
 import { LaboratoryListResponse } from '#shared/contracts/network.ts';
 import { StandardListResponse, type StandardRow } from '#shared/contracts/standards.ts';

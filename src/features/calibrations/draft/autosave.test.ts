@@ -1,5 +1,5 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
-import { DraftResponse, type DraftContent } from '#shared/contracts/calibrations.ts';
+import { DraftResponse, type DraftContent } from '#shared/contracts/drafts.ts';
 import { ApiProblem } from '#src/lib/api-problem.ts';
 import { makeAutosave, type SaveState } from './autosave.ts';
 import { contentOf, emptyDraft } from './draft-values.ts';

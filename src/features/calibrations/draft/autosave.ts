@@ -1,5 +1,5 @@
-import type { DraftContent, DraftResponse } from '#shared/contracts/calibrations.ts';
-import { DraftResponse as DraftResponseSchema } from '#shared/contracts/calibrations.ts';
+import type { DraftContent, DraftResponse } from '#shared/contracts/drafts.ts';
+import { DraftResponse as DraftResponseSchema } from '#shared/contracts/drafts.ts';
 import { ApiProblem } from '#src/lib/api-problem.ts';
 import { isSameContent } from './draft-values.ts';
 

@@ -1,4 +1,4 @@
-import type { DraftCheck } from '#shared/contracts/calibrations.ts';
+import type { DraftCheck } from '#shared/contracts/drafts.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Section } from '#src/components/layout/page.tsx';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { DraftContent } from '#shared/contracts/calibrations.ts';
+import { DraftContent } from '#shared/contracts/drafts.ts';
 import { compareVersions, mergeVersions } from './compare-versions.ts';
 
 const content = (head: object, lines: object[] = []) => DraftContent.parse({ ...head, lines });

@@ -1,4 +1,4 @@
-import type { DraftContent, DraftLine } from '#shared/contracts/calibrations.ts';
+import type { DraftContent, DraftLine } from '#shared/contracts/drafts.ts';
 import { isSameValue } from './same-value.ts';
 
 /** Which version a part is taken from. */

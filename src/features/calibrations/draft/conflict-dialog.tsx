@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import type { DraftContent, DraftResponse } from '#shared/contracts/calibrations.ts';
+import type { DraftContent, DraftResponse } from '#shared/contracts/drafts.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { Dialog } from '#src/components/ui/dialog.tsx';

@@ -1,6 +1,7 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import type { DraftResponse, IssuedResponse } from '#shared/contracts/calibrations.ts';
+import type { IssuedResponse } from '#shared/contracts/calibrations.ts';
+import type { DraftResponse } from '#shared/contracts/drafts.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Dialog } from '#src/components/ui/dialog.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';

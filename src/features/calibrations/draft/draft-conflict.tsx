@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import type { DraftContent } from '#shared/contracts/calibrations.ts';
+import type { DraftContent } from '#shared/contracts/drafts.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
 import { ConflictDialog } from './conflict-dialog.tsx';

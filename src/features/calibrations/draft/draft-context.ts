@@ -1,5 +1,5 @@
 import { createContext, useContext } from 'react';
-import type { DraftResponse, OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { DraftResponse, OpenPoint } from '#shared/contracts/drafts.ts';
 
 interface DraftInUse {
   /** What the server has; null before the first change is saved. */

@@ -1,6 +1,7 @@
 import { useMemo } from 'react';
 import { FormProvider } from 'react-hook-form';
-import type { DraftResponse, IssuedResponse } from '#shared/contracts/calibrations.ts';
+import type { IssuedResponse } from '#shared/contracts/calibrations.ts';
+import type { DraftResponse } from '#shared/contracts/drafts.ts';
 import type { LaboratoryName } from '#shared/contracts/common.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import type { z } from 'zod';

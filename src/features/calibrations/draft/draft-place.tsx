@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
-import type { DraftResponse, IssuedResponse } from '#shared/contracts/calibrations.ts';
+import type { IssuedResponse } from '#shared/contracts/calibrations.ts';
+import type { DraftResponse } from '#shared/contracts/drafts.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import { paths } from '#src/app/paths.ts';
 import { Button, LinkButton } from '#src/components/ui/button.tsx';

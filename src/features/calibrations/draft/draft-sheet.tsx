@@ -2,7 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useCallback, useDeferredValue, useMemo, useState } from 'react';
 import { flushSync } from 'react-dom';
 import { useFormContext, useWatch } from 'react-hook-form';
-import type { DraftResponse } from '#shared/contracts/calibrations.ts';
+import type { DraftResponse } from '#shared/contracts/drafts.ts';
 import type { LaboratoryName } from '#shared/contracts/common.ts';
 import type { z } from 'zod';
 import { TwoColumns } from '#src/components/layout/columns.tsx';

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { DraftContent, DraftLine } from '#shared/contracts/calibrations.ts';
+import { DraftContent, DraftLine } from '#shared/contracts/drafts.ts';
 import { isSameValue } from './same-value.ts';
 
 /**

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { DraftContent, DraftLine } from '#shared/contracts/calibrations.ts';
+import { DraftContent, DraftLine } from '#shared/contracts/drafts.ts';
 import { fieldWord, fieldWords, lineOf } from './field-words.ts';
 
 describe('fieldWords', () => {

@@ -1,5 +1,5 @@
 import { useFormContext, useWatch } from 'react-hook-form';
-import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import type { DraftLine } from '#shared/contracts/drafts.ts';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
 import { SelectField, type Choice } from '#src/components/ui/select-field.tsx';

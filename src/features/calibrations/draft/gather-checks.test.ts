@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { DraftCheck } from '#shared/contracts/calibrations.ts';
+import type { DraftCheck } from '#shared/contracts/drafts.ts';
 import { gatherChecks } from './gather-checks.ts';
 
 const check = (line: number, rule: string, changes: Partial<DraftCheck> = {}): DraftCheck => ({

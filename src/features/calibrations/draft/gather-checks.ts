@@ -1,4 +1,4 @@
-import type { DraftCheck } from '#shared/contracts/calibrations.ts';
+import type { DraftCheck } from '#shared/contracts/drafts.ts';
 
 /** A check that came out alike for several lines, said once. */
 export interface GatheredCheck {

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { OpenPoint } from '#shared/contracts/drafts.ts';
 import { gatherPoints } from './gather-points.ts';
 
 const point = (field: string, message: string): OpenPoint => ({

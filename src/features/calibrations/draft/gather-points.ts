@@ -1,4 +1,4 @@
-import type { OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { OpenPoint } from '#shared/contracts/drafts.ts';
 import { fieldWord, fieldWords, lineOf } from './field-words.ts';
 
 /** Points that say the same of several lines, said once. */

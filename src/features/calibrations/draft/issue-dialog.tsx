@@ -1,7 +1,8 @@
 import { useState } from 'react';
 import { z } from 'zod';
-import type { DraftResponse } from '#shared/contracts/calibrations.ts';
-import { IssueDraftBody, type IssuedResponse } from '#shared/contracts/calibrations.ts';
+import type { DraftResponse } from '#shared/contracts/drafts.ts';
+import { type IssuedResponse } from '#shared/contracts/calibrations.ts';
+import { IssueDraftBody } from '#shared/contracts/drafts.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Dialog } from '#src/components/ui/dialog.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';

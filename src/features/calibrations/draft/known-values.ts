@@ -1,5 +1,5 @@
 import { useCallback, useMemo, useState } from 'react';
-import type { DraftResponse, ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { DraftResponse, ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import { knownFromRow, type Known, type KnownStandard } from './known.ts';
 

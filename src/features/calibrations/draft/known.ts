@@ -1,5 +1,5 @@
 import { createContext, useContext } from 'react';
-import type { ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { WeightClass } from '#shared/contracts/common.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 

@@ -1,5 +1,5 @@
 import { Controller, useFormContext } from 'react-hook-form';
-import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import type { DraftLine } from '#shared/contracts/drafts.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Checkbox } from '#src/components/ui/checkbox.tsx';
 import { SelectField, type Choice } from '#src/components/ui/select-field.tsx';

@@ -1,5 +1,5 @@
 import { Controller, useFormContext } from 'react-hook-form';
-import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import type { DraftLine } from '#shared/contracts/drafts.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { DecimalField } from '#src/components/ui/decimal-field.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';

@@ -1,5 +1,5 @@
 import { Decimal } from '#shared/decimal.ts';
-import type { DraftLine, ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { DraftLine, ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import type { KnownStandard } from './known.ts';
 import { plainName } from './read-paste.ts';

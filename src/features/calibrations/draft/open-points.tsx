@@ -1,4 +1,4 @@
-import type { OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { OpenPoint } from '#shared/contracts/drafts.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Section } from '#src/components/layout/page.tsx';
 import { useDraft } from './draft-context.ts';

@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import type { DraftLine } from '#shared/contracts/drafts.ts';
 import { laboratoriesQuery } from '../api.ts';
 import { useKnown } from './known.ts';
 

@@ -1,4 +1,4 @@
-import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import type { DraftLine } from '#shared/contracts/drafts.ts';
 import { Decimal } from '#shared/decimal.ts';
 import { newLine } from './draft-values.ts';
 import type { KnownStandard } from './known.ts';

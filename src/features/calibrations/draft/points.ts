@@ -1,5 +1,5 @@
 import { get as valueAt } from 'react-hook-form';
-import type { DraftResponse, OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { DraftResponse, OpenPoint } from '#shared/contracts/drafts.ts';
 import { isSameValue } from './same-value.ts';
 import type { DraftValues } from './draft-values.ts';
 

@@ -1,5 +1,5 @@
 import { useFormContext } from 'react-hook-form';
-import type { OpenPoint } from '#shared/contracts/calibrations.ts';
+import type { OpenPoint } from '#shared/contracts/drafts.ts';
 import type { MassUnit } from '#shared/contracts/common.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { DraftLine } from '#shared/contracts/calibrations.ts';
+import { DraftLine } from '#shared/contracts/drafts.ts';
 import type { KnownStandard } from './known.ts';
 import { readLine } from './read-line.ts';
 

@@ -1,5 +1,5 @@
 import { Decimal, decimalText } from '#shared/decimal.ts';
-import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import type { DraftLine } from '#shared/contracts/drafts.ts';
 import type { MassUnit, WeightClass } from '#shared/contracts/common.ts';
 import { maximumPermissibleError } from '#shared/engine/conformity/maximum-permissible-error.ts';
 import { EngineError } from '#shared/engine/errors.ts';

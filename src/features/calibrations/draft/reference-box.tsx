@@ -1,5 +1,5 @@
 import { useFormContext } from 'react-hook-form';
-import type { ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { QuantityKind } from '#shared/contracts/common.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import { Combobox, type ComboboxOption } from '#src/components/ui/combobox.tsx';

@@ -1,5 +1,5 @@
 import { Link } from 'react-router';
-import type { DraftLine } from '#shared/contracts/calibrations.ts';
+import type { DraftLine } from '#shared/contracts/drafts.ts';
 import { paths } from '#src/app/paths.ts';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { KnownStandard } from './known.ts';
 import { defaultSensitivity } from './sensitivity.ts';
 

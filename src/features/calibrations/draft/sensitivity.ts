@@ -1,5 +1,5 @@
 import { Decimal } from '#shared/decimal.ts';
-import type { ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { KnownStandard } from './known.ts';
 
 /**

@@ -1,7 +1,7 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useCallback, useEffect, useRef, useState } from 'react';
 import type { UseFormReturn } from 'react-hook-form';
-import type { DraftContent, DraftResponse } from '#shared/contracts/calibrations.ts';
+import type { DraftContent, DraftResponse } from '#shared/contracts/drafts.ts';
 import { useLostSince } from '#src/lib/connection-state.ts';
 import { useLocalDraft } from '#src/lib/local-draft.ts';
 import { usePerson } from '#src/lib/session.ts';

@@ -1,6 +1,6 @@
 import { useState } from 'react';
 import { useFormContext } from 'react-hook-form';
-import type { DraftLine, ReferenceChoice } from '#shared/contracts/calibrations.ts';
+import type { DraftLine, ReferenceChoice } from '#shared/contracts/drafts.ts';
 import { findReferences } from '../api.ts';
 import { useDraft } from './draft-context.ts';
 import type { DraftValues } from './draft-values.ts';
