@@ -47,6 +47,7 @@ describe('consensusValue', () => {
     expect(
       consensusValue({ window: [3.5], previousPublished: 1, limit: 5, agreedUncertainty: 20 }).published,
     ).toBe(3.5);
+    expect(consensusValue({ window: [3.3], previousPublished: 1, limit: 5, agreedUncertainty: 20, resolution: 0.5 }).published).toBe(3.5); // prettier-ignore
   });
 
   it.each([

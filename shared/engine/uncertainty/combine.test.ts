@@ -179,6 +179,7 @@ describe('combine', () => {
         [1.1, 1],
       ]),
     ).toThrow(expect.objectContaining({ code: 'out-of-range', field: 'correlation[0][1]' }));
+    expect(() => combine(two, [[1, -1.1], [-1.1, 1]])).toThrow(expect.objectContaining({ code: 'out-of-range', field: 'correlation[0][1]' })); // prettier-ignore
     expect(() =>
       combine(two, [
         [0.9, 0],

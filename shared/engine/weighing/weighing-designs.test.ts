@@ -240,6 +240,21 @@ describe('published weighing designs', () => {
   );
 });
 
+describe('check standards of the presets', () => {
+  // The pages named in `source`: the one weight that serves, or the difference of the two references.
+  it.each([
+    ['1-1-1', [0, 1, 0]],
+    ['1-1-1 each pair twice', [1, 0, 0]],
+    ['1-1-1-1', [1, -1, 0, 0]],
+    ['1-1-1-1-1', [1, -1, 0, 0, 0]],
+    ['2-2-2-1-1', [0, 0, 1, 0, 0]],
+    ['5-3-2-1-1-1', [0, 0, 0, 1, 0, 0]],
+    ['5-3-2-2-1-1-1', [0, 0, 0, 0, 1, 0, 0]],
+  ])('of %s', (name, check) => {
+    expect(weighingDesigns[name]?.check).toEqual(check);
+  });
+});
+
 describe('HB-unify: between-day standard deviation out of the check standard', () => {
   // e-Handbook 2.3.3.3.4, design 1-1-1-1: the within-run part cancels and the test weight has sqrt(3/4) of the
   // day-to-day standard deviation of the check.
