@@ -159,3 +159,14 @@ describe('formatQuantity then parseQuantity', () => {
     );
   });
 });
+
+describe('parseQuantity: length', () => {
+  it('takes 160 characters and shortens a longer text in its message', () => {
+    const spaced = (length: number) => `${' '.repeat(length - 3)}1 g`;
+    expect(parseQuantity(spaced(160), { field: 'value' }).value.toFixed()).toBe('1');
+    expect(() => parseQuantity('x'.repeat(160), { field: 'value' })).toThrow(`"${'x'.repeat(160)}"`);
+    expect(() => parseQuantity(spaced(161), { field: 'value' })).toThrow(
+      expect.objectContaining({ code: 'too-long', field: 'value' }),
+    );
+  });
+});

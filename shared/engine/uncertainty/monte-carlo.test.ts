@@ -261,6 +261,10 @@ describe('coverageInterval', () => {
   it('finds the shortest among all with the probability', () => {
     const skew = Float64Array.from({ length: 100 }, (_, i) => (i + 1) ** 2);
     expect(coverageInterval(skew, 0.9, 'shortest')).toEqual([1, 91 ** 2]);
+    const between = Float64Array.of(-50, -30, 0, 1, 2, 3, 4, 5, 6, 40);
+    expect(coverageInterval(between, 0.6, 'shortest')).toEqual([0, 6]);
+    const shifted = between.map((value) => value + 1000);
+    expect(coverageInterval(shifted, 0.6, 'shortest')).toEqual([1000, 1006]);
     const mirrored = skew.map((value) => -value).reverse();
     expect(coverageInterval(mirrored, 0.9, 'shortest')).toEqual([-(91 ** 2), -1]);
   });

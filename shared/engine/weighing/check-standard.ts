@@ -59,8 +59,8 @@ export function precisionTest(a: {
   const { run, history } = a;
   requireNumber(history.standardDeviation, 'history.standardDeviation', { above: 0 });
   requireNumber(run.standardDeviation, 'run.standardDeviation', { min: 0 });
-  requireNumber(run.degreesOfFreedom, 'run.degreesOfFreedom', { above: 0 });
-  requireNumber(history.degreesOfFreedom, 'history.degreesOfFreedom', { above: 0 });
+  requireNumber(run.degreesOfFreedom, 'run.degreesOfFreedom', { min: 1 });
+  requireNumber(history.degreesOfFreedom, 'history.degreesOfFreedom', { min: 1 });
   const statistic = (run.standardDeviation / history.standardDeviation) ** 2;
   const criticalValue = fCriticalValue(a.level ?? 0.01, run.degreesOfFreedom, history.degreesOfFreedom);
   return {
