@@ -87,6 +87,11 @@ describe('referToCommonDate: petals and several standards', () => {
     expect(added(0, 0)).toBeCloseTo((0.25 * 4 * 6) / 10, 12);
     expect(added(0, 2)).toBeCloseTo((0.25 * 4 * 4) / 10, 12);
     expect(added(0, 1)).toBe(0);
+    const later = (circulation: Circulation) => ({
+      ...circulation,
+      observations: circulation.observations.map((each) => ({ ...each, time: each.time + 1000 })),
+    });
+    referToCommonDate(later(wandering)).covariance.forEach((row, i) => nearly(row, moved.covariance[i]!, 11));
     const onVisit = petal.observations.map((o) => (o.participant === 'A' ? { ...o, time: 10 } : o));
     const there = referToCommonDate({ ...petal, observations: onVisit, randomWalk: 0.5 });
     expect(there.covariance[0]![0]).toBeCloseTo(1 + 0.09, 12);

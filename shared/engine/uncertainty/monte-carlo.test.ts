@@ -208,6 +208,8 @@ describe('monteCarlo: the procedure', () => {
     [{ seed: NaN }, 'seed'],
     [{ seed: 1, digits: 3 }, 'options.digits'],
     [{ seed: 1, maximumTrials: 100 }, 'options.maximumTrials'],
+    // A block has 100 values beyond the interval: 20 000 trials at 99.5 %, and two blocks are the fewest.
+    [{ seed: 1, probability: 0.995, maximumTrials: 39_000 }, 'options.maximumTrials'],
     [{ seed: 1, probability: 1 }, 'options.probability'],
     [{ seed: 1, interval: 'longest' as 'shortest' }, 'options.interval'],
   ])('refuses the options %j', (options, field) => {
