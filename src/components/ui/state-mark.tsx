@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react';
-import type { State } from '#src/lib/states.ts';
+import type { State } from '#shared/states.ts';
 
 const COLOURS: Record<State, string> = {
   sound: 'text-sound',

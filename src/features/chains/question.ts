@@ -12,6 +12,18 @@ const Question = z.object({
   /** Shared effects below 1 % are counted, and shown when asked for. */
   effects: z.enum(['main', 'all']).catch('main'),
   only: z.enum(['fails']).optional().catch(undefined),
+  /** Links as used, or with each superseded ancestor replaced by what took its place. */
+  as: z.enum(['certified', 'now known']).catch('certified'),
+  /** Plates of one laboratory drawn as one. */
+  fold: z.enum(['laboratory']).optional().catch(undefined),
+  /** Keys of the folded groups that are opened in place, joined by commas. */
+  open: z.string().max(2000).optional().catch(undefined),
+  /** The other question that this one is compared with: its two days, and which chain. */
+  thenDay: z.iso.date().optional().catch(undefined),
+  thenKnown: z.iso.date().optional().catch(undefined),
+  thenAs: z.enum(['certified', 'now known']).optional().catch(undefined),
+  /** A second value: what both lean on lights up. */
+  with: z.uuid().optional().catch(undefined),
   /** What is selected: a node's uid, or child and parent of a link joined by a dot. */
   at: z.string().max(80).optional().catch(undefined),
 });
@@ -25,15 +37,15 @@ export function readQuestion(parameters: URLSearchParams): ChainQuestion {
 /** The address's parameters with a change; what is at its default is left out. */
 export function withChange(question: ChainQuestion, change: Partial<ChainQuestion>): Record<string, string> {
   const next = { ...question, ...change };
-  const defaults: Record<string, string> = { draw: 'flow', verdict: 'today', effects: 'main' };
+  const defaults: Record<string, string> = {
+    draw: 'flow',
+    verdict: 'today',
+    effects: 'main',
+    as: 'certified',
+  };
   return Object.fromEntries(
     Object.entries(next).flatMap(([name, value]) =>
       value && value !== defaults[name] ? [[name, value]] : [],
     ),
   );
-}
-
-/** The address part of a link. */
-export function linkKey(link: { childUid: string; parentUid: string }): string {
-  return `${link.childUid}.${link.parentUid}`;
 }

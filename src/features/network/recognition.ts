@@ -1,5 +1,5 @@
 import type { LaboratoryListResponse } from '#shared/contracts/network.ts';
-import type { State } from '#src/lib/states.ts';
+import type { State } from '#shared/states.ts';
 
 type Standing = LaboratoryListResponse['laboratories'][number]['recognition'];
 

@@ -1,5 +1,5 @@
 import { formatDecimal } from '#src/lib/format-decimal.ts';
-import type { State } from '#src/lib/states.ts';
+import type { State } from '#shared/states.ts';
 import { dayNumber } from './history/days.ts';
 
 /** From so many days before on the next calibration counts as near, as in the list's filter. */

@@ -11,7 +11,7 @@ import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
 import { Facts } from '#src/components/layout/facts.tsx';
 import type { CalibrationResponse } from '#shared/contracts/calibrations.ts';
-import { stateOfValue } from '#src/lib/states.ts';
+import { stateOfValue } from '#shared/states.ts';
 import { calibrationQuery } from '../api.ts';
 import { PerformedText } from './performed-text.tsx';
 

@@ -9,7 +9,7 @@ import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Facts } from '#src/components/layout/facts.tsx';
 import { Page, Section } from '#src/components/layout/page.tsx';
 import { can } from '#src/lib/abilities.ts';
-import { stateOfValue } from '#src/lib/states.ts';
+import { stateOfValue } from '#shared/states.ts';
 import { LineTable } from './line-table.tsx';
 import { sharedWords } from './shared-words.ts';
 import { PerformedText } from './performed-text.tsx';

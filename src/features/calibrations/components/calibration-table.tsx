@@ -2,7 +2,7 @@ import type { CalibrationListResponse } from '#shared/contracts/calibrations.ts'
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
-import { stateOfValue } from '#src/lib/states.ts';
+import { stateOfValue } from '#shared/states.ts';
 import { changeListSearch, writeListSearch, type ListSearch } from '../list-search.ts';
 import { PerformedText } from './performed-text.tsx';
 

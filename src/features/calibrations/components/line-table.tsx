@@ -5,7 +5,7 @@ import { paths } from '#src/app/paths.ts';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
-import { stateOfValue } from '#src/lib/states.ts';
+import { stateOfValue } from '#shared/states.ts';
 import { quantityWords, sharedFacts, type SharedFacts } from './shared-words.ts';
 
 type Line = CalibrationResponse['lines'][number];

@@ -2,7 +2,7 @@ import type { DraftCheck } from '#shared/contracts/drafts.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Section } from '#src/components/layout/page.tsx';
-import { stateOfOutcome } from '#src/lib/states.ts';
+import { stateOfOutcome } from '#shared/states.ts';
 import { useDraft } from './draft-context.ts';
 import { gatherChecks, type GatheredCheck } from './gather-checks.ts';
 import { runsOf } from './gather-points.ts';

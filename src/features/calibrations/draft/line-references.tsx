@@ -5,7 +5,7 @@ import { DecimalField } from '#src/components/ui/decimal-field.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { SelectField } from '#src/components/ui/select-field.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
-import { stateOfValue } from '#src/lib/states.ts';
+import { stateOfValue } from '#shared/states.ts';
 import type { DraftValues } from './draft-values.ts';
 import { useKnown, type KnownStandard } from './known.ts';
 import { USES } from './line-choices.ts';

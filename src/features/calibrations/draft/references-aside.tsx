@@ -4,7 +4,7 @@ import { paths } from '#src/app/paths.ts';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
 import { Section } from '#src/components/layout/page.tsx';
-import { stateOfValue } from '#src/lib/states.ts';
+import { stateOfValue } from '#shared/states.ts';
 import { useKnown } from './known.ts';
 
 /** How each value that the results lean on stands today. */

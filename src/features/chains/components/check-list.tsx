@@ -1,7 +1,7 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { fillSentence } from '#shared/rules/sentence.ts';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
-import { stateOfOutcome } from '#src/lib/states.ts';
+import { stateOfOutcome } from '#shared/states.ts';
 
 export type Check = ChainResponse['checks'][number];
 

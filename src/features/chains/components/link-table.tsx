@@ -3,8 +3,9 @@ import { DateText } from '#src/components/ui/date-text.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, RowButton, Table } from '#src/components/ui/table.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { drawnPart } from '../drawn-part.ts';
-import { linkKey, type ChainQuestion } from '../question.ts';
+import { drawnPart } from '#shared/drawing/drawn-part.ts';
+import { linkKey } from '#shared/drawing/drawing-question.ts';
+import type { ChainQuestion } from '../question.ts';
 import { shareText } from '../share-text.ts';
 
 interface LinkTableProps {

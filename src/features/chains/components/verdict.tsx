@@ -2,7 +2,7 @@ import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { fillSentence } from '#shared/rules/sentence.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
-import { countingChecks } from '../counting-checks.ts';
+import { countingChecks } from '#shared/drawing/counting-checks.ts';
 import { notYet } from '../not-yet.ts';
 import type { ChainQuestion } from '../question.ts';
 import { CheckList } from './check-list.tsx';

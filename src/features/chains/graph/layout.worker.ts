@@ -1,5 +1,5 @@
-import { layoutChain } from './layout.ts';
-import type { LayoutInput } from './layout-input.ts';
+import { layoutChain } from '#shared/drawing/layout.ts';
+import type { LayoutInput } from '#shared/drawing/layout-input.ts';
 
 /** Lays chains out beside the page, so that a large one never holds up a key press. */
 self.onmessage = (event: MessageEvent<{ ask: number; input: LayoutInput }>) => {

@@ -6,8 +6,8 @@ import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { nominalUnit } from '#src/lib/nominal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { shareText } from '../share-text.ts';
-import type { Plate, Stub } from './display-list.ts';
-import { PLATE, STUB_REACH } from './geometry.ts';
+import type { Plate, Stub } from '#shared/drawing/display-list.ts';
+import { PLATE, STUB_REACH } from '#shared/drawing/geometry.ts';
 
 export interface PlateData {
   plate: Plate;

@@ -2,7 +2,7 @@ import { memo } from 'react';
 import type { EdgeProps } from 'reactflow';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { shareText } from '../share-text.ts';
-import type { Ribbon } from './display-list.ts';
+import type { Ribbon } from '#shared/drawing/display-list.ts';
 
 export interface RibbonData {
   ribbon: Ribbon;

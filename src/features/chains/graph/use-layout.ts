@@ -1,5 +1,5 @@
 import { useEffect, useState } from 'react';
-import type { LayoutInput, Placement } from './layout-input.ts';
+import type { LayoutInput, Placement } from '#shared/drawing/layout-input.ts';
 
 /** Placements already worked out, by what they were worked out from. */
 const known = new Map<string, Placement>();

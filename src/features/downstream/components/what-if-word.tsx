@@ -1,7 +1,7 @@
 import type { z } from 'zod';
 import type { ClassVerdict, WhatIfFullRow, WhatIfWord } from '#shared/contracts/downstream.ts';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
-import type { State } from '#src/lib/states.ts';
+import type { State } from '#shared/states.ts';
 
 const STATES: Record<WhatIfWord, State> = {
   none: 'does not apply',

@@ -8,7 +8,7 @@ import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
 import { ValueCells } from '#src/components/ui/value-cells.tsx';
 import { formatDecimal } from '#src/lib/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { stateOfValue } from '#src/lib/states.ts';
+import { stateOfValue } from '#shared/states.ts';
 import { dateAsKnown } from '../history/days.ts';
 import type { PlotValue } from '../history/plot-geometry.ts';
 

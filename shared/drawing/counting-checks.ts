@@ -1,6 +1,6 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
-import type { State } from '#src/lib/states.ts';
-import type { ChainQuestion } from './question.ts';
+import type { State } from '#shared/states.ts';
+import type { DrawingQuestion } from './drawing-question.ts';
 
 type Check = ChainResponse['checks'][number];
 
@@ -8,7 +8,7 @@ type Check = ChainResponse['checks'][number];
  * The checks of values and links that count under a verdict, as the links' standings count them: for today also a
  * flaw of the result itself that was found for the conduct; nothing of a value that only informs.
  */
-export function countingChecks(chain: ChainResponse, verdict: ChainQuestion['verdict']): Check[] {
+export function countingChecks(chain: ChainResponse, verdict: DrawingQuestion['verdict']): Check[] {
   const lasting = new Set(chain.rules.filter((rule) => rule.isLasting).map((rule) => rule.id));
   const leaning = new Set([
     chain.focusUid,

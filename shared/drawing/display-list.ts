@@ -1,8 +1,8 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
-import { stateOfValue, type State } from '#src/lib/states.ts';
+import { stateOfValue, type State } from '#shared/states.ts';
 import { groupBy } from '#shared/group-by.ts';
-import { countingChecks, worstOf } from '../counting-checks.ts';
-import { linkKey, type ChainQuestion } from '../question.ts';
+import { countingChecks, worstOf } from './counting-checks.ts';
+import { linkKey, type DrawingQuestion } from './drawing-question.ts';
 import { BAND, PLATE, SCALE } from './geometry.ts';
 import type { LayoutInput, Placement, Point } from './layout-input.ts';
 import { ribbonMiddle, ribbonPath } from './ribbon-path.ts';
@@ -58,7 +58,7 @@ export interface DisplayList {
 }
 
 /** What the layout needs of a chain. In the plain drawing every link is a hairline. */
-export function layoutInput(chain: ChainResponse, draw: ChainQuestion['draw']): LayoutInput {
+export function layoutInput(chain: ChainResponse, draw: DrawingQuestion['draw']): LayoutInput {
   const isPlain = draw === 'plain';
   // A consensus value that runs inform is a root with something above it: it stays below them.
   const informed = new Set(chain.links.map((link) => link.childUid));
@@ -81,7 +81,7 @@ export function layoutInput(chain: ChainResponse, draw: ChainQuestion['draw']): 
 export function displayList(
   chain: ChainResponse,
   placement: Placement,
-  question: ChainQuestion,
+  question: DrawingQuestion,
 ): DisplayList {
   const isPlain = question.draw === 'plain';
   const failing = failingNodes(chain, question);
@@ -126,7 +126,7 @@ function bandOver(drawn: number, definition: ChainResponse['definition']): Displ
   return { x: (drawn - width) / 2, width, height: BAND.height, definition };
 }
 
-function ownChecks(chain: ChainResponse, question: ChainQuestion) {
+function ownChecks(chain: ChainResponse, question: DrawingQuestion) {
   const ofValues = countingChecks(chain, question.verdict).flatMap((check) =>
     check.subject.type === 'value' ? [{ uid: check.subject.uid, check }] : [],
   );
@@ -144,7 +144,7 @@ function stubOf(node: Node, isPlain: boolean): Stub | null {
 }
 
 /** Nodes at either end of a link that is broken or calls for caution; null where everything is shown. */
-function failingNodes(chain: ChainResponse, question: ChainQuestion): Set<string> | null {
+function failingNodes(chain: ChainResponse, question: DrawingQuestion): Set<string> | null {
   if (question.only !== 'fails') return null;
   const failing = chain.links.filter((link) => ['broken', 'caution'].includes(link[question.verdict]));
   return new Set(failing.flatMap((link) => [link.childUid, link.parentUid]));

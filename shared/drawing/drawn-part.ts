@@ -1,5 +1,5 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
-import type { ChainQuestion } from './question.ts';
+import type { DrawingQuestion } from './drawing-question.ts';
 
 /** Below this share a shared effect is shown only when asked for. */
 const WORTH_DRAWING = 0.01;
@@ -11,7 +11,7 @@ const WORTH_DRAWING = 0.01;
  */
 export function drawnPart(
   chain: ChainResponse,
-  effects: ChainQuestion['effects'],
+  effects: DrawingQuestion['effects'],
 ): { chain: ChainResponse; leftOut: number } {
   if (effects === 'all') return { chain, leftOut: 0 };
   const small = new Set(
