@@ -7,7 +7,7 @@ import type { ValueNode } from '#src/features/chains/components/selection-sheet.
 import { downstreamQuery } from '#src/features/downstream/api.ts';
 import { DownstreamScreen } from '#src/features/downstream/components/downstream-screen.tsx';
 import { readSearch, withChange, type DownstreamSearch } from '#src/features/downstream/search.ts';
-import { nominalText } from '#src/lib/nominal.ts';
+import { nominalText } from '#shared/numbers/nominal.ts';
 
 /** Primes the value and its groups; a dry run is worked out on the screen, which says so meanwhile. */
 export async function loader({ params, request }: LoaderFunctionArgs): Promise<null> {

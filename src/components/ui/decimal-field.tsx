@@ -1,8 +1,8 @@
 import { useState, type ComponentProps } from 'react';
-import { groupDigits } from '#src/lib/format-decimal.ts';
+import { groupDigits } from '#shared/numbers/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { readDecimal } from '#src/lib/read-decimal.ts';
-import { unitSymbol } from '#src/lib/quantity-text.ts';
+import { unitSymbol } from '#shared/numbers/quantity-text.ts';
 import { CONTROL_CLASS, Field, type FieldProps } from './field.tsx';
 
 interface DecimalFieldProps

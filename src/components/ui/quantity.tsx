@@ -1,7 +1,7 @@
 import { THIN_SPACE } from '#shared/engine/quantity/format-quantity.ts';
-import type { DigitParts } from '#src/lib/format-decimal.ts';
+import type { DigitParts } from '#shared/numbers/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { quantityText, type QuantityInput } from '#src/lib/quantity-text.ts';
+import { quantityText, type QuantityInput } from '#shared/numbers/quantity-text.ts';
 import { UnitSymbol } from './unit-symbol.tsx';
 
 interface QuantityProps extends QuantityInput {

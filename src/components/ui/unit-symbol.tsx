@@ -1,6 +1,6 @@
 import { Fragment } from 'react';
 import { THIN_SPACE } from '#shared/engine/quantity/format-quantity.ts';
-import { unitSymbol } from '#src/lib/quantity-text.ts';
+import { unitSymbol } from '#shared/numbers/quantity-text.ts';
 
 const RAISED = '⁰¹²³⁴⁵⁶⁷⁸⁹';
 

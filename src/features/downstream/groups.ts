@@ -1,7 +1,7 @@
 import type { DownstreamBy, WhatIfGroup, WhatIfSort } from '#shared/contracts/downstream.ts';
 import { Decimal } from '#shared/decimal.ts';
 import type { DecimalMark } from '#shared/engine/quantity/read-number.ts';
-import { nominalText } from '#src/lib/nominal.ts';
+import { nominalText } from '#shared/numbers/nominal.ts';
 
 /** How a grouping is called at the head of its column. */
 export const GROUPED_BY: Record<DownstreamBy, string> = {

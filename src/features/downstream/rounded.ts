@@ -1,7 +1,7 @@
 import { Decimal } from '#shared/decimal.ts';
 import { THIN_SPACE } from '#shared/engine/quantity/format-quantity.ts';
 import type { DecimalMark } from '#shared/engine/quantity/read-number.ts';
-import { formatDecimal } from '#src/lib/format-decimal.ts';
+import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 
 const SHIFT_DIGITS = 3;
 

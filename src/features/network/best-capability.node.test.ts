@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { nominalUnit } from '#src/lib/nominal.ts';
+import { nominalUnit } from '#shared/numbers/nominal.ts';
 import { bestU, partsOfBestU } from './best-capability.ts';
 
 const line = { bestUConstant: '0.0000008', bestURelative: 5e-8 };

@@ -1,4 +1,4 @@
-import { formatDecimal } from '#src/lib/format-decimal.ts';
+import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import type { State } from '#shared/states.ts';
 import { dayNumber } from './history/days.ts';
 

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { nominalText, nominalUnit } from '#src/lib/nominal.ts';
+import { nominalText, nominalUnit } from '#shared/numbers/nominal.ts';
 import { isGrams, isHeavy, nominalEntry, nominalMarking, readNominal, usualShape } from './nominal.ts';
 
 const grams = (typed: string) => {

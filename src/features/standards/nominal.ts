@@ -4,7 +4,7 @@ import { parseQuantity } from '#shared/engine/quantity/parse-quantity.ts';
 import type { DecimalMark } from '#shared/engine/quantity/read-number.ts';
 import { convertUnit } from '#shared/engine/quantity/units.ts';
 import type { Shape } from '#shared/contracts/standards.ts';
-import { nominalUnit } from '#src/lib/nominal.ts';
+import { nominalUnit } from '#shared/numbers/nominal.ts';
 
 /** What became of a nominal as typed: nothing there, grams as canonical text, or why it cannot be read. */
 export type ReadNominal =

@@ -4,7 +4,7 @@ import { Button, LinkButton } from '#src/components/ui/button.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { Page, Section } from '#src/components/layout/page.tsx';
 import { can } from '#src/lib/abilities.ts';
-import { formatDecimal } from '#src/lib/format-decimal.ts';
+import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { calibrationListQuery } from '../api.ts';
 import { changeListSearch, isNarrowed, type ListSearch } from '../list-search.ts';
 import { CalibrationPeek } from './calibration-peek.tsx';

@@ -1,6 +1,6 @@
 import { WeightClass, type MassUnit } from '#shared/contracts/common.ts';
 import type { Choice } from '#src/components/ui/select-field.tsx';
-import { unitSymbol } from '#src/lib/quantity-text.ts';
+import { unitSymbol } from '#shared/numbers/quantity-text.ts';
 
 const plain = (value: string): Choice => ({ value, label: value });
 const MASS_UNITS: readonly MassUnit[] = ['ug', 'mg', 'g', 'kg'];

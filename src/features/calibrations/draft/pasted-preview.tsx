@@ -1,8 +1,8 @@
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
-import { groupDigits } from '#src/lib/format-decimal.ts';
+import { groupDigits } from '#shared/numbers/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { unitSymbol } from '#src/lib/quantity-text.ts';
+import { unitSymbol } from '#shared/numbers/quantity-text.ts';
 import { turned, type UnderstoodRow } from './paste-lines.ts';
 import type { Column, PastedNumber } from './read-paste.ts';
 

@@ -3,7 +3,7 @@ import type { OpenPoint } from '#shared/contracts/drafts.ts';
 import type { MassUnit } from '#shared/contracts/common.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
-import { unitSymbol } from '#src/lib/quantity-text.ts';
+import { unitSymbol } from '#shared/numbers/quantity-text.ts';
 import { useDraft } from './draft-context.ts';
 import type { DraftValues } from './draft-values.ts';
 import { fieldWords, lineOf } from './field-words.ts';

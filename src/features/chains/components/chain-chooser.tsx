@@ -9,7 +9,7 @@ import { Quantity } from '#src/components/ui/quantity.tsx';
 import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
 import { ValueCells } from '#src/components/ui/value-cells.tsx';
 import { TextField } from '#src/components/ui/text-field.tsx';
-import { nominalUnit } from '#src/lib/nominal.ts';
+import { nominalUnit } from '#shared/numbers/nominal.ts';
 import { chainChoicesQuery } from '../api.ts';
 
 interface ChainChooserProps {

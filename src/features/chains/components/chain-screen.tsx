@@ -7,7 +7,7 @@ import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { Coverage, Quantity } from '#src/components/ui/quantity.tsx';
 import { Decimal, decimalText } from '#shared/decimal.ts';
-import { nominalText } from '#src/lib/nominal.ts';
+import { nominalText } from '#shared/numbers/nominal.ts';
 import type { ChainQuestion } from '../question.ts';
 import { BothKinds } from './both-kinds.tsx';
 import { Contributions } from './contributions.tsx';

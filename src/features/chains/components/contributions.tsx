@@ -3,7 +3,7 @@ import { Section } from '#src/components/layout/page.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { cancellations } from '../cancellations.ts';
-import { shareText } from '../share-text.ts';
+import { shareText } from '#shared/numbers/share-text.ts';
 
 const LONGEST_LIST = 8;
 

@@ -9,10 +9,10 @@ import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { stateOfValue } from '#shared/states.ts';
 import { linkKey } from '#shared/drawing/drawing-question.ts';
-import { shareText } from '../share-text.ts';
+import { shareText } from '#shared/numbers/share-text.ts';
 import { CheckList } from './check-list.tsx';
 import { toPlain } from './contributions.tsx';
-import { namesOf } from './link-table.tsx';
+import { namesOf } from '#shared/drawing/link-order.ts';
 
 interface SelectionSheetProps {
   chain: ChainResponse;

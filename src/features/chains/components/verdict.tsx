@@ -6,7 +6,7 @@ import { countingChecks } from '#shared/drawing/counting-checks.ts';
 import { notYet } from '../not-yet.ts';
 import type { ChainQuestion } from '../question.ts';
 import { CheckList } from './check-list.tsx';
-import { namesOf } from './link-table.tsx';
+import { namesOf } from '#shared/drawing/link-order.ts';
 
 const LONGEST_LIST = 3;
 

@@ -3,9 +3,9 @@ import { Handle, Position, type NodeProps } from 'reactflow';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
-import { nominalUnit } from '#src/lib/nominal.ts';
+import { nominalUnit } from '#shared/numbers/nominal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { shareText } from '../share-text.ts';
+import { shareText } from '#shared/numbers/share-text.ts';
 import type { Plate, Stub } from '#shared/drawing/display-list.ts';
 import { PLATE, STUB_REACH } from '#shared/drawing/geometry.ts';
 

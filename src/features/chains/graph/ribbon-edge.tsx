@@ -1,7 +1,7 @@
 import { memo } from 'react';
 import type { EdgeProps } from 'reactflow';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { shareText } from '../share-text.ts';
+import { shareText } from '#shared/numbers/share-text.ts';
 import type { Ribbon } from '#shared/drawing/display-list.ts';
 
 export interface RibbonData {

@@ -7,7 +7,7 @@ import { Page, Section } from '#src/components/layout/page.tsx';
 import { LinkButton } from '#src/components/ui/button.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
-import { formatDecimal } from '#src/lib/format-decimal.ts';
+import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { DraftTable } from './draft-table.tsx';
 import { DueTable } from './due-table.tsx';
 import { UpstreamTable } from './upstream-table.tsx';

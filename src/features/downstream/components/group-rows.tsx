@@ -2,7 +2,7 @@ import { Button } from '#src/components/ui/button.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { Cell, Row, RowButton } from '#src/components/ui/table.tsx';
-import { nominalText } from '#src/lib/nominal.ts';
+import { nominalText } from '#shared/numbers/nominal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
 
 /** The rows of the group that is open, as far as they have come. */

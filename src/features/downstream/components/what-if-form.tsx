@@ -4,9 +4,9 @@ import { Button } from '#src/components/ui/button.tsx';
 import { DecimalField } from '#src/components/ui/decimal-field.tsx';
 import { SelectField } from '#src/components/ui/select-field.tsx';
 import { TextField } from '#src/components/ui/text-field.tsx';
-import { groupDigits } from '#src/lib/format-decimal.ts';
+import { groupDigits } from '#shared/numbers/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { unitSymbol } from '#src/lib/quantity-text.ts';
+import { unitSymbol } from '#shared/numbers/quantity-text.ts';
 import { amountProblem, amountText, readAmount, type ReadAmount } from '../read-amount.ts';
 import type { DownstreamSearch, Suppose } from '../search.ts';
 

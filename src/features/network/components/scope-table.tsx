@@ -2,7 +2,7 @@ import { DateText } from '#src/components/ui/date-text.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
-import { nominalUnit } from '#src/lib/nominal.ts';
+import { nominalUnit } from '#shared/numbers/nominal.ts';
 import { bestU, type Line } from '../best-capability.ts';
 import { stateOfRecognition } from '../recognition.ts';
 import { BestCapability } from './best-capability.tsx';

@@ -2,7 +2,7 @@ import { Decimal, decimalText } from '#shared/decimal.ts';
 import type { WeightClass } from '#shared/contracts/common.ts';
 import { maximumPermissibleError } from '#shared/engine/conformity/maximum-permissible-error.ts';
 import { Quantity } from '#src/components/ui/quantity.tsx';
-import { nominalText } from '#src/lib/nominal.ts';
+import { nominalText } from '#shared/numbers/nominal.ts';
 import { isGrams } from '../nominal.ts';
 
 interface ErrorLimitNoteProps {

@@ -1,7 +1,7 @@
 import { useId } from 'react';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { groupDigits, withSign } from '#src/lib/format-decimal.ts';
-import { quantityLine, quantityText, unitSymbol } from '#src/lib/quantity-text.ts';
+import { groupDigits, withSign } from '#shared/numbers/format-decimal.ts';
+import { quantityLine, quantityText, unitSymbol } from '#shared/numbers/quantity-text.ts';
 import { dueState } from '../due-state.ts';
 import { dateAsKnown } from '../history/days.ts';
 import type { PlotGeometry, PlotPoint } from '../history/plot-geometry.ts';

@@ -6,7 +6,7 @@ import { Quantity } from '#src/components/ui/quantity.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
 import { ValueCells } from '#src/components/ui/value-cells.tsx';
-import { formatDecimal } from '#src/lib/format-decimal.ts';
+import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { stateOfValue } from '#shared/states.ts';
 import { dateAsKnown } from '../history/days.ts';

@@ -1,7 +1,7 @@
 import { useState, type ComponentProps } from 'react';
 import { CONTROL_CLASS, Field, type FieldProps } from '#src/components/ui/field.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
-import { nominalText } from '#src/lib/nominal.ts';
+import { nominalText } from '#shared/numbers/nominal.ts';
 import { isGrams, nominalEntry, readNominal } from '../nominal.ts';
 
 interface NominalFieldProps

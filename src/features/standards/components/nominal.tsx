@@ -1,5 +1,5 @@
 import { Quantity } from '#src/components/ui/quantity.tsx';
-import { nominalUnit } from '#src/lib/nominal.ts';
+import { nominalUnit } from '#shared/numbers/nominal.ts';
 
 /** A nominal in the unit engraved on the weight. */
 export function Nominal({ grams }: { grams: string }) {

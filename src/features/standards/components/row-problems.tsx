@@ -1,6 +1,6 @@
 import type { FieldErrors } from 'react-hook-form';
 import { Notice } from '#src/components/ui/notice.tsx';
-import { nominalText } from '#src/lib/nominal.ts';
+import { nominalText } from '#shared/numbers/nominal.ts';
 import { isGrams } from '../nominal.ts';
 import { cellProblem, MEMBER_COLUMNS, type SetEntriesInput } from '../set-entries.ts';
 

@@ -2,7 +2,7 @@ import type { StandardResponse } from '#shared/contracts/standards.ts';
 import { Facts } from '#src/components/layout/facts.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
-import { formatDecimal } from '#src/lib/format-decimal.ts';
+import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { dateAsKnown } from '../history/days.ts';
 import { monthsText } from '../words.ts';
 import { DueMark } from './due-mark.tsx';

@@ -6,7 +6,7 @@ import { Button } from '#src/components/ui/button.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import type { Choice } from '#src/components/ui/select-field.tsx';
-import { formatDecimal } from '#src/lib/format-decimal.ts';
+import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { isNarrowed, type ListSearch } from '../list-search.ts';
 import { StandardFilters } from './standard-filters.tsx';
 import { StandardSheet } from './standard-sheet.tsx';

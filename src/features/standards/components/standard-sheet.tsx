@@ -6,7 +6,7 @@ import { SideSheet } from '#src/components/ui/dialog.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { standardQuery } from '../api.ts';
-import { nominalText } from '#src/lib/nominal.ts';
+import { nominalText } from '#shared/numbers/nominal.ts';
 import { ShortFacts } from './short-facts.tsx';
 
 interface StandardSheetProps {

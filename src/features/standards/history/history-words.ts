@@ -1,6 +1,6 @@
 import type { QuantityKind } from '#shared/contracts/common.ts';
 import type { StandardResponse } from '#shared/contracts/standards.ts';
-import { quantityLine, quantityText } from '#src/lib/quantity-text.ts';
+import { quantityLine, quantityText } from '#shared/numbers/quantity-text.ts';
 import { dateAsKnown } from './days.ts';
 import { isSpanSeen, type PlotPoint, type PlotValue } from './plot-geometry.ts';
 

@@ -2,7 +2,7 @@ import { Decimal } from '#shared/decimal.ts';
 import type { HistoryValue, StandardResponse } from '#shared/contracts/standards.ts';
 import type { Unit } from '#shared/engine/quantity/units.ts';
 import type { z } from 'zod';
-import { convertText, deviationUnit } from '#src/lib/format-decimal.ts';
+import { convertText, deviationUnit } from '#shared/numbers/format-decimal.ts';
 import { dayNumber, possibleDays } from './days.ts';
 import { placeLabels, type Mark, type PlacedLabel } from './plot-labels.ts';
 import { chooseBand, valueDomain, type Band, type Domain } from './plot-domain.ts';

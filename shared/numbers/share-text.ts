@@ -1,11 +1,11 @@
 import { THIN_SPACE } from '#shared/engine/quantity/format-quantity.ts';
-import { formatDecimal } from '#src/lib/format-decimal.ts';
-import type { Preferences } from '#src/lib/preferences.ts';
+import { formatDecimal } from './format-decimal.ts';
+import type { DecimalMark } from '#shared/engine/quantity/read-number.ts';
 
 /** A share of the variance as people read it: "56.0 %"; one decimal, so that a column adds up by eye. */
 export function shareText(
   share: number,
-  decimalMark: Preferences['decimalMark'] = '.',
+  decimalMark: DecimalMark = '.',
   decimals = 1,
 ): string {
   const percent = share * 100;
