@@ -21,6 +21,8 @@ export interface Plate {
   isFocus: boolean;
   isFaint: boolean;
   stub: Stub | null;
+  /** One short word set on the plate's edge in brass: what is to be noticed of it. */
+  mark: string | null;
 }
 
 /** What a value adds of its own, entering from the side at the same scale. */
@@ -45,6 +47,8 @@ export interface Ribbon {
   state: State;
   isFaint: boolean;
   middle: Point;
+  /** One short word at the ribbon's middle in brass: what is to be noticed of it. */
+  mark: string | null;
 }
 
 /** Everything that is drawn of a chain, in numbers: the screen and every export are made from it. */
@@ -77,11 +81,15 @@ export function layoutInput(chain: ChainResponse, draw: DrawingQuestion['draw'])
   };
 }
 
+/** What is to be noticed: a plate's id or a link's key, and one short word. */
+export type Marks = ReadonlyMap<string, string>;
+
 /** Puts the chain's facts in the places that the layout found. */
 export function displayList(
   chain: ChainResponse,
   placement: Placement,
   question: DrawingQuestion,
+  marks: Marks = new Map(),
 ): DisplayList {
   const isPlain = question.draw === 'plain';
   const failing = failingNodes(chain, question);
@@ -101,6 +109,7 @@ export function displayList(
       isFocus: node.uid === chain.focusUid,
       isFaint: isFaint(node.uid),
       stub: stubOf(node, isPlain),
+      mark: marks.get(node.uid) ?? null,
     })),
     ribbons: placement.ribbons.map((ribbon, index) => {
       const link = chain.links[index]!;
@@ -115,6 +124,7 @@ export function displayList(
         state: link[question.verdict],
         isFaint: isFaint(link.childUid) || isFaint(link.parentUid),
         middle: ribbonMiddle(ribbon.points),
+        mark: marks.get(linkKey(link)) ?? null,
       };
     }),
   };

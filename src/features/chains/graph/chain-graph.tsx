@@ -8,7 +8,7 @@ import { linkKey } from '#shared/drawing/drawing-question.ts';
 import type { ChainQuestion } from '../question.ts';
 import { BandNode } from './band-node.tsx';
 import { drawnPart } from '#shared/drawing/drawn-part.ts';
-import { displayList, layoutInput, type DisplayList } from '#shared/drawing/display-list.ts';
+import { displayList, layoutInput, type DisplayList, type Marks } from '#shared/drawing/display-list.ts';
 import { Frame } from './frame.tsx';
 import { PLATE } from '#shared/drawing/geometry.ts';
 import { PlateNode } from './plate-node.tsx';
@@ -26,16 +26,18 @@ interface ChainGraphProps {
   question: ChainQuestion;
   /** A node's uid, or a link's key. */
   onSelect: (at: string) => void;
+  /** What is to be noticed: a plate's id or a link's key, and one short word. */
+  marks?: Marks | undefined;
 }
 
 /** The chain drawn as a conserved flow from the definition down to the weight. The table beside it says the same. */
-export function ChainGraph({ chain: whole, question, onSelect }: ChainGraphProps) {
+export function ChainGraph({ chain: whole, question, onSelect, marks }: ChainGraphProps) {
   const { chain } = useMemo(() => drawnPart(whole, question.effects), [whole, question.effects]);
   const input = useMemo(() => layoutInput(chain, question.draw), [chain, question.draw]);
   const placement = useLayout(input);
   const list = useMemo(
-    () => placement && displayList(chain, placement, question),
-    [chain, placement, question],
+    () => placement && displayList(chain, placement, question, marks),
+    [chain, placement, question, marks],
   );
   const drawn = useMemo(
     () => list && { nodes: nodesOf(list, question.at), edges: edgesOf(list, question.at) },

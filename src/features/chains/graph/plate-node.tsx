@@ -31,6 +31,7 @@ export const PlateNode = memo(function PlateNode({ data }: NodeProps<PlateData>)
       <Handle type="source" position={Position.Bottom} className="invisible" isConnectable={false} />
       <Handle type="target" position={Position.Top} className="invisible" isConnectable={false} />
       {plate.stub && <StubMark stub={plate.stub} />}
+      {plate.mark && <Noticed word={plate.mark} />}
       <div className="flex h-full flex-col justify-between px-2 py-1">
         {plate.node.type === 'value' ? (
           <ValueFace plate={plate} node={plate.node} />
@@ -94,6 +95,18 @@ const LONGEST_NAME = 16;
 /** The issuer's code where its name would be cut, or where the value's standing needs the room. */
 function issuerText({ issuer, state }: Extract<Plate['node'], { type: 'value' }>): string {
   return state === 'in force' && issuer.name.length <= LONGEST_NAME ? issuer.name : issuer.code;
+}
+
+/** A word on the plate's lower edge, with a mark: colour alone says nothing. */
+function Noticed({ word }: { word: string }) {
+  return (
+    <span className="absolute -bottom-2 left-2 flex items-center gap-1 bg-raised px-1 text-xs leading-4 whitespace-nowrap text-brass">
+      <svg viewBox="0 0 8 8" className="size-2" aria-hidden="true">
+        <path d="M4 0 8 4 4 8 0 4Z" fill="currentColor" />
+      </svg>
+      {word}
+    </span>
+  );
 }
 
 function SourceFace({ node }: { node: Extract<Plate['node'], { type: 'source' }> }) {

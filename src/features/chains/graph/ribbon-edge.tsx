@@ -36,6 +36,7 @@ export const RibbonEdge = memo(function RibbonEdge({ data }: EdgeProps<RibbonDat
       )}
       <MiddleMark ribbon={ribbon} />
       <Label ribbon={ribbon} />
+      <Noticed ribbon={ribbon} />
     </g>
   );
 });
@@ -87,6 +88,24 @@ function Label({ ribbon }: { ribbon: Ribbon }) {
     >
       {shareText(flow, decimalMark, 0)}
     </text>
+  );
+}
+
+/** A word under the ribbon's middle, with a mark: colour alone says nothing. */
+function Noticed({ ribbon }: { ribbon: Ribbon }) {
+  if (!ribbon.mark) return null;
+  return (
+    <g transform={`translate(${ribbon.middle.x} ${ribbon.middle.y + 19})`}>
+      <path
+        d="M-4 -4 0 -8 4 -4 0 0Z"
+        className="fill-brass stroke-paper"
+        strokeWidth="3"
+        paintOrder="stroke"
+      />
+      <text x={8} className="fill-brass stroke-paper font-sans text-xs" strokeWidth="4" paintOrder="stroke">
+        {ribbon.mark}
+      </text>
+    </g>
   );
 }
 
