@@ -18,8 +18,16 @@ import {
   WeightClass,
 } from './common.ts';
 
+/** Links as used, or each superseded ancestor replaced by what took its place. */
+export const ChainAs = z.enum(['certified', 'now known']);
+export type ChainAs = z.infer<typeof ChainAs>;
+
 /** GET /api/chains/:valueUid: in force on `day`, as known at the end of `known`; both default to today. */
-export const ChainQuery = z.object({ day: Day.optional(), known: Day.optional() });
+export const ChainQuery = z.object({
+  day: Day.optional(),
+  known: Day.optional(),
+  as: ChainAs.default('certified'),
+});
 export type ChainQuery = z.infer<typeof ChainQuery>;
 
 /** Where a number for u comes from; worn by each u on screen. */
@@ -73,6 +81,18 @@ export const ChainValue = z.object({
   localShare: z.number().nullable(),
   /** What flows through this node, as a share of the focus's variance. */
   share: z.number().nullable(),
+  /**
+   * The value as now known, where something it rests on, or its own certificate, has changed since; null: nothing
+   * has. Not computable: `deviation` and `shift` are null and `because` names the certificate.
+   */
+  now: z
+    .object({
+      deviation: Deviation.nullable(),
+      /** Grams, signed: as now known less as certified. */
+      shift: DecimalString.nullable(),
+      because: z.string().nullable(),
+    })
+    .nullable(),
 });
 export type ChainValue = z.infer<typeof ChainValue>;
 
@@ -158,6 +178,40 @@ export const Improvement = z.object({
   expandedUThen: z.number(),
 });
 
+/** The focus as now known: what has changed above it since it was certified, and by how much it moves. */
+export const AsNowKnown = z.object({
+  /** Grams, signed; null where not computable, and `because` says which certificate stands in the way. */
+  shift: DecimalString.nullable(),
+  deviation: Deviation.nullable(),
+  /** U at the certificate's k, local parts frozen. */
+  expandedU: z.number().nullable(),
+  because: z.string().nullable(),
+  /** Values whose certificate was superseded or withdrawn; `byUid` is null where nothing has taken its place. */
+  replaced: z.array(
+    z.object({
+      uid: Id,
+      byUid: Id.nullable(),
+      registryNo: z.string(),
+      certificateNo: z.string(),
+      /** What its replacement brings to the focus, grams, signed; null where not computable. */
+      shift: DecimalString.nullable(),
+    }),
+  ),
+  /** Notices that apply to what the focus rests on; each once, with what it brings along every path. */
+  notices: z.array(
+    z.object({
+      id: Id,
+      number: z.string(),
+      title: z.string(),
+      effectiveOn: Day,
+      shift: DecimalString,
+      /** Standard uncertainty that it adds at the focus, grams. */
+      u: z.number(),
+    }),
+  ),
+});
+export type AsNowKnown = z.infer<typeof AsNowKnown>;
+
 const SideValue = z.object({
   quantity: QuantityKind,
   deviation: Deviation,
@@ -167,7 +221,14 @@ const SideValue = z.object({
 });
 
 export const ChainResponse = z.object({
-  question: z.object({ valueUid: Id, day: Day, known: Day, ruleSet: z.string(), engine: z.string() }),
+  question: z.object({
+    valueUid: Id,
+    day: Day,
+    known: Day,
+    as: ChainAs,
+    ruleSet: z.string(),
+    engine: z.string(),
+  }),
   focusUid: Id,
   /**
    * Where the focus was not in force yet on the day, or not known yet: the value of the same weight and kind that
@@ -176,6 +237,8 @@ export const ChainResponse = z.object({
   inForceInstead: z.object({ uid: Id, certificateNo: z.string() }).nullable(),
   nodes: z.array(z.discriminatedUnion('type', [ChainValue, ChainSource])),
   links: z.array(ChainLink),
+  /** Null: nothing that the focus rests on has changed since it was certified. */
+  asNowKnown: AsNowKnown.nullable(),
   /** The definition in force when the roots were determined. */
   definition: z.enum(['planck constant', 'international prototype', 'both']),
   uncertainty: z.object({

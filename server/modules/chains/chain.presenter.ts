@@ -40,6 +40,7 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
       valueUid: chain.focus.uid,
       day: chain.question.day,
       known: chain.question.known,
+      as: chain.as,
       ruleSet: RULE_SET_VERSION,
       engine: ENGINE_VERSION,
     },
@@ -50,6 +51,7 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
       ...[...chain.closure.sources.values()].map((source) => presentSource(source, chain, user, shares)),
     ],
     links: presentLinks(chain, shares),
+    asNowKnown: null,
     definition: definitionOf(chain),
     uncertainty: {
       standard: u,
@@ -145,6 +147,7 @@ function presentValue(
     tier: chain.tiers.get(value.uid) ?? 0,
     localShare: isKnown && value.localU !== null ? (shares.local.get(value.uid) ?? 0) : null,
     share: isKnown ? (shares.through.get(value.uid) ?? 0) : null,
+    now: null,
   };
 }
 

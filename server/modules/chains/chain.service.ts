@@ -1,4 +1,4 @@
-import type { ChainResponse } from '#shared/contracts/chains.ts';
+import type { ChainAs, ChainResponse } from '#shared/contracts/chains.ts';
 import type { ChainFacts, Question } from '#shared/rules/facts.ts';
 import { judgeChain, type ChainJudgement } from '#shared/rules/judge.ts';
 import { endOfDay } from '#shared/state-at.ts';
@@ -17,6 +17,7 @@ import { tiersOf } from './tiers.ts';
 /** A chain worked out, before anything is left out for the person who asks. */
 export interface Chain {
   question: Question;
+  as: ChainAs;
   focus: StoredValue;
   closure: Closure;
   standards: Map<string, StandardDossier>;
@@ -46,7 +47,7 @@ export async function chainOf(
   context: Context,
   store: ChainStore,
   focusId: number,
-  asked: { day?: string | undefined; known?: string | undefined },
+  asked: { day?: string | undefined; known?: string | undefined; as?: ChainAs | undefined },
 ): Promise<Chain> {
   await store.catchUp();
   const question: Question = {
@@ -54,7 +55,7 @@ export async function chainOf(
     known: asked.known ?? today(context),
     programmeEndedAfterUse: 'said',
   };
-  return workOut(store, focusId, stepsOf(memoryOf(store), question));
+  return workOut(store, focusId, stepsOf(memoryOf(store), question), asked.as ?? 'certified');
 }
 
 function memoryOf(store: ChainStore): Remembered {
@@ -76,7 +77,7 @@ function stepsOf({ steps }: Remembered, question: Question): StepMemory {
   return fresh;
 }
 
-async function workOut(store: ChainStore, focusId: number, steps: StepMemory): Promise<Chain> {
+async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as: ChainAs): Promise<Chain> {
   const { question } = steps;
   const closure = await store.closure([focusId]);
   const focus = closure.values.find((value) => value.id === focusId)!;
@@ -98,6 +99,7 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory): P
   const judgement = judgeChain(facts, steps);
   return {
     question,
+    as,
     focus,
     closure,
     standards,
