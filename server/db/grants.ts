@@ -31,6 +31,11 @@ export const GRANTS: Readonly<Record<string, readonly ('INSERT' | 'UPDATE' | 'DE
   group_covariance: ['INSERT'],
   component: ['INSERT'],
   value_end: ['INSERT'],
+  dry_run: ['INSERT'],
+  dry_run_note: ['INSERT'],
+  notice: ['INSERT'],
+  notice_term: ['INSERT'],
+  notice_shift: ['INSERT'],
   session: ['INSERT', 'UPDATE', 'DELETE'],
   calibration_draft: ['INSERT', 'UPDATE'],
 };

@@ -177,7 +177,7 @@ export const WhatIfInput = z.strictObject({
 });
 export type WhatIfInput = z.infer<typeof WhatIfInput>;
 
-const ClassVerdict = z.enum(['keeps', 'does not keep', 'not judged']);
+export const ClassVerdict = z.enum(['keeps', 'does not keep', 'not judged']);
 export type ClassVerdict = z.infer<typeof ClassVerdict>;
 
 /** A value of one's own, before and after. Grams. */

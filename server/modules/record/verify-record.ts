@@ -26,6 +26,8 @@ const ACT_OF_PARENT: Readonly<Record<string, string>> = {
   component: 'JOIN assigned_value p ON p.id = t.value_id',
   value_group: 'JOIN revision p ON p.id = t.revision_id',
   group_covariance: 'JOIN value_group g ON g.id = t.group_id JOIN revision p ON p.id = g.revision_id',
+  notice_term: 'JOIN notice p ON p.id = t.notice_id',
+  notice_shift: 'JOIN notice p ON p.id = t.notice_id',
 };
 
 /** Rows taken at once: bounds the memory of one step. */
