@@ -235,6 +235,8 @@ export const ChainResponse = z.object({
    * was; null where there was none, where the focus stands, and in a statement.
    */
   inForceInstead: z.object({ uid: Id, certificateNo: z.string() }).nullable(),
+  /** What took the focus's own place on the day, as known; null where it stands or is lost, and in a statement. */
+  succeededBy: z.object({ uid: Id, certificateNo: z.string(), revisionN: z.number().int() }).nullable(),
   nodes: z.array(z.discriminatedUnion('type', [ChainValue, ChainSource])),
   links: z.array(ChainLink),
   /** Null: nothing that the focus rests on has changed since it was certified. */

@@ -13,6 +13,8 @@ import { readsInFull, type User } from '#server/policy/user.ts';
 import { valueView } from '#server/policy/value-view.ts';
 import type { Chain } from './chain.service.ts';
 import type { ChainSubject } from './chains.policy.ts';
+import { fateOf } from './fate.ts';
+import { becauseLost, nowOf, presentAsNowKnown } from './chain-now.presenter.ts';
 import type { StoredSource, StoredValue } from './stored.ts';
 
 /** The day on which the kilogram was redefined (26th CGPM, Resolution 1). */
@@ -46,12 +48,13 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
     },
     focusUid: chain.focus.uid,
     inForceInstead: isFull(chain.focus.uid) ? inForceInstead(chain) : null,
+    succeededBy: isFull(chain.focus.uid) ? succeededBy(chain) : null,
     nodes: [
       ...chain.closure.values.map((value) => presentValue(value, chain, isFull(value.uid), shares)),
       ...[...chain.closure.sources.values()].map((source) => presentSource(source, chain, user, shares)),
     ],
     links: presentLinks(chain, shares),
-    asNowKnown: null,
+    asNowKnown: presentAsNowKnown(chain, k),
     definition: definitionOf(chain),
     uncertainty: {
       standard: u,
@@ -147,7 +150,7 @@ function presentValue(
     tier: chain.tiers.get(value.uid) ?? 0,
     localShare: isKnown && value.localU !== null ? (shares.local.get(value.uid) ?? 0) : null,
     share: isKnown ? (shares.through.get(value.uid) ?? 0) : null,
-    now: null,
+    now: nowOf(value, chain),
   };
 }
 
@@ -174,6 +177,14 @@ function inForceInstead(chain: Chain): ChainResponse['inForceInstead'] {
   return stood ? { uid: stood.uid, certificateNo: stood.certificateNo } : null;
 }
 
+/** The end of the way from one revision of the focus to the next. */
+function succeededBy({ focus, standards, question }: Chain): ChainResponse['succeededBy'] {
+  const dossier = standards.get(focus.standardId)!;
+  const fate = fateOf(focus, dossier, question);
+  const row = fate.kind === 'replaced' && dossier.history.find(({ id }) => id === fate.byId);
+  return row ? { uid: row.uid, certificateNo: row.certificateNo, revisionN: row.revisionN } : null;
+}
+
 function originOf(value: StoredValue): z.input<typeof ChainValue>['uOrigin'] {
   if (value.uStated === null) return 'unknown';
   if (value.rootKind === 'earlier definition') return 'by definition';
@@ -192,6 +203,7 @@ function presentSource(
     value.sources.some((link) => link.sourceId === source.id),
   );
   const isOpen =
+    source.isPublished === true ||
     (source.laboratoryId !== null && readsInFull(user, source.laboratoryId)) ||
     leaning.some(
       (value) => value.standardId === source.standardId && valueView(user, value, 'upstream') === 'full',
@@ -268,11 +280,13 @@ function definitionOf(chain: Chain): ChainResponse['definition'] {
 }
 
 /**
- * Why the uncertainty is unknown: the certificates that state none. A value whose own part cannot be told apart for
+ * Why the uncertainty is unknown: certificates withdrawn, where the chain is drawn as now known; else those that state none. A value whose own part cannot be told apart for
  * that reason is named only where no such certificate is.
  */
 function missingOf(chain: Chain): ChainResponse['uncertainty']['missing'] {
   const missing = new Set(chain.numbers.propagation.missing);
+  const lost = becauseLost(chain).filter(({ uid }) => missing.has(uid));
+  if (lost.length > 0) return lost;
   const values = chain.closure.values.filter((value) => missing.has(value.uid));
   const silent = values.filter((value) => value.uStated === null);
   const sentence = silent.length > 0 ? 'states no uncertainty' : 'leaves its own part open';

@@ -1,14 +1,19 @@
 import type { ChainAs, ChainResponse } from '#shared/contracts/chains.ts';
 import type { ChainFacts, Question } from '#shared/rules/facts.ts';
 import { judgeChain, type ChainJudgement } from '#shared/rules/judge.ts';
+import { noticesInForce } from '#shared/notices/in-force.ts';
 import { endOfDay } from '#shared/state-at.ts';
 import { today, type Context } from '#server/http/context.ts';
 import { linkFacts, valueFacts, type FactParts } from './chain-facts.ts';
+import { chainNow, type ChainNow } from './chain-now.ts';
 import { chainNumbers, type ChainNumbers } from './chain-numbers.ts';
 import type { ChainStore, Closure } from './chain-store.ts';
+import { noticesOfLinks } from './notice-facts.ts';
+import { withNotices } from './noticed-closure.ts';
 import { contributionsOf } from './contributions.ts';
 import { historyBefore } from './history.ts';
 import { improvementsOf } from './improvements.ts';
+import { redirectedLinkJudge } from './judge-redirected.ts';
 import { sideBySide } from './side-by-side.ts';
 import { StepMemory } from './step-memory.ts';
 import type { LaboratoryDossier, StandardDossier, StoredValue } from './stored.ts';
@@ -28,6 +33,8 @@ export interface Chain {
   contributions: ReturnType<typeof contributionsOf>;
   improvements: ChainResponse['improvements'];
   sideBySide: ReturnType<typeof sideBySide>;
+  /** What has changed above it since it was certified; null: nothing. */
+  now: ChainNow | null;
 }
 
 /** Steps judged already, by question, valid until the next act. */
@@ -79,37 +86,49 @@ function stepsOf({ steps }: Remembered, question: Question): StepMemory {
 
 async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as: ChainAs): Promise<Chain> {
   const { question } = steps;
-  const closure = await store.closure([focusId]);
-  const focus = closure.values.find((value) => value.id === focusId)!;
+  const certified = await store.closure([focusId]);
+  const focus = certified.values.find((value) => value.id === focusId)!;
+  const now = await chainNow(store, certified, focus, question);
+  const isNow = as === 'now known' && now !== null;
+  const closure = isNow ? now.closure : certified;
+  // What was done is judged over the links as used, whichever chain is drawn.
+  const asUsed = isNow ? await store.closure([focusId, ...idsOf(closure)]) : certified;
   const [standards, laboratories] = await Promise.all([
-    store.standards(closure.values.map((value) => value.standardId)),
-    store.laboratories(closure.values.flatMap((value) => [value.issuerId, value.holderId])),
+    store.standards(asUsed.values.map((value) => value.standardId)),
+    store.laboratories(asUsed.values.flatMap((value) => [value.issuerId, value.holderId])),
   ]);
-  const widened = await store.closure([focusId, ...earlierThan(closure, steps, standards)]);
-  const numbers = chainNumbers(widened, focus.uid);
-  const contributions = contributionsOf(widened, numbers.propagation);
+  const widened = await store.closure([...idsOf(asUsed), ...earlierThan(asUsed, steps, standards)]);
+  const inForce = noticesInForce(store.notices, question.day, question.known);
+  const shown = withNotices(closure, inForce);
+  const widenedNow = withNotices(widened, inForce);
+  const numbersAsUsed = chainNumbers(widened, focus.uid, widenedNow);
+  const numbersNow = isNow && shown !== closure ? chainNumbers(closure, focus.uid, shown) : now?.numbers;
+  const numbers = isNow ? (numbersNow ?? now.numbers) : numbersAsUsed;
+  const contributions = contributionsOf(isNow ? shown : widenedNow, numbers.propagation);
   const parts: FactParts = {
     question,
     standards,
     laboratories,
-    numbers,
+    numbers: numbersAsUsed,
     byId: new Map(widened.values.map((value) => [value.id, value])),
+    notices: store.notices,
+    noticesOfLinks: noticesOfLinks(widened, store.notices, question.known),
   };
-  const facts = chainFacts(closure, focus, parts, contributions, steps);
-  const judgement = judgeChain(facts, steps);
+  const facts = chainFacts({ closure: shown, focus, parts, contributions, steps, numbers });
+  const judgement = judgeChain(facts, isNow ? redirectedLinkJudge(steps, facts, now, parts) : steps);
   return {
     question,
     as,
     focus,
-    closure,
+    closure: shown,
     standards,
     laboratories,
     numbers,
-    tiers: tiersOf(closure, focus),
+    tiers: tiersOf(shown, focus),
     judgement,
     contributions,
     improvements: improvementsOf(
-      closure,
+      shown,
       focus,
       numbers.propagation,
       contributions,
@@ -117,7 +136,12 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as
       endOfDay(question.known),
     ),
     sideBySide: bothKinds(focus, standards.get(focus.standardId)!, question, judgement),
+    now,
   };
+}
+
+function idsOf(closure: Closure): number[] {
+  return closure.values.map((value) => value.id);
 }
 
 /** The values that the steps not judged yet are compared with: their covariances are needed. */
@@ -128,29 +152,33 @@ function earlierThan(closure: Closure, steps: StepMemory, standards: Map<string,
   });
 }
 
-function chainFacts(
-  closure: Closure,
-  focus: StoredValue,
-  parts: FactParts,
-  contributions: Chain['contributions'],
-  steps: StepMemory,
-): ChainFacts {
+function chainFacts(of: {
+  closure: Closure;
+  focus: StoredValue;
+  parts: FactParts;
+  contributions: Chain['contributions'];
+  steps: StepMemory;
+  numbers: ChainNumbers;
+}): ChainFacts {
+  const { closure, focus, parts, steps } = of;
+  const asUsed = (value: StoredValue) => parts.byId.get(value.id)!;
   const values = new Map(
-    closure.values.map((value) => [value.id, steps.value(value, () => valueFacts(value, parts))]),
+    closure.values.map((value) => [value.id, steps.value(value, () => valueFacts(asUsed(value), parts))]),
   );
   return {
     question: parts.question,
     focusUid: focus.uid,
     values: [...values.values()],
     links: closure.values.flatMap((value) =>
-      value.parents.map((link) =>
-        steps.link(value, link, () =>
-          linkFacts(values.get(value.id)!, values.get(link.parentId)!, link, parts),
-        ),
-      ),
+      value.parents.map((link) => {
+        const assemble = () => linkFacts(values.get(value.id)!, values.get(link.parentId)!, link, parts);
+        // A link read as leading to a successor is no step of the register: it is not kept among those.
+        return asUsed(value).parents.includes(link) ? steps.link(value, link, assemble) : assemble();
+      }),
     ),
-    contributions: contributionFacts(contributions, closure),
-    varianceNow: parts.numbers.variance(focus.uid),
+    contributions: contributionFacts(of.contributions, closure),
+    // What notices added since is weighed by rules of their own (B-24, B-50).
+    varianceNow: of.numbers.varianceAsCertified(focus.uid),
     // The register admits neither: a circle is refused at issue, and a reference is a row or nothing.
     circle: null,
     missingReferences: [],

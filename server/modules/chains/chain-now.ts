@@ -1,0 +1,122 @@
+import { Decimal } from '#shared/decimal.ts';
+import type { Question } from '#shared/rules/facts.ts';
+import { chainNumbers, type ChainNumbers } from './chain-numbers.ts';
+import type { ChainStore, Closure } from './chain-store.ts';
+import { fateOf, type Fate } from './fate.ts';
+import { CIRCLE, difference, Moves, type Move } from './moves.ts';
+import { redirectedClosure, standsFor, type Fates } from './redirected.ts';
+import type { StoredLink, StoredValue } from './stored.ts';
+
+/** A superseded or withdrawn value that something in the chain leans on. */
+export interface ReplacedValue {
+  value: StoredValue;
+  /** What took its place; null: nothing has. */
+  by: StoredValue | null;
+  /** What that brings to the focus, grams; null where not computable. */
+  shift: Decimal | null;
+}
+
+/** A chain as now known: what changed above its values since they were certified. */
+export interface ChainNow {
+  /** The chain with successors in their predecessors' places; as used where reading it so closes a circle. */
+  closure: Closure;
+  /** Of the closure so read, local parts frozen. */
+  numbers: ChainNumbers;
+  fates: Fates;
+  moves: Moves;
+  /** The focus as its references stand now. */
+  focus: Move;
+  replaced: ReplacedValue[];
+}
+
+/**
+ * Reads a chain as now known: in force on the day, as known on the knowledge day.
+ * @param closure the chain as certified
+ * @returns null where the focus stands and no certificate above it was superseded or withdrawn
+ */
+export async function chainNow(
+  store: ChainStore,
+  closure: Closure,
+  focus: StoredValue,
+  question: Question,
+): Promise<ChainNow | null> {
+  const found = await withSuccessors(store, closure, focus, question);
+  if (found.fates.size === 0 && !found.ownEnd) return null;
+  const moves = new Moves(found.closure.values, found.fates);
+  const redirected = redirectedClosure(found.closure, focus.id, found.fates);
+  const now = redirected ?? closure;
+  const numbers = chainNumbers(now, focus.uid);
+  const because = found.ownEnd ?? (redirected ? null : CIRCLE);
+  return {
+    closure: now,
+    numbers,
+    fates: found.fates,
+    moves,
+    focus: because ? { shift: null, because, isTouched: true } : moves.of(focus),
+    replaced: replacedValues(found.closure, now, numbers, found.fates),
+  };
+}
+
+interface Successors {
+  closure: Closure;
+  fates: Map<number, Fate>;
+  /** Why the focus itself is lost. */
+  ownEnd: string | null;
+}
+
+/** The chain, the successors of its values, all those lean on, and the successors of these in turn. */
+async function withSuccessors(
+  store: ChainStore,
+  closure: Closure,
+  focus: StoredValue,
+  question: Question,
+): Promise<Successors> {
+  const fates = new Map<number, Fate>();
+  let ownEnd: string | null = null;
+  const seen = new Set<number>();
+  let reached = closure;
+  for (;;) {
+    const fresh = reached.values.filter((value) => !seen.has(value.id));
+    if (fresh.length === 0) return { closure: reached, fates, ownEnd };
+    const dossiers = await store.standards(fresh.map((value) => value.standardId));
+    for (const value of fresh) {
+      seen.add(value.id);
+      const fate = fateOf(value, dossiers.get(value.standardId)!, question);
+      // The focus is what is asked about: it gives way to nothing, but may be lost itself.
+      if (value.id !== focus.id && fate.kind !== 'stands') fates.set(value.id, fate);
+      else if (fate.kind === 'lost') ownEnd = fate.because;
+    }
+    const successors = [...fates.values()].flatMap((fate) => (fate.kind === 'replaced' ? [fate.byId] : []));
+    if (successors.every((id) => seen.has(id))) return { closure: reached, fates, ownEnd };
+    reached = await store.closure([focus.id, ...successors]);
+  }
+}
+
+/**
+ * The values whose place was taken, or that are lost, where the chain as now known met them: each with what it brings
+ * to the focus over every link that leaned on it. Their shifts sum to the focus's.
+ */
+function replacedValues(all: Closure, now: Closure, numbers: ChainNumbers, fates: Fates): ReplacedValue[] {
+  const byId = new Map(all.values.map((value) => [value.id, value]));
+  const gains = numbers.propagation.sensitivities;
+  const found = new Map<number, ReplacedValue>();
+  for (const { id } of now.values.toReversed()) {
+    const child = byId.get(id)!;
+    for (const link of child.parents) {
+      const fate = fates.get(link.parentId);
+      if (!fate || link.role !== 'reference') continue;
+      const value = byId.get(link.parentId)!;
+      const by = fate.kind === 'replaced' ? byId.get(standsFor(link, fates))! : null;
+      const brought = by ? broughtOver(link, value, by, gains[child.uid] ?? 0) : null;
+      const earlier = found.get(value.id);
+      const sum = earlier ? earlier.shift && brought && earlier.shift.plus(brought) : brought;
+      found.set(value.id, { value, by, shift: sum });
+    }
+  }
+  return [...found.values()];
+}
+
+function broughtOver(link: StoredLink, value: StoredValue, by: StoredValue, gain: number): Decimal {
+  if (link.usedAs === 'class limit') return new Decimal(0);
+  return difference(value, by).times(link.sensitivity).times(gain);
+}
