@@ -43,6 +43,7 @@ export const CLAUSES: Readonly<Record<string, readonly Clause[]>> = {
   'B-20': memory('4; 5', D_28),
   'B-21': memory('VIM 2.40 note 1; GUM 5.2', VIM, GUM),
   'B-22': memory('GUM 4.3.3', GUM, P14),
+  'B-24': memory('effective value: certificate with the notices since', 'Notices of the CCM on the mass scale'),
   'B-26': memory('best measurement capability', P14),
   'B-27': memory('5.3; 8.1', ISO_17025),
   'B-28': memory('GUM 7.2.6', P14, GUM),
@@ -54,6 +55,7 @@ export const CLAUSES: Readonly<Record<string, readonly Clause[]>> = {
   'B-46': memory('VIM 2.40 note 1; GUM 5.2', VIM, GUM),
   'B-47': memory('critical parameter above 25 %', 'NIST GMP 11'),
   'B-48': memory('5.2', GUM),
+  'B-50': memory('scale version of each value', 'Notices of the CCM on the mass scale'),
   'B-81': memory('6.4.11', ISO_17025),
   'X-01': practice('a question of our own: common practice, no source'),
 };

@@ -151,6 +151,8 @@ export function linkFacts(changes: Partial<LinkFacts> = {}): LinkFacts {
       },
     ],
     otherValues: [],
+    notices: [],
+    scaleMap: { notices: [], shift: 0, u: 0 },
     ...changes,
   };
 }

@@ -181,6 +181,26 @@ export interface OtherValueFacts extends DatesFacts {
   ends: EndFacts[];
 }
 
+/** A notice in force when a value was used, that the value's certificate leaves out. Grams, at the value used. */
+export interface NoticeFacts {
+  number: string;
+  title: string;
+  effectiveOn: string;
+  madeKnownOn: string;
+  shift: number;
+  /** Standard uncertainty. */
+  u: number;
+}
+
+/** The notices that take one version of the mass scale to another, and what they bring to the value used, grams. */
+export interface ScaleMapFacts {
+  /** Numbers, one after the other; none where the scale is the same. */
+  notices: string[];
+  shift: number;
+  /** Standard uncertainty. */
+  u: number;
+}
+
 /** A value and one value it leaned on. */
 export interface LinkFacts {
   child: ValueFacts;
@@ -199,6 +219,10 @@ export interface LinkFacts {
   /** Rows of `programme` by the child's issuer for the parent's standard. */
   programmes: ProgrammeFacts[];
   otherValues: OtherValueFacts[];
+  /** Notices in force at use and not counted above: what the child had to include. */
+  notices: NoticeFacts[];
+  /** From the parent's scale version to the child's, or back; null: none on record, or a scale is not stated. */
+  scaleMap: ScaleMapFacts | null;
 }
 
 /** The day asked about, the knowledge day, and the network's policy. */

@@ -14,6 +14,7 @@ import { changeSinceLast } from './b-19-change-since-last.ts';
 import { massAndConventional } from './b-20-mass-and-conventional.ts';
 import { uCoversWhatIsCarried } from './b-21-u-covers-what-is-carried.ts';
 import { uOfReference } from './b-22-u-of-reference.ts';
+import { noticesIncluded } from './b-24-notices-included.ts';
 import { uNotBelowBestCapability } from './b-26-best-capability.ts';
 import { withinScope } from './b-27-within-scope.ts';
 import { statementOfU } from './b-28-statement-of-u.ts';
@@ -25,13 +26,14 @@ import { providerAccepted } from './b-45-provider-accepted.ts';
 import { chainVariance } from './b-46-chain-variance.ts';
 import { criticalParameter } from './b-47-critical-parameter.ts';
 import { sharedAncestor } from './b-48-shared-ancestor.ts';
+import { scaleVersionConstant } from './b-50-scale-version.ts';
 import { newestValueUsed } from './b-81-newest-value-used.ts';
 import { clauseOn } from './clauses.ts';
 import type { Rule } from './rule.ts';
 import { duplicatesExchanged } from './x-01-duplicates-exchanged.ts';
 
 /** Part of every question and stored with every audit: changes with any rule, sentence or clause. */
-export const RULE_SET_VERSION = '2026-12-01.1';
+export const RULE_SET_VERSION = '2026-12-01.2';
 
 /** Every rule, in the order of the list. */
 export const RULES: readonly Rule[] = [
@@ -49,6 +51,7 @@ export const RULES: readonly Rule[] = [
   massAndConventional,
   uCoversWhatIsCarried,
   uOfReference,
+  noticesIncluded,
   uNotBelowBestCapability,
   withinScope,
   statementOfU,
@@ -60,6 +63,7 @@ export const RULES: readonly Rule[] = [
   chainVariance,
   criticalParameter,
   sharedAncestor,
+  scaleVersionConstant,
   newestValueUsed,
   duplicatesExchanged,
 ];

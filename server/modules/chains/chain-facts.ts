@@ -12,7 +12,9 @@ import type {
 import { endOfDay, stateAt } from '#shared/state-at.ts';
 import { assertedOn } from './asserted-on.ts';
 import type { ChainNumbers } from './chain-numbers.ts';
+import type { Notice } from '#shared/notices/notice.ts';
 import { historyBefore } from './history.ts';
+import { linkKey, scaleMapOf, type NoticesOfLinks } from './notice-facts.ts';
 import type {
   LaboratoryDossier,
   StandardDossier,
@@ -30,6 +32,9 @@ export interface FactParts {
   numbers: ChainNumbers;
   /** Values of the closure by id. */
   byId: Map<number, StoredValue>;
+  /** Every notice recorded, and those that each link left out. */
+  notices: readonly Notice[];
+  noticesOfLinks: NoticesOfLinks;
 }
 
 /** Assembles what the value rules need to know of one value, as the register knew it on the knowledge day. */
@@ -109,6 +114,13 @@ export function linkFacts(
       .filter((row) => row.recordedAt <= horizon && row.calibrationId !== parent.calibrationId)
       .filter((row) => row.quantity === parent.quantity && row.medium === parent.medium)
       .map((row) => otherValueFacts(row, own?.epochN, dossier, horizon)),
+    notices: parts.noticesOfLinks.get(linkKey(child, link)) ?? [],
+    scaleMap: scaleMapOf(
+      parts.byId.get(link.parentId)!,
+      child.scaleVersion,
+      parts.notices,
+      parts.question.known,
+    ),
   };
 }
 

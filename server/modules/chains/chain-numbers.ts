@@ -23,8 +23,10 @@ export interface Carried {
 /** Every number a chain needs, from one compiled network. */
 export interface ChainNumbers {
   propagation: Propagation;
-  /** Variance of a value as computed now, g2; null where something above it states no U. */
+  /** Variance of a value as computed now, notices included, g2; null where something above it states no U. */
   variance(uid: string): number | null;
+  /** The same without notices, as whoever certified it could compute it. */
+  varianceAsCertified(uid: string): number | null;
   carried(value: StoredValue): Carried;
   /** Covariance of two values of the closure, g2; null where it hangs on an unknown part. */
   covariance(a: string, b: string): number | null;
@@ -33,23 +35,28 @@ export interface ChainNumbers {
 /**
  * Works out the numbers of a chain.
  * @param closure the focus, the earlier values its rules compare with, and all they lean on
+ * @param noticed the same with the notices in force (`withNotices`): what a certificate carries is judged without
+ * them, since it is not re-issued; flows and u now are those with them
  */
-export function chainNumbers(closure: Closure, focusUid: string): ChainNumbers {
+export function chainNumbers(
+  closure: Closure,
+  focusUid: string,
+  noticed: Closure = closure,
+): ChainNumbers {
   const network = networkOf(closure);
   const exact = compileNetwork(network);
-  const varianceNow = variancesByUid(network, exact);
+  const certified = variancesByUid(network, exact);
+  const { compiledNow, varianceNow } = numbersNow(closure, noticed, exact, certified);
   const floor = withoutUnknowns(network);
-  const varianceFloor = floor === network ? varianceNow : variancesByUid(floor, compileNetwork(floor));
+  const varianceFloor = floor === network ? certified : variancesByUid(floor, compileNetwork(floor));
   const ancestors = ancestorSets(closure.values);
   const byId = new Map(closure.values.map((value) => [value.id, value]));
   const localVariance = localVariances(closure);
-  const variance = (uid: string) => {
-    const found = varianceNow.get(uid);
-    return found === undefined || !Number.isFinite(found) ? null : found;
-  };
+  const variance = (uid: string) => finite(certified.get(uid));
   return {
-    propagation: propagate(exact, focusUid),
-    variance,
+    propagation: propagate(compiledNow, focusUid),
+    variance: (uid) => finite(varianceNow.get(uid)),
+    varianceAsCertified: variance,
     covariance: (a, b) => knownCovariance(exact, a, b),
     carried: (value) => {
       const missing = [...ancestors.get(value.id)!]
@@ -65,6 +72,23 @@ export function chainNumbers(closure: Closure, focusUid: string): ChainNumbers {
       };
     },
   };
+}
+
+/** A chain that no notice touches is compiled once. */
+function numbersNow(
+  closure: Closure,
+  noticed: Closure,
+  exact: CompiledNetwork,
+  certified: Map<string, number>,
+): { compiledNow: CompiledNetwork; varianceNow: Map<string, number> } {
+  if (noticed === closure) return { compiledNow: exact, varianceNow: certified };
+  const network = networkOf(noticed);
+  const compiledNow = compileNetwork(network);
+  return { compiledNow, varianceNow: variancesByUid(network, compiledNow) };
+}
+
+function finite(variance: number | undefined): number | null {
+  return variance === undefined || !Number.isFinite(variance) ? null : variance;
 }
 
 function variancesByUid(network: Network, compiled: CompiledNetwork): Map<string, number> {

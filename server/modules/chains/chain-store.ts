@@ -1,7 +1,9 @@
 import type { Sequelize } from 'sequelize';
 import { readRow, readRows } from '#server/db/read.ts';
 import { ancestorIds, storedGroups, storedSources, storedValues } from './closure.queries.ts';
+import type { Notice } from '#shared/notices/notice.ts';
 import { laboratoryDossiers, standardDossiers } from './dossier.queries.ts';
+import { isNoticeSince, recordedNotices } from './notices.queries.ts';
 import type { LaboratoryDossier, StandardDossier, StoredGroup, StoredSource, StoredValue } from './stored.ts';
 
 /** Beyond this many values the memory is emptied and filled anew by what is asked: about 2 kB each. */
@@ -41,6 +43,7 @@ export class ChainStore {
   readonly #groups = new Map<number, StoredGroup>();
   readonly #standards = new Map<string, StandardDossier>();
   readonly #laboratories = new Map<string, LaboratoryDossier>();
+  #notices: readonly Notice[] = [];
   #seq = -1;
   #catchingUp: Promise<void> | null = null;
 
@@ -51,6 +54,11 @@ export class ChainStore {
   /** The act up to which the memory is current. */
   get seq(): number {
     return this.#seq;
+  }
+
+  /** Every notice recorded by now, whatever its days. */
+  get notices(): readonly Notice[] {
+    return this.#notices;
   }
 
   /** Brings the memory up to the newest act. Callers that arrive together share one look. */
@@ -127,6 +135,9 @@ export class ChainStore {
     const head = await readRow<{ seq: number | null }>(this.#database, 'SELECT MAX(seq) AS seq FROM act');
     const seq = head?.seq ?? 0;
     if (seq === this.#seq) return;
+    if (this.#seq === -1 || (await isNoticeSince(this.#database, this.#seq))) {
+      this.#notices = await recordedNotices(this.#database);
+    }
     if (this.#seq === -1) await this.#readSmallRegister();
     else await this.#forgetTouched();
     this.#seq = seq;

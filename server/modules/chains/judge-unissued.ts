@@ -7,6 +7,7 @@ import { chainNumbers } from './chain-numbers.ts';
 import type { ChainStore, Closure } from './chain-store.ts';
 import { storedSources } from './closure.queries.ts';
 import { historyBefore } from './history.ts';
+import { noticesOfLinks } from './notice-facts.ts';
 import { storeOf } from './store-of.ts';
 import type { StandardDossier, StoredValue } from './stored.ts';
 
@@ -70,6 +71,8 @@ async function partsFor(
     standards: withHistory(known, values),
     numbers: chainNumbers(closure, values[0]!.uid),
     byId: new Map(closure.values.map((value) => [value.id, value])),
+    notices: store.notices,
+    noticesOfLinks: noticesOfLinks(closure, store.notices, question.known),
   };
 }
 

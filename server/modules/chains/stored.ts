@@ -102,6 +102,8 @@ export interface StoredSource {
   registryNo: string | null;
   laboratoryId: string | null;
   determinedOn: string | null;
+  /** A notice: its uncertainty is for everybody to read. */
+  isPublished?: true;
 }
 
 /** Correlated local parts of one calibration. */
