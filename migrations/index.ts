@@ -5,6 +5,7 @@ import { standards } from './2026-12-01-04-standards.ts';
 import { calibrations } from './2026-12-01-05-calibrations.ts';
 import { find } from './2026-12-01-06-find.ts';
 import { notices } from './2026-12-01-07-notices.ts';
+import { dryRuns } from './2026-12-01-08-dry-runs.ts';
 import type { Migration } from './migration.ts';
 
 /** In the order they run. Handed to the migrator as an array: a folder scan finds nothing in the bundled server. */
@@ -16,4 +17,5 @@ export const migrations: readonly Migration[] = [
   calibrations,
   find,
   notices,
+  dryRuns,
 ];

@@ -7,6 +7,7 @@ import { identityRoutes } from '#server/modules/identity/index.ts';
 import { networkRoutes } from '#server/modules/network/index.ts';
 import { calibrationRoutes } from '#server/modules/calibrations/index.ts';
 import { standardRoutes } from '#server/modules/standards/index.ts';
+import { dryRunRoutes } from '#server/modules/dry-runs/index.ts';
 import type { Route } from '#server/http/route.ts';
 
 /** Every route of the product. A test walks this table as every kind of person. */
@@ -19,5 +20,6 @@ export const routes: readonly Route[] = [
   ...calibrationRoutes,
   ...chainRoutes,
   ...downstreamRoutes,
+  ...dryRunRoutes,
   ...deskRoutes,
 ];

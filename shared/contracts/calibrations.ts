@@ -8,6 +8,7 @@ import {
   Day,
   DecimalString,
   Deviation,
+  ExpandedU,
   Id,
   LaboratoryName,
   MassUnit,
@@ -125,11 +126,51 @@ export const CalibrationResponse = z.object({
 });
 export type CalibrationResponse = z.infer<typeof CalibrationResponse>;
 
-/** POST /api/calibrations/:revisionId/withdraw: a CalibrationResponse. */
+const SignaturePassword = z.string().min(1, 'Type your password again: it is your signature').max(200);
+
+/** Why and from when a calibration is withdrawn. */
 export const WithdrawBody = z.strictObject({
   reason: z.string().trim().min(3, 'Say why it is withdrawn').max(300),
   effectiveOn: Day,
 });
+/** POST /api/calibrations/:revisionId/withdraw: the same under the signatory's password. */
+export const SignedWithdrawBody = WithdrawBody.extend({ password: SignaturePassword });
+/** The sheet as it stands afterwards, and the number of the act. */
+export const WithdrawnResponse = CalibrationResponse.extend({ actSeq: z.number().int() });
+export type WithdrawnResponse = z.infer<typeof WithdrawnResponse>;
+
+/**
+ * POST /api/calibrations/:revisionId/correct, 201: a further revision that differs in the lines named; every other
+ * line is issued again as it stands. Grams.
+ */
+export const CorrectBody = z.strictObject({
+  reason: z
+    .string()
+    .trim()
+    .min(3, 'Say what the amendment changes and why (ISO/IEC 17025:2017, 7.8.8)')
+    .max(300),
+  /** Day of the amended certificate, and the day from which it takes the place of the one before. */
+  issuedOn: Day,
+  effectiveOn: Day,
+  lines: z
+    .array(
+      z
+        .strictObject({ valueUid: Id, deviation: Deviation.optional(), expandedU: ExpandedU.optional() })
+        .refine((line) => line.deviation !== undefined || line.expandedU !== undefined, {
+          path: ['deviation'],
+          error: 'Give the corrected deviation, the corrected U, or both',
+        }),
+    )
+    .min(1, 'Name at least one result to correct')
+    .max(200),
+  password: SignaturePassword,
+});
+export const CorrectedResponse = z.object({
+  revisionId: Id,
+  valueUids: z.array(Id),
+  actSeq: z.number().int(),
+});
+export type CorrectedResponse = z.infer<typeof CorrectedResponse>;
 export const IssuedResponse = z.object({ revisionId: Id, valueUids: z.array(Id) });
 export type IssuedResponse = z.infer<typeof IssuedResponse>;
 

@@ -206,7 +206,11 @@ describe('GET /api/calibrations/:revisionId', () => {
 });
 
 describe('POST /api/calibrations/:revisionId/withdraw', () => {
-  const body = { reason: 'The balance was found faulty', effectiveOn: '2024-02-01' };
+  const body = {
+    reason: 'The balance was found faulty',
+    effectiveOn: '2024-02-01',
+    password: 'a long test password',
+  };
 
   it('is refused without sign-in, malformed, to those who do not sign, and to strangers', async () => {
     const weight = await makeStandard(app, holder.id);
@@ -218,6 +222,8 @@ describe('POST /api/calibrations/:revisionId/withdraw', () => {
     expect((await holder.agent.post(path).send(body)).status).toBe(403);
     expect((await registrar.post(path).send(body)).status).toBe(403);
     expect((await stranger.signatory.post(path).send(body)).status).toBe(404);
+    const unsigned = await holder.signatory.post(path).send({ ...body, password: 'not mine' });
+    expect([unsigned.status, Object.keys(unsigned.body.fields)]).toEqual([422, ['password']]);
     const early = await holder.signatory.post(path).send({ ...body, effectiveOn: '2023-12-31' });
     expect([early.status, Object.keys(early.body.fields)]).toEqual([422, ['effectiveOn']]);
   });
@@ -231,6 +237,7 @@ describe('POST /api/calibrations/:revisionId/withdraw', () => {
     const reply = await holder.signatory.post(path).send(body);
     expect(reply.status).toBe(200);
     expect(reply.body).toMatchObject({
+      actSeq: expect.any(Number),
       calibration: { state: 'withdrawn' },
       lines: [{ state: 'withdrawn', stateSince: '2024-02-01' }],
     });
@@ -243,6 +250,59 @@ describe('POST /api/calibrations/:revisionId/withdraw', () => {
       "SELECT seq FROM act WHERE kind = 'calibration.withdraw' AND subject_id = :calibrationId",
       { calibrationId },
     );
-    expect(act).not.toBeNull();
+    expect(act).toEqual({ seq: reply.body.actSeq });
+  });
+});
+
+describe('POST /api/calibrations/:revisionId/correct', () => {
+  const head = {
+    reason: 'The sign was copied wrongly',
+    issuedOn: '2024-03-01',
+    effectiveOn: '2024-03-01',
+    password: 'a long test password',
+  };
+
+  it('issues the next revision with the line corrected and every other line as it stood', async () => {
+    const [one, two] = [await makeStandard(app, holder.id), await makeStandard(app, holder.id)];
+    const { revisionId, valueUids } = await makeCalibration(app, holder.id, '2024-01-10', [
+      lineOf(one.id, { deviation: '0.00012' }),
+      lineOf(two.id, { deviation: '0.00034' }),
+    ]);
+    const path = `/api/calibrations/${revisionId}/correct`;
+    const lines = [{ valueUid: valueUids[0]!, deviation: '-0.0001203', expandedU: '0.0009' }];
+    const reply = await holder.signatory.post(path).send({ ...head, lines });
+    expect(reply.status, reply.text).toBe(201);
+    const sheet = await holder.agent.get(`/api/calibrations/${reply.body.revisionId}`);
+    expect(sheet.body.calibration).toMatchObject({ revisionN: 2, reason: head.reason, state: 'in force' });
+    expect(sheet.body.lines).toMatchObject([
+      { deviation: '-0.0001203', expandedU: '0.0009', reportedDecimals: 4 },
+      { deviation: '0.00034' },
+    ]);
+    const act = await readRow(app.database, 'SELECT kind FROM act WHERE seq = :seq', {
+      seq: reply.body.actSeq,
+    });
+    expect(act).toEqual({ kind: 'calibration.revise' });
+    // The revision before it is no longer the one that stands.
+    const again = await holder.signatory.post(path).send({ ...head, lines });
+    expect(again.status).toBe(422);
+  });
+
+  it('is refused without the password, for a value of another certificate, and where nothing is corrected', async () => {
+    const weight = await makeStandard(app, holder.id);
+    const { revisionId, valueUids } = await makeCalibration(app, holder.id, '2024-01-10', [
+      lineOf(weight.id),
+    ]);
+    const path = `/api/calibrations/${revisionId}/correct`;
+    const lines = [{ valueUid: valueUids[0]!, deviation: '0.0002' }];
+    expect((await app.request.post(path).send({ ...head, lines })).status).toBe(401);
+    expect((await holder.agent.post(path).send({ ...head, lines })).status).toBe(403);
+    expect((await stranger.signatory.post(path).send({ ...head, lines })).status).toBe(404);
+    const unsigned = await holder.signatory.post(path).send({ ...head, lines, password: 'not mine' });
+    expect([unsigned.status, Object.keys(unsigned.body.fields)]).toEqual([422, ['password']]);
+    const foreign = [{ valueUid: revisionId, deviation: '0.0002' }];
+    const other = await holder.signatory.post(path).send({ ...head, lines: foreign });
+    expect([other.status, Object.keys(other.body.fields)]).toEqual([422, ['lines.0.valueUid']]);
+    const nothing = await holder.signatory.post(path).send({ ...head, lines: [{ valueUid: valueUids[0]! }] });
+    expect(nothing.status).toBe(400);
   });
 });

@@ -23,6 +23,17 @@ export const withdrawCalibrationPermission = permission<CalibrationSubject>(
   (user, { registeredById }) => worksIn(user, registeredById, 'signatory'),
 );
 
+/** A calibration with whether this person may sign for who entered it today. */
+export interface SignedCalibrationSubject extends CalibrationSubject {
+  isAuthorised: boolean;
+}
+
+/** Correcting: issuing a further revision, so as issuing (ISO/IEC 17025:2017, 6.2.6). */
+export const correctCalibrationPermission = permission<SignedCalibrationSubject>(
+  'calibration:correct',
+  (user, { registeredById, isAuthorised }) => isAuthorised && worksIn(user, registeredById, 'signatory'),
+);
+
 /** Of a laboratory: beginning drafts for it and looking up references. */
 export const draftCalibration = permission<{ laboratoryId: string }>(
   'calibration:draft',

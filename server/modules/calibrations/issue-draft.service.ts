@@ -1,19 +1,12 @@
 import type { OpenPoint } from '#shared/contracts/drafts.ts';
 import type { FieldProblem } from '#shared/errors.ts';
 import { inAct } from '#server/db/act.ts';
-import { AppError, fieldError } from '#server/http/app-error.ts';
-import type { Clock } from '#server/http/context.ts';
-import { FailureLimit } from '#server/http/rate-limit.ts';
+import { AppError } from '#server/http/app-error.ts';
 import type { SignedInContext } from '#server/http/route.ts';
-import { verifyPassword } from '#server/modules/identity/index.ts';
+import { confirmSignature } from './confirm-signature.ts';
 import { isBlocking, judgeDraft } from './draft-points.service.ts';
 import { closeDraft, lockedDraft, refuseClosed } from './draft-store.ts';
 import { writeCalibration, type IssuedCalibration } from './issue-calibration.service.ts';
-
-const MAXIMUM_FAILURES = 10;
-const WINDOW_MILLISECONDS = 15 * 60 * 1000;
-
-const limits = new WeakMap<Clock, FailureLimit>();
 
 /**
  * Issues a draft under the signatory's hand: password again, the version they read, every point settled. The
@@ -26,7 +19,7 @@ export async function issueDraft(
   { draftId, laboratoryId }: { draftId: string; laboratoryId: string },
   { version, password }: { version: number; password: string },
 ): Promise<IssuedCalibration> {
-  await confirmSignature(context, password);
+  await confirmSignature(context, password, 'Nothing was issued.');
   return inAct(context, { kind: 'calibration.issue', laboratoryId }, async (act) => {
     const draft = await lockedDraft(context, draftId, version);
     refuseClosed(draft);
@@ -41,29 +34,6 @@ export async function issueDraft(
     });
     return issued;
   });
-}
-
-/** The password is the signature: it is asked for again, and guessing is counted. */
-async function confirmSignature(context: SignedInContext, password: string): Promise<void> {
-  const { accountId, email } = context.user;
-  const limit = limitOf(context.clock);
-  limit.check(accountId);
-  const person = await verifyPassword(context.database, context.clock, email, password);
-  if (person?.accountId === accountId) {
-    limit.clear(accountId);
-    return;
-  }
-  limit.note(accountId);
-  throw fieldError('password', {
-    message: 'This is not your password. Nothing was issued.',
-    expected: 'the password you sign in with',
-  });
-}
-
-function limitOf(clock: Clock): FailureLimit {
-  const known = limits.get(clock) ?? new FailureLimit(clock, MAXIMUM_FAILURES, WINDOW_MILLISECONDS);
-  limits.set(clock, known);
-  return known;
 }
 
 function refusePoints(points: readonly OpenPoint[]): never {

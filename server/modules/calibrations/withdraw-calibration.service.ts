@@ -25,7 +25,7 @@ export async function withdrawCalibration(
   context: Context,
   revisionId: string,
   { reason, effectiveOn }: z.infer<typeof WithdrawBody>,
-): Promise<{ revisionId: string; valueUids: string[] }> {
+): Promise<{ revisionId: string; valueUids: string[]; actSeq: number }> {
   const { registeredById } = await standingOf(context, revisionId);
   const description = { kind: 'calibration.withdraw', laboratoryId: registeredById, reason } as const;
   return inAct(context, description, async (act) => {
@@ -54,7 +54,7 @@ export async function withdrawCalibration(
       before: { revisionId, state: 'in force' },
       after: { revisionId, valueUids, state: 'withdrawn', effectiveOn, reason },
     });
-    return { revisionId, valueUids };
+    return { revisionId, valueUids, actSeq: act.seq };
   });
 }
 

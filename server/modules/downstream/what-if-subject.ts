@@ -13,7 +13,7 @@ import { revisionSubject, valueSubject } from './subject.queries.ts';
  */
 export async function whatIfSubject(
   context: SignedInContext,
-  input: WhatIfInput,
+  input: Pick<WhatIfInput, 'changes'>,
 ): Promise<DownstreamSubject> {
   const subject: DownstreamSubject = { ids: [], view: 'full' };
   for (const [at, change] of input.changes.entries()) {

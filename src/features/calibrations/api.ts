@@ -9,9 +9,12 @@ import type { z } from 'zod';
 import {
   CalibrationListResponse,
   CalibrationResponse,
+  CorrectedResponse,
   DocumentResponse,
   IssuedResponse,
-  type WithdrawBody,
+  WithdrawnResponse,
+  type CorrectBody,
+  type SignedWithdrawBody,
 } from '#shared/contracts/calibrations.ts';
 import {
   DraftResponse,
@@ -135,15 +138,26 @@ export function useIssueDraft(
   });
 }
 
-/** Withdraws a calibration. Everything that shows values is read anew. */
-export function useWithdraw(revisionId: string): Mutation<CalibrationResponse, z.infer<typeof WithdrawBody>> {
+/** Withdraws a calibration under the signatory's password. Everything that shows values is read anew. */
+export function useWithdraw(
+  revisionId: string,
+): Mutation<WithdrawnResponse, z.infer<typeof SignedWithdrawBody>> {
   const queries = useQueryClient();
   return useMutation({
-    mutationFn: (body) => post(`/api/calibrations/${revisionId}/withdraw`, body, CalibrationResponse),
-    onSuccess: (calibration) => {
+    mutationFn: (body) => post(`/api/calibrations/${revisionId}/withdraw`, body, WithdrawnResponse),
+    onSuccess: ({ actSeq: _actSeq, ...calibration }) => {
       queries.setQueryData(calibrationQuery(revisionId).queryKey, calibration);
       void queries.invalidateQueries();
     },
+  });
+}
+
+/** Issues the next revision with some results corrected. Everything that shows values is read anew. */
+export function useCorrect(revisionId: string): Mutation<CorrectedResponse, z.infer<typeof CorrectBody>> {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (body) => post(`/api/calibrations/${revisionId}/correct`, body, CorrectedResponse),
+    onSuccess: () => void queries.invalidateQueries(),
   });
 }
 

@@ -108,7 +108,7 @@ export async function makeScene(app: TestApp): Promise<Scene> {
 export async function looseCalibration({
   app,
   home,
-}: Scene): Promise<{ revisionId: string; calibrationId: string }> {
+}: Scene): Promise<{ revisionId: string; calibrationId: string; valueUids: string[] }> {
   const standard = await makeStandard(app, home.id);
   return makeCalibration(app, home.id, '2024-07-01', [lineOf(standard.id)]);
 }
@@ -142,4 +142,20 @@ export async function makeDraft(scene: Scene): Promise<{ id: string; version: nu
   const reply = await scene.agent('metrologist').post('/api/drafts').send(body);
   if (reply.status !== 201) throw new Error(`The draft was not begun: ${reply.text}`);
   return { id: reply.body.id, version: reply.body.version, content: reply.body.content };
+}
+
+/** A dry run to keep for home: what if its weight were heavier. */
+export function dryRunOf({ home, valueUid }: Scene): object {
+  return {
+    laboratoryId: home.id,
+    name: 'A heavier weight',
+    question: { changes: [{ kind: 'shift', valueUid, shift: '0.0001' }] },
+  };
+}
+
+/** That dry run, kept by home's metrologist. */
+export async function makeDryRun(scene: Scene): Promise<string> {
+  const reply = await scene.agent('metrologist').post('/api/dry-runs').send(dryRunOf(scene));
+  if (reply.status !== 201) throw new Error(`The dry run was not kept: ${reply.text}`);
+  return reply.body.id;
 }

@@ -1,7 +1,16 @@
 import { randomUUID } from 'node:crypto';
 import { makeStandard } from '#tests/support/calibration-factories.ts';
 import { freeRegistryNo } from '#tests/support/factories.ts';
-import { fullSheet, looseCalibration, makeDraft, WALKERS, type Scene, type Walker } from './scene.ts';
+import {
+  dryRunOf,
+  fullSheet,
+  looseCalibration,
+  makeDraft,
+  makeDryRun,
+  WALKERS,
+  type Scene,
+  type Walker,
+} from './scene.ts';
 
 export interface WalkRequest {
   path: string;
@@ -171,6 +180,38 @@ export const WALK: Readonly<Record<string, WalkRow>> = {
     ok: 200,
     otherwise: 404,
   },
+  'POST /api/what-if/named': {
+    request: ({ valueUid }) => ({
+      path: '/api/what-if/named',
+      body: { changes: [{ kind: 'shift', valueUid, shift: '0.0001' }] },
+    }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  // dry runs
+  'GET /api/dry-runs': { request: fixed('/api/dry-runs'), may: SIGNED_IN, ok: 200, otherwise: 403 },
+  'POST /api/dry-runs': {
+    request: (scene) => ({ path: '/api/dry-runs', body: dryRunOf(scene) }),
+    may: [...WRITERS, 'signatory'],
+    ok: 201,
+    otherwise: 403,
+  },
+  'GET /api/dry-runs/:id': {
+    request: async (scene) => ({ path: `/api/dry-runs/${await makeDryRun(scene)}` }),
+    may: SIGNED_IN,
+    ok: 200,
+    otherwise: 403,
+  },
+  'POST /api/dry-runs/:id/notes': {
+    request: async (scene) => ({
+      path: `/api/dry-runs/${await makeDryRun(scene)}/notes`,
+      body: { kind: 'note', text: 'Asked before the reference went away' },
+    }),
+    may: [...WRITERS, 'signatory'],
+    ok: 201,
+    otherwise: 403,
+  },
   // standards
   'GET /api/standards': {
     request: fixed('/api/standards', { q: 'kg' }),
@@ -300,12 +341,31 @@ export const WALK: Readonly<Record<string, WalkRow>> = {
     otherwise: 404,
   },
   'POST /api/calibrations/:revisionId/withdraw': {
-    request: async (scene) => ({
+    request: async (scene, walker) => ({
       path: `/api/calibrations/${(await looseCalibration(scene)).revisionId}/withdraw`,
-      body: { reason: 'The balance was not level', effectiveOn: '2024-09-01' },
+      body: {
+        reason: 'The balance was not level',
+        effectiveOn: '2024-09-01',
+        password: scene.person(walker).password,
+      },
     }),
     may: ['signatory'],
     ok: 200,
+    otherwise: 'hidden',
+  },
+  'POST /api/calibrations/:revisionId/correct': {
+    request: async (scene, walker) => {
+      const { revisionId, valueUids } = await looseCalibration(scene);
+      const lines = [{ valueUid: valueUids[0], deviation: '0.00011' }];
+      const days = { issuedOn: '2024-09-01', effectiveOn: '2024-09-01' };
+      const { password } = scene.person(walker);
+      return {
+        path: `/api/calibrations/${revisionId}/correct`,
+        body: { reason: 'The sign was copied wrongly', ...days, lines, password },
+      };
+    },
+    may: ['signatory'],
+    ok: 201,
     otherwise: 'hidden',
   },
 };

@@ -1,9 +1,9 @@
 import { useState } from 'react';
-import { WithdrawBody, type CalibrationResponse } from '#shared/contracts/calibrations.ts';
+import { SignedWithdrawBody, type CalibrationResponse } from '#shared/contracts/calibrations.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Dialog } from '#src/components/ui/dialog.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
-import { DateField, Textarea } from '#src/components/ui/text-field.tsx';
+import { DateField, Textarea, TextField } from '#src/components/ui/text-field.tsx';
 import { errorAt, showFieldProblems, useZodForm } from '#src/lib/form.ts';
 import { useWithdraw } from '../api.ts';
 
@@ -13,10 +13,10 @@ interface WithdrawDialogProps {
   onClose: () => void;
 }
 
-/** Says exactly what a withdrawal does, and asks for the reason and the day. */
+/** Says exactly what a withdrawal does, and asks for the reason, the day and the signatory's password. */
 export function WithdrawDialog({ calibration, weights, onClose }: WithdrawDialogProps) {
-  const form = useZodForm(WithdrawBody, {
-    defaultValues: { reason: '', effectiveOn: new Date().toISOString().slice(0, 10) },
+  const form = useZodForm(SignedWithdrawBody, {
+    defaultValues: { reason: '', password: '', effectiveOn: new Date().toISOString().slice(0, 10) },
   });
   const withdraw = useWithdraw(calibration.revisionId);
   const [isShownAtFields, setShownAtFields] = useState(false);
@@ -59,6 +59,13 @@ export function WithdrawDialog({ calibration, weights, onClose }: WithdrawDialog
           label="No longer in force from"
           error={errorAt(errors, 'effectiveOn')}
           {...form.register('effectiveOn')}
+        />
+        <TextField
+          label="Your password again: it is your signature"
+          type="password"
+          autoComplete="current-password"
+          error={errorAt(errors, 'password')}
+          {...form.register('password')}
         />
       </form>
       {withdraw.error && !isShownAtFields && <ErrorNotice error={withdraw.error} />}

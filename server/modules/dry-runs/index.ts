@@ -1,0 +1,1 @@
+export { dryRunRoutes } from './dry-runs.routes.ts';
