@@ -41,12 +41,20 @@ export async function chainNow(
   question: Question,
 ): Promise<ChainNow | null> {
   const found = await withSuccessors(store, closure, focus, question);
-  if (found.fates.size === 0 && !found.ownEnd) return null;
+  return found.fates.size === 0 && !found.ownEnd ? null : readAsNowKnown(closure, focus, found);
+}
+
+/**
+ * The pure part: every number of the chain as now known.
+ * @param closure the chain as certified
+ * @param found what became of its values, and the chain with all successors, links as used
+ */
+export function readAsNowKnown(closure: Closure, focus: StoredValue, found: Successors): ChainNow {
   const moves = new Moves(found.closure.values, found.fates);
   const redirected = redirectedClosure(found.closure, focus.id, found.fates);
+  const because = found.ownEnd ?? (redirected ? null : CIRCLE);
   const now = redirected ?? closure;
   const numbers = chainNumbers(now, focus.uid);
-  const because = found.ownEnd ?? (redirected ? null : CIRCLE);
   return {
     closure: now,
     numbers,
@@ -57,9 +65,10 @@ export async function chainNow(
   };
 }
 
-interface Successors {
+/** What became of the values of a chain, and the chain widened by all that took their place. */
+export interface Successors {
   closure: Closure;
-  fates: Map<number, Fate>;
+  fates: Fates;
   /** Why the focus itself is lost. */
   ownEnd: string | null;
 }

@@ -1,3 +1,4 @@
+import { classLimitOf } from './class-limit.ts';
 import type { Closure } from './chain-store.ts';
 import type { Fate } from './fate.ts';
 import type { StoredLink, StoredValue } from './stored.ts';
@@ -12,7 +13,8 @@ export type Fates = ReadonlyMap<number, Fate>;
  * @returns null where reading it so closes a circle
  */
 export function redirectedClosure(closure: Closure, focusId: number, fates: Fates): Closure | null {
-  const byId = new Map(closure.values.map((value) => [value.id, redirected(value, fates)]));
+  const asUsed = new Map(closure.values.map((value) => [value.id, value]));
+  const byId = new Map(closure.values.map((value) => [value.id, redirected(value, asUsed, fates)]));
   const values = parentsFirst(byId, focusId);
   if (!values) return null;
   const sourceIds = new Set(values.flatMap((value) => value.sources.map((link) => link.sourceId)));
@@ -30,24 +32,28 @@ export function standsFor(link: StoredLink, fates: Fates): number {
   return fate?.kind === 'replaced' ? fate.byId : link.parentId;
 }
 
-function redirected(value: StoredValue, fates: Fates): StoredValue {
+function redirected(value: StoredValue, asUsed: ReadonlyMap<number, StoredValue>, fates: Fates): StoredValue {
   const isLost = fates.get(value.id)?.kind === 'lost';
   const isMoved = value.parents.some((link) => standsFor(link, fates) !== link.parentId);
   if (!isLost && !isMoved) return value;
+  const links = value.parents.map((link) => asOfSuccessor(link, asUsed.get(link.parentId)!, fates));
   return {
     ...value,
     // Out of its group too: a group's covariance would stand for the part that is unknown now.
     ...(isLost && { localU: null, groupId: null }),
-    parents: isMoved ? merged(value.parents.map((link) => asOfSuccessor(link, fates))) : value.parents,
+    parents: isMoved ? merged(links) : value.parents,
   };
 }
 
-function asOfSuccessor(link: StoredLink, fates: Fates): StoredLink {
+function asOfSuccessor(link: StoredLink, parent: StoredValue, fates: Fates): StoredLink {
   const parentId = standsFor(link, fates);
   if (parentId === link.parentId) return link;
-  // A class limit is used as such whoever certifies the weight; any other use is read as that of the new certificate.
-  if (link.usedAs === 'class limit') return { ...link, parentId };
-  return { ...link, parentId, usedDeviation: null, usedExpandedU: null, usedK: null };
+  if (link.usedAs !== 'class limit') {
+    return { ...link, parentId, usedDeviation: null, usedExpandedU: null, usedK: null };
+  }
+  // The limit stays the one that was used, whatever class the new certificate names.
+  const limit = classLimitOf(parent, link);
+  return { ...link, parentId, usedExpandedU: limit && limit.toFixed(), usedK: String(Math.sqrt(3)) };
 }
 
 /** Two revisions of one certificate may have been used: what took their place is one reference. */
