@@ -87,10 +87,10 @@ function stepsOf({ steps }: Remembered, question: Question): StepMemory {
 async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as: ChainAs): Promise<Chain> {
   const { question } = steps;
   const certified = await store.closure([focusId]);
-  const focus = certified.values.find((value) => value.id === focusId)!;
-  const now = await chainNow(store, certified, focus, question);
+  const now = await chainNow(store, certified, focusOf(certified, focusId), question);
   const isNow = as === 'now known' && now !== null;
   const closure = isNow ? now.closure : certified;
+  const focus = focusOf(closure, focusId);
   // What was done is judged over the links as used, whichever chain is drawn.
   const asUsed = isNow ? await store.closure([focusId, ...idsOf(closure)]) : certified;
   const [standards, laboratories] = await Promise.all([
@@ -140,19 +140,29 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as
   };
 }
 
+function focusOf(closure: Closure, id: number): StoredValue {
+  return closure.values.find((value) => value.id === id)!;
+}
+
 function idsOf(closure: Closure): number[] {
   return closure.values.map((value) => value.id);
 }
 
 /** The values that the steps not judged yet are compared with: their covariances are needed. */
-function earlierThan(closure: Closure, steps: StepMemory, standards: Map<string, StandardDossier>): number[] {
+export function earlierThan(
+  closure: Closure,
+  steps: StepMemory,
+  standards: Map<string, StandardDossier>,
+): number[] {
+  const horizon = endOfDay(steps.question.known);
   return closure.values.flatMap((value) => {
-    const before = steps.knows(value) ? null : historyBefore(standards.get(value.standardId)!, value);
+    const before = steps.knows(value) ? null : historyBefore(standards.get(value.standardId)!, value, horizon);
     return before ? [before.id] : [];
   });
 }
 
-function chainFacts(of: {
+/** What the rules read of one chain; its steps are assembled once in a memory. */
+export function chainFacts(of: {
   closure: Closure;
   focus: StoredValue;
   parts: FactParts;
