@@ -1,6 +1,7 @@
 import { Decimal } from '#shared/decimal.ts';
 import { maximumPermissibleError } from '#shared/engine/conformity/maximum-permissible-error.ts';
 import type { WeightClass } from '#shared/engine/conformity/r111-2004.ts';
+import { noticeEntries } from '#shared/engine/network/notice-entries.ts';
 import type { Below } from './below.ts';
 import type { GraphArrays } from './graph-arrays.ts';
 
@@ -10,11 +11,18 @@ export type GraphChange =
   | { kind: 'raise'; node: number; addedU: number }
   | { kind: 'withdraw'; nodes: readonly number[] }
   /** One effect with standard uncertainty `addedU` and a sensitivity to it for each value covered. */
-  | { kind: 'notice'; addedU: number; covered: readonly Covered[] };
+  | {
+      kind: 'notice';
+      addedU: number;
+      covered: readonly Covered[];
+      /** Day number: its shift does not pass links used by notice since, whose child used the corrected value. */
+      appliedFrom?: number;
+    };
 
 export interface Covered {
   node: number;
   shift: number;
+  /** Its mass over 1 kg. */
   sensitivity: number;
 }
 
@@ -46,6 +54,8 @@ export function effectsOf(graph: GraphArrays, found: Below, changes: readonly Gr
   const shift = new Float64Array(count);
   const addedVariance = new Float64Array(count);
   const isLost = new Uint8Array(count);
+  /** Shifts that do not pass every link, handed down already. */
+  const noticed = new Float64Array(count);
   for (const change of changes) {
     switch (change.kind) {
       case 'shift':
@@ -59,7 +69,8 @@ export function effectsOf(graph: GraphArrays, found: Below, changes: readonly Gr
         break;
       case 'notice': {
         const entries = walk.entryPoints(change.covered);
-        for (const entry of entries) shift[found.placeOf(entry.node)]! += entry.shift;
+        const shifts = entries.map((entry) => ({ node: entry.node, amount: entry.shift }));
+        add(noticed, walk.handDown(shifts, change.appliedFrom));
         const amounts = entries.map((entry) => ({
           node: entry.node,
           amount: entry.sensitivity * change.addedU,
@@ -69,6 +80,7 @@ export function effectsOf(graph: GraphArrays, found: Below, changes: readonly Gr
     }
   }
   walk.accumulate(shift);
+  add(shift, noticed);
   walk.spread(isLost);
   for (let place = 0; place < count; place += 1) if (isLost[place]) shift[place] = NaN;
   const { isBeyondLimit, leaving } = beyondLimits(walk, shift);
@@ -97,19 +109,21 @@ class Walk {
     }
   }
 
-  accumulate(amounts: Float64Array): void {
-    const { sensitivity, isClassLimit } = this.graph;
+  /** @param appliedFrom day number: nothing passes links used by notice from then on */
+  accumulate(amounts: Float64Array, appliedFrom = Infinity): void {
+    const { sensitivity, isClassLimit, isByNotice, usedEndDay } = this.graph;
     this.each((place, parent, link) => {
-      if (!isClassLimit[link] && amounts[parent] !== 0)
-        amounts[place]! += sensitivity[link]! * amounts[parent]!;
+      if (isClassLimit[link] || amounts[parent] === 0) return;
+      if (isByNotice[link] && usedEndDay[link]! >= appliedFrom) return;
+      amounts[place]! += sensitivity[link]! * amounts[parent]!;
     });
   }
 
   /** What an effect that enters at some values amounts to everywhere. */
-  handDown(entries: readonly { node: number; amount: number }[]): Float64Array {
+  handDown(entries: readonly { node: number; amount: number }[], appliedFrom?: number): Float64Array {
     const amounts = new Float64Array(this.found.nodes.length);
     for (const { node, amount } of entries) amounts[this.found.placeOf(node)]! += amount;
-    this.accumulate(amounts);
+    this.accumulate(amounts, appliedFrom);
     return amounts;
   }
 
@@ -120,20 +134,32 @@ class Walk {
     });
   }
 
-  /** Of the values covered by a notice those that inherit it from no other: there it enters, once a path. */
+  /** Where a notice enters, once a path, each for the part that enters there (`noticeEntries`). */
   entryPoints(covered: readonly Covered[]): Covered[] {
-    const isCovered = new Uint8Array(this.found.nodes.length);
-    for (const { node } of covered) isCovered[this.found.placeOf(node)] = 1;
-    const inherits = new Uint8Array(this.found.nodes.length);
-    this.each((place, parent, link) => {
-      if ((isCovered[parent] || inherits[parent]) && this.passes(link)) inherits[place] = 1;
+    const { graph, found } = this;
+    const byPlace = new Map(covered.map((one) => [found.placeOf(one.node), one]));
+    const parentsOf = (place: number) => {
+      const parents: { parent: number; sensitivity: number }[] = [];
+      for (let link = graph.firstUp[found.nodes[place]!]!; link >= 0; link = graph.nextUp[link]!) {
+        const parent = found.placeOf(graph.linkParent[link]!);
+        if (parent >= 0 && this.passes(link)) parents.push({ parent, sensitivity: graph.sensitivity[link]! });
+      }
+      return parents;
+    };
+    const own = new Map([...byPlace].map(([place, { sensitivity }]) => [place, sensitivity]));
+    return [...noticeEntries(found.nodes.keys(), parentsOf, own)].map(([place, part]) => {
+      const { node, shift, sensitivity } = byPlace.get(place)!;
+      return { node, shift: part * shift, sensitivity: part * sensitivity };
     });
-    return covered.filter(({ node }) => !inherits[this.found.placeOf(node)]);
   }
 
   passes(link: number): boolean {
     return !this.graph.isClassLimit[link] && this.graph.sensitivity[link] !== 0;
   }
+}
+
+function add(sum: Float64Array, amounts: Float64Array): void {
+  for (let place = 0; place < sum.length; place += 1) sum[place]! += amounts[place]!;
 }
 
 function addSquares(sum: Float64Array, amounts: Float64Array): void {

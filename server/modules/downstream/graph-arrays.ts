@@ -30,6 +30,8 @@ export interface GraphLinkRow {
   usedEndDay: number;
   /** Whether the child used the nominal with its class limit. */
   isClassLimit: boolean;
+  /** Whether the child used the value as corrected by notices. */
+  isByNotice?: boolean;
   /** The limit stated on such a link, for a reference without a class; grams. */
   usedExpandedU: number | null;
 }
@@ -45,7 +47,7 @@ export interface GraphEndRow {
 export const UNKNOWN_PLACE = 127;
 
 /**
- * The register's graph, or a part of it, on typed arrays: about 60 bytes a value and 29 a link. A node is a value's
+ * The register's graph, or a part of it, on typed arrays: about 60 bytes a value and 30 a link. A node is a value's
  * place in these arrays; links through references only, both ways. Rows are only ever added, as in the register.
  */
 export class GraphArrays {
@@ -84,6 +86,7 @@ export class GraphArrays {
   nextDown = new Int32Array(0);
   sensitivity = new Float64Array(0);
   isClassLimit = new Uint8Array(0);
+  isByNotice = new Uint8Array(0);
   usedBeginDay = new Int32Array(0);
   usedEndDay = new Int32Array(0);
 
@@ -149,6 +152,7 @@ export class GraphArrays {
     this.usedBeginDay[link] = row.usedBeginDay;
     this.usedEndDay[link] = row.usedEndDay;
     this.isClassLimit[link] = row.isClassLimit ? 1 : 0;
+    this.isByNotice[link] = row.isByNotice ? 1 : 0;
     if (row.isClassLimit && row.usedExpandedU !== null) this.statedLimits.set(link, row.usedExpandedU);
   }
 
@@ -217,6 +221,7 @@ export class GraphArrays {
     this.nextDown = grown(this.nextDown, length);
     this.sensitivity = grown(this.sensitivity, length);
     this.isClassLimit = grown(this.isClassLimit, length);
+    this.isByNotice = grown(this.isByNotice, length);
     this.usedBeginDay = grown(this.usedBeginDay, length);
     this.usedEndDay = grown(this.usedEndDay, length);
   }

@@ -35,6 +35,7 @@ const LINK_PARTS = [
   'TO_DAYS(l.used_end)',
   "l.used_as = 'class limit'",
   'CAST(l.used_expanded_u AS DOUBLE)',
+  "l.used_as = 'by notice'",
 ];
 
 /** One row as it comes. */
@@ -84,6 +85,7 @@ export function unpackLink({ line }: Packed): GraphLinkRow {
     usedEndDay: Number(part[4]),
     isClassLimit: part[5] === '1',
     usedExpandedU: numberOrNull(part[6]!),
+    isByNotice: part[7] === '1',
   };
 }
 

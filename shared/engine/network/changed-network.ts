@@ -1,4 +1,5 @@
 import type { Change, Notice } from './changes.ts';
+import { noticeEntries } from './notice-entries.ts';
 import type { CompiledNetwork } from './compiled-network.ts';
 import { networkFromArrays } from './network-from-arrays.ts';
 
@@ -49,17 +50,21 @@ export function changedNetwork(
   return rebuilt(net, links, notices, added);
 }
 
-/** The terms of a notice on covered values that inherit from no other covered value. */
+/** The terms of a notice where it enters, each for the part of it that enters there (`noticeEntries`). */
 export function entryPoints(net: CompiledNetwork, notice: Notice): Notice['terms'] {
-  const covered = new Set(notice.terms.map((term) => net.nodeOf(term.value)!));
-  const inherits = new Uint8Array(net.nodeCount);
-  for (const node of net.order) {
-    for (let link = net.linkStart[node]!; link < net.linkStart[node + 1]!; link += 1) {
-      const parent = net.linkParent[link]!;
-      if (net.linkSensitivity[link] !== 0 && (covered.has(parent) || inherits[parent])) inherits[node] = 1;
-    }
-  }
-  return notice.terms.filter((term) => !inherits[net.nodeOf(term.value)!]);
+  const terms = new Map(notice.terms.map((term) => [net.nodeOf(term.value)!, term]));
+  const parentsOf = (node: number) => {
+    const links = Array.from(
+      { length: net.linkStart[node + 1]! - net.linkStart[node]! },
+      (_, at) => net.linkStart[node]! + at,
+    );
+    return links.map((link) => ({ parent: net.linkParent[link]!, sensitivity: net.linkSensitivity[link]! }));
+  };
+  const own = new Map([...terms].map(([node, { sensitivity }]) => [node, sensitivity]));
+  return [...noticeEntries(net.order, parentsOf, own)].map(([node, part]) => {
+    const term = terms.get(node)!;
+    return { ...term, shift: part * term.shift, sensitivity: part * term.sensitivity };
+  });
 }
 
 /** Child, parent, sensitivity, and the class limit (negative = none). */

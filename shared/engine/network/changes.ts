@@ -5,8 +5,8 @@
  * - `withdraw`: the value is taken back without successor; what depends on it cannot be computed.
  * - `replace`: whoever leaned on `value` is read as leaning on `by`, which differs from it by `delta`
  *   (successor minus superseded); local parts stay as they were.
- * - `notice`: one shared effect on several values, each with its shift and its sensitivity to the effect. It
- *   enters at the oldest covered values only and is inherited below through links. On the links in
+ * - `notice`: one shared effect on several values, each with its shift and its sensitivity to the effect, which is not zero. It
+ *   enters at the oldest covered values, once per path (`noticeEntries`), and is inherited below through links. On the links in
  *   `alreadyApplied` the child used the corrected value: the notice's shift does not pass them, its uncertainty does.
  */
 export type Change =

@@ -19,7 +19,7 @@ export function noticeEntries<Node>(
     let total = 0;
     for (const { parent, sensitivity } of parentsOf(node)) total += sensitivity * (totals.get(parent) ?? 0);
     const wanted = own.get(node);
-    if (wanted !== undefined) {
+    if (wanted !== undefined && wanted !== 0) {
       const part = 1 - total / wanted;
       if (Math.abs(part) > SMALLEST_PART) {
         entries.set(node, part);
