@@ -1,5 +1,7 @@
 export { chainNumbers } from './chain-numbers.ts';
 export { chainOf } from './chain.service.ts';
+export { entriesOf, noticeShifts, withNotices } from './noticed-closure.ts';
+export { recordedNotices } from './notices.queries.ts';
 export type { Closure } from './chain-store.ts';
 export { chainSubject } from './chain-subject.queries.ts';
 export { readChain, type ChainSubject } from './chains.policy.ts';
