@@ -37,9 +37,12 @@ export function stateAt(
   return first ? { state: first.kind, since: first.effectiveOn } : { state: 'in force', since: null };
 }
 
-/** The last instant of a day, UTC, in the register's resolution of a microsecond. */
-export function endOfDay(day: string): string {
-  return `${day}T23:59:59.999999Z`;
+/**
+ * The last instant of a day, UTC, in the register's resolution of a microsecond. An instant stands for itself: what is
+ * asked again later, as known at that instant, is not changed by what the same day brought afterwards.
+ */
+export function endOfDay(known: string): string {
+  return known.length > 10 ? known : `${known}T23:59:59.999999Z`;
 }
 
 function byWeight(a: ValueEnd, b: ValueEnd): number {

@@ -40,9 +40,14 @@ export function judgeChain(chain: ChainFacts, steps: StepJudges = { judgeLink, j
   const checks = [
     ...links.flatMap((link) => steps.judgeLink(link, question)),
     ...chain.values.flatMap((value) => steps.judgeValue(value, question)),
-    ...checksOf(CHAIN_RULES, { type: 'chain' }, chain, question),
+    ...judgeWhole(chain),
   ];
   return { checks, links: standingsOf(chain, checks), rules: rulesInWords(question.day) };
+}
+
+/** The checks of a chain as a whole, without those of its steps. */
+export function judgeWhole(chain: ChainFacts): Check[] {
+  return checksOf(CHAIN_RULES, { type: 'chain' }, chain, chain.question);
 }
 
 /** The checks of one link: for a chain, and for a draft whose reference has just been chosen. */

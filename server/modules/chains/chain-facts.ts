@@ -142,7 +142,7 @@ function otherValueFacts(
 
 /** Values in force that the rules compare with; covariance is worked out for the one just before only. */
 function historyFacts(dossier: StandardDossier, value: StoredValue, parts: FactParts): HistoryFacts[] {
-  const previous = historyBefore(dossier, value);
+  const previous = historyBefore(dossier, value, endOfDay(parts.question.known));
   return comparable(dossier, value, parts.question).map((row) => ({
     ...resultFacts(row),
     ...datesFacts(row),

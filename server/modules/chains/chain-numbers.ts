@@ -23,6 +23,8 @@ export interface Carried {
 /** Every number a chain needs, from one compiled network. */
 export interface ChainNumbers {
   propagation: Propagation;
+  /** The same of another value of the closure. */
+  propagationOf(uid: string): Propagation;
   /** Variance of a value as computed now, notices included, g2; null where something above it states no U. */
   variance(uid: string): number | null;
   /** The same without notices, as whoever certified it could compute it. */
@@ -55,6 +57,7 @@ export function chainNumbers(
   const variance = (uid: string) => finite(certified.get(uid));
   return {
     propagation: propagate(compiledNow, focusUid),
+    propagationOf: (uid) => propagate(compiledNow, uid),
     variance: (uid) => finite(varianceNow.get(uid)),
     varianceAsCertified: variance,
     covariance: (a, b) => knownCovariance(exact, a, b),

@@ -12,10 +12,13 @@ type ContributionRow = z.infer<typeof Contribution>;
  * Where the focus's uncertainty comes from: shares of its variance by origin, largest first. Null where the
  * uncertainty is not computable.
  */
-export function contributionsOf(closure: Closure, propagation: Propagation): ContributionRow[] | null {
+export function contributionsOf(
+  closure: Closure,
+  propagation: Propagation,
+  origins: Origins = originsByKey(closure),
+): ContributionRow[] | null {
   if (propagation.standardUncertainty === null) return null;
   const total = propagation.standardUncertainty ** 2;
-  const origins = originsByKey(closure);
   return Object.entries(propagation.contributions)
     .filter(([, variance]) => variance !== 0)
     .map(([key, variance]) => ({ ...origins.get(key)!, share: total === 0 ? 0 : variance / total }))
@@ -23,8 +26,10 @@ export function contributionsOf(closure: Closure, propagation: Propagation): Con
 }
 
 type Origin = Omit<ContributionRow, 'share'>;
+export type Origins = ReadonlyMap<string, Origin>;
 
-function originsByKey(closure: Closure): Map<string, Origin> {
+/** What each key of a propagation stands for: once for every chain worked out over one closure. */
+export function originsByKey(closure: Closure): Origins {
   const usedByLimit = new Set(
     closure.values.flatMap((value) =>
       value.parents.filter((l) => l.usedAs === 'class limit').map((l) => l.parentId),

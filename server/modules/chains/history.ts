@@ -1,7 +1,14 @@
 import type { StandardDossier, StoredHistoryValue, StoredValue } from './stored.ts';
 
-/** The value of the same standard, kind, medium and epoch that was determined just before this one; null: none. */
-export function historyBefore(dossier: StandardDossier, value: StoredValue): StoredHistoryValue | null {
+/**
+ * The value of the same standard, kind, medium and epoch that was determined just before this one; null: none.
+ * @param horizon what was recorded later than this instant was not known yet: it changes no answer about the past
+ */
+export function historyBefore(
+  dossier: StandardDossier,
+  value: StoredValue,
+  horizon: string,
+): StoredHistoryValue | null {
   let before: StoredHistoryValue | null = null;
   for (const row of dossier.history) {
     const isComparable =
@@ -11,7 +18,7 @@ export function historyBefore(dossier: StandardDossier, value: StoredValue): Sto
       row.epochN === value.epochN;
     const isEarlier =
       row.performedEnd < value.performedEnd || (row.performedEnd === value.performedEnd && row.id < value.id);
-    if (isComparable && isEarlier) before = row;
+    if (isComparable && isEarlier && row.recordedAt <= horizon) before = row;
   }
   return before;
 }

@@ -1,5 +1,6 @@
 import type { Check } from '#shared/rules/judge.ts';
 import { judgeLink, judgeValue } from '#shared/rules/judge.ts';
+import { endOfDay } from '#shared/state-at.ts';
 import type { Question } from '#shared/rules/facts.ts';
 import { today, type Context } from '#server/http/context.ts';
 import { linkFacts, valueFacts, type FactParts } from './chain-facts.ts';
@@ -60,7 +61,7 @@ async function partsFor(
     involved.flatMap((value) => [value.issuerId, value.holderId, value.registeredById]),
   );
   const earlier = involved.flatMap((value) => {
-    const before = historyBefore(known.get(value.standardId)!, value);
+    const before = historyBefore(known.get(value.standardId)!, value, endOfDay(question.known));
     return before ? [before.id] : [];
   });
   const widened = await store.closure([...parentIds, ...earlier]);
