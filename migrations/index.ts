@@ -6,6 +6,7 @@ import { calibrations } from './2026-12-01-05-calibrations.ts';
 import { find } from './2026-12-01-06-find.ts';
 import { notices } from './2026-12-01-07-notices.ts';
 import { dryRuns } from './2026-12-01-08-dry-runs.ts';
+import { audits } from './2026-12-01-09-audits.ts';
 import type { Migration } from './migration.ts';
 
 /** In the order they run. Handed to the migrator as an array: a folder scan finds nothing in the bundled server. */
@@ -18,4 +19,5 @@ export const migrations: readonly Migration[] = [
   find,
   notices,
   dryRuns,
+  audits,
 ];

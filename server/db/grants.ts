@@ -36,6 +36,10 @@ export const GRANTS: Readonly<Record<string, readonly ('INSERT' | 'UPDATE' | 'DE
   notice: ['INSERT'],
   notice_term: ['INSERT'],
   notice_shift: ['INSERT'],
+  audit_run: ['INSERT'],
+  audit_finding: ['INSERT'],
+  audit_facts: ['INSERT'],
   session: ['INSERT', 'UPDATE', 'DELETE'],
   calibration_draft: ['INSERT', 'UPDATE'],
+  audit_job: ['INSERT', 'UPDATE'],
 };

@@ -56,7 +56,7 @@ describe('what the application may do, as the catalogue has it', () => {
     const changing = Object.entries(GRANTS).filter(
       ([, list]) => list.includes('UPDATE') || list.includes('DELETE'),
     );
-    expect(changing.map(([name]) => name).sort()).toEqual(['calibration_draft', 'session']);
+    expect(changing.map(([name]) => name).sort()).toEqual(['audit_job', 'calibration_draft', 'session']);
   });
 });
 

@@ -25,6 +25,8 @@ const ACT_OF_PARENT: Readonly<Record<string, string>> = {
   source_link: 'JOIN assigned_value p ON p.id = t.child_id',
   component: 'JOIN assigned_value p ON p.id = t.value_id',
   value_group: 'JOIN revision p ON p.id = t.revision_id',
+  audit_finding: 'JOIN audit_run p ON p.id = t.run_id',
+  audit_facts: 'JOIN audit_run p ON p.id = t.run_id',
   group_covariance: 'JOIN value_group g ON g.id = t.group_id JOIN revision p ON p.id = g.revision_id',
   notice_term: 'JOIN notice p ON p.id = t.notice_id',
   notice_shift: 'JOIN notice p ON p.id = t.notice_id',
