@@ -117,6 +117,8 @@ const NoticeChange = z
   .strictObject({
     kind: z.literal('notice'),
     issuerId: Id,
+    /** The scale version that the values stand on, where they state one; left out: any. */
+    fromScaleId: Id.optional(),
     /** Which values it covers; left out: of either kind, of any date, of any nominal. */
     quantity: QuantityKind.optional(),
     performedFrom: Day.optional(),
@@ -244,6 +246,15 @@ export const AncestorDistance = z.object({
   text: z.string().nullable(),
 });
 
+/** How fast a weight changes, grams per year. */
+const Drift = z.object({
+  perYear: z.number(),
+  u: z.number(),
+  /** A line through its calibrations of one epoch, or the rate that its laboratory declares. */
+  from: z.enum(['calibrations', 'declared rate']),
+  calibrations: z.number().int(),
+});
+
 /** GET /api/chains/:valueUid/distance */
 export const DistanceResponse = z.object({
   focusUid: Id,
@@ -263,6 +274,17 @@ export const DistanceResponse = z.object({
     bestText: z.string().nullable(),
     /** Classes with U <= MPE/3 at this nominal, finest first. */
     classes: z.array(WeightClass),
+    /** How it is known to drift; null where it is not. */
+    drift: Drift.nullable(),
+    /** Why no drift is known; null where it is. */
+    driftBecause: z.string().nullable(),
+    /**
+     * U at best on the day of asking, used at its certificate's value; grams, null without u or drift. And, for each
+     * class reachable when it was calibrated, the last day on which it can still be reached; null: more than 50 years.
+     */
+    expandedUToday: z.number().nullable(),
+    textToday: z.string().nullable(),
+    until: z.array(z.object({ class: WeightClass, last: Day.nullable() })),
   }),
 });
 export type DistanceResponse = z.infer<typeof DistanceResponse>;
@@ -293,11 +315,29 @@ const CombinedU = z.object({
   bound: z.number().nullable(),
   /** Every correlation at its largest: the sum of the standard uncertainties. */
   linear: z.number().nullable(),
+  /** The masses so added, grams, exact; null where they may not be added. */
+  total: DecimalString.nullable(),
 });
 
 export const TogetherResponse = z.object({
   valueUids: z.array(Id),
   signs: z.array(z.number().int()),
+  /** What each is, as a traceability statement would show it. */
+  weights: z.array(
+    z.object({
+      registryNo: z.string(),
+      marking: z.string(),
+      nominal: DecimalString,
+      class: WeightClass.nullable(),
+      quantity: QuantityKind,
+      deviation: Deviation,
+      expandedU: DecimalString.nullable(),
+      k: DecimalString.nullable(),
+      certificateNo: z.string(),
+    }),
+  ),
+  /** Why they may not be added; null where they may. */
+  notAdded: z.string().nullable(),
   /** Standard uncertainty of each, grams: as computed now, else as stated; null where neither is known. */
   standardUncertainties: z.array(z.number().nullable()),
   /** Grams squared; null where undeclared. */

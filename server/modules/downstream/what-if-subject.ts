@@ -19,7 +19,7 @@ export async function whatIfSubject(
   for (const [at, change] of input.changes.entries()) {
     if (change.kind === 'notice') {
       if (!readsInFull(context.user, change.issuerId)) return { ids: [], view: 'none' };
-      subject.ids.push(await idsOfIssuer(context, change.issuerId, `changes.${at}.issuerId`));
+      subject.ids.push(await idsOfIssuer(context, change, `changes.${at}.issuerId`));
       continue;
     }
     const named =
@@ -32,11 +32,16 @@ export async function whatIfSubject(
   return subject;
 }
 
-async function idsOfIssuer(context: SignedInContext, issuerId: string, field: string): Promise<number[]> {
+async function idsOfIssuer(
+  context: SignedInContext,
+  { issuerId, fromScaleId = null }: { issuerId: string; fromScaleId?: string | undefined | null },
+  field: string,
+): Promise<number[]> {
   const rows = await readRows<{ id: number }>(
     context.database,
-    'SELECT id FROM assigned_value WHERE issuer_id = :issuerId',
-    { issuerId },
+    `SELECT id FROM assigned_value WHERE issuer_id = :issuerId
+       AND (:fromScaleId IS NULL OR scale_version_id IS NULL OR scale_version_id = :fromScaleId)`,
+    { issuerId, fromScaleId },
   );
   if (rows.length > 0) return rows.map((row) => row.id);
   const isKnown = await readRow(context.database, 'SELECT 1 AS yes FROM laboratory WHERE id = :issuerId', {
