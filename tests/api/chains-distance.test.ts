@@ -85,6 +85,32 @@ describe('GET /api/chains/:valueUid/distance', () => {
     expect(reach.classes).toEqual(['E2', 'F1', 'F2', 'M1', 'M2', 'M3']);
     expect((await ask('institute', root.uid)).reach.classes[0]).toBe('E1');
   });
+
+  it('says that no drift is known of a weight calibrated once', async () => {
+    const { reach } = await ask('home', homes.uid);
+    expect(reach).toMatchObject({ drift: null, expandedUToday: null, until: [] });
+    expect(reach.driftBecause).toMatch(/^No drift known/);
+  });
+
+  it('says until when each class can be reached, by the line through two calibrations of one epoch', async () => {
+    const { home } = scene;
+    const parts = { issuer: home, holder: home, expandedU: '0.00001', leansOn: null };
+    const first = await issueValue(app, { ...parts, day: '2020-01-01', deviation: '0.0001' });
+    const again = { ...parts, day: '2024-01-01', deviation: '0.0003', standardId: first.standardId };
+    const { uid } = await issueValue(app, again);
+    const { reach } = await ask('home', uid);
+    expect(reach.drift).toMatchObject({ from: 'calibrations', calibrations: 2 });
+    // 0.2 mg in four years; the two u of 5 ug are independent: 0.005 * sqrt(2) / 4 mg in the slope.
+    expect(reach.drift!.perYear / (0.0002 / 4)).toBeCloseTo(1, 3);
+    expect(reach.drift!.u / ((0.000005 * Math.SQRT2) / 4)).toBeCloseTo(1, 3);
+    const last = Object.fromEntries(reach.until.map((row) => [row.class, row.last]));
+    expect(reach.until.map((row) => row.class)).toEqual(reach.classes);
+    // E1: a third of 0.5 mg is 0.1667 mg, less U = 0.01 mg, at 50 ug a year: a little over three years.
+    expect(last.E1).toMatch(/^2027-0[12]/);
+    expect(last.E2! > last.E1!).toBe(true);
+    expect(last.M3).toBeNull();
+    expect(reach.expandedUToday!).toBeGreaterThan(reach.bestExpandedU!);
+  });
 });
 
 describe('POST /api/chains/together', () => {
@@ -149,6 +175,26 @@ describe('POST /api/chains/together', () => {
     // In a difference the shared part cancels and the local parts add.
     const difference = await ask('home', { valueUids, signs: [1, -1] });
     expect(difference.signed.bound! / (2 * Math.sqrt(0.00025 ** 2 - 0.00015 ** 2))).toBeCloseTo(1, 6);
+  });
+
+  it('adds the masses with their signs, and says what each weight is', async () => {
+    const reply = await ask('institute', { valueUids: [homes.uid, others.uid], signs: [1, -1] });
+    expect(reply.sum.total).toBe('2000.000277');
+    expect(reply.signed.total).toBe('-0.000011');
+    expect(reply.weights).toMatchObject([
+      { registryNo: homes.registryNo, nominal: '1000', deviation: homes.deviation, k: '2' },
+      { registryNo: others.registryNo, certificateNo: others.certificateNo },
+    ]);
+  });
+
+  it('never adds a mass to a conventional mass, and says so', async () => {
+    const { id } = await makeStandard(app, scene.home.id);
+    const issued = await makeCalibration(app, scene.home.id, '2024-07-12', [
+      lineOf(id, { quantity: 'mass' }),
+    ]);
+    const reply = await ask('home', { valueUids: [homes.uid, issued.valueUids[0]!] });
+    expect(reply.notAdded).toContain('not added');
+    expect(reply.sum).toEqual({ u: null, bound: null, linear: null, total: null });
   });
 
   it('answers one who sees a reference as a statement', async () => {

@@ -1,11 +1,11 @@
 import type { DistanceResponse } from '#shared/contracts/downstream.ts';
 import { Decimal } from '#shared/decimal.ts';
 import { classConformity } from '#shared/engine/conformity/class-conformity.ts';
-import { reachableClasses } from '#shared/engine/conformity/reachable-classes.ts';
 import type { WeightClass } from '#shared/engine/conformity/r111-2004.ts';
 import { distanceToLimit } from '#shared/engine/network/distance-to-limit.ts';
 import type { Context } from '#server/http/context.ts';
 import { chainNumbers, storeOf, type ChainSubject, type StoredValue } from '#server/modules/chains/index.ts';
+import { reachOf } from './reach.service.ts';
 import { shortText } from './short-text.ts';
 
 const MILLIGRAMS_PER_GRAM = 1000;
@@ -48,7 +48,7 @@ export async function distanceOf(context: Context, subject: ChainSubject): Promi
     rule: limit.because === null ? limit.rule : null,
     room: room?.toNumber() ?? null,
     ancestors,
-    reach: reachOf(focus, variance === null ? focus.uStated : Math.sqrt(variance)),
+    reach: await reachOf(context, focus, variance === null ? focus.uStated : Math.sqrt(variance)),
   };
 }
 
@@ -88,15 +88,4 @@ function limitOf(value: StoredValue): Limit {
   if (mpe === null) return { because: 'Its class has no maximum permissible error at this nominal value.' };
   const limit = mpe.div(MILLIGRAMS_PER_GRAM);
   return { because: null, rule, largest: decisionRule === 'guarded' ? limit.minus(expandedU) : limit };
-}
-
-/** A weight of the same nominal, weighed against this one without any uncertainty of its own. */
-function reachOf(focus: StoredValue, u: number | null): DistanceResponse['reach'] {
-  if (u === null) return { bestExpandedU: null, bestText: null, classes: [] };
-  const best = K * u;
-  return {
-    bestExpandedU: best,
-    bestText: shortText(best, 'up'),
-    classes: reachableClasses(new Decimal(focus.nominal), best * MILLIGRAMS_PER_GRAM),
-  };
 }

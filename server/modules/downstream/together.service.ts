@@ -1,4 +1,5 @@
 import type { TogetherInput, TogetherResponse } from '#shared/contracts/downstream.ts';
+import { Decimal, decimalText } from '#shared/decimal.ts';
 import type { Context } from '#server/http/context.ts';
 import {
   chainNumbers,
@@ -36,6 +37,7 @@ export async function togetherOf(
   return {
     valueUids: values.map((value) => value.uid),
     signs,
+    weights: values.map(weightOf),
     standardUncertainties: us,
     covariance,
     correlation: matrixOf(values.length, (i, j) => {
@@ -46,13 +48,51 @@ export async function togetherOf(
     undeclared: pairs.flatMap(({ i, j, because }) =>
       because === null ? [] : [{ pair: [i, j] as [number, number], because }],
     ),
-    sum: combinedU(
-      us,
-      pairs,
-      values.map(() => 1),
-    ),
-    signed: combinedU(us, pairs, signs),
+    ...addedUp(values, us, pairs, signs),
     shared: sharedOf(values, closure, byId),
+  };
+}
+
+/** Mass and conventional mass differ by about 1 mg/kg for steel: they are never added. */
+function addedUp(
+  values: StoredValue[],
+  us: (number | null)[],
+  pairs: KnownPair[],
+  signs: readonly number[],
+): Pick<TogetherResponse, 'notAdded' | 'sum' | 'signed'> {
+  if (new Set(values.map((value) => value.quantity)).size > 1) {
+    const none = { u: null, bound: null, linear: null, total: null };
+    const notAdded = 'Some state mass and some conventional mass: the two are not added.';
+    return { notAdded, sum: none, signed: none };
+  }
+  const plus = values.map(() => 1);
+  return {
+    notAdded: null,
+    sum: { ...combinedU(us, pairs, plus), total: totalOf(values, plus) },
+    signed: { ...combinedU(us, pairs, signs), total: totalOf(values, signs) },
+  };
+}
+
+function totalOf(values: StoredValue[], signs: readonly number[]): string {
+  const total = values.reduce(
+    (sum, { nominal, deviation }, at) => sum.plus(new Decimal(nominal).plus(deviation).times(signs[at]!)),
+    new Decimal(0),
+  );
+  return decimalText(total);
+}
+
+function weightOf(value: StoredValue): TogetherResponse['weights'][number] {
+  const { registryNo, marking, nominal, quantity, deviation, expandedU, k, certificateNo } = value;
+  return {
+    registryNo,
+    marking,
+    nominal: decimalText(nominal),
+    class: value.class as TogetherResponse['weights'][number]['class'],
+    quantity,
+    deviation: decimalText(deviation),
+    expandedU: expandedU === null ? null : decimalText(expandedU),
+    k: k === null ? null : decimalText(k),
+    certificateNo,
   };
 }
 
