@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { ChainLifeResponse } from '#shared/contracts/chain-life.ts';
 import {
   ChainQuery,
   ChainResponse,
@@ -15,6 +16,8 @@ import { presentChain } from './chain.presenter.ts';
 import { chainOf } from './chain.service.ts';
 import { readChain } from './chains.policy.ts';
 import { covarianceOf } from './covariance.service.ts';
+import { presentLife } from './life.presenter.ts';
+import { lifeOf } from './life.service.ts';
 import { storeOf } from './store-of.ts';
 
 export const chainRoutes: Route[] = [
@@ -45,6 +48,17 @@ export const chainRoutes: Route[] = [
     response: ChainResponse,
     isLarge: true,
     present: (chain, context, subject) => presentChain(chain, context.user, subject),
+  }),
+  route({
+    method: 'get',
+    path: '/api/chains/:valueUid/life',
+    summary: 'What befell the weight and what it rests on: the days on which a question makes a difference.',
+    permission: readChain,
+    params: z.object({ valueUid: Id }),
+    subject: (context, { params }) => chainSubject(context, params.valueUid),
+    act: (context, _input, subject) => lifeOf(context, storeOf(context.database), subject.id),
+    response: ChainLifeResponse,
+    present: (life, context, subject) => presentLife(life, context.user, subject),
   }),
   route({
     method: 'get',

@@ -133,6 +133,12 @@ export const WALK: Readonly<Record<string, WalkRow>> = {
     ok: 200,
     otherwise: 404,
   },
+  'GET /api/chains/:valueUid/life': {
+    request: ({ valueUid }) => ({ path: `/api/chains/${valueUid}/life` }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
   'GET /api/chains/:valueUid/covariance/:otherUid': {
     // The reference is upstream of home's weight: its statement is open to home.
     request: ({ valueUid, referenceUid }) => ({ path: `/api/chains/${valueUid}/covariance/${referenceUid}` }),
