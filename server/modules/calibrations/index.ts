@@ -3,6 +3,7 @@ export { reviseCalibration } from './revise-calibration.service.ts';
 export { withdrawCalibration } from './withdraw-calibration.service.ts';
 export { isAuthorisedToSign } from './authorised-to-sign.queries.ts';
 export { calibrationSubject } from './calibration-subject.queries.ts';
+export { confirmSignature } from './confirm-signature.ts';
 export { correctCalibrationPermission, withdrawCalibrationPermission } from './calibrations.policy.ts';
 export { calibrationRoutes } from './calibrations.routes.ts';
 export { openDrafts } from './draft-list.queries.ts';

@@ -24,6 +24,8 @@ export interface Covered {
   shift: number;
   /** Its mass over 1 kg. */
   sensitivity: number;
+  /** Standard uncertainty of the effect at this value, where it is not the same for each kilogram. */
+  u?: number;
 }
 
 /** What the changes bring to each value, by place. */
@@ -73,7 +75,7 @@ export function effectsOf(graph: GraphArrays, found: Below, changes: readonly Gr
         add(noticed, walk.handDown(shifts, change.appliedFrom));
         const amounts = entries.map((entry) => ({
           node: entry.node,
-          amount: entry.sensitivity * change.addedU,
+          amount: entry.u ?? entry.sensitivity * change.addedU,
         }));
         addSquares(addedVariance, walk.handDown(amounts));
       }
@@ -146,10 +148,11 @@ class Walk {
       }
       return parents;
     };
-    const own = new Map([...byPlace].map(([place, { sensitivity }]) => [place, sensitivity]));
-    return [...noticeEntries(found.nodes.keys(), parentsOf, own)].map(([place, part]) => {
-      const { node, shift, sensitivity } = byPlace.get(place)!;
-      return { node, shift: part * shift, sensitivity: part * sensitivity };
+    const masses = new Map([...byPlace].map(([place, { sensitivity }]) => [place, sensitivity]));
+    return [...noticeEntries(found.nodes.keys(), parentsOf, masses)].map(([place, part]) => {
+      const { node, shift, sensitivity, u } = byPlace.get(place)!;
+      const own = { node, shift: part * shift, sensitivity: part * sensitivity };
+      return u === undefined ? own : { ...own, u: part * u };
     });
   }
 

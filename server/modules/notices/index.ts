@@ -1,0 +1,2 @@
+export { noticeRoutes } from './notices.routes.ts';
+export { publishNotice } from './publish-notice.service.ts';
