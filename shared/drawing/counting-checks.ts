@@ -4,11 +4,16 @@ import type { DrawingQuestion } from './drawing-question.ts';
 
 type Check = ChainResponse['checks'][number];
 
+/** As much of a chain as counting needs. */
+export interface CountedChain extends Pick<ChainResponse, 'focusUid' | 'rules' | 'checks'> {
+  links: readonly Pick<ChainResponse['links'][number], 'childUid' | 'parentUid' | 'role'>[];
+}
+
 /**
  * The checks of values and links that count under a verdict, as the links' standings count them: for today also a
  * flaw of the result itself that was found for the conduct; nothing of a value that only informs.
  */
-export function countingChecks(chain: ChainResponse, verdict: DrawingQuestion['verdict']): Check[] {
+export function countingChecks(chain: CountedChain, verdict: DrawingQuestion['verdict']): Check[] {
   const lasting = new Set(chain.rules.filter((rule) => rule.isLasting).map((rule) => rule.id));
   const leaning = new Set([
     chain.focusUid,
@@ -33,5 +38,11 @@ export function worstOf(checks: readonly Check[], standing: State): State {
     if (check.outcome === 'fails') return isGrave ? 'broken' : 'caution';
     return check.outcome === 'cannot be judged' && isGrave ? 'not judged' : 'sound';
   });
-  return WORST_FIRST.find((state) => state === standing || states.includes(state)) ?? 'sound';
+  return worstState([standing, ...states]);
+}
+
+/** The worst of some states; sound where there is none. */
+export function worstState<Some extends State>(states: readonly Some[]): Some {
+  const worst = WORST_FIRST.find((state) => (states as readonly State[]).includes(state));
+  return (worst ?? 'sound') as Some;
 }

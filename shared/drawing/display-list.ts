@@ -1,57 +1,75 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
-import { stateOfValue, type State } from '#shared/states.ts';
-import { groupBy } from '#shared/group-by.ts';
-import { countingChecks, worstOf } from './counting-checks.ts';
+import { DOCUMENT_STYLE } from '#shared/numbers/ink-spans.ts';
+import type { NumberStyle } from '#shared/numbers/quantity-text.ts';
+import { shareText } from '#shared/numbers/share-text.ts';
+import type { State } from '#shared/states.ts';
+import type { DrawnChain, DrawnLink, DrawnNode } from './drawn-chain.ts';
 import { linkKey, type DrawingQuestion } from './drawing-question.ts';
-import { BAND, PLATE, SCALE } from './geometry.ts';
-import type { LayoutInput, Placement, Point } from './layout-input.ts';
-import { ribbonMiddle, ribbonPath } from './ribbon-path.ts';
+import { BAND, OPENING } from './geometry.ts';
+import { ribbonHatching, ribbonOutline } from './hatching.ts';
+import type { PlacedRibbon, Placement, Point } from './layout-input.ts';
+import { ownStates } from './own-states.ts';
+import { plateWords, type PlateWords } from './plate-words.ts';
+import { brokenPath, ribbonMiddle, ribbonPath } from './ribbon-path.ts';
+import { stubOf, type Stub } from './stub.ts';
 
-type Node = ChainResponse['nodes'][number];
-type Link = ChainResponse['links'][number];
-
-/** A plate: a value or a shared effect, in its place. */
-export interface Plate {
+/** A plate: a value, a shared effect or a group, in its place. `PLATE` says how large it is. */
+export interface Plate extends PlateWords {
   id: string;
   x: number;
   y: number;
-  node: Node;
+  node: DrawnNode;
+  /** How it is outlined: a root doubly, an effect dashed, a group as the uppermost of a pile. */
+  rule: 'single' | 'double' | 'dashed' | 'pile';
   /** The worst of the value's own checks and its standing. */
   state: State;
   isFocus: boolean;
-  isFaint: boolean;
+  /** The second of two weights. */
+  isSecond: boolean;
+  /** Of two weights: only the second leans on it. */
+  isBeside: boolean;
+  /** Of two weights: both lean on it; ringed in brass, and marked with the word. */
+  isShared: boolean;
   stub: Stub | null;
+  /** Why the chain has a loose end here, above the plate; null at a root and wherever it goes on. */
+  looseEnd: string | null;
   /** One short word set on the plate's edge in brass: what is to be noticed of it. */
   mark: string | null;
-}
-
-/** What a value adds of its own, entering from the side at the same scale. */
-export interface Stub {
-  /** Drawn height; null: the own part is not known. */
-  height: number | null;
-  share: number | null;
-  isToScale: boolean;
-  isNegative: boolean;
 }
 
 /** A link as it is drawn. */
 export interface Ribbon {
   id: string;
-  link: Link;
+  link: DrawnLink;
+  /** Its middle line, whole. */
   path: string;
+  /** What is stroked of it: two pieces where it is broken in its middle. */
+  strokes: string[];
+  /**
+   * solid: as wide as its flow; hairline: too thin for the scale, or without flow; negative: dashed, its edges
+   * outlined; informing: dotted, nothing flows; beside: of the second weight, dashed hairline without flow.
+   */
+  look: 'solid' | 'hairline' | 'negative' | 'informing' | 'beside';
   width: number;
   isToScale: boolean;
   isNegative: boolean;
   /** Named above a consensus value, without flow. */
   isInforming: boolean;
+  /** Both edges of a negative flow that is wide enough to be outlined. */
+  outline: string | null;
+  /** Oblique lines across it: a check warns. */
+  hatching: string | null;
   state: State;
-  isFaint: boolean;
   middle: Point;
+  /** Where it leaves its parent's foot and enters its child's head. */
+  ends: [Point, Point];
+  /** Its share, in the middle or beside the mark; null where it would not be true to scale. */
+  label: { text: string; x: number; y: number; anchor: 'start' | 'middle' } | null;
   /** One short word at the ribbon's middle in brass: what is to be noticed of it. */
   mark: string | null;
 }
 
-/** Everything that is drawn of a chain, in numbers: the screen and every export are made from it. */
+/** Everything that is drawn of a chain, in numbers and words: the screen and every export are made from it. */
 export interface DisplayList {
   width: number;
   height: number;
@@ -61,72 +79,124 @@ export interface DisplayList {
   ribbons: Ribbon[];
 }
 
-/** What the layout needs of a chain. In the plain drawing every link is a hairline. */
-export function layoutInput(chain: ChainResponse, draw: DrawingQuestion['draw']): LayoutInput {
-  const isPlain = draw === 'plain';
-  // A consensus value that runs inform is a root with something above it: it stays below them.
-  const informed = new Set(chain.links.map((link) => link.childUid));
-  return {
-    nodes: chain.nodes.map((node) => ({
-      id: node.uid,
-      tier: node.tier,
-      isRoot: node.type === 'value' && node.rootKind !== null && !informed.has(node.uid),
-      hasStub: stubOf(node, isPlain) !== null,
-    })),
-    links: chain.links.map((link) => ({
-      child: link.childUid,
-      parent: link.parentUid,
-      flow: isPlain || link.role === 'informs' ? 0 : link.flow,
-    })),
-  };
-}
-
 /** What is to be noticed: a plate's id or a link's key, and one short word. */
 export type Marks = ReadonlyMap<string, string>;
 
+const NO_MARKS: Marks = new Map();
+
 /** Puts the chain's facts in the places that the layout found. */
 export function displayList(
-  chain: ChainResponse,
+  chain: DrawnChain,
   placement: Placement,
   question: DrawingQuestion,
-  marks: Marks = new Map(),
+  marks: Marks = NO_MARKS,
+  style: NumberStyle = DOCUMENT_STYLE,
 ): DisplayList {
-  const isPlain = question.draw === 'plain';
-  const failing = failingNodes(chain, question);
-  const isFaint = (uid: string) => failing !== null && !failing.has(uid);
-  const own = ownChecks(chain, question);
+  const around = { chain, question, marks, style };
+  const states = ownStates(chain, question.verdict);
   const placeOf = new Map(placement.plates.map((plate) => [plate.id, plate]));
+  const leaning = new Set(chain.links.map((link) => link.childUid));
   return {
     width: placement.width,
     height: placement.height,
     band: bandOver(placement.width, chain.definition),
-    plates: chain.nodes.map((node) => ({
-      id: node.uid,
-      x: placeOf.get(node.uid)!.x,
-      y: placeOf.get(node.uid)!.y,
-      node,
-      state: node.type === 'value' ? worstOf(own.get(node.uid) ?? [], stateOfValue(node.state)) : 'sound',
-      isFocus: node.uid === chain.focusUid,
-      isFaint: isFaint(node.uid),
-      stub: stubOf(node, isPlain),
-      mark: marks.get(node.uid) ?? null,
-    })),
-    ribbons: placement.ribbons.map((ribbon, index) => {
-      const link = chain.links[index]!;
-      return {
-        id: linkKey(link),
-        link,
-        path: ribbonPath(ribbon.points),
-        width: ribbon.width,
-        isToScale: ribbon.isToScale,
-        isNegative: ribbon.isNegative,
-        isInforming: link.role === 'informs',
-        state: link[question.verdict],
-        isFaint: isFaint(link.childUid) || isFaint(link.parentUid),
-        middle: ribbonMiddle(ribbon.points),
-        mark: marks.get(linkKey(link)) ?? null,
-      };
+    plates: chain.nodes.map((node) => {
+      const { x, y } = placeOf.get(node.uid)!;
+      const state = node.type === 'group' ? node.state : (states.get(node.uid) ?? 'sound');
+      return { ...plateOf(node, state, around), x, y, looseEnd: looseEnd(node, leaning, question) };
     }),
+    ribbons: placement.ribbons.map((ribbon, index) => ribbonOf(chain.links[index]!, ribbon, around)),
+  };
+}
+
+interface Around {
+  chain: DrawnChain;
+  question: DrawingQuestion;
+  marks: Marks;
+  style: NumberStyle;
+}
+
+function plateOf(node: DrawnNode, state: State, { chain, question, marks, style }: Around) {
+  const { second } = chain;
+  const isShared = second !== null && membersOf(node).some((uid) => second.shared.has(uid));
+  const noticed = membersOf(node).flatMap((uid) => marks.get(uid) ?? []);
+  return {
+    ...plateWords(node, state, style),
+    id: node.uid,
+    node,
+    rule: ruleOf(node),
+    state,
+    isFocus: node.uid === chain.focusUid,
+    isSecond: node.uid === second?.focusUid,
+    isBeside: second?.beside.has(node.uid) ?? false,
+    isShared,
+    stub: stubOf(node, question.draw === 'plain'),
+    mark: noticed[0] ?? (node.uid === second?.focusUid ? 'second weight' : isShared ? 'shared' : null),
+  };
+}
+
+/** A group is marked where one of its members is. */
+function membersOf(node: DrawnNode): string[] {
+  return node.type === 'group' ? node.members : [node.uid];
+}
+
+function ruleOf(node: DrawnNode): Plate['rule'] {
+  if (node.type === 'source') return 'dashed';
+  if (node.type === 'group') return 'pile';
+  return node.rootKind === null ? 'single' : 'double';
+}
+
+/** A root ends a chain; any other value that leans on nothing leaves it loose. Parts left out leave no loose ends. */
+function looseEnd(node: DrawnNode, leaning: ReadonlySet<string>, question: DrawingQuestion): string | null {
+  if (node.type !== 'value' || node.rootKind !== null || leaning.has(node.uid)) return null;
+  return question.only === 'fails' ? null : 'ends here: no reference named';
+}
+
+function ribbonOf(link: DrawnLink, placed: PlacedRibbon, around: Around): Ribbon {
+  const { points, width, isToScale, isNegative } = placed;
+  const state = link[around.question.verdict];
+  const look = lookOf(link, placed, around.chain);
+  const path = ribbonPath(points);
+  const middle = ribbonMiddle(points);
+  return {
+    id: linkKey(link),
+    link,
+    path,
+    strokes: state === 'broken' ? brokenPath(points, OPENING) : [path],
+    look,
+    width,
+    isToScale,
+    isNegative,
+    isInforming: link.role === 'informs',
+    outline: look === 'negative' && width >= 3 ? ribbonOutline(points, width) : null,
+    hatching: state === 'caution' ? ribbonHatching(points, width) : null,
+    state,
+    middle,
+    ends: [points[0]!, points.at(-1)!],
+    label: labelOf(link, placed, { state, middle, decimalMark: around.style.decimalMark }),
+    mark: link.of.flatMap((key) => around.marks.get(key) ?? [])[0] ?? null,
+  };
+}
+
+function lookOf(link: DrawnLink, placed: PlacedRibbon, { second }: DrawnChain): Ribbon['look'] {
+  if (second?.beside.has(link.childUid)) return 'beside';
+  if (link.role === 'informs') return 'informing';
+  if (placed.isNegative) return 'negative';
+  return placed.isToScale ? 'solid' : 'hairline';
+}
+
+function labelOf(
+  { flow, role }: DrawnLink,
+  { width, isToScale }: PlacedRibbon,
+  { state, middle, decimalMark }: { state: State; middle: Point; decimalMark: NumberStyle['decimalMark'] },
+): Ribbon['label'] {
+  if (flow === null || role === 'informs' || !isToScale) return null;
+  const isBesideMark = state === 'broken' || state === 'caution';
+  return {
+    text: shareText(flow, decimalMark, 0),
+    x: middle.x + (isBesideMark ? Math.max(width / 2, 5) + 5 : 0),
+    y: middle.y + 4,
+    anchor: isBesideMark ? 'start' : 'middle',
   };
 }
 
@@ -134,28 +204,4 @@ export function displayList(
 function bandOver(drawn: number, definition: ChainResponse['definition']): DisplayList['band'] {
   const width = Math.max(drawn, BAND.leastWidth);
   return { x: (drawn - width) / 2, width, height: BAND.height, definition };
-}
-
-function ownChecks(chain: ChainResponse, question: DrawingQuestion) {
-  const ofValues = countingChecks(chain, question.verdict).flatMap((check) =>
-    check.subject.type === 'value' ? [{ uid: check.subject.uid, check }] : [],
-  );
-  const byUid = groupBy(ofValues, ({ uid }) => uid);
-  return new Map([...byUid].map(([uid, rows]) => [uid, rows.map(({ check }) => check)]));
-}
-
-function stubOf(node: Node, isPlain: boolean): Stub | null {
-  if (isPlain || node.type !== 'value' || node.share === null) return null;
-  if (node.localShare === null) return { height: null, share: null, isToScale: false, isNegative: false };
-  if (node.localShare === 0) return null;
-  const height = Math.min(PLATE.height, Math.abs(node.localShare) * SCALE);
-  const isToScale = height >= 1;
-  return { height: Math.max(1, height), share: node.localShare, isToScale, isNegative: node.localShare < 0 };
-}
-
-/** Nodes at either end of a link that is broken or calls for caution; null where everything is shown. */
-function failingNodes(chain: ChainResponse, question: DrawingQuestion): Set<string> | null {
-  if (question.only !== 'fails') return null;
-  const failing = chain.links.filter((link) => ['broken', 'caution'].includes(link[question.verdict]));
-  return new Set(failing.flatMap((link) => [link.childUid, link.parentUid]));
 }

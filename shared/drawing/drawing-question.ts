@@ -8,6 +8,10 @@ export interface DrawingQuestion {
   /** Shared effects below 1 % are counted, and shown when asked for. */
   effects: 'main' | 'all';
   only?: 'fails' | undefined;
+  /** Plates of one laboratory drawn as one. */
+  fold?: 'laboratory' | undefined;
+  /** Keys of the folded groups that are opened in place, joined by commas. */
+  open?: string | undefined;
 }
 
 /** Name of a link in the drawing and in the address. */

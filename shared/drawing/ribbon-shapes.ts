@@ -1,66 +1,95 @@
 import { shareText } from '#shared/numbers/share-text.ts';
 import type { Ribbon } from './display-list.ts';
-import type { Ink } from './inks.ts';
 import type { Figure, Shape } from './shapes.ts';
+import { textWidth } from './text-width.ts';
 
-/** Radius of the opening in a broken link, beyond half its width. */
-const OPENING = 8;
-const MARKS = { broken: 'M-4 -4L4 4M4 -4L-4 4', caution: 'M0 -5L5 4H-5Z' } as const;
+const GLYPHS = { broken: 'M-4.5 -4.5L4.5 4.5M4.5 -4.5L-4.5 4.5', caution: 'M0 -5.5L5.5 4.5H-5.5Z' } as const;
+const TEXT_SIZE = 12;
 
 /** A link as wide as what flows through it: broken in its middle where a check fails, hatched where one warns. */
 export function ribbonFigure(ribbon: Ribbon): Figure {
-  const { path: d, width } = ribbon;
-  const shapes: Shape[] = [{ kind: 'path', d, stroke: strokeOf(ribbon) }];
-  if (ribbon.isNegative && width > 3)
-    shapes.push({ kind: 'path', d, stroke: { ink: 'paper', width: width - 2 } });
-  if (ribbon.state === 'caution')
-    shapes.push({ kind: 'path', d, stroke: { ink: 'caution', width: Math.max(3, width), dash: [1.5, 7] } });
   return {
     kind: 'ribbon',
     id: ribbon.id,
     title: titleOf(ribbon),
-    isFaint: ribbon.isFaint,
-    shapes: [...shapes, ...middleMark(ribbon), ...label(ribbon)],
+    shapes: [...strokes(ribbon), ...hatching(ribbon), ...glyph(ribbon), ...label(ribbon), ...noticed(ribbon)],
   };
 }
 
-function strokeOf(ribbon: Ribbon): NonNullable<Extract<Shape, { kind: 'path' }>['stroke']> {
-  if (ribbon.isInforming) return { ink: 'ink-3', width: 1.5, dash: [1, 5], isRound: true };
-  if (ribbon.isNegative) return { ink: 'ink-2', width: Math.max(1, ribbon.width), dash: [6, 4] };
-  return { ink: ribbon.isToScale ? 'flow' : 'ink-3', width: ribbon.width };
+function strokes({ look, strokes: pieces, outline, width }: Ribbon): Shape[] {
+  const path = (d: string, stroke: Extract<Shape, { kind: 'path' }>['stroke'] & object): Shape => ({
+    kind: 'path',
+    d,
+    stroke,
+  });
+  // Outlined ribbons stay open: what lies below them is seen, as they take from it.
+  if (outline !== null) return [path(outline, { ink: 'ink-2', width: 1.2, dash: [5, 3] })];
+  return pieces.map((d) => {
+    if (look === 'informing') return path(d, { ink: 'ink-3', width: 1.5, dash: [1, 5], isRound: true });
+    if (look === 'negative') return path(d, { ink: 'ink-2', width: Math.max(1, width), dash: [5, 3] });
+    if (look === 'beside') return path(d, { ink: 'brass', width: 1, dash: [8, 3, 2, 3] });
+    return path(d, { ink: look === 'solid' ? 'flow' : 'ink-3', width });
+  });
 }
 
-function middleMark(ribbon: Ribbon): Shape[] {
-  if (ribbon.state !== 'broken' && ribbon.state !== 'caution') return [];
-  const { x, y } = ribbon.middle;
-  const radius = ribbon.state === 'broken' ? ribbon.width / 2 + OPENING : OPENING;
-  const ink: Ink = ribbon.state;
+function hatching(ribbon: Ribbon): Shape[] {
+  if (ribbon.hatching === null) return [];
+  return [{ kind: 'path', d: ribbon.hatching, stroke: { ink: 'caution', width: 1.2 } }];
+}
+
+/** The mark in the middle; the broken link is open there, the hatched one is covered. */
+function glyph({ state, middle, outline }: Ribbon): Shape[] {
+  if (state !== 'broken' && state !== 'caution') return [];
+  const isCovered = state === 'caution' || outline !== null;
   return [
-    { kind: 'circle', x, y, radius, fill: 'paper' },
-    { kind: 'path', d: MARKS[ribbon.state], at: { x, y }, stroke: { ink, width: 2 } },
+    ...(isCovered ? [{ kind: 'circle' as const, ...middle, radius: 9, fill: 'paper' as const }] : []),
+    { kind: 'path', d: GLYPHS[state], at: middle, stroke: { ink: state, width: 2 } },
   ];
 }
 
-function label(ribbon: Ribbon): Shape[] {
-  const { flow } = ribbon.link;
-  if (flow === null || ribbon.isInforming || !ribbon.isToScale) return [];
-  const isMarked = ribbon.state === 'broken' || ribbon.state === 'caution';
+function label({ label: said }: Ribbon): Shape[] {
+  if (said === null) return [];
+  const { text, x, y, anchor } = said;
   return [
     {
       kind: 'text',
-      x: ribbon.middle.x + (isMarked ? ribbon.width / 2 + OPENING + 4 : 0),
-      y: ribbon.middle.y + 4,
-      anchor: isMarked ? 'start' : 'middle',
-      spans: [{ text: shareText(flow, '.', 0), face: 'mono', size: 12, ink: 'ink-2' }],
+      x,
+      y,
+      anchor,
+      spans: [{ text, face: 'mono', size: TEXT_SIZE, ink: 'ink-2' }],
       halo: 'paper',
     },
   ];
 }
 
-function titleOf({ link, isToScale, state }: Ribbon): string {
-  if (link.role === 'informs') return 'Informs the consensus value; nothing flows';
+/** A word under the ribbon's middle, with a mark: colour alone says nothing. */
+function noticed({ mark, middle }: Ribbon): Shape[] {
+  if (mark === null) return [];
+  const x = middle.x - textWidth(mark, 'sans', TEXT_SIZE) / 2 + 6;
+  return [
+    { kind: 'path', d: 'M4 0 8 4 4 8 0 4Z', at: { x: x - 12, y: middle.y + 10 }, fill: 'brass' },
+    {
+      kind: 'text',
+      x,
+      y: middle.y + 18,
+      anchor: 'start',
+      spans: [{ text: mark, face: 'sans', size: TEXT_SIZE, ink: 'brass' }],
+      halo: 'paper',
+    },
+  ];
+}
+
+/** The link in words. */
+function titleOf({ link, isToScale, state, mark, look }: Ribbon): string {
+  const noticedWord = mark === null ? '' : `; ${mark}`;
+  if (link.role === 'informs') return `Informs the consensus value; nothing flows${noticedWord}`;
+  if (look === 'beside') return `Of the second weight; its flow is not drawn; ${state}${noticedWord}`;
   const share =
     link.flow === null ? 'share not computable' : `${shareText(link.flow, '.', 2)} of the variance`;
   const scale = isToScale || link.flow === null ? '' : ', not to scale';
-  return `${share}${scale}; sensitivity ${link.sensitivity.toPrecision(6)}; ${state}`;
+  const way =
+    link.sensitivity === null
+      ? `${link.of.length} links in one`
+      : `sensitivity ${link.sensitivity.toPrecision(6).replace('-', '\u2212')}`;
+  return `${share}${scale}; ${way}; ${state}${noticedWord}`;
 }

@@ -41,7 +41,6 @@ export interface Figure {
   id: string;
   /** In words, for those who do not see it. */
   title: string;
-  isFaint: boolean;
   shapes: Shape[];
 }
 

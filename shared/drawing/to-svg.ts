@@ -47,10 +47,9 @@ export function toSvg(picture: Picture, options: SvgOptions): string {
 }
 
 function figureText(figure: Figure, inks: Inks): string {
-  const faint = figure.isFaint ? ` opacity="${figure.kind === 'plate' ? 0.35 : 0.25}"` : '';
   const title = figure.title === '' ? '' : `<title>${escaped(figure.title)}</title>`;
   const shapes = figure.shapes.map((shape) => shapeText(shape, inks)).join('');
-  return `<g data-${figure.kind}="${escaped(figure.id)}"${faint}>${title}${shapes}</g>`;
+  return `<g data-${figure.kind}="${escaped(figure.id)}">${title}${shapes}</g>`;
 }
 
 function shapeText(shape: Shape, inks: Inks): string {

@@ -15,6 +15,8 @@ interface TwoColumnsProps {
   sideWidth?: keyof typeof SIDES;
   /** Below 640 px the side comes first: where the work is a drawing and the side says the same in words. */
   isSideFirstOnPhones?: boolean;
+  /** One below the other at every width: the work takes the page. */
+  isStacked?: boolean;
 }
 
 /** The work at the left, what it means at the right; one below the other on narrow screens. */
@@ -23,9 +25,10 @@ export function TwoColumns({
   side,
   sideWidth = 'normal',
   isSideFirstOnPhones = false,
+  isStacked = false,
 }: TwoColumnsProps) {
   return (
-    <div className={`grid min-w-0 grid-cols-1 gap-x-8 gap-y-6 ${SIDES[sideWidth]}`}>
+    <div className={`grid min-w-0 grid-cols-1 gap-x-8 gap-y-6 ${isStacked ? '' : SIDES[sideWidth]}`}>
       <div className="flex min-w-0 flex-col gap-6">{children}</div>
       <div className={`flex min-w-0 flex-col gap-6 ${isSideFirstOnPhones ? 'max-sm:-order-1' : ''}`}>
         {side}

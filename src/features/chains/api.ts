@@ -1,5 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
-import { ChainResponse, ChainSearchResponse } from '#shared/contracts/chains.ts';
+import { ChainResponse, ChainSearchResponse, CovarianceResponse } from '#shared/contracts/chains.ts';
 import { get } from '#src/lib/api-client.ts';
 
 /** The question behind a chain, apart from the value: the day and the knowledge day; today where left out. */
@@ -22,5 +22,14 @@ export function chainChoicesQuery(q: string) {
   return queryOptions({
     queryKey: ['chains', 'list', q],
     queryFn: ({ signal }) => get('/api/chains', ChainSearchResponse, { query: { q }, signal }),
+  });
+}
+
+/** How two values vary together, through what both lean on. */
+export function covarianceQuery(valueUid: string, otherUid: string) {
+  return queryOptions({
+    queryKey: ['chains', 'covariance', valueUid, otherUid],
+    queryFn: ({ signal }) =>
+      get(`/api/chains/${valueUid}/covariance/${otherUid}`, CovarianceResponse, { signal }),
   });
 }

@@ -22,6 +22,8 @@ const Question = z.object({
   thenDay: z.iso.date().optional().catch(undefined),
   thenKnown: z.iso.date().optional().catch(undefined),
   thenAs: z.enum(['certified', 'now known']).optional().catch(undefined),
+  /** The drawing as wide as the page, above its table. */
+  place: z.enum(['wide']).optional().catch(undefined),
   /** A second value: what both lean on lights up. */
   with: z.uuid().optional().catch(undefined),
   /** What is selected: a node's uid, or child and parent of a link joined by a dot. */

@@ -11,7 +11,6 @@ import { nominalText } from '#shared/numbers/nominal.ts';
 import type { ChainQuestion } from '../question.ts';
 import { BothKinds } from './both-kinds.tsx';
 import { Contributions } from './contributions.tsx';
-import { Legend } from './legend.tsx';
 import { LinkTable } from './link-table.tsx';
 import { NotYetNotice } from './not-yet-notice.tsx';
 import { QuestionBar } from './question-bar.tsx';
@@ -69,6 +68,7 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
       <QuestionBar question={question} answered={chain.question} onChange={onChange} />
       <TwoColumns
         isSideFirstOnPhones
+        isStacked={question.place === 'wide'}
         side={
           <>
             <Verdict chain={chain} question={question} onChange={onChange} />
@@ -83,12 +83,9 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
           {isNothingFailing(chain, question) ? (
             <NothingFails onShowAll={() => onChange({ only: undefined })} />
           ) : (
-            <>
-              <Suspense fallback={<Waiting>Fetching the drawing</Waiting>}>
-                <ChainGraph chain={chain} question={question} onSelect={select} />
-              </Suspense>
-              <Legend />
-            </>
+            <Suspense fallback={<Waiting>Fetching the drawing</Waiting>}>
+              <ChainGraph chain={chain} question={question} onSelect={select} onChange={onChange} />
+            </Suspense>
           )}
         </Section>
       </TwoColumns>

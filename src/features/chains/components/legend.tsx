@@ -1,10 +1,32 @@
-/** How to read the drawing, in a line or two under it. */
-export function Legend() {
+import type { DisplayList } from '#shared/drawing/display-list.ts';
+import { legendOf } from '#shared/drawing/legend.ts';
+import { legendSample, SAMPLE } from '#shared/drawing/legend-shapes.ts';
+import { ShapesView } from '../graph/shapes-view.tsx';
+import type { ChainQuestion } from '../question.ts';
+
+/** How to read the drawing: a sample of each sign in it and its words. */
+export function Legend({ list, question }: { list: DisplayList; question: ChainQuestion }) {
   return (
-    <p className="text-sm text-ink-2">
-      A line is as wide as the share of the weight’s variance that flows through it; grey stubs are what a
-      value adds of its own. Dashed: a negative flow, where correlations cancel. Dotted: informs, nothing
-      flows. A hairline is too thin for the scale. Shared effects below 1 % are shown when asked for.
-    </p>
+    <div className="pt-2 text-sm text-ink-2">
+      <ul aria-label="How to read the drawing" className="grid gap-x-6 gap-y-1 sm:grid-cols-2">
+        {legendOf(list).map(({ sign, says }) => (
+          <li key={sign} className="flex items-start gap-2.5">
+            <svg
+              width={SAMPLE.width}
+              height={SAMPLE.height}
+              aria-hidden="true"
+              className="mt-0.5 shrink-0 overflow-visible"
+            >
+              <ShapesView shapes={legendSample(sign)} />
+            </svg>
+            {says}
+          </li>
+        ))}
+      </ul>
+      <p className="pt-1">
+        Arrow keys walk from plate to plate, Enter opens one.
+        {question.effects === 'main' && ' Shared effects below 1 % are shown when asked for.'}
+      </p>
+    </div>
   );
 }

@@ -1,37 +1,15 @@
 import { memo } from 'react';
 import type { NodeProps } from 'reactflow';
-import type { ChainResponse } from '#shared/contracts/chains.ts';
-import { usePreferences } from '#src/lib/preferences.ts';
+import { bandFigure } from '#shared/drawing/band-shapes.ts';
+import type { DisplayList } from '#shared/drawing/display-list.ts';
+import { ShapesView } from './shapes-view.tsx';
 
-export interface BandData {
-  definition: ChainResponse['definition'];
-  /** Left edge; beyond the plates where they are few. */
-  x: number;
-  width: number;
-  height: number;
-}
-
-/**
- * The definition in force when the roots were determined: one band across the top. The Planck constant is exact
- * since 2019-05-20 (26th CGPM, Resolution 1).
- */
-export const BandNode = memo(function BandNode({ data }: NodeProps<BandData>) {
-  const { decimalMark } = usePreferences();
-  const planck = (
-    <>
-      <i>h</i> = 6{decimalMark}626 070 15 × 10<sup>−34</sup> J s, exactly
-    </>
-  );
+/** The definition in force when the roots were determined: one band across the top. */
+export const BandNode = memo(function BandNode({ data: band }: NodeProps<DisplayList['band']>) {
+  const figure = bandFigure({ ...band, x: 0 });
   return (
-    <div
-      className="flex flex-col items-center justify-center border border-ink bg-raised text-center font-serif text-sm leading-tight whitespace-nowrap"
-      style={{ width: data.width, height: data.height }}
-    >
-      {data.definition === 'planck constant' && <p>The kilogram: {planck}</p>}
-      {data.definition !== 'planck constant' && <p>The kilogram: {PROTOTYPE}</p>}
-      {data.definition === 'both' && <p>since then: {planck}</p>}
-    </div>
+    <svg width={band.width} height={band.height} className="block" role="img" aria-label={figure.title}>
+      <ShapesView shapes={figure.shapes} />
+    </svg>
   );
 });
-
-const PROTOTYPE = 'the mass of the international prototype, until 2019-05-20';

@@ -1,117 +1,100 @@
-import { useMemo } from 'react';
-import ReactFlow, { Controls, type Edge, type EdgeTypes, type Node, type NodeTypes } from 'reactflow';
-import 'reactflow/dist/style.css';
-import './chain-graph.css';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
+import type { Marks } from '#shared/drawing/display-list.ts';
+import { Button } from '#src/components/ui/button.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
-import { linkKey } from '#shared/drawing/drawing-question.ts';
+import { Legend } from '../components/legend.tsx';
 import type { ChainQuestion } from '../question.ts';
-import { BandNode } from './band-node.tsx';
-import { drawnPart } from '#shared/drawing/drawn-part.ts';
-import { displayList, layoutInput, type DisplayList, type Marks } from '#shared/drawing/display-list.ts';
+import { BRIEF_BELOW } from './brief-plate.ts';
+import { ChainDrawing } from './chain-drawing.tsx';
+import { DrawingBar } from './drawing-bar.tsx';
+import { drawnNames } from './drawn-names.ts';
 import { Frame } from './frame.tsx';
-import { PLATE } from '#shared/drawing/geometry.ts';
-import { PlateNode } from './plate-node.tsx';
-import { RibbonEdge } from './ribbon-edge.tsx';
-import { useLayout } from './use-layout.ts';
-import type { Drawing } from './view-of.ts';
-
-const nodeTypes: NodeTypes = { plate: PlateNode, band: BandNode };
-const edgeTypes: EdgeTypes = { ribbon: RibbonEdge };
-/** All of it, however small: what the button of the drawing shows. */
-const WHOLE = { padding: 0.04, maxZoom: 1 };
+import { openGroup } from './opened-groups.ts';
+import { TogetherLine } from './together-line.tsx';
+import { useDrawing } from './use-drawing.ts';
+import { useSecondWeight } from './use-second-weight.ts';
+import type { View } from './view-of.ts';
 
 interface ChainGraphProps {
   chain: ChainResponse;
   question: ChainQuestion;
   /** A node's uid, or a link's key. */
   onSelect: (at: string) => void;
+  /** Changes how the chain is drawn; without it the drawing has no controls of its own. */
+  onChange?: ((change: Partial<ChainQuestion>) => void) | undefined;
   /** What is to be noticed: a plate's id or a link's key, and one short word. */
   marks?: Marks | undefined;
 }
 
 /** The chain drawn as a conserved flow from the definition down to the weight. The table beside it says the same. */
-export function ChainGraph({ chain: whole, question, onSelect, marks }: ChainGraphProps) {
-  const { chain } = useMemo(() => drawnPart(whole, question.effects), [whole, question.effects]);
-  const input = useMemo(() => layoutInput(chain, question.draw), [chain, question.draw]);
-  const placement = useLayout(input);
-  const list = useMemo(
-    () => placement && displayList(chain, placement, question, marks),
-    [chain, placement, question, marks],
-  );
-  const drawn = useMemo(
-    () => list && { nodes: nodesOf(list, question.at), edges: edgesOf(list, question.at) },
-    [list, question.at],
-  );
+export function ChainGraph({ chain, question, onSelect, onChange, marks }: ChainGraphProps) {
+  const second = useSecondWeight(chain.focusUid, question);
+  const drawn = useDrawing(chain, question, second?.chain ?? null, marks);
+  const list = drawn?.list ?? null;
+  const nameOf = drawnNames(chain, second?.chain ?? null, list);
   return (
-    <Frame drawing={list && drawingOf(list)}>
-      {(show) =>
-        drawn ? (
-          <ReactFlow
-            key={`${chain.focusUid} ${question.draw} ${question.effects}`}
-            nodes={drawn.nodes}
-            edges={drawn.edges}
-            nodeTypes={nodeTypes}
-            edgeTypes={edgeTypes}
-            onNodeClick={(_event, node) => node.type === 'plate' && onSelect(node.id)}
-            onEdgeClick={(_event, edge) => onSelect(edge.id)}
-            nodesDraggable={false}
-            nodesConnectable={false}
-            edgesUpdatable={false}
-            edgesFocusable={false}
-            deleteKeyCode={null}
-            onInit={show}
-            minZoom={0.1}
-            maxZoom={2}
-            preventScrolling={false}
-            zoomOnScroll={false}
-            proOptions={{ hideAttribution: true }}
-            aria-label="The chain, drawn. The table of links holds the same facts."
-          >
-            <Controls showInteractive={false} position="top-right" fitViewOptions={WHOLE} />
-          </ReactFlow>
-        ) : (
-          <Waiting>Laying the chain out</Waiting>
-        )
-      }
-    </Frame>
+    <div data-layout-ms={drawn?.layoutMs}>
+      {drawn && onChange && (
+        <DrawingBar
+          drawn={drawn}
+          question={question}
+          focusUid={chain.focusUid}
+          second={second?.chain ?? null}
+          onChange={onChange}
+        />
+      )}
+      {second && (
+        <TogetherLine
+          chain={chain}
+          second={second}
+          shared={drawn?.chain.second?.shared.size ?? 0}
+          isBeside={(drawn?.chain.second?.beside.size ?? 0) > 0}
+        />
+      )}
+      <Frame
+        key={chain.focusUid}
+        list={list}
+        note={(view) => <FrameNote {...{ view, question, onChange }} />}
+      >
+        {(frame) =>
+          list ? (
+            <ChainDrawing
+              list={list}
+              at={question.at}
+              nameOf={nameOf}
+              frame={frame}
+              onSelect={onSelect}
+              onOpen={(group) => onChange?.({ open: openGroup(question.open, group) })}
+            />
+          ) : (
+            <Waiting>Laying the chain out</Waiting>
+          )
+        }
+      </Frame>
+      {drawn && <Legend list={drawn.list} question={question} />}
+    </div>
   );
 }
 
-/** Bounds of the drawing, the band's included; the weight itself stays in sight. */
-function drawingOf(list: DisplayList): Drawing {
-  const left = Math.min(0, list.band.x);
-  const width = Math.max(list.width, list.band.width);
-  const focus = list.plates.find((plate) => plate.isFocus)!;
-  return { left, width, height: list.height, focusX: focus.x + PLATE.width / 2 };
+interface FrameNoteProps {
+  view: View & { isWhole: boolean };
+  question: ChainQuestion;
+  onChange: ChainGraphProps['onChange'];
 }
 
-function nodesOf(list: DisplayList, at: string | undefined): Node[] {
-  const band: Node = {
-    id: 'definition',
-    type: 'band',
-    position: { x: list.band.x, y: 0 },
-    data: list.band,
-    selectable: false,
-    focusable: false,
-  };
-  const plates = list.plates.map((plate) => ({
-    id: plate.id,
-    type: 'plate',
-    position: { x: plate.x, y: plate.y },
-    data: { plate, isSelected: plate.id === at },
-  }));
-  return [band, ...plates];
-}
-
-function edgesOf(list: DisplayList, at: string | undefined): Edge[] {
-  // The widest first: what is drawn later lies above, and a thin line's label stays readable.
-  const widestFirst = list.ribbons.toSorted((a, b) => b.width - a.width);
-  return widestFirst.map((ribbon) => ({
-    id: ribbon.id,
-    type: 'ribbon',
-    source: ribbon.link.parentUid,
-    target: ribbon.link.childUid,
-    data: { ribbon, isSelected: linkKey(ribbon.link) === at },
-  }));
+/** That the drawing does not show everything at once, and what to do. */
+function FrameNote({ view, question, onChange }: FrameNoteProps) {
+  if (view.isWhole && view.zoom >= BRIEF_BELOW) return null;
+  return (
+    <p className="pt-1 text-sm text-ink-2">
+      {view.isWhole
+        ? 'Drawn small: plates show number and state. Zoom in to read them, or point at one.'
+        : 'The drawing is larger than its frame: drag it, or show all of it with the last of its buttons.'}{' '}
+      {onChange && question.place !== 'wide' && (
+        <Button weight="text" className="max-columns:hidden" onClick={() => onChange({ place: 'wide' })}>
+          Draw it page-wide
+        </Button>
+      )}
+    </p>
+  );
 }

@@ -1,16 +1,28 @@
 import { useEffect, useRef, useState, type ReactNode } from 'react';
 import type { ReactFlowInstance } from 'reactflow';
-import { boxHeight, viewOf, type Drawing } from './view-of.ts';
+import type { DisplayList } from '#shared/drawing/display-list.ts';
+import { glide } from './glide.ts';
+import { boundsOf, boxHeight, viewOf, type View } from './view-of.ts';
 
-interface FrameProps {
-  /** Null while the chain is laid out. */
-  drawing: Drawing | null;
-  /** The drawing; it hands over its instance once it stands. */
-  children: (show: (instance: ReactFlowInstance) => void) => ReactNode;
+export interface FrameParts {
+  /** Takes the drawing's instance once it stands. */
+  show: (instance: ReactFlowInstance) => void;
+  /** False where part of the drawing is outside. */
+  isWhole: boolean;
+  width: number;
+  height: number;
 }
 
-/** The drawing's frame: as high as the chain needs to be read, and fitted anew when its width changes. */
-export function Frame({ drawing, children }: FrameProps) {
+interface FrameProps {
+  /** Null while the chain is laid out for the first time. */
+  list: DisplayList | null;
+  children: (parts: FrameParts) => ReactNode;
+  /** Said under the frame. */
+  note: (view: View & { isWhole: boolean }) => ReactNode;
+}
+
+/** The drawing's frame: as high as the chain needs to be read, and fitted anew when its width or the chain changes. */
+export function Frame({ list, children, note }: FrameProps) {
   const box = useRef<HTMLDivElement>(null);
   const [width, setWidth] = useState(0);
   const [instance, setInstance] = useState<ReactFlowInstance | null>(null);
@@ -19,25 +31,44 @@ export function Frame({ drawing, children }: FrameProps) {
     observer.observe(box.current!);
     return () => observer.disconnect();
   }, []);
-  const height = drawing && width > 0 ? boxHeight(drawing, width, windowNow()) : undefined;
-  const view = drawing && height ? viewOf(drawing, { width, height }) : null;
-  const { x, y, zoom } = view ?? {};
-  useEffect(() => {
-    if (instance && x !== undefined && y !== undefined && zoom !== undefined)
-      instance.setViewport({ x, y, zoom });
-  }, [instance, x, y, zoom]);
+  const bounds = list && boundsOf(list);
+  const height = bounds && width > 0 ? boxHeight(bounds, width, windowNow()) : undefined;
+  const view = bounds && height ? viewOf(bounds, { width, height }) : null;
+  useStanding(box, instance, list, view);
   return (
     <>
-      <div ref={box} className="min-h-80 border-y border-rule" style={{ height }}>
-        {children(setInstance)}
+      <div ref={box} className="relative min-h-80 overflow-hidden border-y border-rule" style={{ height }}>
+        {children({ show: setInstance, isWhole: view?.isWhole ?? true, width, height: height ?? 0 })}
       </div>
-      {view?.isWhole === false && (
-        <p className="text-sm text-ink-2">
-          The drawing is larger than its frame: drag it, or show all of it with the last of its buttons.
-        </p>
-      )}
+      {view && note(view)}
     </>
   );
+}
+
+/** Brings the drawing to its view; when the chain has changed, what stays glides there from where it stood. */
+function useStanding(
+  box: React.RefObject<HTMLDivElement | null>,
+  instance: ReactFlowInstance | null,
+  list: DisplayList | null,
+  view: View | null,
+): void {
+  const shown = useRef<{ list: DisplayList; view: View } | null>(null);
+  const { x, y, zoom } = view ?? {};
+  useEffect(() => {
+    if (!instance || !list || x === undefined || y === undefined || zoom === undefined) return;
+    const wanted = { x, y, zoom };
+    const former = shown.current;
+    const before = instance.getViewport();
+    // A reader's own place in the drawing stays, unless the drawing asks for another.
+    const isSameView = former && former.view.x === x && former.view.y === y && former.view.zoom === zoom;
+    if (!isSameView) instance.setViewport(wanted);
+    shown.current = { list, view: wanted };
+    // The drawing's own effects have put the new plates on their way: they stand when this task ends.
+    if (former && former.list !== list) {
+      const after = { list, view: isSameView ? before : wanted };
+      queueMicrotask(() => box.current && glide(box.current, { list: former.list, view: before }, after));
+    }
+  }, [box, instance, list, x, y, zoom]);
 }
 
 function windowNow() {

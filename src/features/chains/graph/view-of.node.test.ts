@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { boxHeight, viewOf, type Drawing } from './view-of.ts';
+import { PLATE } from '#shared/drawing/geometry.ts';
+import { boxHeight, bringIntoSight, viewOf, type Drawing } from './view-of.ts';
 
 const DESKTOP = { height: 900, isByFinger: false };
 const tall: Drawing = { left: -100, width: 470, height: 1400, focusX: 135 };
@@ -15,10 +16,18 @@ describe('frame of the drawing', () => {
     expect(view.x + (tall.left + tall.width) * view.zoom).toBeLessThan(620);
   });
 
+  it('stands whole as long as number and state can be read', () => {
+    const broad = { ...wide, width: 1200, focusX: 1100 };
+    const height = boxHeight(broad, 620, DESKTOP);
+    const view = viewOf(broad, { width: 620, height });
+    expect(view.isWhole).toBe(true);
+    expect(view.zoom).toBeCloseTo(580 / 1200, 9);
+  });
+
   it('never draws smaller than can be read; what is too wide shows the weight at its foot', () => {
     const height = boxHeight(wide, 620, DESKTOP);
     const view = viewOf(wide, { width: 620, height });
-    expect(view).toMatchObject({ zoom: 0.85, isWhole: false });
+    expect(view).toMatchObject({ zoom: 0.75, isWhole: false });
     const focus = view.x + wide.focusX * view.zoom;
     expect(focus).toBeGreaterThan(0);
     expect(focus).toBeLessThan(620);
@@ -32,5 +41,13 @@ describe('frame of the drawing', () => {
     const { y, zoom } = viewOf(endless, { width: 358, height });
     expect(y + endless.height * zoom).toBeLessThan(height);
     expect(y + endless.height * zoom).toBeGreaterThan(height - 70);
+  });
+
+  it('moves as little as needed to bring a plate into sight', () => {
+    const box = { width: 620, height: 500 };
+    expect(bringIntoSight({ x: 100, y: 100 }, { x: 0, y: 0, zoom: 1 }, box)).toBeNull();
+    const moved = bringIntoSight({ x: 1000, y: -200 }, { x: 0, y: 0, zoom: 1 }, box)!;
+    expect(1000 + PLATE.width + moved.x).toBe(600);
+    expect(-200 + moved.y).toBe(20);
   });
 });

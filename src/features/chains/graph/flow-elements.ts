@@ -1,0 +1,61 @@
+import type { Edge, Node } from 'reactflow';
+import type { DisplayList, Plate, Ribbon } from '#shared/drawing/display-list.ts';
+import type { PlateData } from './plate-node.tsx';
+import type { RibbonData } from './ribbon-edge.tsx';
+
+/** What is chosen in the drawing and where the keyboard stands. */
+export interface Standing {
+  at: string | undefined;
+  tabStop: string | undefined;
+  /** Walked to just now. */
+  takesFocus: boolean;
+}
+
+/** Name of the band among the drawing's elements. */
+export const BAND_ID = 'definition';
+
+/** Plates and the band, in their places. */
+export function nodesOf(list: DisplayList, standing: Standing): Node[] {
+  const band: Node = {
+    id: BAND_ID,
+    type: 'band',
+    position: { x: list.band.x, y: 0 },
+    data: list.band,
+    selectable: false,
+  };
+  return [band, ...list.plates.map((plate) => nodeOf(plate, standing))];
+}
+
+function nodeOf(plate: Plate, { at, tabStop, takesFocus }: Standing): Node<PlateData> {
+  const isTabStop = plate.id === tabStop;
+  const isSelected = at !== undefined && isAbout(plate, at);
+  return {
+    id: plate.id,
+    type: 'plate',
+    position: { x: plate.x, y: plate.y },
+    data: { plate, isSelected, isTabStop, takesFocus: isTabStop && takesFocus },
+  };
+}
+
+/** A group is chosen with any value or link inside it. */
+function isAbout({ id, node }: Plate, at: string): boolean {
+  if (node.type === 'group') return node.members.includes(at) || node.innerLinks.includes(at);
+  return id === at;
+}
+
+/** Ribbons, the widest first: what is drawn later lies above, and a thin line's label stays readable. */
+export function edgesOf(list: DisplayList, at: string | undefined): Edge<RibbonData>[] {
+  return list.ribbons
+    .toSorted((a, b) => b.width - a.width)
+    .map((ribbon) => ({
+      id: ribbon.id,
+      type: 'ribbon',
+      source: ribbon.link.parentUid,
+      target: ribbon.link.childUid,
+      data: { ribbon, isSelected: at !== undefined && holds(ribbon, at) },
+    }));
+}
+
+function holds(ribbon: Ribbon, at: string): boolean {
+  return ribbon.id === at || ribbon.link.of.includes(at);
+}
