@@ -48,7 +48,7 @@ export async function issueValue(
     expandedU: string;
     leansOn: string | null;
     sensitivity?: number;
-    usedAs?: 'certificate' | 'class limit';
+    usedAs?: 'certificate' | 'class limit' | 'by notice';
     standardId?: string;
     weightClass?: 'E2' | 'M1';
   },

@@ -61,7 +61,9 @@ export function chainNumbers(
     variance: (uid) => finite(varianceNow.get(uid)),
     varianceAsCertified: variance,
     covariance: (a, b) => knownCovariance(exact, a, b),
-    carried: (value) => {
+    carried: (asked) => {
+      // As certified, also where the value is met with its notices.
+      const value = byId.get(asked.id)!;
       const missing = [...ancestors.get(value.id)!]
         .map((id) => byId.get(id)!)
         .filter((above) => above.localU === null);

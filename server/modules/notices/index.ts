@@ -1,2 +1,2 @@
 export { noticeRoutes } from './notices.routes.ts';
-export { publishNotice } from './publish-notice.service.ts';
+export { publishNotice, type PublishedNotice } from './publish-notice.service.ts';
