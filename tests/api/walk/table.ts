@@ -11,6 +11,7 @@ import {
   type Scene,
   type Walker,
 } from './scene.ts';
+import { makeNotice, noticeOf } from './notices.ts';
 
 export interface WalkRequest {
   path: string;
@@ -105,6 +106,30 @@ export const WALK: Readonly<Record<string, WalkRow>> = {
     ok: 200,
     otherwise: 403,
   },
+  // notices
+  'GET /api/scale-versions': {
+    request: fixed('/api/scale-versions'),
+    may: SIGNED_IN,
+    ok: 200,
+    otherwise: 403,
+  },
+  'GET /api/notices': { request: fixed('/api/notices'), may: SIGNED_IN, ok: 200, otherwise: 403 },
+  'GET /api/notices/:noticeId': {
+    request: async (scene) => ({ path: `/api/notices/${(await makeNotice(scene)).id}` }),
+    may: SIGNED_IN,
+    ok: 200,
+    otherwise: 403,
+  },
+  'POST /api/notices': {
+    // Published by a national institute: one of which home's signatory is a signatory as well.
+    request: async (scene, walker) => ({
+      path: '/api/notices',
+      body: { ...(await noticeOf(scene)), password: scene.person(walker).password },
+    }),
+    may: ['signatory'],
+    ok: 201,
+    otherwise: 403,
+  },
   // documents
   'POST /api/documents': {
     request: ({ home }) => ({
@@ -139,6 +164,25 @@ export const WALK: Readonly<Record<string, WalkRow>> = {
     ok: 200,
     otherwise: 404,
   },
+  ...Object.fromEntries(
+    [
+      'drawing.svg',
+      'drawing.pdf',
+      'chain.json',
+      'take-along.html',
+      'strip.pdf',
+      'statement.json',
+      'statement.pdf',
+    ].map((file) => [
+      `GET /api/chains/:valueUid/${file}`,
+      {
+        request: ({ valueUid }: Scene) => ({ path: `/api/chains/${valueUid}/${file}` }),
+        may: READERS,
+        ok: 200 as const,
+        otherwise: 404 as const,
+      },
+    ]),
+  ),
   'GET /api/chains/:valueUid/covariance/:otherUid': {
     // The reference is upstream of home's weight: its statement is open to home.
     request: ({ valueUid, referenceUid }) => ({ path: `/api/chains/${valueUid}/covariance/${referenceUid}` }),
