@@ -5,6 +5,8 @@ import { createApp } from './app.ts';
 import { readConfig } from './config.ts';
 import { openDatabase } from './db/sequelize.ts';
 import { builtClient, developmentClient } from './http/client-files.ts';
+import { systemClock } from './http/context.ts';
+import { auditRunnerOf } from './modules/audits/index.ts';
 import { storeOf } from './modules/chains/index.ts';
 import { memoryOf } from './modules/downstream/index.ts';
 
@@ -17,6 +19,7 @@ const database = openDatabase(config.databaseUrl, config.poolSize);
 await database.authenticate();
 
 const development = config.isDevelopment ? await developmentClient() : null;
+const audits = auditRunnerOf({ database, clock: systemClock });
 const app = createApp({
   database,
   logger,
@@ -36,6 +39,7 @@ const server = app.express.listen(config.port, config.host, (error?: Error) => {
   const { port } = server.address() as AddressInfo;
   logger.info(`Listening on http://${config.host}:${port}`);
   warmUp();
+  audits.watch((error) => logger.error({ err: error }, 'An audit broke off'));
 });
 
 /** Reads what the first visitor would wait for. Until it is there, and where it fails, the database answers. */
@@ -56,6 +60,7 @@ async function stop(): Promise<void> {
   server.closeIdleConnections();
   const deadline = setTimeout(() => server.closeAllConnections(), DRAIN_MILLISECONDS);
   await drained;
+  await audits.leave();
   clearTimeout(deadline);
   app.close();
   await development?.close();

@@ -10,6 +10,7 @@ import { calibrationRoutes } from '#server/modules/calibrations/index.ts';
 import { statementRoutes } from '#server/modules/statements/index.ts';
 import { standardRoutes } from '#server/modules/standards/index.ts';
 import { dryRunRoutes } from '#server/modules/dry-runs/index.ts';
+import { auditRoutes } from '#server/modules/audits/index.ts';
 import type { Route } from '#server/http/route.ts';
 
 /** Every route of the product. A test walks this table as every kind of person. */
@@ -25,5 +26,6 @@ export const routes: readonly Route[] = [
   ...statementRoutes,
   ...downstreamRoutes,
   ...dryRunRoutes,
+  ...auditRoutes,
   ...deskRoutes,
 ];

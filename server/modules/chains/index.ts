@@ -1,11 +1,14 @@
 export { chainNumbers } from './chain-numbers.ts';
+export { chainBatch } from './chain-batch.ts';
 export { chainOf } from './chain.service.ts';
+export { presentChain } from './chain.presenter.ts';
 export { entriesOf, noticeShifts, withNotices } from './noticed-closure.ts';
 export { recordedNotices } from './notices.queries.ts';
-export type { Closure } from './chain-store.ts';
+export { ChainStore, type Closure } from './chain-store.ts';
 export { chainSubject } from './chain-subject.queries.ts';
 export { readChain, type ChainSubject } from './chains.policy.ts';
 export { chainRoutes } from './chains.routes.ts';
+export { StepMemory } from './step-memory.ts';
 export { storeOf } from './store-of.ts';
 export { judgeUnissued } from './judge-unissued.ts';
 export type { StoredValue } from './stored.ts';

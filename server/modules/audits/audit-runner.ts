@@ -1,0 +1,111 @@
+import { randomUUID } from 'node:crypto';
+import type { Sequelize } from 'sequelize';
+import { makeContext, type Clock } from '#server/http/context.ts';
+import { userByAccountId } from '#server/modules/identity/index.ts';
+import { claimJob, closeJob, reportProgress, type AuditJob } from './audit-job.queries.ts';
+import { performAudit } from './perform-audit.ts';
+import { storeAudit } from './store-audit.service.ts';
+
+/** How often the queue is looked at without being told, ms: for what a process that ended left behind. */
+const LOOK_EVERY = 15_000;
+/** How often progress is written, ms. */
+const REPORT_EVERY = 400;
+
+/**
+ * Works on audits one after the other, inside the server. Requests get their turn between the parts of the work.
+ * What is asked stands in the database: a process that ends leaves a question behind, and the next takes it up.
+ */
+export class AuditRunner {
+  readonly #database: Sequelize;
+  readonly #clock: Clock;
+  readonly #name = randomUUID();
+  #working: Promise<void> | null = null;
+  #isLeaving = false;
+  #watch: NodeJS.Timeout | null = null;
+  #onError: (error: unknown) => void = () => {};
+
+  constructor(database: Sequelize, clock: Clock) {
+    this.#database = database;
+    this.#clock = clock;
+  }
+
+  /** Begins to work, where it does not already. */
+  wake(): void {
+    if (this.#isLeaving) return;
+    this.#working ??= this.#work()
+      .catch((error: unknown) => this.#onError(error))
+      .finally(() => {
+        this.#working = null;
+      });
+  }
+
+  /** Looks at the queue now and every few seconds, for as long as the process lives. */
+  watch(onError: (error: unknown) => void): void {
+    this.#onError = onError;
+    this.#watch = setInterval(() => this.wake(), LOOK_EVERY).unref();
+    this.wake();
+  }
+
+  /** When nothing is worked on any more. */
+  async idle(): Promise<void> {
+    await this.#working;
+  }
+
+  /** Lays the work down; what was being worked on goes back into the queue. */
+  async leave(): Promise<void> {
+    this.#isLeaving = true;
+    if (this.#watch) clearInterval(this.#watch);
+    await this.#working;
+  }
+
+  async #work(): Promise<void> {
+    while (!this.#isLeaving) {
+      const job = await claimJob(this.#database, this.#name, this.#clock);
+      if (!job) return;
+      try {
+        await this.#run(job);
+      } catch (error) {
+        this.#onError(error);
+        const message = 'The work broke off; the log of the server says where. Ask for the audit again.';
+        await closeJob({ database: this.#database }, job, 'failed', message);
+      }
+    }
+  }
+
+  async #run(job: AuditJob): Promise<void> {
+    const beganAt = this.#clock.now();
+    let reportedAt = 0;
+    const report = async (done: number, total: number): Promise<boolean> => {
+      if (this.#isLeaving) return false;
+      const now = performance.now();
+      if (done > 0 && done < total && now - reportedAt < REPORT_EVERY) return true;
+      reportedAt = now;
+      return reportProgress(this.#database, this.#clock, { id: job.id, runner: this.#name, done, total });
+    };
+    const performed = await performAudit(this.#database, job, report);
+    if (performed) {
+      const user = await userByAccountId(this.#database, this.#clock, job.askedBy);
+      const context = makeContext({
+        database: this.#database,
+        clock: this.#clock,
+        user,
+        requestId: `audit ${job.id}`,
+      });
+      await storeAudit(context, job, performed, beganAt);
+    } else if (this.#isLeaving) {
+      const message = 'The server was stopped while it worked on this; it begins again.';
+      await closeJob({ database: this.#database }, job, 'waiting', message);
+    }
+  }
+}
+
+const runners = new WeakMap<Sequelize, AuditRunner>();
+
+/** The one runner per database pool. */
+export function auditRunnerOf({ database, clock }: { database: Sequelize; clock: Clock }): AuditRunner {
+  const known = runners.get(database);
+  if (known) return known;
+  const runner = new AuditRunner(database, clock);
+  runners.set(database, runner);
+  return runner;
+}
