@@ -2,8 +2,6 @@ import type { Inks } from '#shared/drawing/inks.ts';
 import type { Picture, Shape } from '#shared/drawing/shapes.ts';
 import { setLine, type Paper } from './set-line.ts';
 
-const FAINT = { plate: 0.35, ribbon: 0.25, band: 1, caption: 1 } as const;
-
 /** Draws a picture with its upper left corner at a place of the page, as vectors; text stays text. */
 export function drawPicture(
   paper: Paper,
@@ -14,10 +12,7 @@ export function drawPicture(
   paper.save();
   paper.translate(place.x, place.y).scale(place.scale).translate(-picture.x, -picture.y);
   for (const figure of picture.figures) {
-    paper.save();
-    if (figure.isFaint) paper.opacity(FAINT[figure.kind]);
     for (const shape of figure.shapes) drawShape(paper, shape, inks);
-    paper.restore();
   }
   paper.restore();
 }

@@ -1,7 +1,7 @@
-import PDFDocument from 'pdfkit';
 import { PRINT, type Ink } from '#shared/drawing/inks.ts';
 import type { Picture, TextSpan } from '#shared/drawing/shapes.ts';
 import type { Face } from '#shared/drawing/text-width.ts';
+import { finished, newPaper, type DocumentWords } from './document.ts';
 import { drawPicture } from './draw-picture.ts';
 import { setLine, type Paper } from './set-line.ts';
 import { wrap } from './wrap.ts';
@@ -11,20 +11,36 @@ const A4 = { short: 595.28, long: 841.89 } as const;
 /** 20 mm at the sides, for holes and hands. */
 const MARGIN = { side: 56.7, top: 54, foot: 74 } as const;
 
-interface SheetWords {
-  title: string;
-  subject: string;
-  /** Names the content, so that two documents of one content carry one identifier. */
-  keywords: string;
-  /** Of the question, never of the making: the same question gives the same bytes. */
-  created: Date;
-  /** Said at the foot of each page, above its number. */
+/** Paragraphs of so many lines stay on one page. */
+const KEPT_LINES = 8;
+
+interface SheetWords extends DocumentWords {
+  /** Said at the foot of each page, beside its number. */
   foot: TextSpan[];
 }
 
 /** A span of text in document sizes, points. */
 export function span(text: string, size: number, face: Face = 'sans', ink: Ink = 'ink'): TextSpan {
   return { text, face, size, ink };
+}
+
+const RAISED = '⁻⁰¹²³⁴⁵⁶⁷⁸⁹';
+const LOWERED = '\u22120123456789';
+
+/** Exponents, and the symbols of quantities before their equals sign. */
+const SET_APART = /([⁻⁰¹²³⁴⁵⁶⁷⁸⁹]+|\b[hkU](?= = ))/;
+
+/** Prose in the serif: exponents, written as raised signs, are digits raised; symbols of quantities lean. */
+export function prose(text: string, size: number, ink: Ink = 'ink'): TextSpan[] {
+  return text
+    .split(SET_APART)
+    .map((piece, index): TextSpan => {
+      if (index % 2 === 0) return span(piece, size, 'serif', ink);
+      if (/[hkU]/.test(piece)) return span(piece, size, 'italic', ink);
+      const plain = [...piece].map((sign) => LOWERED[RAISED.indexOf(sign)]).join('');
+      return { ...span(plain, size * 0.72, 'serif', ink), rise: size * 0.36 };
+    })
+    .filter(({ text: piece }) => piece !== '');
 }
 
 /** A4 pages filled from the top, each with its foot. */
@@ -36,16 +52,7 @@ export class Sheet {
 
   constructor(words: SheetWords) {
     this.#words = words;
-    const { title, subject, keywords, created } = words;
-    this.paper = new PDFDocument({
-      autoFirstPage: false,
-      bufferPages: true,
-      pdfVersion: '1.7',
-      lang: 'en',
-      displayTitle: true,
-      info: { Title: title, Subject: subject, Keywords: keywords, Creator: 'Exagium', Producer: 'Exagium' },
-    });
-    this.paper.info.CreationDate = created;
+    this.paper = newPaper(words);
     this.addPage();
   }
 
@@ -74,21 +81,16 @@ export class Sheet {
     if (this.room < height) this.addPage(this.paper.page.width > A4.short + 1 ? 'landscape' : 'portrait');
   }
 
-  /** Rich text over as many lines and pages as it needs. */
+  /** Rich text over as many lines and pages as it needs; a short paragraph is never parted. */
   paragraph(
     spans: readonly TextSpan[],
-    {
-      leading = 14,
-      after = 6,
-      indent = 0,
-      keep = 1,
-    }: { leading?: number; after?: number; indent?: number; keep?: number } = {},
+    { leading = 14, after = 6 }: { leading?: number; after?: number } = {},
   ): void {
-    const lines = wrap(this.paper, spans, this.width - indent);
-    this.need(Math.min(lines.length, Math.max(2, keep)) * leading);
+    const lines = wrap(this.paper, spans, this.width);
+    this.need(Math.min(lines.length, KEPT_LINES) * leading);
     for (const line of lines) {
       this.need(leading);
-      setLine(this.paper, line, { x: this.left + indent, y: this.y + leading * 0.75 }, PRINT);
+      setLine(this.paper, line, { x: this.left, y: this.y + leading * 0.75 }, PRINT);
       this.y += leading;
     }
     this.y += after;
@@ -126,14 +128,7 @@ export class Sheet {
       this.paper.switchToPage(page);
       this.#foot(page - start + 1, count);
     }
-    const chunks: Buffer[] = [];
-    const whole = new Promise<Buffer>((resolve, reject) => {
-      this.paper.on('data', (chunk: Buffer) => chunks.push(chunk));
-      this.paper.on('end', () => resolve(Buffer.concat(chunks)));
-      this.paper.on('error', reject);
-    });
-    this.paper.end();
-    return whole;
+    return finished(this.paper);
   }
 
   #foot(page: number, pages: number): void {

@@ -1,0 +1,1 @@
+export { statementRoutes } from './statements.routes.ts';
