@@ -27,8 +27,10 @@ export type LifeEvent = z.infer<typeof LifeEvent>;
 export const ChainLifeResponse = z.object({
   valueUid: Id,
   registryNo: z.string(),
+  /** The first day on which something happened, and the last, which may lie ahead; today where none does. */
   from: Day,
   to: Day,
+  today: Day,
   /** In the order of the days from which they count. */
   events: z.array(LifeEvent),
 });

@@ -186,6 +186,8 @@ export const AsNowKnown = z.object({
   /** U at the certificate's k, local parts frozen. */
   expandedU: z.number().nullable(),
   because: z.string().nullable(),
+  /** Whether the declared rule accepts the class stated for it, before and after; null where it cannot be judged. */
+  keepsClass: z.object({ certified: z.boolean(), now: z.boolean() }).nullable(),
   /** Values whose certificate was superseded or withdrawn; `byUid` is null where nothing has taken its place. */
   replaced: z.array(
     z.object({

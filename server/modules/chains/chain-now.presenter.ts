@@ -2,6 +2,7 @@ import type { z } from 'zod';
 import type { AsNowKnown, ChainResponse, ChainValue } from '#shared/contracts/chains.ts';
 import { Decimal, decimalText } from '#shared/decimal.ts';
 import type { Chain } from './chain.service.ts';
+import { keepsClass } from './keeps-class.ts';
 import type { Move } from './moves.ts';
 import type { StoredValue } from './stored.ts';
 
@@ -15,6 +16,7 @@ export function presentAsNowKnown(chain: Chain, k: number): AsNowKnown | null {
   const u = now.numbers.propagation.standardUncertainty;
   return {
     ...moved(focus, now.focus),
+    keepsClass: keepsClass(chain),
     expandedU: u === null || now.focus.shift === null ? null : u * k,
     replaced: now.replaced.map(({ value, by, shift }) => ({
       uid: value.uid,

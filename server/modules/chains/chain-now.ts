@@ -26,6 +26,8 @@ export interface ChainNow {
   moves: Moves;
   /** The focus as its references stand now. */
   focus: Move;
+  /** Variance that its chain has gained since it was certified, g2, signed; null where either is not computable. */
+  addedVariance: number | null;
   replaced: ReplacedValue[];
 }
 
@@ -61,8 +63,14 @@ export function readAsNowKnown(closure: Closure, focus: StoredValue, found: Succ
     fates: found.fates,
     moves,
     focus: because ? { shift: null, because, isTouched: true } : moves.of(focus),
+    addedVariance: gained(chainNumbers(closure, focus.uid), numbers),
     replaced: replacedValues(found.closure, now, numbers, found.fates),
   };
+}
+
+function gained({ propagation: before }: ChainNumbers, { propagation: after }: ChainNumbers): number | null {
+  const [was, is] = [before.standardUncertainty, after.standardUncertainty];
+  return was === null || is === null ? null : is ** 2 - was ** 2;
 }
 
 /** What became of the values of a chain, and the chain widened by all that took their place. */

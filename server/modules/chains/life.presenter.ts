@@ -18,6 +18,7 @@ export function presentLife(life: Life, user: User, subject: ChainSubject): Chai
     registryNo: life.focus.registryNo,
     from: days[0] ?? life.focus.performedEnd,
     to: [life.today, days.at(-1) ?? life.today].sort().at(-1)!,
+    today: life.today,
     events,
   };
 }
