@@ -33,6 +33,23 @@ export function checkRows(chain: ChainResponse): Row[] {
     );
 }
 
+/** What failed, in sentences, by the value whose step it is: a link belongs to the value that leans. */
+export function failingSentences(chain: ChainResponse): Map<string, string[]> {
+  const rules = new Map(chain.rules.map((rule) => [rule.id, rule]));
+  const found = new Map<string, string[]>();
+  for (const { subject, rule: id, sentence, parameters, outcome } of chain.checks) {
+    if (outcome !== 'fails' || subject.type === 'chain') continue;
+    const uid = subject.type === 'value' ? subject.uid : subject.childUid;
+    const rule = rules.get(id)!;
+    const words =
+      sentence === null ? `${rule.title}: this fails.` : fillSentence(rule.sentences[sentence]!, parameters);
+    const told = found.get(uid) ?? [];
+    // What fails under both verdicts is told once.
+    if (!told.includes(`${words} (${id})`)) found.set(uid, [...told, `${words} (${id})`]);
+  }
+  return found;
+}
+
 /** Outcomes of one rule under one verdict, counted. */
 export interface RuleCount {
   rule: string;

@@ -3,7 +3,7 @@ import type { StatementQuery, StatementResponse, StatementStep } from '#shared/c
 import { namesOf } from '#shared/drawing/link-order.ts';
 import { datedTo } from '#shared/numbers/dated-to.ts';
 import { groupBy } from '#shared/group-by.ts';
-import { checkRows } from './check-rows.ts';
+import { checkRows, failingSentences } from './check-rows.ts';
 import { contentOf } from './content.ts';
 import { notSaid } from './not-said.ts';
 import { summaryOf } from './summary.ts';
@@ -55,20 +55,27 @@ export function focusOf(chain: ChainResponse): ChainValue {
 /** From the weight upwards; in a tier what carries more comes first. */
 function stepsOf(chain: ChainResponse, values: readonly ChainValue[]): StatementStep[] {
   const names = namesOf(chain);
+  const failing = failingSentences(chain);
   const linksOf = groupBy(chain.links, (link) => link.childUid);
   return values
     .toSorted((a, b) => a.tier - b.tier || Math.abs(b.share ?? 0) - Math.abs(a.share ?? 0))
-    .map((value) => stepOf(value, linksOf.get(value.uid) ?? [], names, chain.focusUid));
+    .map((value) =>
+      stepOf(value, linksOf.get(value.uid) ?? [], {
+        names,
+        failing: failing.get(value.uid) ?? [],
+        isFocus: value.uid === chain.focusUid,
+      }),
+    );
 }
 
 function stepOf(
   value: ChainValue,
   links: readonly ChainLink[],
-  names: ReadonlyMap<string, string>,
-  focusUid: string,
+  context: Parameters<typeof stepWords>[2],
 ): StatementStep {
   const isTold =
-    value.uid === focusUid ||
+    context.isFocus ||
+    context.failing.length > 0 ||
     value.share === null ||
     Math.abs(value.share) >= WORTH_TELLING ||
     value.state === 'withdrawn' ||
@@ -84,10 +91,10 @@ function stepOf(
     determinedOn: datedTo(value.performedEnd, value.datePrecision),
     leanedOn: links.map(
       ({ parentUid, role, usedAs, usedBegin, usedEnd, sensitivity, flow, conduct, today }) => ({
-        ...{ uid: parentUid, name: names.get(parentUid)!, role, usedAs, usedBegin, usedEnd },
+        ...{ uid: parentUid, name: context.names.get(parentUid)!, role, usedAs, usedBegin, usedEnd },
         ...{ sensitivity, flow, conduct, today },
       }),
     ),
-    words: isTold ? stepWords(value, links, names, value.uid === focusUid) : null,
+    words: isTold ? stepWords(value, links, context) : null,
   };
 }

@@ -1,6 +1,6 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { shareText } from '#shared/numbers/share-text.ts';
-import { shiftWords, uncertaintyWords } from './words.ts';
+import { isZero, shiftWords, uncertaintyWords } from './words.ts';
 
 /** The whole in a few sentences: how far it goes, how it was judged, what is uncertain and why. */
 export function summaryOf(chain: ChainResponse): string[] {
@@ -68,5 +68,7 @@ function changeSentence({ asNowKnown }: ChainResponse): string {
   ].join('; ');
   if (asNowKnown.shift === null)
     return `What the weight would be as now known cannot be worked out: ${asNowKnown.because ?? 'a value is missing'} (${causes}).`;
+  if (isZero(asNowKnown.shift))
+    return `Something that the weight rests on has changed, and the weight does not move: ${causes}.`;
   return `As now known the weight lies ${shiftWords(asNowKnown.shift)} from what was certified: ${causes}.`;
 }

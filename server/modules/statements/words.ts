@@ -1,4 +1,5 @@
 import type { ChainLink, ChainResponse, ChainValue } from '#shared/contracts/chains.ts';
+import { Decimal } from '#shared/decimal.ts';
 import { datedTo } from '#shared/numbers/dated-to.ts';
 import { quantitySpans } from '#shared/numbers/ink-spans.ts';
 import { nominalText } from '#shared/numbers/nominal.ts';
@@ -44,6 +45,11 @@ export function uncertaintyWords(grams: number, k: number): string {
   return plain({ value: grams.toFixed(15), kind: 'uncertainty', coverageFactor: k, shownIn: 'auto' });
 }
 
+/** Whether a shift in grams moves nothing. */
+export function isZero(grams: string): boolean {
+  return new Decimal(grams).isZero();
+}
+
 /** A shift in grams, with its sign. */
 export function shiftWords(grams: string): string {
   return plain({ value: grams, kind: 'deviation', shownIn: 'auto' });
@@ -75,12 +81,18 @@ export function definitionWords(definition: ChainResponse['definition']): string
   return definition === 'international prototype' ? prototype : `${prototype}; and ${planck}`;
 }
 
+interface StepContext {
+  names: ReadonlyMap<string, string>;
+  /** What failed at this step, in sentences. */
+  failing: readonly string[];
+  isFocus: boolean;
+}
+
 /** One step of the chain as a calm paragraph: who, when, what, on what, and how that stands. */
 export function stepWords(
   value: ChainValue,
   links: readonly ChainLink[],
-  names: ReadonlyMap<string, string>,
-  isFocus: boolean,
+  { names, failing, isFocus }: StepContext,
 ): string {
   const references = links.filter((link) => link.role === 'reference');
   const informing = links.filter((link) => link.role === 'informs');
@@ -90,6 +102,7 @@ export function stepWords(
     value.scaleVersion === null ? '' : `It is given on the mass scale ${value.scaleVersion}.`,
     ...references.map((link) => linkSentence(link, names)),
     informing.length === 0 ? '' : `${namesIn(informing, names)} informed it; nothing flows.`,
+    ...failing,
     standingSentence(value),
     nowSentence(value),
   ]
@@ -142,7 +155,9 @@ function nowSentence({ now }: ChainValue): string {
   if (now === null) return '';
   if (now.shift === null)
     return `What it would be as now known cannot be worked out: ${now.because ?? 'a value is missing'}.`;
-  return `As now known it lies ${shiftWords(now.shift)} from what was certified.`;
+  return isZero(now.shift)
+    ? 'Something it rests on has changed since; the value itself does not move.'
+    : `As now known it lies ${shiftWords(now.shift)} from what was certified.`;
 }
 
 function namesIn(links: readonly ChainLink[], names: ReadonlyMap<string, string>): string {
