@@ -7,6 +7,8 @@ import type { LinkFacts, Question } from './facts.ts';
 
 const programme = (intervalMonths: number, recordedOn = '2020-01-01') => ({
   intervalMonths,
+  method: 'fixed interval',
+  justification: 'Three calibrations have shown no change beyond a third of U.',
   validFrom: '2020-01-01',
   validTo: null,
   recordedAt: `${recordedOn}T08:00:00.000000Z`,

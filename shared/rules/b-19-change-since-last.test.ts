@@ -1,6 +1,6 @@
 import { expect, it } from 'vitest';
 import { changeSinceLast } from './b-19-change-since-last.ts';
-import { historyFacts, judgedBy, valueFacts } from './example-facts.ts';
+import { historyFacts, judgedBy, valueFacts, WEIGHT } from './example-facts.ts';
 import type { HistoryFacts, ValueFacts } from './facts.ts';
 
 /** U is 0.30 mg on both sides: U of the change 0.424 mg. */
@@ -54,6 +54,19 @@ it('leaves the question to the value before, where an older one agrees', () => {
   expect(judge('0.0002', [past('0.0002', 2021, { expandedU: null }), past('0.0009', 2023)]).outcome).toBe(
     'fails',
   );
+});
+
+it('weighs a large change against the drift declared for the weight', () => {
+  // 0.7 mg in 2.1 years, U of the change 0.424 mg; a drift of u 0.15 mg a year brings U 0.63 mg in that time.
+  const drifting = (u: number, determinedOn: string | null = null) =>
+    judge('0.0002', [past('0.0009')], { weight: { ...WEIGHT, driftRates: [{ u, determinedOn }] } });
+  const within = drifting(0.00015);
+  expect(within).toMatchObject({ outcome: 'holds', severity: 'information', sentence: 'within drift' });
+  expect(within.text).toContain(
+    '1.6 of its U, and 0.92 of it with the drift declared for MI 0007, 0.63\u2009mg',
+  );
+  expect(drifting(0.00001)).toMatchObject({ outcome: 'fails', sentence: 'beyond drift' });
+  expect(drifting(0.00015, '2026-01-01').sentence).toBe('large');
 });
 
 it('lets an M weight wear by its maximum permissible error', () => {

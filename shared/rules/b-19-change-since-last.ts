@@ -2,7 +2,15 @@ import type { HistoryFacts, ValueFacts } from './facts.ts';
 import { isUnitQuestioned } from './b-18-unit.ts';
 import { dateText } from './days.ts';
 import { mpeOf } from './mpe.ts';
-import { certificateText, deviationOf, ratioText, statedU, uOfDifference, valueText } from './numbers.ts';
+import {
+  amountText,
+  certificateText,
+  deviationOf,
+  ratioText,
+  statedU,
+  uOfDifference,
+  valueText,
+} from './numbers.ts';
 import {
   CLEAR_CHANGE,
   isExchanged,
@@ -11,12 +19,16 @@ import {
   splitHistory,
   wasExchanged,
 } from './odd-one-out.ts';
-import { cannotBeJudged, doesNotApply, fails, holds, type ValueRule } from './rule.ts';
+import { cannotBeJudged, doesNotApply, fails, holds, type Finding, type ValueRule } from './rule.ts';
+
+/** A year of 365.25 days. */
+const MILLISECONDS_OF_YEAR = 31_557_600_000;
 
 /**
  * Change since the last calibration of the same epoch against its U (k = 2) with covariance. Between 1 and 1.5 it is
- * a question only: 4.6 % of honest pairs lie there or beyond. An M weight in service may wear by its maximum
- * permissible error (common practice, no source). One fault is reported once: a value whose sign, unit or identity
+ * a question only: 4.6 % of honest pairs lie there or beyond. Where a drift was declared for the weight, a change
+ * beyond U is weighed against U and that drift together, since results in between counted with it. An M weight in
+ * service may wear by its maximum permissible error (common practice, no source). One fault is reported once: a value whose sign, unit or identity
  * is asked about is not asked about again, and its successor is compared with the value before it.
  */
 export const changeSinceLast: ValueRule = {
@@ -37,6 +49,10 @@ export const changeSinceLast: ValueRule = {
       'Differs from certificate {previous} ({previousValue}) by {ratio} of its U, but agrees with the value before it: the question belongs to {previous}.',
     adjusted:
       'Found at {value}, {ratio} of its U away from {previousValue} (certificate {previous}, {previousDate}), and {reason} in the same calibration: the change has been dealt with.',
+    'within drift':
+      'Changed from {previousValue} (certificate {previous}, {previousDate}) to {value}: {ratio} of its U, and {driftRatio} of it with the drift declared for {registryNo}, {allowance} in that time.',
+    'beyond drift':
+      'Changed from {previousValue} (certificate {previous}, {previousDate}) to {value} (certificate {certificate}): {ratio} of its U, and {driftRatio} of it even with the drift declared for {registryNo}, {allowance} in that time. Results in between counted with less.',
     wear: 'Changed from {previousValue} to {value}, {ratio} of its U, within what class {class} allows for wear.',
     first: 'There is no earlier value of {registryNo} in this epoch to compare with.',
     'asked elsewhere':
@@ -69,14 +85,38 @@ export const changeSinceLast: ValueRule = {
     }
     if (isWear(value, previous)) return holds('wear', parameters, 'information');
     const hasReturned = before.some((past) => (changeRatio(value, past) ?? Infinity) <= 1);
-    return hasReturned ? holds('returned', parameters, 'information') : fails('large', parameters);
+    if (hasReturned) return holds('returned', parameters, 'information');
+    return judgeDrift(value, previous, parameters) ?? fails('large', parameters);
   },
 };
 
-/** |change| / U(change), k = 2; null where either states no U. */
-function changeRatio(value: ValueFacts, past: HistoryFacts): number | null {
+/** |change| / U(change), k = 2, with a further u if there is one; null where either states no U. */
+function changeRatio(value: ValueFacts, past: HistoryFacts, uMore = 0): number | null {
   const u = uOfDifference(value, past, past.covariance);
-  return u === null ? null : Math.abs(deviationOf(value) - deviationOf(past)) / (2 * u);
+  return u === null ? null : Math.abs(deviationOf(value) - deviationOf(past)) / (2 * Math.hypot(u, uMore));
+}
+
+/** A change beyond U against the drift that was declared for the weight; null where none was by then. */
+function judgeDrift(
+  value: ValueFacts,
+  previous: HistoryFacts,
+  parameters: Record<string, string>,
+): Finding | null {
+  const rates = value.weight.driftRates.filter(
+    ({ determinedOn }) => determinedOn === null || determinedOn <= value.performedEnd,
+  );
+  if (rates.length === 0) return null;
+  const years = (Date.parse(value.performedEnd) - Date.parse(previous.performedEnd)) / MILLISECONDS_OF_YEAR;
+  const u = Math.max(...rates.map((rate) => rate.u)) * years;
+  const ratio = changeRatio(value, previous, u) ?? 0;
+  const withDrift = {
+    ...parameters,
+    driftRatio: ratioText(ratio),
+    allowance: amountText(2 * u, value),
+  };
+  return ratio > CLEAR_CHANGE
+    ? fails('beyond drift', withDrift)
+    : holds('within drift', withDrift, 'information');
 }
 
 function isAskedElsewhere(value: ValueFacts): boolean {

@@ -1,6 +1,7 @@
 import type { ChainFacts, HistoryFacts, LinkFacts, Question, ScopeLineFacts, ValueFacts } from './facts.ts';
 import type { Finding, RuleHead, VerdictName } from './rule.ts';
 import { fillSentence } from './sentence.ts';
+import type { BudgetFacts, SheetFacts, WeightFacts } from './weight-facts.ts';
 
 /*
  * An invented chain for the tests of the rules: an institute's 1 kg weight, a laboratory's 1 kg reference calibrated
@@ -37,6 +38,56 @@ export const SCOPE_LINE: ScopeLineFacts = {
   validFrom: '2015-01-01',
   validTo: null,
   recordedAt: '2015-01-01T10:00:00.000000Z',
+};
+
+/** A knobbed weight with a serial number, its magnetic properties measured. */
+export const WEIGHT: WeightFacts = {
+  kind: 'weight',
+  serial: '4711',
+  shape: 'knob',
+  classClaimed: 'E2',
+  isInSet: false,
+  alike: [],
+  volume: null,
+  susceptibility: { value: '0.004', expandedU: '0.0008', k: '2', origin: 'measured' },
+  polarisation: { value: '0.2', expandedU: '0.4', k: '2', origin: 'measured' },
+  densityOnlyFrom: null,
+  driftRates: [],
+};
+
+/** Issued under the hand of an authorised signatory, the weight as it was received. */
+export const SHEET: SheetFacts = {
+  isIssued: true,
+  signatory: [
+    {
+      state: 'granted',
+      validFrom: '2018-01-01',
+      validTo: null,
+      recordedAt: '2018-01-01T08:00:00.000000Z',
+    },
+  ],
+  hasAuthorisations: true,
+  amendmentReason: null,
+  stages: [null],
+  epoch: { n: 1, reason: 'new', beginsOn: '2019-05-02' },
+};
+
+/** A budget with all that a comparison of two steel kilograms needs. */
+export const BUDGET: BudgetFacts = {
+  components: ['Repeatability', 'Reference since its calibration', 'Balance', 'Air density'],
+  effects: [],
+  references: [
+    {
+      registryNo: 'RL 0001',
+      standardId: 'standard-reference',
+      kind: 'weight',
+      rootKind: 'recognized certificate',
+      usedAs: 'certificate',
+    },
+  ],
+  nuEff: null,
+  ownU: 0.00013,
+  ownDegreesOfFreedom: 40,
 };
 
 /** The weight at the end: 1 kg, E2, calibrated 2025-03-10 by the laboratory for its customer, U 0.30 mg. */
@@ -100,6 +151,9 @@ export function valueFacts(changes: Partial<ValueFacts> = {}): ValueFacts {
     sharedAncestors: [],
     history: [],
     duplicates: [],
+    weight: WEIGHT,
+    sheet: SHEET,
+    budget: BUDGET,
     ...changes,
   };
 }
@@ -117,6 +171,7 @@ export function referenceFacts(changes: Partial<ValueFacts> = {}): ValueFacts {
     calibrationId: 'calibration-reference',
     standardId: 'standard-reference',
     registryNo: 'RL 0001',
+    density: { value: '8000', expandedU: '1', k: '2', origin: 'measured' },
     issuer: INSTITUTE,
     holder: LABORATORY,
     class: 'E1',
@@ -125,6 +180,8 @@ export function referenceFacts(changes: Partial<ValueFacts> = {}): ValueFacts {
     recognitions: [{ ...valueFacts().recognitions[0]!, kind: 'institute arrangement', number: 'A-02' }],
     references: 0,
     rootKind: 'recognized certificate',
+    weight: { ...WEIGHT, classClaimed: 'E1', shape: 'cylinder' },
+    budget: { ...BUDGET, components: [], references: [], ownDegreesOfFreedom: null },
     ...changes,
   });
 }
@@ -145,6 +202,8 @@ export function linkFacts(changes: Partial<LinkFacts> = {}): LinkFacts {
     programmes: [
       {
         intervalMonths: 36,
+        method: 'fixed interval',
+        justification: 'Three calibrations have shown no change beyond a third of U.',
         validFrom: '2020-01-01',
         validTo: null,
         recordedAt: '2020-01-01T08:00:00.000000Z',

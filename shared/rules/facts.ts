@@ -8,6 +8,7 @@ import type {
   Stage,
   WeightClass,
 } from '#shared/contracts/common.ts';
+import type { BudgetFacts, SheetFacts, WeightFacts } from './weight-facts.ts';
 
 /*
  * What the rules read: plain data, assembled once per question by the server. Masses are decimal text in grams,
@@ -56,6 +57,8 @@ export interface ScopeLineFacts extends Assertion {
 /** A row of `programme`: the laboratory's own rule for one of its references. */
 export interface ProgrammeFacts extends Assertion {
   intervalMonths: number;
+  method: string;
+  justification: string;
 }
 
 /** Density of a standard in force on the last day of the weighing. */
@@ -169,6 +172,9 @@ export interface ValueFacts extends ResultFacts, DatesFacts {
   /** Every other value of this standard in force (same quantity, medium, epoch, other calibration), oldest first. */
   history: HistoryFacts[];
   duplicates: DuplicateFacts[];
+  weight: WeightFacts;
+  sheet: SheetFacts;
+  budget: BudgetFacts;
 }
 
 /** Another value of the parent's standard (same quantity and medium, other calibration): was there a newer one? */

@@ -87,14 +87,19 @@ export function amountText(grams: number | Decimal, like: Pick<ResultFacts, 'rep
   return quantityText(amount, like.reportedUnit, decimals, false);
 }
 
-/** A fraction as a percentage for reading. */
-export function percentText(fraction: number): string {
-  return `${new Decimal(fraction).times(100).toSignificantDigits(2).toFixed()} %`;
+/** A fraction as a percentage for reading, to two significant digits unless said otherwise. */
+export function percentText(fraction: number, digits = 2): string {
+  return `${new Decimal(fraction).times(100).toSignificantDigits(digits).toFixed()} %`;
 }
 
 /** A ratio for reading, to two significant digits. */
 export function ratioText(ratio: number): string {
   return new Decimal(ratio).toSignificantDigits(2).toFixed();
+}
+
+/** A plain number for reading, to so many significant digits. */
+export function roundedText(value: number, digits: number): string {
+  return new Decimal(value).toSignificantDigits(digits).toFixed();
 }
 
 /** A certificate for reading; the revision is named from the second on. */

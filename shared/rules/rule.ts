@@ -62,9 +62,9 @@ export function fails(sentence: string, parameters: Parameters = {}, severity?: 
   return { outcome: 'fails', sentence, parameters, ...(severity && { severity }) };
 }
 
-/** A datum is missing; the sentence names it. */
-export function cannotBeJudged(sentence: string, parameters: Parameters = {}): Finding {
-  return { outcome: 'cannot be judged', sentence, parameters };
+/** A datum is missing; the sentence names it. `severity` where it would not decide as much as the rule itself. */
+export function cannotBeJudged(sentence: string, parameters: Parameters = {}, severity?: Severity): Finding {
+  return { outcome: 'cannot be judged', sentence, parameters, ...(severity && { severity }) };
 }
 
 /** The rule has nothing to say here; the sentence says why. */

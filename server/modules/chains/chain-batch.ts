@@ -48,6 +48,7 @@ export async function chainBatch(
     laboratories,
     numbers,
     byId,
+    sources: widened.sources,
     notices: store.notices,
     noticesOfLinks: noticesOfLinks(widened, store.notices, question.known),
   };

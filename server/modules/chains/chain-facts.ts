@@ -21,8 +21,10 @@ import type {
   StoredEnd,
   StoredHistoryValue,
   StoredLink,
+  StoredSource,
   StoredValue,
 } from './stored.ts';
+import { budgetFacts, sheetFacts, weightFacts } from './weight-facts.ts';
 
 /** What the assembly reads: plain maps, filled by the service. */
 export interface FactParts {
@@ -32,6 +34,8 @@ export interface FactParts {
   numbers: ChainNumbers;
   /** Values of the closure by id. */
   byId: Map<number, StoredValue>;
+  /** What the values of the closure lean on beside each other. */
+  sources: ReadonlyMap<number, StoredSource>;
   /** Every notice recorded, and those that each link left out. */
   notices: readonly Notice[];
   noticesOfLinks: NoticesOfLinks;
@@ -83,6 +87,9 @@ export function valueFacts(value: StoredValue, parts: FactParts): ValueFacts {
     sharedAncestors: [...carried.shared].map((id) => parts.byId.get(id)!.registryNo),
     history: historyFacts(dossier, value, parts),
     duplicates: duplicateFacts(dossier, value, parts),
+    weight: weightFacts(value, parts),
+    sheet: sheetFacts(value, parts),
+    budget: budgetFacts(value, parts),
   };
 }
 

@@ -26,10 +26,15 @@ const TOUCHED_STANDARDS = `
   UNION SELECT standard_id FROM programme WHERE act_seq > :seq
   UNION SELECT standard_id FROM epoch WHERE act_seq > :seq
   UNION SELECT standard_id FROM property WHERE act_seq > :seq
-  UNION SELECT standard_id FROM set_member WHERE act_seq > :seq`;
+  UNION SELECT standard_id FROM set_member WHERE act_seq > :seq
+  UNION SELECT standard_id FROM standard_fact WHERE act_seq > :seq AND kind = 'class'
+  UNION SELECT standard_id FROM source WHERE id > :source AND standard_id IS NOT NULL`;
+/** The newest act, and the newest source: ids of sources follow the acts. */
+const NEWEST = 'SELECT (SELECT MAX(seq) FROM act) AS seq, (SELECT MAX(id) FROM source) AS source';
 const TOUCHED_LABORATORIES = `
   SELECT laboratory_id AS id FROM scope_line WHERE act_seq > :seq
-  UNION SELECT laboratory_id FROM recognition WHERE act_seq > :seq`;
+  UNION SELECT laboratory_id FROM recognition WHERE act_seq > :seq
+  UNION SELECT laboratory_id FROM authorisation WHERE act_seq > :seq`;
 
 /**
  * The part of the register that chains have asked about, in memory. Recorded values never change, so they are
@@ -45,6 +50,8 @@ export class ChainStore {
   readonly #laboratories = new Map<string, LaboratoryDossier>();
   #notices: readonly Notice[] = [];
   #seq = -1;
+  /** The newest source then. */
+  #source = 0;
   #catchingUp: Promise<void> | null = null;
 
   constructor(database: Sequelize) {
@@ -132,7 +139,7 @@ export class ChainStore {
   }
 
   async #lookForActs(): Promise<void> {
-    const head = await readRow<{ seq: number | null }>(this.#database, 'SELECT MAX(seq) AS seq FROM act');
+    const head = await readRow<{ seq: number | null; source: number | null }>(this.#database, NEWEST);
     const seq = head?.seq ?? 0;
     if (seq === this.#seq) return;
     if (this.#seq === -1 || (await isNoticeSince(this.#database, this.#seq))) {
@@ -141,6 +148,7 @@ export class ChainStore {
     if (this.#seq === -1) await this.#readSmallRegister();
     else await this.#forgetTouched();
     this.#seq = seq;
+    this.#source = head?.source ?? 0;
   }
 
   /** A small register is read in one go: the first visitor's chain is then as quick as the hundredth. */
@@ -158,7 +166,10 @@ export class ChainStore {
 
   async #forgetTouched(): Promise<void> {
     const [standards, laboratories] = await Promise.all([
-      readRows<{ id: string }>(this.#database, TOUCHED_STANDARDS, { seq: this.#seq }),
+      readRows<{ id: string }>(this.#database, TOUCHED_STANDARDS, {
+        seq: this.#seq,
+        source: this.#source,
+      }),
       readRows<{ id: string }>(this.#database, TOUCHED_LABORATORIES, { seq: this.#seq }),
     ]);
     for (const { id } of standards) this.#standards.delete(id);

@@ -111,6 +111,7 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as
     laboratories,
     numbers: numbersAsUsed,
     byId: new Map(widened.values.map((value) => [value.id, value])),
+    sources: widened.sources,
     notices: store.notices,
     noticesOfLinks: noticesOfLinks(widened, store.notices, question.known),
   };

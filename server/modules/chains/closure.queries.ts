@@ -27,7 +27,7 @@ const VALUES = `
     v.local_u AS localU, v.local_origin AS localOrigin, v.local_degrees_of_freedom AS localDegreesOfFreedom,
     v.local_estimate AS localEstimate, v.root_kind AS rootKind, sv.name AS scaleVersion, v.class,
     v.under_accreditation AS underAccreditation, v.unit_confirmed AS unitConfirmed, v.changed,
-    r.decision_rule AS decisionRule, r.method, r.performed_begin AS performedBegin,
+    r.decision_rule AS decisionRule, r.signatory_id AS signatoryId, r.reason AS amendmentReason, r.method, r.performed_begin AS performedBegin,
     v.performed_end AS performedEnd, v.date_precision AS datePrecision, v.effective_from AS issuedOn,
     ${INSTANT('v.recorded_at')} AS recordedAt,
     (SELECT COUNT(DISTINCT o.id) FROM assigned_value o JOIN value_link l ON l.child_id = o.id
@@ -49,6 +49,9 @@ const LINKS = `
 const SOURCE_LINKS = `
   SELECT child_id AS childId, source_id AS sourceId, sensitivity
   FROM source_link WHERE child_id IN (:ids) ORDER BY child_id, source_id`;
+
+const COMPONENTS = `
+  SELECT value_id AS valueId, name FROM component WHERE value_id IN (:ids) ORDER BY value_id, n`;
 
 const GROUP_MEMBERS = `
   SELECT row_id AS valueId, group_id AS groupId FROM group_covariance
@@ -74,15 +77,17 @@ export async function ancestorIds(database: Sequelize, ids: readonly number[]): 
 /** The values with their links; every id is expected to exist. */
 export async function storedValues(database: Sequelize, ids: number[]): Promise<StoredValue[]> {
   if (ids.length === 0) return [];
-  type Row = Omit<StoredValue, 'parents' | 'sources' | 'groupId'>;
-  const [values, links, sourceLinks, members] = await Promise.all([
+  type Row = Omit<StoredValue, 'parents' | 'sources' | 'components' | 'groupId'>;
+  const [values, links, sourceLinks, components, members] = await Promise.all([
     readRows<Row>(database, VALUES, { ids }),
     readRows<StoredLink & { childId: number }>(database, LINKS, { ids }),
     readRows<StoredSourceLink & { childId: number }>(database, SOURCE_LINKS, { ids }),
+    readRows<{ valueId: number; name: string }>(database, COMPONENTS, { ids }),
     readRows<{ valueId: number; groupId: number }>(database, GROUP_MEMBERS, { ids }),
   ]);
   const parents = groupBy(links, (link) => link.childId);
   const sources = groupBy(sourceLinks, (link) => link.childId);
+  const budgets = namesByValue(components);
   const groups = new Map(members.map((member) => [member.valueId, member.groupId]));
   return values.map((row) => ({
     ...row,
@@ -92,8 +97,25 @@ export async function storedValues(database: Sequelize, ids: number[]): Promise<
     unitConfirmed: Boolean(row.unitConfirmed),
     parents: (parents.get(row.id) ?? []).map(({ childId: _, ...link }) => link),
     sources: (sources.get(row.id) ?? []).map(({ childId: _, ...link }) => link),
+    components: budgets.get(row.id) ?? NO_BUDGET,
     groupId: groups.get(row.id) ?? null,
   }));
+}
+
+const NO_BUDGET: readonly string[] = [];
+
+/** Budgets of one laboratory have the same names again and again: each list is kept once. */
+function namesByValue(rows: readonly { valueId: number; name: string }[]): Map<number, readonly string[]> {
+  const lists = new Map<string, readonly string[]>();
+  const byValue = new Map<number, readonly string[]>();
+  for (const [valueId, components] of groupBy(rows, (row) => row.valueId)) {
+    const names = components.map(({ name }) => name);
+    const key = JSON.stringify(names);
+    const list = lists.get(key) ?? names;
+    lists.set(key, list);
+    byValue.set(valueId, list);
+  }
+  return byValue;
 }
 
 /** Shared effects by id. */

@@ -5,6 +5,9 @@ import { readRows } from '#server/db/read.ts';
 import type {
   LaboratoryDossier,
   StandardDossier,
+  StoredAuthorisation,
+  StoredClass,
+  StoredDriftRate,
   StoredEnd,
   StoredEpoch,
   StoredHistoryValue,
@@ -18,7 +21,19 @@ const ASSERTED = `valid_from AS validFrom, valid_to AS validTo, act_seq AS actSe
   DATE_FORMAT(recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt`;
 
 const STANDARDS = `
-  SELECT id AS standardId, registry_no AS registryNo, marking, nominal FROM standard WHERE id IN (:ids)`;
+  SELECT s.id AS standardId, s.registry_no AS registryNo, s.marking, s.nominal, s.kind, s.serial, s.shape,
+    EXISTS (SELECT 1 FROM set_member m WHERE m.standard_id = s.id) AS isInSet
+  FROM standard s WHERE s.id IN (:ids)`;
+
+const CLASSES = `
+  SELECT standard_id AS standardId, value, ${ASSERTED}
+  FROM standard_fact WHERE standard_id IN (:ids) AND kind = 'class' AND value IS NOT NULL`;
+
+/** Rates only: a drift given in grams for one interval says nothing of another. */
+const DRIFT_RATES = `
+  SELECT standard_id AS standardId, u, determined_on AS determinedOn,
+    DATE_FORMAT(recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt
+  FROM source WHERE standard_id IN (:ids) AND kind = 'drift' AND unit = 'g/a'`;
 
 const HISTORY = `
   SELECT v.standard_id AS standardId, v.id, v.uid, r.calibration_id AS calibrationId, v.revision_id AS revisionId,
@@ -52,7 +67,8 @@ const EPOCHS = `
   FROM epoch WHERE standard_id IN (:ids) ORDER BY n`;
 
 const PROGRAMMES = `
-  SELECT standard_id AS standardId, laboratory_id AS laboratoryId, interval_months AS intervalMonths, method, ${ASSERTED}
+  SELECT standard_id AS standardId, laboratory_id AS laboratoryId, interval_months AS intervalMonths, method,
+    justification, ${ASSERTED}
   FROM programme WHERE standard_id IN (:ids)`;
 
 const PROPERTIES = `
@@ -78,32 +94,46 @@ const RECOGNITIONS = `
   SELECT laboratory_id AS laboratoryId, kind, body, number, arrangement, state, ${ASSERTED}
   FROM recognition WHERE laboratory_id IN (:ids)`;
 
+const AUTHORISATIONS = `
+  SELECT laboratory_id AS laboratoryId, account_id AS accountId, state, ${ASSERTED}
+  FROM authorisation WHERE laboratory_id IN (:ids) AND what = 'sign calibrations'`;
+
+/** A row of `standard`; MariaDB gives the answer of EXISTS as 0 or 1. */
+type StandardRow = Pick<
+  StandardDossier,
+  'standardId' | 'registryNo' | 'marking' | 'nominal' | 'kind' | 'serial' | 'shape'
+> & { isInSet: number };
+
 type Of<T, Key extends string> = T & Record<Key, string>;
 
-/** What later acts may have added to these standards: history with its ends, programmes, properties, duplicates. */
+/** What later acts may have added to these standards: history with its ends, programmes, properties, classes, drifts, duplicates. */
 export async function standardDossiers(database: Sequelize, ids: string[]): Promise<StandardDossier[]> {
   if (ids.length === 0) return [];
-  const [standards, history, ends, epochs, programmes, properties, duplicates] = await Promise.all([
-    readRows<Pick<StandardDossier, 'standardId' | 'registryNo' | 'marking' | 'nominal'>>(
-      database,
-      STANDARDS,
-      { ids },
-    ),
-    readRows<Of<Omit<StoredHistoryValue, 'ends'>, 'standardId'>>(database, HISTORY, { ids }),
-    readRows<StoredEnd & { valueId: number }>(database, ENDS, { ids }),
-    readRows<Of<StoredEpoch, 'standardId'>>(database, EPOCHS, { ids }),
-    readRows<Of<StoredProgramme, 'standardId'>>(database, PROGRAMMES, { ids }),
-    readRows<Of<StoredProperty, 'standardId'>>(database, PROPERTIES, { ids }),
-    readRows<{ standardId: string; duplicateId: string }>(database, DUPLICATES, { ids }),
-  ]);
+  const [standards, history, ends, epochs, programmes, properties, duplicates, classes, driftRates] =
+    await Promise.all([
+      readRows<StandardRow>(database, STANDARDS, { ids }),
+      readRows<Of<Omit<StoredHistoryValue, 'ends'>, 'standardId'>>(database, HISTORY, { ids }),
+      readRows<StoredEnd & { valueId: number }>(database, ENDS, { ids }),
+      readRows<Of<StoredEpoch, 'standardId'>>(database, EPOCHS, { ids }),
+      readRows<Of<StoredProgramme, 'standardId'>>(database, PROGRAMMES, { ids }),
+      readRows<Of<StoredProperty, 'standardId'>>(database, PROPERTIES, { ids }),
+      readRows<{ standardId: string; duplicateId: string }>(database, DUPLICATES, { ids }),
+      readRows<Of<StoredClass, 'standardId'>>(database, CLASSES, { ids }),
+      readRows<Of<StoredDriftRate, 'standardId'>>(database, DRIFT_RATES, { ids }),
+    ]);
   const endsByValue = groupBy(ends, (end) => end.valueId);
   const historyOf = groupBy(history, (row) => row.standardId);
   const epochsOf = groupBy(epochs, (row) => row.standardId);
   const programmesOf = groupBy(programmes, (row) => row.standardId);
   const propertiesOf = groupBy(properties, (row) => row.standardId);
   const duplicatesOf = groupBy(duplicates, (row) => row.standardId);
+  const classesOf = groupBy(classes, (row) => row.standardId);
+  const driftRatesOf = groupBy(driftRates, (row) => row.standardId);
   return standards.map((standard) => ({
     ...standard,
+    isInSet: Boolean(standard.isInSet),
+    classes: classesOf.get(standard.standardId) ?? [],
+    driftRates: driftRatesOf.get(standard.standardId) ?? [],
     history: (historyOf.get(standard.standardId) ?? []).map((row) => ({
       ...row,
       ...plainDecimals(row),
@@ -116,19 +146,22 @@ export async function standardDossiers(database: Sequelize, ids: string[]): Prom
   }));
 }
 
-/** What later acts may have added to these laboratories: scope lines and recognitions. */
+/** What later acts may have added to these laboratories: scope lines, recognitions and authorisations. */
 export async function laboratoryDossiers(database: Sequelize, ids: string[]): Promise<LaboratoryDossier[]> {
   if (ids.length === 0) return [];
-  const [laboratories, scope, recognitions] = await Promise.all([
+  const [laboratories, scope, recognitions, authorisations] = await Promise.all([
     readRows<Pick<LaboratoryDossier, 'id' | 'code' | 'name' | 'kind'>>(database, LABORATORIES, { ids }),
     readRows<Of<StoredScopeLine, 'laboratoryId'>>(database, SCOPE, { ids }),
     readRows<Of<StoredRecognition, 'laboratoryId'>>(database, RECOGNITIONS, { ids }),
+    readRows<Of<StoredAuthorisation, 'laboratoryId'>>(database, AUTHORISATIONS, { ids }),
   ]);
   const scopeOf = groupBy(scope, (row) => row.laboratoryId);
   const recognitionsOf = groupBy(recognitions, (row) => row.laboratoryId);
+  const authorisationsOf = groupBy(authorisations, (row) => row.laboratoryId);
   return laboratories.map((laboratory) => ({
     ...laboratory,
     scope: scopeOf.get(laboratory.id) ?? [],
     recognitions: recognitionsOf.get(laboratory.id) ?? [],
+    authorisations: authorisationsOf.get(laboratory.id) ?? [],
   }));
 }

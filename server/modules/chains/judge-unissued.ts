@@ -72,6 +72,7 @@ async function partsFor(
     standards: withHistory(known, values),
     numbers: chainNumbers(closure, values[0]!.uid),
     byId: new Map(closure.values.map((value) => [value.id, value])),
+    sources: closure.sources,
     notices: store.notices,
     noticesOfLinks: noticesOfLinks(closure, store.notices, question.known),
   };

@@ -38,7 +38,7 @@ export interface StoredValue extends StoredResult {
   standardId: string;
   registryNo: string;
   marking: string;
-  standardKind: string;
+  standardKind: StandardDossier['kind'];
   setId: string | null;
   epochBeginsOn: string;
   nominal: string;
@@ -62,6 +62,12 @@ export interface StoredValue extends StoredResult {
   unitConfirmed: boolean;
   decisionRule: 'guarded' | 'simple' | null;
   method: string;
+  /** Account of whoever signed; null: not on record. */
+  signatoryId: string | null;
+  /** What a further revision says it changes and why. */
+  amendmentReason: string | null;
+  /** Names of the budget's components, in their order. */
+  components: readonly string[];
   parents: StoredLink[];
   sources: StoredSourceLink[];
   /** How many other lines of the same revision name a reference. */
@@ -151,6 +157,7 @@ export interface StoredProgramme extends Asserted {
   laboratoryId: string;
   intervalMonths: number;
   method: string;
+  justification: string;
 }
 
 export interface StoredProperty extends Asserted {
@@ -162,12 +169,31 @@ export interface StoredProperty extends Asserted {
   sourceId: number | null;
 }
 
+export interface StoredClass extends Asserted {
+  value: string;
+}
+
+/** Standard uncertainty of a rate of drift, g per year. */
+export interface StoredDriftRate {
+  u: number;
+  determinedOn: string | null;
+  recordedAt: string;
+}
+
 /** Everything about one standard that later acts may add to. */
 export interface StandardDossier {
   standardId: string;
   registryNo: string;
   marking: string;
   nominal: string;
+  kind: 'weight' | 'prototype' | 'silicon sphere' | 'realization' | 'consensus value';
+  serial: string | null;
+  shape: 'knob' | 'cylinder' | 'sphere' | 'sheet' | 'wire' | 'block' | 'other';
+  isInSet: boolean;
+  /** Classes claimed for it. */
+  classes: StoredClass[];
+  /** Drift declared for it as a source of its own. */
+  driftRates: StoredDriftRate[];
   history: StoredHistoryValue[];
   epochs: StoredEpoch[];
   programmes: StoredProgramme[];
@@ -197,6 +223,12 @@ export interface StoredRecognition extends Asserted {
   state: 'granted' | 'suspended' | 'withdrawn';
 }
 
+/** Who may sign calibrations for a laboratory. */
+export interface StoredAuthorisation extends Asserted {
+  accountId: string;
+  state: 'granted' | 'ended';
+}
+
 /** Everything about one laboratory that later acts may add to. */
 export interface LaboratoryDossier {
   id: string;
@@ -205,4 +237,5 @@ export interface LaboratoryDossier {
   kind: 'national institute' | 'calibration laboratory' | 'external institute';
   scope: StoredScopeLine[];
   recognitions: StoredRecognition[];
+  authorisations: StoredAuthorisation[];
 }
