@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import supertest from 'supertest';
 import type { Role } from '#shared/contracts/identity.ts';
+import { auditRunnerOf } from '#server/modules/audits/index.ts';
 import { addDocument } from '#server/modules/documents/index.ts';
 import {
   inputOf,
@@ -158,4 +159,31 @@ export async function makeDryRun(scene: Scene): Promise<string> {
   const reply = await scene.agent('metrologist').post('/api/dry-runs').send(dryRunOf(scene));
   if (reply.status !== 201) throw new Error(`The dry run was not kept: ${reply.text}`);
   return reply.body.id;
+}
+
+const audits = new WeakMap<Scene, Promise<string>>();
+
+/** An audit of home, asked for by its metrologist and done. */
+export function makeAudit(scene: Scene): Promise<string> {
+  const known = audits.get(scene);
+  if (known) return known;
+  const made = askAndWait(scene);
+  audits.set(scene, made);
+  return made;
+}
+
+async function askAndWait({ app, home, agent }: Scene): Promise<string> {
+  const body = { scope: 'laboratory', laboratoryId: home.id };
+  const reply = await agent('metrologist').post('/api/audits').send(body);
+  if (reply.status !== 201) throw new Error(`The audit was not asked for: ${reply.text}`);
+  await auditRunnerOf(app.context()).idle();
+  return reply.body.id as string;
+}
+
+/** Number of a finding about a value of home. */
+export async function ownFindingOf({ agent }: Scene, auditId: string): Promise<number> {
+  const reply = await agent('metrologist').get(`/api/audits/${auditId}/findings`).query({ whose: 'own' });
+  const [first] = reply.body.findings as { n: number }[];
+  if (!first) throw new Error('The audit of home found nothing: the scene holds no fault any more');
+  return first.n;
 }

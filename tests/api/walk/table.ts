@@ -5,7 +5,9 @@ import {
   dryRunOf,
   fullSheet,
   looseCalibration,
+  makeAudit,
   makeDraft,
+  ownFindingOf,
   makeDryRun,
   WALKERS,
   type Scene,
@@ -261,6 +263,54 @@ export const WALK: Readonly<Record<string, WalkRow>> = {
     may: [...WRITERS, 'signatory'],
     ok: 201,
     otherwise: 403,
+  },
+  // audits
+  'GET /api/audits': { request: fixed('/api/audits'), may: SIGNED_IN, ok: 200, otherwise: 403 },
+  'POST /api/audits': {
+    request: ({ home }) => ({ path: '/api/audits', body: { scope: 'laboratory', laboratoryId: home.id } }),
+    may: READERS,
+    ok: 201,
+    otherwise: 403,
+  },
+  'GET /api/audits/:auditId': {
+    request: async (scene) => ({ path: `/api/audits/${await makeAudit(scene)}` }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'GET /api/audits/:auditId/findings': {
+    request: async (scene) => ({ path: `/api/audits/${await makeAudit(scene)}/findings` }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'GET /api/audits/:auditId/findings.csv': {
+    request: async (scene) => ({ path: `/api/audits/${await makeAudit(scene)}/findings.csv` }),
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'GET /api/audits/:auditId/findings/:n/facts': {
+    request: async (scene) => {
+      const id = await makeAudit(scene);
+      return { path: `/api/audits/${id}/findings/${await ownFindingOf(scene, id)}/facts` };
+    },
+    may: READERS,
+    ok: 200,
+    otherwise: 404,
+  },
+  'POST /api/audits/:auditId/repeat': {
+    request: async (scene) => ({ path: `/api/audits/${await makeAudit(scene)}/repeat` }),
+    may: READERS,
+    ok: 201,
+    otherwise: 404,
+  },
+  'POST /api/audits/:auditId/stop': {
+    // Asked for by the metrologist.
+    request: async (scene) => ({ path: `/api/audits/${await makeAudit(scene)}/stop` }),
+    may: ['registrar', 'metrologist'],
+    ok: 200,
+    otherwise: 'hidden',
   },
   // standards
   'GET /api/standards': {
