@@ -6,8 +6,8 @@ import type { Figure, Shape, TextSpan } from './shapes.ts';
  * The definition in force when the roots were determined: one band across the top. The Planck constant is exact
  * since 2019-05-20 (26th CGPM, Resolution 1).
  */
-export function bandFigure(band: DisplayList['band']): Figure {
-  const size = 15;
+export function bandFigure(band: DisplayList['band'], size = 15): Figure {
+  const leading = size * 1.26;
   const words = (text: string): TextSpan => ({ text, face: 'serif', size, ink: 'ink' });
   const planck: TextSpan[] = [
     { ...words('h'), face: 'italic' },
@@ -24,7 +24,7 @@ export function bandFigure(band: DisplayList['band']): Figure {
       [words('since then: '), ...planck],
     ],
   }[band.definition];
-  const first = band.height / 2 + size * 0.34 - ((lines.length - 1) * 19) / 2;
+  const first = band.height / 2 + size * 0.34 - ((lines.length - 1) * leading) / 2;
   return {
     kind: 'band',
     id: 'definition',
@@ -42,7 +42,7 @@ export function bandFigure(band: DisplayList['band']): Figure {
       ...lines.map((spans, index): Shape => ({
         kind: 'text',
         x: band.x + band.width / 2,
-        y: first + index * 19,
+        y: first + index * leading,
         anchor: 'middle',
         spans,
       })),

@@ -7,6 +7,7 @@ import type { DrawnChain, DrawnLink, DrawnNode } from './drawn-chain.ts';
 import { linkKey, type DrawingQuestion } from './drawing-question.ts';
 import { BAND, OPENING } from './geometry.ts';
 import { ribbonHatching, ribbonOutline } from './hatching.ts';
+import { placeLabels, type PlacedLabel, type WantedLabel } from './label-places.ts';
 import type { PlacedRibbon, Placement, Point } from './layout-input.ts';
 import { ownStates } from './own-states.ts';
 import { plateWords, type PlateWords } from './plate-words.ts';
@@ -63,8 +64,8 @@ export interface Ribbon {
   middle: Point;
   /** Where it leaves its parent's foot and enters its child's head. */
   ends: [Point, Point];
-  /** Its share, in the middle or beside the mark; null where it would not be true to scale. */
-  label: { text: string; x: number; y: number; anchor: 'start' | 'middle' } | null;
+  /** Its share, in the middle or beside the mark; null where it is not to scale, or would stand on another. */
+  label: PlacedLabel | null;
   /** One short word at the ribbon's middle in brass: what is to be noticed of it. */
   mark: string | null;
 }
@@ -96,6 +97,7 @@ export function displayList(
   const states = ownStates(chain, question.verdict);
   const placeOf = new Map(placement.plates.map((plate) => [plate.id, plate]));
   const leaning = new Set(chain.links.map((link) => link.childUid));
+  const labels = labelsOf(placement, around);
   return {
     width: placement.width,
     height: placement.height,
@@ -105,7 +107,10 @@ export function displayList(
       const state = node.type === 'group' ? node.state : (states.get(node.uid) ?? 'sound');
       return { ...plateOf(node, state, around), x, y, looseEnd: looseEnd(node, leaning, question) };
     }),
-    ribbons: placement.ribbons.map((ribbon, index) => ribbonOf(chain.links[index]!, ribbon, around)),
+    ribbons: placement.ribbons.map((ribbon, index) => ({
+      ...ribbonOf(chain.links[index]!, ribbon, around),
+      label: labels[index]!,
+    })),
   };
 }
 
@@ -152,12 +157,20 @@ function looseEnd(node: DrawnNode, leaning: ReadonlySet<string>, question: Drawi
   return question.only === 'fails' ? null : 'ends here: no reference named';
 }
 
-function ribbonOf(link: DrawnLink, placed: PlacedRibbon, around: Around): Ribbon {
+function labelsOf({ ribbons }: Placement, around: Around): Ribbon['label'][] {
+  const { links } = around.chain;
+  const marked = ribbons.filter((_, index) => isMarked(links[index]![around.question.verdict]));
+  return placeLabels(
+    ribbons.map((ribbon, index) => wantedLabel(links[index]!, ribbon, around)),
+    marked.map(({ points }) => ribbonMiddle(points)),
+  );
+}
+
+function ribbonOf(link: DrawnLink, placed: PlacedRibbon, around: Around): Omit<Ribbon, 'label'> {
   const { points, width, isToScale, isNegative } = placed;
   const state = link[around.question.verdict];
   const look = lookOf(link, placed, around.chain);
   const path = ribbonPath(points);
-  const middle = ribbonMiddle(points);
   return {
     id: linkKey(link),
     link,
@@ -171,9 +184,8 @@ function ribbonOf(link: DrawnLink, placed: PlacedRibbon, around: Around): Ribbon
     outline: look === 'negative' && width >= 3 ? ribbonOutline(points, width) : null,
     hatching: state === 'caution' ? ribbonHatching(points, width) : null,
     state,
-    middle,
+    middle: ribbonMiddle(points),
     ends: [points[0]!, points.at(-1)!],
-    label: labelOf(link, placed, { state, middle, decimalMark: around.style.decimalMark }),
     mark: link.of.flatMap((key) => around.marks.get(key) ?? [])[0] ?? null,
   };
 }
@@ -185,19 +197,18 @@ function lookOf(link: DrawnLink, placed: PlacedRibbon, { second }: DrawnChain): 
   return placed.isToScale ? 'solid' : 'hairline';
 }
 
-function labelOf(
-  { flow, role }: DrawnLink,
-  { width, isToScale }: PlacedRibbon,
-  { state, middle, decimalMark }: { state: State; middle: Point; decimalMark: NumberStyle['decimalMark'] },
-): Ribbon['label'] {
-  if (flow === null || role === 'informs' || !isToScale) return null;
-  const isBesideMark = state === 'broken' || state === 'caution';
-  return {
-    text: shareText(flow, decimalMark, 0),
-    x: middle.x + (isBesideMark ? Math.max(width / 2, 5) + 5 : 0),
-    y: middle.y + 4,
-    anchor: isBesideMark ? 'start' : 'middle',
-  };
+function wantedLabel(
+  { flow, role, ...link }: DrawnLink,
+  ribbon: PlacedRibbon,
+  { question, style }: Around,
+): WantedLabel | null {
+  if (flow === null || role === 'informs' || !ribbon.isToScale) return null;
+  const isBesideMark = isMarked(link[question.verdict]);
+  return { text: shareText(flow, style.decimalMark, 0), ribbon, isBesideMark };
+}
+
+function isMarked(state: State): boolean {
+  return state === 'broken' || state === 'caution';
 }
 
 /** As wide as the drawing, or centred over it and as wide as its words. */

@@ -139,13 +139,11 @@ describe('folded chain', () => {
     const issuerOf = ['A', 'A', 'B', 'B', 'A', 'A'];
     const nodes = [
       focus!,
-      ...above
-        .slice(0, 6)
-        .map((node, index) => ({
-          ...node,
-          rootKind: null,
-          issuer: { ...node.issuer, code: issuerOf[index]! },
-        })),
+      ...above.slice(0, 6).map((node, index) => ({
+        ...node,
+        rootKind: null,
+        issuer: { ...node.issuer, code: issuerOf[index]! },
+      })),
     ];
     const links = nodes.slice(1).map((node, index) => ({
       ...answer.links[0]!,

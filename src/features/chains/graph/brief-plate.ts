@@ -1,6 +1,7 @@
-import type { Plate } from '#shared/drawing/display-list.ts';
-import { PLATE } from '#shared/drawing/geometry.ts';
+import type { Plate, Ribbon } from '#shared/drawing/display-list.ts';
+import { PLATE, SCALE } from '#shared/drawing/geometry.ts';
 import { plateFigure } from '#shared/drawing/plate-shapes.ts';
+import { ribbonFigure } from '#shared/drawing/ribbon-shapes.ts';
 import { STATE_GLYPHS, STATE_INKS } from '#shared/drawing/state-glyphs.ts';
 import { sizeToFit } from '#shared/drawing/text-width.ts';
 import type { Shape } from '#shared/drawing/shapes.ts';
@@ -9,6 +10,9 @@ import type { Shape } from '#shared/drawing/shapes.ts';
 export const BRIEF_BELOW = 0.75;
 
 const PADDING = 9;
+const ENLARGED = 1.45;
+/** Drawn width of a share of 8 %. */
+const LEAST_LABELLED = 0.08 * SCALE;
 const ROOM = PLATE.width - 2 * PADDING;
 
 /** A plate as it is drawn when small: outline, stub, number and state only. */
@@ -39,7 +43,7 @@ export function briefPlate(plate: Plate): Shape[] {
     spans,
   });
   return [
-    ...outline.shapes,
+    ...enlarged(outline.shapes),
     line({ x: x + PADDING, y: y + 36 }, [{ text, face, size, ink: 'ink' }]),
     ...(plate.stands === null
       ? []
@@ -55,4 +59,22 @@ export function briefPlate(plate: Plate): Shape[] {
           ]),
         ]),
   ];
+}
+
+/** A ribbon as it is drawn when small: its share only where it is wide, and larger. */
+export function briefRibbon(ribbon: Ribbon): Shape[] {
+  const label = ribbon.width < LEAST_LABELLED ? null : ribbon.label;
+  return enlarged(ribbonFigure({ ...ribbon, label }).shapes);
+}
+
+function enlarged(shapes: readonly Shape[]): Shape[] {
+  return shapes.map((shape) =>
+    shape.kind === 'text'
+      ? {
+          ...shape,
+          y: shape.y + 2,
+          spans: shape.spans.map((span) => ({ ...span, size: span.size * ENLARGED })),
+        }
+      : shape,
+  );
 }

@@ -3,6 +3,7 @@ import type { Marks } from '#shared/drawing/display-list.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { Legend } from '../components/legend.tsx';
+import { PrintedDrawing } from '../export/printed-drawing.tsx';
 import type { ChainQuestion } from '../question.ts';
 import { BRIEF_BELOW } from './brief-plate.ts';
 import { ChainDrawing } from './chain-drawing.tsx';
@@ -71,6 +72,7 @@ export function ChainGraph({ chain, question, onSelect, onChange, marks }: Chain
           )
         }
       </Frame>
+      {drawn && <PrintedDrawing chain={chain} question={question} list={drawn.list} />}
       {drawn && <Legend list={drawn.list} question={question} />}
     </div>
   );

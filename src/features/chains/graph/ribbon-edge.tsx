@@ -1,7 +1,8 @@
 import { memo, useMemo } from 'react';
-import type { EdgeProps } from 'reactflow';
+import { useStore, type EdgeProps } from 'reactflow';
 import type { Ribbon } from '#shared/drawing/display-list.ts';
 import { ribbonFigure } from '#shared/drawing/ribbon-shapes.ts';
+import { BRIEF_BELOW, briefRibbon } from './brief-plate.ts';
 import { ShapesView } from './shapes-view.tsx';
 
 export interface RibbonData {
@@ -12,8 +13,12 @@ export interface RibbonData {
 /** A link, in the shapes that every export draws; a wider unseen line takes the pointer. */
 export const RibbonEdge = memo(function RibbonEdge({ data }: EdgeProps<RibbonData>) {
   const ribbon = data?.ribbon;
-  const figure = useMemo(() => ribbon && ribbonFigure(ribbon), [ribbon]);
-  if (!ribbon || !figure) return null;
+  const isBrief = useStore((store) => store.transform[2] < BRIEF_BELOW);
+  const shapes = useMemo(
+    () => ribbon && (isBrief ? briefRibbon(ribbon) : ribbonFigure(ribbon).shapes),
+    [ribbon, isBrief],
+  );
+  if (!ribbon || !shapes) return null;
   return (
     <g data-ribbon={ribbon.id}>
       <path d={ribbon.path} fill="none" stroke="transparent" strokeWidth={Math.max(14, ribbon.width)} />
@@ -25,7 +30,7 @@ export const RibbonEdge = memo(function RibbonEdge({ data }: EdgeProps<RibbonDat
           strokeWidth={Math.max(4, ribbon.width + 4)}
         />
       )}
-      <ShapesView shapes={figure.shapes} />
+      <ShapesView shapes={shapes} />
     </g>
   );
 });
