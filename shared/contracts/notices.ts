@@ -17,7 +17,11 @@ import { ClassVerdict, FullRow, WarningRow, WhatIfWord } from './downstream.ts';
 export const NoticeKind = z.enum(['unit correction', 'uncertainty added', 'consensus value']);
 export type NoticeKind = z.infer<typeof NoticeKind>;
 
-const ShiftPoint = z.strictObject({ on: Day, shift: Deviation });
+const Shift = Deviation.refine(
+  (text) => new Decimal(text).abs().lte(1),
+  'Expected a shift of at most 1 g per kilogram. Is it in grams?',
+);
+const ShiftPoint = z.strictObject({ on: Day, shift: Shift });
 
 /** Which values of the issuer a notice covers, and what it brings to them, per kilogram of nominal. Grams. */
 export const NoticeTerm = z
@@ -36,10 +40,6 @@ export const NoticeTerm = z
       .refine(
         (points) => points.every((point, at) => at === 0 || points[at - 1]!.on < point.on),
         'Expected the days in order, each once',
-      )
-      .refine(
-        (points) => points.every(({ shift }) => new Decimal(shift).abs().lte(1)),
-        'Expected shifts of at most 1 g per kilogram. Are they in grams?',
       ),
     /** Standard uncertainty (k = 1); the same effect for every value covered. */
     addedUPerKilogram: z
@@ -52,7 +52,7 @@ export const NoticeTerm = z
     path: ['performedFrom'],
     error: 'Expected a first day on or before the last one',
   })
-  .refine(({ nominalFrom: from, nominalTo: to }) => !from || !to || new Decimal(from).lte(to), {
+  .refine(({ nominalFrom: from, nominalTo: to }) => !(Number(from ?? NaN) > Number(to ?? NaN)), {
     path: ['nominalFrom'],
     error: 'Expected a smallest nominal not above the largest',
   });

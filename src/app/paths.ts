@@ -38,13 +38,53 @@ export const paths = {
     /** @param days in force on, as known on; today where left out */
     href: (valueUid: string, days: Days = {}) => `/chains/${valueUid}/downstream${daysText(days)}`,
   },
+  whatIf: {
+    path: '/chains/what-if',
+    /** @param asked parameters of the question; `changes` as JSON */
+    href: (asked: Record<string, string> = {}) => `/chains/what-if${queryText(asked)}`,
+  },
+  dryRuns: { path: '/chains/dry-runs', href: () => '/chains/dry-runs' },
+  dryRun: { path: '/chains/dry-runs/:dryRunId', href: (dryRunId: string) => `/chains/dry-runs/${dryRunId}` },
+  dryRunComparison: {
+    path: '/chains/dry-runs/compare',
+    href: (one: string, other: string) => `/chains/dry-runs/compare${queryText({ one, other })}`,
+  },
+  together: {
+    path: '/chains/together',
+    href: (valueUids: readonly string[] = []) =>
+      `/chains/together${valueUids.length > 0 ? `?values=${valueUids.join(',')}` : ''}`,
+  },
+  exposure: {
+    path: '/standards/:standardId/exposure',
+    /** @param between the last day on which the weight was known to be good, and the first on which it was bad */
+    href: (standardId: string, between: { lastGood?: string; firstBad?: string } = {}) =>
+      `/standards/${standardId}/exposure${queryText(between)}`,
+  },
   network: { path: '/network', href: () => '/network' },
+  massScale: { path: '/network/mass-scale', href: () => '/network/mass-scale' },
+  newNotice: {
+    path: '/network/notices/new',
+    /** @param change what a dry run supposed, to go on from */
+    href: (change?: unknown) =>
+      change === undefined
+        ? '/network/notices/new'
+        : `/network/notices/new?change=${encodeURIComponent(JSON.stringify(change))}`,
+  },
+  notice: {
+    path: '/network/notices/:noticeId',
+    href: (noticeId: string) => `/network/notices/${noticeId}`,
+  },
   laboratory: { path: '/network/:laboratoryId', href: (laboratoryId: string) => `/network/${laboratoryId}` },
 } as const;
 
 interface Days {
   day?: string | undefined;
   known?: string | undefined;
+}
+
+function queryText(parameters: Record<string, string>): string {
+  const text = new URLSearchParams(parameters).toString();
+  return text === '' ? '' : `?${text}`;
 }
 
 function daysText({ day, known }: Days): string {

@@ -65,7 +65,14 @@ describe('POST /api/notices', () => {
       },
       'terms.0.shiftPerKilogram',
     ],
-    ['a shift in another unit', { terms: [termOf('-20')] }, 'terms.0.shiftPerKilogram'],
+    ['a shift in another unit', { terms: [termOf('-20')] }, 'terms.0.shiftPerKilogram.0.shift'],
+    ['a shift that is no number', { terms: [termOf('a lot')] }, 'terms.0.shiftPerKilogram.0.shift'],
+    [
+      'a nominal that is no number',
+      { terms: [{ ...termOf('1'), nominalFrom: '1 kg', nominalTo: '5' }] },
+      'terms.0.nominalFrom',
+    ],
+    ['terms that are none', { terms: [null] }, 'terms.0'],
     [
       'a shift as a number',
       { terms: [{ shiftPerKilogram: [{ on: '2020-01-01', shift: 1 }] }] },

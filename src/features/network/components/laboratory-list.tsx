@@ -1,3 +1,4 @@
+import { Link } from 'react-router';
 import type { LaboratoryListResponse } from '#shared/contracts/network.ts';
 import { paths } from '#src/app/paths.ts';
 import { Page } from '#src/components/layout/page.tsx';
@@ -10,7 +11,17 @@ import { stateOfRecognition } from '../recognition.ts';
 export function LaboratoryList({ laboratories }: LaboratoryListResponse) {
   const count = laboratories.length === 1 ? '1 laboratory' : `${laboratories.length} laboratories`;
   return (
-    <Page title="Network" sub={count}>
+    <Page
+      title="Network"
+      sub={
+        <>
+          {`${count} · `}
+          <Link to={paths.massScale.href()} className="text-ink underline underline-offset-3">
+            mass scale and notices
+          </Link>
+        </>
+      }
+    >
       {laboratories.length === 0 ? (
         <EmptyState>
           The laboratories of the network stand here once the registrar has admitted them.

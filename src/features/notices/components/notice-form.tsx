@@ -1,0 +1,111 @@
+import { useState } from 'react';
+import { FormProvider, useForm, type FieldPath } from 'react-hook-form';
+import type { WhatIfChange } from '#shared/contracts/downstream.ts';
+import { PublishNoticeBody, type NoticeListResponse, type ScaleVersion } from '#shared/contracts/notices.ts';
+import { Stack, TwoColumns } from '#src/components/layout/columns.tsx';
+import { Section } from '#src/components/layout/page.tsx';
+import { showFieldProblems } from '#src/lib/form.ts';
+import { ApiProblem } from '#src/lib/api-problem.ts';
+import { usePublishNotice } from '../api.ts';
+import {
+  bodyOf,
+  changesOf,
+  emptyNotice,
+  entryField,
+  type NoticeEntry,
+  type TermEntry,
+} from '../notice-form.ts';
+import { NoticeFields } from './notice-fields.tsx';
+import { NoticePreview } from './notice-preview.tsx';
+import { NoticeSign } from './notice-sign.tsx';
+import { TermFields } from './term-fields.tsx';
+
+interface NoticeFormProps {
+  publishesFor: NoticeListResponse['publishesFor'];
+  scaleVersions: readonly ScaleVersion[];
+  notices: NoticeListResponse['notices'];
+  /** What a dry run supposed, to go on from. */
+  from: { issuerId: string; term: TermEntry } | null;
+  /** Today, the first proposal for its days. */
+  day: string;
+  onPublished: (noticeId: string) => void;
+}
+
+/** A notice as it is typed, what it would do, and the signature under it. */
+export function NoticeForm({
+  publishesFor,
+  scaleVersions,
+  notices,
+  from,
+  day,
+  onPublished,
+}: NoticeFormProps) {
+  const issuer = publishesFor.find(({ id }) => id === from?.issuerId) ?? publishesFor[0];
+  const form = useForm<NoticeEntry>({
+    defaultValues: {
+      ...emptyNotice(issuer?.id ?? '', day),
+      fromScaleId: scaleVersions.at(-1)?.id ?? '',
+      ...(from && { terms: [from.term] }),
+    },
+  });
+  const [previewed, setPreviewed] = useState<WhatIfChange[] | null>(null);
+  const publish = usePublishNotice();
+  const check = (entry: NoticeEntry): PublishNoticeBody | null => {
+    const parsed = PublishNoticeBody.safeParse(bodyOf(entry));
+    if (parsed.success) return parsed.data;
+    parsed.error.issues.forEach(({ path, message }, at) => {
+      const name = entryField(path.join('.')) as FieldPath<NoticeEntry>;
+      form.setError(name, { type: 'entry', message }, { shouldFocus: at === 0 });
+    });
+    return null;
+  };
+  const preview = () => {
+    form.clearErrors();
+    const body = check({ ...form.getValues(), password: '-' });
+    if (body) setPreviewed(changesOf(body));
+  };
+  const sign = () => {
+    form.clearErrors();
+    const body = check(form.getValues());
+    if (!body) return;
+    publish.mutate(body, {
+      onSuccess: ({ id }) => onPublished(id),
+      onError: (error) => showFieldProblems(asEntered(error), form),
+    });
+  };
+  return (
+    <FormProvider {...form}>
+      <form
+        noValidate
+        onSubmit={(event) => {
+          event.preventDefault();
+          sign();
+        }}
+      >
+        <TwoColumns
+          sideWidth="narrow"
+          side={
+            <Stack gap="loose">
+              <NoticePreview previewed={previewed} onPreview={preview} />
+              <NoticeSign isBusy={publish.isPending} error={publish.error} />
+            </Stack>
+          }
+        >
+          <NoticeFields publishesFor={publishesFor} scaleVersions={scaleVersions} notices={notices} />
+          <Section title="Which certificates, and what they get">
+            <TermFields />
+          </Section>
+        </TwoColumns>
+      </form>
+    </FormProvider>
+  );
+}
+
+/** The server's field problems under the names of the form's fields. */
+function asEntered(error: Error): Error {
+  if (!(error instanceof ApiProblem)) return error;
+  const fields = Object.fromEntries(
+    Object.entries(error.fields).map(([path, problem]) => [entryField(path), problem]),
+  );
+  return new ApiProblem({ ...error.document, fields });
+}
