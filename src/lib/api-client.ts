@@ -19,6 +19,22 @@ export function get<Schema extends z.ZodType>(
   return request('GET', path, undefined, response, options);
 }
 
+/** A file that the register made, and what it is called. */
+export interface ReceivedFile {
+  blob: Blob;
+  name: string;
+}
+
+/** Reads a file. @throws ApiProblem */
+export async function getFile(path: string, { query, signal }: RequestOptions = {}): Promise<ReceivedFile> {
+  const requestId = newRequestId();
+  const headers = new Headers({ 'X-Request-Id': requestId });
+  const answer = await reach(address(path, query), { headers, ...(signal && { signal }) }, requestId);
+  if (!answer.ok) throw refusal(answer, await readJson(answer), requestId);
+  const encoded = /filename\*=UTF-8''([^;]+)/.exec(answer.headers.get('Content-Disposition') ?? '')?.[1];
+  return { blob: await answer.blob(), name: decodeURIComponent(encoded ?? 'document') };
+}
+
 /** Adds or acts. The body is JSON unless it is a file, which travels as it is. @throws ApiProblem */
 export function post<Schema extends z.ZodType>(
   path: string,

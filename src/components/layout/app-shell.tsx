@@ -18,14 +18,14 @@ export function AppShell({ sections, search, foot, notice, children }: AppShellP
   const [isOpen, setOpen] = useState(false);
   const fold = isOpen ? 'flex' : 'hidden rail:flex';
   return (
-    <div className="min-h-dvh rail:grid rail:grid-cols-[10.5rem_minmax(0,1fr)]">
+    <div className="min-h-dvh rail:grid rail:grid-cols-[10.5rem_minmax(0,1fr)] print:block!">
       <a
         href="#screen"
         className="sr-only focus:not-sr-only focus:fixed focus:top-2 focus:left-2 focus:z-20 focus:bg-raised focus:px-3 focus:py-2"
       >
         Skip to the screen
       </a>
-      <header className="border-rule max-rail:border-b rail:border-r">
+      <header className="border-rule max-rail:border-b rail:border-r print:hidden">
         <div className="flex flex-col rail:sticky rail:top-0 rail:z-5 rail:min-h-dvh">
           <div className="flex items-center justify-between px-4 py-2.5 rail:px-5 rail:pt-4.5 rail:pb-4">
             <NavLink to="/" className="font-serif text-xl">

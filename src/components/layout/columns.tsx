@@ -44,13 +44,13 @@ export function Stack({ gap = 'normal', children }: { gap?: keyof typeof GAPS; c
   return <div className={`flex min-w-0 flex-col ${GAPS[gap]}`}>{children}</div>;
 }
 
-/** Controls in a line: filters and switches above a table, actions below a form. They wrap when there is no room. */
+/** Controls in a line: filters and switches above a table, actions below a form. They wrap; paper has none. */
 export function Toolbar({ label, children }: { label?: string; children: ReactNode }) {
   return (
     <div
       role={label ? 'group' : undefined}
       aria-label={label}
-      className="flex flex-wrap items-end gap-x-4 gap-y-2"
+      className="flex flex-wrap items-end gap-x-4 gap-y-2 print:hidden"
     >
       {children}
     </div>

@@ -22,7 +22,7 @@ interface DrawingBarProps {
 /** How the chain is drawn: folded, as wide as the page, beside a second weight. */
 export function DrawingBar({ drawn, question, focusUid, second, onChange }: DrawingBarProps) {
   return (
-    <div className="flex flex-col gap-1.5 pb-2">
+    <div className="flex flex-col gap-1.5 pb-2 print:hidden">
       <Toolbar label="How it is drawn">
         <SecondWeightField {...{ question, focusUid, second, onChange }} />
         <Checkbox

@@ -37,7 +37,11 @@ export function Frame({ list, children, note }: FrameProps) {
   useStanding(box, instance, list, view);
   return (
     <>
-      <div ref={box} className="relative min-h-80 overflow-hidden border-y border-rule print:hidden" style={{ height }}>
+      <div
+        ref={box}
+        className="relative min-h-80 overflow-hidden border-y border-rule print:hidden"
+        style={{ height }}
+      >
         {children({ show: setInstance, isWhole: view?.isWhole ?? true, width, height: height ?? 0 })}
       </div>
       {view && note(view)}
