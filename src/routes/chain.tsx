@@ -1,4 +1,5 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
+import { lazy, Suspense } from 'react';
 import { useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { paths } from '#src/app/paths.ts';
@@ -11,6 +12,11 @@ import type { ValueNode } from '#src/features/chains/components/selection-sheet.
 import { readQuestion, withChange, type ChainQuestion } from '#src/features/chains/question.ts';
 import { distanceQuery } from '#src/features/downstream/api.ts';
 import { DistanceSection } from '#src/features/downstream/components/distance-section.tsx';
+
+/** Fetched with the screen, not with the application. */
+const TakeAlong = lazy(() =>
+  import('#src/features/chains/export/take-along.tsx').then((module) => ({ default: module.TakeAlong })),
+);
 
 /** Primes the chain, so that the drawing and its numbers are on the way together. */
 export async function loader({ params, request }: LoaderFunctionArgs): Promise<null> {
@@ -57,6 +63,9 @@ function Further({ chain, question }: { chain: ChainResponse; question: ChainQue
       <Toolbar>
         <LinkButton to={paths.downstream.href(chain.focusUid, question)}>Who leans on this</LinkButton>
       </Toolbar>
+      <Suspense>
+        <TakeAlong valueUid={chain.focusUid} question={question} />
+      </Suspense>
       {isFull && distance && <DistanceSection distance={distance} />}
     </>
   );
