@@ -8,6 +8,7 @@ import { downstreamQuery } from '#src/features/downstream/api.ts';
 import { DownstreamScreen } from '#src/features/downstream/components/downstream-screen.tsx';
 import { readSearch, withChange, type DownstreamSearch } from '#src/features/downstream/search.ts';
 import { nominalText } from '#shared/numbers/nominal.ts';
+import { ACT_DIALOGS } from './act-dialogs.tsx';
 
 /** Primes the value and its groups; a dry run is worked out on the screen, which says so meanwhile. */
 export async function loader({ params, request }: LoaderFunctionArgs): Promise<null> {
@@ -43,6 +44,7 @@ export function Component() {
       answered={data.question}
       search={search}
       onChange={change}
+      dialogs={ACT_DIALOGS}
     />
   );
 }

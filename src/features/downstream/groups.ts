@@ -11,6 +11,14 @@ export const GROUPED_BY: Record<DownstreamBy, string> = {
   year: 'Year of calibration',
 };
 
+/** The groupings to choose from. */
+export const GROUPINGS = [
+  { value: 'laboratory', label: 'Laboratory' },
+  { value: 'class', label: 'Class' },
+  { value: 'nominal', label: 'Nominal' },
+  { value: 'year', label: 'Year' },
+] as const satisfies readonly { value: DownstreamBy; label: string }[];
+
 /** What a group is called: a laboratory's name, a class, a decade of nominals, a year. */
 export function groupName(
   { key, laboratory }: { key: string; laboratory: { name: string } | null },

@@ -1,4 +1,4 @@
-import type { DownstreamRow, WhatIfRow } from '#shared/contracts/downstream.ts';
+import type { DownstreamRow, WhatIfGroup, WhatIfRow } from '#shared/contracts/downstream.ts';
 
 type Column<Row> = readonly [head: string, of: (row: Row) => string | number | null];
 
@@ -24,22 +24,42 @@ const CONSEQUENCE: Column<WhatIfRow>[] = [
 ];
 
 /** Rows as they were sent, as CSV (RFC 4180): who leans on it. What is not told stays empty. */
-export function leaningCsv(rows: readonly DownstreamRow[]): string {
+export function leaningCsv(rows: readonly DownstreamRow[], hasHead = true): string {
   const calibrated: Column<DownstreamRow> = [
     'calibrated',
     (row) => (row.view === 'full' ? row.performedEnd : null),
   ];
-  return csvOf<DownstreamRow>(rows, [...WEIGHT, calibrated]);
+  return csvOf<DownstreamRow>(rows, [...WEIGHT, calibrated], hasHead);
 }
 
 /** Rows as they were sent, as CSV (RFC 4180): what a change would do. What is not told stays empty. */
-export function whatIfCsv(rows: readonly WhatIfRow[]): string {
-  return csvOf<WhatIfRow>(rows, [...WEIGHT, ...CONSEQUENCE]);
+export function whatIfCsv(rows: readonly WhatIfRow[], hasHead = true): string {
+  return csvOf<WhatIfRow>(rows, [...WEIGHT, ...CONSEQUENCE], hasHead);
 }
 
-function csvOf<Row>(rows: readonly Row[], columns: readonly Column<Row>[]): string {
+/** Groups as they were sent, as CSV (RFC 4180). @param nameOf what a group is called */
+export function groupsCsv(
+  groups: readonly WhatIfGroup[],
+  headOf: string,
+  nameOf: (group: WhatIfGroup) => string,
+): string {
+  return csvOf<WhatIfGroup>(groups, [
+    [headOf, nameOf],
+    ['in all', (group) => group.count],
+    ['of others', (group) => group.warned],
+    ['none', (group) => group.words.none],
+    ['material', (group) => group.words.material],
+    ['verdict changes', (group) => group.words.verdictChanges],
+    ['largest shift g', (group) => group.largestShift],
+    ['largest shift/U', (group) => group.largestRatio],
+  ]);
+}
+
+function csvOf<Row>(rows: readonly Row[], columns: readonly Column<Row>[], hasHead = true): string {
   const lines = rows.map((row) => columns.map(([, of]) => field(of(row))));
-  return [columns.map(([head]) => head), ...lines].map((line) => `${line.join(',')}\r\n`).join('');
+  return [...(hasHead ? [columns.map(([head]) => head)] : []), ...lines]
+    .map((line) => `${line.join(',')}\r\n`)
+    .join('');
 }
 
 const NUMBER = /^-?\d+(\.\d+)?(e[+-]?\d+)?$/;

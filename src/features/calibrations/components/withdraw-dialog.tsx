@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import { SignedWithdrawBody, type CalibrationResponse } from '#shared/contracts/calibrations.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Dialog } from '#src/components/ui/dialog.tsx';
@@ -8,13 +8,18 @@ import { errorAt, showFieldProblems, useZodForm } from '#src/lib/form.ts';
 import { useWithdraw } from '../api.ts';
 
 interface WithdrawDialogProps {
-  calibration: CalibrationResponse['calibration'];
+  calibration: Pick<CalibrationResponse['calibration'], 'revisionId' | 'certificateNo'>;
+  /** How many values fall with it. */
   weights: number;
+  /** What a dry run counted, in a sentence. */
+  touches?: ReactNode;
+  onDone?: (actSeq: number) => void;
   onClose: () => void;
 }
 
 /** Says exactly what a withdrawal does, and asks for the reason, the day and the signatory's password. */
-export function WithdrawDialog({ calibration, weights, onClose }: WithdrawDialogProps) {
+export function WithdrawDialog(props: WithdrawDialogProps) {
+  const { calibration, weights, touches, onDone, onClose } = props;
   const form = useZodForm(SignedWithdrawBody, {
     defaultValues: { reason: '', password: '', effectiveOn: new Date().toISOString().slice(0, 10) },
   });
@@ -23,7 +28,10 @@ export function WithdrawDialog({ calibration, weights, onClose }: WithdrawDialog
   const { errors } = form.formState;
   const submit = form.handleSubmit((body) =>
     withdraw.mutate(body, {
-      onSuccess: onClose,
+      onSuccess: ({ actSeq }) => {
+        onClose();
+        onDone?.(actSeq);
+      },
       onError: (error) =>
         setShownAtFields(showFieldProblems(error, form, (path) => path in form.getValues())),
     }),
@@ -47,6 +55,7 @@ export function WithdrawDialog({ calibration, weights, onClose }: WithdrawDialog
         stays readable with your reason, and what it said before that day stays on record. This cannot be
         undone; a new calibration takes its place.
       </p>
+      {touches && <p>What this will touch: {touches}</p>}
       <form id="withdraw" noValidate onSubmit={(event) => void submit(event)} className="flex flex-col gap-3">
         <Textarea
           label="Reason"

@@ -1,14 +1,20 @@
-import { useRef, type ReactNode } from 'react';
-import { type DownstreamBy } from '#shared/contracts/downstream.ts';
+import { useRef, useState, type ReactNode } from 'react';
+import { Link } from 'react-router';
+import { paths } from '#src/app/paths.ts';
 import { Toolbar, TwoColumns } from '#src/components/layout/columns.tsx';
 import { Page } from '#src/components/layout/page.tsx';
 import { DayField } from '#src/components/ui/day-field.tsx';
 import { Coverage, Quantity } from '#src/components/ui/quantity.tsx';
 import { Switch } from '#src/components/ui/switch.tsx';
 import { Decimal, decimalText } from '#shared/decimal.ts';
+import { suppositionOf, type Supposition } from '../api.ts';
+import { GROUPINGS } from '../groups.ts';
 import type { DownstreamSearch } from '../search.ts';
 import { supposedChange } from '../supposed-change.ts';
+import { KeepDryRun } from './keep-dry-run.tsx';
 import { Leaning } from './leaning.tsx';
+import { RealActs, type ActDialogs } from './real-acts.tsx';
+import { RecordedNotice } from './recorded-notice.tsx';
 import { WhatIfForm, type Asked } from './what-if-form.tsx';
 import { WhatIf } from './what-if.tsx';
 
@@ -34,28 +40,30 @@ interface DownstreamScreenProps {
   answered: { day: string; known: string };
   search: DownstreamSearch;
   onChange: (change: Partial<DownstreamSearch>) => void;
+  dialogs: ActDialogs;
 }
 
-const GROUPINGS = [
-  { value: 'laboratory', label: 'Laboratory' },
-  { value: 'class', label: 'Class' },
-  { value: 'nominal', label: 'Nominal' },
-  { value: 'year', label: 'Year' },
-] as const satisfies readonly { value: DownstreamBy; label: string }[];
-
 /** Who leans on a value, and what if it were otherwise. */
-export function DownstreamScreen({ subject, sub, answered, search, onChange }: DownstreamScreenProps) {
+export function DownstreamScreen(props: DownstreamScreenProps) {
+  const { subject, sub, answered, search, onChange, dialogs } = props;
+  const [actSeq, setActSeq] = useState<number | null>(null);
   const answer = useRef<HTMLDivElement>(null);
   const change = supposedChange(search, subject);
   const onOpen = (group: string | undefined) => onChange({ group });
-  const ask = (asked: Asked) => {
-    onChange({ ...asked, sort: 'word' });
+  const asked = change && suppositionOf([change], search);
+  const ask = (next: Asked) => {
+    setActSeq(null);
+    onChange({ ...next, sort: 'word' });
     // On a phone the answer stands above the form: it comes into sight, and is read out next.
     answer.current?.focus();
   };
   const leave = () => {
     onChange({ suppose: undefined, amount: undefined, sort: 'word' });
     answer.current?.focus();
+  };
+  const done = (seq: number) => {
+    setActSeq(seq);
+    leave();
   };
   return (
     <Page
@@ -97,20 +105,36 @@ export function DownstreamScreen({ subject, sub, answered, search, onChange }: D
       <TwoColumns
         sideWidth="narrow"
         side={
-          <WhatIfForm
-            key={`${search.suppose} ${search.amount} ${search.beyond}`}
-            asked={search}
-            certificateNo={subject.revisionId === null ? null : subject.certificateNo}
-            onAsk={ask}
-            onLeave={leave}
-          />
+          <>
+            <WhatIfForm
+              key={`${search.suppose} ${search.amount} ${search.beyond}`}
+              asked={search}
+              certificateNo={subject.revisionId === null ? null : subject.certificateNo}
+              onAsk={ask}
+              onLeave={leave}
+              further={
+                <Link
+                  to={paths.whatIf.href(asked ? { changes: JSON.stringify(asked.changes) } : {})}
+                  className="underline underline-offset-3"
+                >
+                  Suppose several changes at once
+                </Link>
+              }
+            />
+            {asked && (
+              <>
+                <RealActs asked={asked} dialogs={dialogs} onDone={done} />
+                <KeepDryRun question={questionOf(asked)} />
+              </>
+            )}
+          </>
         }
       >
         <div ref={answer} tabIndex={-1} className="outline-none">
-          {search.suppose !== undefined && change !== null ? (
+          {actSeq !== null && <RecordedNotice actSeq={actSeq} />}
+          {asked ? (
             <WhatIf
-              change={change}
-              suppose={search.suppose}
+              changes={asked.changes}
               search={search}
               onOpen={onOpen}
               onSort={(sort) => onChange({ sort })}
@@ -122,4 +146,9 @@ export function DownstreamScreen({ subject, sub, answered, search, onChange }: D
       </TwoColumns>
     </Page>
   );
+}
+
+/** What is kept of a supposition: the order of its rows is not part of the question. */
+function questionOf({ sort: _sort, ...question }: Supposition) {
+  return question;
 }

@@ -2,6 +2,7 @@ import { fireEvent, render, screen, within } from '@testing-library/react';
 import { MemoryRouter } from 'react-router';
 import { describe, expect, it, vi } from 'vitest';
 import type { WhatIfGroup, WhatIfRow } from '#shared/contracts/downstream.ts';
+import { columnsOf } from './what-if-columns.tsx';
 import { WhatIfForm } from './what-if-form.tsx';
 import { WhatIfTable } from './what-if-table.tsx';
 
@@ -61,7 +62,9 @@ function showTable(open: string | undefined) {
     <MemoryRouter>
       <WhatIfTable
         groups={[GROUP]}
-        suppose="shift"
+        columns={columnsOf([
+          { kind: 'shift', valueUid: '01a01e2f-2000-7738-adb1-8fcf65fde7c6', shift: '0.0012' },
+        ])}
         by="laboratory"
         sort="word"
         {...{ open, opened, onOpen, onSort }}

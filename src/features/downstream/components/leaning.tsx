@@ -3,11 +3,14 @@ import { Section } from '#src/components/layout/page.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
-import { downstreamQuery, downstreamRowsQuery } from '../api.ts';
+import { allRows } from '../all-rows.ts';
+import { downstreamPage, downstreamQuery, downstreamRowsQuery } from '../api.ts';
 import { leaningHeadline } from '../headlines.ts';
 import { openedFrom } from '../opened-from.ts';
+import { leaningCsv } from '../rows-csv.ts';
 import type { DownstreamSearch } from '../search.ts';
 import { LeaningTable } from './leaning-table.tsx';
+import { SaveAllRows } from './save-all-rows.tsx';
 
 interface LeaningProps {
   uid: string;
@@ -36,7 +39,10 @@ export function Leaning({ uid, search, onOpen }: LeaningProps) {
       ) : (
         <>
           {total.warned > 0 && (
-            <p className="text-ink-2">Weights of others are told as laboratory and weight only.</p>
+            <p className="text-ink-2">
+              Weights of others are told as laboratory and weight only, once each. Values on certificates that
+              one’s own laboratory issued are told in full, each calibration as a row of its own.
+            </p>
           )}
           <LeaningTable
             groups={groups.data.groups}
@@ -44,6 +50,18 @@ export function Leaning({ uid, search, onOpen }: LeaningProps) {
             open={search.group}
             opened={openedFrom(rows)}
             onOpen={onOpen}
+          />
+          <SaveAllRows
+            key={`${uid} ${JSON.stringify(asked)}`}
+            name="who-leans-on-it.csv"
+            total={total.count}
+            pages={(signal) =>
+              allRows(
+                groups.data.groups.map(({ key }) => key),
+                (group, cursor) => downstreamPage(uid, asked, { group, cursor, signal }),
+              )
+            }
+            toCsv={leaningCsv}
           />
         </>
       )}

@@ -1,12 +1,11 @@
 import type { ReactNode } from 'react';
-import type { WhatIfGroup, WhatIfRow, WhatIfSort } from '#shared/contracts/downstream.ts';
+import type { WhatIfChange, WhatIfGroup, WhatIfRow, WhatIfSort } from '#shared/contracts/downstream.ts';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { plainText, ratioText, roundedText } from '../rounded.ts';
-import type { Suppose } from '../search.ts';
 
 /** A column between the weight and its word: what is told of a group and of a row. */
-interface WhatIfColumn {
+export interface WhatIfColumn {
   name: string;
   /** At the head of the groups, where it differs from what heads the rows. */
   groupName?: string;
@@ -50,12 +49,14 @@ const U_BEFORE: WhatIfColumn = {
     ),
 };
 
-/** What a change can do: a shift moves values, a larger u widens U, a withdrawal leaves nothing to compute. */
-export const COLUMNS: Record<Suppose, readonly WhatIfColumn[]> = {
-  shift: [SHIFT, RATIO],
-  raise: [U_BEFORE, U_AFTER],
-  withdraw: [],
-};
+/** What changes can do: a shift moves values, a larger u widens U, a withdrawal leaves nothing to compute. */
+export function columnsOf(changes: readonly WhatIfChange[]): WhatIfColumn[] {
+  const moves = changes.some(({ kind }) => kind === 'shift' || kind === 'notice');
+  const widens = changes.some(
+    (change) => change.kind === 'raise' || (change.kind === 'notice' && change.addedUPerKilogram > 0),
+  );
+  return [...(moves ? [SHIFT, RATIO] : []), ...(widens ? [U_BEFORE, U_AFTER] : [])];
+}
 
 function Mass({ grams, isSigned = false }: { grams: number; isSigned?: boolean }) {
   return <Quantity value={roundedText(grams)} kind={isSigned ? 'deviation' : 'value'} shownIn="auto" />;

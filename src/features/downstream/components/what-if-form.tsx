@@ -1,14 +1,14 @@
-import { useState, type FormEvent } from 'react';
+import { useState, type FormEvent, type ReactNode } from 'react';
 import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
 import { DecimalField } from '#src/components/ui/decimal-field.tsx';
 import { SelectField } from '#src/components/ui/select-field.tsx';
-import { TextField } from '#src/components/ui/text-field.tsx';
 import { groupDigits } from '#shared/numbers/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { unitSymbol } from '#shared/numbers/quantity-text.ts';
-import { amountProblem, amountText, readAmount, type ReadAmount } from '../read-amount.ts';
+import { amountProblem, amountText, readAmount } from '../read-amount.ts';
 import type { DownstreamSearch, Suppose } from '../search.ts';
+import { AmountField } from './amount-field.tsx';
 
 /** What the form asks. */
 export type Asked = Pick<DownstreamSearch, 'suppose' | 'amount' | 'beyond'>;
@@ -20,6 +20,8 @@ interface WhatIfFormProps {
   onAsk: (asked: Asked) => void;
   /** Back to who leans on it. */
   onLeave: () => void;
+  /** The way to a dry run of several changes. */
+  further?: ReactNode;
 }
 
 const SUPPOSITIONS: { value: Suppose; label: string }[] = [
@@ -31,7 +33,7 @@ const SUPPOSITIONS: { value: Suppose; label: string }[] = [
 const LARGEST_BEYOND = 1000;
 
 /** Puts one supposition about the value; what it would do is worked out, and nothing is changed. */
-export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormProps) {
+export function WhatIfForm({ asked, certificateNo, onAsk, onLeave, further }: WhatIfFormProps) {
   const { decimalMark } = usePreferences();
   const [suppose, setSuppose] = useState(() => firstSupposition(asked, certificateNo));
   const [amount, setAmount] = useState(() => typedFrom(asked.amount, decimalMark));
@@ -86,6 +88,7 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormP
             unit="% of U"
             value={beyond}
             onChange={setBeyond}
+            hint="10 % of U unless you say otherwise; a changed verdict is never below it"
             error={problems.beyond}
           />
         )}
@@ -100,49 +103,14 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave }: WhatIfFormP
           )}
         </div>
       </form>
+      {further && <p className="pt-1">{further}</p>}
     </Section>
-  );
-}
-
-interface AmountFieldProps {
-  suppose: 'shift' | 'raise';
-  value: string;
-  onChange: (value: string) => void;
-  onLeft: () => void;
-  read: ReadAmount;
-  problem: string | undefined;
-}
-
-function AmountField({ suppose, value, onChange, onLeft, read, problem }: AmountFieldProps) {
-  const { decimalMark } = usePreferences();
-  return (
-    <TextField
-      label={suppose === 'shift' ? 'Shift, with its unit' : 'Standard uncertainty added, with its unit'}
-      placeholder="20 µg"
-      autoComplete="off"
-      spellCheck={false}
-      isMono
-      value={value}
-      onChange={(event) => onChange(event.target.value)}
-      onBlur={onLeft}
-      hint={problem ? undefined : amountHint(read, suppose, decimalMark)}
-      error={problem}
-    />
   );
 }
 
 /** A link may suppose a withdrawal that its reader may not try: then the form begins as it does for everyone. */
 function firstSupposition({ suppose = 'shift' }: Asked, certificateNo: string | null): Suppose {
   return suppose === 'withdraw' && certificateNo === null ? 'shift' : suppose;
-}
-
-/** How the amount was read, with its sign said, so that nobody shifts the wrong way. */
-function amountHint(read: ReadAmount, suppose: 'shift' | 'raise', mark: '.' | ','): string | undefined {
-  if (read.kind !== 'amount') return suppose === 'shift' ? 'Minus makes it lighter.' : 'Added in quadrature.';
-  const { value, unit } = read.shown;
-  const text = `${groupDigits(value.replace(/^-/, ''), mark)}\u2009${unitSymbol(unit)}`;
-  if (suppose === 'raise') return `Read as ${text}, added in quadrature`;
-  return `Read as ${text} ${value.startsWith('-') ? 'lighter' : 'heavier'}`;
 }
 
 function beyondProblem(text: string): string | undefined {

@@ -5,15 +5,15 @@ import { usePreferences } from '#src/lib/preferences.ts';
 import { GROUPED_BY, groupName, inOrder } from '../groups.ts';
 import { whatIfCsv } from '../rows-csv.ts';
 import { saveText } from '../save-text.ts';
-import type { Suppose } from '../search.ts';
 import { GroupNameCell, InnerHead, OpenedFoot, type OpenedGroup } from './group-rows.tsx';
 import { WeightCells } from './weight-cells.tsx';
-import { COLUMNS } from './what-if-columns.tsx';
+import type { WhatIfColumn } from './what-if-columns.tsx';
 import { ClassVerdicts, WhatIfWordMark } from './what-if-word.tsx';
 
 interface WhatIfTableProps {
   groups: readonly WhatIfGroup[];
-  suppose: Suppose;
+  /** What is told between a weight and its word. */
+  columns: readonly WhatIfColumn[];
   by: DownstreamBy;
   sort: WhatIfSort;
   /** Key of the group that is open. */
@@ -25,14 +25,13 @@ interface WhatIfTableProps {
 
 /** What a change would do, group by group and, in the group that is open, row by row; the worst first. */
 export function WhatIfTable(props: WhatIfTableProps) {
-  const { groups, suppose, by, sort, open, opened, onOpen, onSort } = props;
+  const { groups, columns, by, sort, open, opened, onOpen, onSort } = props;
   const { decimalMark } = usePreferences();
-  const columns = COLUMNS[suppose];
   const colSpan = columns.length + 5;
   return (
     <Table caption="What it would do">
       <thead>
-        <GroupHeads {...{ suppose, by, sort, onSort }} />
+        <GroupHeads {...{ columns, by, sort, onSort }} />
       </thead>
       <tbody>
         {inOrder(groups, sort).map((group) => {
@@ -57,11 +56,11 @@ export function WhatIfTable(props: WhatIfTableProps) {
               </Row>
               {isOpen && (
                 <>
-                  {opened.rows.length > 0 && <InnerHead heads={innerHeads(suppose)} />}
+                  {opened.rows.length > 0 && <InnerHead heads={innerHeads(columns)} />}
                   {opened.rows.map((row) => (
                     <RowOfGroup
                       key={row.view === 'full' ? row.uid : row.registryNo}
-                      {...{ row, suppose, by }}
+                      {...{ row, columns, by }}
                     />
                   ))}
                   <OpenedFoot
@@ -81,11 +80,11 @@ export function WhatIfTable(props: WhatIfTableProps) {
 }
 
 function GroupHeads({
-  suppose,
+  columns,
   by,
   sort,
   onSort,
-}: Pick<WhatIfTableProps, 'suppose' | 'by' | 'sort' | 'onSort'>) {
+}: Pick<WhatIfTableProps, 'columns' | 'by' | 'sort' | 'onSort'>) {
   const sorted = (own: WhatIfSort | undefined) =>
     own && { sort: sort === own ? ('descending' as const) : ('none' as const), onSort: () => onSort(own) };
   return (
@@ -95,7 +94,7 @@ function GroupHeads({
         Verdict changes
       </Head>
       <Head align="right">Material</Head>
-      {COLUMNS[suppose].map((column) => (
+      {columns.map((column) => (
         <Head key={column.name} align="right" {...sorted(column.sort)}>
           {column.groupName ?? column.name}
         </Head>
@@ -105,24 +104,24 @@ function GroupHeads({
   );
 }
 
-function innerHeads(suppose: Suppose) {
+function innerHeads(columns: readonly WhatIfColumn[]) {
   return [
     { name: 'Weight' },
     { name: 'Nominal' },
     { name: 'Comes to', align: 'right', colSpan: 2 },
-    ...COLUMNS[suppose].map(({ name }) => ({ name, align: 'right' }) as const),
+    ...columns.map(({ name }) => ({ name, align: 'right' }) as const),
     { name: 'Class', align: 'right' },
   ] as const;
 }
 
-function RowOfGroup({ row, suppose, by }: { row: WhatIfRow; suppose: Suppose; by: DownstreamBy }) {
+function RowOfGroup({ row, columns, by }: { row: WhatIfRow } & Pick<WhatIfTableProps, 'columns' | 'by'>) {
   return (
     <Row>
       <WeightCells row={row} by={by} />
       <Cell colSpan={2} align="right">
         <WhatIfWordMark word={row.word} />
       </Cell>
-      {COLUMNS[suppose].map((column) => (
+      {columns.map((column) => (
         <Cell key={column.name} align="right">
           {column.ofRow(row)}
         </Cell>

@@ -1,73 +1,112 @@
 import { keepPreviousData, useInfiniteQuery, useQuery } from '@tanstack/react-query';
 import type { WhatIfChange, WhatIfResponse, WhatIfSort } from '#shared/contracts/downstream.ts';
 import { Section } from '#src/components/layout/page.tsx';
+import { Button } from '#src/components/ui/button.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
-import { whatIfQuery, whatIfRowsQuery } from '../api.ts';
+import { usePreferences } from '#src/lib/preferences.ts';
+import { allRows } from '../all-rows.ts';
+import { suppositionOf, whatIfPage, whatIfQuery, whatIfRowsQuery } from '../api.ts';
+import { GROUPED_BY, groupName } from '../groups.ts';
 import { whatIfHeadline } from '../headlines.ts';
 import { openedFrom } from '../opened-from.ts';
 import { roundedText } from '../rounded.ts';
-import type { DownstreamSearch, Suppose } from '../search.ts';
+import { groupsCsv, whatIfCsv } from '../rows-csv.ts';
+import { saveText } from '../save-text.ts';
+import type { AskedOfRows } from '../what-if-search.ts';
+import { SaveAllRows } from './save-all-rows.tsx';
+import { columnsOf } from './what-if-columns.tsx';
 import { WhatIfTable } from './what-if-table.tsx';
 
 interface WhatIfProps {
-  change: WhatIfChange;
-  suppose: Suppose;
-  search: DownstreamSearch;
+  changes: WhatIfChange[];
+  search: AskedOfRows;
   onOpen: (key: string | undefined) => void;
   onSort: (sort: WhatIfSort) => void;
 }
 
-/** What one change would do, fetched in groups first and row by row where a group is opened. */
-export function WhatIf({ change, suppose, search, onOpen, onSort }: WhatIfProps) {
-  const { day, known, by, sort } = search;
-  const asked = { changes: [change], threshold: search.beyond / 100, day, known, by, sort };
+/** What changes would do, fetched in groups first and row by row where a group is opened. */
+export function WhatIf({ changes, search, onOpen, onSort }: WhatIfProps) {
+  const asked = suppositionOf(changes, search);
   const answer = useQuery({ ...whatIfQuery(asked), placeholderData: keepPreviousData });
   const rows = useInfiniteQuery({
     ...whatIfRowsQuery(asked, search.group ?? ''),
     enabled: search.group !== undefined,
   });
+  const { decimalMark } = usePreferences();
   if (answer.error) return <ErrorNotice error={answer.error} onRetry={() => void answer.refetch()} />;
   if (!answer.data) return <Waiting>Working it out</Waiting>;
+  const { groups, total } = answer.data;
+  const { by } = answer.data.question;
   return (
     <Section
-      title={whatIfHeadline(answer.data.total)}
+      title={whatIfHeadline(total)}
       note={<span className="inline-block">a dry run: nothing was changed</span>}
     >
-      <Totals answer={answer.data} suppose={suppose} />
-      {answer.data.total.count > 0 && (
-        <WhatIfTable
-          groups={answer.data.groups}
-          suppose={suppose}
-          by={answer.data.question.by}
-          sort={sort}
-          open={search.group}
-          opened={openedFrom(rows)}
-          onOpen={onOpen}
-          onSort={onSort}
-        />
+      <Totals answer={answer.data} />
+      {total.count > 0 && (
+        <>
+          <WhatIfTable
+            groups={groups}
+            columns={columnsOf(changes)}
+            by={by}
+            sort={search.sort}
+            open={search.group}
+            opened={openedFrom(rows)}
+            onOpen={onOpen}
+            onSort={onSort}
+          />
+          <div className="flex flex-wrap items-start gap-x-5">
+            <SaveAllRows
+              key={JSON.stringify(asked)}
+              name="what-it-would-do.csv"
+              total={total.count}
+              pages={(signal) =>
+                allRows(
+                  groups.map(({ key }) => key),
+                  (group, cursor) => whatIfPage(asked, { group, cursor, signal }),
+                )
+              }
+              toCsv={whatIfCsv}
+            />
+            <Button
+              weight="text"
+              className="pt-1"
+              onClick={() =>
+                saveText(
+                  'what-it-would-do-by-group.csv',
+                  groupsCsv(groups, GROUPED_BY[by], (group) => groupName(group, by, decimalMark)),
+                )
+              }
+            >
+              Save the groups as CSV
+            </Button>
+          </div>
+        </>
       )}
     </Section>
   );
 }
 
-function Totals({ answer, suppose }: { answer: WhatIfResponse; suppose: Suppose }) {
+function Totals({ answer }: { answer: WhatIfResponse }) {
   const { total, groups, beyondLimit } = answer;
   const shifts = groups.flatMap(({ largestShift }) => (largestShift === null ? [] : [largestShift]));
+  const largest = Math.max(0, ...shifts);
   return (
     <>
       <p role="status" className="text-ink-2">
         None {total.words.none}, material {total.words.material}, verdict changes {total.words.verdictChanges}
         .
-        {suppose === 'shift' && shifts.length > 0 && (
+        {largest > 0 && (
           <>
             {' '}
-            The largest shift is <Quantity value={roundedText(Math.max(...shifts))} shownIn="auto" />.
+            The largest shift is <Quantity value={roundedText(largest)} shownIn="auto" />.
           </>
         )}
-        {total.warned > 0 && ' Weights of others are told with their shift and one word only.'}
+        {total.warned > 0 &&
+          ' Weights of others are told with their shift and one word only. Each counts once, however often it was calibrated; the list of who leans on it counts every value that one’s own laboratory issued.'}
       </p>
       {beyondLimit.length > 0 && (
         <Notice tone="caution" title="A class limit would no longer cover what was used by it">

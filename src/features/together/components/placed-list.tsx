@@ -1,0 +1,66 @@
+import type { TogetherResponse } from '#shared/contracts/downstream.ts';
+import { nominalText } from '#shared/numbers/nominal.ts';
+import { Button } from '#src/components/ui/button.tsx';
+import { Switch } from '#src/components/ui/switch.tsx';
+import { usePreferences } from '#src/lib/preferences.ts';
+import type { Placed } from '../search.ts';
+
+interface PlacedListProps {
+  placed: readonly Placed[];
+  together: TogetherResponse | undefined;
+  onPlaced: (placed: readonly Placed[]) => void;
+}
+
+const PANS = [
+  { value: '1', label: 'this pan' },
+  { value: '-1', label: 'the other' },
+] as const;
+
+/** The weights as they lie on the pans. */
+export function PlacedList({ placed, together, onPlaced }: PlacedListProps) {
+  const { decimalMark } = usePreferences();
+  const weightOf = (uid: string) => together?.weights[together.valueUids.indexOf(uid)];
+  return (
+    <ul className="border-t border-rule">
+      {placed.map(({ uid, sign }, at) => {
+        const weight = weightOf(uid);
+        const name = weight?.registryNo ?? `weight ${at + 1}`;
+        return (
+          <li
+            key={uid}
+            className="flex flex-wrap items-center justify-between gap-x-3 gap-y-1 border-b border-rule py-1"
+          >
+            <span>
+              <span className="font-mono text-sm">{weight?.registryNo ?? `Weight ${at + 1}`}</span>
+              {weight && (
+                <span className="ml-2 whitespace-nowrap">{nominalText(weight.nominal, decimalMark)}</span>
+              )}
+            </span>
+            <span className="flex items-center gap-3">
+              <Switch
+                label={`Pan of ${name}`}
+                isLabelHidden
+                value={sign === 1 ? '1' : '-1'}
+                onChange={(pan) =>
+                  onPlaced(
+                    placed.map((each, place) =>
+                      place === at ? { ...each, sign: pan === '1' ? 1 : -1 } : each,
+                    ),
+                  )
+                }
+                choices={PANS}
+              />
+              <Button
+                weight="text"
+                aria-label={`Take ${name} off`}
+                onClick={() => onPlaced(placed.filter((_, place) => place !== at))}
+              >
+                Take off
+              </Button>
+            </span>
+          </li>
+        );
+      })}
+    </ul>
+  );
+}
