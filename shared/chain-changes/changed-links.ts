@@ -27,9 +27,11 @@ export function changedLinks(pairs: Pairs): ChangedLink[] {
     VERDICTS.filter(({ verdict }) => before[verdict] !== after[verdict]).map(({ verdict, words }) => {
       const [was, is] = [before[verdict], after[verdict]];
       const isWorse = GRAVEST_LAST.indexOf(is) > GRAVEST_LAST.indexOf(was);
-      const checks = isWorse
-        ? tellingChecks(pairs.after, after, verdict)
-        : tellingChecks(pairs.before, before, verdict);
+      const [earlier, later] = [
+        tellingChecks(pairs.before, before, verdict),
+        tellingChecks(pairs.after, after, verdict),
+      ];
+      const checks = isWorse ? onlyIn(later, earlier) : onlyIn(earlier, later);
       const name = `${names.get(after.parentUid)} → ${names.get(after.childUid)}`;
       return {
         checks,
@@ -57,6 +59,15 @@ function tellingChecks(chain: ChainResponse, link: Link, verdict: 'conduct' | 't
       (check.verdict === verdict || (verdict === 'today' && lasting.has(check.rule))) &&
       isAbout(check, link),
   );
+}
+
+/** The findings that one side has and the other has not; all of them where that leaves none. */
+function onlyIn(these: Check[], others: readonly Check[]): Check[] {
+  const key = ({ rule, verdict, outcome, subject: { type } }: Check) =>
+    `${rule} ${verdict} ${outcome} ${type}`;
+  const there = new Set(others.map(key));
+  const own = these.filter((check) => !there.has(key(check)));
+  return own.length > 0 ? own : these;
 }
 
 function isAbout({ subject }: Check, link: Link): boolean {

@@ -6,7 +6,7 @@ import { paths } from '#src/app/paths.ts';
 import { queryClient } from '#src/app/query-client.ts';
 import { Toolbar } from '#src/components/layout/columns.tsx';
 import { LinkButton } from '#src/components/ui/button.tsx';
-import { chainQuery } from '#src/features/chains/api.ts';
+import { chainQuery, type ChainDays } from '#src/features/chains/api.ts';
 import { ChainScreen } from '#src/features/chains/components/chain-screen.tsx';
 import type { ValueNode } from '#src/features/chains/components/selection-sheet.tsx';
 import { readQuestion, withChange, type ChainQuestion } from '#src/features/chains/question.ts';
@@ -22,7 +22,7 @@ const TakeAlong = lazy(() =>
 export async function loader({ params, request }: LoaderFunctionArgs): Promise<null> {
   const question = readQuestion(new URL(request.url).searchParams);
   await queryClient.query({
-    ...chainQuery(params.valueUid!, { day: question.day, known: question.known }),
+    ...chainQuery(params.valueUid!, daysOf(question)),
     staleTime: 10_000,
   });
   return null;
@@ -34,13 +34,13 @@ export function Component() {
   const [parameters, setParameters] = useSearchParams();
   const question = readQuestion(parameters);
   const { data, error } = useQuery({
-    ...chainQuery(valueUid!, { day: question.day, known: question.known }),
+    ...chainQuery(valueUid!, daysOf(question)),
     placeholderData: keepPreviousData,
   });
   if (error) throw error;
   if (!data) return null;
-  const change = (next: Partial<ChainQuestion>) =>
-    setParameters(withChange(question, next), { replace: 'at' in next, preventScrollReset: true });
+  const change = (next: Partial<ChainQuestion>, isStep = 'at' in next) =>
+    setParameters(withChange(question, next), { replace: isStep, preventScrollReset: true });
   return (
     <ChainScreen
       chain={data}
@@ -51,6 +51,10 @@ export function Component() {
       actions={<Further chain={data} question={question} />}
     />
   );
+}
+
+function daysOf({ day, known, as }: ChainQuestion): ChainDays {
+  return { day, known, as };
 }
 
 /** Where the chain leads on: who leans on the weight, and how wrong what it leans on may be. */

@@ -1,11 +1,18 @@
 import { queryOptions } from '@tanstack/react-query';
-import { ChainResponse, ChainSearchResponse, CovarianceResponse } from '#shared/contracts/chains.ts';
+import { ChainLifeResponse } from '#shared/contracts/chain-life.ts';
+import {
+  type ChainAs,
+  ChainResponse,
+  ChainSearchResponse,
+  CovarianceResponse,
+} from '#shared/contracts/chains.ts';
 import { get } from '#src/lib/api-client.ts';
 
-/** The question behind a chain, apart from the value: the day and the knowledge day; today where left out. */
+/** The question behind a chain, apart from the value: the day and the knowledge day, today where left out, and how its links stand. */
 export interface ChainDays {
   day?: string | undefined;
   known?: string | undefined;
+  as?: ChainAs | undefined;
 }
 
 /** The chain of a value, with its numbers and checks. */
@@ -13,7 +20,10 @@ export function chainQuery(valueUid: string, days: ChainDays) {
   return queryOptions({
     queryKey: ['chains', 'detail', valueUid, days],
     queryFn: ({ signal }) =>
-      get(`/api/chains/${valueUid}`, ChainResponse, { query: { day: days.day, known: days.known }, signal }),
+      get(`/api/chains/${valueUid}`, ChainResponse, {
+        query: { day: days.day, known: days.known, as: days.as },
+        signal,
+      }),
   });
 }
 
@@ -31,5 +41,13 @@ export function covarianceQuery(valueUid: string, otherUid: string) {
     queryKey: ['chains', 'covariance', valueUid, otherUid],
     queryFn: ({ signal }) =>
       get(`/api/chains/${valueUid}/covariance/${otherUid}`, CovarianceResponse, { signal }),
+  });
+}
+
+/** What befell a weight and what it rests on. */
+export function chainLifeQuery(valueUid: string) {
+  return queryOptions({
+    queryKey: ['chains', 'life', valueUid],
+    queryFn: ({ signal }) => get(`/api/chains/${valueUid}/life`, ChainLifeResponse, { signal }),
   });
 }

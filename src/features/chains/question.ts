@@ -22,6 +22,8 @@ const Question = z.object({
   thenDay: z.iso.date().optional().catch(undefined),
   thenKnown: z.iso.date().optional().catch(undefined),
   thenAs: z.enum(['certified', 'now known']).optional().catch(undefined),
+  /** The rule set that answered whoever sent the link; the present one answers. */
+  rules: z.string().max(40).optional().catch(undefined),
   /** The drawing as wide as the page, above its table. */
   place: z.enum(['wide']).optional().catch(undefined),
   /** A second value: what both lean on lights up. */
@@ -50,4 +52,17 @@ export function withChange(question: ChainQuestion, change: Partial<ChainQuestio
       value && value !== defaults[name] ? [[name, value]] : [],
     ),
   );
+}
+
+/** The question with its days and rule set named: what a colleague opens later is the same question. */
+export function pinned(
+  question: ChainQuestion,
+  answered: { day: string; known: string; ruleSet: string },
+): Record<string, string> {
+  return withChange(question, { day: answered.day, known: answered.known, rules: answered.ruleSet });
+}
+
+/** Whether another question is laid beside this one. */
+export function isCompared({ thenDay, thenKnown, thenAs }: ChainQuestion): boolean {
+  return thenDay !== undefined || thenKnown !== undefined || thenAs !== undefined;
 }

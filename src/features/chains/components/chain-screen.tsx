@@ -1,6 +1,6 @@
-import { lazy, Suspense, type ReactNode } from 'react';
+import { lazy, Suspense, useState, type ReactNode } from 'react';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
-import { TwoColumns } from '#src/components/layout/columns.tsx';
+import { Stack, TwoColumns } from '#src/components/layout/columns.tsx';
 import { Page, Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
@@ -8,11 +8,15 @@ import { Waiting } from '#src/components/ui/progress.tsx';
 import { Coverage, Quantity } from '#src/components/ui/quantity.tsx';
 import { Decimal, decimalText } from '#shared/decimal.ts';
 import { nominalText } from '#shared/numbers/nominal.ts';
-import type { ChainQuestion } from '../question.ts';
+import { CompareWith } from '../changes/compare-with.tsx';
+import { LifeLine } from '../life/life-line.tsx';
+import { isCompared, type ChainQuestion } from '../question.ts';
+import { BothChains } from './both-chains.tsx';
 import { BothKinds } from './both-kinds.tsx';
 import { Contributions } from './contributions.tsx';
 import { LinkTable } from './link-table.tsx';
 import { NotYetNotice } from './not-yet-notice.tsx';
+import { OtherRules } from './other-rules.tsx';
 import { QuestionBar } from './question-bar.tsx';
 import { SelectionSheet, type ValueNode } from './selection-sheet.tsx';
 import { Verdict } from './verdict.tsx';
@@ -22,10 +26,16 @@ const ChainGraph = lazy(() =>
   import('../graph/chain-graph.tsx').then((module) => ({ default: module.ChainGraph })),
 );
 
+/** Two answers laid over each other: fetched when somebody compares. */
+const Comparison = lazy(() =>
+  import('../changes/comparison.tsx').then((module) => ({ default: module.Comparison })),
+);
+
 interface ChainScreenProps {
   chain: ChainResponse;
   question: ChainQuestion;
-  onChange: (change: Partial<ChainQuestion>) => void;
+  /** A step along a line replaces the address instead of adding to the way back. */
+  onChange: (change: Partial<ChainQuestion>, isStep?: boolean) => void;
   actionsFor: (node: ValueNode) => ReactNode;
   /** The address of another value's chain, on the same days. */
   hrefOf: (valueUid: string) => string;
@@ -39,6 +49,8 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
     (node): node is ValueNode => node.uid === chain.focusUid && node.type === 'value',
   )!;
   const select = (at: string) => onChange({ at });
+  const [marks, setMarks] = useState<ReadonlyMap<string, string>>();
+  const comparing = isCompared(question);
   return (
     <Page
       title={titleOf(focus)}
@@ -65,13 +77,29 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
       }
     >
       <NotYetNotice chain={chain} hrefOf={hrefOf} />
+      <OtherRules asked={question.rules} chain={chain} onDrop={() => onChange({ rules: undefined }, true)} />
       <QuestionBar question={question} answered={chain.question} onChange={onChange} />
+      <Stack gap="tight">
+        <LifeLine
+          valueUid={chain.focusUid}
+          answered={chain.question}
+          onStep={(change) => onChange(change, true)}
+        />
+        {comparing ? (
+          <Suspense fallback={<Waiting>Fetching the comparison</Waiting>}>
+            <Comparison chain={chain} question={question} onChange={onChange} onMarks={setMarks} />
+          </Suspense>
+        ) : (
+          <CompareWith focus={focus} question={question} answered={chain.question} onChange={onChange} />
+        )}
+      </Stack>
       <TwoColumns
         isSideFirstOnPhones
         isStacked={question.place === 'wide'}
         side={
           <>
             <Verdict chain={chain} question={question} onChange={onChange} />
+            <BothChains chain={chain} />
             <LinkTable chain={chain} question={question} onChange={onChange} />
             <Contributions chain={chain} />
             <BothKinds chain={chain} />
@@ -84,7 +112,13 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
             <NothingFails onShowAll={() => onChange({ only: undefined })} />
           ) : (
             <Suspense fallback={<Waiting>Fetching the drawing</Waiting>}>
-              <ChainGraph chain={chain} question={question} onSelect={select} onChange={onChange} />
+              <ChainGraph
+                chain={chain}
+                question={question}
+                onSelect={select}
+                onChange={onChange}
+                marks={comparing ? marks : undefined}
+              />
             </Suspense>
           )}
         </Section>

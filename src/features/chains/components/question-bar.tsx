@@ -22,6 +22,15 @@ export function QuestionBar({ question, answered, onChange }: QuestionBarProps) 
         onDay={(known) => onChange({ known })}
       />
       <Switch
+        label="Links"
+        value={question.as}
+        onChange={(as) => onChange({ as })}
+        choices={[
+          { value: 'certified', label: 'As certified' },
+          { value: 'now known', label: 'As now known' },
+        ]}
+      />
+      <Switch
         label="Judged by"
         value={question.verdict}
         onChange={(verdict) => onChange({ verdict })}

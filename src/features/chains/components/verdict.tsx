@@ -43,26 +43,59 @@ export function Verdict({ chain, question, onChange }: VerdictProps) {
         <p className="text-ink-2">{failing.length - LONGEST_LIST} more in the table below.</p>
       )}
       {ofChain.length > 0 && <CheckList chain={chain} checks={ofChain} />}
-      {question.verdict === 'today' && (
-        <AtUse chain={chain} onSwitch={() => onChange({ verdict: 'conduct' })} />
-      )}
+      <BothVerdicts chain={chain} chosen={question.verdict} onChange={onChange} />
     </Section>
   );
 }
 
-/** Under what is known now: what failed when it was done is not forgotten, and one click away. */
-function AtUse({ chain, onSwitch }: { chain: ChainResponse; onSwitch: () => void }) {
-  const { conduct, links } = chain.summary;
-  const failed = conduct.broken + conduct.caution;
-  if (failed === 0) return null;
+type VerdictName = ChainQuestion['verdict'];
+
+interface BothVerdictsProps {
+  chain: ChainResponse;
+  chosen: VerdictName;
+  onChange: (change: Partial<ChainQuestion>) => void;
+}
+
+/** Both verdicts beside each other where they differ: what each counts, and what the difference means. */
+function BothVerdicts({ chain, chosen, onChange }: BothVerdictsProps) {
+  const { summary, question } = chain;
+  const said = (verdict: VerdictName) => headline(summary[verdict], summary.links);
+  if (said('today') === said('conduct')) return null;
+  const verdicts: { name: VerdictName; words: string; counts: string }[] = [
+    { name: 'conduct', words: 'Known at use', counts: 'What had been made known by each day of use.' },
+    { name: 'today', words: 'Known now', counts: `All that is on record by ${question.known}.` },
+  ];
   return (
-    <p className="text-sm text-ink-2">
-      At use, {failed} of {links} {links === 1 ? 'link' : 'links'} failed a check.{' '}
-      <Button weight="text" onClick={onSwitch}>
-        Judge by what was known at use
-      </Button>
-    </p>
+    <div className="mt-1 border-t border-rule pt-1.5">
+      <dl className="grid grid-cols-2 gap-x-4">
+        {verdicts.map(({ name, words, counts }) => (
+          <div key={name}>
+            <dt className="text-sm text-ink-2">{words}</dt>
+            <dd>
+              <p className={name === chosen ? 'font-semibold' : ''}>{said(name)}</p>
+              <p className="text-sm text-ink-2">{counts}</p>
+              {name !== chosen && (
+                <Button weight="text" onClick={() => onChange({ verdict: name })}>
+                  Judge by this
+                </Button>
+              )}
+            </dd>
+          </div>
+        ))}
+      </dl>
+      <p className="mt-1 text-ink-2">{meaningOf(summary)}</p>
+    </div>
   );
+}
+
+/** What it means that the two verdicts differ, in one sentence. */
+function meaningOf({ conduct, today }: ChainResponse['summary']): string {
+  const findings = (counts: typeof today) => counts.broken + counts.caution + counts.notJudged;
+  if (findings(conduct) === 0)
+    return 'The work was sound when it was done; something that it rests on has changed since.';
+  if (findings(today) === 0)
+    return 'Something was not in order when the work was done; what is on record now shows no flaw that lasts.';
+  return 'Some findings were there when the work was done, others came to light or changed since.';
 }
 
 function headline(counts: ChainResponse['summary']['today'], links: number): string {
