@@ -35,6 +35,7 @@ export function Component() {
               Open the chain
             </LinkButton>
           )}
+          {value && <LinkButton to={paths.exposure.href(data.standard.id)}>Exposure</LinkButton>}
           {canChange && (
             <LinkButton weight={value ? 'plain' : 'primary'} to={paths.newDraft.href(data.standard.id)}>
               Record a calibration

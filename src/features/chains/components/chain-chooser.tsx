@@ -1,5 +1,6 @@
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import { useQuery } from '@tanstack/react-query';
+import { Toolbar } from '#src/components/layout/columns.tsx';
 import { Page } from '#src/components/layout/page.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
@@ -16,25 +17,30 @@ interface ChainChooserProps {
   q: string;
   onSearch: (q: string) => void;
   hrefOf: (valueUid: string) => string;
+  /** Where else chains lead: beside the search. */
+  actions?: ReactNode;
 }
 
 /** Which chain to open: the newest values of one's own weights, or those found by registry number. */
-export function ChainChooser({ q, onSearch, hrefOf }: ChainChooserProps) {
+export function ChainChooser({ q, onSearch, hrefOf, actions }: ChainChooserProps) {
   const [typed, setTyped] = useState(q);
   const { data, error, refetch } = useQuery(chainChoicesQuery(q));
   return (
     <Page title="Chains" sub="Each value back to the SI, with the uncertainty that really reaches it.">
-      <TextField
-        label="Registry number"
-        className="max-w-72"
-        isMono
-        type="search"
-        value={typed}
-        onChange={(event) => {
-          setTyped(event.target.value);
-          onSearch(event.target.value.trim());
-        }}
-      />
+      <Toolbar>
+        <TextField
+          label="Registry number"
+          className="max-w-72"
+          isMono
+          type="search"
+          value={typed}
+          onChange={(event) => {
+            setTyped(event.target.value);
+            onSearch(event.target.value.trim());
+          }}
+        />
+        {actions}
+      </Toolbar>
       {error && <ErrorNotice error={error} onRetry={() => void refetch()} />}
       {!data && !error && <Waiting>Looking for values</Waiting>}
       {data?.values.length === 0 && (

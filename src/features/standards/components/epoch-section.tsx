@@ -1,5 +1,7 @@
 import { useState } from 'react';
+import { Link } from 'react-router';
 import type { StandardResponse } from '#shared/contracts/standards.ts';
+import { paths } from '#src/app/paths.ts';
 import { Facts } from '#src/components/layout/facts.tsx';
 import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
@@ -26,20 +28,32 @@ export function EpochSection({ sheet }: { sheet: StandardResponse }) {
       <Facts
         facts={sheet.epochs
           .toReversed()
-          .map((epoch) => [`Epoch ${epoch.n}`, <EpochText key={epoch.n} epoch={epoch} />] as const)}
+          .map((epoch) => [`Epoch ${epoch.n}`, <EpochText key={epoch.n} epoch={epoch} standardId={sheet.standard.id} />] as const)}
       />
       {isOpening && <EpochDialog sheet={sheet} onClose={() => setOpening(false)} />}
     </Section>
   );
 }
 
-function EpochText({ epoch }: { epoch: StandardResponse['epochs'][number] }) {
+function EpochText({
+  epoch,
+  standardId,
+}: {
+  epoch: StandardResponse['epochs'][number];
+  standardId: string;
+}) {
   return (
     <>
       {epoch.reason}, from <DateText value={epoch.beginsOn} />
       {epoch.lastGoodOn && (
         <>
-          ; last known good <DateText value={epoch.lastGoodOn} />
+          ; last known good <DateText value={epoch.lastGoodOn} />,{' '}
+          <Link
+            to={paths.exposure.href(standardId, { lastGood: epoch.lastGoodOn, firstBad: epoch.beginsOn })}
+            className="underline underline-offset-3"
+          >
+            what leaned on it in between
+          </Link>
         </>
       )}
       {epoch.note && <span className="block text-sm text-ink-2">{epoch.note}</span>}
