@@ -1,6 +1,7 @@
 import { combined, effect, type Effects } from './effects.ts';
 import { laboratoryOf } from './laboratories.ts';
 import { carriedAsPrinted, leanedEffects } from './leaning.ts';
+import { FEW_DEGREES, LEFT_OUT, type Omission } from './omissions.ts';
 import type { PlannedCertificate, PlannedLine } from './plan.ts';
 import type { Result } from './result.ts';
 import type { DemoValue } from './value.ts';
@@ -26,6 +27,8 @@ export interface Entry {
   isFaulty?: boolean;
   /** Says class and keeps it; left out: wherever the result allows it. */
   statesClass?: boolean;
+  /** Left out on purpose. */
+  omits?: Omission;
 }
 
 /** A certificate before it has its number. */
@@ -124,17 +127,20 @@ export function certificateOf(
   certificateNo: string,
   values: readonly DemoValue[],
 ): PlannedCertificate {
+  const omits = (what: Omission) => sheet.entries.some((entry) => entry.omits === what);
   return {
     issuer: sheet.issuer,
     registeredBy: sheet.registeredBy,
+    signedBy: omits('signatory') ? 'metrologist' : 'signatory',
     certificateNo,
     performedBegin: sheet.begin,
     performedEnd: sheet.end,
     issuedOn: sheet.issued,
     method: sheet.method,
-    decisionRule: values.some((value) => value.class !== null)
-      ? laboratoryOf(sheet.issuer).decisionRule
-      : null,
+    decisionRule:
+      values.some((value) => value.class !== null) && !omits('decision rule')
+        ? laboratoryOf(sheet.issuer).decisionRule
+        : null,
     lines: sheet.entries.map((entry, at) => lineOf(sheet, entry, values[at]!)),
     group: sheet.group ?? null,
   };
@@ -219,7 +225,11 @@ function lineOf(sheet: Sheet, entry: Entry, value: DemoValue): PlannedLine {
         role: 'informs' as const,
       })),
     ].map((reference) => ({ ...reference, usedBegin: sheet.begin, usedEnd: sheet.end })),
-    sources: task.leaning.sources.map(({ source, sensitivity }) => ({ source, sensitivity })),
+    sources:
+      entry.omits === 'buoyancy'
+        ? []
+        : task.leaning.sources.map(({ source, sensitivity }) => ({ source, sensitivity })),
+    degreesOfFreedom: entry.omits === 'degrees of freedom' ? FEW_DEGREES : null,
     components: entry.hasBudget ? budgetOf(entry) : [],
   };
 }
@@ -255,10 +265,14 @@ const BUDGETS = {
 function budgetOf({
   result: { task, fillU },
   budget = 'weighing',
+  omits,
 }: Entry): NonNullable<PlannedLine['components']> {
-  const own = BUDGETS[budget].map(({ share, ...component }) => ({
+  const leftOut = omits && LEFT_OUT[omits];
+  const kept = BUDGETS[budget].filter(({ name }) => name !== leftOut);
+  const total = kept.reduce((sum, { share }) => sum + share, 0);
+  const own = kept.map(({ share, ...component }) => ({
     ...component,
-    standardUncertainty: task.ownU * Math.sqrt(share),
+    standardUncertainty: task.ownU * Math.sqrt(share / total),
     sensitivity: 1,
   }));
   if (fillU === 0) return own;

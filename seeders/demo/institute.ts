@@ -1,5 +1,6 @@
 import { INSTITUTE } from './laboratories.ts';
 import { addSet, addWeight, FULL_SET } from './pieces.ts';
+import type { StatedProperty } from './plan.ts';
 import { BOTH, CONVENTIONAL, SUBSTITUTION, type Pools } from './pools.ts';
 import { addRoots } from './roots.ts';
 import { roundsFrom, type Series } from './series.ts';
@@ -33,6 +34,13 @@ export function addInstitute(world: World, pools: Pools): Series[] {
       intervalMonths: 26,
     }),
   );
+  for (const { registryNo } of steels) {
+    const measured = { k: '2', origin: 'measured' } as const;
+    const state = (property: StatedProperty) =>
+      world.steps.push({ day: own.inServiceFrom, does: 'state property', registryNo, property });
+    state({ kind: 'susceptibility', value: '0.0038', expandedU: '0.0006', ...measured });
+    state({ kind: 'polarisation', value: '0.12', expandedU: '0.3', ...measured });
+  }
   const sets = [1, 2].map((n) =>
     addSet(world, {
       owner: INSTITUTE,

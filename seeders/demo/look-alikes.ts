@@ -102,6 +102,43 @@ const OF_LINES: (Likeness & { applies(line: Line): boolean })[] = [
     applies: ({ entry }) => entry.isUnitConfirmed === true,
   },
   {
+    kind: 'entered by its recipient, whose budget stays with the issuer',
+    rule: 'B-23',
+    verdict: 'conduct',
+    applies: ({ sheet, entry, uses }) =>
+      uses.length > 0 && !entry.hasBudget && sheet.registeredBy !== sheet.issuer,
+  },
+  {
+    kind: 'entered by its recipient, who cannot know who signed',
+    rule: 'B-38',
+    verdict: 'conduct',
+    applies: ({ sheet }) => sheet.registeredBy !== sheet.issuer,
+  },
+  {
+    kind: 'adjusted, with both results',
+    rule: 'B-36',
+    verdict: 'conduct',
+    applies: ({ value }) => value.stage === 'as found',
+  },
+  {
+    kind: 'two of one nominal value, one with a star',
+    rule: 'B-01',
+    verdict: 'today',
+    applies: ({ value }) => value.weight.marking.endsWith('*'),
+  },
+  {
+    kind: 'assumed density whose U reaches beyond the class',
+    rule: 'B-04',
+    verdict: 'today',
+    applies: ({ value }) => value.weight.class === 'E1' && value.weight.density?.origin === 'assumed',
+  },
+  {
+    kind: 'cast-iron block of class M',
+    rule: 'B-09',
+    verdict: 'today',
+    applies: ({ value }) => value.weight.shape === 'block' && Boolean(value.weight.class?.startsWith('M')),
+  },
+  {
     kind: 'under a scope that had rested and was restored',
     rule: 'B-27',
     verdict: 'conduct',

@@ -20,6 +20,9 @@ import type { World } from './world.ts';
 
 const DESIGNS = { subdivision: solved(subdivision()), 'build-up': solved(buildUp()) };
 
+/** The scatter of the comparator is pooled over so many performances of a design. */
+const POOLED = 6;
+
 /** No line of a design may differ from its last value by more than this many U of the difference. */
 const QUIET = 1.3;
 
@@ -47,7 +50,7 @@ export function performDesign(world: World, job: ReadyJob): DemoValue[] {
     entries,
     group: {
       covariance: covarianceMatrix(entries.map((entry) => entry.ownEffects!)),
-      degreesOfFreedom: design.degreesOfFreedom,
+      degreesOfFreedom: POOLED * design.degreesOfFreedom,
       estimate: performance,
     },
   });

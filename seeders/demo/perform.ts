@@ -9,6 +9,7 @@ import { measure, type Result } from './result.ts';
 import { ADOPTION, CONSENSUS, onConsensusScale, REALIZED } from './scales.ts';
 import { answer, type Series } from './series.ts';
 import { withSlips } from './faults.ts';
+import { noteOmissions, OMISSIONS } from './omissions.ts';
 import { performDesign } from './perform-design.ts';
 import type { DemoValue } from './value.ts';
 import { classLimitOf, trueValue, type Quantity, type Weight } from './weight.ts';
@@ -80,11 +81,10 @@ export function perform(world: World, job: ReadyJob): DemoValue[] {
 
 function performEach(world: World, job: ReadyJob): DemoValue[] {
   const { series } = job;
-  const { entries, slips } = withSlips(
-    world,
-    job,
-    series.weights.flatMap((weight) => entriesFor(world, job, weight)),
-  );
+  const right = series.weights.flatMap((weight) => entriesFor(world, job, weight));
+  const omits = series.omits?.(job.round);
+  if (omits) right[0] = { ...right[0]!, omits };
+  const { entries, slips } = withSlips(world, job, right);
   const values = issue(world, {
     issuer: series.issuer,
     registeredBy: series.weights[0]!.owner,
@@ -95,6 +95,7 @@ function performEach(world: World, job: ReadyJob): DemoValue[] {
     entries,
   });
   for (const slip of slips) world.catalogue.push({ ...slip, ...placeOf(values[slip.line - 1]!) });
+  noteOmissions(world, entries, values);
   return values;
 }
 
@@ -185,5 +186,13 @@ function adjust(world: World, job: ReadyJob, weight: Weight, found: Result): Ent
     note: `Adjusted by ${series.issuer} after it was found near or beyond its limit.`,
   });
   const asLeft = measureIn(job, weight, 'conventional mass', 'as left');
+  if (isFoundLeftOut(world, job, weight)) return [{ ...entryOf(series, asLeft), omits: 'result as found' }];
   return [entryOf(series, asFound), entryOf(series, asLeft)];
+}
+
+/** On three certificates the result before the adjustment is left out. */
+function isFoundLeftOut(world: World, { round }: ReadyJob, weight: Weight): boolean {
+  const { kind } = OMISSIONS['result as found'];
+  const made = new Set(world.catalogue.filter((entry) => entry.kind === kind).map((e) => e.certificateNo));
+  return made.size < 3 && drawsFor(`${weight.registryNo} ${round} as found`).uniform() < 0.3;
 }

@@ -54,10 +54,15 @@ export function addSet(world: World, set: SetDescription): Weight[] {
 
 /** Makes a single weight and registers it. */
 export function addWeight(world: World, description: Parameters<typeof makeWeight>[0]): Weight {
-  const weight = makeWeight(description);
+  const weight = makeWeight({ serial: serialOf(description), ...description });
   world.weights.set(weight.registryNo, weight);
   world.steps.push({ day: weight.inServiceFrom, does: 'register weight', weight });
   return weight;
+}
+
+/** A single weight that is marked with its nominal value alone has a serial number. */
+function serialOf({ kind = 'weight', marking, registryNo }: Parameters<typeof makeWeight>[0]): string | null {
+  return kind === 'weight' && marking === undefined ? registryNo.replace(' ', '') : null;
 }
 
 /** The two 2s of a decade are seldom alike; some lie so far apart that an exchange would show. */
@@ -73,7 +78,9 @@ function startOfPair(set: SetDescription, nominal: string, isSecond: boolean): {
 export function densityOf(weightClass: WeightClass, nominal: string, subject: string): DemoDensity {
   const grams = Number(nominal);
   if (weightClass.startsWith('M')) return { value: '7950', expandedU: '140', origin: 'assumed' };
-  const makers = between(drawsFor(`${subject} melt`), 7930, 8010);
+  const melt = between(drawsFor(`${subject} melt`), 7930, 8010);
+  // Class E1 allows 7934 to 8067 kg/m3 from 100 g up (OIML R 111-1:2004, Table 5, from memory).
+  const makers = weightClass === 'E1' ? Math.max(melt, 7942) : melt;
   if (weightClass === 'E1' && grams >= 1) {
     const expandedU = grams >= 100 ? '1.5' : grams >= 10 ? '4' : '12';
     const own = makers + 3 * cutNormal(drawsFor(`${subject} ${nominal} density`), 2);

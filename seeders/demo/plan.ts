@@ -19,6 +19,8 @@ export type PlannedLine = Omit<LineInput, 'standardId' | 'scaleVersionId' | 'ref
 export interface PlannedCertificate {
   issuer: string;
   registeredBy: string;
+  /** Who at the issuer: rightly its signatory. */
+  signedBy: 'signatory' | 'metrologist';
   certificateNo: string;
   performedBegin: string;
   performedEnd: string;
@@ -30,11 +32,22 @@ export interface PlannedCertificate {
   group: { covariance: number[][]; degreesOfFreedom: number | null; estimate: string | null } | null;
 }
 
+/** A property of a weight beside its density, with its U where it is known. */
+export interface StatedProperty {
+  kind: 'susceptibility' | 'polarisation';
+  /** 1, or uT. */
+  value: string;
+  expandedU: string;
+  k: '2';
+  origin: 'measured';
+}
+
 /** One thing that somebody in the network did on a day. */
 export type Step = { day: string } & (
   | { does: 'register set'; registryNo: string; name: string; weights: Weight[] }
   | { does: 'register weight'; weight: Weight }
   | { does: 'open epoch'; registryNo: string; reason: 'adjusted' | 'damaged'; note: string }
+  | { does: 'state property'; registryNo: string; property: StatedProperty }
   | { does: 'issue'; certificate: PlannedCertificate; keys: string[] }
   | { does: 'revise'; certificate: PlannedCertificate; reason: string; effectiveOn: string; keys: string[] }
   | { does: 'withdraw'; laboratory: string; certificateNo: string; reason: string; effectiveOn: string }

@@ -27,6 +27,8 @@ export interface Admitted {
   people: number;
   /** By laboratory. */
   signatories: Map<string, User>;
+  /** Accounts, by laboratory. */
+  metrologistIds: Map<string, string>;
   standardIds: Map<string, string>;
   /** `V:<registry number>`, `S:<scale>`. */
   sourceUids: Map<string, string>;
@@ -45,6 +47,7 @@ export async function admitNetwork(context: Context): Promise<Admitted> {
     laboratoryIds: new Map(),
     people: 0,
     signatories: new Map(),
+    metrologistIds: new Map(),
     standardIds: new Map(),
     sourceUids: new Map(),
     scaleIds: new Map(),
@@ -147,6 +150,7 @@ async function addPerson(
     const laboratoryId = laboratory === null ? null : admitted.laboratoryIds.get(laboratory)!;
     const days = { state: 'granted', validFrom: from, validTo: to } as const;
     await assertMembership(context, { accountId, laboratoryId, role, ...days });
+    if (role === 'metrologist' && laboratory) admitted.metrologistIds.set(laboratory, accountId);
     if (role !== 'signatory' || !laboratoryId) continue;
     await assertAuthorisation(context, { accountId, laboratoryId, what: 'sign calibrations', ...days });
     const user = await userByAccountId(context.database, context.clock, accountId);

@@ -7,7 +7,7 @@ import {
   withdrawCalibration,
 } from '#server/modules/calibrations/index.ts';
 import { assertScopeLine } from '#server/modules/network/index.ts';
-import { openEpoch, registerSet, registerStandard } from '#server/modules/standards/index.ts';
+import { assertProperty, openEpoch, registerSet, registerStandard } from '#server/modules/standards/index.ts';
 import type { PlannedCertificate, Step } from './plan.ts';
 import { scopeLines, type Admitted } from './seed-network.ts';
 import type { Weight } from './weight.ts';
@@ -23,6 +23,11 @@ export async function runStep(context: Context, step: Step, admitted: Admitted):
       const { reason, note, day } = step;
       const standardId = known(admitted.standardIds, step.registryNo);
       await openEpoch(context, standardId, { reason, note, beginsOn: day, lastGoodOn: null });
+      return;
+    }
+    case 'state property': {
+      const standardId = known(admitted.standardIds, step.registryNo);
+      await assertProperty(context, { standardId, ...step.property, validFrom: step.day });
       return;
     }
     case 'issue':
@@ -96,14 +101,18 @@ async function issue(
   keys: readonly string[],
   admitted: Admitted,
 ): Promise<void> {
-  const signatory = admitted.signatories.get(certificate.issuer)?.accountId ?? null;
   const { calibrationId, revisionId, valueUids } = await issueCalibration(
     context,
     inputOf(certificate, admitted),
-    signatory,
+    signerOf(certificate, admitted),
   );
   admitted.calibrations.set(certificate.certificateNo, { calibrationId, revisionId });
   for (const [at, key] of keys.entries()) admitted.valueUids.set(key, valueUids[at]!);
+}
+
+function signerOf({ issuer, signedBy }: PlannedCertificate, admitted: Admitted): string | null {
+  if (signedBy === 'metrologist') return known(admitted.metrologistIds, issuer);
+  return admitted.signatories.get(issuer)?.accountId ?? null;
 }
 
 async function revise(
@@ -112,15 +121,15 @@ async function revise(
   admitted: Admitted,
 ): Promise<void> {
   const { calibrationId } = known(admitted.calibrations, certificate.certificateNo);
-  const signatory = admitted.signatories.get(certificate.issuer)?.accountId ?? null;
   const input = { ...inputOf(certificate, admitted), calibrationId, reason, effectiveOn };
-  const { revisionId, valueUids } = await reviseCalibration(context, input, signatory);
+  const signer = signerOf(certificate, admitted);
+  const { revisionId, valueUids } = await reviseCalibration(context, input, signer);
   admitted.calibrations.set(certificate.certificateNo, { calibrationId, revisionId });
   for (const [at, key] of keys.entries()) admitted.valueUids.set(key, valueUids[at]!);
 }
 
 function inputOf(certificate: PlannedCertificate, admitted: Admitted): z.input<typeof CalibrationInput> {
-  const { issuer, registeredBy, lines, ...rest } = certificate;
+  const { issuer, registeredBy, signedBy: _, lines, ...rest } = certificate;
   return {
     ...rest,
     issuerId: known(admitted.laboratoryIds, issuer),

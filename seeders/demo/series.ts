@@ -1,5 +1,6 @@
 import { between, drawsFor } from './draws.ts';
 import { daysAfter, daysBetween, monthsAfter, workday } from './days.ts';
+import type { Omission } from './omissions.ts';
 import type { DemoValue } from './value.ts';
 import { newestValue } from './value.ts';
 import type { Quantity, Weight } from './weight.ts';
@@ -45,6 +46,8 @@ export interface Series {
   keepsDays?: boolean;
   /** Works while its scope rests. */
   ignoresScope?: boolean;
+  /** What its first line leaves out on purpose, by round. */
+  omits?(round: number): Omission | null;
   /** Values that nobody leans on: they may hold slips without harm to others. */
   isLeaf?(weight: Weight): boolean;
 }

@@ -2,6 +2,7 @@ import { placeOf } from './catalogue.ts';
 import { daysAfter } from './days.ts';
 import { between, drawsFor } from './draws.ts';
 import { INSTITUTE } from './laboratories.ts';
+import { oldStock } from './old-stock.ts';
 import { BOTH, CONVENTIONAL, SUBSTITUTION, type Pools } from './pools.ts';
 import { addSet, addWeight, densityOf } from './pieces.ts';
 import { fromPool, roundsFrom, type Series } from './series.ts';
@@ -22,6 +23,7 @@ export function addSpecials(world: World, pools: Pools): Series[] {
     ...whileScopeRested(world, pools),
     ...beyondScope(world, pools),
     ...belowScope(world, pools),
+    ...oldStock(world, pools),
   ];
 }
 
@@ -98,6 +100,7 @@ function meanOfTwo(world: World, pools: Pools): Series[] {
     {
       ...IN_HOUSE,
       id: 'KW check kilograms',
+      omits: (round) => (round >= 1 && round <= 3 ? 'buoyancy' : null),
       issuer: 'KW',
       weights: checks,
       ownShare: 0.004,

@@ -10,9 +10,9 @@ export function lateUse(cast: Cast, telling: Telling): void {
   addPair(cast, telling, {
     references: [at, monthsAfter(at, 14), monthsAfter(at, 25)],
     work: [
-      { begin: monthsAfter(at, 1), uses: 0 },
+      { begin: monthsAfter(at, 1), uses: 0, omits: 'drift' },
       { begin: daysAfter(monthsAfter(at, INTERVAL), 20), uses: 0, is: LATE },
-      { begin: monthsAfter(at, 15), uses: 1 },
+      { begin: monthsAfter(at, 15), uses: 1, omits: 'degrees of freedom' },
     ],
   });
 }

@@ -51,7 +51,7 @@ export function withdrawnReference(cast: Cast, telling: Telling): void {
         uses: 0,
         is: { ...FAULT, kind: 'withdrawn reference', verdict: 'conduct' },
       },
-      { begin: monthsAfter(at, 9), uses: 1 },
+      { begin: monthsAfter(at, 9), uses: 1, omits: 'signatory' },
     ],
   });
   withdrawOn(cast, reference, monthsAfter(at, 4), monthsAfter(at, 4));
@@ -65,7 +65,7 @@ export function withdrawnAfterUse(cast: Cast, telling: Telling): void {
     references: [at, monthsAfter(at, 10)],
     work: [
       { begin: monthsAfter(at, 5), uses: 0, is: { ...FAULT, kind, verdict: 'today' } },
-      { begin: monthsAfter(at, 11), uses: 1 },
+      { begin: monthsAfter(at, 11), uses: 1, omits: 'decision rule' },
     ],
   });
   withdrawOn(cast, reference, monthsAfter(at, 7), monthsAfter(at, 2));

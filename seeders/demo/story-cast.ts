@@ -2,6 +2,7 @@ import type { WeightClass } from '#shared/contracts/common.ts';
 import { placeOf, type CatalogueEntry } from './catalogue.ts';
 import { daysAfter } from './days.ts';
 import { SECOND_LEVEL, THIRD_LEVEL } from './laboratories.ts';
+import type { Omission } from './omissions.ts';
 import { addWeight, densityOf } from './pieces.ts';
 import { CONVENTIONAL, SUBSTITUTION, type Pools } from './pools.ts';
 import { fromPool, type Series } from './series.ts';
@@ -52,6 +53,7 @@ export interface PairPlan {
     days?: number;
     uses: number | 'what stands';
     is?: Pick<CatalogueEntry, 'is' | 'kind' | 'rule' | 'verdict'>;
+    omits?: Omission;
   }[];
 }
 
@@ -93,7 +95,7 @@ export function addPair(cast: Cast, { n, at, owner, nominal }: Telling, plan: Pa
     workDays: 0,
     issueDays: 2,
   };
-  const work = plan.work.map(({ begin, days = 0, uses, is }, at) => {
+  const work = plan.work.map(({ begin, days = 0, uses, is, omits }, at) => {
     const pick = () =>
       uses === 'what stands' ? standing(cast, reference) : referenceValue(cast, reference, uses);
     return workOf(cast, {
@@ -105,6 +107,7 @@ export function addPair(cast: Cast, { n, at, owner, nominal }: Telling, plan: Pa
       days,
       pick,
       is,
+      omits,
     });
   });
   series.push(reference, ...work);
@@ -120,9 +123,10 @@ interface Work {
   days: number;
   pick(): DemoValue;
   is: PairPlan['work'][number]['is'];
+  omits: Omission | undefined;
 }
 
-function workOf({ world }: Cast, { id, owner, worked, held, begin, days, pick, is }: Work): Series {
+function workOf({ world }: Cast, { id, owner, worked, held, begin, days, pick, is, omits }: Work): Series {
   return {
     id,
     issuer: owner,
@@ -139,6 +143,7 @@ function workOf({ world }: Cast, { id, owner, worked, held, begin, days, pick, i
     begins: [begin],
     workDays: days,
     issueDays: 0,
+    omits: () => omits ?? null,
     after: (_, [value]) => {
       if (!is || !value) return;
       const used = world.sheets.get(value.certificateNo)!.sheet.entries[0]!.result.task.leaning.uses[0]!
