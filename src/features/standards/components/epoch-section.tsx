@@ -28,20 +28,20 @@ export function EpochSection({ sheet }: { sheet: StandardResponse }) {
       <Facts
         facts={sheet.epochs
           .toReversed()
-          .map((epoch) => [`Epoch ${epoch.n}`, <EpochText key={epoch.n} epoch={epoch} standardId={sheet.standard.id} />] as const)}
+          .map(
+            (epoch) =>
+              [
+                `Epoch ${epoch.n}`,
+                <EpochText key={epoch.n} epoch={epoch} standardId={sheet.standard.id} />,
+              ] as const,
+          )}
       />
       {isOpening && <EpochDialog sheet={sheet} onClose={() => setOpening(false)} />}
     </Section>
   );
 }
 
-function EpochText({
-  epoch,
-  standardId,
-}: {
-  epoch: StandardResponse['epochs'][number];
-  standardId: string;
-}) {
+function EpochText({ epoch, standardId }: { epoch: StandardResponse['epochs'][number]; standardId: string }) {
   return (
     <>
       {epoch.reason}, from <DateText value={epoch.beginsOn} />
