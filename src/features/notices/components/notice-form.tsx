@@ -44,7 +44,7 @@ export function NoticeForm({
   const form = useForm<NoticeEntry>({
     defaultValues: {
       ...emptyNotice(issuer?.id ?? '', day),
-      fromScaleId: scaleVersions.at(-1)?.id ?? '',
+      fromScaleId: scaleVersions.findLast(({ validFrom }) => validFrom <= day)?.id ?? '',
       ...(from && { terms: [from.term] }),
     },
   });

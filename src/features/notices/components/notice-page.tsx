@@ -3,7 +3,6 @@ import { Link } from 'react-router';
 import type { NoticeResponse } from '#shared/contracts/notices.ts';
 import { nominalText } from '#shared/numbers/nominal.ts';
 import { paths } from '#src/app/paths.ts';
-import { Stack, TwoColumns } from '#src/components/layout/columns.tsx';
 import { Facts } from '#src/components/layout/facts.tsx';
 import { Page, Section } from '#src/components/layout/page.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
@@ -31,31 +30,31 @@ export function NoticePage({ notice, children }: NoticePageProps) {
         </>
       }
     >
-      <TwoColumns sideWidth="narrow" side={<Side notice={notice} />}>
-        {notice.replacedBy && (
-          <Notice tone="caution" title="This notice is replaced">
-            {'What stands instead is notice '}
-            <NoticeLink notice={notice.replacedBy} />.
-          </Notice>
-        )}
-        {notice.isBackDated && (
-          <Notice title="Back-dated">
-            {'It was made known on '}
-            <DateText value={notice.madeKnownOn} />
-            {' and takes effect from '}
-            <DateText value={notice.effectiveOn} />
-            {': nobody who weighed in between could have known. Conduct is judged by what was known.'}
-          </Notice>
-        )}
-        {children}
-      </TwoColumns>
+      {notice.replacedBy && (
+        <Notice tone="caution" title="This notice is replaced">
+          {'What stands instead is notice '}
+          <NoticeLink notice={notice.replacedBy} />.
+        </Notice>
+      )}
+      {notice.isBackDated && (
+        <Notice title="Back-dated">
+          {'It was made known on '}
+          <DateText value={notice.madeKnownOn} />
+          {' and takes effect from '}
+          <DateText value={notice.effectiveOn} />
+          {': nobody who weighed in between could have known. Conduct is judged by what was known.'}
+        </Notice>
+      )}
+      <WhatItSays notice={notice} />
+      {children}
     </Page>
   );
 }
 
-function Side({ notice }: { notice: NoticeResponse }) {
+/** What changes, for which certificates, and why: beside one another where there is room. */
+function WhatItSays({ notice }: { notice: NoticeResponse }) {
   return (
-    <Stack gap="loose">
+    <div className="grid gap-x-8 gap-y-5 sm:grid-cols-2 columns:grid-cols-3">
       <Section title="What changes">
         <Facts
           facts={[
@@ -68,22 +67,26 @@ function Side({ notice }: { notice: NoticeResponse }) {
           ]}
         />
       </Section>
-      <Section title="Why">
-        <p className="whitespace-pre-line">{notice.reason}</p>
-      </Section>
       {notice.terms.map((term, at) => (
         <Section
           key={at}
-          title={notice.terms.length === 1 ? 'Which certificates, and what they get' : `Line ${at + 1}`}
+          title={
+            notice.terms.length === 1
+              ? 'Which certificates, and what they get'
+              : `Certificates of line ${at + 1}`
+          }
         >
           <Term term={term} issuer={notice.issuer.name} scale={notice.fromScale.name} />
         </Section>
       ))}
-      <p className="text-sm text-ink-2">
-        Shifts and uncertainties are those of one kilogram; a value gets its share by its mass. The
-        uncertainty is one effect, the same for every value: it counts once along a chain.
-      </p>
-    </Stack>
+      <Section title="Why">
+        <p className="max-w-[60ch] whitespace-pre-line">{notice.reason}</p>
+        <p className="max-w-[60ch] text-sm text-ink-2">
+          Shifts and uncertainties are those of one kilogram: a value gets its share by its mass. The
+          uncertainty is one effect, the same for every value, and counts once along a chain.
+        </p>
+      </Section>
+    </div>
   );
 }
 

@@ -67,7 +67,9 @@ export function WhatToDo({ row }: { row: NoticeOwnRow }) {
 
 function whatToDo(row: NoticeOwnRow, { decimalMark }: Preferences): string {
   if (row.word === 'verdict changes') {
-    return `Act: it ${row.classAfter === 'keeps' ? 'keeps' : 'does not keep'} class ${row.class} any more than before: read the class anew.`;
+    return row.classAfter === 'keeps'
+      ? `It keeps class ${row.class} with this notice, and did not before. State the class anew.`
+      : `With this notice it does not keep class ${row.class}. Use the value after, and state the class anew.`;
   }
   const { ratio, expandedUBefore, expandedUAfter } = row;
   if (ratio === null || expandedUBefore === null || expandedUAfter === null) {
