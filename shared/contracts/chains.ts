@@ -27,6 +27,8 @@ export const ChainQuery = z.object({
   day: Day.optional(),
   known: Day.optional(),
   as: ChainAs.default('certified'),
+  /** `packed`: checks come as `PackedChecks` (`packed-checks.ts`), a fifth of the reply. */
+  checks: z.enum(['packed']).optional(),
 });
 export type ChainQuery = z.infer<typeof ChainQuery>;
 

@@ -9,14 +9,15 @@ export interface Round {
 const BASELINE = '/api/health/session';
 
 /**
- * Asks for each value's chain and, before each, the baseline: what slows the machine meanwhile slows both.
+ * Asks for each value's chain as the screen does and, before each, the baseline: what slows the machine meanwhile
+ * slows both.
  * @param uids values, each asked once
  */
 export async function chainRound(ask: Ask, uids: readonly string[]): Promise<Round> {
   const round: Round = { chain: [], baseline: [], bytes: [] };
   for (const uid of uids) {
     round.baseline.push((await ask(BASELINE)).milliseconds);
-    const { milliseconds, bytes } = await ask(`/api/chains/${uid}`);
+    const { milliseconds, bytes } = await ask(`/api/chains/${uid}?checks=packed`);
     round.chain.push(milliseconds);
     round.bytes.push(bytes);
   }

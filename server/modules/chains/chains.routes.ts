@@ -7,6 +7,7 @@ import {
   ChainSearchResponse,
   CovarianceResponse,
 } from '#shared/contracts/chains.ts';
+import { packChecks, PackedChainResponse } from '#shared/contracts/packed-checks.ts';
 import { Id } from '#shared/ids.ts';
 import { route, type Route } from '#server/http/route.ts';
 import { authorize, signedIn } from '#server/policy/permission.ts';
@@ -44,10 +45,16 @@ export const chainRoutes: Route[] = [
     params: z.object({ valueUid: Id }),
     query: ChainQuery,
     subject: (context, { params }) => chainSubject(context, params.valueUid),
-    act: (context, { query }, subject) => chainOf(context, storeOf(context.database), subject.id, query),
-    response: ChainResponse,
+    act: async (context, { query }, subject) => ({
+      chain: await chainOf(context, storeOf(context.database), subject.id, query),
+      isPacked: query.checks === 'packed',
+    }),
+    response: z.union([PackedChainResponse, ChainResponse]),
     isLarge: true,
-    present: (chain, context, subject) => presentChain(chain, context.user, subject),
+    present: ({ chain, isPacked }, context, subject) => {
+      const reply = presentChain(chain, context.user, subject);
+      return isPacked ? { ...reply, checks: packChecks(reply.checks) } : reply;
+    },
   }),
   route({
     method: 'get',

@@ -2,10 +2,11 @@ import { queryOptions } from '@tanstack/react-query';
 import { ChainLifeResponse } from '#shared/contracts/chain-life.ts';
 import {
   type ChainAs,
-  ChainResponse,
+  type ChainResponse,
   ChainSearchResponse,
   CovarianceResponse,
 } from '#shared/contracts/chains.ts';
+import { PackedChainResponse, unpackChecks } from '#shared/contracts/packed-checks.ts';
 import { get } from '#src/lib/api-client.ts';
 
 /** The question behind a chain, apart from the value: the day and the knowledge day, today where left out, and how its links stand. */
@@ -19,11 +20,11 @@ export interface ChainDays {
 export function chainQuery(valueUid: string, days: ChainDays) {
   return queryOptions({
     queryKey: ['chains', 'detail', valueUid, days],
-    queryFn: ({ signal }) =>
-      get(`/api/chains/${valueUid}`, ChainResponse, {
-        query: { day: days.day, known: days.known, as: days.as },
-        signal,
-      }),
+    queryFn: async ({ signal }): Promise<ChainResponse> => {
+      const query = { day: days.day, known: days.known, as: days.as, checks: 'packed' };
+      const reply = await get(`/api/chains/${valueUid}`, PackedChainResponse, { query, signal });
+      return { ...reply, checks: unpackChecks(reply.checks) };
+    },
   });
 }
 
