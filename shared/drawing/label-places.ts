@@ -21,6 +21,8 @@ export interface PlacedLabel {
 const PLACES = [0.5, 0.36, 0.64, 0.26, 0.74] as const;
 const SIZE = 12;
 const HEIGHT = 15;
+/** Room at either side of a label, so that two are not read as one number. */
+const CLEAR = 4;
 /** From the middle of a marked ribbon to its label, beyond half its width. */
 const BESIDE = 5;
 
@@ -38,7 +40,7 @@ export function placeLabels(
   wanted: readonly (WantedLabel | null)[],
   marks: readonly Point[],
 ): (PlacedLabel | null)[] {
-  const taken: Box[] = marks.map(({ x, y }) => ({ left: x - 9, right: x + 9, top: y - HEIGHT / 2 }));
+  const taken: Box[] = marks.map(({ x, y }) => ({ left: x - 8, right: x + 4, top: y - HEIGHT / 2 }));
   const placed: (PlacedLabel | null)[] = wanted.map(() => null);
   const widestFirst = wanted
     .map((label, index) => ({ label, index }))
@@ -67,7 +69,7 @@ function candidates({ text, ribbon, isBesideMark }: WantedLabel): PlacedLabel[] 
 function boxOf({ text, x, y, anchor }: PlacedLabel): Box {
   const width = textWidth(text, 'mono', SIZE);
   const left = anchor === 'start' ? x : x - width / 2;
-  return { left, right: left + width, top: y - 4 - HEIGHT / 2 };
+  return { left: left - CLEAR, right: left + width + CLEAR, top: y - 4 - HEIGHT / 2 };
 }
 
 function overlap(a: Box, b: Box): boolean {

@@ -54,7 +54,7 @@ export function viewOf(
   box: { width: number; height: number },
 ): View & { isWhole: boolean } {
   const room = { width: box.width - 2 * MARGIN.side, height: box.height - MARGIN.top - MARGIN.foot };
-  const fitting = Math.min(zoomFor(drawing, box.width), room.height / drawing.height);
+  const fitting = Math.min(room.width / drawing.width, room.height / drawing.height, 1);
   const zoom = fitting < LEAST_ZOOM ? BRIEF_BELOW : fitting;
   const [width, height] = [drawing.width * zoom, drawing.height * zoom];
   const start = drawing.left * zoom;
