@@ -166,7 +166,9 @@ export const AuditedValue = z.object({
   uid: Id,
   registryNo: z.string(),
   certificateNo: z.string(),
-  standardId: Id,
+  /** Addresses of the weight and of the sheet; null where this person may not open them. */
+  standardId: Id.nullable(),
+  revisionId: Id.nullable(),
 });
 
 export const AuditFinding = z.object({
@@ -189,11 +191,23 @@ export const AuditFinding = z.object({
 });
 export type AuditFinding = z.infer<typeof AuditFinding>;
 
+/** How many findings of one rule there are under a filter, whatever rule that filter asks for. */
+export const AuditFindingGroup = z.object({
+  rule: z.string(),
+  outcome: Outcome,
+  severity: Severity,
+  count: z.number().int(),
+});
+export type AuditFindingGroup = z.infer<typeof AuditFindingGroup>;
+
 export const AuditFindingsResponse = z.object({
+  /** By rule, with the first page; null on further ones. */
+  groups: z.array(AuditFindingGroup).nullable(),
   findings: z.array(AuditFinding),
   nextCursor: z.string().nullable(),
   total: z.number().int(),
 });
+export type AuditFindingsResponse = z.infer<typeof AuditFindingsResponse>;
 
 /** GET /api/audits/:auditId/findings/:n/facts: what the rule saw, where its values are open in full to this person. */
 export const AuditFactsResponse = z.object({ n: z.number().int(), facts: z.json() });

@@ -15,9 +15,12 @@ export const paths = {
   calibrations: { path: '/calibrations', href: () => '/calibrations' },
   newDraft: {
     path: '/calibrations/drafts/new',
-    /** @param standardId the weight that the first line is about */
-    href: (standardId?: string) =>
-      standardId ? `/calibrations/drafts/new?standard=${standardId}` : '/calibrations/drafts/new',
+    /**
+     * @param standardId the weight that the first line is about
+     * @param first for which laboratory, and the registry number of what that line leans on
+     */
+    href: (standardId?: string, first: { laboratory?: string; reference?: string } = {}) =>
+      `/calibrations/drafts/new${queryText({ ...(standardId && { standard: standardId }), ...first })}`,
   },
   calibrationDraft: {
     path: '/calibrations/drafts/:draftId',
@@ -32,6 +35,9 @@ export const paths = {
     path: '/chains/:valueUid',
     /** @param days in force on, as known on; today where left out */
     href: (valueUid: string, days: Days = {}) => `/chains/${valueUid}${daysText(days)}`,
+    /** @param at what is selected there: a value's uid, or child and parent joined by a dot */
+    selectedHref: (valueUid: string, days: { day: string; known: string }, at: string) =>
+      `/chains/${valueUid}${queryText({ ...days, at })}`,
   },
   downstream: {
     path: '/chains/:valueUid/downstream',
@@ -59,6 +65,12 @@ export const paths = {
     /** @param between the last day on which the weight was known to be good, and the first on which it was bad */
     href: (standardId: string, between: { lastGood?: string; firstBad?: string } = {}) =>
       `/standards/${standardId}/exposure${queryText(between)}`,
+  },
+  audits: { path: '/audits', href: () => '/audits' },
+  audit: {
+    path: '/audits/:auditId',
+    /** @param filter of the findings, by name */
+    href: (auditId: string, filter: Record<string, string> = {}) => `/audits/${auditId}${queryText(filter)}`,
   },
   network: { path: '/network', href: () => '/network' },
   massScale: { path: '/network/mass-scale', href: () => '/network/mass-scale' },
@@ -101,5 +113,6 @@ export const SECTIONS = [
   { label: 'Standards', href: paths.standards.href() },
   { label: 'Calibrations', href: paths.calibrations.href() },
   { label: 'Chains', href: paths.chains.href() },
+  { label: 'Audits', href: paths.audits.href() },
   { label: 'Network', href: paths.network.href() },
 ];

@@ -7,29 +7,52 @@ import {
   useSearchParams,
   type LoaderFunctionArgs,
 } from 'react-router';
+import type { ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import { paths, SAME_SCREEN } from '#src/app/paths.ts';
 import { queryClient } from '#src/app/query-client.ts';
-import { draftQuery, weightsOfSet } from '#src/features/calibrations/api.ts';
+import { draftQuery, newestReference, weightsOfSet } from '#src/features/calibrations/api.ts';
+import { ApiProblem } from '#src/lib/api-problem.ts';
 import { DraftPlace } from '#src/features/calibrations/draft/draft-place.tsx';
 
 const NEW = 'new';
 
-/** Primes the draft; for one that its first change will create, the weights of the set it is about. */
-export async function loader({ params, request }: LoaderFunctionArgs): Promise<StandardRow[]> {
+/** What a new draft begins with. */
+interface Beginning {
+  weights: StandardRow[];
+  /** What the first line leans on. */
+  reference: ReferenceChoice | null;
+}
+
+const NOTHING: Beginning = { weights: [], reference: null };
+
+/** Primes the draft; for one that its first change will create, the weights and the reference it is about. */
+export async function loader({ params, request }: LoaderFunctionArgs): Promise<Beginning> {
   const { draftId = NEW } = params;
-  if (draftId === NEW) {
-    const set = new URL(request.url).searchParams.get('set');
-    return set ? weightsOfSet(set, request.signal) : [];
-  }
+  if (draftId === NEW) return beginning(new URL(request.url).searchParams, request.signal);
   await queryClient.query({ ...draftQuery(draftId), staleTime: 1000 });
-  return [];
+  return NOTHING;
+}
+
+async function beginning(parameters: URLSearchParams, signal: AbortSignal): Promise<Beginning> {
+  const [set, laboratory, reference] = ['set', 'laboratory', 'reference'].map((name) => parameters.get(name));
+  const [weights, found] = await Promise.all([
+    set ? weightsOfSet(set, signal) : [],
+    laboratory && reference ? newestReference(laboratory, reference, signal).catch(notTheirs) : null,
+  ]);
+  return { weights, reference: found };
+}
+
+/** Who may not name references for the laboratory is told so by the sheet itself. */
+function notTheirs(error: unknown): null {
+  if (error instanceof ApiProblem && error.status === 403) return null;
+  throw error;
 }
 
 /** A draft, or the sheet on which one begins. */
 export function Component() {
   const { draftId = NEW } = useParams();
-  const weights = useLoaderData<typeof loader>();
+  const { weights, reference } = useLoaderData<typeof loader>();
   const [parameters] = useSearchParams();
   const navigate = useNavigate();
   const { data } = useQuery({ ...draftQuery(draftId), enabled: draftId !== NEW });
@@ -42,6 +65,7 @@ export function Component() {
       laboratoryId={parameters.get('laboratory') ?? undefined}
       firstStandards={weights}
       firstStandardId={parameters.get('standard') ?? undefined}
+      firstReference={reference}
       onCreated={(draft) => {
         setCreatedHere(draft.id);
         void navigate(paths.calibrationDraft.href(draft.id), {

@@ -1,5 +1,5 @@
 import type { Sequelize } from 'sequelize';
-import type { AuditFindingsQuery } from '#shared/contracts/audits.ts';
+import type { AuditFindingGroup, AuditFindingsQuery } from '#shared/contracts/audits.ts';
 import { readRow, readRows } from '#server/db/read.ts';
 import { cursorAfter, placeOf } from '#server/http/cursor.ts';
 import type { FindingRow } from './audits.model.ts';
@@ -10,6 +10,7 @@ export interface NamedValue {
   registryNo: string;
   certificateNo: string;
   standardId: string;
+  revisionId: string;
   holderId: string;
   issuerId: string;
 }
@@ -39,10 +40,16 @@ export async function findingPage(
   filter: FindingFilter,
   whose: Whose | null,
   cursor: string | undefined,
-): Promise<{ findings: NamedFinding[]; nextCursor: string | null; total: number }> {
+): Promise<{
+  groups: AuditFindingGroup[] | null;
+  findings: NamedFinding[];
+  nextCursor: string | null;
+  total: number;
+}> {
   const { where, replacements } = conditions(runId, filter, whose);
   const place = placeOf(cursor, 'n');
-  const [rows, total] = await Promise.all([
+  const [groups, rows, total] = await Promise.all([
+    place ? null : findingGroups(database, runId, { ...filter, rule: undefined }, whose),
     findingRows(database, where, { ...replacements, after: place ? Number(place.value) : -1 }, PAGE + 1),
     readRow<{ count: number }>(
       database,
@@ -53,10 +60,26 @@ export async function findingPage(
   const shown = rows.slice(0, PAGE);
   const last = rows.length > PAGE ? shown.at(-1)! : null;
   return {
+    groups,
     findings: await named(database, shown),
     nextCursor: last && cursorAfter('n', { value: String(last.n), id: '' }),
     total: total!.count,
   };
+}
+
+function findingGroups(
+  database: Sequelize,
+  runId: string,
+  filter: FindingFilter,
+  whose: Whose | null,
+): Promise<AuditFindingGroup[]> {
+  const { where, replacements } = conditions(runId, filter, whose);
+  return readRows<AuditFindingGroup>(
+    database,
+    `SELECT f.rule, f.outcome, f.severity, COUNT(*) AS count FROM audit_finding f WHERE ${where}
+     GROUP BY f.rule, f.outcome, f.severity ORDER BY f.rule, f.outcome, f.severity`,
+    replacements,
+  );
 }
 
 /** Every finding that is wanted, with its names, a page after another. */
@@ -137,7 +160,7 @@ async function named(database: Sequelize, rows: readonly FindingRow[]): Promise<
     readRows<NamedValue>(
       database,
       `SELECT v.uid, s.registry_no AS registryNo, c.certificate_no AS certificateNo, v.standard_id AS standardId,
-         v.holder_id AS holderId, v.issuer_id AS issuerId
+         v.revision_id AS revisionId, v.holder_id AS holderId, v.issuer_id AS issuerId
        FROM assigned_value v
        JOIN standard s ON s.id = v.standard_id
        JOIN revision r ON r.id = v.revision_id

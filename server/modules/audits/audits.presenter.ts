@@ -54,8 +54,8 @@ export function presentFinding(found: NamedFinding, user: User): z.input<typeof 
     outcome: row.outcome,
     severity: row.severity,
     subject: row.subject,
-    value: named(value),
-    reference: reference && named(reference),
+    value: named(value, user),
+    reference: reference && named(reference, user),
     focusUid: row.focus_uid,
     laboratory,
     sentence: isTold ? row.sentence : null,
@@ -86,6 +86,8 @@ function isFull(user: User, value: NamedValue): boolean {
   return valueView(user, value, 'upstream') === 'full';
 }
 
-function named({ uid, registryNo, certificateNo, standardId }: NamedValue) {
-  return { uid, registryNo, certificateNo, standardId };
+function named(value: NamedValue, user: User) {
+  const { uid, registryNo, certificateNo } = value;
+  const { standardId, revisionId } = isFull(user, value) ? value : { standardId: null, revisionId: null };
+  return { uid, registryNo, certificateNo, standardId, revisionId };
 }

@@ -89,6 +89,19 @@ export async function findReferences(
   return (await get('/api/references', ReferenceListResponse, { query: asked, signal })).references;
 }
 
+/** The newest value in force of a weight by its whole number, where this laboratory may name one; else null. */
+export async function newestReference(
+  laboratory: string,
+  registryNo: string,
+  signal?: AbortSignal,
+): Promise<ReferenceChoice | null> {
+  const values = await findReferences({ laboratory, q: registryNo }, signal);
+  const standing = values.filter(
+    (one) => one.registryNo === registryNo && one.state === 'in force' && one.isNewest,
+  );
+  return standing.find((one) => one.quantity === 'conventional mass') ?? standing[0] ?? null;
+}
+
 /** Begins a draft. @throws ApiProblem */
 export function createDraft(laboratoryId: string, content: DraftContent): Promise<DraftResponse> {
   return post('/api/drafts', { laboratoryId, content }, DraftResponse);

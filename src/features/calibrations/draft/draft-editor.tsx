@@ -1,7 +1,7 @@
 import { useMemo } from 'react';
 import { FormProvider } from 'react-hook-form';
 import type { IssuedResponse } from '#shared/contracts/calibrations.ts';
-import type { DraftResponse } from '#shared/contracts/drafts.ts';
+import type { DraftResponse, ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { LaboratoryName } from '#shared/contracts/common.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import type { z } from 'zod';
@@ -22,6 +22,8 @@ interface DraftEditorProps {
   firstStandardId?: string;
   /** The weights of a set that a new draft begins with, a line each. */
   firstStandards?: readonly StandardRow[];
+  /** What the first weight leans on. */
+  firstReference?: ReferenceChoice | null;
   onCreated: (draft: DraftResponse) => void;
   onIssued: (issued: IssuedResponse) => void;
   onDiscarded: () => void;
@@ -34,14 +36,15 @@ export function DraftEditor(props: DraftEditorProps) {
     laboratory,
     firstStandardId,
     firstStandards = NONE,
+    firstReference = null,
     onCreated,
     onIssued,
     onDiscarded,
   } = props;
   const firstIds = firstStandardId ? [firstStandardId] : firstStandards.map(({ id }) => id);
-  const form = useZodForm(DraftForm, { defaultValues: valuesOf(draft, firstIds) });
+  const form = useZodForm(DraftForm, { defaultValues: valuesOf(draft, firstIds, firstReference) });
   const saving = useAutosave(form, draft, laboratory.id, onCreated);
-  const known = useKnownValues(draft, firstStandards);
+  const known = useKnownValues(draft, firstStandards, firstReference);
   // What happens afterwards is the same for the whole life of the editor.
   const ends = useMemo(() => ({ onIssued, onDiscarded }), [onIssued, onDiscarded]);
   return (
@@ -53,7 +56,15 @@ export function DraftEditor(props: DraftEditorProps) {
   );
 }
 
-function valuesOf(draft: DraftResponse | null, firstIds: readonly string[]): DraftValues {
+function valuesOf(
+  draft: DraftResponse | null,
+  firstIds: readonly string[],
+  reference: ReferenceChoice | null,
+): DraftValues {
   if (draft) return { ...draft.content, version: draft.version };
-  return { ...emptyDraft(), lines: firstIds.map((id) => newLine(id)) };
+  const lines = firstIds.map((id) => newLine(id));
+  if (!reference) return { ...emptyDraft(), lines };
+  const { quantity, valueUid } = reference;
+  const leaning = { quantity, references: [{ valueUid, sensitivity: '', usedAs: 'certificate' as const }] };
+  return { ...emptyDraft(), lines: lines.map((line) => ({ ...line, ...leaning })) };
 }

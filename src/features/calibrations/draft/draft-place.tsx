@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { IssuedResponse } from '#shared/contracts/calibrations.ts';
-import type { DraftResponse } from '#shared/contracts/drafts.ts';
+import type { DraftResponse, ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import { paths } from '#src/app/paths.ts';
 import { Button, LinkButton } from '#src/components/ui/button.tsx';
@@ -21,6 +21,8 @@ interface DraftPlaceProps {
   firstStandardId?: string;
   /** The weights of a set that a new draft begins with, a line each. */
   firstStandards?: readonly StandardRow[];
+  /** What the first weight leans on. */
+  firstReference?: ReferenceChoice | null;
   onCreated: (draft: DraftResponse) => void;
   onIssued: (issued: IssuedResponse) => void;
   onDiscarded: () => void;

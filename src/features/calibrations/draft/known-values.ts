@@ -6,10 +6,17 @@ import { knownFromRow, type Known, type KnownStandard } from './known.ts';
 /**
  * Gathers the weights and references a draft names: the server's word first, then what was chosen since.
  * @param first weights a new draft begins with
+ * @param firstReference what it leans on
  */
-export function useKnownValues(draft: DraftResponse | null, first: readonly StandardRow[] = []): Known {
+export function useKnownValues(
+  draft: DraftResponse | null,
+  first: readonly StandardRow[] = [],
+  firstReference: ReferenceChoice | null = null,
+): Known {
   const [standards, setStandards] = useState<readonly KnownStandard[]>(() => first.map(knownFromRow));
-  const [references, setReferences] = useState<readonly ReferenceChoice[]>([]);
+  const [references, setReferences] = useState<readonly ReferenceChoice[]>(() =>
+    firstReference ? [firstReference] : [],
+  );
   const learnStandards = useCallback(
     (rows: readonly StandardRow[]) => setStandards((before) => [...before, ...rows.map(knownFromRow)]),
     [],

@@ -1,0 +1,28 @@
+import type { AuditFigures, AuditSummary } from '#shared/contracts/audits.ts';
+import type { Severity } from '#shared/rules/rule.ts';
+
+/** Severities from the gravest. */
+export const SEVERITIES: readonly Severity[] = ['block', 'critical', 'major', 'minor', 'information'];
+
+/** What an audit is of. */
+export function subjectText({ subject }: Pick<AuditSummary, 'subject'>): string {
+  if (subject.scope === 'network') return 'The whole network';
+  if (subject.scope === 'laboratory') return subject.laboratory.name;
+  return `Chain of ${subject.registryNo}`;
+}
+
+/** How many findings fail in all. */
+export function failingCount(figures: AuditFigures): number {
+  return SEVERITIES.reduce((sum, severity) => sum + figures[severity], 0);
+}
+
+/** Failing findings in words, the gravest first: "2 critical, 1 minor". */
+export function failingText(figures: AuditFigures): string {
+  const parts = SEVERITIES.filter((severity) => figures[severity] > 0);
+  return parts.map((severity) => `${figures[severity]} ${severityWord(severity)}`).join(', ');
+}
+
+/** A severity as it stands in a sentence. */
+export function severityWord(severity: Severity): string {
+  return severity === 'block' ? 'blocking' : severity === 'information' ? 'to be noted' : severity;
+}
