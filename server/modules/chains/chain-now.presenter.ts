@@ -2,21 +2,25 @@ import type { z } from 'zod';
 import type { AsNowKnown, ChainResponse, ChainValue } from '#shared/contracts/chains.ts';
 import { Decimal, decimalText } from '#shared/decimal.ts';
 import type { Chain } from './chain.service.ts';
+import type { ChainNow } from './chain-now.ts';
 import { keepsClass } from './keeps-class.ts';
 import type { Move } from './moves.ts';
+import type { NoticeEffect } from './noticed-closure.ts';
 import type { StoredValue } from './stored.ts';
 
 /** Places of a gram that the register keeps: shifts come of sensitivities that are doubles. */
 const PLACES = 12;
 
-/** The focus as certified moved to what is known now; null where neither it nor anything above it has ended. */
+/** The focus as certified moved to what is known now; null where nothing of it or above it has changed since. */
 export function presentAsNowKnown(chain: Chain, k: number): AsNowKnown | null {
   const { now, focus } = chain;
   if (!now) return null;
-  const u = now.numbers.propagation.standardUncertainty;
+  const u = (now.numbers ?? chain.numbers).propagation.standardUncertainty;
+  const effects = effectsAt(focus, now);
+  const move = withEffects(now.focus, effects);
   return {
-    ...moved(focus, now.focus),
-    keepsClass: keepsClass(chain),
+    ...moved(focus, move),
+    keepsClass: keepsClass(chain, move),
     expandedU: u === null || now.focus.shift === null ? null : u * k,
     replaced: now.replaced.map(({ value, by, shift }) => ({
       uid: value.uid,
@@ -25,17 +29,41 @@ export function presentAsNowKnown(chain: Chain, k: number): AsNowKnown | null {
       certificateNo: value.certificateNo,
       shift: shift && rounded(shift),
     })),
-    notices: [],
+    notices: effects.map(({ notice, shift, u: added }) => ({
+      id: notice.id,
+      number: notice.number,
+      title: notice.title,
+      effectiveOn: notice.effectiveOn,
+      shift: rounded(new Decimal(shift)),
+      u: added,
+    })),
   };
 }
 
 /** A value of the chain as now known; null where its certificate and all above it are what they were. */
 export function nowOf(value: StoredValue, { now, as, focus }: Chain): z.input<typeof ChainValue>['now'] {
   if (!now) return null;
-  if (value.id === focus.id) return now.focus.isTouched ? moved(value, now.focus) : null;
-  // In the chain as now known successors stand for themselves.
-  const move = as === 'certified' ? now.moves.whole(value) : now.moves.of(value);
+  const move = withEffects(moveOf(value, now, as, focus), effectsAt(value, now));
   return move.isTouched ? moved(value, move) : null;
+}
+
+function moveOf(value: StoredValue, now: ChainNow, as: Chain['as'], focus: StoredValue): Move {
+  if (value.id === focus.id) return now.focus;
+  // In the chain as now known successors stand for themselves.
+  return as === 'certified' ? now.moves.whole(value) : now.moves.of(value);
+}
+
+/** What notices bring to a value, or to what took its place. */
+function effectsAt(value: StoredValue, { notices, fates, closure }: ChainNow): NoticeEffect[] {
+  const fate = fates.get(value.id);
+  const uid = fate?.kind === 'replaced' ? closure.values.find(({ id }) => id === fate.byId)?.uid : value.uid;
+  return (uid && notices.get(uid)) || [];
+}
+
+function withEffects(move: Move, effects: readonly NoticeEffect[]): Move {
+  if (move.shift === null || effects.length === 0) return move;
+  const shift = effects.reduce((sum, effect) => sum.plus(effect.shift), move.shift);
+  return { shift, because: null, isTouched: true };
 }
 
 /** Values of a chain as now known that were withdrawn with nothing in their place. */

@@ -141,7 +141,7 @@ describe('a chain as now known against matrices, on random chains', () => {
     const now = read(values, fates);
     const scale = Math.max(1e-3, Math.abs(expected.shift));
     expect(Math.abs(now.focus.shift!.toNumber() - expected.shift)).toBeLessThan(1e-12 * scale);
-    const u = now.numbers.propagation.standardUncertainty!;
+    const u = now.numbers!.propagation.standardUncertainty!;
     expect(u ** 2 / expected.variance).toBeCloseTo(1, 11);
     const parts = now.replaced.reduce((sum, { shift }) => sum + shift!.toNumber(), 0);
     expect(Math.abs(parts - expected.shift)).toBeLessThan(1e-12 * scale);
@@ -206,7 +206,7 @@ describe('a chain as now known', () => {
     const now = read(values, [[1, { kind: 'lost', because }]]);
     expect(now.focus).toMatchObject({ shift: null, because });
     expect(now.moves.of(beside)).toMatchObject({ because: null, isTouched: false });
-    expect(now.numbers.propagation).toMatchObject({ standardUncertainty: null, missing: ['v1'] });
+    expect(now.numbers!.propagation).toMatchObject({ standardUncertainty: null, missing: ['v1'] });
     expect(now.replaced).toMatchObject([{ by: null, shift: null }]);
   });
 

@@ -1,8 +1,10 @@
 import { Decimal } from '#shared/decimal.ts';
+import type { Notice } from '#shared/notices/notice.ts';
 import type { Question } from '#shared/rules/facts.ts';
 import { chainNumbers, type ChainNumbers } from './chain-numbers.ts';
 import type { ChainStore, Closure } from './chain-store.ts';
 import { fateOf, type Fate } from './fate.ts';
+import { noticeShifts, withNotices, type NoticeEffect } from './noticed-closure.ts';
 import { CIRCLE, difference, Moves, type Move } from './moves.ts';
 import { redirectedClosure, standsFor, type Fates } from './redirected.ts';
 import type { StoredLink, StoredValue } from './stored.ts';
@@ -20,10 +22,12 @@ export interface ReplacedValue {
 export interface ChainNow {
   /** The chain with successors in their predecessors' places; as used where reading it so closes a circle. */
   closure: Closure;
-  /** Of the closure so read, local parts frozen. */
-  numbers: ChainNumbers;
+  /** Of the closure so read, local parts frozen, notices included; null where nothing was replaced: the chain's own. */
+  numbers: ChainNumbers | null;
   fates: Fates;
   moves: Moves;
+  /** What the notices in force bring to each value of the closure, by uid, beside its move. */
+  notices: ReadonlyMap<string, NoticeEffect[]>;
   /** The focus as its references stand now. */
   focus: Move;
   /** Variance that its chain has gained since it was certified, g2, signed; null where either is not computable. */
@@ -34,16 +38,20 @@ export interface ChainNow {
 /**
  * Reads a chain as now known: in force on the day, as known on the knowledge day.
  * @param closure the chain as certified
- * @returns null where the focus stands and no certificate above it was superseded or withdrawn
+ * @param inForce notices, in the order in which they take effect
+ * @returns null where the focus stands, no certificate above it was superseded or withdrawn, and no notice reaches it
  */
 export async function chainNow(
   store: ChainStore,
   closure: Closure,
   focus: StoredValue,
   question: Question,
+  inForce: readonly Notice[],
 ): Promise<ChainNow | null> {
   const found = await withSuccessors(store, closure, focus, question);
-  return found.fates.size === 0 && !found.ownEnd ? null : readAsNowKnown(closure, focus, found);
+  const now = readAsNowKnown(closure, focus, found, inForce);
+  const isReached = now.notices.has(focus.uid);
+  return found.fates.size === 0 && !found.ownEnd && !isReached ? null : now;
 }
 
 /**
@@ -51,20 +59,30 @@ export async function chainNow(
  * @param closure the chain as certified
  * @param found what became of its values, and the chain with all successors, links as used
  */
-export function readAsNowKnown(closure: Closure, focus: StoredValue, found: Successors): ChainNow {
+export function readAsNowKnown(
+  closure: Closure,
+  focus: StoredValue,
+  found: Successors,
+  inForce: readonly Notice[] = [],
+): ChainNow {
   const moves = new Moves(found.closure.values, found.fates);
   const redirected = redirectedClosure(found.closure, focus.id, found.fates);
   const because = found.ownEnd ?? (redirected ? null : CIRCLE);
   const now = redirected ?? closure;
-  const numbers = chainNumbers(now, focus.uid);
+  const notices = noticeShifts(now, inForce);
+  const isReplaced = found.fates.size > 0;
+  const numbers = isReplaced ? chainNumbers(now, focus.uid, withNotices(now, inForce)) : null;
   return {
     closure: now,
     numbers,
     fates: found.fates,
     moves,
     focus: because ? { shift: null, because, isTouched: true } : moves.of(focus),
-    addedVariance: gained(chainNumbers(closure, focus.uid), numbers),
-    replaced: replacedValues(found.closure, now, numbers, found.fates),
+    notices,
+    addedVariance: numbers
+      ? gained(chainNumbers(closure, focus.uid), numbers)
+      : (notices.get(focus.uid) ?? []).reduce((sum, { u }) => sum + u ** 2, 0),
+    replaced: numbers ? replacedValues(found.closure, now, numbers, found.fates) : [],
   };
 }
 

@@ -87,7 +87,8 @@ function stepsOf({ steps }: Remembered, question: Question): StepMemory {
 async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as: ChainAs): Promise<Chain> {
   const { question } = steps;
   const certified = await store.closure([focusId]);
-  const now = await chainNow(store, certified, focusOf(certified, focusId), question);
+  const inForce = noticesInForce(store.notices, question.day, question.known);
+  const now = await chainNow(store, certified, focusOf(certified, focusId), question, inForce);
   const isNow = as === 'now known' && now !== null;
   const closure = isNow ? now.closure : certified;
   const focus = focusOf(closure, focusId);
@@ -98,13 +99,12 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as
     store.laboratories(asUsed.values.flatMap((value) => [value.issuerId, value.holderId])),
   ]);
   const widened = await store.closure([...idsOf(asUsed), ...earlierThan(asUsed, steps, standards)]);
-  const inForce = noticesInForce(store.notices, question.day, question.known);
   const shown = withNotices(closure, inForce);
   const widenedNow = withNotices(widened, inForce);
   const numbersAsUsed = chainNumbers(widened, focus.uid, widenedNow);
-  const numbersNow = isNow && shown !== closure ? chainNumbers(closure, focus.uid, shown) : now?.numbers;
-  const numbers = isNow ? (numbersNow ?? now.numbers) : numbersAsUsed;
-  const contributions = contributionsOf(isNow ? shown : widenedNow, numbers.propagation);
+  const numbersNow = isNow ? now.numbers : null;
+  const numbers = numbersNow ?? numbersAsUsed;
+  const contributions = contributionsOf(numbersNow ? shown : widenedNow, numbers.propagation);
   const parts: FactParts = {
     question,
     standards,

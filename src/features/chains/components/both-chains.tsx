@@ -61,7 +61,7 @@ export function BothChains({ chain }: { chain: ChainResponse }) {
         </tbody>
       </Table>
       <p>{whatToDo(now, ofU, decimalMark)}</p>
-      {now.replaced.length > 0 && (
+      {now.replaced.length + now.notices.length > 0 && (
         <ul className="text-sm text-ink-2">
           {now.replaced.map((row) => (
             <li key={row.uid}>
