@@ -86,7 +86,7 @@ export const PublishNoticeBody = z
     replacesId: Id.nullable().default(null),
     terms: z.array(NoticeTerm).min(1, 'Say which values the notice covers').max(10),
     /** The signatory's own, again. */
-    password: z.string().max(200),
+    password: z.string().min(1, 'Type your password again: it is your signature').max(200),
   })
   .refine(({ toScaleId, newScale }) => !toScaleId || !newScale, {
     path: ['newScale'],

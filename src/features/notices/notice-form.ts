@@ -77,13 +77,22 @@ export function emptyNotice(issuerId: string, day: string): NoticeEntry {
   };
 }
 
+/** What a notice may go on from. */
+export interface ProposedNotice {
+  issuerId: string;
+  fromScaleId: string | undefined;
+  term: TermEntry;
+}
+
 /** What a dry run of a notice supposed, as a form to go on from; null where the address holds none. */
-export function noticeOfChange(text: string | null): { issuerId: string; term: TermEntry } | null {
+export function noticeOfChange(text: string | null): ProposedNotice | null {
   const parsed = WhatIfChange.safeParse(jsonOf(text));
   if (!parsed.success || parsed.data.kind !== 'notice') return null;
-  const { issuerId, quantity, performedFrom, performedTo, nominalFrom, nominalTo, ...brings } = parsed.data;
+  const { issuerId, fromScaleId, quantity, performedFrom, performedTo, nominalFrom, nominalTo, ...brings } =
+    parsed.data;
   return {
     issuerId,
+    fromScaleId,
     term: {
       quantity: quantity ?? '',
       performedFrom: performedFrom ?? '',

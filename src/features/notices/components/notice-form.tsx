@@ -13,7 +13,7 @@ import {
   emptyNotice,
   entryField,
   type NoticeEntry,
-  type TermEntry,
+  type ProposedNotice,
 } from '../notice-form.ts';
 import { NoticeFields } from './notice-fields.tsx';
 import { NoticePreview } from './notice-preview.tsx';
@@ -25,7 +25,7 @@ interface NoticeFormProps {
   scaleVersions: readonly ScaleVersion[];
   notices: NoticeListResponse['notices'];
   /** What a dry run supposed, to go on from. */
-  from: { issuerId: string; term: TermEntry } | null;
+  from: ProposedNotice | null;
   /** Today, the first proposal for its days. */
   day: string;
   onPublished: (noticeId: string) => void;
@@ -44,7 +44,7 @@ export function NoticeForm({
   const form = useForm<NoticeEntry>({
     defaultValues: {
       ...emptyNotice(issuer?.id ?? '', day),
-      fromScaleId: scaleVersions.findLast(({ validFrom }) => validFrom <= day)?.id ?? '',
+      fromScaleId: from?.fromScaleId ?? scaleVersions.findLast(({ validFrom }) => validFrom <= day)?.id ?? '',
       ...(from && { terms: [from.term] }),
     },
   });
@@ -87,7 +87,10 @@ export function NoticeForm({
           side={
             <Stack gap="loose">
               <NoticePreview previewed={previewed} onPreview={preview} />
-              <NoticeSign isBusy={publish.isPending} error={publish.error} />
+              <NoticeSign
+                isBusy={publish.isPending}
+                error={isBesideFields(publish.error) ? null : publish.error}
+              />
             </Stack>
           }
         >
@@ -99,6 +102,11 @@ export function NoticeForm({
       </form>
     </FormProvider>
   );
+}
+
+/** Said at its fields: nothing is left to say in general. */
+function isBesideFields(error: Error | null): boolean {
+  return error instanceof ApiProblem && Object.keys(error.fields).length > 0;
 }
 
 /** The server's field problems under the names of the form's fields. */

@@ -75,10 +75,14 @@ function whatToDo(row: NoticeOwnRow, { decimalMark }: Preferences): string {
   if (ratio === null || expandedUBefore === null || expandedUAfter === null) {
     return 'Judge it: its certificate states no U to weigh it by.';
   }
+  const all = Math.abs(ratio) * Number(row.expandedU);
+  const isCumulative = Math.abs(all - Math.abs(row.shift)) > 1e-3 * all;
   const growth = expandedUAfter / Number(row.expandedU) - 1;
   const reasons = [
-    `the shift is ${percent(Math.abs(ratio), decimalMark)} of U`,
-    `U grows by ${percent(growth, decimalMark)}`,
+    ratio === 0
+      ? 'the value does not move'
+      : `the shift${isCumulative ? ', with earlier notices,' : ''} is ${percent(Math.abs(ratio), decimalMark)} of U`,
+    ...(growth > 0 ? [`U grows by ${percent(growth, decimalMark)}`] : []),
   ];
   if (row.word === 'none') return `No action needed, because ${reasons.join(' and ')}.`;
   return `Material: ${reasons.join(' and ')}. Use the value after.`;

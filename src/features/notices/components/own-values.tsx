@@ -77,7 +77,7 @@ function OwnTable({ rows }: { rows: readonly NoticeOwnRow[] }) {
           <Head align="right">Shift</Head>
           <Head align="right">After</Head>
           <Head align="right">U after</Head>
-          <Head align="right">Shift/U</Head>
+          <Head align="right">Shifts/U</Head>
           <Head>What to do</Head>
         </tr>
       </thead>
@@ -86,7 +86,7 @@ function OwnTable({ rows }: { rows: readonly NoticeOwnRow[] }) {
           <Row key={row.uid}>
             <Cell isHeading>
               <RowLink to={paths.chain.href(row.uid)}>
-                <span className="font-mono text-sm">{row.registryNo}</span>
+                <span className="font-mono text-sm whitespace-nowrap">{row.registryNo}</span>
               </RowLink>
               <span className="block whitespace-nowrap text-sm text-ink-2">
                 {nominalText(row.nominal, decimalMark)}

@@ -47,12 +47,14 @@ function Term({ at, onRemove }: { at: number; onRemove: (() => void) | undefined
         <DateField
           label="Calibrated from"
           isOptional
+          className="w-44"
           {...register(`terms.${at}.performedFrom`)}
           error={error('performedFrom')}
         />
         <DateField
           label="Calibrated up to"
           isOptional
+          className="w-44"
           {...register(`terms.${at}.performedTo`)}
           error={error('performedTo')}
         />
