@@ -15,6 +15,10 @@ it('holds within the rounding of both', () => {
   expect(judge('0.00116').sentence).toBe('agree');
 });
 
+it('fails where a value leaves no mass at all', () => {
+  expect(judge('-1000')).toMatchObject({ outcome: 'fails', sentence: 'no mass' });
+});
+
 it('reads either kind as the first', () => {
   const conventional = historyFacts({ deviation: '0.00021' });
   const found = judgedBy(

@@ -21,6 +21,8 @@ export const massAndConventional: ValueRule = {
       'Mass and conventional mass on certificate {certificate} differ by {gap} from their identity, which the U of the density of {registryNo} covers.',
     disagree:
       'Mass and conventional mass on certificate {certificate} differ by {gap} from their identity at {density} kg/m³; check the density of {registryNo} or the two values.',
+    'no mass':
+      'By certificate {certificate} {registryNo} would have no mass above zero; check the deviation and its unit.',
     one: 'Certificate {certificate} states {kind} only.',
     'no density':
       'Certificate {certificate} states both kinds; the density of {registryNo} is not on record to compare them.',
@@ -34,6 +36,8 @@ export const massAndConventional: ValueRule = {
     };
     if (value.otherKind === null) return doesNotApply('one', parameters);
     if (value.density === null) return cannotBeJudged('no density', parameters);
+    const isMass = ({ deviation }: ResultFacts) => new Decimal(value.nominal).plus(deviation).gt(0);
+    if (!isMass(value) || !isMass(value.otherKind)) return fails('no mass', parameters);
     const gap = gapOf(value, value.otherKind, value.density);
     const texts = { ...parameters, gap: amountText(gap, value) };
     const rounding = halfDigit(value).plus(halfDigit(value.otherKind));

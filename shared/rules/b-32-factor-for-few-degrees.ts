@@ -5,6 +5,7 @@ import { cannotBeJudged, doesNotApply, fails, holds, type ValueRule } from './ru
 
 /** From here on k = 2 gives about 95 % well enough (JCGM 100:2008, G.6.6, from memory). */
 const ENOUGH = 10;
+const MANY = 1000;
 /** A k that is smaller by this part of it is the right one, rounded or at a probability of 95 %. */
 const ROUNDING = 0.03;
 /** Where the certificate states none: that of k = 2 for a normal distribution. */
@@ -38,7 +39,7 @@ export const factorForFewDegrees: ValueRule = {
     const degrees = degreesOf(value, u);
     if (degrees === null) return cannotBeJudged('not on record', known, 'information');
     const coverage = Number(value.coverage ?? USUAL_COVERAGE);
-    const parameters = { ...known, degrees: roundedText(degrees, 3), coverage: percentText(coverage, 4) };
+    const parameters = { ...known, degrees: degreesText(degrees), coverage: percentText(coverage, 4) };
     if (degrees >= ENOUGH) return holds('enough', parameters);
     const needed = coverageFactor(coverage, degrees);
     const withNeeded = { ...parameters, needed: roundedText(needed, 3) };
@@ -46,6 +47,11 @@ export const factorForFewDegrees: ValueRule = {
     return fits ? holds('fits', withNeeded) : fails('too small', withNeeded);
   },
 };
+
+/** Beyond some the number says nothing more. */
+function degreesText(degrees: number): string {
+  return degrees > MANY ? `more than ${MANY}` : String(degrees);
+}
 
 /** Truncated to an integer, but never to nothing (JCGM 100:2008, G.4.1); null: not known. */
 function degreesOf({ budget }: ValueFacts, u: number): number | null {

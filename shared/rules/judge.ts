@@ -3,6 +3,7 @@ import type { ChainCheck, ChainLink, ChainRule } from '#shared/contracts/chains.
 import type { ChainFacts, LinkFacts, Question, ValueFacts } from './facts.ts';
 import { RULES, rulesInWords } from './rule-set.ts';
 import type { Finding, RuleHead, Severity, VerdictName } from './rule.ts';
+import { placesOf } from './sentence.ts';
 
 export type Check = z.infer<typeof ChainCheck>;
 export type Standing = z.infer<typeof ChainLink>['conduct'];
@@ -91,10 +92,27 @@ function checksOf<Facts>(
   return rules.flatMap((rule) =>
     rule.verdicts.map((verdict) => {
       const finding = rule.judge(facts, question, verdict);
-      const { outcome, sentence, parameters, severity = rule.severity } = finding;
+      const { outcome, sentence, severity = rule.severity } = finding;
+      const parameters = usedIn(rule, finding);
       return { rule: rule.id, subject, verdict, outcome, severity, parameters, sentence };
     }),
   );
+}
+
+const PLACES = new Map(
+  RULES.flatMap(({ id, sentences }) =>
+    Object.entries(sentences).map(([key, text]) => [`${id} ${key}`, placesOf(text)] as const),
+  ),
+);
+
+/** Of what a rule had at hand only what its sentence says: a reply with hundreds of checks is half as large. */
+function usedIn({ id }: RuleHead, { sentence, parameters }: Finding): Record<string, string> {
+  const used: Record<string, string> = {};
+  for (const name of PLACES.get(`${id} ${sentence}`) ?? []) {
+    const text = parameters[name];
+    if (text !== undefined) used[name] = text;
+  }
+  return used;
 }
 
 /**

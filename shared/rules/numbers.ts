@@ -80,9 +80,13 @@ export function expandedUText(result: ResultFacts): string {
   return quantityText(new Decimal(printedU(result)), result.reportedUnit, decimalsOfU(result)!, false);
 }
 
+/** Below this no unit has an amount left: what is smaller is written as 0. */
+const NOTHING = '1e-30';
+
 /** A computed amount in g for reading, to two significant digits in the unit of a result. */
 export function amountText(grams: number | Decimal, like: Pick<ResultFacts, 'reportedUnit'>): string {
-  const amount = inReportedUnit(like, new Decimal(grams).toFixed()).toSignificantDigits(2);
+  const exact = inReportedUnit(like, new Decimal(grams).toFixed()).toSignificantDigits(2);
+  const amount = exact.abs().lt(NOTHING) ? new Decimal(0) : exact;
   const decimals = amount.isZero() ? 0 : Math.max(0, 1 - amount.e);
   return quantityText(amount, like.reportedUnit, decimals, false);
 }

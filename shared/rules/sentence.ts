@@ -9,3 +9,8 @@ export function fillSentence(sentence: string, parameters: Readonly<Record<strin
     return text;
   });
 }
+
+/** The names of a sentence's places, each once. */
+export function placesOf(sentence: string): string[] {
+  return [...new Set([...sentence.matchAll(/\{(\w+)\}/g)].map(([, name]) => name!))];
+}

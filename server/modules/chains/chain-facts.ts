@@ -24,7 +24,7 @@ import type {
   StoredSource,
   StoredValue,
 } from './stored.ts';
-import { budgetFacts, sheetFacts, weightFacts } from './weight-facts.ts';
+import { budgetFacts, propertyFacts, sheetFacts, weightFacts } from './weight-facts.ts';
 
 /** What the assembly reads: plain maps, filled by the service. */
 export interface FactParts {
@@ -217,9 +217,7 @@ function densityFacts(dossier: StandardDossier, day: string, horizon: string): D
     day,
     horizon,
   );
-  return (
-    density && { value: density.value, expandedU: density.expandedU, k: density.k, origin: density.origin }
-  );
+  return density && propertyFacts(density);
 }
 
 /** Ends as known; what took a value's place is told with its own ends, so that a replaced replacement shows. */

@@ -1,4 +1,5 @@
 import type { WeightClass } from '#shared/contracts/common.ts';
+import { decimalText } from '#shared/decimal.ts';
 import type {
   AuthorisationFacts,
   BudgetFacts,
@@ -50,7 +51,18 @@ function propertyOn(
     day,
     horizon,
   );
-  return row && { value: row.value, expandedU: row.expandedU, k: row.k, origin: row.origin };
+  return row && propertyFacts(row);
+}
+
+/** A property as rules read it; the column's zeros are not the certificate's, and sentences quote these texts. */
+export function propertyFacts(row: StoredProperty): PropertyFacts {
+  const plain = (text: string | null) => text && decimalText(text);
+  return {
+    value: decimalText(row.value),
+    expandedU: plain(row.expandedU),
+    k: plain(row.k),
+    origin: row.origin,
+  };
 }
 
 /** The first later day for which a density or volume is on record, where none covers the day itself. */
