@@ -295,8 +295,11 @@ export const CovarianceResponse = z.object({
   standardUncertainties: z.tuple([z.number().nullable(), z.number().nullable()]),
 });
 
-/** GET /api/chains?q=: which chain to open. */
-export const ChainSearchQuery = z.object({ q: z.string().trim().max(80).default('') });
+/** GET /api/chains?q=&failing=1: which chain to open; those that fail in the newest audit of their laboratory. */
+export const ChainSearchQuery = z.object({
+  q: z.string().trim().max(80).default(''),
+  failing: z.literal('1', 'Expected 1, or nothing for all values').optional(),
+});
 export const ChainSearchResponse = z.object({
   values: z.array(
     z.object({

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { AuditFigures } from './audits.ts';
 import { Day, Id, LaboratoryName } from './common.ts';
 import { DraftSummary } from './drafts.ts';
 
@@ -29,6 +30,17 @@ export const DeskResponse = z.object({
       referenceRegistryNo: z.string(),
       what: z.enum(['superseded', 'withdrawn']),
       on: Day,
+    }),
+  ),
+  /** The newest finished audit of each laboratory this person reads in full, and for the registrar of the network. */
+  audits: z.array(
+    z.object({
+      id: Id,
+      /** Null: the whole network. */
+      laboratory: LaboratoryName.nullable(),
+      day: Day,
+      endedAt: z.iso.datetime(),
+      figures: AuditFigures,
     }),
   ),
   /** For the registrar: size of the register. */

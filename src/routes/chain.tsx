@@ -1,11 +1,12 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { lazy, Suspense } from 'react';
-import { useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router';
+import { useNavigate, useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { paths } from '#src/app/paths.ts';
 import { queryClient } from '#src/app/query-client.ts';
 import { Toolbar } from '#src/components/layout/columns.tsx';
 import { LinkButton } from '#src/components/ui/button.tsx';
+import { AuditChain } from '#src/features/audits/components/audit-chain.tsx';
 import { chainQuery, type ChainDays } from '#src/features/chains/api.ts';
 import { ChainScreen } from '#src/features/chains/components/chain-screen.tsx';
 import type { ValueNode } from '#src/features/chains/components/selection-sheet.tsx';
@@ -61,11 +62,18 @@ function daysOf({ day, known, as }: ChainQuestion): ChainDays {
 function Further({ chain, question }: { chain: ChainResponse; question: ChainQuestion }) {
   const focus = chain.nodes.find(({ uid }) => uid === chain.focusUid);
   const isFull = focus?.type === 'value' && focus.view === 'full';
+  const navigate = useNavigate();
   const { data: distance } = useQuery({ ...distanceQuery(chain.focusUid), enabled: isFull });
   return (
     <>
       <Toolbar>
         <LinkButton to={paths.downstream.href(chain.focusUid, question)}>Who leans on this</LinkButton>
+        <LinkButton to={paths.together.href([chain.focusUid])}>Weigh together with …</LinkButton>
+        <AuditChain
+          valueUid={chain.focusUid}
+          days={question}
+          onAsked={(id) => void navigate(paths.audit.href(id))}
+        />
       </Toolbar>
       <Suspense>
         <TakeAlong valueUid={chain.focusUid} question={question} />

@@ -6,10 +6,12 @@ import { ChainChooser } from '#src/features/chains/components/chain-chooser.tsx'
 /** Which chain to open. */
 export function Component() {
   const [parameters, setParameters] = useSearchParams();
-  const search = (q: string) => setParameters(q === '' ? {} : { q }, { replace: true });
+  const search = (q: string, isFailing: boolean) =>
+    setParameters({ ...(q && { q }), ...(isFailing && { failing: '1' }) }, { replace: true });
   return (
     <ChainChooser
       q={parameters.get('q') ?? ''}
+      isFailing={parameters.get('failing') === '1'}
       onSearch={search}
       hrefOf={paths.chain.href}
       actions={

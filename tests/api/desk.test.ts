@@ -40,6 +40,7 @@ describe('GET /api/desk', () => {
       drafts: [],
       due: [],
       upstream: [],
+      audits: [],
       register: null,
       assessments: [],
     });

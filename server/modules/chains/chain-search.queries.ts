@@ -25,8 +25,13 @@ const LONGEST_LIST = 30;
 /**
  * Values in force of weights this person reads in full, by the beginning of the registry number, in capitals or
  * not, with its space or without; newest first.
+ * @param isFailing only those of which the newest audit of a laboratory says that a step or the whole fails
  */
-export async function chainChoices(context: SignedInContext, q: string): Promise<FoundValue[]> {
+export async function chainChoices(
+  context: SignedInContext,
+  q: string,
+  isFailing: boolean,
+): Promise<FoundValue[]> {
   const laboratoryIds = readableLaboratoryIds(context.user);
   if (laboratoryIds?.length === 0) return [];
   const day = today(context);
@@ -41,6 +46,7 @@ export async function chainChoices(context: SignedInContext, q: string): Promise
      JOIN calibration c ON c.id = r.calibration_id
      JOIN laboratory h ON h.id = v.holder_id
      WHERE ${laboratoryIds ? 'v.holder_id IN (:laboratoryIds) AND' : ''} REPLACE(s.registry_no, ' ', '') LIKE :beginning AND ${IN_FORCE}
+       ${isFailing ? `AND v.uid IN (${failingUids(laboratoryIds !== null)})` : ''}
      ORDER BY v.performed_end DESC, v.id DESC LIMIT ${LONGEST_LIST}`,
     {
       laboratoryIds: laboratoryIds ?? [],
@@ -52,4 +58,17 @@ export async function chainChoices(context: SignedInContext, q: string): Promise
       knownAt: knownAt(day),
     },
   );
+}
+
+/** Values that fail in the newest audit of each laboratory, and for who reads all in the newest of the network. */
+function failingUids(isOfSome: boolean): string {
+  return `
+    SELECT f.value_uid FROM audit_finding f
+    JOIN audit_run r ON r.id = f.run_id
+    JOIN (
+      SELECT MAX(act_seq) AS act_seq FROM audit_run
+      WHERE scope = 'laboratory' ${isOfSome ? 'AND laboratory_id IN (:laboratoryIds)' : ''} GROUP BY laboratory_id
+      ${isOfSome ? '' : "UNION SELECT MAX(act_seq) FROM audit_run WHERE scope = 'network'"}
+    ) newest ON newest.act_seq = r.act_seq
+    WHERE f.outcome = 'fails' AND f.severity <> 'information'`;
 }

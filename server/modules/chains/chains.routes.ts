@@ -28,7 +28,7 @@ export const chainRoutes: Route[] = [
     summary: 'Which chain to open: values in force of one’s own weights.',
     permission: signedIn,
     query: ChainSearchQuery,
-    act: (context, { query }) => chainChoices(context, query.q),
+    act: (context, { query }) => chainChoices(context, query.q, query.failing === '1'),
     response: ChainSearchResponse,
     present: (rows) => ({
       values: rows.map(({ holderId, holderCode, holderName, ...row }) => ({

@@ -4,6 +4,7 @@ import type { Sequelize } from 'sequelize';
 import { knownAt } from '#server/db/in-force.ts';
 import { readRow, readRows } from '#server/db/read.ts';
 import { today, type Context } from '#server/http/context.ts';
+import { newestAudits } from '#server/modules/audits/index.ts';
 import { standingOn } from '#server/modules/network/index.ts';
 import type { User } from '#server/policy/user.ts';
 import { deskDue } from './desk-due.queries.ts';
@@ -17,16 +18,17 @@ export async function deskOf(context: Context, user: User): Promise<DeskResponse
   const signsFor = user.memberships
     .filter(({ role }) => role === 'signatory')
     .map(({ laboratoryId }) => laboratoryId);
-  const [laboratories, toSign, drafts, due, upstream, register, assessments] = await Promise.all([
+  const [laboratories, toSign, drafts, due, upstream, audits, register, assessments] = await Promise.all([
     laboratoryNames(database, own),
     openDrafts(database, signsFor, ['sent to sign']),
     openDrafts(database, own, ['open']),
     deskDue(database, own, day, knownAt(day)),
     deskUpstream(database, own, day, knownAt(day)),
+    newestAudits(database, [...own, ...user.assessedLaboratoryIds], user.isRegistrar),
     user.isRegistrar ? registerSize(database) : null,
     openAssessments(database, user.accountId, day),
   ]);
-  return { day, laboratories, toSign, drafts, due, upstream, register, assessments };
+  return { day, laboratories, toSign, drafts, due, upstream, audits, register, assessments };
 }
 
 type Name = DeskResponse['laboratories'][number];

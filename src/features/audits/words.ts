@@ -1,8 +1,5 @@
 import type { AuditFigures, AuditSummary } from '#shared/contracts/audits.ts';
-import type { Severity } from '#shared/rules/rule.ts';
-
-/** Severities from the gravest. */
-export const SEVERITIES: readonly Severity[] = ['block', 'critical', 'major', 'minor', 'information'];
+import { SEVERITIES, severityWord } from '#shared/severity-words.ts';
 
 /** What an audit is of. */
 export function subjectText({ subject }: Pick<AuditSummary, 'subject'>): string {
@@ -20,9 +17,4 @@ export function failingCount(figures: AuditFigures): number {
 export function failingText(figures: AuditFigures): string {
   const parts = SEVERITIES.filter((severity) => figures[severity] > 0);
   return parts.map((severity) => `${figures[severity]} ${severityWord(severity)}`).join(', ');
-}
-
-/** A severity as it stands in a sentence. */
-export function severityWord(severity: Severity): string {
-  return severity === 'block' ? 'blocking' : severity === 'information' ? 'to be noted' : severity;
 }

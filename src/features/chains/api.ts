@@ -28,11 +28,15 @@ export function chainQuery(valueUid: string, days: ChainDays) {
   });
 }
 
-/** Which chain to open: values in force of weights this person reads in full. */
-export function chainChoicesQuery(q: string) {
+/**
+ * Which chain to open: values in force of weights this person reads in full.
+ * @param isFailing only those that fail in the newest audit of their laboratory
+ */
+export function chainChoicesQuery(q: string, isFailing = false) {
+  const query = { q, failing: isFailing ? '1' : undefined };
   return queryOptions({
-    queryKey: ['chains', 'list', q],
-    queryFn: ({ signal }) => get('/api/chains', ChainSearchResponse, { query: { q }, signal }),
+    queryKey: ['chains', 'list', query],
+    queryFn: ({ signal }) => get('/api/chains', ChainSearchResponse, { query, signal }),
   });
 }
 

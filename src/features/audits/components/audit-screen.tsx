@@ -29,7 +29,6 @@ export function AuditScreen({ audit, search, onChange, onAsked }: AuditScreenPro
       {result && (
         <TwoColumns
           sideWidth="narrow"
-          isSideFirstOnPhones
           side={
             <>
               <Figures result={result} />

@@ -1,6 +1,8 @@
 import type { AuditSummary } from '#shared/contracts/audits.ts';
+import { stateOfOutcome } from '#shared/states.ts';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Word } from '#src/components/ui/word.tsx';
+import { SEVERITIES } from '#shared/severity-words.ts';
 import { failingCount, failingText } from '../words.ts';
 
 /** Where an audit stands; once it is done, what fails. */
@@ -9,6 +11,6 @@ export function AuditState({ audit }: { audit: AuditSummary }) {
   if (state === 'running') return <Word tone="brass">{`${done} of ${total ?? '…'} chains`}</Word>;
   if (state !== 'done' || !figures) return <Word>{state}</Word>;
   if (failingCount(figures) === 0) return <StateMark state="sound">nothing fails</StateMark>;
-  const isGrave = figures.block + figures.critical + figures.major > 0;
-  return <StateMark state={isGrave ? 'broken' : 'caution'}>{failingText(figures)}</StateMark>;
+  const worst = SEVERITIES.find((severity) => figures[severity] > 0)!;
+  return <StateMark state={stateOfOutcome('fails', worst)}>{failingText(figures)}</StateMark>;
 }

@@ -5,7 +5,7 @@ import { Section } from '#src/components/layout/page.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { stateOfOutcome } from '#shared/states.ts';
-import { SEVERITIES, severityWord } from '../words.ts';
+import { SEVERITIES, severityWord } from '#shared/severity-words.ts';
 
 /** What an audit found, in numbers: failing by severity, not judged, and how much was looked at. */
 export function Figures({ result }: { result: z.infer<typeof AuditResult> }) {

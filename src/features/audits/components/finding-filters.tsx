@@ -1,7 +1,7 @@
 import { Toolbar } from '#src/components/layout/columns.tsx';
 import { SelectField } from '#src/components/ui/select-field.tsx';
 import type { AuditSearch } from '../search.ts';
-import { SEVERITIES, severityWord } from '../words.ts';
+import { SEVERITIES, severityWord } from '#shared/severity-words.ts';
 
 interface FindingFiltersProps {
   search: AuditSearch;

@@ -1,5 +1,4 @@
 import { useInfiniteQuery } from '@tanstack/react-query';
-import { Fragment } from 'react';
 import type { z } from 'zod';
 import type { AuditFindingGroup, AuditResult } from '#shared/contracts/audits.ts';
 import { groupBy } from '#shared/group-by.ts';
@@ -9,11 +8,10 @@ import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
-import { Cell, Head, Row, RowButton, Table } from '#src/components/ui/table.tsx';
 import { address } from '#src/lib/api-client.ts';
 import { findingsQuery } from '../api.ts';
 import type { AuditSearch } from '../search.ts';
-import { SEVERITIES, severityWord } from '../words.ts';
+import { SEVERITIES, severityWord } from '#shared/severity-words.ts';
 import { FindingFilters } from './finding-filters.tsx';
 import { RuleFindings } from './rule-findings.tsx';
 
@@ -27,8 +25,6 @@ interface FindingsByRuleProps {
   onChange: (change: Partial<AuditSearch>) => void;
   hasOwners: boolean;
 }
-
-const COLUMNS = 3;
 
 /** Findings by rule, the gravest first; a rule opens to its rows. */
 export function FindingsByRule({ auditId, days, result, search, onChange, hasOwners }: FindingsByRuleProps) {
@@ -60,71 +56,63 @@ export function FindingsByRule({ auditId, days, result, search, onChange, hasOwn
         </EmptyState>
       )}
       {rules.length > 0 && (
-        <Table caption="Findings by rule">
-          <thead>
-            <tr>
-              <Head>Rule</Head>
-              <Head>Fails</Head>
-              <Head align="right">Cannot be judged</Head>
-            </tr>
-          </thead>
-          <tbody>
-            {rules.map((rule) => (
-              <Fragment key={rule.id}>
-                <RuleRow
-                  rule={rule}
-                  groups={groups.get(rule.id)!}
-                  isOpen={rule.id === open}
-                  onToggle={() => onChange({ rule: rule.id === open ? undefined : rule.id })}
-                />
-                {rule.id === open && (
-                  <tr>
-                    <td colSpan={COLUMNS} className="border-b border-rule pb-3 pl-4">
-                      <RuleFindings auditId={auditId} days={days} rule={rule} filter={search} />
-                    </td>
-                  </tr>
-                )}
-              </Fragment>
-            ))}
-          </tbody>
-        </Table>
+        <ul aria-label="Findings by rule" className="flex flex-col border-t border-rule">
+          {rules.map((rule) => (
+            <li key={rule.id} className="border-b border-rule">
+              <RuleLine
+                rule={rule}
+                groups={groups.get(rule.id)!}
+                isOpen={rule.id === open}
+                onToggle={() => onChange({ rule: rule.id === open ? undefined : rule.id })}
+              />
+              {rule.id === open && (
+                <div className="border-l-3 border-brass pb-2 pl-3.5">
+                  <RuleFindings auditId={auditId} days={days} rule={rule} filter={search} />
+                </div>
+              )}
+            </li>
+          ))}
+        </ul>
       )}
     </Section>
   );
 }
 
-interface RuleRowProps {
+interface RuleLineProps {
   rule: Rule;
   groups: readonly AuditFindingGroup[];
   isOpen: boolean;
   onToggle: () => void;
 }
 
-function RuleRow({ rule, groups, isOpen, onToggle }: RuleRowProps) {
+function RuleLine({ rule, groups, isOpen, onToggle }: RuleLineProps) {
   const notJudged = groups
     .filter(({ outcome }) => outcome === 'cannot be judged')
     .reduce((sum, { count }) => sum + count, 0);
   return (
-    <Row isSelected={isOpen}>
-      <Cell isHeading className="min-w-56">
-        <RowButton aria-expanded={isOpen} onClick={onToggle}>
-          <span className="font-mono text-sm">{rule.id}</span> {rule.title}
-        </RowButton>
-        <p className="text-xs text-ink-3">
+    <button
+      type="button"
+      aria-expanded={isOpen}
+      onClick={onToggle}
+      className="flex min-h-11 w-full flex-wrap items-baseline justify-between gap-x-4 py-1.5 text-left hover:bg-raised"
+    >
+      <span className="min-w-0 flex-[1_1_18rem]">
+        <span className="font-mono text-sm">{rule.id}</span> {rule.title}
+        <span className="block text-xs text-ink-3">
           {rule.clause === 'none' ? rule.edition : `${rule.edition}: ${rule.clause}`}
-        </p>
-      </Cell>
-      <Cell>
+        </span>
+      </span>
+      <span className="flex flex-wrap gap-x-3">
         {groups
           .filter(({ outcome }) => outcome === 'fails')
           .map(({ severity, count }) => (
-            <StateMark key={severity} state={stateOfOutcome('fails', severity)} className="mr-3">
+            <StateMark key={severity} state={stateOfOutcome('fails', severity)}>
               {`${count} ${severityWord(severity)}`}
             </StateMark>
           ))}
-      </Cell>
-      <Cell align="right">{notJudged || ''}</Cell>
-    </Row>
+        {notJudged > 0 && <StateMark state="not judged">{`${notJudged} not judged`}</StateMark>}
+      </span>
+    </button>
   );
 }
 

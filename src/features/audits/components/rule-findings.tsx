@@ -14,7 +14,7 @@ import { mendingLink } from '#src/lib/mending-link.ts';
 import { usePerson, type Person } from '#src/lib/session.ts';
 import { writesFor } from '#src/lib/writes-for.ts';
 import { findingsQuery, type FindingFilter } from '../api.ts';
-import { severityWord } from '../words.ts';
+import { severityWord } from '#shared/severity-words.ts';
 
 type Rule = z.infer<typeof AuditResult>['rules'][number];
 

@@ -1,7 +1,10 @@
 import { useState, type ReactNode } from 'react';
 import { useQuery } from '@tanstack/react-query';
+import { paths } from '#src/app/paths.ts';
 import { Toolbar } from '#src/components/layout/columns.tsx';
 import { Page } from '#src/components/layout/page.tsx';
+import { LinkButton } from '#src/components/ui/button.tsx';
+import { Checkbox } from '#src/components/ui/checkbox.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
@@ -15,16 +18,18 @@ import { chainChoicesQuery } from '../api.ts';
 
 interface ChainChooserProps {
   q: string;
-  onSearch: (q: string) => void;
+  /** Only what fails in the newest audit of its laboratory. */
+  isFailing: boolean;
+  onSearch: (q: string, isFailing: boolean) => void;
   hrefOf: (valueUid: string) => string;
   /** Where else chains lead: beside the search. */
   actions?: ReactNode;
 }
 
 /** Which chain to open: the newest values of one's own weights, or those found by registry number. */
-export function ChainChooser({ q, onSearch, hrefOf, actions }: ChainChooserProps) {
+export function ChainChooser({ q, isFailing, onSearch, hrefOf, actions }: ChainChooserProps) {
   const [typed, setTyped] = useState(q);
-  const { data, error, refetch } = useQuery(chainChoicesQuery(q));
+  const { data, error, refetch } = useQuery(chainChoicesQuery(q, isFailing));
   return (
     <Page title="Chains" sub="Each value back to the SI, with the uncertainty that really reaches it.">
       <Toolbar>
@@ -36,14 +41,26 @@ export function ChainChooser({ q, onSearch, hrefOf, actions }: ChainChooserProps
           value={typed}
           onChange={(event) => {
             setTyped(event.target.value);
-            onSearch(event.target.value.trim());
+            onSearch(event.target.value.trim(), isFailing);
           }}
+        />
+        <Checkbox
+          label="failing in the newest audit"
+          checked={isFailing}
+          onChange={(event) => onSearch(typed.trim(), event.target.checked)}
         />
         {actions}
       </Toolbar>
       {error && <ErrorNotice error={error} onRetry={() => void refetch()} />}
       {!data && !error && <Waiting>Looking for values</Waiting>}
-      {data?.values.length === 0 && (
+      {data?.values.length === 0 && isFailing && (
+        <EmptyState action={<LinkButton to={paths.audits.href()}>Go to the audits</LinkButton>}>
+          {q
+            ? `No value of a weight whose number begins with "${q}" fails in the newest audit.`
+            : 'No value of yours fails in the newest audit of its laboratory, or none was made yet.'}
+        </EmptyState>
+      )}
+      {data?.values.length === 0 && !isFailing && (
         <EmptyState>
           {q
             ? `No value in force of a weight whose number begins with "${q}".`
@@ -51,7 +68,7 @@ export function ChainChooser({ q, onSearch, hrefOf, actions }: ChainChooserProps
         </EmptyState>
       )}
       {data && data.values.length > 0 && (
-        <Table caption="Values in force">
+        <Table caption={isFailing ? 'Values that fail in the newest audit' : 'Values in force'}>
           <thead>
             <tr>
               <Head>Weight</Head>

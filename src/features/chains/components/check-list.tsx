@@ -1,19 +1,45 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { fillSentence } from '#shared/rules/sentence.ts';
+import { groupChecks, type Check } from '../group-checks.ts';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { stateOfOutcome } from '#shared/states.ts';
+import { Mend } from './mend.tsx';
 
-export type Check = ChainResponse['checks'][number];
+interface CheckListProps {
+  chain: ChainResponse;
+  checks: readonly Check[];
+}
 
-const ORDER = ['fails', 'cannot be judged', 'holds', 'does not apply'];
+/**
+ * Checks in words: what failed first, each with its clause and the sentence that names what would mend it. What holds,
+ * does not apply or hardly matters stands behind its count.
+ */
+export function CheckList({ chain, checks }: CheckListProps) {
+  const { loud, quiet } = groupChecks(chain, checks);
+  if (checks.length === 0) return <p className="text-ink-2">No rule speaks about this.</p>;
+  return (
+    <div>
+      {loud.length > 0 ? (
+        <Items chain={chain} checks={loud} />
+      ) : (
+        <p className="text-ink-2">Nothing fails here, and nothing that weighs is open.</p>
+      )}
+      {quiet.map(({ title, checks: group }) => (
+        <details key={title} className="border-b border-rule">
+          <summary className="min-h-8 cursor-pointer py-1.5 text-ink-2 pointer-coarse:min-h-11">
+            {group.length} {title}
+          </summary>
+          <Items chain={chain} checks={group} />
+        </details>
+      ))}
+    </div>
+  );
+}
 
-/** Checks in words: what failed first, each with its clause and the sentence that names what would mend it. */
-export function CheckList({ chain, checks }: { chain: ChainResponse; checks: Check[] }) {
-  const sorted = checks.toSorted((a, b) => ORDER.indexOf(a.outcome) - ORDER.indexOf(b.outcome));
-  if (sorted.length === 0) return <p className="text-ink-2">No rule speaks about this.</p>;
+function Items({ chain, checks }: CheckListProps) {
   return (
     <ul className="flex flex-col">
-      {sorted.map((check) => (
+      {checks.map((check) => (
         <CheckItem key={`${check.rule} ${check.verdict}`} chain={chain} check={check} />
       ))}
     </ul>
@@ -32,6 +58,7 @@ function CheckItem({ chain, check }: { chain: ChainResponse; check: Check }) {
         </span>
       </div>
       <p>{template === undefined ? rule.title : fillSentence(template, check.parameters)}</p>
+      <Mend chain={chain} check={check} />
       <p className="text-xs text-ink-3">
         {rule.clause === 'none' ? rule.edition : `${rule.edition}: ${rule.clause}`}
       </p>

@@ -10,6 +10,7 @@ import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { DraftTable } from './draft-table.tsx';
 import { DueTable } from './due-table.tsx';
+import { NewestAudits } from './newest-audits.tsx';
 import { UpstreamTable } from './upstream-table.tsx';
 
 /** What needs this person today; parts without anything in them are not drawn. */
@@ -82,6 +83,7 @@ function DeskSide({ desk }: { desk: DeskResponse }) {
           />
         </Section>
       )}
+      {desk.audits.length > 0 && <NewestAudits audits={desk.audits} />}
       {desk.register && (
         <Section title="The register holds">
           <Facts
