@@ -8,7 +8,7 @@ import { createdOn } from './foot.ts';
 
 /** The chain as vectors on one page as large as the drawing. */
 export function drawingPdf(chain: ChainResponse, query: DrawingQuery): Promise<Buffer> {
-  const picture = pictureOfChain(chain, query, true);
+  const { picture } = pictureOfChain(chain, query, true);
   return picturePage(picture, GROUNDS[query.theme], {
     title: picture.title,
     subject: picture.description,

@@ -10,6 +10,6 @@ export const GROUNDS = { paper: PAPER, lamp: LAMP, print: PRINT } as const;
 
 /** The chain as an SVG that stands alone, its fonts and its ground in it. */
 export function drawingSvg(chain: ChainResponse, query: DrawingQuery): string {
-  const picture = pictureOfChain(chain, query, true);
+  const { picture } = pictureOfChain(chain, query, true);
   return toSvg(picture, { inks: GROUNDS[query.theme], fontRules: fontRules(), hasGround: true });
 }

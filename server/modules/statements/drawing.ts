@@ -1,9 +1,10 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import type { StatementQuery } from '#shared/contracts/statements.ts';
 import { asDrawn } from '#shared/drawing/as-drawn.ts';
-import { displayList } from '#shared/drawing/display-list.ts';
+import { displayList, type DisplayList } from '#shared/drawing/display-list.ts';
 import { layoutInput } from '#shared/drawing/layout-of.ts';
 import { layoutChain } from '#shared/drawing/layout.ts';
+import { legendOf, type LegendSign } from '#shared/drawing/legend.ts';
 import { pictureOf } from '#shared/drawing/picture.ts';
 import type { Picture } from '#shared/drawing/shapes.ts';
 import { AppError } from '#server/http/app-error.ts';
@@ -13,31 +14,58 @@ import { askedWords, quantityWords, weightWords } from './words.ts';
 /** Beyond this a drawing takes seconds to lay out and nobody reads it on paper. */
 const MOST_PLATES = 700;
 
-/** How to read the drawing, under one that leaves its page. */
-const LEGEND =
-  'A line is as wide as the share of the weight\u2019s variance that flows through it; grey stubs are what a value adds of its own. Dashed: a negative flow, where correlations cancel. Dotted: informs, nothing flows. A hairline is too thin for the scale. Hatched: a check warns. Parted in its middle: a check fails.';
+/** How each sign of a drawing looks, in words. */
+const LOOKS: Readonly<Record<LegendSign, string>> = {
+  flow: 'band',
+  hairline: 'hairline',
+  negative: 'dashed',
+  informing: 'dotted',
+  beside: 'dashed hairline',
+  broken: 'parted, with a cross',
+  caution: 'hatched, with a triangle',
+  'own part': 'grey stub',
+  'unknown part': 'hatched stub with a question mark',
+  root: 'double rule',
+  group: 'pile',
+  shared: 'ring of brass',
+};
+
+/** A chain drawn, and how to read it in a sentence. */
+export interface DrawnDocument {
+  picture: Picture;
+  legend: string;
+}
 
 /**
  * The chain as the question wants it drawn.
  * @param isAlone whether it leaves its page: then it says under itself what was asked and how to read it
  * @throws AppError `unprocessable` for a chain of more plates than a drawing can hold
  */
-export function pictureOfChain(chain: ChainResponse, query: StatementQuery, isAlone: boolean): Picture {
+export function pictureOfChain(chain: ChainResponse, query: StatementQuery, isAlone: boolean): DrawnDocument {
   const drawn = asDrawn(chain, query);
   refuseUnlessDrawable(drawn.chain.nodes.length);
   const placement = layoutChain(layoutInput(drawn.chain, query.draw));
+  const list = displayList(drawn.chain, placement, query);
+  const legend = legendWords(list);
   const focus = focusOf(chain);
   const judged = query.verdict === 'today' ? 'known now' : 'known at use';
-  return pictureOf(displayList(drawn.chain, placement, query), {
+  const picture = pictureOf(list, {
     title: `Chain of ${weightWords(focus)}`,
     description: descriptionOf(chain, query),
     caption: isAlone
       ? [
           `${weightWords(focus)}: ${quantityWords(focus.deviation, focus.expandedU, focus.k)}; certificate ${focus.certificateNo}. ${askedWords(chain.question)} Judged by what was ${judged}.`,
-          LEGEND,
+          legend,
         ]
       : [],
   });
+  return { picture, legend };
+}
+
+function legendWords(list: DisplayList): string {
+  return `How to read it: ${legendOf(list)
+    .map(({ sign, says }) => `${LOOKS[sign]}, ${says}`)
+    .join('; ')}.`;
 }
 
 function refuseUnlessDrawable(plates: number): void {

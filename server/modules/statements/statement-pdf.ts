@@ -1,6 +1,5 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import type { StatementQuery, StatementResponse } from '#shared/contracts/statements.ts';
-import type { Picture } from '#shared/drawing/shapes.ts';
 import { STATE_INKS } from '#shared/drawing/state-glyphs.ts';
 import { shareText } from '#shared/numbers/share-text.ts';
 import { stateOfOutcome } from '#shared/states.ts';
@@ -8,7 +7,7 @@ import { prose, Sheet, span } from '#server/print/sheet.ts';
 import { setTable, type Cell, type Column } from '#server/print/table.ts';
 import { ruleCounts } from './check-rows.ts';
 import { contentOf } from './content.ts';
-import { pictureOfChain } from './drawing.ts';
+import { pictureOfChain, type DrawnDocument } from './drawing.ts';
 import { createdOn, footOf } from './foot.ts';
 import { setQuantity } from './set-quantity.ts';
 import { focusOf, statementOf } from './statement.ts';
@@ -115,21 +114,11 @@ function setNotSaid(sheet: Sheet, statement: StatementResponse): void {
 }
 
 /** On an upright page where it can be read there, else on a page of its own on its side. */
-function setDrawing(sheet: Sheet, picture: Picture): void {
+function setDrawing(sheet: Sheet, { picture, legend }: DrawnDocument): void {
   const isWide = sheet.width / picture.width < LEAST_SCALE && picture.width > picture.height;
   sheet.addPage(isWide ? 'landscape' : 'portrait');
   sheet.heading('The chain, drawn');
-  sheet.paragraph(
-    [
-      span(
-        'A line is as wide as the share of the weight\u2019s variance that flows through it; grey stubs are what a value adds of its own. Dashed: a negative flow. Dotted: informs, nothing flows. Hatched: a check warns. Parted: a check fails. A hairline is too thin for the scale.',
-        SMALL,
-        'sans',
-        'ink-2',
-      ),
-    ],
-    { leading: 11.5, after: 10 },
-  );
+  sheet.paragraph([span(legend, SMALL, 'sans', 'ink-2')], { leading: 11.5, after: 10 });
   sheet.picture(picture);
 }
 

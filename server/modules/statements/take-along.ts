@@ -57,7 +57,8 @@ function hashSource(text: string): string {
 
 function mainOf(chain: ChainResponse, query: StatementQuery, statement: StatementResponse): string {
   const focus = focusOf(chain);
-  const svg = toSvg(pictureOfChain(chain, query, false), { inks: PAGE_INKS });
+  const { picture, legend } = pictureOfChain(chain, query, false);
+  const svg = toSvg(picture, { inks: PAGE_INKS });
   const held = focus.holder ? `${focus.holder.name} · ` : '';
   return (
     `<header><p class="quiet">The chain of</p><h1>${escaped(statement.title)}</h1>` +
@@ -67,7 +68,7 @@ function mainOf(chain: ChainResponse, query: StatementQuery, statement: Statemen
     section('In short', statement.summary.map((sentence) => `<p>${escaped(sentence)}</p>`).join('')) +
     section(
       'Drawn',
-      `<div class="drawing" tabindex="0" role="region" aria-label="The chain, drawn">${svg}</div><p class="quiet">A line is as wide as the share of the weight’s variance that flows through it. Dashed: a negative flow. Dotted: informs, nothing flows. Hatched: a check warns. Parted: a check fails. A hairline is too thin for the scale.</p>`,
+      `<div class="drawing" tabindex="0" role="region" aria-label="The chain, drawn">${svg}</div><p class="quiet">${escaped(legend)}</p>`,
     ) +
     section('Step by step', stepTable(statement.steps)) +
     section('The checks', ruleTable(statement) + findings(statement)) +

@@ -35,7 +35,7 @@ export function TakeAlong({ valueUid, question }: TakeAlongProps) {
       </summary>
       <ul className="pb-2">
         {CHAIN_DOCUMENTS.map((one) => (
-          <li key={one.id} className="flex min-h-7.5 flex-wrap items-baseline gap-x-3">
+          <li key={one.id} className="flex flex-wrap items-baseline gap-x-3 py-1">
             <Button
               weight="text"
               isBusy={stand?.is === 'making' && stand.id === one.id}
@@ -46,7 +46,7 @@ export function TakeAlong({ valueUid, question }: TakeAlongProps) {
             <span className="text-sm text-ink-2">{one.note}</span>
           </li>
         ))}
-        <li className="flex min-h-7.5 flex-wrap items-baseline gap-x-3">
+        <li className="flex flex-wrap items-baseline gap-x-3 py-1">
           <Button weight="text" onClick={() => window.print()}>
             Print this screen
           </Button>
