@@ -42,8 +42,35 @@ export const SCREENS: readonly Screen[] = [
     },
   },
   { name: 'downstream', path: ({ valueUid }) => `/chains/${valueUid}/downstream` },
+  {
+    name: 'downstream-what-if',
+    path: ({ valueUid }) => `/chains/${valueUid}/downstream?suppose=shift&amount=0.2+mg`,
+    prepare: (page) => page.getByRole('button', { name: 'Keep it' }).waitFor(),
+  },
+  { name: 'what-if', path: () => '/chains/what-if' },
+  {
+    name: 'what-if-asked',
+    path: ({ valueUid, revisionId }) => {
+      const changes = [
+        { kind: 'shift', valueUid, shift: '0.0002' },
+        { kind: 'withdraw', revisionId },
+      ];
+      return `/chains/what-if?${new URLSearchParams({ changes: JSON.stringify(changes) }).toString()}`;
+    },
+    prepare: (page) => page.getByRole('button', { name: 'Keep it' }).waitFor(),
+  },
+  { name: 'dry-runs', path: () => '/chains/dry-runs' },
+  { name: 'together-none', path: () => '/chains/together' },
+  { name: 'together', path: ({ valueUid }) => `/chains/together?values=${valueUid}` },
+  {
+    name: 'exposure',
+    path: ({ standardId }) => `/standards/${standardId}/exposure?lastGood=2015-01-01&firstBad=2026-01-01`,
+  },
   { name: 'network', path: () => '/network' },
   { name: 'laboratory', path: ({ laboratoryId }) => `/network/${laboratoryId}` },
+  { name: 'mass-scale', path: () => '/network/mass-scale' },
+  { name: 'notice', path: ({ noticeId }) => `/network/notices/${noticeId}` },
+  { name: 'notice-new', path: () => '/network/notices/new' },
   { name: 'not-found', path: () => '/no-such-place' },
 ];
 

@@ -10,6 +10,8 @@ export interface DemoPlaces {
   revisionId: string;
   /** The value of the laboratory that leans on the most steps below it being in force. */
   valueUid: string;
+  /** The notice in force. */
+  noticeId: string;
 }
 
 /** The laboratory whose people look: Port Alder Calibration. */
@@ -42,12 +44,18 @@ export async function demoPlaces(database: Sequelize): Promise<DemoPlaces> {
      ORDER BY (SELECT COUNT(*) FROM value_link k WHERE k.child_id = v.id) DESC, v.effective_from DESC, v.id LIMIT 1`,
     LOOKING_LABORATORY,
   );
+  const notice = await row<{ id: string }>(
+    database,
+    'SELECT id FROM notice WHERE effective_on <= CURRENT_DATE ORDER BY effective_on LIMIT 1',
+    LOOKING_LABORATORY,
+  );
   return {
     laboratoryId: laboratory.id,
     standardId: standard.id,
     setMemberId: member.id,
     revisionId: value.revisionId,
     valueUid: value.uid,
+    noticeId: notice.id,
   };
 }
 
