@@ -4,12 +4,15 @@ import { ancestorIds, storedGroups, storedSources, storedValues } from './closur
 import type { Notice } from '#shared/notices/notice.ts';
 import { laboratoryDossiers, standardDossiers } from './dossier.queries.ts';
 import { isNoticeSince, recordedNotices } from './notices.queries.ts';
+import { RecentMap } from './recent-map.ts';
 import type { LaboratoryDossier, StandardDossier, StoredGroup, StoredSource, StoredValue } from './stored.ts';
 
-/** Beyond this many values the memory is emptied and filled anew by what is asked: about 2 kB each. */
-const MAXIMUM_VALUES = 100_000;
+/** What is kept at most: a value takes about 4 kB, a standard with its history about 14 kB. */
+const MOST_VALUES = 12_000;
+const MOST_STANDARDS = 4_000;
+const MOST_GROUPS = 1_000;
 /** A register up to this size is read whole when the first chain is asked for. */
-const WHOLE_REGISTER = 20_000;
+const WHOLE_REGISTER = 10_000;
 
 /** A part of the register that is complete upwards: with every value, all it leans on. */
 export interface Closure {
@@ -18,6 +21,9 @@ export interface Closure {
   sources: Map<number, StoredSource>;
   groups: Map<number, StoredGroup>;
 }
+
+/** What both kinds of memory can do. */
+type Memory<Key, Value> = Pick<RecentMap<Key, Value>, 'get' | 'set'>;
 
 /** Tables whose later rows change what is known of a standard, or of a laboratory. */
 const TOUCHED_STANDARDS = `
@@ -43,10 +49,10 @@ const TOUCHED_LABORATORIES = `
  */
 export class ChainStore {
   readonly #database: Sequelize;
-  readonly #values = new Map<number, StoredValue>();
-  readonly #sources = new Map<number, StoredSource>();
-  readonly #groups = new Map<number, StoredGroup>();
-  readonly #standards = new Map<string, StandardDossier>();
+  readonly #values = new RecentMap<number, StoredValue>(MOST_VALUES);
+  readonly #sources = new RecentMap<number, StoredSource>(MOST_VALUES);
+  readonly #groups = new RecentMap<number, StoredGroup>(MOST_GROUPS);
+  readonly #standards = new RecentMap<string, StandardDossier>(MOST_STANDARDS);
   readonly #laboratories = new Map<string, LaboratoryDossier>();
   #notices: readonly Notice[] = [];
   #seq = -1;
@@ -78,14 +84,14 @@ export class ChainStore {
 
   /** The values with these ids and all they lean on. */
   async closure(ids: readonly number[]): Promise<Closure> {
-    await this.#loadAncestors(ids);
-    const values = this.#inOrder(ids);
-    const sources = new Map<number, StoredSource>();
-    const groups = new Map<number, StoredGroup>();
-    for (const value of values) {
-      for (const { sourceId } of value.sources) sources.set(sourceId, this.#sources.get(sourceId)!);
-      if (value.groupId !== null) groups.set(value.groupId, this.#groups.get(value.groupId)!);
-    }
+    const held = this.#heldAbove(ids) ?? (await this.#valuesOf(await ancestorIds(this.#database, ids)));
+    const values = inOrder(held, ids);
+    const sourceIds = new Set(values.flatMap((value) => value.sources.map((link) => link.sourceId)));
+    const groupIds = new Set(values.flatMap((value) => (value.groupId === null ? [] : [value.groupId])));
+    const [sources, groups] = await Promise.all([
+      found(this.#sources, sourceIds, (missing) => storedSources(this.#database, missing)),
+      found(this.#groups, groupIds, (missing) => storedGroups(this.#database, missing)),
+    ]);
     return { values, sources, groups };
   }
 
@@ -117,7 +123,7 @@ export class ChainStore {
    * memory while a chain is worked out. What was read while an act came in may be older than it, and is not kept.
    */
   async #dossiers<Dossier>(
-    memory: Map<string, Dossier>,
+    memory: Memory<string, Dossier>,
     ids: Iterable<string>,
     read: (missing: string[]) => Promise<(readonly [string, Dossier])[]>,
   ): Promise<Map<string, Dossier>> {
@@ -159,7 +165,7 @@ export class ChainStore {
        FROM assigned_value LIMIT ${WHOLE_REGISTER + 1}`,
     );
     if (rows.length > WHOLE_REGISTER) return;
-    await this.#loadValues(rows.map((row) => row.id));
+    await this.#valuesOf(rows.map((row) => row.id));
     await this.standards(rows.map((row) => row.standardId));
     await this.laboratories(rows.flatMap((row) => [row.issuerId, row.holderId]));
   }
@@ -176,67 +182,60 @@ export class ChainStore {
     for (const { id } of laboratories) this.#laboratories.delete(id);
   }
 
-  async #loadAncestors(ids: readonly number[]): Promise<void> {
-    if (this.#holdsClosure(ids)) return;
-    if (this.#values.size > MAXIMUM_VALUES) this.#forgetValues();
-    await this.#loadValues(await ancestorIds(this.#database, ids));
-  }
-
-  #forgetValues(): void {
-    this.#values.clear();
-    this.#sources.clear();
-    this.#groups.clear();
-    this.#standards.clear();
-  }
-
-  #holdsClosure(ids: readonly number[]): boolean {
+  /** These values and all they lean on, where all of them are in memory; otherwise null. */
+  #heldAbove(ids: readonly number[]): Map<number, StoredValue> | null {
+    const held = new Map<number, StoredValue>();
     const seen = new Set<number>(ids);
     for (const id of seen) {
       const value = this.#values.get(id);
-      if (!value) return false;
+      if (!value) return null;
+      held.set(id, value);
       for (const { parentId } of value.parents) seen.add(parentId);
     }
-    return true;
+    return held;
   }
 
-  async #loadValues(ids: number[]): Promise<void> {
-    for (const chunk of chunks(
-      ids.filter((id) => !this.#values.has(id)),
-      2_000,
-    )) {
-      const values = await storedValues(this.#database, chunk);
-      const sourceIds = new Set(values.flatMap((value) => value.sources.map((link) => link.sourceId)));
-      const groupIds = new Set(values.flatMap((value) => (value.groupId === null ? [] : [value.groupId])));
-      const [sources, groups] = await Promise.all([
-        storedSources(
-          this.#database,
-          [...sourceIds].filter((id) => !this.#sources.has(id)),
-        ),
-        storedGroups(
-          this.#database,
-          [...groupIds].filter((id) => !this.#groups.has(id)),
-        ),
-      ]);
-      for (const source of sources) this.#sources.set(source.id, source);
-      for (const group of groups) this.#groups.set(group.id, group);
-      for (const value of values) this.#values.set(value.id, value);
+  #valuesOf(ids: readonly number[]): Promise<Map<number, StoredValue>> {
+    return found(this.#values, ids, (missing) => storedValues(this.#database, missing));
+  }
+}
+
+/** Values that never change, by id, from memory or read and remembered: a map of its own, whatever memory lets go. */
+async function found<Item extends { id: number }>(
+  memory: RecentMap<number, Item>,
+  ids: Iterable<number>,
+  read: (missing: number[]) => Promise<Item[]>,
+): Promise<Map<number, Item>> {
+  // In the order asked for, which decides the order of sums and lists, whatever is in memory already.
+  const items = new Map<number, Item>();
+  const missing: number[] = [];
+  for (const id of ids) {
+    const known = memory.get(id);
+    items.set(id, known!);
+    if (!known) missing.push(id);
+  }
+  for (const chunk of chunks(missing, 2_000)) {
+    for (const item of await read(chunk)) {
+      items.set(item.id, item);
+      memory.set(item.id, item);
     }
   }
+  return items;
+}
 
-  /** Depth first, parents before children. The register admits no circle, so this ends. */
-  #inOrder(ids: readonly number[]): StoredValue[] {
-    const done = new Set<number>();
-    const ordered: StoredValue[] = [];
-    const visit = (id: number): void => {
-      if (done.has(id)) return;
-      done.add(id);
-      const value = this.#values.get(id)!;
-      for (const { parentId } of value.parents) visit(parentId);
-      ordered.push(value);
-    };
-    for (const id of ids) visit(id);
-    return ordered;
-  }
+/** Depth first, parents before children. The register admits no circle, so this ends. */
+function inOrder(held: ReadonlyMap<number, StoredValue>, ids: readonly number[]): StoredValue[] {
+  const done = new Set<number>();
+  const ordered: StoredValue[] = [];
+  const visit = (id: number): void => {
+    if (done.has(id)) return;
+    done.add(id);
+    const value = held.get(id)!;
+    for (const { parentId } of value.parents) visit(parentId);
+    ordered.push(value);
+  };
+  for (const id of ids) visit(id);
+  return ordered;
 }
 
 function chunks<T>(items: T[], size: number): T[][] {

@@ -42,8 +42,8 @@ interface Remembered {
   seq: number;
   steps: Map<string, StepMemory>;
 }
-/** Bound of that memory: a step is about 10 kB. */
-const MOST_STEPS = 20_000;
+/** Beyond this many values under all questions together the memory begins anew with the next question. */
+const MOST_STEPS = 3_000;
 const memories = new WeakMap<ChainStore, Remembered>();
 
 /**
@@ -157,7 +157,9 @@ export function earlierThan(
 ): number[] {
   const horizon = endOfDay(steps.question.known);
   return closure.values.flatMap((value) => {
-    const before = steps.knows(value) ? null : historyBefore(standards.get(value.standardId)!, value, horizon);
+    const before = steps.knows(value)
+      ? null
+      : historyBefore(standards.get(value.standardId)!, value, horizon);
     return before ? [before.id] : [];
   });
 }

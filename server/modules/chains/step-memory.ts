@@ -1,15 +1,20 @@
 import type { LinkFacts, Question, ValueFacts } from '#shared/rules/facts.ts';
 import { judgeLink, judgeValue, type Check } from '#shared/rules/judge.ts';
+import { RecentMap } from './recent-map.ts';
 import type { StoredLink, StoredValue } from './stored.ts';
+
+/** Values whose facts and checks are kept, with those of about two links each: some 35 kB a value. */
+const MOST_VALUES = 2_500;
+const MOST_LINKS = 5_000;
 
 /**
  * Facts and checks of single values and links under one question, until the next act. What is true of a value does
- * not depend on which chain it is met in, and chains share their upper ends: each step is judged once.
+ * not depend on which chain it is met in, and chains share their upper ends: a step met often is judged once.
  */
 export class StepMemory {
   readonly question: Question;
-  readonly #values = new Map<number, ValueFacts>();
-  readonly #links = new Map<string, LinkFacts>();
+  readonly #values = new RecentMap<number, ValueFacts>(MOST_VALUES);
+  readonly #links = new RecentMap<string, LinkFacts>(MOST_LINKS);
   readonly #checks = new WeakMap<ValueFacts | LinkFacts, Check[]>();
 
   constructor(question: Question) {
