@@ -3,6 +3,7 @@ import { makeContext, type Context } from '#server/http/context.ts';
 import { drawsFor } from './draws.ts';
 import { leaveDrafts } from './drafts.ts';
 import { makePlan } from './make-plan.ts';
+import { publishNotices } from './notices.ts';
 import type { DemoPlan } from './plan.ts';
 import { admitNetwork, type Admitted } from './seed-network.ts';
 import { runStep } from './seed-steps.ts';
@@ -40,6 +41,7 @@ export async function seedDemoNetwork(database: Sequelize, say: Say): Promise<Se
     await runStep(await signedBy(context, admitted, step), step, admitted);
   }
   await leaveDrafts(context, admitted);
+  await publishNotices(context, admitted, (day) => clock.turnTo(day));
   say(`  ${year}: ${admitted.valueUids.size} values in all`);
   return { plan, valueUids: admitted.valueUids };
 }

@@ -23,7 +23,9 @@ const made = new Set<string>();
 const tiers = new Map<number, number>();
 /** Relative gaps of conservation, chain by chain, for 200 of them. */
 const leaks: { certificate: string; gap: number }[] = [];
-/** U printed against k times u now, in half last digits. */
+/** Chains that a notice in force reaches. */
+let noticed = 0;
+/** U printed against k times u as certified, in half last digits. */
 const misprints: { certificate: string; digits: number }[] = [];
 
 beforeAll(async () => {
@@ -51,6 +53,8 @@ async function judgeEverything(): Promise<void> {
   const clock = { now: () => new Date(`${DAY}T12:00:00Z`) };
   const context = makeContext({ database: own.database, clock });
   const store = storeOf(own.database);
+  const notices = await query<{ id: string }>('SELECT id FROM notice');
+  const noticeIds = new Set(notices.map(({ id }) => id));
   const ids = await query<{ id: number }>('SELECT id FROM assigned_value ORDER BY id');
   for (const [at, { id }] of ids.entries()) {
     const chain = await chainOf(context, store, id, {});
@@ -68,14 +72,22 @@ async function judgeEverything(): Promise<void> {
       made.add(key);
       if (outcome === 'fails') failed.add(key);
     }
-    const deepest = Math.max(...chain.tiers.values());
+    // A notice stands above what it covers and is no link of the chain.
+    const links = [...chain.tiers].filter(([uid]) => !noticeIds.has(uid));
+    if (links.length < chain.tiers.size) noticed += 1;
+    const deepest = Math.max(...links.map(([, tier]) => tier));
     tiers.set(deepest, (tiers.get(deepest) ?? 0) + 1);
     const { focus, numbers } = chain;
     const u = numbers.propagation.standardUncertainty!;
+    // A certificate cannot know of the notices that came after it.
+    const uCertified = Math.sqrt(numbers.varianceAsCertified(focus.uid)!);
     const [expandedU, k] = [Number(focus.expandedU), Number(focus.k)];
     // Every certificate of the network states U to two significant digits.
     const halfDigit = 0.5 * 10 ** (Math.floor(Math.log10(expandedU)) - 1);
-    misprints.push({ certificate: names.get(focus.uid)!, digits: Math.abs(k * u - expandedU) / halfDigit });
+    misprints.push({
+      certificate: names.get(focus.uid)!,
+      digits: Math.abs(k * uCertified - expandedU) / halfDigit,
+    });
     // A step that shares no factor with the sizes of certificates: 200 chains from all over the register.
     if (at % Math.floor(ids.length / 200) === 0 && leaks.length < 200) {
       leaks.push({ certificate: names.get(focus.uid)!, gap: leakOf(numbers.propagation, focus.uid, u) });
@@ -125,6 +137,19 @@ describe('the network', () => {
   it('has chains of 4 to 9 links and none deeper', () => {
     for (const depth of [4, 5, 6, 7, 8, 9]) expect(tiers.get(depth)).toBeGreaterThan(50);
     expect(Math.max(...tiers.keys())).toBe(9);
+  });
+
+  it('has two scale versions and a notice in force, and a third with the notice that leads to it', async () => {
+    const rows = await query<{ number: string; from: string; to: string | null; effective: string }>(
+      `SELECT n.number, f.name \`from\`, t.name \`to\`, n.effective_on effective FROM notice n
+       JOIN scale_version f ON f.id = n.from_scale_id LEFT JOIN scale_version t ON t.id = n.to_scale_id
+       ORDER BY n.effective_on`,
+    );
+    expect(rows).toEqual([
+      { number: 'OI-N 1', from: 'Kilogram as realized', to: null, effective: '2026-11-16' },
+      { number: 'OI-N 2', from: 'Consensus value 2021', to: 'Consensus value 2027', effective: '2027-01-01' },
+    ]);
+    expect(noticed).toBeGreaterThan(500);
   });
 
   it('assumes the density of about one weight in ten', async () => {
