@@ -8,7 +8,7 @@ const density = { value: '7950', expandedU: '140', k: '2', origin: 'assumed' } a
 
 it('holds with U, whatever the source, and says which', () => {
   expect(judge({ density }).text).toBe(
-    'The density of MI 0007 is on record with its U, assumed: 7950 kg/m3, U 140 kg/m3.',
+    'The density of MI 0007 is on record with its U, assumed: 7950 kg/m³, U 140 kg/m³.',
   );
 });
 
@@ -16,7 +16,7 @@ it('holds by a volume where only that is on record', () => {
   const volume = { value: '125', expandedU: '0.01', k: '2', origin: 'measured' } as const;
   const found = judge({ density: null, weight: { ...WEIGHT, volume } });
   expect(found.outcome).toBe('holds');
-  expect(found.text).toContain('The volume of MI 0007 is on record with its U, measured: 8000 kg/m3, U 0.64');
+  expect(found.text).toContain('The volume of MI 0007 is on record with its U, measured: 8000 kg/m³, U 0.64');
 });
 
 it('fails without any, and without U: major for E1, minor for the others', () => {

@@ -16,7 +16,7 @@ export const densityIsOnRecord: ValueRule = {
   verdicts: ['today'],
   sentences: {
     complete:
-      'The {from} of {registryNo} is on record with its U, {origin}: {density} kg/m3, U {expandedU} kg/m3.',
+      'The {from} of {registryNo} is on record with its U, {origin}: {density} kg/m³, U {expandedU} kg/m³.',
     none: 'No density or volume of {registryNo} is on record; enter it with its U, and whether it was measured, assumed or given by the manufacturer.',
     'no uncertainty':
       'The {from} of {registryNo}, {origin}, is on record without its U; enter it with its k.',

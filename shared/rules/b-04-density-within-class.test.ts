@@ -3,7 +3,7 @@ import { densityWithinClass } from './b-04-density-within-class.ts';
 import { judgedBy, valueFacts, WEIGHT } from './example-facts.ts';
 import type { ValueFacts } from './facts.ts';
 
-/** E2 from 100 g up: 7810 to 8210 kg/m3; E1: 7934 to 8067 kg/m3 (OIML R 111-1:2004, Table 5, from memory). */
+/** E2 from 100 g up: 7810 to 8210 kg/m³; E1: 7934 to 8067 kg/m³ (OIML R 111-1:2004, Table 5, from memory). */
 const judge = (value: string, expandedU: string | null, changes: Partial<ValueFacts> = {}) =>
   judgedBy(
     densityWithinClass,
@@ -19,7 +19,7 @@ it('holds inside, U included', () => {
 it('fails outside by more than U', () => {
   const found = judge('8400', '50');
   expect(found).toMatchObject({ outcome: 'fails', severity: 'major' });
-  expect(found.text).toContain('8400 kg/m3 with U 50 kg/m3 (measured), lies outside the limits of class E2');
+  expect(found.text).toContain('8400 kg/m³ with U 50 kg/m³ (measured), lies outside the limits of class E2');
   expect(judge('7700', '50').outcome).toBe('fails');
 });
 

@@ -17,13 +17,13 @@ export const densityWithinClass: ValueRule = {
   verdicts: ['today'],
   sentences: {
     inside:
-      'The density of {registryNo}, {density} kg/m3, lies within the limits of class {class} at {nominal}: {limits} kg/m3 (from memory).',
+      'The density of {registryNo}, {density} kg/m³, lies within the limits of class {class} at {nominal}: {limits} kg/m³ (from memory).',
     outside:
-      'The density of {registryNo}, {density} kg/m3 with U {expandedU} kg/m3 ({origin}), lies outside the limits of class {class} at {nominal}: {limits} kg/m3 (from memory). Correct the density, or claim a class that allows it.',
+      'The density of {registryNo}, {density} kg/m³ with U {expandedU} kg/m³ ({origin}), lies outside the limits of class {class} at {nominal}: {limits} kg/m³ (from memory). Correct the density, or claim a class that allows it.',
     reaches:
-      'The density of {registryNo}, {density} kg/m3, has U {expandedU} kg/m3 ({origin}), which reaches across a limit of class {class} at {nominal}: {limits} kg/m3 (from memory). A smaller U would decide.',
+      'The density of {registryNo}, {density} kg/m³, has U {expandedU} kg/m³ ({origin}), which reaches across a limit of class {class} at {nominal}: {limits} kg/m³ (from memory). A smaller U would decide.',
     'no uncertainty':
-      'The density of {registryNo}, {density} kg/m3, lies outside the limits of class {class} at {nominal}: {limits} kg/m3 (from memory); without its U it cannot be told by how much.',
+      'The density of {registryNo}, {density} kg/m³, lies outside the limits of class {class} at {nominal}: {limits} kg/m³ (from memory); without its U it cannot be told by how much.',
     'no density': 'No density of {registryNo} is on record to compare with the limits of class {class}.',
     'no class': 'No class is claimed for {registryNo}.',
     'no limit': 'Class {class} has no limits of density at {nominal}.',

@@ -47,7 +47,7 @@ export const magnetismWithinClass: ValueRule = {
     const measured = measuredOf(value.weight, weightClass, value.nominal);
     if (measured.length === 0) {
       if (!FINE.includes(weightClass)) return doesNotApply('seldom tested', known);
-      return cannotBeJudged('not on record', known, isE ? 'minor' : 'information');
+      return cannotBeJudged('not on record', known, 'information');
     }
     const beyond = measured.filter(({ property, limit }) => Number(property.value) - u(property) > limit);
     if (beyond.length > 0) return fails('outside', withTexts(known, beyond), isE ? 'major' : 'minor');

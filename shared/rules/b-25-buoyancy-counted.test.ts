@@ -6,7 +6,7 @@ import type { BudgetFacts, EffectFacts } from './weight-facts.ts';
 
 const judge = (budget: Partial<BudgetFacts>, changes: Partial<ValueFacts> = {}) =>
   judgedBy(buoyancyCounted, valueFacts({ budget: { ...BUDGET, ...budget }, ...changes }));
-/** The weight's own volume, at an air density of 1.18 kg/m3 between conventional masses. */
+/** The weight's own volume, at an air density of 1.18 kg/m³ between conventional masses. */
 const own: EffectFacts = {
   kind: 'volume',
   standardId: 'standard-focus',
@@ -24,10 +24,10 @@ it('holds by the volumes, or by a component', () => {
   expect(judge({ components: ['Air density'] }).outcome).toBe('holds');
 });
 
-it('says so where the air density lay more than a tenth from 1.2 kg/m3', () => {
+it('says so where the air density lay more than a tenth from 1.2 kg/m³', () => {
   const thin = judge({ ...without, effects: [{ ...own, sensitivity: -0.00017 }] });
   expect(thin).toMatchObject({ outcome: 'holds', severity: 'information', sentence: 'other air' });
-  expect(thin.text).toContain('about 1.03 kg/m3');
+  expect(thin.text).toContain('about 1.03 kg/m³');
   const asMass = judge({ ...without, effects: [{ ...own, sensitivity: 0.00103 }] }, { quantity: 'mass' });
   expect(asMass.sentence).toBe('other air');
   expect(judge({ ...without, effects: [{ ...own, sensitivity: 0.9 }] }).sentence).toBe('volumes');

@@ -9,11 +9,11 @@ const BUOYANCY = /buoyan|air density|density of (the )?air|volume/i;
 const FEWEST_COMPONENTS = 2;
 /** Below these classes buoyancy between conventional masses is lost in U (common practice, no source). */
 const FINE: readonly WeightClass[] = ['E1', 'E2', 'F1'];
-/** kg/m3. */
+/** kg/m³. */
 const CONVENTIONAL_AIR = 1.2;
 /** Beyond a tenth of it mass and true volume are to be used (OIML R 111-1:2004, 10.2.1, from memory). */
 const LARGEST_DEVIATION = 0.1 * CONVENTIONAL_AIR;
-/** Air densities that a sensitivity can stand for, kg/m3; any other is one of several volumes added up. */
+/** Air densities that a sensitivity can stand for, kg/m³; any other is one of several volumes added up. */
 const AIR = [0.3, 1.5] as const;
 
 /**
@@ -30,7 +30,7 @@ export const buoyancyCounted: ValueRule = {
   sentences: {
     volumes: 'Certificate {certificate} counts air buoyancy by the volumes of {names}.',
     'other air':
-      'The air density was about {air} kg/m3, more than a tenth from 1.2 kg/m3; certificate {certificate} counts it by the volumes of {names}.',
+      'The air density was about {air} kg/m³, more than a tenth from 1.2 kg/m³; certificate {certificate} counts it by the volumes of {names}.',
     component: 'The budget of certificate {certificate} has a term for air buoyancy.',
     'left out':
       'The budget of certificate {certificate} for {registryNo} has no term for air buoyancy and names no volume; add what the density of the air brings.',
@@ -70,11 +70,11 @@ export const buoyancyCounted: ValueRule = {
   },
 };
 
-/** Air density by the sensitivity to the weight's own volume, kg/m3: rho for mass, rho - 1.2 for conventional mass. */
+/** Air density by the sensitivity to the weight's own volume, kg/m³: rho for mass, rho - 1.2 for conventional mass. */
 function airOf({ budget, standardId, quantity }: ValueFacts): number | null {
   const own = budget.effects.find((effect) => effect.kind === 'volume' && effect.standardId === standardId);
   if (!own) return null;
-  // g/cm3 to kg/m3.
+  // g/cm3 to kg/m³.
   const air = 1000 * own.sensitivity + (quantity === 'mass' ? 0 : CONVENTIONAL_AIR);
   return air >= AIR[0] && air <= AIR[1] ? air : null;
 }

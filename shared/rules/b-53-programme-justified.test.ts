@@ -11,10 +11,9 @@ it('holds with method and reason', () => {
   expect(judge({})).toMatchObject({ outcome: 'holds', sentence: 'justified' });
 });
 
-it('holds with a note where the interval was stated at registration', () => {
+it('holds, and says so, where the interval was stated at registration and no more', () => {
   expect(judge({ justification: 'Stated by the holder at registration.' })).toMatchObject({
     outcome: 'holds',
-    severity: 'information',
     sentence: 'stated only',
   });
 });

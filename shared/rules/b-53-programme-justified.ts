@@ -46,7 +46,7 @@ export const programmeJustified: LinkRule = {
     const says = (text: string) => text.trim().length >= SHORTEST;
     if (!says(programme.method) || !says(programme.justification)) return fails('not justified', parameters);
     return programme.justification === STATED_AT_REGISTRATION
-      ? holds('stated only', parameters, 'information')
+      ? holds('stated only', parameters)
       : holds('justified', parameters);
   },
 };

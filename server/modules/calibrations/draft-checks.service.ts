@@ -20,7 +20,8 @@ const NOT_YET = 'draft';
 
 /**
  * The checks each line would get if the draft were issued as it stands, so that a doubtful link shows while it is
- * written and not afterwards. Rules that do not apply are left out.
+ * written and not afterwards. Rules that do not apply are left out, and so is what a draft has no place for: a missing
+ * datum that is worth no more than information.
  */
 export async function draftChecks(context: Context, read: CalibrationInput): Promise<DraftCheckRow[]> {
   const facts = await issueFacts(context.database, read, today(context));
@@ -30,9 +31,13 @@ export async function draftChecks(context: Context, read: CalibrationInput): Pro
   const judged = await judgeUnissued(context, values);
   return judged.flatMap((checks, line) =>
     checks
-      .filter((check) => check.outcome !== 'does not apply')
+      .filter((check) => check.outcome !== 'does not apply' && !isLeftOpen(check))
       .map((check) => inWords(check, line, context)),
   );
+}
+
+function isLeftOpen({ outcome, severity }: Check): boolean {
+  return outcome === 'cannot be judged' && severity === 'information';
 }
 
 /** A line as the register would hold it; its id lies below zero, where the register gives none. */

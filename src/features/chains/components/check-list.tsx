@@ -24,10 +24,13 @@ export function CheckList({ chain, checks }: CheckListProps) {
       ) : (
         <p className="text-ink-2">Nothing fails here, and nothing that weighs is open.</p>
       )}
-      {quiet.map(({ title, checks: group }) => (
-        <details key={title} className="border-b border-rule">
-          <summary className="min-h-8 cursor-pointer py-1.5 text-ink-2 pointer-coarse:min-h-11">
-            {group.length} {title}
+      {quiet.map(({ outcome, because, checks: group }) => (
+        <details key={outcome} className="border-b border-rule">
+          <summary className="min-h-8 cursor-pointer py-1.5 pointer-coarse:min-h-11">
+            <StateMark state={stateOfOutcome(outcome)}>{outcome}</StateMark>
+            <span className="text-ink-2">
+              {because && `, ${because}`}: {group.length} {group.length === 1 ? 'check' : 'checks'}
+            </span>
           </summary>
           <Items chain={chain} checks={group} />
         </details>
