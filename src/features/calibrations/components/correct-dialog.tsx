@@ -140,7 +140,7 @@ export function CorrectDialog(props: CorrectDialogProps) {
         <div className="grid grid-cols-1 gap-3 sm:grid-cols-2">
           <DateField label="Issued on" error={errorAt(errors, 'issuedOn')} {...form.register('issuedOn')} />
           <DateField
-            label="In place of the former from"
+            label="Takes its place from"
             error={errorAt(errors, 'effectiveOn')}
             {...form.register('effectiveOn')}
           />

@@ -19,9 +19,9 @@ export function BeyondField({ value, onChange }: BeyondFieldProps) {
   };
   return (
     <DecimalField
-      label="Material beyond (10 if not said)"
+      label="Material beyond, 10 if not said"
       unit="% of U"
-      className="w-44"
+      className="w-56"
       value={typed}
       onChange={setTyped}
       onBlur={settle}

@@ -94,7 +94,7 @@ function ValueChangeForm({
     <form onSubmit={submit} noValidate className="flex flex-col gap-3">
       <Combobox
         label={kind === 'withdraw' ? 'A weight on the certificate' : 'Value'}
-        hint="By registry number, marking or certificate"
+        hint="By registry number"
         value={value}
         onChange={setValue}
         search={findValues}

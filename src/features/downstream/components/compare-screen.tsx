@@ -88,8 +88,8 @@ export function CompareScreen({ one, other, by, measure, onChange }: CompareScre
                     key={pair.key}
                     name={groupName(pair, by)}
                     measure={measure}
-                    one={pair.one && measured(pair.one, measure)}
-                    other={pair.other && measured(pair.other, measure)}
+                    one={pair.one ? measured(pair.one, measure) : 'none'}
+                    other={pair.other ? measured(pair.other, measure) : 'none'}
                   />
                 ))}
               </tbody>
@@ -132,8 +132,9 @@ function Heads({ first, one, other }: { first: string; one: DryRunResponse; othe
 interface MeasuredRowProps {
   name: string;
   measure: Measure;
-  one: number | null;
-  other: number | null;
+  /** Null where it is not told; `none` where nothing of the group leans on what is supposed. */
+  one: number | null | 'none';
+  other: number | null | 'none';
 }
 
 function MeasuredRow({ name, measure, one, other }: MeasuredRowProps) {
@@ -147,7 +148,11 @@ function MeasuredRow({ name, measure, one, other }: MeasuredRowProps) {
         <MeasuredText value={other} measure={measure} />
       </Cell>
       <Cell align="right">
-        <MeasuredText value={differenceOf(one, other)} measure={measure} isSigned />
+        <MeasuredText
+          value={differenceOf(one === 'none' ? null : one, other === 'none' ? null : other)}
+          measure={measure}
+          isSigned
+        />
       </Cell>
     </Row>
   );
@@ -158,11 +163,12 @@ function MeasuredText({
   measure,
   isSigned = false,
 }: {
-  value: number | null;
+  value: MeasuredRowProps['one'];
   measure: Measure;
   isSigned?: boolean;
 }) {
   const { decimalMark } = usePreferences();
+  if (value === 'none') return <span className="text-ink-3">none</span>;
   if (value === null) return <span className="text-ink-3">not told</span>;
   if (measure === 'largest shift') {
     if (value === 0) return <>0</>;

@@ -1,5 +1,5 @@
 import { useState, type FormEvent } from 'react';
-import { WhatIfChange } from '#shared/contracts/downstream.ts';
+import type { WhatIfChange } from '#shared/contracts/downstream.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { SelectField } from '#src/components/ui/select-field.tsx';
 import { DateField, TextField } from '#src/components/ui/text-field.tsx';

@@ -15,7 +15,7 @@ export function ReachText({ reach }: { reach: Reach }) {
     <Section title="What it can carry as a reference">
       <p className="text-ink-2">
         A weight of its nominal calibrated from it gets U of {bestText} at best
-        {textToday !== null && textToday !== bestText && `, of ${textToday} if calibrated today`}
+        {textToday !== null && textToday !== bestText && `, of ${textToday} if it is used today`}
         {classes.length > 0 ? '.' : ': too much for any class of its nominal.'}
       </p>
       {drift ? (

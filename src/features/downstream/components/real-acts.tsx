@@ -82,7 +82,7 @@ function Touched({ total: { count, words } }: { total: WhatIfResponse['total'] }
   if (count === 0) return <>nothing leans on it.</>;
   return (
     <>
-      {count} in all: verdict changes {words.verdictChanges}, material {words.material}, none {words.none}.
+      {count} in all; verdict changes {words.verdictChanges}, material {words.material}, none {words.none}.
     </>
   );
 }

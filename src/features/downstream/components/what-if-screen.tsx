@@ -69,7 +69,7 @@ export function WhatIfScreen({ search, onChange, dialogs }: WhatIfScreenProps) {
           <>
             <Supposed changes={changes} onChanges={(next) => onChange({ changes: next })} />
             {changes.length < MOST_CHANGES && (
-              <Section title={changes.length === 0 ? 'Suppose' : 'Suppose further'}>
+              <Section title={changes.length === 0 ? 'A change to suppose' : 'A further change'}>
                 <ChangeForm
                   onAdd={(change) => onChange({ changes: [...changes, change] })}
                   certificateOf={certificateOf}
@@ -123,6 +123,7 @@ function Supposed({
             </span>
             <Button
               weight="text"
+              className="shrink-0"
               aria-label={`Take change ${at + 1} away`}
               onClick={() => onChanges(changes.filter((_, place) => place !== at))}
             >

@@ -73,7 +73,7 @@ export function WhatIf({ changes, search, onOpen, onSort }: WhatIfProps) {
             />
             <Button
               weight="text"
-              className="pt-1"
+              className="mt-1"
               onClick={() =>
                 saveText(
                   'what-it-would-do-by-group.csv',

@@ -34,7 +34,7 @@ export function CombinedSection({ together }: { together: TogetherResponse }) {
         <tbody>
           <CombinedRow name="On one pan: sum" combined={sum} independent={independent} />
           {isDifference && (
-            <CombinedRow name="As they lie: difference" combined={signed} independent={independent} />
+            <CombinedRow name="As they lie: difference" combined={signed} independent={independent} isSmall />
           )}
         </tbody>
       </Table>
@@ -64,9 +64,11 @@ interface CombinedRowProps {
   name: string;
   combined: Combined;
   independent: number | null;
+  /** A difference is read in the unit that suits it. */
+  isSmall?: boolean;
 }
 
-function CombinedRow({ name, combined, independent }: CombinedRowProps) {
+function CombinedRow({ name, combined, independent, isSmall = false }: CombinedRowProps) {
   const { u, bound, linear, total } = combined;
   const known = u ?? bound;
   return (
@@ -79,6 +81,7 @@ function CombinedRow({ name, combined, independent }: CombinedRowProps) {
             expandedUncertainty={known === null || known === 0 ? null : String(2 * known)}
             coverageFactor="2"
             hidesUncertainty
+            {...(isSmall && { kind: 'deviation', shownIn: 'auto' })}
           />
         )}
       </Cell>

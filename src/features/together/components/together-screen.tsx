@@ -51,7 +51,7 @@ export function TogetherScreen({ placed, onPlaced }: TogetherScreenProps) {
                 <Combobox
                   key={asked}
                   label={placed.length === 0 ? 'A weight' : 'A further weight'}
-                  hint="By registry number, marking or certificate"
+                  hint="By registry number"
                   value={null}
                   onChange={add}
                   search={findValues}

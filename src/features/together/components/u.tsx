@@ -5,5 +5,5 @@ import { Quantity } from '#src/components/ui/quantity.tsx';
 export function U({ grams }: { grams: number | null }) {
   if (grams === null) return <span className="text-ink-3">not known</span>;
   if (grams === 0) return <>0</>;
-  return <Quantity value={new Decimal(grams).toFixed()} kind="uncertainty" shownIn="auto" />;
+  return <Quantity value={new Decimal(grams).toSignificantDigits(2).toFixed()} shownIn="auto" />;
 }
