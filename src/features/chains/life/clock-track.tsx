@@ -3,7 +3,6 @@ import type { LifeEvent } from '#shared/contracts/chain-life.ts';
 import { EventMark } from './event-mark.tsx';
 import { sentenceOf } from './event-words.ts';
 import {
-  dayAt,
   dayOn,
   daysLater,
   lastOf,
@@ -11,7 +10,6 @@ import {
   numberOf,
   placeOf,
   snapped,
-  spanOf,
   stopsOf,
   type Clock,
   type LifeAxis,
@@ -89,8 +87,7 @@ function useHandle(
   const stops = stopsOf(axis, events, clock);
   const dayUnder = ({ clientX }: PointerEvent) => {
     const { left, width } = track.current!.getBoundingClientRect();
-    const reach = (REACH / width) * spanOf(axis);
-    return snapped(stops, dayAt(axis, (clientX - left) / width, clock), reach);
+    return snapped(axis, stops, (clientX - left) / width, REACH / width, clock);
   };
   const isDragged = (event: PointerEvent) => event.currentTarget.hasPointerCapture(event.pointerId);
   const byKey: Record<string, () => string> = {

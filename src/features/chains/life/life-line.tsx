@@ -105,8 +105,11 @@ function Latest({ events, day, known }: { events: readonly LifeEvent[]; day: str
   const by = events.filter((event) => event.inForceFrom <= day && event.recordedOn <= known);
   const last = by.toSorted((a, b) => b.inForceFrom.localeCompare(a.inForceFrom) || rankOf(a) - rankOf(b))[0];
   return (
-    <p className="text-ink-2">
-      {last ? `Last by then, ${last.inForceFrom}: ${sentenceOf(last)}.` : 'Nothing had happened by then.'}
+    <p className="flex flex-wrap justify-between gap-x-4 text-ink-2">
+      <span>
+        {last ? `Last by then, ${last.inForceFrom}: ${sentenceOf(last)}.` : 'Nothing had happened by then.'}
+      </span>
+      <span className="text-ink-3 max-sm:hidden">not to scale</span>
     </p>
   );
 }
