@@ -9,6 +9,7 @@ import {
 } from '#shared/contracts/chains.ts';
 import { packChecks, PackedChainResponse } from '#shared/contracts/packed-checks.ts';
 import { Id } from '#shared/ids.ts';
+import { today } from '#server/http/context.ts';
 import { route, type Route } from '#server/http/route.ts';
 import { authorize, signedIn } from '#server/policy/permission.ts';
 import { chainChoices } from './chain-search.queries.ts';
@@ -77,7 +78,7 @@ export const chainRoutes: Route[] = [
     act: async (context, { params }, subject) => {
       const other = await chainSubject(context, params.otherUid);
       authorize(context.user, readChain, other);
-      return covarianceOf(storeOf(context.database), subject, other);
+      return covarianceOf(storeOf(context.database), subject, other, today(context));
     },
     response: CovarianceResponse,
     present: (result) => result,

@@ -2,15 +2,17 @@ import type { z } from 'zod';
 import type { CovarianceResponse } from '#shared/contracts/chains.ts';
 import { chainNumbers } from './chain-numbers.ts';
 import type { ChainStore } from './chain-store.ts';
+import { closureOn } from './noticed-closure.ts';
 
-/** Covariance (g2) and correlation of two values; null members where an unknown part stands in the way. */
+/** Covariance (g2) and correlation of two values on a day, notices in force included; null members where an unknown part stands in the way. */
 export async function covarianceOf(
   store: ChainStore,
   one: { id: number; uid: string },
   other: { id: number; uid: string },
+  day: string,
 ): Promise<z.infer<typeof CovarianceResponse>> {
   await store.catchUp();
-  const numbers = chainNumbers(await store.closure([one.id, other.id]), one.uid);
+  const numbers = chainNumbers(await closureOn(store, [one.id, other.id], day), one.uid);
   const covariance = numbers.covariance(one.uid, other.uid);
   const variances = [numbers.variance(one.uid), numbers.variance(other.uid)] as const;
   const [a, b] = variances;

@@ -2,7 +2,7 @@ export { chainNumbers } from './chain-numbers.ts';
 export { chainBatch } from './chain-batch.ts';
 export { chainOf } from './chain.service.ts';
 export { presentChain } from './chain.presenter.ts';
-export { entriesOf, noticeShifts, withNotices } from './noticed-closure.ts';
+export { closureOn, entriesOf, noticeShifts, withNotices } from './noticed-closure.ts';
 export { recordedNotices } from './notices.queries.ts';
 export { ChainStore, type Closure } from './chain-store.ts';
 export { chainSubject } from './chain-subject.queries.ts';

@@ -1,7 +1,8 @@
 import { noticeEntries } from '#shared/engine/network/notice-entries.ts';
 import { broughtTo, type Brought } from '#shared/notices/brought-to.ts';
 import type { Notice } from '#shared/notices/notice.ts';
-import type { Closure } from './chain-store.ts';
+import { noticesInForce } from '#shared/notices/in-force.ts';
+import type { ChainStore, Closure } from './chain-store.ts';
 import type { StoredLink, StoredSource, StoredSourceLink, StoredValue } from './stored.ts';
 
 const GRAMS_PER_KILOGRAM = 1000;
@@ -72,6 +73,11 @@ export function withNotices(closure: Closure, inForce: readonly Notice[]): Closu
     return links ? { ...value, sources: [...value.sources, ...links] } : value;
   });
   return { values, sources, groups: closure.groups };
+}
+
+/** The values with these ids and all they lean on, with the notices in force on a day as known on that day. */
+export async function closureOn(store: ChainStore, ids: readonly number[], day: string): Promise<Closure> {
+  return withNotices(await store.closure(ids), noticesInForce(store.notices, day, day));
 }
 
 /**

@@ -3,8 +3,14 @@ import { Decimal } from '#shared/decimal.ts';
 import { classConformity } from '#shared/engine/conformity/class-conformity.ts';
 import type { WeightClass } from '#shared/engine/conformity/r111-2004.ts';
 import { distanceToLimit } from '#shared/engine/network/distance-to-limit.ts';
-import type { Context } from '#server/http/context.ts';
-import { chainNumbers, storeOf, type ChainSubject, type StoredValue } from '#server/modules/chains/index.ts';
+import { today, type Context } from '#server/http/context.ts';
+import {
+  chainNumbers,
+  closureOn,
+  storeOf,
+  type ChainSubject,
+  type StoredValue,
+} from '#server/modules/chains/index.ts';
 import { reachOf } from './reach.service.ts';
 import { shortText } from './short-text.ts';
 
@@ -22,7 +28,7 @@ type Limit = { because: string } | { because: null; largest: Decimal; rule: stri
 export async function distanceOf(context: Context, subject: ChainSubject): Promise<DistanceResponse> {
   const store = storeOf(context.database);
   await store.catchUp();
-  const closure = await store.closure([subject.id]);
+  const closure = await closureOn(store, [subject.id], today(context));
   const focus = closure.values.find((value) => value.id === subject.id)!;
   const numbers = chainNumbers(closure, focus.uid);
   const limit = limitOf(focus);
@@ -48,7 +54,10 @@ export async function distanceOf(context: Context, subject: ChainSubject): Promi
     rule: limit.because === null ? limit.rule : null,
     room: room?.toNumber() ?? null,
     ancestors,
-    reach: await reachOf(context, focus, variance === null ? focus.uStated : Math.sqrt(variance)),
+    reach: await reachOf(context, focus, {
+      u: variance === null ? focus.uStated : Math.sqrt(variance),
+      view: subject.view,
+    }),
   };
 }
 

@@ -1,8 +1,9 @@
 import type { TogetherInput, TogetherResponse } from '#shared/contracts/downstream.ts';
 import { Decimal, decimalText } from '#shared/decimal.ts';
-import type { Context } from '#server/http/context.ts';
+import { today, type Context } from '#server/http/context.ts';
 import {
   chainNumbers,
+  closureOn,
   storeOf,
   type ChainSubject,
   type Closure,
@@ -21,7 +22,8 @@ export async function togetherOf(
 ): Promise<TogetherResponse> {
   const store = storeOf(context.database);
   await store.catchUp();
-  const closure = await store.closure(subjects.map((subject) => subject.id));
+  const ids = subjects.map((subject) => subject.id);
+  const closure = await closureOn(store, ids, today(context));
   const byId = new Map(closure.values.map((value) => [value.id, value]));
   const values = subjects.map((subject) => byId.get(subject.id)!);
   const numbers = chainNumbers(closure, values[0]!.uid);
