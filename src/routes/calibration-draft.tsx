@@ -11,7 +11,7 @@ import type { ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import { paths, SAME_SCREEN } from '#src/app/paths.ts';
 import { queryClient } from '#src/app/query-client.ts';
-import { draftQuery, newestReference, weightsOfSet } from '#src/features/calibrations/api.ts';
+import { draftQuery, newestReference, weightById, weightsOfSet } from '#src/features/calibrations/api.ts';
 import { ApiProblem } from '#src/lib/api-problem.ts';
 import { DraftPlace } from '#src/features/calibrations/draft/draft-place.tsx';
 
@@ -35,17 +35,18 @@ export async function loader({ params, request }: LoaderFunctionArgs): Promise<B
 }
 
 async function beginning(parameters: URLSearchParams, signal: AbortSignal): Promise<Beginning> {
-  const [set, laboratory, reference] = ['set', 'laboratory', 'reference'].map((name) => parameters.get(name));
+  const [set, standard] = [parameters.get('set'), parameters.get('standard')];
+  const [laboratory, reference] = [parameters.get('laboratory'), parameters.get('reference')];
   const [weights, found] = await Promise.all([
-    set ? weightsOfSet(set, signal) : [],
+    set ? weightsOfSet(set, signal) : standard ? weightById(standard, signal).catch(notTheirs) : [],
     laboratory && reference ? newestReference(laboratory, reference, signal).catch(notTheirs) : null,
   ]);
-  return { weights, reference: found };
+  return { weights: weights ?? [], reference: found };
 }
 
-/** Who may not name references for the laboratory is told so by the sheet itself. */
+/** What this person may not see or name is left out: the sheet itself tells who may enter what. */
 function notTheirs(error: unknown): null {
-  if (error instanceof ApiProblem && error.status === 403) return null;
+  if (error instanceof ApiProblem && [403, 404].includes(error.status)) return null;
   throw error;
 }
 

@@ -24,7 +24,7 @@ import {
 } from '#shared/contracts/drafts.ts';
 import type { QuantityKind } from '#shared/contracts/common.ts';
 import { LaboratoryListResponse } from '#shared/contracts/network.ts';
-import { StandardListResponse, type StandardRow } from '#shared/contracts/standards.ts';
+import { StandardListResponse, StandardResponse, type StandardRow } from '#shared/contracts/standards.ts';
 import { get, post, put } from '#src/lib/api-client.ts';
 import type { ListSearch } from './list-search.ts';
 
@@ -79,6 +79,11 @@ export async function weightsOfSet(registryNo: string, signal?: AbortSignal): Pr
   const query = { q: registryNo, limit: 200 };
   const { standards } = await get('/api/standards', StandardListResponse, { query, signal });
   return standards.filter(({ set }) => set?.registryNo === registryNo);
+}
+
+/** One weight, for a draft that begins with it. @throws ApiProblem */
+export async function weightById(standardId: string, signal?: AbortSignal): Promise<StandardRow[]> {
+  return [(await get(`/api/standards/${standardId}`, StandardResponse, { signal })).standard];
 }
 
 /** Values a result may name as its reference. */
