@@ -24,10 +24,11 @@ export function changedValues(pairs: Pairs, wording: Wording): Change[] {
 
 function cameOrWent(node: Node, names: Map<string, string>, isGone = false): Change {
   const name = names.get(node.uid) ?? '';
-  const certificate = node.type === 'value' ? `, certificate ${certificateOf(node)},` : '';
+  const what =
+    node.type === 'value' ? `${name}, certificate ${certificateOf(node)}` : `Shared effect ${name}`;
   return {
     group: 'What it rests on',
-    says: `${name}${certificate} is ${isGone ? 'no longer in the chain' : 'new in the chain'}.`,
+    says: `${what}: ${isGone ? 'no longer in the chain' : 'new in the chain'}.`,
     why: [],
     at: null,
     mark: null,

@@ -146,10 +146,10 @@ describe('what changed between two answers', () => {
   it('says what came and what went, and gives what went no place', () => {
     const wider = chain({ nodes: [...chain().nodes, value('S')], links: [...chain().links, link('T', 'S')] });
     expect(whatChanged(chain(), wider)).toMatchObject([
-      { says: 'S, certificate C-S, is new in the chain.', at: 'S' },
+      { says: 'S, certificate C-S: new in the chain.', at: 'S' },
     ]);
     expect(whatChanged(wider, chain())).toMatchObject([
-      { says: 'S, certificate C-S, is no longer in the chain.', at: null, mark: null },
+      { says: 'S, certificate C-S: no longer in the chain.', at: null, mark: null },
     ]);
   });
 

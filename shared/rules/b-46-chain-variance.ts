@@ -28,18 +28,18 @@ export const chainVariance: ChainRuleOf = {
     root: '{focus} is a stated reference: nothing is carried to it.',
     'no uncertainty': '{focus} states no U with its k.',
     unknown: 'What the chain carries is unknown, because certificate {missing} states no U.',
+    lost: 'What the chain carries is unknown: part of what it leans on cannot be computed.',
   },
   judge(chain) {
     const focus = chain.values.find((value) => value.uid === chain.focusUid)!;
     const known = {
       focus: certificateText(focus),
       expandedU: expandedUText(focus),
-      missing:
-        [...new Set(chain.values.flatMap((value) => value.carriedMissing))].join('; ') || 'of a reference',
+      missing: [...new Set(chain.values.flatMap((value) => value.carriedMissing))].join('; '),
     };
     if (focus.rootKind !== null || focus.references === 0) return doesNotApply('root', known);
     if (focus.expandedU === null || focus.k === null) return cannotBeJudged('no uncertainty', known);
-    if (chain.varianceNow === null) return cannotBeJudged('unknown', known);
+    if (chain.varianceNow === null) return cannotBeJudged(known.missing === '' ? 'lost' : 'unknown', known);
     if (isDeficit(focus)) return doesNotApply('at the focus', known);
     return judgeExcess(chain, focus, focus.k, chain.varianceNow, known);
   },

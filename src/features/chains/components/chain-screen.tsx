@@ -15,7 +15,7 @@ import { BothChains } from './both-chains.tsx';
 import { BothKinds } from './both-kinds.tsx';
 import { Contributions } from './contributions.tsx';
 import { LinkTable } from './link-table.tsx';
-import { NotYetNotice } from './not-yet-notice.tsx';
+import { NotYetNotice, SucceededNotice } from './not-yet-notice.tsx';
 import { OtherRules } from './other-rules.tsx';
 import { QuestionBar } from './question-bar.tsx';
 import { SelectionSheet, type ValueNode } from './selection-sheet.tsx';
@@ -77,6 +77,7 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
       }
     >
       <NotYetNotice chain={chain} hrefOf={hrefOf} />
+      <SucceededNotice chain={chain} hrefOf={hrefOf} />
       <OtherRules asked={question.rules} chain={chain} onDrop={() => onChange({ rules: undefined }, true)} />
       <QuestionBar question={question} answered={chain.question} onChange={onChange} />
       <Stack gap="tight">

@@ -37,3 +37,21 @@ export function NotYetNotice({ chain, hrefOf }: NotYetNoticeProps) {
     </Notice>
   );
 }
+
+/** Said above the chain of a certificate whose place was taken: the chain below is still that of the old one. */
+export function SucceededNotice({ chain, hrefOf }: NotYetNoticeProps) {
+  const next = chain.succeededBy;
+  if (!next) return null;
+  return (
+    <Notice role="status" title="This certificate was superseded.">
+      <span className="font-mono text-sm">
+        {next.certificateNo}
+        {next.revisionN > 1 && `, revision ${next.revisionN}`}
+      </span>{' '}
+      stands in its place:{' '}
+      <LinkButton weight="text" to={hrefOf(next.uid)}>
+        open its chain
+      </LinkButton>
+    </Notice>
+  );
+}

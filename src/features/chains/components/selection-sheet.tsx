@@ -87,6 +87,7 @@ function ValueSheet({
                 state={stateOfValue(node.state)}
               >{`${node.state}${node.stateSince ? ` since ${node.stateSince}` : ''}`}</StateMark>,
             ],
+            ['As now known', node.now && <NowKnown key="n" node={node} />],
             ['Scale', node.scaleVersion],
             ['u stated', <StandardU key="us" value={node.uStated} />],
             ['u carried', node.view === 'full' ? <StandardU key="uc" value={node.uCarried} /> : null],
@@ -113,6 +114,22 @@ function ValueSheet({
         </Section>
       </Stack>
     </SideSheet>
+  );
+}
+
+/** What the value is held to be now: moved by what changed above it, or by its own replacement. */
+function NowKnown({ node }: { node: ValueNode }) {
+  const { deviation, because } = node.now!;
+  if (deviation === null) return <>not computable, because {because}</>;
+  return (
+    <Quantity
+      value={deviation}
+      expandedUncertainty={node.expandedU}
+      coverageFactor={node.k}
+      kind="deviation"
+      shownIn="auto"
+      hidesUncertainty
+    />
   );
 }
 
