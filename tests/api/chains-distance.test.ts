@@ -86,6 +86,23 @@ describe('GET /api/chains/:valueUid/distance', () => {
     expect((await ask('institute', root.uid)).reach.classes[0]).toBe('E1');
   });
 
+  it('tells the drift to its holder alone: it speaks of other calibrations of the weight', async () => {
+    const again = await issueValue(app, {
+      issuer: scene.institute,
+      holder: scene.institute,
+      day: '2023-02-10',
+      deviation: '0.000010',
+      expandedU: '0.0002',
+      leansOn: null,
+      standardId: working.standardId,
+    });
+    expect(again.uid).toBeTruthy();
+    expect((await ask('institute', working.uid)).reach.drift).not.toBeNull();
+    const { reach } = await ask('home', working.uid);
+    expect(reach).toMatchObject({ drift: null, expandedUToday: null, until: [] });
+    expect(reach.driftBecause).toContain('holder');
+  });
+
   it('says that no drift is known of a weight calibrated once', async () => {
     const { reach } = await ask('home', homes.uid);
     expect(reach).toMatchObject({ drift: null, expandedUToday: null, until: [] });

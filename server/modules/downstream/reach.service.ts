@@ -5,6 +5,7 @@ import { reachableClasses } from '#shared/engine/conformity/reachable-classes.ts
 import { dayNumber } from '#shared/engine/time/calendar.ts';
 import { today, type Context } from '#server/http/context.ts';
 import type { StoredValue } from '#server/modules/chains/index.ts';
+import type { ValueView } from '#server/policy/value-view.ts';
 import { driftOf } from './drift.service.ts';
 import { expandedUAfter, lastDayWithin, type Ageing } from './reach-until.ts';
 import { shortText } from './short-text.ts';
@@ -20,8 +21,13 @@ type Reach = DistanceResponse['reach'];
  * What a value can still carry as a reference: a weight of the same nominal, weighed against it without any
  * uncertainty of its own, on the day of its calibration and, where its drift is known, on later ones.
  * @param u standard uncertainty of the value, g; null where unknown
+ * @param view how much of the value this person sees
  */
-export async function reachOf(context: Context, focus: StoredValue, u: number | null): Promise<Reach> {
+export async function reachOf(
+  context: Context,
+  focus: StoredValue,
+  { u, view }: { u: number | null; view: ValueView },
+): Promise<Reach> {
   const nothing = { bestExpandedU: null, bestText: null, classes: [], expandedUToday: null, textToday: null };
   if (u === null) {
     return { ...nothing, drift: null, driftBecause: 'Its uncertainty is not known.', until: [] };
@@ -30,7 +36,11 @@ export async function reachOf(context: Context, focus: StoredValue, u: number | 
   const nominal = new Decimal(focus.nominal);
   const classes = reachableClasses(nominal, best * MILLIGRAMS_PER_GRAM);
   const atCalibration = { bestExpandedU: best, bestText: shortText(best, 'up'), classes };
-  const { drift, because } = await driftOf(context, focus);
+  // A drift tells of the weight's other calibrations: a statement of traceability does not.
+  const { drift, because } =
+    view === 'full'
+      ? await driftOf(context, focus)
+      : { drift: null, because: 'Its drift is told to its holder.' };
   if (!drift) {
     return { ...nothing, ...atCalibration, drift: null, driftBecause: because, until: [] };
   }

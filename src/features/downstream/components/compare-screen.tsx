@@ -46,7 +46,7 @@ export function CompareScreen({ one, other, by, measure, onChange }: CompareScre
       {ofOne.data && ofOther.data && (
         <>
           <Section title="In all">
-            <Table caption="Both in all">
+            <Table caption="Both in all" isScrolled>
               <thead>
                 <Heads first="" one={one} other={other} />
               </thead>
@@ -78,7 +78,7 @@ export function CompareScreen({ one, other, by, measure, onChange }: CompareScre
                 choices={GROUPINGS}
               />
             </Toolbar>
-            <Table caption="Both, group by group">
+            <Table caption="Both, group by group" isScrolled>
               <thead>
                 <Heads first={GROUPED_BY[by]} one={one} other={other} />
               </thead>

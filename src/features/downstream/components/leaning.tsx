@@ -2,7 +2,6 @@ import { keepPreviousData, useInfiniteQuery, useQuery } from '@tanstack/react-qu
 import { Section } from '#src/components/layout/page.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
-import { Waiting } from '#src/components/ui/progress.tsx';
 import { allRows } from '../all-rows.ts';
 import { downstreamPage, downstreamQuery, downstreamRowsQuery } from '../api.ts';
 import { leaningHeadline } from '../headlines.ts';
@@ -11,6 +10,7 @@ import { leaningCsv } from '../rows-csv.ts';
 import type { DownstreamSearch } from '../search.ts';
 import { LeaningTable } from './leaning-table.tsx';
 import { SaveAllRows } from './save-all-rows.tsx';
+import { WaitingForGraph } from './waiting-for-graph.tsx';
 
 interface LeaningProps {
   uid: string;
@@ -27,7 +27,8 @@ export function Leaning({ uid, search, onOpen }: LeaningProps) {
     enabled: search.group !== undefined,
   });
   if (groups.error) return <ErrorNotice error={groups.error} onRetry={() => void groups.refetch()} />;
-  if (!groups.data) return <Waiting>Reading who leans on it</Waiting>;
+  if (!groups.data)
+    return <WaitingForGraph because={groups.failureReason}>Reading who leans on it</WaitingForGraph>;
   const { total, question } = groups.data;
   return (
     <Section title={leaningHeadline(total)}>

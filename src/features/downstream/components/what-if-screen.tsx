@@ -124,7 +124,7 @@ function Supposed({
             <Button
               weight="text"
               className="shrink-0"
-              aria-label={`Take change ${at + 1} away`}
+              aria-label={`Take away change ${at + 1}`}
               onClick={() => onChanges(changes.filter((_, place) => place !== at))}
             >
               Take away

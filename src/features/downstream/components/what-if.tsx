@@ -4,7 +4,6 @@ import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
-import { Waiting } from '#src/components/ui/progress.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { allRows } from '../all-rows.ts';
@@ -19,6 +18,7 @@ import type { AskedOfRows } from '../what-if-search.ts';
 import { SaveAllRows } from './save-all-rows.tsx';
 import { columnsOf } from './what-if-columns.tsx';
 import { WhatIfTable } from './what-if-table.tsx';
+import { WaitingForGraph } from './waiting-for-graph.tsx';
 
 interface WhatIfProps {
   changes: WhatIfChange[];
@@ -37,7 +37,7 @@ export function WhatIf({ changes, search, onOpen, onSort }: WhatIfProps) {
   });
   const { decimalMark } = usePreferences();
   if (answer.error) return <ErrorNotice error={answer.error} onRetry={() => void answer.refetch()} />;
-  if (!answer.data) return <Waiting>Working it out</Waiting>;
+  if (!answer.data) return <WaitingForGraph because={answer.failureReason}>Working it out</WaitingForGraph>;
   const { groups, total } = answer.data;
   const { by } = answer.data.question;
   return (

@@ -21,7 +21,7 @@ export function CombinedSection({ together }: { together: TogetherResponse }) {
   const independent = us.every((u) => u !== null) ? Math.hypot(...us.map((u) => u!)) : null;
   return (
     <Section title={isDifference ? 'Sum and difference' : 'Their sum'}>
-      <Table caption="Sum and difference">
+      <Table caption="Sum and difference" isScrolled>
         <thead>
           <tr>
             <Head>All weights</Head>

@@ -37,7 +37,7 @@ export function CorrelationSection({ together }: { together: TogetherResponse })
       note={shown === 'covariance' ? 'µg²' : 'r: 1 fully, 0 not at all'}
       actions={<Switch label="Shown" isLabelHidden value={shown} onChange={setShown} choices={MATRICES} />}
     >
-      <Table caption={shown === 'correlation' ? 'Correlation' : 'Covariance'}>
+      <Table caption={shown === 'correlation' ? 'Correlation' : 'Covariance'} isScrolled>
         <thead>
           <tr>
             <Head>Weight</Head>

@@ -52,7 +52,7 @@ export function PlacedList({ placed, together, onPlaced }: PlacedListProps) {
               />
               <Button
                 weight="text"
-                aria-label={`Take ${name} off`}
+                aria-label={`Take off ${name}`}
                 onClick={() => onPlaced(placed.filter((_, place) => place !== at))}
               >
                 Take off

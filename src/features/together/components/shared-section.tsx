@@ -15,7 +15,7 @@ export function SharedSection({ together }: { together: TogetherResponse }) {
           <p className="text-ink-2">
             What two or more lean on, the oldest first. A disc stands where a weight leans on it.
           </p>
-          <Table caption="What they share">
+          <Table caption="What they share" isScrolled>
             <thead>
               <tr>
                 <Head>Leans on</Head>
