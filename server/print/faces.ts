@@ -8,6 +8,8 @@ import { sfntOf } from './sfnt.ts';
 export interface ShippedFont {
   name: string;
   sfnt: Buffer;
+  /** Its own digits differ in width: in a column they must be asked to be alike. */
+  hasProportionalDigits: boolean;
   /** Whether the font has a sign. */
   has(codePoint: number): boolean;
 }
@@ -65,7 +67,12 @@ function load(file: string): ShippedFont {
   if (known) return known;
   const sfnt = sfntOf(webFont(file));
   const codePoints = codePointsOf(sfnt);
-  const font = { name: file, sfnt, has: (codePoint: number) => codePoints.has(codePoint) };
+  const font = {
+    name: file,
+    sfnt,
+    hasProportionalDigits: file.startsWith(INSTRUMENT),
+    has: (codePoint: number) => codePoints.has(codePoint),
+  };
   loaded.set(file, font);
   return font;
 }

@@ -15,8 +15,8 @@ interface Run {
 
 /** A thin space is a fifth of the size, as browsers set it in fonts that have none. */
 const THIN = 0.2;
-/** Digits of one width, in the faces that have them. */
-const FEATURES: PDFKit.Mixins.OpenTypeFeatures[] = ['tnum', 'lnum'];
+/** Digits of one width; only the sans has others. Shaping with a feature is not remembered, so it is asked where needed. */
+const FEATURES: PDFKit.Mixins.OpenTypeFeatures[] = ['tnum'];
 const HALO_WIDTH = 4;
 
 interface Place {
@@ -58,7 +58,7 @@ function setRun(
   how: { fill: string } | { halo: string },
 ): void {
   use(paper, run.font, run.size);
-  const options = { lineBreak: false, baseline: 'alphabetic', features: FEATURES } as const;
+  const options = { lineBreak: false, baseline: 'alphabetic', ...featuresOf(run) } as const;
   if ('fill' in how) paper.fillColor(how.fill).text(run.text, x, y, options);
   else
     paper
@@ -95,9 +95,15 @@ function runWidth(paper: Paper, font: ShippedFont, text: string): number {
   const width = known.get(key);
   if (width !== undefined) return width;
   use(paper, font, 1000);
-  const measured = paper.widthOfString(text, { features: FEATURES }) / 1000;
+  const measured = paper.widthOfString(text, featuresOf({ font, text })) / 1000;
   known.set(key, measured);
   return measured;
+}
+
+function featuresOf({ font, text }: { font: ShippedFont; text: string }): {
+  features?: PDFKit.Mixins.OpenTypeFeatures[];
+} {
+  return font.hasProportionalDigits && /\d/.test(text) ? { features: FEATURES } : {};
 }
 
 function use(paper: Paper, font: ShippedFont, size: number): void {

@@ -113,9 +113,14 @@ export class Sheet {
       .stroke(PRINT[ink]);
   }
 
-  /** A picture as large as fits, never enlarged. */
+  /** At which scale a picture fits the rest of the page; never enlarged. */
+  scaleOf(picture: Picture): number {
+    return Math.min(1, this.width / picture.width, this.room / picture.height);
+  }
+
+  /** A picture as large as fits. */
   picture(picture: Picture): void {
-    const scale = Math.min(1, this.width / picture.width, this.room / picture.height);
+    const scale = this.scaleOf(picture);
     const x = this.left + (this.width - picture.width * scale) / 2;
     drawPicture(this.paper, picture, { x, y: this.y, scale }, PRINT);
     this.y += picture.height * scale;

@@ -2,17 +2,22 @@ import type { ChainResponse } from '#shared/contracts/chains.ts';
 import type { StatementQuery } from '#shared/contracts/statements.ts';
 import { asDrawn } from '#shared/drawing/as-drawn.ts';
 import { displayList, type DisplayList } from '#shared/drawing/display-list.ts';
+import type { LayoutInput, Placement } from '#shared/drawing/layout-input.ts';
 import { layoutInput } from '#shared/drawing/layout-of.ts';
 import { layoutChain } from '#shared/drawing/layout.ts';
 import { legendOf, type LegendSign } from '#shared/drawing/legend.ts';
 import { pictureOf } from '#shared/drawing/picture.ts';
 import type { Picture } from '#shared/drawing/shapes.ts';
 import { AppError } from '#server/http/app-error.ts';
+import { sha256Of } from './content.ts';
 import { focusOf } from './statement.ts';
 import { askedWords, quantityWords, weightWords } from './words.ts';
 
-/** Beyond this a drawing takes seconds to lay out and nobody reads it on paper. */
-const MOST_PLATES = 700;
+/** Beyond this a drawing takes a second to lay out, and nobody reads it on paper. */
+const MOST_PLATES = 400;
+/** Placements remembered: whoever takes one document of a chain along often takes a second. */
+const MOST_REMEMBERED = 16;
+const placements = new Map<string, Placement>();
 
 /** How each sign of a drawing looks, in words. */
 const LOOKS: Readonly<Record<LegendSign, string>> = {
@@ -44,7 +49,7 @@ export interface DrawnDocument {
 export function pictureOfChain(chain: ChainResponse, query: StatementQuery, isAlone: boolean): DrawnDocument {
   const drawn = asDrawn(chain, query);
   refuseUnlessDrawable(drawn.chain.nodes.length);
-  const placement = layoutChain(layoutInput(drawn.chain, query.draw));
+  const placement = placementOf(layoutInput(drawn.chain, query.draw));
   const list = displayList(drawn.chain, placement, query);
   const legend = legendWords(list);
   const focus = focusOf(chain);
@@ -60,6 +65,17 @@ export function pictureOfChain(chain: ChainResponse, query: StatementQuery, isAl
       : [],
   });
   return { picture, legend };
+}
+
+/** The same chain is laid out once. */
+function placementOf(input: LayoutInput): Placement {
+  const key = sha256Of(JSON.stringify(input));
+  const known = placements.get(key);
+  if (known) return known;
+  const placement = layoutChain(input);
+  if (placements.size >= MOST_REMEMBERED) placements.delete(placements.keys().next().value!);
+  placements.set(key, placement);
+  return placement;
 }
 
 function legendWords(list: DisplayList): string {

@@ -19,6 +19,8 @@ const PROSE = 10.4;
 const SMALL = 8.2;
 /** A drawing smaller than this on an upright page is turned on its side. */
 const LEAST_SCALE = 0.62;
+/** Below this the words of a plate are smaller than print that is read without a glass. */
+const READABLE_SCALE = 0.45;
 
 /** The statement of traceability on paper: in words, as a table, drawn, with its checks and what it does not say. */
 export async function statementPdf(chain: ChainResponse, query: StatementQuery): Promise<Buffer> {
@@ -119,6 +121,11 @@ function setDrawing(sheet: Sheet, { picture, legend }: DrawnDocument): void {
   sheet.addPage(isWide ? 'landscape' : 'portrait');
   sheet.heading('The chain, drawn');
   sheet.paragraph([span(legend, SMALL, 'sans', 'ink-2')], { leading: 11.5, after: 10 });
+  if (sheet.scaleOf(picture) < READABLE_SCALE) {
+    const words =
+      'It is drawn small to fit this page. The register gives the same drawing as a page of its own size.';
+    sheet.paragraph([span(words, SMALL, 'sans', 'ink-2')], { leading: 11.5, after: 10 });
+  }
   sheet.picture(picture);
 }
 

@@ -10,10 +10,10 @@ const SIZE = 8.2;
 const SMALL = 7.4;
 
 const COLUMNS: readonly Column[] = [
-  { head: 'Weight', parts: 22 },
-  { head: 'Certificate', parts: 23 },
+  { head: 'Weight', parts: 20 },
+  { head: 'Certificate', parts: 22 },
   { head: 'Deviation and U', parts: 22 },
-  { head: 'Leaned on, used', parts: 26 },
+  { head: 'Leaned on, used', parts: 28 },
   { head: 'Flow', parts: 9, align: 'right' },
   { head: 'Checks of the link', parts: 18 },
 ];
@@ -77,7 +77,8 @@ function valueCells(step: StatementStep): Cell[] {
         },
         9.4,
       ),
-      [span(`${step.quantity}${step.k === null ? '' : `, k = ${step.k}`}`, SMALL, 'sans', 'ink-2')],
+      [span(step.quantity, SMALL, 'sans', 'ink-2')],
+      [span(step.k === null ? 'U not stated' : `k = ${step.k}`, SMALL, 'sans', 'ink-2')],
     ],
   ];
 }

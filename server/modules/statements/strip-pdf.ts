@@ -83,14 +83,8 @@ function rowOf({ value, link, others }: BranchStep): Cell[] {
         },
         10,
       ),
-      [
-        span(
-          `${value.quantity}, ${value.k === null ? 'U not stated' : `k = ${value.k}`}`,
-          SMALL,
-          'sans',
-          'ink-2',
-        ),
-      ],
+      [span(value.quantity, SMALL, 'sans', 'ink-2')],
+      [span(value.k === null ? 'U not stated' : `k = ${value.k}`, SMALL, 'sans', 'ink-2')],
     ],
     usedCell(link, others),
     [[span(value.share === null ? 'unknown' : shareText(value.share), SIZE, 'serif')]],
