@@ -410,3 +410,58 @@ describe('the queue', () => {
     expect(reply).not.toMatch(/complian/i);
   });
 });
+
+describe('what an audit is found by', () => {
+  it('stands on the desk of its laboratory, and in the list of chains that fail', async () => {
+    const audit = await audited(agent, ofHome);
+    const { audits } = (await agent.get('/api/desk')).body as { audits: { id: string; figures: object }[] };
+    expect(audits).toHaveLength(1);
+    expect(audits[0]).toMatchObject({
+      id: audit.id,
+      laboratory: { id: network.home.id },
+      figures: audit.figures,
+    });
+
+    const failing = await agent.get('/api/chains').query({ failing: '1' });
+    const uids = (failing.body.values as { uid: string }[]).map(({ uid }) => uid);
+    const { findings } = await findingsOf(agent, audit.id, { outcome: 'fails' });
+    const failed = findings
+      .filter(({ severity }) => severity !== 'information')
+      .map(({ value }) => value.uid);
+    const held = [network.reference.uid, network.own.uid];
+    expect(new Set(uids)).toEqual(new Set(held.filter((uid) => failed.includes(uid))));
+    expect(uids).toContain(network.own.uid);
+    const all = await agent.get('/api/chains');
+    expect((all.body.values as { uid: string }[]).map(({ uid }) => uid).sort()).toEqual([...held].sort());
+    const wrong = await agent.get('/api/chains').query({ failing: 'yes' });
+    expect(wrong.status).toBe(400);
+    expect(wrong.body.fields.failing.message).toContain('Expected 1');
+    const stranger = await app.signIn(await makePerson(app, 'metrologist', network.other.id));
+    expect((await stranger.get('/api/chains').query({ failing: '1' })).body.values).toEqual([]);
+    expect((await stranger.get('/api/desk')).body.audits).toEqual([]);
+  });
+
+  it('refuses what it cannot read, each by its field', async () => {
+    const bad = await agent.post('/api/audits').send({ scope: 'country' });
+    expect(bad.status).toBe(400);
+    expect(Object.keys(bad.body.fields as object)).toEqual(['scope']);
+    const more = await agent.post('/api/audits').send({ ...ofHome, valueUid: network.own.uid });
+    expect(more.status).toBe(400);
+    const nowhere = { scope: 'laboratory', laboratoryId: randomUUID() };
+    expect((await agent.post('/api/audits').send(nowhere)).status).toBe(404);
+    expect((await agent.get('/api/audits/nothing')).status).toBe(404);
+    expect((await agent.get(`/api/audits/${randomUUID()}`)).status).toBe(404);
+    const { id } = await audited(agent, ofHome);
+    for (const query of [
+      { outcome: 'holds' },
+      { severity: 'dreadful' },
+      { cursor: 'bm90aGluZw' },
+      { whose: 'mine' },
+    ]) {
+      const reply = await agent.get(`/api/audits/${id}/findings`).query(query);
+      expect([reply.status, Object.keys(reply.body.fields as object)]).toEqual([400, Object.keys(query)]);
+    }
+    expect((await agent.get(`/api/audits/${id}/findings/999999/facts`)).status).toBe(404);
+    expect((await agent.get(`/api/audits/${id}/findings/-1/facts`)).status).toBe(404);
+  });
+});

@@ -41,6 +41,21 @@ export const SCREENS: readonly Screen[] = [
       await page.getByRole('dialog').waitFor();
     },
   },
+  {
+    name: 'chains-failing',
+    path: () => '/chains?failing=1',
+  },
+  { name: 'audits', path: () => '/audits' },
+  {
+    name: 'audit',
+    path: () => '/audits',
+    prepare: async (page) => {
+      await page.getByRole('button', { name: 'Begin the audit' }).click();
+      await page.getByRole('heading', { name: 'Found' }).waitFor({ timeout: 60_000 });
+      await page.getByRole('list', { name: 'Findings by rule' }).getByRole('button').first().click();
+      await page.getByText('Save as CSV').waitFor();
+    },
+  },
   { name: 'downstream', path: ({ valueUid }) => `/chains/${valueUid}/downstream` },
   {
     name: 'downstream-what-if',

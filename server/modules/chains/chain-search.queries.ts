@@ -45,7 +45,7 @@ export async function chainChoices(
      JOIN revision r ON r.id = v.revision_id
      JOIN calibration c ON c.id = r.calibration_id
      JOIN laboratory h ON h.id = v.holder_id
-     WHERE ${laboratoryIds ? 'v.holder_id IN (:laboratoryIds) AND' : ''} REPLACE(s.registry_no, ' ', '') LIKE :beginning AND ${IN_FORCE}
+     WHERE ${laboratoryIds ? `(${whoseOf(isFailing)}) AND` : ''} REPLACE(s.registry_no, ' ', '') LIKE :beginning AND ${IN_FORCE}
        ${isFailing ? `AND v.uid IN (${failingUids(laboratoryIds !== null)})` : ''}
      ORDER BY v.performed_end DESC, v.id DESC LIMIT ${LONGEST_LIST}`,
     {
@@ -58,6 +58,12 @@ export async function chainChoices(
       knownAt: knownAt(day),
     },
   );
+}
+
+/** One's own weights; of what fails, also the results one has issued for others. */
+function whoseOf(isFailing: boolean): string {
+  const held = 'v.holder_id IN (:laboratoryIds)';
+  return isFailing ? `${held} OR v.issuer_id IN (:laboratoryIds)` : held;
 }
 
 /** Values that fail in the newest audit of each laboratory, and for who reads all in the newest of the network. */
