@@ -59,7 +59,7 @@ function Sub({
   const kind = `${nominalText(focus.nominal)}${focus.class ? `, class ${focus.class}` : ''}`;
   return (
     <>
-      {`${kind} · ${focus.holder?.name ?? focus.issuer.name} · certificate ${focus.certificateNo} · `}
+      {`${kind} · ${focus.holder?.name ?? focus.issuer.name} · certificate ${focus.certificateNo} · ${focus.state === 'in force' ? '' : `${focus.state} · `}`}
       <Link to={paths.chain.href(focus.uid, days)} className="text-ink underline underline-offset-3">
         its chain
       </Link>

@@ -1,6 +1,6 @@
 import type supertest from 'supertest';
 import { beforeAll, describe, expect, it } from 'vitest';
-import { readRow } from '#server/db/read.ts';
+import { readRow, readRows } from '#server/db/read.ts';
 import { issueCalibration, reviseCalibration } from '#server/modules/calibrations/index.ts';
 import { assertFact } from '#server/modules/standards/index.ts';
 import {
@@ -285,6 +285,29 @@ describe('POST /api/calibrations/:revisionId/correct', () => {
     // The revision before it is no longer the one that stands.
     const again = await holder.signatory.post(path).send({ ...head, lines });
     expect(again.status).toBe(422);
+  });
+
+  it('lets what U grows by join the covariance of a weighing design', async () => {
+    const [one, two] = [await makeStandard(app, holder.id), await makeStandard(app, holder.id)];
+    const covariance = [
+      [4e-8, 1e-8],
+      [1e-8, 4e-8],
+    ];
+    const lines = [lineOf(one.id, { expandedU: '0.0004' }), lineOf(two.id, { expandedU: '0.0004' })];
+    const input = inputOf(holder.id, '2024-01-10', lines, { group: { covariance } });
+    const issued = await issueCalibration(app.context(), input);
+    const path = `/api/calibrations/${issued.revisionId}/correct`;
+    const grown = [{ valueUid: issued.valueUids[0]!, expandedU: '0.0005' }];
+    const reply = await holder.signatory.post(path).send({ ...head, lines: grown });
+    expect(reply.status, reply.text).toBe(201);
+    const values = await readRows<{ localU: number }>(
+      app.database,
+      'SELECT local_u AS localU FROM assigned_value WHERE revision_id = :revisionId ORDER BY line',
+      { revisionId: reply.body.revisionId },
+    );
+    // u grows from 0.2 mg to 0.25 mg: 6.25 - 4 = 2.25 in units of 1e-8 g2.
+    expect(values[0]!.localU ** 2 / 6.25e-8).toBeCloseTo(1, 9);
+    expect(values[1]!.localU ** 2 / 4e-8).toBeCloseTo(1, 9);
   });
 
   it('is refused without the password, for a value of another certificate, and where nothing is corrected', async () => {

@@ -50,7 +50,13 @@ export async function correctCalibration(
   });
   const issued = await reviseCalibration(
     context,
-    { ...input, ...head, calibrationId: standing.calibrationId, lines: corrected },
+    {
+      ...input,
+      ...head,
+      calibrationId: standing.calibrationId,
+      lines: corrected,
+      group: input.group && correctedGroup(input.group, input.lines, corrected),
+    },
     context.user.accountId,
   );
   const act = await readRow<{ actSeq: number }>(
@@ -132,11 +138,8 @@ function correctedLine(
 }
 
 function addedComponent(line: CalibrationLine, expandedU: string | null): CalibrationLine['components'] {
-  if (line.components.length === 0 || expandedU === null || line.expandedU === null || line.k === null)
-    return [];
-  const variance = (u: string) => new Decimal(u).div(line.k!).pow(2);
-  const added = variance(expandedU).minus(variance(line.expandedU));
-  if (!added.gt(0)) return [];
+  const added = line.components.length === 0 ? null : addedVariance(line, expandedU);
+  if (added === null) return [];
   return [
     {
       name: 'Added by the correction',
@@ -148,6 +151,29 @@ function addedComponent(line: CalibrationLine, expandedU: string | null): Calibr
       estimate: null,
     },
   ];
+}
+
+/** What U grows by is a result's own: it joins the diagonal of a design's covariance. */
+function correctedGroup(
+  group: NonNullable<CalibrationInput['group']>,
+  lines: readonly CalibrationLine[],
+  corrected: readonly CalibrationLine[],
+): CalibrationInput['group'] {
+  const covariance = group.covariance.map((row, i) =>
+    row.map((entry, j) => {
+      const added = i === j ? addedVariance(lines[i]!, corrected[i]!.expandedU) : null;
+      return entry + (added?.toNumber() ?? 0);
+    }),
+  );
+  return { ...group, covariance };
+}
+
+/** By how much u squared grows, g2; null where it does not. */
+function addedVariance(line: CalibrationLine, expandedU: string | null): Decimal | null {
+  if (expandedU === null || line.expandedU === null || line.k === null) return null;
+  const variance = (u: string) => new Decimal(u).div(line.k!).pow(2);
+  const added = variance(expandedU).minus(variance(line.expandedU));
+  return added.gt(0) ? added : null;
 }
 
 function decimalsFor(grams: string, printed: number, unit: CalibrationLine['reportedUnit']): number {

@@ -53,7 +53,7 @@ export function DryRunScreen({ run, view, onView }: DryRunScreenProps) {
         <Notice
           title={`The register has moved on: ${run.actsSince} ${run.actsSince === 1 ? 'act' : 'acts'} since`}
         >
-          Asked as it was known then, the answer is that of {run.savedOn}.
+          Asked as it was known then, it is answered by what was recorded up to the end of {run.savedOn}.
         </Notice>
       )}
       <Toolbar label="What is asked">
