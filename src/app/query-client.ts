@@ -1,8 +1,15 @@
 import { MutationCache, QueryCache, QueryClient } from '@tanstack/react-query';
 import { sessionQuery } from '#src/features/identity/api.ts';
 import { ApiProblem } from '#src/lib/api-problem.ts';
+import { readingProgress } from '#src/lib/register-being-read.ts';
 
-/** The one server cache. Retries only what may mend itself: no answer, or a server that is not ready. */
+/** Between two looks at a server that is reading its register. */
+const READING_DELAY_MS = 700;
+
+/**
+ * The one server cache. Retries only what may mend itself: no answer, a server that is not ready, and one that is
+ * reading its register for as long as it takes.
+ */
 export function makeQueryClient(): QueryClient {
   const client: QueryClient = new QueryClient({
     queryCache: new QueryCache({ onError: (error) => noteSignedOut(client, error) }),
@@ -10,7 +17,9 @@ export function makeQueryClient(): QueryClient {
     defaultOptions: {
       queries: {
         staleTime: 30_000,
-        retry: (failures, error) => failures < 2 && isPassing(error),
+        retry: (failures, error) => readingProgress(error) !== null || (failures < 2 && isPassing(error)),
+        retryDelay: (failures, error) =>
+          readingProgress(error) ? READING_DELAY_MS : Math.min(1000 * 2 ** failures, 30_000),
       },
       mutations: { retry: false },
     },

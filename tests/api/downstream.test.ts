@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 import { describe, expect, it } from 'vitest';
 import type { DownstreamResponse } from '#shared/contracts/downstream.ts';
 import { withdrawCalibration } from '#server/modules/calibrations/index.ts';
+import { isPartSmall } from '#server/modules/downstream/graph.queries.ts';
 import { graphFromDatabase, memoryOf } from '#server/modules/downstream/index.ts';
 import { issueValue, makeDownstreamScene, type DownstreamScene } from '#tests/support/downstream-scene.ts';
 import { testApp } from '#tests/support/test-app.ts';
@@ -206,6 +207,12 @@ describe('the graph in memory', () => {
       expect(told(loaded, loaded.nodeOf(part.id[node]!))).toEqual(told(part, node));
     }
     expect(part.deviation[part.nodeOf(scene.homes.id)]).toBe(0.000133);
+  });
+
+  it('leaves to the database only what is small', async () => {
+    expect(await isPartSmall(app.database, [scene.root.id], 6)).toBe(true);
+    expect(await isPartSmall(app.database, [scene.root.id], 5)).toBe(false);
+    expect(await isPartSmall(app.database, [], 0)).toBe(true);
   });
 
   it('is caught up with the newest act before each question', async () => {

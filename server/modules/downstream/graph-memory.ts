@@ -1,8 +1,10 @@
 import type { Sequelize } from 'sequelize';
+import { AppError } from '#server/http/app-error.ts';
 import { GraphArrays } from './graph-arrays.ts';
 import {
   anyValueOf,
   endsSince,
+  isPartSmall,
   linkPage,
   newestAct,
   partBelow,
@@ -12,7 +14,15 @@ import {
 } from './graph.queries.ts';
 
 /** Rows read at a time: a page is thousands of rows, never the register. */
-const PAGE = 10_000;
+const PAGE = 4_000;
+/** Values that a question may take from the database while the memory is being loaded: more would fill the memory twice. */
+const MOST_BY_QUERY = 20_000;
+
+/** Values and links read so far, and how many there are. */
+export interface LoadProgress {
+  done: number;
+  total: number;
+}
 
 /**
  * The whole register's graph in memory, loaded page by page in the background when the first question comes, and
@@ -24,9 +34,15 @@ export class GraphMemory {
   #seq = 0;
   #loading: Promise<void> | null = null;
   #catchingUp: Promise<void> | null = null;
+  #progress: LoadProgress = { done: 0, total: 0 };
 
   constructor(database: Sequelize) {
     this.#database = database;
+  }
+
+  /** How far the loading is. */
+  get progress(): LoadProgress {
+    return this.#progress;
   }
 
   /** The graph of everything recorded by now, where it is loaded; otherwise null, and loading begins. */
@@ -53,13 +69,16 @@ export class GraphMemory {
     const { seq, values, links, lastId } = await registerSize(this.#database);
     const graph = new GraphArrays();
     graph.reserve(values, links);
+    const note = () => (this.#progress = { done: graph.valueCount + graph.linkCount, total: values + links });
     for (let after = 0; after >= 0;) {
       const page = await valuePage(this.#database, seq, after, PAGE);
       for (const row of page) graph.addValue(row);
+      note();
       after = page.length < PAGE ? -1 : page.at(-1)!.id;
     }
     for (let from = 1; from <= lastId; from += PAGE) {
       for (const row of await linkPage(this.#database, from, from + PAGE - 1)) graph.addLink(row);
+      note();
     }
     for (const row of await endsSince(this.#database, 0, seq)) graph.addEnd(row);
     graph.forgetStandardNames();
@@ -102,9 +121,20 @@ export function memoryOf(database: Sequelize): GraphMemory {
   return memory;
 }
 
-/** A graph that holds these values and everything below them: the memory, or meanwhile what the database gives. */
+/**
+ * A graph that holds these values and everything below them: the memory, or meanwhile what the database gives.
+ * @throws AppError `unavailable`, with how far the loading is, for what only the memory can answer
+ */
 export async function graphBelow(database: Sequelize, ids: readonly number[]): Promise<GraphArrays> {
-  return (await memoryOf(database).current()) ?? (await graphFromDatabase(database, ids));
+  const memory = memoryOf(database);
+  const graph = await memory.current();
+  if (graph) return graph;
+  if (await isPartSmall(database, ids, MOST_BY_QUERY)) return graphFromDatabase(database, ids);
+  throw new AppError(
+    'unavailable',
+    'The register is being read after a start. What so many values lean on can be told when it is: in a moment.',
+    { members: { progress: memory.progress }, isReportable: false },
+  );
 }
 
 /** These values and everything below them, by a recursive query. */

@@ -118,6 +118,29 @@ export async function anyValueOf(
   );
 }
 
+/**
+ * Whether no more than `most` values are these or below them. They are followed level by level, so that a wide part is
+ * given up early; a recursive query would walk it to its end first.
+ */
+export async function isPartSmall(
+  database: Sequelize,
+  ids: readonly number[],
+  most: number,
+): Promise<boolean> {
+  const met = new Set<number>(ids);
+  let level = [...met];
+  while (level.length > 0 && met.size <= most) {
+    const rows = await readRows<{ id: number }>(
+      database,
+      `SELECT DISTINCT child_id AS id FROM value_link WHERE parent_id IN (:level) AND role = 'reference' LIMIT ${most + 1}`,
+      { level },
+    );
+    level = rows.map((row) => row.id).filter((id) => !met.has(id));
+    for (const id of level) met.add(id);
+  }
+  return met.size <= most;
+}
+
 /** Values and everything below them, read from the database alone. */
 export async function partBelow(
   database: Sequelize,

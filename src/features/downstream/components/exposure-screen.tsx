@@ -5,7 +5,7 @@ import { Page, Section } from '#src/components/layout/page.tsx';
 import { DayField } from '#src/components/ui/day-field.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
-import { Waiting } from '#src/components/ui/progress.tsx';
+import { Notice } from '#src/components/ui/notice.tsx';
 import { Switch } from '#src/components/ui/switch.tsx';
 import { allRows } from '../all-rows.ts';
 import { exposurePage, exposureQuery, exposureRowsQuery } from '../api.ts';
@@ -16,6 +16,7 @@ import { openedFrom } from '../opened-from.ts';
 import { leaningCsv } from '../rows-csv.ts';
 import { LeaningTable } from './leaning-table.tsx';
 import { SaveAllRows } from './save-all-rows.tsx';
+import { WaitingForGraph } from './waiting-for-graph.tsx';
 
 interface ExposureScreenProps {
   standardId: string;
@@ -40,7 +41,11 @@ export function ExposureScreen({ standardId, registryNo, sub, search, onChange }
           choices={GROUPINGS}
         />
       </Toolbar>
-      {lastGood && firstBad ? (
+      {lastGood && firstBad && lastGood > firstBad ? (
+        <Notice tone="caution" role="status" title="The last good day lies after the first bad one">
+          It was good on {lastGood} and bad on {firstBad} already: change one of the two days.
+        </Notice>
+      ) : lastGood && firstBad ? (
         <Exposed {...{ standardId, search, lastGood, firstBad }} onOpen={(group) => onChange({ group })} />
       ) : (
         <EmptyState>
@@ -68,7 +73,8 @@ function Exposed({ standardId, search: { by, group }, lastGood, firstBad, onOpen
     enabled: group !== undefined && !answer.error,
   });
   if (answer.error) return <ErrorNotice error={answer.error} onRetry={() => void answer.refetch()} />;
-  if (!answer.data) return <Waiting>Reading what leaned on it</Waiting>;
+  if (!answer.data)
+    return <WaitingForGraph because={answer.failureReason}>Reading what leaned on it</WaitingForGraph>;
   const { total, groups } = answer.data;
   return (
     <Section title={total.count === 0 ? 'Nothing leaned on it' : exposedHeadline(total)}>
