@@ -1,6 +1,5 @@
 import { Decimal } from '#shared/decimal.ts';
 import type { WeightClass } from '#shared/contracts/common.ts';
-import { formatQuantity } from '#shared/engine/quantity/format-quantity.ts';
 import type { ValueFacts } from './facts.ts';
 
 /** The class a weight is judged by: the one its certificate states, else the one claimed for it; null: neither. */
@@ -16,7 +15,6 @@ export function isArtefact({ weight }: Pick<ValueFacts, 'weight'>): boolean {
 /** A nominal value for reading: "1 kg", "200 g", "5 mg". */
 export function nominalText(nominal: string): string {
   const grams = new Decimal(nominal);
-  const unit = grams.gte(1000) ? 'kg' : grams.gte(1) ? 'g' : 'mg';
-  const value = grams.times({ kg: '0.001', g: '1', mg: '1000' }[unit]);
-  return formatQuantity({ value, unit, decimals: value.decimalPlaces(), showPlus: false }).text;
+  if (grams.gte(1000)) return `${grams.div(1000).toFixed()}\u2009kg`;
+  return grams.gte(1) ? `${grams.toFixed()}\u2009g` : `${grams.times(1000).toFixed()}\u2009mg`;
 }
