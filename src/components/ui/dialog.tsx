@@ -37,10 +37,21 @@ interface SideSheetProps {
   onClose: () => void;
   /** @default 'normal' */
   width?: 'normal' | 'wide';
+  /** Below 1600 px it opens at the left: where the table that it was opened from fills the right half. */
+  isLeftWhereNarrow?: boolean;
 }
 
+const LEFT_WHERE_NARROW =
+  'max-[100rem]:mr-auto max-[100rem]:ml-0 max-[100rem]:border-r max-[100rem]:border-l-0';
+
 /** One thing of a list, opened at the right while the list stays in sight. */
-export function SideSheet({ title, children, onClose, width = 'normal' }: SideSheetProps) {
+export function SideSheet({
+  title,
+  children,
+  onClose,
+  width = 'normal',
+  isLeftWhereNarrow = false,
+}: SideSheetProps) {
   const titleId = useId();
   const ref = useModal(onClose);
   const size = width === 'wide' ? 'w-[min(52rem,100vw)]' : 'w-[min(30rem,100vw)]';
@@ -48,7 +59,7 @@ export function SideSheet({ title, children, onClose, width = 'normal' }: SideSh
     <dialog
       ref={ref}
       aria-labelledby={titleId}
-      className={`m-0 ml-auto h-dvh max-h-none max-w-none overflow-auto border-l border-ink bg-raised p-0 [--table-ground:var(--raised)] backdrop:bg-transparent ${size}`}
+      className={`m-0 ml-auto h-dvh max-h-none max-w-none overflow-auto border-l border-ink bg-raised p-0 [--table-ground:var(--raised)] backdrop:bg-transparent ${size} ${isLeftWhereNarrow ? LEFT_WHERE_NARROW : ''}`}
     >
       <div className="flex min-h-full flex-col gap-4 p-5">
         <div className="flex items-baseline justify-between gap-4">

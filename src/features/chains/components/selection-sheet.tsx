@@ -48,7 +48,7 @@ function ValueSheet({
     (check) => check.subject.type === 'value' && check.subject.uid === node.uid,
   );
   return (
-    <SideSheet title={node.registryNo} onClose={onClose}>
+    <SideSheet isLeftWhereNarrow title={node.registryNo} onClose={onClose}>
       <Stack gap="loose">
         <p className="text-lg">
           <Quantity
@@ -152,7 +152,7 @@ function LinkSheet({
     (check) => check.subject.type === 'value' && check.subject.uid === link.childUid,
   );
   return (
-    <SideSheet title={`${names.get(link.parentUid)} → ${names.get(link.childUid)}`} onClose={onClose}>
+    <SideSheet isLeftWhereNarrow title={`${names.get(link.parentUid)} → ${names.get(link.childUid)}`} onClose={onClose}>
       <Stack gap="loose">
         <Facts
           facts={[
@@ -187,7 +187,7 @@ function LinkSheet({
 function SourceSheet({ node, onClose }: { node: Extract<Node, { type: 'source' }>; onClose: () => void }) {
   const { decimalMark } = usePreferences();
   return (
-    <SideSheet title={node.name} onClose={onClose}>
+    <SideSheet isLeftWhereNarrow title={node.name} onClose={onClose}>
       <Facts
         facts={[
           ['Kind', node.kind],
