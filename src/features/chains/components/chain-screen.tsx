@@ -9,7 +9,6 @@ import { Coverage, Quantity } from '#src/components/ui/quantity.tsx';
 import { Decimal, decimalText } from '#shared/decimal.ts';
 import { nominalText } from '#shared/numbers/nominal.ts';
 import { CompareWith } from '../changes/compare-with.tsx';
-import { LifeLine } from '../life/life-line.tsx';
 import { isCompared, type ChainQuestion } from '../question.ts';
 import { BothChains } from './both-chains.tsx';
 import { BothKinds } from './both-kinds.tsx';
@@ -25,6 +24,9 @@ import { Verdict } from './verdict.tsx';
 const ChainGraph = lazy(() =>
   import('../graph/chain-graph.tsx').then((module) => ({ default: module.ChainGraph })),
 );
+
+/** The line of the weight's life comes with the drawing; its place is kept meanwhile. */
+const LifeLine = lazy(() => import('../life/life-line.tsx').then((module) => ({ default: module.LifeLine })));
 
 /** Two answers laid over each other: fetched when somebody compares. */
 const Comparison = lazy(() =>
@@ -81,11 +83,15 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
       <OtherRules asked={question.rules} chain={chain} onDrop={() => onChange({ rules: undefined }, true)} />
       <QuestionBar question={question} answered={chain.question} onChange={onChange} />
       <Stack gap="tight">
-        <LifeLine
-          valueUid={chain.focusUid}
-          answered={chain.question}
-          onStep={(change) => onChange(change, true)}
-        />
+        <div className="min-h-26 max-sm:min-h-38">
+          <Suspense>
+            <LifeLine
+              valueUid={chain.focusUid}
+              answered={chain.question}
+              onStep={(change) => onChange(change, true)}
+            />
+          </Suspense>
+        </div>
         {comparing ? (
           <Suspense fallback={<Waiting>Fetching the comparison</Waiting>}>
             <Comparison chain={chain} question={question} onChange={onChange} onMarks={setMarks} />

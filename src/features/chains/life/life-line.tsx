@@ -21,7 +21,7 @@ interface LifeLineProps {
 export function LifeLine({ valueUid, answered, onStep }: LifeLineProps) {
   const { data: life } = useQuery(chainLifeQuery(valueUid));
   return (
-    <section aria-label="The weight’s life" className="min-h-26 text-sm max-sm:min-h-38">
+    <section aria-label="The weight’s life" className="text-sm">
       {life && <Clocks life={life} answered={answered} onStep={onStep} />}
     </section>
   );
