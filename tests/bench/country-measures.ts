@@ -88,15 +88,18 @@ export async function randomValues(database: Sequelize, count: number, seed: num
   return rows.map((row) => row.uid);
 }
 
-/** The laboratory whose number of values held is nearest to a number, with it. */
+/** The laboratory whose number of values, held or issued, is nearest to a number, with it. */
 export async function laboratoryWith(
   database: Sequelize,
   values: number,
 ): Promise<{ id: string; code: string; values: number }> {
   const row = await readRow<{ id: string; code: string; values: number }>(
     database,
-    `SELECT l.id, l.code, COUNT(*) AS \`values\` FROM assigned_value v JOIN laboratory l ON l.id = v.holder_id
-     GROUP BY l.id, l.code ORDER BY ABS(COUNT(*) - :values) LIMIT 1`,
+    `SELECT l.id, l.code, CAST(SUM(x.n) AS SIGNED) AS \`values\` FROM laboratory l JOIN (
+       SELECT holder_id AS id, COUNT(*) AS n FROM assigned_value GROUP BY holder_id
+       UNION ALL SELECT issuer_id, COUNT(*) FROM assigned_value WHERE holder_id <> issuer_id GROUP BY issuer_id
+     ) x ON x.id = l.id
+     GROUP BY l.id, l.code ORDER BY ABS(SUM(x.n) - :values) LIMIT 1`,
     { values },
   );
   return row!;

@@ -56,7 +56,9 @@ async function benchSize(size: number): Promise<void> {
     console.log(`server answers after ${server.startedIn.toFixed(0)} ms`);
     const cold = await ask(`/api/chains/${uids[0]}`);
     console.log(`first chain after the start, the graph still loading: ${cold.milliseconds.toFixed(0)} ms`);
-    console.log(`graph loaded after ${((await untilLoaded(request)) / 1000).toFixed(1)} s more`);
+    console.log(
+      `graph loaded after ${((await untilLoaded(server.baseUrl, cookie, country.rootUid)) / 1000).toFixed(1)} s more`,
+    );
     memoryNow('with the graph loaded');
     console.log(ROUND_HEAD);
     console.log(roundInWords('chain, for the first time', await chainRound(ask, uids)));
@@ -81,6 +83,14 @@ async function benchSize(size: number): Promise<void> {
       console.log(timesInWords(below));
     }
     memoryNow('after the wide questions');
+    const audited = await timed(
+      `audit of ${laboratory.code}, with ${laboratory.values} values held or issued`,
+      1,
+      () => audit(request, laboratory.id),
+      (found) => found,
+    );
+    console.log(timesInWords(audited));
+    memoryNow('after the audit');
     for (const times of await lists(request, '')) console.log(timesInWords(times));
     const own = await demoSession(server.baseUrl, `metrologist@${laboratory.code.toLowerCase()}.example`);
     const asOwn = requester(server.baseUrl, own.cookie);
@@ -111,17 +121,43 @@ async function fill(size: number): Promise<Awaited<ReturnType<typeof seedCountry
   return seedCountry({ url: adminUrl, valueCount: size, say: (line) => console.log(line) });
 }
 
-/** Milliseconds until the whole graph is in memory. */
-async function untilLoaded(request: Request): Promise<number> {
+/** Milliseconds until the root's descendants are told: until the whole graph is in memory, where it is large. */
+async function untilLoaded(baseUrl: string, cookie: string, rootUid: string): Promise<number> {
   const begin = performance.now();
-  while (!isLoaded(await request('/api/health/session'))) {
+  let reply = await fetch(`${baseUrl}/api/downstream/${rootUid}`, { headers: { cookie } });
+  while (reply.status === 503) {
+    const { progress } = (await reply.json()) as { progress: { done: number; total: number } };
+    if (isFirstOfItsQuarter(progress))
+      console.log(`  read ${progress.done} of ${progress.total} values and links`);
     await new Promise((resolve) => setTimeout(resolve, BETWEEN_LOOKS_MS));
+    reply = await fetch(`${baseUrl}/api/downstream/${rootUid}`, { headers: { cookie } });
   }
+  if (!reply.ok) throw new Error(`The root's descendants gave ${reply.status}: ${await reply.text()}`);
   return performance.now() - begin;
 }
 
-function isLoaded({ reply }: { reply: unknown }): boolean {
-  return (reply as { graph?: string }).graph !== 'loading';
+let quarter = 0;
+function isFirstOfItsQuarter({ done, total }: { done: number; total: number }): boolean {
+  const now = Math.floor((4 * done) / Math.max(1, total));
+  const isFirst = now !== quarter;
+  quarter = now;
+  return isFirst;
+}
+
+/** Audits a laboratory and waits for the end of the job. */
+async function audit(request: Request, laboratoryId: string): Promise<string> {
+  const asked = await request('/api/audits', { scope: 'laboratory', laboratoryId });
+  const { id } = asked.reply as { id: string };
+  for (;;) {
+    const { reply } = await request(`/api/audits/${id}`);
+    const { state, run } = reply as {
+      state: string;
+      run?: { chains: number; values: number; links: number };
+    };
+    if (state === 'done') return run ? `${run.chains} chains, ${run.values} values, ${run.links} links` : '';
+    if (state === 'failed' || state === 'stopped') throw new Error(`The audit ${state}.`);
+    await new Promise((resolve) => setTimeout(resolve, BETWEEN_LOOKS_MS));
+  }
 }
 
 interface Uids {
