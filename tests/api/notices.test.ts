@@ -335,6 +335,35 @@ describe('a notice in the chain', () => {
     });
   });
 
+  it('fixes on the link what was used by notice, and infers the local part with its u', async () => {
+    const own = await ownScene();
+    await makeNotice(app, own.institute.id, scale.id, { terms: [termOf('-0.00002', 0.00003)] });
+    const used = await issueValue(app, {
+      issuer: own.home,
+      holder: own.home,
+      day: '2025-03-01',
+      deviation: '0.0001',
+      expandedU: '0.0004',
+      leansOn: own.homes.uid,
+      usedAs: 'by notice',
+    });
+    const link = await readRow<Record<string, string>>(
+      app.database,
+      'SELECT used_deviation AS deviation, used_expanded_u AS expandedU, used_k AS k FROM value_link WHERE child_id = :id',
+      { id: used.id },
+    );
+    // Home's reference: 133 ug, u = 150 ug.
+    expect(Number(link!.deviation)).toBeCloseTo(0.000113, 12);
+    expect(Number(link!.expandedU)).toBeCloseTo(2 * Math.hypot(0.00015, 0.00003), 11);
+    expect(Number(link!.k)).toBe(2);
+    const chain = await chainAt(used.id);
+    // Its U is what its chain gives, the notice counted once.
+    expect(2 * chain.numbers.propagation.standardUncertainty!).toBeCloseTo(0.0004, 9);
+    expect(
+      chain.judgement.checks.filter(({ rule, outcome }) => rule === 'B-21' && outcome === 'fails'),
+    ).toEqual([]);
+  });
+
   it('is missed once: what leans on the result that left it out is not asked again', async () => {
     const own = await ownScene();
     await makeNotice(app, own.institute.id, scale.id, { terms: [termOf('-0.0002')] });

@@ -7,6 +7,7 @@ import { AppError } from '#server/http/app-error.ts';
 import { newId, today, type Context } from '#server/http/context.ts';
 import { validate } from '#server/http/validate.ts';
 import { calibrationModel } from './calibrations.model.ts';
+import { completeNotices } from './complete-notices.ts';
 import { completeSources } from './complete-sources.ts';
 import { issueFacts } from './issue-facts.queries.ts';
 import { issueProblems, refuseProblems } from './issue-rules.ts';
@@ -49,7 +50,7 @@ export async function writeCalibration(
 ): Promise<{ issued: IssuedCalibration; after: Record<string, unknown> }> {
   await refuseKnownCertificate(context, parsed);
   const facts = await issueFacts(context.database, parsed, today(context));
-  const input = completeSources(parsed, facts);
+  const input = await completeNotices(context, completeSources(parsed, facts), facts);
   refuseProblems(issueProblems(input, facts));
   const calibrationId = newId(context);
   const { issuerId, certificateNo, registeredById } = input;

@@ -7,6 +7,7 @@ import { notFound } from '#server/http/app-error.ts';
 import { today, type Context } from '#server/http/context.ts';
 import { validate } from '#server/http/validate.ts';
 import { ancestorNetwork } from './ancestor-network.queries.ts';
+import { completeNotices } from './complete-notices.ts';
 import { completeSources } from './complete-sources.ts';
 import { valueEndModel } from './graph.model.ts';
 import type { IssueFacts } from './issue-facts.ts';
@@ -43,7 +44,7 @@ export async function reviseCalibration(
     const previous = await latestRevision(context, calibrationId);
     const replaced = await replacedLines(context, previous.revisionId);
     const facts = await issueFacts(context.database, parsed, today(context));
-    const input = completeSources(parsed, facts);
+    const input = await completeNotices(context, completeSources(parsed, facts), facts);
     const { matches, problems } = matchLines(replaced, input.lines);
     refuseProblems([
       ...identityProblems(input, previous),

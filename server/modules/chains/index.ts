@@ -2,6 +2,7 @@ export { chainNumbers } from './chain-numbers.ts';
 export { chainBatch } from './chain-batch.ts';
 export { chainOf } from './chain.service.ts';
 export { presentChain } from './chain.presenter.ts';
+export { correctedByNotices, type CorrectedValue } from './corrected-by-notices.ts';
 export { closureOn, entriesOf, noticeShifts, withNotices } from './noticed-closure.ts';
 export { recordedNotices } from './notices.queries.ts';
 export { ChainStore, type Closure } from './chain-store.ts';
