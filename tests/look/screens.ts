@@ -17,6 +17,19 @@ const drawn = async (page: Page) => {
   await page.locator('.react-flow__edge').first().waitFor({ state: 'attached' });
 };
 
+/** Keeps a dry run from its question, and opens it. */
+const keptDryRun = async (page: Page) => {
+  await page.getByRole('link', { name: 'A new dry run' }).click();
+  await page.getByRole('combobox', { name: 'Value' }).fill('PA 0300-01');
+  await page.getByRole('option').first().click();
+  await page.getByLabel('Shift, with its unit').fill('0.2 mg');
+  await page.getByRole('button', { name: 'Add this change' }).click();
+  await page.getByLabel('Name', { exact: true }).fill('PA 0300-01, heavier by 0.2 mg');
+  await page.getByRole('button', { name: 'Keep it' }).click();
+  await page.getByRole('link', { name: 'PA 0300-01, heavier by 0.2 mg' }).click();
+  await page.getByRole('heading', { name: 'Remarks' }).waitFor();
+};
+
 /** Every screen of the product. */
 export const SCREENS: readonly Screen[] = [
   { name: 'sign-in', path: () => '/sign-in', isPublic: true },
@@ -39,6 +52,16 @@ export const SCREENS: readonly Screen[] = [
     prepare: async (page) => {
       await drawn(page);
       await page.getByRole('dialog').waitFor();
+    },
+  },
+  {
+    name: 'chain-compared',
+    path: ({ valueUid }) =>
+      `/chains/${valueUid}?as=now+known&rules=2001-01-01.1&thenDay=2020-01-01&thenKnown=2020-01-01&thenAs=certified`,
+    prepare: async (page) => {
+      await drawn(page);
+      await page.getByRole('slider', { name: 'As known on' }).waitFor();
+      await page.getByRole('button', { name: 'End the comparison' }).waitFor();
     },
   },
   {
@@ -75,6 +98,7 @@ export const SCREENS: readonly Screen[] = [
     prepare: (page) => page.getByRole('button', { name: 'Keep it' }).waitFor(),
   },
   { name: 'dry-runs', path: () => '/chains/dry-runs' },
+  { name: 'dry-run', path: () => '/chains/dry-runs', prepare: keptDryRun },
   { name: 'together-none', path: () => '/chains/together' },
   { name: 'together', path: ({ valueUid }) => `/chains/together?values=${valueUid}` },
   {
