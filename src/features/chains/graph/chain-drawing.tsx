@@ -1,4 +1,4 @@
-import { useState, type KeyboardEvent } from 'react';
+import { useRef, useState, type KeyboardEvent } from 'react';
 import ReactFlow, {
   Controls,
   type EdgeTypes,
@@ -10,12 +10,14 @@ import 'reactflow/dist/style.css';
 import './chain-graph.css';
 import type { DisplayList, Plate } from '#shared/drawing/display-list.ts';
 import { BandNode } from './band-node.tsx';
+import { DetailLevel, DetailLevelContext } from './detail-level.ts';
 import { DetailCard } from './detail-card.tsx';
 import type { FrameParts } from './frame.tsx';
 import { MapOfDrawing } from './map-of-drawing.tsx';
 import { PlateNode } from './plate-node.tsx';
 import { RibbonEdge } from './ribbon-edge.tsx';
 import { useDetail } from './use-detail.ts';
+import { useMotion } from './use-motion.ts';
 import { useElements } from './use-elements.ts';
 import { bringIntoSight } from './view-of.ts';
 import { plateFrom } from './walk-plates.ts';
@@ -41,6 +43,9 @@ interface ChainDrawingProps {
 export function ChainDrawing({ list, at, nameOf, frame, onSelect, onOpen }: ChainDrawingProps) {
   const [instance, setInstance] = useState<ReactFlowInstance | null>(null);
   const [walked, setWalked] = useState<string | null>(null);
+  const [level] = useState(() => new DetailLevel());
+  const box = useRef<HTMLDivElement>(null);
+  const motion = useMotion(box);
   const detail = useDetail();
   const { nodes, edges } = useElements(list, at, walked);
   const plateOf = (id: string) => list.plates.find((plate) => plate.id === id);
@@ -68,54 +73,64 @@ export function ChainDrawing({ list, at, nameOf, frame, onSelect, onOpen }: Chai
     detail.show({ plate });
   };
   return (
-    <div className="contents" onKeyDown={walk} onBlur={detail.leave}>
-      <ReactFlow
-        nodes={nodes}
-        edges={edges}
-        nodeTypes={nodeTypes}
-        edgeTypes={edgeTypes}
-        onNodeClick={(_event, node) => press(plateOf(node.id))}
-        onEdgeClick={(_event, edge) => onSelect(edge.data.ribbon.link.of[0])}
-        onNodeMouseEnter={(_event, node: Node) => {
-          const plate = plateOf(node.id);
-          if (plate) detail.show({ plate });
-        }}
-        onNodeMouseLeave={detail.leave}
-        onEdgeMouseEnter={(_event, edge) => detail.show({ ribbon: edge.data.ribbon })}
-        onEdgeMouseLeave={detail.leave}
-        onMoveStart={detail.hide}
-        nodesDraggable={false}
-        nodesConnectable={false}
-        nodesFocusable={false}
-        edgesUpdatable={false}
-        edgesFocusable={false}
-        elementsSelectable={false}
-        deleteKeyCode={null}
-        onInit={(ready) => {
-          setInstance(ready);
-          frame.show(ready);
-        }}
-        onlyRenderVisibleElements={list.plates.length > MOST_BUILT}
-        minZoom={0.05}
-        maxZoom={2}
-        preventScrolling={false}
-        zoomOnScroll={false}
-        proOptions={{ hideAttribution: true }}
-        aria-label="The chain, drawn. The table of links holds the same facts."
-      >
-        <Controls showInteractive={false} position="top-right" fitViewOptions={WHOLE} />
-        {!frame.isWhole && <MapOfDrawing />}
-      </ReactFlow>
-      {detail.pointed && instance && (
-        <DetailCard
-          pointed={detail.pointed}
-          nameOf={nameOf}
-          view={instance.getViewport()}
-          box={frame}
-          onEnter={detail.hold}
-          onLeave={detail.leave}
-        />
-      )}
-    </div>
+    <DetailLevelContext value={level}>
+      <div ref={box} className="contents" onKeyDown={walk} onBlur={detail.leave}>
+        <ReactFlow
+          nodes={nodes}
+          edges={edges}
+          nodeTypes={nodeTypes}
+          edgeTypes={edgeTypes}
+          onNodeClick={(_event, node) => press(plateOf(node.id))}
+          onEdgeClick={(_event, edge) => onSelect(edge.data.ribbon.link.of[0])}
+          onNodeMouseEnter={(_event, node: Node) => {
+            const plate = plateOf(node.id);
+            if (plate) detail.show({ plate });
+          }}
+          onNodeMouseLeave={detail.leave}
+          onEdgeMouseEnter={(_event, edge) => detail.show({ ribbon: edge.data.ribbon })}
+          onEdgeMouseLeave={detail.leave}
+          onMoveStart={() => {
+            detail.hide();
+            motion.start();
+          }}
+          onMove={(_event, view) => {
+            level.follow(view.zoom);
+            motion.follow(view);
+          }}
+          onMoveEnd={motion.end}
+          nodesDraggable={false}
+          nodesConnectable={false}
+          nodesFocusable={false}
+          edgesUpdatable={false}
+          edgesFocusable={false}
+          elementsSelectable={false}
+          deleteKeyCode={null}
+          onInit={(ready) => {
+            setInstance(ready);
+            frame.show(ready);
+          }}
+          onlyRenderVisibleElements={list.plates.length > MOST_BUILT}
+          minZoom={0.05}
+          maxZoom={2}
+          preventScrolling={false}
+          zoomOnScroll={false}
+          proOptions={{ hideAttribution: true }}
+          aria-label="The chain, drawn. The table of links holds the same facts."
+        >
+          <Controls showInteractive={false} position="top-right" fitViewOptions={WHOLE} />
+          {!frame.isWhole && instance && <MapOfDrawing list={list} frame={frame} instance={instance} />}
+        </ReactFlow>
+        {detail.pointed && instance && (
+          <DetailCard
+            pointed={detail.pointed}
+            nameOf={nameOf}
+            view={instance.getViewport()}
+            box={frame}
+            onEnter={detail.hold}
+            onLeave={detail.leave}
+          />
+        )}
+      </div>
+    </DetailLevelContext>
   );
 }

@@ -20,6 +20,7 @@ export function nodesOf(list: DisplayList, standing: Standing): Node[] {
     id: BAND_ID,
     type: 'band',
     position: { x: list.band.x, y: 0 },
+    style: placedAt(list.band.x, 0),
     data: list.band,
     selectable: false,
   };
@@ -33,8 +34,14 @@ function nodeOf(plate: Plate, { at, tabStop, takesFocus }: Standing): Node<Plate
     id: plate.id,
     type: 'plate',
     position: { x: plate.x, y: plate.y },
+    style: placedAt(plate.x, plate.y),
     data: { plate, isSelected, isTabStop, takesFocus: isTabStop && takesFocus },
   };
+}
+
+/** Places an element without a transform of its own: hundreds of those would each be a layer to sort in every frame. */
+function placedAt(left: number, top: number) {
+  return { left, top, transform: 'none' };
 }
 
 /** A group is chosen with any value or link inside it. */

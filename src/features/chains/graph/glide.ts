@@ -30,11 +30,7 @@ export function glide(box: HTMLElement, before: Shown, after: Shown): void {
     else {
       const start = placed(from);
       if (start.x === to.x && start.y === to.y && scale === 1) continue;
-      move(
-        element,
-        `translate(${start.x}px, ${start.y}px) scale(${scale})`,
-        `translate(${to.x}px, ${to.y}px)`,
-      );
+      move(element, `translate(${start.x - to.x}px, ${start.y - to.y}px) scale(${scale})`, 'none');
     }
   }
   const ribbonsAfter = new Map(after.list.ribbons.map((ribbon) => [ribbon.id, ribbon]));

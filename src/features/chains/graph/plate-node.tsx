@@ -1,9 +1,10 @@
 import { memo, useEffect, useMemo, useRef } from 'react';
-import { Handle, Position, useStore, type NodeProps } from 'reactflow';
+import { Handle, Position, type NodeProps } from 'reactflow';
 import type { Plate } from '#shared/drawing/display-list.ts';
 import { PLATE } from '#shared/drawing/geometry.ts';
 import { plateFigure } from '#shared/drawing/plate-shapes.ts';
-import { BRIEF_BELOW, briefPlate } from './brief-plate.ts';
+import { briefPlate } from './brief-plate.ts';
+import { useIsBrief } from './detail-level.ts';
 import { ShapesView } from './shapes-view.tsx';
 
 export interface PlateData {
@@ -21,7 +22,7 @@ export interface PlateData {
  */
 export const PlateNode = memo(function PlateNode({ data }: NodeProps<PlateData>) {
   const { plate, isSelected, isTabStop, takesFocus } = data;
-  const isBrief = useStore((store) => store.transform[2] < BRIEF_BELOW);
+  const isBrief = useIsBrief();
   const button = useRef<HTMLDivElement>(null);
   const figure = useMemo(() => plateFigure({ ...plate, x: 0, y: 0 }), [plate]);
   const shapes = useMemo(

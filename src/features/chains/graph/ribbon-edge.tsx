@@ -1,8 +1,9 @@
 import { memo, useMemo } from 'react';
-import { useStore, type EdgeProps } from 'reactflow';
+import type { EdgeProps } from 'reactflow';
 import type { Ribbon } from '#shared/drawing/display-list.ts';
 import { ribbonFigure } from '#shared/drawing/ribbon-shapes.ts';
-import { BRIEF_BELOW, briefRibbon } from './brief-plate.ts';
+import { briefRibbon } from './brief-plate.ts';
+import { useIsBrief } from './detail-level.ts';
 import { ShapesView } from './shapes-view.tsx';
 
 export interface RibbonData {
@@ -13,7 +14,7 @@ export interface RibbonData {
 /** A link, in the shapes that every export draws; a wider unseen line takes the pointer. */
 export const RibbonEdge = memo(function RibbonEdge({ data }: EdgeProps<RibbonData>) {
   const ribbon = data?.ribbon;
-  const isBrief = useStore((store) => store.transform[2] < BRIEF_BELOW);
+  const isBrief = useIsBrief();
   const shapes = useMemo(
     () => ribbon && (isBrief ? briefRibbon(ribbon) : ribbonFigure(ribbon).shapes),
     [ribbon, isBrief],
