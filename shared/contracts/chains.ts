@@ -149,7 +149,7 @@ export const ChainCheck = z.object({
 });
 export type ChainCheck = z.infer<typeof ChainCheck>;
 
-/** Said once per rule: its clause and its sentences, with `{parameter}` places. */
+/** Said once per rule: its clause and those of its sentences that are said, with `{parameter}` places. */
 export const ChainRule = z.object({
   id: z.string(),
   title: z.string(),

@@ -33,9 +33,19 @@ export function joinChains(chain: ChainResponse, other: ChainResponse): DrawnCha
     nodes: nodes.map((node) => ({ ...node, tier: tiers.get(node.uid)! })),
     links,
     checks: [...chain.checks, ...other.checks.filter((check) => isAbout(check, added))],
-    rules: [...new Map([...chain.rules, ...other.rules].map((rule) => [rule.id, rule])).values()],
+    rules: joinedRules(chain.rules, other.rules),
     second: { ...second, beside: new Set(added.map((node) => node.uid)) },
   };
+}
+
+/** Each reply tells the sentences that are said in it: together they tell both. */
+function joinedRules(one: ChainResponse['rules'], other: ChainResponse['rules']): ChainResponse['rules'] {
+  const joined = new Map(one.map((rule) => [rule.id, rule]));
+  for (const rule of other) {
+    const sentences = { ...joined.get(rule.id)?.sentences, ...rule.sentences };
+    joined.set(rule.id, { ...rule, sentences });
+  }
+  return [...joined.values()];
 }
 
 /** The second's checks of values that the first's chain does not hold; its links bring their own standing. */

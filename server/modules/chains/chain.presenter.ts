@@ -37,6 +37,7 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
   const k = Number(chain.focus.k ?? '2');
   const carried = chain.numbers.carried(chain.focus).variance;
   const nodeUids = new Set(views.keys());
+  const checks = chain.judgement.checks.map((check) => redactCheck(check, isFull));
   return {
     question: {
       valueUid: chain.focus.uid,
@@ -72,9 +73,9 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
     })),
     improvements: isFull(chain.focus.uid) ? chain.improvements : [],
     sideBySide: isFull(chain.focus.uid) ? chain.sideBySide.sides : [],
-    sideBySideNote: isFull(chain.focus.uid) ? chain.sideBySide.note : null,
-    rules: chain.judgement.rules,
-    checks: chain.judgement.checks.map((check) => redactCheck(check, isFull)),
+    sideBySideNote: isFull(chain.focus.uid) ? noteOf(chain) : null,
+    rules: rulesTold(chain.judgement.rules, checks),
+    checks,
     summary: summaryOf(chain),
     abilities: { 'chain:read': true },
   };
@@ -175,6 +176,12 @@ function inForceInstead(chain: Chain): ChainResponse['inForceInstead'] {
       (row) => row.quantity === focus.quantity && standingOn(chain, row, row.ends).state === 'in force',
     );
   return stood ? { uid: stood.uid, certificateNo: stood.certificateNo } : null;
+}
+
+/** Both kinds are the certificate's: said where what they rest on has moved since. */
+function noteOf({ sideBySide, now }: Chain): string | null {
+  if (sideBySide.note !== null || !now?.focus.isTouched || sideBySide.sides.length === 0) return sideBySide.note;
+  return 'As certified: how far the value has moved since stands above.';
 }
 
 /** The end of the way from one revision of the focus to the next. */
@@ -293,6 +300,17 @@ function missingOf(chain: Chain): ChainResponse['uncertainty']['missing'] {
   return (silent.length > 0 ? silent : values).map(({ uid, certificateNo, registryNo }) => ({
     uid,
     because: `certificate ${certificateNo} for ${registryNo} ${sentence}`,
+  }));
+}
+
+/** The rules with those of their sentences that are said: the others would be a quarter of the reply. */
+function rulesTold(rules: ChainResponse['rules'], checks: readonly Check[]): ChainResponse['rules'] {
+  const told = new Set(checks.map(({ rule, sentence }) => `${rule} ${sentence}`));
+  return rules.map((rule) => ({
+    ...rule,
+    sentences: Object.fromEntries(
+      Object.entries(rule.sentences).filter(([key]) => told.has(`${rule.id} ${key}`)),
+    ),
   }));
 }
 
