@@ -25,9 +25,13 @@ export const StatementQuery = ChainQuery.extend({
 });
 export type StatementQuery = z.infer<typeof StatementQuery>;
 
-/** A drawing is also asked for its ground: the two themes of the screen, or white for paper. */
+/**
+ * A drawing is also asked for its ground (the two themes of the screen, or white for paper), and may show a second
+ * value's chain beside the first.
+ */
 export const DrawingQuery = StatementQuery.extend({
   theme: z.enum(['paper', 'lamp', 'print']).default('paper'),
+  with: Id.optional(),
 });
 export type DrawingQuery = z.infer<typeof DrawingQuery>;
 

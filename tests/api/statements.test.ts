@@ -141,6 +141,16 @@ describe('documents of a chain', () => {
     expect(Object.keys(JSON.parse(reply.body.toString('utf8')).fields)).toEqual([field]);
   });
 
+  it('draws a second chain beside the first, where its reader may see that one too', async () => {
+    const drawing = (await take(reader, 'drawing.svg', `with=${scene.secondUid}`)).body.toString('utf8');
+    expect(drawing).toContain(`data-plate="${scene.secondUid}"`);
+    expect(drawing).toContain('Beside it');
+    const foreign = await makeCalibration(app, scene.middle.id, '2024-07-10', [
+      lineOf((await makeStandard(app, scene.middle.id)).id),
+    ]);
+    expect((await take(reader, 'drawing.svg', `with=${foreign.valueUids[0]}`)).status).toBe(404);
+  });
+
   it('refuses a ground that there is none of', async () => {
     expect((await take(reader, 'drawing.svg', 'theme=pink')).status).toBe(400);
   });

@@ -7,8 +7,12 @@ import { GROUNDS } from './drawing-svg.ts';
 import { createdOn } from './foot.ts';
 
 /** The chain as vectors on one page as large as the drawing. */
-export function drawingPdf(chain: ChainResponse, query: DrawingQuery): Promise<Buffer> {
-  const { picture } = pictureOfChain(chain, query, true);
+export function drawingPdf(
+  chain: ChainResponse,
+  query: DrawingQuery,
+  second: ChainResponse | null = null,
+): Promise<Buffer> {
+  const { picture } = pictureOfChain(chain, query, { isAlone: true, second });
   return picturePage(picture, GROUNDS[query.theme], {
     title: picture.title,
     subject: picture.description,

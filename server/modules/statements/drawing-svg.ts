@@ -9,7 +9,11 @@ import { fontRules } from './font-rules.ts';
 export const GROUNDS = { paper: PAPER, lamp: LAMP, print: PRINT } as const;
 
 /** The chain as an SVG that stands alone, its fonts and its ground in it. */
-export function drawingSvg(chain: ChainResponse, query: DrawingQuery): string {
-  const { picture } = pictureOfChain(chain, query, true);
+export function drawingSvg(
+  chain: ChainResponse,
+  query: DrawingQuery,
+  second: ChainResponse | null = null,
+): string {
+  const { picture } = pictureOfChain(chain, query, { isAlone: true, second });
   return toSvg(picture, { inks: GROUNDS[query.theme], fontRules: fontRules(), hasGround: true });
 }

@@ -1,15 +1,15 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import type { StatementQuery } from '#shared/contracts/statements.ts';
 import { asDrawn } from '#shared/drawing/as-drawn.ts';
-import { displayList, type DisplayList } from '#shared/drawing/display-list.ts';
+import { displayList } from '#shared/drawing/display-list.ts';
 import type { LayoutInput, Placement } from '#shared/drawing/layout-input.ts';
 import { layoutInput } from '#shared/drawing/layout-of.ts';
 import { layoutChain } from '#shared/drawing/layout.ts';
-import { legendOf, type LegendSign } from '#shared/drawing/legend.ts';
 import { pictureOf } from '#shared/drawing/picture.ts';
 import type { Picture } from '#shared/drawing/shapes.ts';
 import { AppError } from '#server/http/app-error.ts';
 import { sha256Of } from './content.ts';
+import { legendWords } from './legend-words.ts';
 import { focusOf } from './statement.ts';
 import { askedWords, quantityWords, weightWords } from './words.ts';
 
@@ -19,52 +19,49 @@ const MOST_PLATES = 400;
 const MOST_REMEMBERED = 16;
 const placements = new Map<string, Placement>();
 
-/** How each sign of a drawing looks, in words. */
-const LOOKS: Readonly<Record<LegendSign, string>> = {
-  flow: 'band',
-  hairline: 'hairline',
-  negative: 'dashed',
-  informing: 'dotted',
-  beside: 'dashed hairline',
-  broken: 'parted, with a cross',
-  caution: 'hatched, with a triangle',
-  'own part': 'grey stub',
-  'unknown part': 'hatched stub with a question mark',
-  root: 'double rule',
-  group: 'pile',
-  shared: 'ring of brass',
-};
-
 /** A chain drawn, and how to read it in a sentence. */
 export interface DrawnDocument {
   picture: Picture;
   legend: string;
 }
 
+/** What a drawing is for. */
+interface Purpose {
+  /** It leaves its page: then it says under itself what was asked and how to read it. */
+  isAlone?: boolean;
+  /** The chain of a second value, drawn beside it. */
+  second?: ChainResponse | null;
+}
+
 /**
  * The chain as the question wants it drawn.
- * @param isAlone whether it leaves its page: then it says under itself what was asked and how to read it
  * @throws AppError `unprocessable` for a chain of more plates than a drawing can hold
  */
-export function pictureOfChain(chain: ChainResponse, query: StatementQuery, isAlone: boolean): DrawnDocument {
-  const drawn = asDrawn(chain, query);
+export function pictureOfChain(
+  chain: ChainResponse,
+  query: StatementQuery,
+  { isAlone = false, second = null }: Purpose = {},
+): DrawnDocument {
+  const drawn = asDrawn(chain, query, second);
   refuseUnlessDrawable(drawn.chain.nodes.length);
   const placement = placementOf(layoutInput(drawn.chain, query.draw));
   const list = displayList(drawn.chain, placement, query);
   const legend = legendWords(list);
-  const focus = focusOf(chain);
-  const judged = query.verdict === 'today' ? 'known now' : 'known at use';
   const picture = pictureOf(list, {
-    title: `Chain of ${weightWords(focus)}`,
+    title: `Chain of ${weightWords(focusOf(chain))}`,
     description: descriptionOf(chain, query),
-    caption: isAlone
-      ? [
-          `${weightWords(focus)}: ${quantityWords(focus.deviation, focus.expandedU, focus.k)}; certificate ${focus.certificateNo}. ${askedWords(chain.question)} Judged by what was ${judged}.`,
-          legend,
-        ]
-      : [],
+    caption: isAlone ? [captionOf(chain, query, second), legend] : [],
   });
   return { picture, legend };
+}
+
+/** What was asked, under a drawing that leaves its page. */
+function captionOf(chain: ChainResponse, { verdict }: StatementQuery, second: ChainResponse | null): string {
+  const focus = focusOf(chain);
+  const value = quantityWords(focus.deviation, focus.expandedU, focus.k);
+  const beside = second === null ? '' : ` Beside it ${weightWords(focusOf(second))}.`;
+  const judged = verdict === 'today' ? 'known now' : 'known at use';
+  return `${weightWords(focus)}: ${value}; certificate ${focus.certificateNo}.${beside} ${askedWords(chain.question)} Judged by what was ${judged}.`;
 }
 
 /** The same chain is laid out once. */
@@ -76,12 +73,6 @@ function placementOf(input: LayoutInput): Placement {
   if (placements.size >= MOST_REMEMBERED) placements.delete(placements.keys().next().value!);
   placements.set(key, placement);
   return placement;
-}
-
-function legendWords(list: DisplayList): string {
-  return `How to read it: ${legendOf(list)
-    .map(({ sign, says }) => `${LOOKS[sign]}, ${says}`)
-    .join('; ')}.`;
 }
 
 function refuseUnlessDrawable(plates: number): void {

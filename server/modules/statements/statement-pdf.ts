@@ -37,7 +37,7 @@ export async function statementPdf(chain: ChainResponse, query: StatementQuery):
   setWords(sheet, statement);
   setNotSaid(sheet, statement);
   setSteps(sheet, statement);
-  setDrawing(sheet, pictureOfChain(chain, query, false));
+  setDrawing(sheet, pictureOfChain(chain, query));
   sheet.addPage();
   setShares(sheet, statement);
   setChecks(sheet, statement);

@@ -9,6 +9,7 @@ import {
 import { Id } from '#shared/ids.ts';
 import { route, type Route, type SignedInContext } from '#server/http/route.ts';
 import { presentAs } from '#server/http/validate.ts';
+import { authorize } from '#server/policy/permission.ts';
 import {
   chainOf,
   chainSubject,
@@ -31,7 +32,8 @@ interface Spec<Query extends Asked> {
   file: string;
   summary: string;
   query: z.ZodType<Query>;
-  make: (chain: ChainResponse, query: Query) => TakenFile | Promise<TakenFile>;
+  /** `second` is the chain of a further value, where the question names one. */
+  make: (chain: ChainResponse, query: Query, second: ChainResponse | null) => TakenFile | Promise<TakenFile>;
 }
 
 /**
@@ -47,8 +49,10 @@ function document<Query extends Asked>({ file, summary, query, make }: Spec<Quer
     params: z.object({ valueUid: Id }),
     query,
     subject: (context, { params }) => chainSubject(context, params.valueUid),
-    act: async (context, { query: asked }, subject) =>
-      make(await visibleChain(context, asked, subject), asked),
+    act: async (context, { query: asked }, subject) => {
+      const chain = await visibleChain(context, asked, subject);
+      return make(chain, asked, await secondChain(context, asked));
+    },
     response: z.custom<TakenFile>(),
     present: (made) => made,
     send: sendFile,
@@ -64,20 +68,33 @@ async function visibleChain(
   return presentAs(ChainResponse, presentChain(chain, context.user, subject));
 }
 
+async function secondChain(
+  context: SignedInContext,
+  asked: Asked & { with?: string | undefined },
+): Promise<ChainResponse | null> {
+  if (asked.with === undefined) return null;
+  const subject = await chainSubject(context, asked.with);
+  authorize(context.user, readChain, subject);
+  return visibleChain(context, asked, subject);
+}
+
 export const statementRoutes: Route[] = [
   document({
     file: 'drawing.svg',
     summary: 'The chain, drawn: SVG with its fonts in it.',
     query: DrawingQuery,
-    make: (chain, query) => ({ chain, called: 'chain', extension: 'svg', body: drawingSvg(chain, query) }),
+    make: (chain, query, second) => ({
+      ...{ chain, called: 'chain', extension: 'svg' },
+      body: drawingSvg(chain, query, second),
+    }),
   }),
   document({
     file: 'drawing.pdf',
     summary: 'The chain, drawn: one page as large as the drawing.',
     query: DrawingQuery,
-    make: async (chain, query) => ({
+    make: async (chain, query, second) => ({
       ...{ chain, called: 'chain', extension: 'pdf' },
-      body: await drawingPdf(chain, query),
+      body: await drawingPdf(chain, query, second),
     }),
   }),
   document({

@@ -7,14 +7,14 @@ import { setTable, type Cell, type Column } from '#server/print/table.ts';
 import { setQuantity } from './set-quantity.ts';
 
 const SIZE = 8.2;
-const SMALL = 7.4;
+const SMALL = 7.2;
 
 const COLUMNS: readonly Column[] = [
   { head: 'Weight', parts: 20 },
-  { head: 'Certificate', parts: 22 },
+  { head: 'Certificate', parts: 25 },
   { head: 'Deviation and U', parts: 22 },
   { head: 'Leaned on, used', parts: 28 },
-  { head: 'Flow', parts: 9, align: 'right' },
+  { head: 'Flow', parts: 8, align: 'right' },
   { head: 'Checks of the link', parts: 18 },
 ];
 

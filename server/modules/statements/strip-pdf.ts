@@ -12,18 +12,27 @@ import { massBranch, type BranchStep } from './mass-branch.ts';
 import { notSaid } from './not-said.ts';
 import { setQuantity } from './set-quantity.ts';
 import { focusOf } from './statement.ts';
-import { definitionWords, USED_AS, weightWords } from './words.ts';
+import { definitionWords, weightWords } from './words.ts';
 
 const SIZE = 8.8;
 const SMALL = 7.8;
 
+/** How a reference's value was taken, in the room of a column. */
+const TAKEN: Readonly<Record<NonNullable<ChainLink['usedAs']>, string>> = {
+  certificate: 'as certified',
+  'by notice': 'as corrected by a notice',
+  'class limit': 'as the limit of its class',
+  fit: 'as predicted',
+  bracketing: 'as a bracketing mean',
+};
+
 const COLUMNS: readonly Column[] = [
-  { head: 'Weight, calibrated by', parts: 25 },
-  { head: 'Certificate, determined', parts: 24 },
-  { head: 'Deviation and U', parts: 25 },
-  { head: 'Leaned on the next, used', parts: 24 },
+  { head: 'Weight, calibrated by', parts: 23 },
+  { head: 'Certificate', parts: 26 },
+  { head: 'Deviation and U', parts: 24 },
+  { head: 'Leaned on the next', parts: 27 },
   { head: 'Share', parts: 10, align: 'right' },
-  { head: 'Checks of this step', parts: 18 },
+  { head: 'Checks', parts: 17 },
 ];
 
 /** The chain's mass branch on paper, from the weight up to the SI, one step a row. */
@@ -103,8 +112,8 @@ function usedCell(link: ChainLink | null, others: readonly ChainLink[]): Cell {
   const beside =
     others.length === 0 ? [] : [[span(`and ${others.length} more beside`, SMALL, 'sans', 'ink-2')]];
   return [
-    [span(days ?? '', SIZE, 'sans')],
-    [span(USED_AS[link.usedAs ?? 'certificate'], SMALL, 'sans', 'ink-2')],
+    [span(days === null ? '' : days, SMALL)],
+    [span(TAKEN[link.usedAs ?? 'certificate'], SMALL, 'sans', 'ink-2')],
     ...beside,
   ];
 }

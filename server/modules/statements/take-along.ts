@@ -57,7 +57,7 @@ function hashSource(text: string): string {
 
 function mainOf(chain: ChainResponse, query: StatementQuery, statement: StatementResponse): string {
   const focus = focusOf(chain);
-  const { picture, legend } = pictureOfChain(chain, query, false);
+  const { picture, legend } = pictureOfChain(chain, query);
   const svg = toSvg(picture, { inks: PAGE_INKS });
   const held = focus.holder ? `${focus.holder.name} · ` : '';
   return (

@@ -20,8 +20,7 @@ const ROOTS: Readonly<Record<NonNullable<ChainValue['rootKind']>, string>> = {
   'accepted stop': 'a stop that was accepted with evidence',
 };
 
-/** How a reference's value was taken. */
-export const USED_AS: Readonly<Record<NonNullable<ChainLink['usedAs']>, string>> = {
+const USED_AS: Readonly<Record<NonNullable<ChainLink['usedAs']>, string>> = {
   certificate: 'with the value of its certificate',
   'by notice': 'with its value as corrected by a notice',
   'class limit': 'with the limit of its class',

@@ -51,7 +51,10 @@ export async function fetchDocument(
 ): Promise<ReceivedFile> {
   const theme = document.file.endsWith('.pdf') ? 'print' : isDark ? 'lamp' : 'paper';
   const file = await getFile(`/api/chains/${valueUid}/${document.file}`, {
-    query: { ...askedOf(question), ...(document.file.startsWith('drawing') && { theme }) },
+    query: {
+      ...askedOf(question),
+      ...(document.file.startsWith('drawing') && { theme, with: question.with }),
+    },
   });
   if (document.scale === undefined) return file;
   const name = file.name.replace(/\.svg$/, ` ${document.scale}x.png`);
