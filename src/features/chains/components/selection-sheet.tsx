@@ -152,7 +152,11 @@ function LinkSheet({
     (check) => check.subject.type === 'value' && check.subject.uid === link.childUid,
   );
   return (
-    <SideSheet isLeftWhereNarrow title={`${names.get(link.parentUid)} → ${names.get(link.childUid)}`} onClose={onClose}>
+    <SideSheet
+      isLeftWhereNarrow
+      title={`${names.get(link.parentUid)} → ${names.get(link.childUid)}`}
+      onClose={onClose}
+    >
       <Stack gap="loose">
         <Facts
           facts={[

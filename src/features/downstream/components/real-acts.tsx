@@ -5,7 +5,7 @@ import type { NamedSubject } from '#shared/contracts/dry-runs.ts';
 import { paths } from '#src/app/paths.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Button, LinkButton } from '#src/components/ui/button.tsx';
-import { laboratoriesOf, usePerson } from '#src/lib/session.ts';
+import { usePerson } from '#src/lib/session.ts';
 import { namedQuery, whatIfQuery, type Supposition } from '../api.ts';
 import { supposedCorrection, type SupposedCorrection } from '../supposed-correction.ts';
 
@@ -39,18 +39,22 @@ export function RealActs({ asked, dialogs, onDone }: RealActsProps) {
   const answer = useQuery(whatIfQuery(asked));
   const person = usePerson();
   if (!named.data || !answer.data) return null;
-  const own = new Set(laboratoriesOf(person).map(({ id }) => id));
+  const signsFor = new Set(
+    person.roles.flatMap(({ role, laboratory }) =>
+      role === 'signatory' && laboratory ? [laboratory.id] : [],
+    ),
+  );
   const acts = asked.changes.flatMap((change, at) => {
     const subject = named.data.subjects[at]!;
-    return isOpen(change, subject, own) ? [{ change, subject, at }] : [];
+    return isOpen(change, subject, signsFor) ? [{ change, subject, at }] : [];
   });
   const touches = <Touched total={answer.data.total} />;
   return (
     <Section title="The act itself">
       {acts.length === 0 ? (
         <p className="text-ink-2">
-          Only who signs for the laboratory that entered a certificate can correct or withdraw it, and only an
-          institute can publish a notice on its own values.
+          Only who signs for the laboratory that entered a certificate can correct or withdraw it, and only
+          who signs for an institute can publish a notice on its values.
         </p>
       ) : (
         <>
@@ -71,8 +75,8 @@ export function RealActs({ asked, dialogs, onDone }: RealActsProps) {
   );
 }
 
-function isOpen(change: WhatIfChange, subject: NamedSubject, own: ReadonlySet<string>): boolean {
-  if (change.kind === 'notice') return own.has(change.issuerId);
+function isOpen(change: WhatIfChange, subject: NamedSubject, signsFor: ReadonlySet<string>): boolean {
+  if (change.kind === 'notice') return signsFor.has(change.issuerId);
   return (
     subject.abilities[change.kind === 'withdraw' ? 'calibration:withdraw' : 'calibration:correct'] === true
   );
