@@ -49,9 +49,10 @@ export async function chainNow(
   inForce: readonly Notice[],
 ): Promise<ChainNow | null> {
   const found = await withSuccessors(store, closure, focus, question);
+  const hasEnded = found.fates.size > 0 || found.ownEnd !== null;
+  if (!hasEnded && inForce.length === 0) return null;
   const now = readAsNowKnown(closure, focus, found, inForce);
-  const isReached = now.notices.has(focus.uid);
-  return found.fates.size === 0 && !found.ownEnd && !isReached ? null : now;
+  return hasEnded || now.notices.has(focus.uid) ? now : null;
 }
 
 /**
