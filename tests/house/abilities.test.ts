@@ -82,6 +82,7 @@ const MAY: Record<string, Who[]> = {
   'draft:write': WRITERS,
   'draft:send': [...WRITERS, 'signatory'],
   'reference:find': WRITERS,
+  'notice:publish': ['signatory of the institute'],
   'chain:read': [],
   'downstream:read': [],
 };
