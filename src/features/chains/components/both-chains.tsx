@@ -78,8 +78,17 @@ export function BothChains({ chain }: { chain: ChainResponse }) {
           ))}
           {now.notices.map((notice) => (
             <li key={notice.id}>
-              Notice {notice.number}, {notice.title}, in force from {notice.effectiveOn}, brings{' '}
-              <Quantity value={notice.shift} kind="deviation" shownIn="auto" decimals={2} />.
+              Notice {notice.number}, {notice.title}, in force from {notice.effectiveOn},{' '}
+              {Number(notice.shift) === 0 ? (
+                <>
+                  adds a standard uncertainty of{' '}
+                  <Quantity value={toPlain(notice.u)} shownIn="auto" decimals={2} />.
+                </>
+              ) : (
+                <>
+                  brings <Quantity value={notice.shift} kind="deviation" shownIn="auto" decimals={2} />.
+                </>
+              )}
             </li>
           ))}
         </ul>
