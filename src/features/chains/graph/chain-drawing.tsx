@@ -1,4 +1,4 @@
-import { useRef, useState, type KeyboardEvent } from 'react';
+import { useRef, useState, type FocusEvent, type KeyboardEvent } from 'react';
 import ReactFlow, {
   Controls,
   type EdgeTypes,
@@ -55,6 +55,10 @@ export function ChainDrawing({ list, at, nameOf, frame, onSelect, onOpen }: Chai
     if (plate.node.type === 'group') onOpen(plate.id);
     else onSelect(plate.id);
   };
+  const tell = ({ target }: FocusEvent<HTMLDivElement>) => {
+    const plate = target.matches(':focus-visible') && plateOf(target.dataset['plate'] ?? '');
+    if (plate) detail.show({ plate });
+  };
   const walk = (event: KeyboardEvent<HTMLDivElement>) => {
     const from = event.target instanceof HTMLElement ? event.target.dataset['plate'] : undefined;
     if (event.key === 'Escape') detail.hide();
@@ -70,11 +74,10 @@ export function ChainDrawing({ list, at, nameOf, frame, onSelect, onOpen }: Chai
     const view = instance && bringIntoSight(plate, instance.getViewport(), frame);
     if (view) instance.setViewport(view);
     setWalked(plate.id);
-    detail.show({ plate });
   };
   return (
     <DetailLevelContext value={level}>
-      <div ref={box} className="contents" onKeyDown={walk} onBlur={detail.leave}>
+      <div ref={box} className="contents" onKeyDown={walk} onFocus={tell} onBlur={detail.leave}>
         <ReactFlow
           nodes={nodes}
           edges={edges}

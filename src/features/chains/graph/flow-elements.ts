@@ -1,5 +1,6 @@
 import type { Edge, Node } from 'reactflow';
 import type { DisplayList, Plate, Ribbon } from '#shared/drawing/display-list.ts';
+import { PLATE } from '#shared/drawing/geometry.ts';
 import type { PlateData } from './plate-node.tsx';
 import type { RibbonData } from './ribbon-edge.tsx';
 
@@ -21,6 +22,8 @@ export function nodesOf(list: DisplayList, standing: Standing): Node[] {
     type: 'band',
     position: { x: list.band.x, y: 0 },
     style: placedAt(list.band.x, 0),
+    width: list.band.width,
+    height: list.band.height,
     data: list.band,
     selectable: false,
   };
@@ -35,6 +38,9 @@ function nodeOf(plate: Plate, { at, tabStop, takesFocus }: Standing): Node<Plate
     type: 'plate',
     position: { x: plate.x, y: plate.y },
     style: placedAt(plate.x, plate.y),
+    // Known beforehand: without it a plate that changes is hidden until it is measured anew, and loses the focus.
+    width: PLATE.width,
+    height: PLATE.height,
     data: { plate, isSelected, isTabStop, takesFocus: isTabStop && takesFocus },
   };
 }

@@ -1,8 +1,8 @@
-import type { DisplayList, Plate } from '#shared/drawing/display-list.ts';
+import type { DisplayList } from '#shared/drawing/display-list.ts';
 
 /**
- * The plate an arrow key leads to: up and down along the widest link, sideways to the next plate of the tier; Home
- * is the weight itself. Null where the key leads nowhere.
+ * The plate an arrow key leads to: up and down along the widest link, sideways to the next plate of the tier and on
+ * to the next tier; Home is the weight itself. Null where the key leads nowhere.
  */
 export function plateFrom(list: DisplayList, from: string, key: string): string | null {
   if (key === 'Home') return list.plates.find((plate) => plate.isFocus)?.id ?? null;
@@ -17,19 +17,20 @@ function alongWidest(list: DisplayList, from: string, way: 'up' | 'down'): strin
   const links = list.ribbons
     .map(({ link, width }) => ({ link, width }))
     .filter(({ link }) => (way === 'up' ? link.childUid : link.parentUid) === from)
-    .toSorted((a, b) => b.width - a.width);
+    .toSorted((a, b) => Number(isEffect(a.link)) - Number(isEffect(b.link)) || b.width - a.width);
   const [widest] = links;
   if (!widest) return null;
   return way === 'up' ? widest.link.parentUid : widest.link.childUid;
 }
 
-function beside(list: DisplayList, from: string, step: 1 | -1): string | null {
-  const here = list.plates.find((plate) => plate.id === from);
-  if (!here) return null;
-  const tier = list.plates.filter((plate) => plate.y === here.y).toSorted(byX);
-  return tier[tier.indexOf(here) + step]?.id ?? null;
+/** Values come first: an effect that two of them share leads no further up. */
+function isEffect({ role }: DisplayList['ribbons'][number]['link']): boolean {
+  return role === 'source';
 }
 
-function byX(a: Plate, b: Plate): number {
-  return a.x - b.x;
+/** From the weight upwards, each tier from left to right: so every plate can be reached. */
+function beside(list: DisplayList, from: string, step: 1 | -1): string | null {
+  const inOrder = list.plates.toSorted((a, b) => b.y - a.y || a.x - b.x);
+  const here = inOrder.findIndex((plate) => plate.id === from);
+  return here === -1 ? null : (inOrder[here + step]?.id ?? null);
 }
