@@ -21,7 +21,10 @@ const drawn = async (page: Page) => {
 const keptDryRun = async (page: Page) => {
   await page.getByRole('link', { name: 'A new dry run' }).click();
   await page.getByRole('combobox', { name: 'Value' }).fill('PA 0300-01');
-  await page.getByRole('option').first().click();
+  await page
+    .getByRole('option', { name: /PA 0300-01/ })
+    .first()
+    .click();
   await page.getByLabel('Shift, with its unit').fill('0.2 mg');
   await page.getByRole('button', { name: 'Add this change' }).click();
   await page.getByLabel('Name', { exact: true }).fill('PA 0300-01, heavier by 0.2 mg');

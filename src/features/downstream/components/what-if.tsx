@@ -45,9 +45,9 @@ export function WhatIf({ changes, search, onOpen, onSort }: WhatIfProps) {
       title={whatIfHeadline(total)}
       note={<span className="inline-block">a dry run: nothing was changed</span>}
     >
-      <Totals answer={answer.data} />
       {total.count > 0 && (
         <>
+          <Totals answer={answer.data} />
           <WhatIfTable
             groups={groups}
             columns={columnsOf(changes)}
