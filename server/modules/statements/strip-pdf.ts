@@ -15,7 +15,7 @@ import { focusOf } from './statement.ts';
 import { definitionWords, weightWords } from './words.ts';
 
 const SIZE = 8.8;
-const SMALL = 7.8;
+const SMALL = 7.6;
 
 /** How a reference's value was taken, in the room of a column. */
 const TAKEN: Readonly<Record<NonNullable<ChainLink['usedAs']>, string>> = {
@@ -27,12 +27,12 @@ const TAKEN: Readonly<Record<NonNullable<ChainLink['usedAs']>, string>> = {
 };
 
 const COLUMNS: readonly Column[] = [
-  { head: 'Weight, calibrated by', parts: 23 },
-  { head: 'Certificate', parts: 26 },
-  { head: 'Deviation and U', parts: 24 },
-  { head: 'Leaned on the next', parts: 27 },
-  { head: 'Share', parts: 10, align: 'right' },
-  { head: 'Checks', parts: 17 },
+  { head: 'Weight, calibrated by', parts: 22 },
+  { head: 'Certificate', parts: 24.5 },
+  { head: 'Deviation and U', parts: 26 },
+  { head: 'Leaned on the next', parts: 28 },
+  { head: 'Share', parts: 9, align: 'right' },
+  { head: 'Checks', parts: 15 },
 ];
 
 /** The chain's mass branch on paper, from the weight up to the SI, one step a row. */
@@ -90,7 +90,7 @@ function rowOf({ value, link, others }: BranchStep): Cell[] {
           kind: 'deviation',
           shownIn: 'auto',
         },
-        10,
+        9.6,
       ),
       [span(value.quantity, SMALL, 'sans', 'ink-2')],
       [span(value.k === null ? 'U not stated' : `k = ${value.k}`, SMALL, 'sans', 'ink-2')],

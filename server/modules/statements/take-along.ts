@@ -63,7 +63,8 @@ function mainOf(chain: ChainResponse, query: StatementQuery, statement: Statemen
   return (
     `<header><p class="quiet">The chain of</p><h1>${escaped(statement.title)}</h1>` +
     `<p class="value">${numberOf(focus)}</p>` +
-    `<p class="quiet">${escaped(`${focus.quantity}, deviation from nominal${focus.k === null ? '; U not stated' : `; k = ${focus.k}`}. ${held}certificate ${focus.certificateNo} of ${focus.issuedOn}, ${focus.issuer.name}.`)}</p>` +
+    `<p class="quiet">${escaped(`${focus.quantity}, deviation from nominal; ${focus.k === null ? 'U not stated' : `k = ${focus.k}`}`)}</p>` +
+    `<p class="quiet">${escaped(`${held}certificate ${focus.certificateNo}, issued ${focus.issuedOn} by ${focus.issuer.name}`)}</p>` +
     `<p class="quiet">${escaped(statement.asked)}</p></header>` +
     section('In short', statement.summary.map((sentence) => `<p>${escaped(sentence)}</p>`).join('')) +
     section(

@@ -23,7 +23,7 @@ export function Legend({ list, question }: { list: DisplayList; question: ChainQ
           </li>
         ))}
       </ul>
-      <p className="pt-1">
+      <p className="pt-1 print:hidden">
         Arrow keys walk from plate to plate, Enter opens one.
         {question.effects === 'main' && ' Shared effects below 1 % are shown when asked for.'}
       </p>

@@ -21,7 +21,7 @@ interface LifeLineProps {
 export function LifeLine({ valueUid, answered, onStep }: LifeLineProps) {
   const { data: life } = useQuery(chainLifeQuery(valueUid));
   return (
-    <section aria-label="The weight’s life" className="text-sm">
+    <section aria-label="The weight’s life" className="text-sm print:hidden">
       {life && <Clocks life={life} answered={answered} onStep={onStep} />}
     </section>
   );
@@ -33,8 +33,8 @@ function Clocks({
   onStep,
 }: { life: ChainLifeResponse } & Pick<LifeLineProps, 'answered' | 'onStep'>) {
   const axis = axisOf(life);
-  const day = useClock('day', axis, answered.day, onStep);
-  const known = useClock('known', axis, answered.known, onStep);
+  const clock = useClocks(axis, answered, onStep);
+  const [day, known] = [clock('day'), clock('known')];
   // The day on which a programme runs out is reckoned, not recorded: it lies on one clock only.
   const recorded = life.events.filter((event) => event.kind !== 'due');
   return (
@@ -47,20 +47,31 @@ function Clocks({
   );
 }
 
-/** A clock's handle: where it is held while it moves, and the question it asks once it rests. */
-function useClock(clock: Clock, axis: LifeAxis, value: string, onStep: LifeLineProps['onStep']) {
-  const [held, setHeld] = useState<{ from: string; day: string } | null>(null);
-  // Once another answer is there, the handle is where that answer is.
-  const moving = held !== null && held.from === value ? held.day : null;
-  return {
-    value,
-    moving,
-    onMove: (day: string) => setHeld({ from: value, day }),
-    onRest: (day: string) => {
-      setHeld({ from: value, day });
-      if (day !== value) onStep({ [clock]: day === axis.today ? undefined : day });
-    },
+/** The handles: where each is held while it moves, and the question that they ask once one rests. */
+function useClocks(axis: LifeAxis, answered: LifeLineProps['answered'], onStep: LifeLineProps['onStep']) {
+  const from = `${answered.day} ${answered.known}`;
+  const [held, setHeld] = useState<{ from: string; days: Partial<Record<Clock, string>> }>({
+    from,
+    days: {},
+  });
+  // Once another answer is there, the handles are where that answer is.
+  const days = held.from === from ? held.days : {};
+  const hold = (clock: Clock, day: string) => {
+    const next = { ...days, [clock]: day };
+    setHeld({ from, days: next });
+    return next;
   };
+  return (clock: Clock) => ({
+    value: answered[clock],
+    moving: days[clock] ?? null,
+    onMove: (day: string) => void hold(clock, day),
+    // Both are asked for: the other may have come to rest while this one moved.
+    onRest: (day: string) => {
+      const asked = Object.entries(hold(clock, day));
+      if (asked.every(([name, at]) => at === answered[name as Clock])) return;
+      onStep(Object.fromEntries(asked.map(([name, at]) => [name, at === axis.today ? undefined : at])));
+    },
+  });
 }
 
 /** The words of the events, and a hairline for each from the day it counts to the day it was recorded. */
