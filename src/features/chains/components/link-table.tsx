@@ -38,7 +38,10 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
           <Row key={linkKey(link)} isSelected={linkKey(link) === question.at}>
             <Cell className="font-mono text-sm">
               <RowButton onClick={() => onChange({ at: linkKey(link) })}>
-                <span className="whitespace-nowrap">{names.get(link.parentUid)}</span>{' '}
+                {/* The name of a shared effect, a notice above all, may be long: it breaks. */}
+                <span className={link.role === 'source' ? '' : 'whitespace-nowrap'}>
+                  {names.get(link.parentUid)}
+                </span>{' '}
                 <span className="whitespace-nowrap">→ {names.get(link.childUid)}</span>
               </RowButton>
             </Cell>
