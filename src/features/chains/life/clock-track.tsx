@@ -1,4 +1,4 @@
-import { useRef, useState, type KeyboardEvent, type PointerEvent } from 'react';
+import { useEffect, useRef, useState, type KeyboardEvent, type PointerEvent } from 'react';
 import type { LifeEvent } from '#shared/contracts/chain-life.ts';
 import { EventMark } from './event-mark.tsx';
 import { sentenceOf } from './event-words.ts';
@@ -84,6 +84,7 @@ function useHandle(
   setHeld: (isHeld: boolean) => void,
 ) {
   const rest = useRef<ReturnType<typeof setTimeout>>(undefined);
+  useEffect(() => () => clearTimeout(rest.current), []);
   const stops = stopsOf(axis, events, clock);
   const dayUnder = ({ clientX }: PointerEvent) => {
     const { left, width } = track.current!.getBoundingClientRect();
