@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
@@ -7,6 +8,7 @@ import { drawnPart } from '#shared/drawing/drawn-part.ts';
 import { linkKey } from '#shared/drawing/drawing-question.ts';
 import { linksUpwards, namesOf } from '#shared/drawing/link-order.ts';
 import type { ChainQuestion } from '../question.ts';
+import { nextOrder, rulesOfLinks, sortedLinks, type LinkOrder, type SortColumn } from './sorted-links.ts';
 import { shareText } from '#shared/numbers/share-text.ts';
 
 interface LinkTableProps {
@@ -20,17 +22,33 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
   const { chain, leftOut } = drawnPart(whole, question.effects);
   const { decimalMark } = usePreferences();
   const names = namesOf(chain);
-  const rows = linksUpwards(chain).filter(
+  const [order, setOrder] = useState<LinkOrder | null>(null);
+  const shown = linksUpwards(chain).filter(
     (link) => question.only !== 'fails' || ['broken', 'caution'].includes(link[question.verdict]),
   );
+  const rows = sortedLinks(shown, order, names, question.verdict);
+  const rules = rulesOfLinks(chain, question.verdict);
+  const sorting = (by: SortColumn) => ({
+    sort:
+      order?.by !== by
+        ? ('none' as const)
+        : order.isDescending
+          ? ('descending' as const)
+          : ('ascending' as const),
+    onSort: () => setOrder(nextOrder(order, by)),
+  });
   return (
     <Table caption="Links of the chain">
       <thead>
         <tr>
-          <Head>Link</Head>
-          <Head className="max-sm:hidden">Used</Head>
-          <Head align="right">Flow</Head>
-          <Head>Judged</Head>
+          <Head {...sorting('link')}>Link</Head>
+          <Head className="max-sm:hidden" {...sorting('used')}>
+            Used
+          </Head>
+          <Head align="right" {...sorting('flow')}>
+            Flow
+          </Head>
+          <Head {...sorting('judged')}>Judged</Head>
         </tr>
       </thead>
       <tbody>
@@ -51,6 +69,7 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
             </Cell>
             <Cell>
               <Judged chain={chain} link={link} verdict={question.verdict} />
+              <Rules rules={rules.get(linkKey(link)) ?? []} />
             </Cell>
           </Row>
         ))}
@@ -75,6 +94,12 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
       </tbody>
     </Table>
   );
+}
+
+/** Which rules a link fails, by number; a press on the row says them in words. */
+function Rules({ rules }: { rules: readonly string[] }) {
+  if (rules.length === 0) return null;
+  return <span className="block font-mono text-xs text-ink-2">{rules.join(' ')}</span>;
 }
 
 type Link = ChainResponse['links'][number];
