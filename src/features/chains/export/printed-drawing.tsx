@@ -37,7 +37,7 @@ function Drawn({ chain, question, list }: PrintedDrawingProps) {
     <figure className="hidden print:block">
       <svg
         viewBox={[picture.x, picture.y, picture.width, picture.height].join(' ')}
-        className="mx-auto block h-auto max-h-[240mm] max-w-full"
+        className="mx-auto block h-auto max-h-[185mm] max-w-full"
         width={picture.width}
         role="img"
         aria-label={picture.title}
