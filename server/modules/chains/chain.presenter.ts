@@ -1,11 +1,5 @@
 import type { z } from 'zod';
-import type {
-  ChainCheck,
-  ChainLink,
-  ChainResponse,
-  ChainSource,
-  ChainValue,
-} from '#shared/contracts/chains.ts';
+import type { ChainLink, ChainResponse, ChainSource, ChainValue } from '#shared/contracts/chains.ts';
 import { ENGINE_VERSION } from '#shared/engine/version.ts';
 import { RULE_SET_VERSION } from '#shared/rules/rule-set.ts';
 import { stateAt, type ValueEnd, type ValueStanding } from '#shared/state-at.ts';
@@ -13,14 +7,13 @@ import { readsInFull, type User } from '#server/policy/user.ts';
 import { valueView } from '#server/policy/value-view.ts';
 import type { Chain } from './chain.service.ts';
 import type { ChainSubject } from './chains.policy.ts';
+import { redactCheck, rulesTold } from './checks.presenter.ts';
 import { fateOf } from './fate.ts';
 import { becauseLost, nowOf, presentAsNowKnown } from './chain-now.presenter.ts';
 import type { StoredSource, StoredValue } from './stored.ts';
 
 /** The day on which the kilogram was redefined (26th CGPM, Resolution 1). */
 const REDEFINITION = '2019-05-20';
-
-type Check = z.infer<typeof ChainCheck>;
 
 /** The chain as this person may see it: what is not theirs to know is left out here, before anything is sent. */
 export function presentChain(chain: Chain, user: User, subject: ChainSubject): ChainResponse {
@@ -180,7 +173,8 @@ function inForceInstead(chain: Chain): ChainResponse['inForceInstead'] {
 
 /** Both kinds are the certificate's: said where what they rest on has moved since. */
 function noteOf({ sideBySide, now }: Chain): string | null {
-  if (sideBySide.note !== null || !now?.focus.isTouched || sideBySide.sides.length === 0) return sideBySide.note;
+  if (sideBySide.note !== null || !now?.focus.isTouched || sideBySide.sides.length === 0)
+    return sideBySide.note;
   return 'As certified: how far the value has moved since stands above.';
 }
 
@@ -301,23 +295,6 @@ function missingOf(chain: Chain): ChainResponse['uncertainty']['missing'] {
     uid,
     because: `certificate ${certificateNo} for ${registryNo} ${sentence}`,
   }));
-}
-
-/** The rules with those of their sentences that are said: the others would be a quarter of the reply. */
-function rulesTold(rules: ChainResponse['rules'], checks: readonly Check[]): ChainResponse['rules'] {
-  const told = new Set(checks.map(({ rule, sentence }) => `${rule} ${sentence}`));
-  return rules.map((rule) => ({
-    ...rule,
-    sentences: Object.fromEntries(
-      Object.entries(rule.sentences).filter(([key]) => told.has(`${rule.id} ${key}`)),
-    ),
-  }));
-}
-
-/** What a rule says of another laboratory's weight from its history and budget stays there; its outcome is shown. */
-function redactCheck(check: Check, isFull: (uid: string) => boolean): Check {
-  if (check.subject.type !== 'value' || isFull(check.subject.uid)) return check;
-  return { ...check, sentence: null, parameters: {} };
 }
 
 function summaryOf(chain: Chain): ChainResponse['summary'] {
