@@ -8,11 +8,15 @@ import { Button } from '#src/components/ui/button.tsx';
 export function CopyLink({ parameters }: { parameters: Record<string, string> }) {
   const [state, setState] = useState<'idle' | 'copied' | 'refused'>('idle');
   const address = `${location.origin}${location.pathname}?${new URLSearchParams(parameters).toString()}`;
-  const copy = () =>
-    navigator.clipboard.writeText(address).then(
-      () => setState('copied'),
-      () => setState('refused'),
-    );
+  const copy = async () => {
+    try {
+      // Browsers lend the clipboard to secure origins only; elsewhere it is not there at all.
+      await navigator.clipboard.writeText(address);
+      setState('copied');
+    } catch {
+      setState('refused');
+    }
+  };
   return (
     <>
       <Button weight="text" onClick={() => void copy()}>
