@@ -24,11 +24,18 @@ export function hasEntry(name) {
 }
 
 /**
+ * Heap of the built server, MB. With a bound V8 lets far less garbage stand; the graph of the register lies outside
+ * the heap, and what is kept in it is bounded by use (server/modules/chains/recent-map.ts).
+ */
+const HEAP = '--max-old-space-size=512';
+
+/**
  * @param {EntryName} name
  * @param {{ isDev: boolean }} options from the sources while developing, from the build otherwise
  * @returns {[string, string[]]} program and arguments
  */
 export function entryCommand(name, { isDev }) {
   if (isDev) return [process.execPath, ['--import', 'tsx', entrySource(name), '--dev']];
-  return [process.execPath, [path.join(distFolder, 'server', `${name}.js`)]];
+  const program = path.join(distFolder, 'server', `${name}.js`);
+  return [process.execPath, name === 'index' ? [HEAP, program] : [program]];
 }

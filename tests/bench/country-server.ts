@@ -1,7 +1,7 @@
 import { spawn, type ChildProcess } from 'node:child_process';
 import { readFileSync } from 'node:fs';
 import { once } from 'node:events';
-import path from 'node:path';
+import { entryCommand } from '#server/boot/entries.js';
 
 const BETWEEN_LOOKS_MS = 20;
 const LONGEST_WAIT_MS = 60_000;
@@ -26,7 +26,7 @@ export interface CountryServer {
  */
 export async function startCountryServer(env: NodeJS.ProcessEnv): Promise<CountryServer> {
   const begin = performance.now();
-  const child = spawn(process.execPath, [path.resolve('dist/server/index.js')], {
+  const child = spawn(...entryCommand('index', { isDev: false }), {
     env: { ...env, LOG_LEVEL: 'error' },
     stdio: ['ignore', 'inherit', 'inherit'],
   });

@@ -124,24 +124,18 @@ async function fill(size: number): Promise<Awaited<ReturnType<typeof seedCountry
 /** Milliseconds until the root's descendants are told: until the whole graph is in memory, where it is large. */
 async function untilLoaded(baseUrl: string, cookie: string, rootUid: string): Promise<number> {
   const begin = performance.now();
+  let quarter = 0;
   let reply = await fetch(`${baseUrl}/api/downstream/${rootUid}`, { headers: { cookie } });
   while (reply.status === 503) {
     const { progress } = (await reply.json()) as { progress: { done: number; total: number } };
-    if (isFirstOfItsQuarter(progress))
-      console.log(`  read ${progress.done} of ${progress.total} values and links`);
+    const now = Math.floor((4 * progress.done) / Math.max(1, progress.total));
+    if (now !== quarter) console.log(`  read ${progress.done} of ${progress.total} values and links`);
+    quarter = now;
     await new Promise((resolve) => setTimeout(resolve, BETWEEN_LOOKS_MS));
     reply = await fetch(`${baseUrl}/api/downstream/${rootUid}`, { headers: { cookie } });
   }
   if (!reply.ok) throw new Error(`The root's descendants gave ${reply.status}: ${await reply.text()}`);
   return performance.now() - begin;
-}
-
-let quarter = 0;
-function isFirstOfItsQuarter({ done, total }: { done: number; total: number }): boolean {
-  const now = Math.floor((4 * done) / Math.max(1, total));
-  const isFirst = now !== quarter;
-  quarter = now;
-  return isFirst;
 }
 
 /** Audits a laboratory and waits for the end of the job. */

@@ -8,9 +8,9 @@ import { RecentMap } from './recent-map.ts';
 import type { LaboratoryDossier, StandardDossier, StoredGroup, StoredSource, StoredValue } from './stored.ts';
 
 /** What is kept at most: a value takes about 4 kB, a standard with its history about 14 kB. */
-const MOST_VALUES = 12_000;
-const MOST_STANDARDS = 4_000;
-const MOST_GROUPS = 1_000;
+const MOST_VALUES = 10_000;
+const MOST_STANDARDS = 3_000;
+const MOST_GROUPS = 300;
 /** A register up to this size is read whole when the first chain is asked for. */
 const WHOLE_REGISTER = 10_000;
 

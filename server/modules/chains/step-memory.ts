@@ -4,8 +4,8 @@ import { RecentMap } from './recent-map.ts';
 import type { StoredLink, StoredValue } from './stored.ts';
 
 /** Values whose facts and checks are kept, with those of about two links each: some 35 kB a value. */
-const MOST_VALUES = 2_500;
-const MOST_LINKS = 5_000;
+const MOST_VALUES = 2_000;
+const MOST_LINKS = 4_000;
 
 /**
  * Facts and checks of single values and links under one question, until the next act. What is true of a value does
