@@ -38,7 +38,7 @@ export function changedLinks(pairs: Pairs): ChangedLink[] {
         change: {
           group: 'How links stand' as const,
           says: `${name}, ${words}: ${is}, was ${was}${rulesOf(checks)}.`,
-          why: sentencesOf(isWorse ? pairs.after : pairs.before, checks).map((sentence) =>
+          why: whyOf(isWorse ? pairs.after : pairs.before, checks).map((sentence) =>
             isWorse ? sentence : `Before: ${sentence}`,
           ),
           at: linkKey(after),
@@ -55,10 +55,17 @@ function tellingChecks(chain: ChainResponse, link: Link, verdict: 'conduct' | 't
   const lasting = new Set(chain.rules.filter((rule) => rule.isLasting).map((rule) => rule.id));
   return chain.checks.filter(
     (check) =>
-      ['fails', 'cannot be judged'].includes(check.outcome) &&
+      isTelling(check) &&
       (check.verdict === verdict || (verdict === 'today' && lasting.has(check.rule))) &&
       isAbout(check, link),
   );
+}
+
+const GRAVE: Check['severity'][] = ['block', 'critical', 'major'];
+
+/** Whether a check moves a link's standing: a lesser rule that cannot be judged changes nothing. */
+function isTelling({ outcome, severity }: Check): boolean {
+  return outcome === 'fails' || (outcome === 'cannot be judged' && GRAVE.includes(severity));
 }
 
 /** The findings that one side has and the other has not; all of them where that leaves none. */
@@ -79,6 +86,20 @@ function isAbout({ subject }: Check, link: Link): boolean {
 function rulesOf(checks: readonly Check[]): string {
   const rules = [...new Set(checks.map((check) => check.rule))];
   return rules.length === 0 ? '' : ` (${rules.join(', ')})`;
+}
+
+const MOST_SENTENCES = 3;
+
+/** The gravest findings in words; how many more there are. */
+function whyOf(chain: ChainResponse, checks: readonly Check[]): string[] {
+  const rank = ({ outcome, severity }: Check) =>
+    Number(outcome !== 'fails') * 2 + Number(!GRAVE.includes(severity));
+  const sentences = sentencesOf(
+    chain,
+    checks.toSorted((a, b) => rank(a) - rank(b)),
+  );
+  const more = sentences.length - MOST_SENTENCES;
+  return more > 0 ? [...sentences.slice(0, MOST_SENTENCES), `And ${more} more.`] : sentences;
 }
 
 /** What the rules say, in their own words; where those would tell too much, the rule's title. */
