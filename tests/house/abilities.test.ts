@@ -77,6 +77,7 @@ const MAY: Record<string, Who[]> = {
   'calibration:draft': WRITERS,
   'calibration:read': [...READERS, ...INSTITUTE_PEOPLE],
   'calibration:withdraw': ['signatory'],
+  'calibration:correct': ['signatory'],
   'calibration:issue': ['signatory'],
   'draft:read': READERS,
   'draft:write': WRITERS,
@@ -85,6 +86,8 @@ const MAY: Record<string, Who[]> = {
   'notice:publish': ['signatory of the institute'],
   'chain:read': [],
   'downstream:read': [],
+  'dry-run:save': [...WRITERS, 'signatory'],
+  'dry-run:note': [...WRITERS, 'signatory'],
 };
 
 describe('the matrix of abilities', () => {
@@ -105,10 +108,10 @@ describe('the matrix of abilities', () => {
 const named = (name: string) => permissions.find((one) => one.name === name)!;
 
 describe('what depends on more than the role', () => {
-  it('a signatory without authorisation in force does not issue', () => {
-    expect(named('calibration:issue').allows(PEOPLE.signatory, { ...OF_HOME, isAuthorised: false })).toBe(
-      false,
-    );
+  it('a signatory without authorisation in force neither issues nor corrects', () => {
+    for (const name of ['calibration:issue', 'calibration:correct']) {
+      expect(named(name).allows(PEOPLE.signatory, { ...OF_HOME, isAuthorised: false })).toBe(false);
+    }
   });
 
   it.each(['metrologist', 'signatory', 'reader'])('an administrator gives the role of %s', (role) => {
