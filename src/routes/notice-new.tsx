@@ -6,6 +6,7 @@ import { Page } from '#src/components/layout/page.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { noticeListQuery, scaleVersionListQuery } from '#src/features/notices/api.ts';
 import { NoticeForm } from '#src/features/notices/components/notice-form.tsx';
+import { usePerson } from '#src/lib/session.ts';
 import { noticeOfChange } from '#src/features/notices/notice-form.ts';
 
 /** Primes what the form chooses from. */
@@ -23,6 +24,7 @@ export function Component() {
   const { scaleVersions } = useSuspenseQuery(scaleVersionListQuery).data;
   const [parameters] = useSearchParams();
   const navigate = useNavigate();
+  const { accountId } = usePerson();
   return (
     <Page title="New notice" sub="A published act on the mass scale, signed by the national institute">
       {publishesFor.length === 0 ? (
@@ -32,6 +34,7 @@ export function Component() {
         </EmptyState>
       ) : (
         <NoticeForm
+          accountId={accountId}
           publishesFor={publishesFor}
           scaleVersions={scaleVersions}
           notices={notices}

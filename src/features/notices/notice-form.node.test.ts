@@ -19,13 +19,12 @@ const typed = (changes: Partial<NoticeEntry> = {}): NoticeEntry => ({
   reason: 'Because.',
   fromScaleId: SCALE,
   terms: [{ ...EMPTY_TERM, performedTo: '2019-05-19', points: [{ on: '', shift: '-7' }], addedU: '10' }],
-  password: 'secret',
   ...changes,
 });
 
 describe('bodyOf', () => {
   it('makes a request that the contract takes: micrograms become grams, what is empty is left open', () => {
-    const body = PublishNoticeBody.parse(bodyOf(typed()));
+    const body = PublishNoticeBody.parse(bodyOf(typed(), 'secret'));
     expect(body).toMatchObject({ toScaleId: null, newScale: null, threshold: null, replacesId: null });
     expect(body.terms).toEqual([
       {
@@ -41,8 +40,8 @@ describe('bodyOf', () => {
   });
 
   it('leads to another scale, or to a new one of its effective day', () => {
-    expect(bodyOf(typed({ leadsTo: 'other', toScaleId: ISSUER })).toScaleId).toBe(ISSUER);
-    const made = bodyOf(typed({ leadsTo: 'new', newName: 'Next', newBasis: 'Agreed' }));
+    expect(bodyOf(typed({ leadsTo: 'other', toScaleId: ISSUER }), 'secret').toScaleId).toBe(ISSUER);
+    const made = bodyOf(typed({ leadsTo: 'new', newName: 'Next', newBasis: 'Agreed' }), 'secret');
     expect(made).toMatchObject({
       toScaleId: null,
       newScale: { name: 'Next', basis: 'Agreed', validFrom: '2025-01-01' },
@@ -51,7 +50,7 @@ describe('bodyOf', () => {
 
   it('hands on what cannot be read, so that the contract names it in its field', () => {
     const parsed = PublishNoticeBody.safeParse(
-      bodyOf(typed({ terms: [{ ...EMPTY_TERM, points: [{ on: '', shift: 'a lot' }] }] })),
+      bodyOf(typed({ terms: [{ ...EMPTY_TERM, points: [{ on: '', shift: 'a lot' }] }] }), 'secret'),
     );
     expect(parsed.error!.issues.map(({ path }) => entryField(path.join('.')))).toEqual([
       'terms.0.points.0.shift',
@@ -73,7 +72,7 @@ describe('entryField', () => {
 
 describe('noticeOfChange', () => {
   it('goes on from a dry run, and gives it back', () => {
-    const change = changesOf(PublishNoticeBody.parse(bodyOf(typed())))[0]!;
+    const change = changesOf(PublishNoticeBody.parse(bodyOf(typed(), 'secret')))[0]!;
     const { issuerId, term } = noticeOfChange(JSON.stringify(change))!;
     expect(issuerId).toBe(ISSUER);
     expect(term).toEqual({

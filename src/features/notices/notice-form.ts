@@ -42,7 +42,6 @@ export interface NoticeEntry {
   threshold: string;
   replacesId: string;
   terms: TermEntry[];
-  password: string;
 }
 
 export const EMPTY_TERM: TermEntry = {
@@ -73,7 +72,6 @@ export function emptyNotice(issuerId: string, day: string): NoticeEntry {
     threshold: '',
     replacesId: '',
     terms: [EMPTY_TERM],
-    password: '',
   };
 }
 
@@ -106,7 +104,7 @@ export function noticeOfChange(text: string | null): ProposedNotice | null {
 }
 
 /** The request that the entries make; what cannot be read is handed on, so that the contract names it. */
-export function bodyOf(entry: NoticeEntry): z.input<typeof PublishNoticeBody> {
+export function bodyOf(entry: NoticeEntry, password: string): z.input<typeof PublishNoticeBody> {
   const { leadsTo, newName: name, newBasis: basis, effectiveOn } = entry;
   return {
     issuerId: entry.issuerId,
@@ -130,7 +128,7 @@ export function bodyOf(entry: NoticeEntry): z.input<typeof PublishNoticeBody> {
       shiftPerKilogram: pointsOf(term),
       addedUPerKilogram: term.addedU === '' ? 0 : Number(grams(term.addedU)),
     })),
-    password: entry.password,
+    password,
   };
 }
 

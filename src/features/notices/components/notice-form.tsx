@@ -4,8 +4,11 @@ import type { WhatIfChange } from '#shared/contracts/downstream.ts';
 import { PublishNoticeBody, type NoticeListResponse, type ScaleVersion } from '#shared/contracts/notices.ts';
 import { Stack, TwoColumns } from '#src/components/layout/columns.tsx';
 import { Section } from '#src/components/layout/page.tsx';
+import { Button } from '#src/components/ui/button.tsx';
+import { Notice } from '#src/components/ui/notice.tsx';
 import { showFieldProblems } from '#src/lib/form.ts';
-import { ApiProblem } from '#src/lib/api-problem.ts';
+import { ApiProblem, problemLine } from '#src/lib/api-problem.ts';
+import { useLocalDraft } from '#src/lib/local-draft.ts';
 import { usePublishNotice } from '../api.ts';
 import {
   bodyOf,
@@ -21,6 +24,8 @@ import { NoticeSign } from './notice-sign.tsx';
 import { TermFields } from './term-fields.tsx';
 
 interface NoticeFormProps {
+  /** Whose entries are kept in this browser. */
+  accountId: string;
   publishesFor: NoticeListResponse['publishesFor'];
   scaleVersions: readonly ScaleVersion[];
   notices: NoticeListResponse['notices'];
@@ -33,6 +38,7 @@ interface NoticeFormProps {
 
 /** A notice as it is typed, what it would do, and the signature under it. */
 export function NoticeForm({
+  accountId,
   publishesFor,
   scaleVersions,
   notices,
@@ -48,29 +54,41 @@ export function NoticeForm({
       ...(from && { terms: [from.term] }),
     },
   });
+  const draft = useLocalDraft(accountId, `notice-new${from ? `:${JSON.stringify(from)}` : ''}`, form);
+  const [password, setPassword] = useState('');
+  const [passwordError, setPasswordError] = useState<string>();
   const [previewed, setPreviewed] = useState<WhatIfChange[] | null>(null);
   const publish = usePublishNotice();
-  const check = (entry: NoticeEntry): PublishNoticeBody | null => {
-    const parsed = PublishNoticeBody.safeParse(bodyOf(entry));
+  const check = (signature: string): PublishNoticeBody | null => {
+    form.clearErrors();
+    setPasswordError(undefined);
+    const parsed = PublishNoticeBody.safeParse(bodyOf(form.getValues(), signature));
     if (parsed.success) return parsed.data;
     parsed.error.issues.forEach(({ path, message }, at) => {
-      const name = entryField(path.join('.')) as FieldPath<NoticeEntry>;
-      form.setError(name, { type: 'entry', message }, { shouldFocus: at === 0 });
+      const name = entryField(path.join('.'));
+      if (name === 'password') setPasswordError(message);
+      else
+        form.setError(name as FieldPath<NoticeEntry>, { type: 'entry', message }, { shouldFocus: at === 0 });
     });
     return null;
   };
   const preview = () => {
-    form.clearErrors();
-    const body = check({ ...form.getValues(), password: '-' });
+    const body = check('-');
     if (body) setPreviewed(changesOf(body));
   };
   const sign = () => {
-    form.clearErrors();
-    const body = check(form.getValues());
+    const body = check(password);
     if (!body) return;
     publish.mutate(body, {
-      onSuccess: ({ id }) => onPublished(id),
-      onError: (error) => showFieldProblems(asEntered(error), form),
+      onSuccess: ({ id }) => {
+        draft.clear();
+        onPublished(id);
+      },
+      onError: (error) => {
+        const wrong = error instanceof ApiProblem ? error.fields.password : undefined;
+        if (wrong) setPasswordError(problemLine(wrong));
+        showFieldProblems(asEntered(error), form, (path) => path !== 'password');
+      },
     });
   };
   return (
@@ -88,12 +106,16 @@ export function NoticeForm({
             <Stack gap="loose">
               <NoticePreview previewed={previewed} onPreview={preview} />
               <NoticeSign
+                password={password}
+                onPassword={setPassword}
+                passwordError={passwordError}
                 isBusy={publish.isPending}
                 error={isBesideFields(publish.error) ? null : publish.error}
               />
             </Stack>
           }
         >
+          {draft.restoredFrom !== null && <Restored onDiscard={draft.discard} />}
           <NoticeFields publishesFor={publishesFor} scaleVersions={scaleVersions} notices={notices} />
           <Section title="Which certificates, and what they get">
             <TermFields />
@@ -101,6 +123,19 @@ export function NoticeForm({
         </TwoColumns>
       </form>
     </FormProvider>
+  );
+}
+
+function Restored({ onDiscard }: { onDiscard: () => void }) {
+  const answers = (
+    <Button weight="text" onClick={onDiscard}>
+      Begin anew
+    </Button>
+  );
+  return (
+    <Notice answers={answers}>
+      Filled again with what you typed here before; your password is never kept.
+    </Notice>
   );
 }
 

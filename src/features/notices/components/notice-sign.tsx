@@ -3,12 +3,19 @@ import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { TextField } from '#src/components/ui/text-field.tsx';
-import { errorAt } from '#src/lib/form.ts';
 import type { NoticeEntry } from '../notice-form.ts';
 
-/** The signature: what will be fixed, in one sentence, and the password again. */
-export function NoticeSign({ isBusy, error }: { isBusy: boolean; error: Error | null }) {
-  const { register, control, formState } = useFormContext<NoticeEntry>();
+interface NoticeSignProps {
+  password: string;
+  onPassword: (password: string) => void;
+  passwordError: string | undefined;
+  isBusy: boolean;
+  error: Error | null;
+}
+
+/** The signature: what will be fixed, in one sentence, and the password again. It is kept nowhere. */
+export function NoticeSign({ password, onPassword, passwordError, isBusy, error }: NoticeSignProps) {
+  const { control } = useFormContext<NoticeEntry>();
   const [number, effectiveOn] = useWatch({ control, name: ['number', 'effectiveOn'] });
   return (
     <Section title="Sign">
@@ -19,8 +26,9 @@ export function NoticeSign({ isBusy, error }: { isBusy: boolean; error: Error | 
         label="Your password, as your signature"
         type="password"
         autoComplete="current-password"
-        {...register('password')}
-        error={errorAt(formState.errors, 'password')}
+        value={password}
+        onChange={(event) => onPassword(event.target.value)}
+        error={passwordError}
       />
       {error && <ErrorNotice error={error} hidesFields />}
       <p>

@@ -1,5 +1,5 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { fireEvent, render, screen, waitFor } from '@testing-library/react';
+import { cleanup, fireEvent, render, screen, waitFor } from '@testing-library/react';
 import { MemoryRouter } from 'react-router';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import type { NoticeOwnRow, NoticeRow } from '#shared/contracts/notices.ts';
@@ -104,7 +104,10 @@ const SCALE = {
 };
 
 describe('a new notice', () => {
-  afterEach(() => vi.unstubAllGlobals());
+  afterEach(() => {
+    vi.unstubAllGlobals();
+    localStorage.clear();
+  });
 
   function showForm() {
     const answer = vi.fn((_: string, __: RequestInit) =>
@@ -120,6 +123,7 @@ describe('a new notice', () => {
     render(
       <QueryClientProvider client={new QueryClient()}>
         <NoticeForm
+          accountId="a"
           publishesFor={[LABORATORY]}
           scaleVersions={[SCALE]}
           notices={[]}
@@ -140,6 +144,19 @@ describe('a new notice', () => {
     expect(await screen.findByText('Give the notice a number')).toBeTruthy();
     expect(screen.getByText('Type your password again: it is your signature')).toBeTruthy();
     expect(answer).not.toHaveBeenCalled();
+  });
+
+  it('keeps what was typed over a closed tab, and never the password', async () => {
+    showForm();
+    type('Title', 'Half a notice');
+    type(/^Your password/, 'very secret');
+    await waitFor(() => expect(JSON.stringify(localStorage)).toContain('Half a notice'));
+    expect(JSON.stringify(localStorage)).not.toContain('very secret');
+    cleanup();
+    showForm();
+    expect(screen.getByText(/Filled again with what you typed/)).toBeTruthy();
+    expect(screen.getByLabelText<HTMLInputElement>('Title').value).toBe('Half a notice');
+    expect(screen.getByLabelText<HTMLInputElement>(/^Your password/).value).toBe('');
   });
 
   it('is sent in grams, and says beforehand that it is back-dated', async () => {

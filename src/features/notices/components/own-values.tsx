@@ -71,14 +71,14 @@ function OwnTable({ rows }: { rows: readonly NoticeOwnRow[] }) {
       <thead>
         <tr>
           <Head>Weight</Head>
-          <Head>Certificate</Head>
+          <Head>What to do</Head>
           <Head align="right">Before</Head>
           <Head align="right">U before</Head>
           <Head align="right">Shift</Head>
           <Head align="right">After</Head>
           <Head align="right">U after</Head>
           <Head align="right">Shifts/U</Head>
-          <Head>What to do</Head>
+          <Head>Certificate</Head>
         </tr>
       </thead>
       <tbody>
@@ -93,9 +93,8 @@ function OwnTable({ rows }: { rows: readonly NoticeOwnRow[] }) {
                 {row.class && `, ${row.class}`}
               </span>
             </Cell>
-            <Cell className="whitespace-nowrap">
-              <span className="font-mono text-sm">{row.certificateNo}</span>
-              <span className="block text-sm text-ink-2">{`${row.quantity}, ${row.performedEnd}`}</span>
+            <Cell className="min-w-56">
+              <WhatToDo row={row} />
             </Cell>
             <Cell align="right">
               <Deviation value={row.deviationBefore} u={row.expandedUBefore} k={row.k} />
@@ -113,8 +112,9 @@ function OwnTable({ rows }: { rows: readonly NoticeOwnRow[] }) {
               <Expanded value={row.expandedUAfter} k={row.k} />
             </Cell>
             <Cell align="right">{row.ratio === null ? '' : ratioText(row.ratio, decimalMark)}</Cell>
-            <Cell className="min-w-56">
-              <WhatToDo row={row} />
+            <Cell className="whitespace-nowrap">
+              <span className="font-mono text-sm">{row.certificateNo}</span>
+              <span className="block text-sm text-ink-2">{`${row.quantity}, ${row.performedEnd}`}</span>
             </Cell>
           </Row>
         ))}
