@@ -28,7 +28,7 @@ export const agesAlongChain: ChainRuleOf = {
   },
   judge(chain) {
     const links = chain.links.filter(isAgeing);
-    const oldest = links.toSorted((a, b) => monthsOf(b) - monthsOf(a))[0];
+    const oldest = oldestOf(links);
     if (!oldest) return doesNotApply('no link');
     const ungoverned = links.filter((link) => !isGoverned(link));
     const tooOld = ungoverned.find((link) => isWithinLongest(link) === false);
@@ -56,6 +56,16 @@ function isWithinLongest({ child, parent, usedEnd }: LinkFacts): boolean | null 
 
 function monthsOf({ parent, usedEnd }: LinkFacts): number {
   return monthsBetween(parent.performedEnd, usedEnd);
+}
+
+function oldestOf(links: readonly LinkFacts[]): LinkFacts | null {
+  let oldest: LinkFacts | null = null;
+  let most = -1;
+  for (const link of links) {
+    const months = monthsOf(link);
+    if (months > most) [oldest, most] = [link, months];
+  }
+  return oldest;
 }
 
 function textsOf(link: LinkFacts, { values, question }: ChainFacts): Record<string, string> {

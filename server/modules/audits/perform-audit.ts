@@ -1,4 +1,3 @@
-import { createHash } from 'node:crypto';
 import type { Sequelize } from 'sequelize';
 import { canonicalJson } from '#shared/canonical-json.ts';
 import { ENGINE_VERSION } from '#shared/engine/version.ts';
@@ -11,6 +10,7 @@ import type { AuditQuestion } from './audit-question.ts';
 import { AuditTally } from './audit-tally.ts';
 import type { FindingRow } from './audits.model.ts';
 import { Breath } from './breath.ts';
+import { FactsDigest } from './facts-digest.ts';
 import { focusCount, focusIds } from './focus-values.queries.ts';
 import { PackedList } from './packed-list.ts';
 import { ResultDigest, type ResultFoot } from './result-digest.ts';
@@ -18,8 +18,11 @@ import { SeenIds } from './seen-ids.ts';
 
 /** Chains over one compiled network. */
 const BATCH = 32;
-/** Steps kept for the chains that follow, about 20 kB each with what was read for them; then all is let go. */
-const MOST_STEPS = 6_000;
+/**
+ * Findings that cannot be judged and are kept; further ones are counted only. A laboratory's are some ten thousand; of a
+ * million values they would fill the memory. What fails is always kept.
+ */
+const MOST_NOT_JUDGED = 100_000;
 /** Subjects whose facts are packed together: they are alike, and shrink to a tenth. */
 export const FACTS_PER_BLOCK = 100;
 
@@ -51,26 +54,25 @@ export async function performAudit(
   const total = await focusCount(database, question);
   const audit = new Audit(question);
   const breath = new Breath();
-  let memory = await freshMemory(database, question);
+  const { store, steps } = await ownMemory(database, question);
   let done = 0;
   if (!(await onProgress(0, total))) return null;
   for await (const ids of focusIds(database, question)) {
     for (let from = 0; from < ids.length; from += BATCH) {
-      const batch = await chainBatch(memory.store, memory.steps, ids.slice(from, from + BATCH));
+      const batch = await chainBatch(store, steps, ids.slice(from, from + BATCH));
       for (const focus of batch.focuses) {
-        audit.chain(focus, batch.valuesOf(focus), batch.factsOf(focus), memory.steps);
+        audit.chain(focus, batch.valuesOf(focus), batch.factsOf(focus), steps);
         await breath.taken();
       }
       done += batch.focuses.length;
       if (!(await onProgress(done, total))) return null;
-      if (memory.steps.size > MOST_STEPS) memory = await freshMemory(database, question);
     }
   }
   return audit.end(done);
 }
 
 /** A memory of the audit's own: what it walks over does not push out what visitors ask about. */
-async function freshMemory(database: Sequelize, question: AuditQuestion) {
+async function ownMemory(database: Sequelize, question: AuditQuestion) {
   const store = new ChainStore(database);
   await store.catchUp();
   const { day, asOf } = question;
@@ -85,10 +87,11 @@ class Audit {
   readonly #judged = new SeenIds();
   readonly #findings = new PackedList<Finding>(1_000);
   readonly #facts = new PackedList<unknown>(FACTS_PER_BLOCK);
-  readonly #factsHash = createHash('sha256');
+  readonly #seenFacts = new FactsDigest();
   readonly #digest: ResultDigest;
   #values = 0;
   #links = 0;
+  #notJudged = 0;
 
   constructor(question: AuditQuestion) {
     this.#digest = new ResultDigest({ ...question, ruleSet: RULE_SET_VERSION, engine: ENGINE_VERSION });
@@ -101,7 +104,7 @@ class Audit {
       this.#value(focus, value, steps);
       for (const link of linksOf.get(value.uid) ?? []) this.#link(focus, link, steps);
     });
-    this.#seen(chainSeen(facts));
+    this.#seenFacts.add(chainDigested(facts));
     const place = {
       subject: 'chain',
       value_uid: focus.uid,
@@ -122,13 +125,13 @@ class Audit {
       findings: this.#findings,
       facts: this.#facts,
       resultSha256: this.#digest.end(foot),
-      factsSha256: this.#factsHash.digest('hex'),
+      factsSha256: this.#seenFacts.end(),
     };
   }
 
   #value(focus: StoredValue, facts: ValueFacts, steps: StepMemory): void {
     this.#values += 1;
-    this.#seen(facts);
+    this.#seenFacts.add(facts);
     const place = {
       subject: 'value',
       value_uid: facts.uid,
@@ -143,7 +146,7 @@ class Audit {
   #link(focus: StoredValue, facts: LinkFacts, steps: StepMemory): void {
     if (facts.role !== 'reference') return;
     this.#links += 1;
-    this.#seen({ ...facts, child: facts.child.uid, parent: facts.parent.uid });
+    this.#seenFacts.add({ ...facts, child: facts.child.uid, parent: facts.parent.uid });
     const place = {
       subject: 'link',
       value_uid: facts.child.uid,
@@ -154,8 +157,11 @@ class Audit {
     this.#keep(steps.judgeLink(facts), place, () => facts);
   }
 
-  #seen(facts: unknown): void {
-    this.#factsHash.update(canonicalJson(facts), 'utf8').update('\n');
+  #isKept(outcome: Check['outcome']): outcome is Finding['outcome'] {
+    if (outcome === 'fails') return true;
+    if (outcome !== 'cannot be judged' || this.#notJudged === MOST_NOT_JUDGED) return false;
+    this.#notJudged += 1;
+    return true;
   }
 
   #keep(checks: readonly Check[], place: Place, facts: () => unknown): void {
@@ -163,7 +169,7 @@ class Audit {
     for (const check of checks) {
       this.#tally.add(check);
       const { rule, verdict, outcome, severity, parameters } = check;
-      if (outcome === 'holds' || outcome === 'does not apply') continue;
+      if (!this.#isKept(outcome)) continue;
       factsN ??= this.#facts.add(facts());
       const finding: Finding = {
         ...place,
@@ -180,6 +186,11 @@ class Audit {
       this.#digest.finding({ run_id: '', ...finding });
     }
   }
+}
+
+/** What a chain's facts hold beside its steps, which are digested by themselves. */
+function chainDigested({ question: _question, values, links, ...whole }: ChainFacts): object {
+  return { ...whole, values: values.map((value) => value.uid).join(' '), links: links.length };
 }
 
 /** A chain's facts with its steps by name: what those hold is told with them. */

@@ -7,8 +7,11 @@ import type { ChainStore, Closure } from './chain-store.ts';
 import { contributionsOf, originsByKey } from './contributions.ts';
 import { noticesOfLinks } from './notice-facts.ts';
 import { withNotices } from './noticed-closure.ts';
-import type { StepMemory } from './step-memory.ts';
+import { StepMemory } from './step-memory.ts';
 import type { StoredValue } from './stored.ts';
+
+/** Values that a memory of steps holds without forgetting one. */
+const SURELY_KEPT = 2_000;
 
 /** Several chains over one closure and one compiled network: what they share above is worked out once. */
 export interface ChainBatch {
@@ -36,7 +39,10 @@ export async function chainBatch(
     store.laboratories(closure.values.flatMap((value) => [value.issuerId, value.holderId])),
   ]);
   const ids = closure.values.map((value) => value.id);
-  const widened = await store.closure([...ids, ...earlierThan(closure, steps, standards)]);
+  // Steps known now may be forgotten before a wide batch comes to them: then they are assembled anew.
+  const isWide = closure.values.length > SURELY_KEPT;
+  const earlier = earlierThan(closure, isWide ? new StepMemory(question) : steps, standards);
+  const widened = await store.closure([...ids, ...earlier]);
   const byId = new Map(widened.values.map((value) => [value.id, value]));
   const focuses = focusIds.map((id) => byId.get(id)!);
   const noticed = withNotices(widened, noticesInForce(store.notices, question.day, question.known));

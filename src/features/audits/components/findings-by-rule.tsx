@@ -2,6 +2,7 @@ import { useInfiniteQuery } from '@tanstack/react-query';
 import type { z } from 'zod';
 import type { AuditFindingGroup, AuditResult } from '#shared/contracts/audits.ts';
 import { groupBy } from '#shared/group-by.ts';
+import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { stateOfOutcome } from '#shared/states.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
@@ -32,6 +33,9 @@ export function FindingsByRule({ auditId, days, result, search, onChange, hasOwn
   const { data, error, refetch } = useInfiniteQuery(findingsQuery(auditId, filter));
   const groups = groupBy(data?.pages[0]?.groups ?? [], (group) => group.rule);
   const rules = result.rules.filter((rule) => groups.has(rule.id)).sort(byGravity(groups));
+  const found = result.counts
+    .filter(({ outcome }) => outcome === 'fails' || outcome === 'cannot be judged')
+    .reduce((sum, { count }) => sum + count, 0);
   return (
     <Section
       title="Findings by rule"
@@ -48,6 +52,11 @@ export function FindingsByRule({ auditId, days, result, search, onChange, hasOwn
       <FindingFilters search={search} onChange={onChange} hasOwners={hasOwners} />
       {error && <ErrorNotice error={error} onRetry={() => void refetch()} />}
       {!data && !error && <Waiting>Reading the findings</Waiting>}
+      {found > result.findings && (
+        <p className="text-ink-2">
+          {`Not all that cannot be judged is listed: ${formatDecimal(String(found - result.findings))} findings are counted only.`}
+        </p>
+      )}
       {data && rules.length === 0 && (
         <EmptyState>
           {result.findings === 0
