@@ -11,7 +11,16 @@ export interface FrameTimes {
   layoutMs: number;
   /** From the navigation to the first plates on screen. */
   shownMs: number;
-  moves: { name: string; frames: number[] }[];
+  moves: Move[];
+}
+
+/** One way of moving the drawing. */
+export interface Move {
+  name: string;
+  /** Time between two frames, ms by the clock: with the waiting for other programs of the machine. */
+  frames: number[];
+  /** Processor time of the page's longest single task, ms: without that waiting. */
+  longestTaskMs: number;
 }
 
 interface Product {
@@ -35,9 +44,12 @@ export async function frameTimes(product: Product, plates: number): Promise<Fram
     const { layoutMs, shownMs } = await untilDrawn(page);
     const box = (await page.locator('.react-flow').boundingBox())!;
     const middle = { x: box.x + box.width / 2, y: box.y + Math.min(box.height, 800) / 2 };
-    const moves = [];
-    for (const { name, act } of MOVES)
-      moves.push({ name, frames: await framesDuring(page, () => act(page, middle)) });
+    const moves: Move[] = [];
+    for (const { name, act } of MOVES) {
+      await browser.startTracing(page, { categories: ['toplevel'] });
+      const frames = await framesDuring(page, () => act(page, middle));
+      moves.push({ name, frames, longestTaskMs: longestTask(await browser.stopTracing()) });
+    }
     return { plates: chain.nodes.length, links: chain.links.length, layoutMs, shownMs, moves };
   } finally {
     await browser.close();
@@ -119,14 +131,36 @@ async function framesDuring(page: Page, act: () => Promise<void>): Promise<numbe
   return times.slice(1).map((time, index) => time - times[index]!);
 }
 
+interface TraceEvent {
+  name: string;
+  ph: string;
+  pid: number;
+  tid: number;
+  /** Processor time of the event's thread, microseconds. */
+  tdur?: number;
+  args: { name?: string };
+}
+
+function longestTask(trace: Buffer): number {
+  const { traceEvents } = JSON.parse(trace.toString()) as { traceEvents: TraceEvent[] };
+  const threadOf = ({ pid, tid }: TraceEvent) => `${pid} ${tid}`;
+  const mains = new Set(
+    traceEvents
+      .filter(({ name, args }) => name === 'thread_name' && args.name === 'CrRendererMain')
+      .map(threadOf),
+  );
+  const tasks = traceEvents.filter((event) => event.ph === 'X' && event.tdur && mains.has(threadOf(event)));
+  return Math.max(0, ...tasks.map(({ tdur }) => tdur! / 1000));
+}
+
 /** The frames of a move in one line. */
-export function framesInWords({ name, frames }: FrameTimes['moves'][number]): string {
+export function framesInWords({ name, frames, longestTaskMs }: Move): string {
   const sorted = frames.toSorted((a, b) => a - b);
   const at = (share: number) => sorted[Math.min(sorted.length - 1, Math.floor(share * sorted.length))] ?? 0;
   const slow = frames.filter((frame) => frame > 50).length;
   const figures = [at(0.5), at(0.95), at(1)].map((value) => value.toFixed(1).padStart(7));
-  return `  ${name.padEnd(20)} ${String(frames.length).padStart(5)} ${figures.join(' ')} ${String(slow).padStart(8)}`;
+  return `  ${name.padEnd(20)} ${String(frames.length).padStart(5)} ${figures.join(' ')} ${String(slow).padStart(8)} ${longestTaskMs.toFixed(1).padStart(13)}`;
 }
 
 /** Head of the lines of `framesInWords`. */
-export const FRAMES_HEAD = `  ${''.padEnd(20)} frames     p50     p95     max  > 50 ms`;
+export const FRAMES_HEAD = `  ${''.padEnd(20)} frames     p50     p95     max  > 50 ms  longest task`;

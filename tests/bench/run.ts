@@ -6,21 +6,24 @@ import { spawnSync } from 'node:child_process';
 import path from 'node:path';
 import { openDatabase } from '#server/db/sequelize.ts';
 import { readRow, readRows } from '#server/db/read.ts';
+import { MOST_PLATES_ONE_BY_ONE } from '#shared/drawing/as-drawn.ts';
 import { restartServer } from '#tests/support/restart-server.ts';
 import { demoSession } from '#tests/support/signed-in-client.ts';
 import { toolEnvironment } from '#tests/support/tool-environment.ts';
 import { asker, chainRound, ROUND_HEAD, roundInWords } from './chain-rounds.ts';
 import { firstLoad } from './first-load.ts';
+import { FRAMES_HEAD, framesInWords, frameTimes } from './frames.ts';
 
 const VALUES = 200;
 /** Any number: another one draws other values. */
 const SEED = 20_260_520;
 const LIMIT_KB = 200;
 
-const { baseUrl, databaseUrl, pidFile } = toolEnvironment();
+const { baseUrl, databaseUrl, pidFile, chromium } = toolEnvironment();
 
 await benchChains();
 benchFirstLoad();
+await benchFrames();
 benchEngine();
 
 async function benchChains(): Promise<void> {
@@ -61,6 +64,22 @@ function benchFirstLoad(): void {
     const name = chunk.replace(/-[\w-]{8}\.js$/, '');
     console.log(`  ${name} ${kilobytes.toFixed(1)} kB${kilobytes > LIMIT_KB ? ', above the aim' : ''}`);
   }
+}
+
+async function benchFrames(): Promise<void> {
+  const { cookie } = await demoSession(baseUrl, 'registrar@network.example');
+  const { plates, links, layoutMs, shownMs, moves } = await frameTimes(
+    { baseUrl, cookie, chromium },
+    MOST_PLATES_ONE_BY_ONE,
+  );
+  console.log(
+    `\nA drawing of ${plates} plates and ${links} links moved, ms; layout ${layoutMs.toFixed(0)} ms in its worker, on screen after ${shownMs.toFixed(0)} ms`,
+  );
+  console.log(FRAMES_HEAD);
+  for (const move of moves) console.log(framesInWords(move));
+  console.log(
+    '  aim: no frame above 50 ms; the longest task is processor time, without waiting for other programs',
+  );
 }
 
 function benchEngine(): void {
