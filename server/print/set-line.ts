@@ -17,6 +17,8 @@ interface Run {
 const THIN = 0.2;
 /** Digits of one width; only the sans has others. Shaping with a feature is not remembered, so it is asked where needed. */
 const FEATURES: PDFKit.Mixins.OpenTypeFeatures[] = ['tnum'];
+/** Signs that have a tabular form: digits, and what stands among them. */
+const NUMERIC = /[\d#$%+<=>¢£¥€°±×÷−]/;
 const HALO_WIDTH = 4;
 
 interface Place {
@@ -103,7 +105,7 @@ function runWidth(paper: Paper, font: ShippedFont, text: string): number {
 function featuresOf({ font, text }: { font: ShippedFont; text: string }): {
   features?: PDFKit.Mixins.OpenTypeFeatures[];
 } {
-  return font.hasProportionalDigits && /\d/.test(text) ? { features: FEATURES } : {};
+  return font.hasProportionalDigits && NUMERIC.test(text) ? { features: FEATURES } : {};
 }
 
 function use(paper: Paper, font: ShippedFont, size: number): void {
