@@ -38,9 +38,7 @@ export function changedLinks(pairs: Pairs): ChangedLink[] {
         change: {
           group: 'How links stand' as const,
           says: `${name}, ${words}: ${is}, was ${was}${rulesOf(checks)}.`,
-          why: whyOf(isWorse ? pairs.after : pairs.before, checks).map((sentence) =>
-            isWorse ? sentence : `Before: ${sentence}`,
-          ),
+          why: isWorse ? whyOf(pairs.after, checks) : whyOf(pairs.before, checks, 'Before: '),
           at: linkKey(after),
           mark: `was ${was}`,
           weight: Math.max(GRAVEST_LAST.indexOf(is), GRAVEST_LAST.indexOf(was)),
@@ -91,13 +89,13 @@ function rulesOf(checks: readonly Check[]): string {
 const MOST_SENTENCES = 3;
 
 /** The gravest findings in words; how many more there are. */
-function whyOf(chain: ChainResponse, checks: readonly Check[]): string[] {
+function whyOf(chain: ChainResponse, checks: readonly Check[], lead = ''): string[] {
   const rank = ({ outcome, severity }: Check) =>
     Number(outcome !== 'fails') * 2 + Number(!GRAVE.includes(severity));
   const sentences = sentencesOf(
     chain,
     checks.toSorted((a, b) => rank(a) - rank(b)),
-  );
+  ).map((sentence) => lead + sentence);
   const more = sentences.length - MOST_SENTENCES;
   return more > 0 ? [...sentences.slice(0, MOST_SENTENCES), `And ${more} more.`] : sentences;
 }

@@ -2,13 +2,12 @@ import type { z } from 'zod';
 import type { ChainLink, ChainResponse, ChainSource, ChainValue } from '#shared/contracts/chains.ts';
 import { ENGINE_VERSION } from '#shared/engine/version.ts';
 import { RULE_SET_VERSION } from '#shared/rules/rule-set.ts';
-import { stateAt, type ValueEnd, type ValueStanding } from '#shared/state-at.ts';
 import { readsInFull, type User } from '#server/policy/user.ts';
 import { valueView } from '#server/policy/value-view.ts';
 import type { Chain } from './chain.service.ts';
 import type { ChainSubject } from './chains.policy.ts';
 import { redactCheck, rulesTold } from './checks.presenter.ts';
-import { fateOf } from './fate.ts';
+import { inForceInstead, noteOf, standingOn, succeededBy } from './focus.presenter.ts';
 import { becauseLost, nowOf, presentAsNowKnown } from './chain-now.presenter.ts';
 import type { StoredSource, StoredValue } from './stored.ts';
 
@@ -146,44 +145,6 @@ function presentValue(
     share: isKnown ? (shares.through.get(value.uid) ?? 0) : null,
     now: nowOf(value, chain),
   };
-}
-
-function standingOn(
-  { question }: Chain,
-  value: { issuedOn: string; recordedAt: string },
-  ends: readonly ValueEnd[],
-): ValueStanding {
-  const { day, known } = question;
-  return stateAt({ effectiveFrom: value.issuedOn, recordedAt: value.recordedAt }, ends, day, known);
-}
-
-/** What stood of this weight in the focus's kind while the focus did not yet: the latest determined. */
-function inForceInstead(chain: Chain): ChainResponse['inForceInstead'] {
-  const { focus } = chain;
-  const { state } = standingOn(chain, focus, []);
-  if (state === 'in force') return null;
-  // The history is in the order of determination.
-  const stood = chain.standards
-    .get(focus.standardId)!
-    .history.findLast(
-      (row) => row.quantity === focus.quantity && standingOn(chain, row, row.ends).state === 'in force',
-    );
-  return stood ? { uid: stood.uid, certificateNo: stood.certificateNo } : null;
-}
-
-/** Both kinds are the certificate's: said where what they rest on has moved since. */
-function noteOf({ sideBySide, now }: Chain): string | null {
-  if (sideBySide.note !== null || !now?.focus.isTouched || sideBySide.sides.length === 0)
-    return sideBySide.note;
-  return 'As certified: how far the value has moved since stands above.';
-}
-
-/** The end of the way from one revision of the focus to the next. */
-function succeededBy({ focus, standards, question }: Chain): ChainResponse['succeededBy'] {
-  const dossier = standards.get(focus.standardId)!;
-  const fate = fateOf(focus, dossier, question);
-  const row = fate.kind === 'replaced' && dossier.history.find(({ id }) => id === fate.byId);
-  return row ? { uid: row.uid, certificateNo: row.certificateNo, revisionN: row.revisionN } : null;
 }
 
 function originOf(value: StoredValue): z.input<typeof ChainValue>['uOrigin'] {
