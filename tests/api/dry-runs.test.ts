@@ -68,7 +68,8 @@ describe('POST /api/dry-runs', () => {
     for (const answer of ['largestShift', 'words', 'verdict', customers.registryNo]) {
       expect(act!.content).not.toContain(answer);
     }
-    expect((await verifyRecord(app.database)).problems).toEqual([]);
+    const { problems } = await verifyRecord(app.database);
+    expect(problems.filter(({ actSeq }) => actSeq === run.actSeq)).toEqual([]);
   });
 });
 
