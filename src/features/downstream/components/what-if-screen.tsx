@@ -7,7 +7,6 @@ import { Page, Section } from '#src/components/layout/page.tsx';
 import { Button, LinkButton } from '#src/components/ui/button.tsx';
 import { DayField } from '#src/components/ui/day-field.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
-import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Switch } from '#src/components/ui/switch.tsx';
 import { namedQuery, suppositionOf } from '../api.ts';
 import { GROUPINGS } from '../groups.ts';
@@ -132,7 +131,6 @@ function Supposed({
           </li>
         ))}
       </ol>
-      {named.error && <ErrorNotice error={named.error} />}
     </Section>
   );
 }
