@@ -107,13 +107,15 @@ export const AuditResult = z.object({
   actSeq: z.number().int(),
 });
 
-/** A finding that one of two runs has and the other has not. */
+const Found = z.object({ outcome: Outcome, severity: Severity });
+
+/** A finding that one of two runs has and the other has not, or gives another outcome or severity. */
 export const AuditDifference = z.object({
   rule: z.string(),
   verdict: Verdict,
   registryNo: z.string(),
-  then: Outcome.nullable(),
-  now: Outcome.nullable(),
+  then: Found.nullable(),
+  now: Found.nullable(),
 });
 
 /** How a repeated audit compares with the one it repeats. */

@@ -259,8 +259,8 @@ describe('an audit asked again', () => {
       rule: 'B-14',
       verdict: 'conduct',
       registryNo: made.own.registryNo,
-      then: 'fails',
-      now: 'fails',
+      then: { outcome: 'fails', severity: 'minor' },
+      now: { outcome: 'fails', severity: 'critical' },
     });
     await app.owner.query('DELETE FROM audit_facts WHERE run_id = :id', { replacements: { id: first.id } });
     expect((await problems()).map((problem) => problem.where).sort()).toEqual([

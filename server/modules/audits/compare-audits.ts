@@ -8,6 +8,7 @@ import { ResultDigest } from './result-digest.ts';
 
 type Comparison = z.infer<typeof AuditComparison>;
 type Difference = z.infer<typeof AuditDifference>;
+type Found = NonNullable<Difference['then']>;
 
 const SHOWN = 50;
 
@@ -53,27 +54,43 @@ async function differencesOf(
   first: string,
   second: string,
 ): Promise<Pick<Comparison, 'differences' | 'differenceCount'>> {
-  const gone = await lacking(
+  const { rows: gone, count: goneCount } = await lacking(
     database,
     first,
     second,
     'AND b.outcome = a.outcome AND b.severity = a.severity',
   );
-  const added = await lacking(database, second, first, '');
+  const { rows: added, count: addedCount } = await lacking(database, second, first, '');
   const differences: Difference[] = [
-    ...gone.rows.map(({ outcome, other, ...row }) => ({ ...row, then: outcome, now: other })),
-    ...added.rows.map(({ outcome, other: _none, ...row }) => ({ ...row, then: null, now: outcome })),
+    ...gone.map((row) =>
+      difference(row, foundOf(row.outcome, row.severity), foundOf(row.otherOutcome, row.otherSeverity)),
+    ),
+    ...added.map((row) => difference(row, null, foundOf(row.outcome, row.severity))),
   ];
-  return { differences: differences.slice(0, SHOWN), differenceCount: gone.count + added.count };
+  return { differences: differences.slice(0, SHOWN), differenceCount: goneCount + addedCount };
 }
 
 interface LackingRow {
   rule: string;
   verdict: Difference['verdict'];
   registryNo: string;
-  outcome: Difference['then'];
+  outcome: Found['outcome'];
+  severity: Found['severity'];
   /** What the other run says of the same, where it says anything. */
-  other: Difference['then'];
+  otherOutcome: Found['outcome'] | null;
+  otherSeverity: Found['severity'] | null;
+}
+
+function difference(
+  { rule, verdict, registryNo }: LackingRow,
+  then: Found | null,
+  now: Found | null,
+): Difference {
+  return { rule, verdict, registryNo, then, now };
+}
+
+function foundOf(outcome: Found['outcome'] | null, severity: Found['severity'] | null): Found | null {
+  return outcome && severity && { outcome, severity };
 }
 
 async function lacking(
@@ -87,10 +104,11 @@ async function lacking(
   const [rows, count] = await Promise.all([
     readRows<LackingRow>(
       database,
-      `SELECT a.rule, a.verdict, a.outcome,
+      `SELECT a.rule, a.verdict, a.outcome, a.severity,
          (SELECT s.registry_no FROM assigned_value v JOIN standard s ON s.id = v.standard_id
           WHERE v.uid = a.value_uid) AS registryNo,
-         (SELECT b.outcome FROM audit_finding b WHERE ${SAME} LIMIT 1) AS other
+         (SELECT b.outcome FROM audit_finding b WHERE ${SAME} LIMIT 1) AS otherOutcome,
+         (SELECT b.severity FROM audit_finding b WHERE ${SAME} LIMIT 1) AS otherSeverity
        FROM ${from} ORDER BY a.n LIMIT ${SHOWN}`,
       { run, other },
     ),

@@ -1,6 +1,7 @@
 import { Link } from 'react-router';
 import type { z } from 'zod';
 import type { AuditComparison } from '#shared/contracts/audits.ts';
+import { severityWord } from '#shared/severity-words.ts';
 import { paths } from '#src/app/paths.ts';
 import { Notice } from '#src/components/ui/notice.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
@@ -71,8 +72,8 @@ function Differences({ comparison }: { comparison: Compared }) {
               </Cell>
               <Cell isMono>{row.registryNo}</Cell>
               <Cell>{row.verdict === 'conduct' ? 'at use' : 'today'}</Cell>
-              <Cell>{row.then ?? 'no finding'}</Cell>
-              <Cell>{row.now ?? 'no finding'}</Cell>
+              <Cell>{foundText(row.then)}</Cell>
+              <Cell>{foundText(row.now)}</Cell>
             </Row>
           ))}
         </tbody>
@@ -82,4 +83,8 @@ function Differences({ comparison }: { comparison: Compared }) {
       )}
     </>
   );
+}
+
+function foundText(found: Compared['differences'][number]['then']): string {
+  return found ? `${found.outcome}, ${severityWord(found.severity)}` : 'no finding';
 }
