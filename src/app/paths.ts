@@ -36,8 +36,8 @@ export const paths = {
     /** @param days in force on, as known on; today where left out */
     href: (valueUid: string, days: Days = {}) => `/chains/${valueUid}${daysText(days)}`,
     /** @param at what is selected there: a value's uid, or child and parent joined by a dot */
-    selectedHref: (valueUid: string, days: { day: string; known: string }, at: string) =>
-      `/chains/${valueUid}${queryText({ ...days, at })}`,
+    selectedHref: (valueUid: string, asked: { day: string; known: string; verdict: string }, at: string) =>
+      `/chains/${valueUid}${queryText({ ...asked, at })}`,
   },
   downstream: {
     path: '/chains/:valueUid/downstream',

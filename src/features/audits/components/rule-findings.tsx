@@ -107,9 +107,10 @@ function Mend({ finding, person }: { finding: AuditFinding; person: Person }) {
   );
 }
 
-/** The chain on the audited day, with the link or the value selected. */
+/** The chain on the audited day under the finding's verdict, with the link or the value selected. */
 function chainHref(finding: AuditFinding, days: RuleFindingsProps['days']): string {
-  const { subject, value, reference, focusUid } = finding;
+  const { subject, value, reference, focusUid, verdict } = finding;
   if (subject === 'chain') return paths.chain.href(focusUid, days);
-  return paths.chain.selectedHref(focusUid, days, reference ? `${value.uid}.${reference.uid}` : value.uid);
+  const at = reference ? `${value.uid}.${reference.uid}` : value.uid;
+  return paths.chain.selectedHref(focusUid, { ...days, verdict }, at);
 }
