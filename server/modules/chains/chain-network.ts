@@ -47,7 +47,7 @@ function networkGroup(group: StoredGroup, values: StoredValue[]): NetworkGroup {
 
 /** Members outside the closure have no influence on the focus: their rows are left out. */
 function groupCovariance(group: StoredGroup, members: StoredValue[]): number[][] {
-  return members.map((row) => members.map((column) => group.covariance.get(row.id)?.get(column.id) ?? 0));
+  return members.map((row) => members.map((column) => group.covariance.between(row.id, column.id)));
 }
 
 function linksOf(value: StoredValue, byId: Map<number, StoredValue>, closure: Closure): NetworkLink[] {

@@ -40,11 +40,7 @@ export interface ChainNumbers {
  * @param noticed the same with the notices in force (`withNotices`): what a certificate carries is judged without
  * them, since it is not re-issued; flows and u now are those with them
  */
-export function chainNumbers(
-  closure: Closure,
-  focusUid: string,
-  noticed: Closure = closure,
-): ChainNumbers {
+export function chainNumbers(closure: Closure, focusUid: string, noticed: Closure = closure): ChainNumbers {
   const network = networkOf(closure);
   const exact = compileNetwork(network);
   const certified = variancesByUid(network, exact);
@@ -111,7 +107,7 @@ function localVariances(closure: Closure): Map<number, number> {
   return new Map(
     closure.values.map((value) => {
       const grouped = value.groupId === null ? undefined : closure.groups.get(value.groupId)!;
-      const own = grouped ? (grouped.covariance.get(value.id)?.get(value.id) ?? 0) : (value.localU ?? 0) ** 2;
+      const own = grouped ? grouped.covariance.between(value.id, value.id) : (value.localU ?? 0) ** 2;
       return [value.id, own];
     }),
   );

@@ -9,7 +9,7 @@ import type { LaboratoryDossier, StandardDossier, StoredGroup, StoredSource, Sto
 
 /** What is kept at most: a value takes about 4 kB, a standard with its history about 14 kB. */
 const MOST_VALUES = 10_000;
-const MOST_STANDARDS = 3_000;
+const MOST_STANDARDS = 3_600;
 const MOST_GROUPS = 300;
 /** A register up to this size is read whole when the first chain is asked for. */
 const WHOLE_REGISTER = 10_000;

@@ -42,8 +42,10 @@ interface Remembered {
   seq: number;
   steps: Map<string, StepMemory>;
 }
-/** Beyond this many values under all questions together the memory begins anew with the next question. */
-const MOST_STEPS = 3_000;
+/** Values kept under one question. */
+const MOST_STEPS = 4_200;
+/** Beyond this many under all questions together the memory begins anew with the next question. */
+const MOST_BEFORE = 2_000;
 const memories = new WeakMap<ChainStore, Remembered>();
 
 /**
@@ -78,8 +80,8 @@ function stepsOf({ steps }: Remembered, question: Question): StepMemory {
   const known = steps.get(key);
   if (known) return known;
   const size = [...steps.values()].reduce((sum, memory) => sum + memory.size, 0);
-  if (size >= MOST_STEPS) steps.clear();
-  const fresh = new StepMemory(question);
+  if (size >= MOST_BEFORE) steps.clear();
+  const fresh = new StepMemory(question, MOST_STEPS);
   steps.set(key, fresh);
   return fresh;
 }

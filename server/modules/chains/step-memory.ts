@@ -3,9 +3,8 @@ import { judgeLink, judgeValue, type Check } from '#shared/rules/judge.ts';
 import { RecentMap } from './recent-map.ts';
 import type { StoredLink, StoredValue } from './stored.ts';
 
-/** Values whose facts and checks are kept, with those of about two links each: some 35 kB a value. */
-const MOST_VALUES = 2_000;
-const MOST_LINKS = 4_000;
+/** Values whose facts and checks are kept unless told, with those of about two links each: some 30 kB a value. */
+const MOST_VALUES = 1_500;
 
 /**
  * Facts and checks of single values and links under one question, until the next act. What is true of a value does
@@ -13,12 +12,15 @@ const MOST_LINKS = 4_000;
  */
 export class StepMemory {
   readonly question: Question;
-  readonly #values = new RecentMap<number, ValueFacts>(MOST_VALUES);
-  readonly #links = new RecentMap<string, LinkFacts>(MOST_LINKS);
+  readonly #values: RecentMap<number, ValueFacts>;
+  readonly #links: RecentMap<string, LinkFacts>;
   readonly #checks = new WeakMap<ValueFacts | LinkFacts, Check[]>();
 
-  constructor(question: Question) {
+  /** @param mostValues kept; steps unused for longest are forgotten */
+  constructor(question: Question, mostValues = MOST_VALUES) {
     this.question = question;
+    this.#values = new RecentMap(mostValues);
+    this.#links = new RecentMap(2 * mostValues);
   }
 
   /** Values remembered. */

@@ -1,3 +1,5 @@
+import type { GroupCovariance } from './group-covariance.ts';
+
 /**
  * What the chain reads of the register, in the register's own terms. Days are ISO text, instants ISO UTC with
  * microseconds, decimals exact text in grams, uncertainties numbers in grams.
@@ -117,8 +119,7 @@ export interface StoredGroup {
   id: number;
   degreesOfFreedom: number | null;
   estimate: string | null;
-  /** Covariance by pairs of value ids, g2, both orders. */
-  covariance: Map<number, Map<number, number>>;
+  covariance: GroupCovariance;
 }
 
 export interface StoredEnd {
