@@ -2,6 +2,7 @@ import { memo } from 'react';
 import { PAGE_INKS } from '#shared/drawing/inks.ts';
 import type { Shape, TextSpan } from '#shared/drawing/shapes.ts';
 import type { Face } from '#shared/drawing/text-width.ts';
+import { placedPath } from './placed-path.ts';
 
 const FACES: Readonly<Record<Face, string>> = {
   sans: 'font-sans',
@@ -24,16 +25,15 @@ function ShapeView({ shape }: { shape: Shape }) {
   }
   if (shape.kind === 'circle') return <circle cx={shape.x} cy={shape.y} r={shape.radius} {...paint} />;
   const { at } = shape;
-  const transform = at && `translate(${at.x} ${at.y}) scale(${at.scale ?? 1})`;
-  return <path d={shape.d} transform={transform} {...paint} />;
+  return <path d={at ? placedPath(shape.d, at) : shape.d} {...paintOf(shape, at?.scale)} />;
 }
 
-function paintOf({ fill, stroke }: Exclude<Shape, { kind: 'text' }>) {
+function paintOf({ fill, stroke }: Exclude<Shape, { kind: 'text' }>, scale = 1) {
   return {
     fill: fill ? PAGE_INKS[fill] : 'none',
     stroke: stroke && PAGE_INKS[stroke.ink],
-    strokeWidth: stroke?.width,
-    strokeDasharray: stroke?.dash?.join(' '),
+    strokeWidth: stroke && stroke.width * scale,
+    strokeDasharray: stroke?.dash?.map((length) => length * scale).join(' '),
     strokeLinecap: stroke?.isRound && ('round' as const),
   };
 }

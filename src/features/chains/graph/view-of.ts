@@ -19,7 +19,7 @@ export interface View {
 }
 
 /** Below this even the large number of a plate drawn small can no longer be read. */
-const LEAST_ZOOM = 0.4;
+const LEAST_ZOOM = 0.36;
 /** Room around the drawing, px; at the top also for the controls. */
 const MARGIN = { side: 20, top: 48, foot: 20 } as const;
 const BOX = { least: 416, most: 1600 } as const;
