@@ -69,7 +69,10 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
             </Cell>
             <Cell>
               <Judged chain={chain} link={link} verdict={question.verdict} />
-              <Rules rules={rules.get(linkKey(link)) ?? []} />
+              <Rules
+                rules={rules.get(linkKey(link)) ?? []}
+                isNoted={!['broken', 'caution'].includes(link[question.verdict])}
+              />
             </Cell>
           </Row>
         ))}
@@ -96,10 +99,15 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
   );
 }
 
-/** Which rules a link fails, by number; a press on the row says them in words. */
-function Rules({ rules }: { rules: readonly string[] }) {
+/** Which rules a link does not keep, by number; a press on the row says them in words. Some are worth a note only. */
+function Rules({ rules, isNoted }: { rules: readonly string[]; isNoted: boolean }) {
   if (rules.length === 0) return null;
-  return <span className="block font-mono text-xs text-ink-2">{rules.join(' ')}</span>;
+  return (
+    <span className="block text-xs text-ink-2">
+      {isNoted && 'noted: '}
+      <span className="font-mono">{rules.join(' ')}</span>
+    </span>
+  );
 }
 
 type Link = ChainResponse['links'][number];
