@@ -1,5 +1,5 @@
 import { groupBy } from '#shared/group-by.ts';
-import type { DrawnChain, DrawnLink } from './drawn-chain.ts';
+import { tiersOf, type DrawnChain, type DrawnLink } from './drawn-chain.ts';
 import type { DrawingQuestion } from './drawing-question.ts';
 
 /**
@@ -15,10 +15,15 @@ export function failingPart(chain: DrawnChain, verdict: DrawingQuestion['verdict
     ...[...failing, ...onTheWay].flatMap((link) => [link.childUid, link.parentUid]),
   ]);
   const kept = new Set([...failing, ...onTheWay]);
+  const links = chain.links.filter((link) => kept.has(link));
+  const tiers = tiersOf([...shown], links);
   return {
     ...chain,
-    nodes: chain.nodes.filter((node) => shown.has(node.uid)),
-    links: chain.links.filter((link) => kept.has(link)),
+    // Tiers of which nothing is left close up.
+    nodes: chain.nodes
+      .filter((node) => shown.has(node.uid))
+      .map((node) => ({ ...node, tier: tiers.get(node.uid)! })),
+    links,
   };
 }
 

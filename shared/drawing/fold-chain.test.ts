@@ -187,6 +187,8 @@ describe('a chain as it is drawn', () => {
     const drawn = new Set(chain.links.flatMap((link) => link.of));
     for (const link of failing) expect(drawn.has(`${link.childUid}.${link.parentUid}`)).toBe(true);
     expect(soundLeftOut).toBeGreaterThan(0);
+    const tiers = new Set(chain.nodes.map((node) => node.tier));
+    expect([...tiers].toSorted((a, b) => a - b)).toEqual([...tiers.keys()].map((_, index) => index));
     for (const node of chain.nodes) {
       const isLeanedOn = chain.links.some((link) => link.parentUid === node.uid);
       expect(isLeanedOn || node.uid === chain.focusUid).toBe(true);
