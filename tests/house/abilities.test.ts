@@ -88,6 +88,11 @@ const MAY: Record<string, Who[]> = {
   'downstream:read': [],
   'dry-run:save': [...WRITERS, 'signatory'],
   'dry-run:note': [...WRITERS, 'signatory'],
+  'audit:begin': READERS,
+  'audit:read': READERS,
+  'audit:repeat': READERS,
+  // Who asked for it besides, which nobody of these has.
+  'audit:stop': ['registrar'],
 };
 
 describe('the matrix of abilities', () => {
