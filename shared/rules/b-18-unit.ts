@@ -65,14 +65,16 @@ export const unitOfValue: ValueRule = {
 export function isUnitQuestioned(value: ValueFacts): boolean {
   if (value.quantity === 'mass' || statedU(value) === null) return false;
   const { earlier, later } = splitHistory(value);
-  const times = timesBest(value);
   if (value.history.length > 0) {
+    if (!isUnitOdd(value, earlier, later)) return false;
+    const times = timesBest(value);
     // A slip upwards leaves at least 1000 times the best capability, and hardly one downwards about that capability:
     // what is between them is another laboratory's larger U, or the value after a slip.
     const isRise = value.history.every((other) => (statedU(other) ?? 0) < statedU(value)!);
     const isOrdinary = times !== null && (isRise ? times < FAR_ABOVE : times > USUAL[0] && times < USUAL[1]);
-    return !isOrdinary && isUnitOdd(value, earlier, later);
+    return !isOrdinary;
   }
+  const times = timesBest(value);
   const mpe = mpeOf(value)?.toNumber() ?? null;
   if (times === null || mpe === null) return false;
   const size = Math.abs(deviationOf(value));

@@ -62,7 +62,8 @@ export const changeSinceLast: ValueRule = {
   judge(value) {
     const known = { certificate: certificateText(value), registryNo: value.registryNo };
     if (isAskedElsewhere(value)) return doesNotApply('asked elsewhere', known);
-    const [previous, ...before] = comparable(value);
+    const earlier = splitHistory(value).earlier.toReversed();
+    const previous = earlier.find((past) => isComparable(value, past));
     if (!previous) return doesNotApply('first', known);
     const ratio = changeRatio(value, previous);
     if (ratio === null) {
@@ -84,7 +85,9 @@ export const changeSinceLast: ValueRule = {
       return holds('adjusted', { ...parameters, reason: value.nextEpoch?.reason ?? '' }, 'information');
     }
     if (isWear(value, previous)) return holds('wear', parameters, 'information');
-    const hasReturned = before.some((past) => (changeRatio(value, past) ?? Infinity) <= 1);
+    const hasReturned = earlier
+      .slice(earlier.indexOf(previous) + 1)
+      .some((past) => isComparable(value, past) && (changeRatio(value, past) ?? Infinity) <= 1);
     if (hasReturned) return holds('returned', parameters, 'information');
     return judgeDrift(value, previous, parameters) ?? fails('large', parameters);
   },
@@ -128,19 +131,12 @@ function isAskedElsewhere(value: ValueFacts): boolean {
   );
 }
 
-/** Earlier values, newest first, without those whose own sign, unit or identity is the odd one. */
-function comparable(value: ValueFacts): HistoryFacts[] {
-  const everything = [...value.history, value];
-  return splitHistory(value)
-    .earlier.filter((past) => {
-      const others = everything.filter((other) => other.uid !== past.uid);
-      const earlier = others.filter((other) => other.performedEnd <= past.performedEnd);
-      const later = others.filter((other) => other.performedEnd > past.performedEnd);
-      return (
-        !isSignOdd(past, earlier, later) && !isUnitOdd(past, earlier, later) && !wasExchanged(value, past)
-      );
-    })
-    .reverse();
+/** Whether an earlier value can be compared with: its own sign, unit or identity is not the odd one. */
+function isComparable(value: ValueFacts, past: HistoryFacts): boolean {
+  const others = [...value.history, value].filter((other) => other.uid !== past.uid);
+  const earlier = others.filter((other) => other.performedEnd <= past.performedEnd);
+  const later = others.filter((other) => other.performedEnd > past.performedEnd);
+  return !isSignOdd(past, earlier, later) && !isUnitOdd(past, earlier, later) && !wasExchanged(value, past);
 }
 
 /** A change that was found and ended in an intervention within the same calibration has its new epoch already. */

@@ -27,9 +27,13 @@ export const uOfReference: LinkRule = {
     if (parent.expandedU === null) return cannotBeJudged('no uncertainty', known);
     if (parent.k === null) return cannotBeJudged('no k', known);
     const stated = new Decimal(parent.expandedU).div(parent.k);
+    const statedText = amountText(stated, parent);
+    const isAsStated =
+      (usedExpandedU ?? parent.expandedU) === parent.expandedU && (usedK ?? parent.k) === parent.k;
+    if (isAsStated) return holds('as stated', { ...known, stated: statedText, used: statedText });
     const used = new Decimal(usedExpandedU ?? parent.expandedU).div(usedK ?? parent.k);
     const rounding = halfDigitOfU(parent).div(parent.k);
-    const parameters = { ...known, stated: amountText(stated, parent), used: amountText(used, parent) };
+    const parameters = { ...known, stated: statedText, used: amountText(used, parent) };
     if (used.lt(stated.minus(rounding))) return fails('smaller', parameters);
     return used.gt(stated.plus(rounding))
       ? holds('larger', parameters, 'information')

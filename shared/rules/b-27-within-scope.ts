@@ -39,10 +39,12 @@ export const withinScope: ValueRule = {
       issued(value),
     ];
     for (const { first, last } of periods) {
-      if (!isCovered(first) && !isCovered(last)) {
+      const isAtFirst = isCovered(first);
+      const isAtLast = last === first ? isAtFirst : isCovered(last);
+      if (!isAtFirst && !isAtLast) {
         return fails('outside', { ...parameters, day: dateText(first, precision) });
       }
-      isDecided &&= isCovered(first) && isCovered(last);
+      isDecided &&= isAtFirst && isAtLast;
     }
     return isDecided ? holds('inside', parameters) : cannotBeJudged('undecided', parameters);
   },

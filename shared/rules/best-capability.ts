@@ -1,23 +1,24 @@
 import { Decimal } from '#shared/decimal.ts';
+import { groupBy } from '#shared/group-by.ts';
 import type { ScopeLineFacts, ValueFacts } from './facts.ts';
 import { rowInForce } from './in-force.ts';
+import { orderOf } from './numbers.ts';
 
 /**
  * The granted scope lines of the issuer that cover the value's nominal on a day, as known when it was issued.
  * Ends of a range belong to it. A line's method is free text and does not exclude it.
  */
 export function scopeLinesOn(value: ValueFacts, day: string): ScopeLineFacts[] {
-  const nominal = new Decimal(value.nominal);
-  return [...new Set(value.scope.map((row) => row.line))]
-    .map((line) =>
-      rowInForce(
-        value.scope.filter((row) => row.line === line),
-        day,
-        value.issuedOn,
-      ),
-    )
+  const { nominal } = value;
+  return [...groupBy(value.scope, (row) => row.line).values()]
+    .map((rows) => rowInForce(rows, day, value.issuedOn))
     .filter((row) => row !== null)
-    .filter((row) => row.state === 'granted' && nominal.gte(row.nominalFrom) && nominal.lte(row.nominalTo));
+    .filter(
+      (row) =>
+        row.state === 'granted' &&
+        orderOf(nominal, row.nominalFrom) >= 0 &&
+        orderOf(nominal, row.nominalTo) <= 0,
+    );
 }
 
 /**

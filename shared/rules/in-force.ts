@@ -1,3 +1,4 @@
+import { groupBy } from '#shared/group-by.ts';
 import { endOfDay } from '#shared/state-at.ts';
 import type { Period } from './days.ts';
 import type { Assertion, EndFacts, RecognitionFacts } from './facts.ts';
@@ -10,13 +11,20 @@ import type { Assertion, EndFacts, RecognitionFacts } from './facts.ts';
  * @param rows all rows of one subject; rows recorded at one instant in the order of their acts
  */
 export function rowInForce<T extends Assertion>(rows: readonly T[], day: string, knownBy: string): T | null {
-  const covering = rows
-    .filter((row) => row.validFrom <= day && (row.validTo === null || day <= row.validTo))
-    .sort((a, b) => (a.recordedAt === b.recordedAt ? 0 : a.recordedAt < b.recordedAt ? -1 : 1));
-  const knownThen = covering.filter((row) => row.recordedAt <= endOfDay(knownBy));
-  if (knownThen.length > 0) return knownThen.at(-1)!;
-  const firstEntered = covering[0]?.recordedAt.slice(0, 10);
-  return covering.filter((row) => row.recordedAt.slice(0, 10) === firstEntered).at(-1) ?? null;
+  const horizon = endOfDay(knownBy);
+  const covering = rows.filter((row) => row.validFrom <= day && (row.validTo === null || day <= row.validTo));
+  const knownThen = lastRecorded(covering.filter((row) => row.recordedAt <= horizon));
+  if (knownThen) return knownThen;
+  const entered = (row: T) => row.recordedAt.slice(0, 10);
+  const [firstEntered] = covering.map(entered).sort();
+  return lastRecorded(covering.filter((row) => entered(row) === firstEntered));
+}
+
+/** Of rows recorded at one instant the last; null without rows. */
+function lastRecorded<T extends Assertion>(rows: readonly T[]): T | null {
+  let last: T | null = null;
+  for (const row of rows) if (last === null || row.recordedAt >= last.recordedAt) last = row;
+  return last;
 }
 
 /** How a laboratory's recognition stood: `not recorded` where nothing was asserted for that day. */
@@ -31,14 +39,7 @@ export function recognitionOn(
   knownBy: string,
 ): RecognitionStanding {
   const subjectOf = (row: RecognitionFacts) => `${row.kind} ${row.body} ${row.number}`;
-  const subjects = [...new Set(rows.map(subjectOf))];
-  const held = subjects.map((subject) =>
-    rowInForce(
-      rows.filter((row) => subjectOf(row) === subject),
-      day,
-      knownBy,
-    ),
-  );
+  const held = [...groupBy(rows, subjectOf).values()].map((ofSubject) => rowInForce(ofSubject, day, knownBy));
   const best = (['granted', 'suspended', 'withdrawn'] as const)
     .map((state) => held.find((row) => row?.state === state))
     .find((row) => row !== undefined);

@@ -89,26 +89,30 @@ function checksOf<Facts>(
   facts: Facts,
   question: Question,
 ): Check[] {
-  return rules.flatMap((rule) =>
-    rule.verdicts.map((verdict) => {
+  const checks: Check[] = [];
+  for (const rule of rules) {
+    for (const verdict of rule.verdicts) {
       const finding = rule.judge(facts, question, verdict);
       const { outcome, sentence, severity = rule.severity } = finding;
       const parameters = usedIn(rule, finding);
-      return { rule: rule.id, subject, verdict, outcome, severity, parameters, sentence };
-    }),
-  );
+      checks.push({ rule: rule.id, subject, verdict, outcome, severity, parameters, sentence });
+    }
+  }
+  return checks;
 }
 
+/** The places of each sentence, by rule and key. */
 const PLACES = new Map(
-  RULES.flatMap(({ id, sentences }) =>
-    Object.entries(sentences).map(([key, text]) => [`${id} ${key}`, placesOf(text)] as const),
-  ),
+  RULES.map(({ id, sentences }) => [
+    id,
+    new Map(Object.entries(sentences).map(([key, text]) => [key, placesOf(text)])),
+  ]),
 );
 
 /** Of what a rule had at hand only what its sentence says: a reply with hundreds of checks is half as large. */
 function usedIn({ id }: RuleHead, { sentence, parameters }: Finding): Record<string, string> {
   const used: Record<string, string> = {};
-  for (const name of PLACES.get(`${id} ${sentence}`) ?? []) {
+  for (const name of PLACES.get(id)?.get(sentence) ?? []) {
     const text = parameters[name];
     if (text !== undefined) used[name] = text;
   }

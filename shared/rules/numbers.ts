@@ -3,6 +3,20 @@ import { formatQuantity } from '#shared/engine/quantity/format-quantity.ts';
 import { UNIT_DEFINITIONS } from '#shared/engine/quantity/units.ts';
 import type { ResultFacts } from './facts.ts';
 
+/**
+ * Works out a text of a result once: a dozen rules quote the same value, and facts never change after their assembly.
+ */
+function oncePerResult(text: (result: ResultFacts) => string): (result: ResultFacts) => string {
+  const known = new WeakMap<ResultFacts, string>();
+  return (result) => {
+    const before = known.get(result);
+    if (before !== undefined) return before;
+    const made = text(result);
+    known.set(result, made);
+    return made;
+  };
+}
+
 /** Standard uncertainty in g as the certificate states it, U/k; null where U or k is not stated. */
 export function statedU(result: Pick<ResultFacts, 'expandedU' | 'k'>): number | null {
   if (result.expandedU === null || result.k === null) return null;
@@ -14,19 +28,34 @@ export function deviationOf(result: Pick<ResultFacts, 'deviation'>): number {
   return Number(result.deviation);
 }
 
+const PLAIN = /^-?[\d.]+$/;
+
 /** Grams in the reported unit. */
 export function inReportedUnit(result: Pick<ResultFacts, 'reportedUnit'>, grams: string | number): Decimal {
-  return new Decimal(grams).times(`1e${-UNIT_DEFINITIONS[result.reportedUnit].exponent}`);
+  const { exponent } = UNIT_DEFINITIONS[result.reportedUnit];
+  // A plain text with an exponent behind it is read at once, where a product would be a second decimal and a third.
+  return typeof grams === 'string' && PLAIN.test(grams)
+    ? new Decimal(`${grams}e${-exponent}`)
+    : new Decimal(grams).times(`1e${-exponent}`);
+}
+
+/**
+ * The order of two plain decimals, as a sign. Doubles are rounded in order, so they decide unless they are equal: only
+ * then the decimals are read.
+ */
+export function orderOf(a: string, b: string): number {
+  const difference = Number(a) - Number(b);
+  return difference === 0 ? new Decimal(a).cmp(b) : Math.sign(difference);
 }
 
 /** Half of the value's last printed digit, g. */
 export function halfDigit(result: Pick<ResultFacts, 'reportedUnit' | 'reportedDecimals'>): Decimal {
-  return halfDigitAt(result, result.reportedDecimals);
+  return new Decimal(halfDigitText(result, result.reportedDecimals));
 }
 
 /** Half of U's last printed digit, g. */
 export function halfDigitOfU(result: ResultFacts): Decimal {
-  return halfDigitAt(result, decimalsOfU(result) ?? 0);
+  return new Decimal(halfDigitText(result, decimalsOfU(result) ?? 0));
 }
 
 /**
@@ -58,27 +87,28 @@ export function printedU(result: ResultFacts): string {
 export function uOfDifference(a: ResultFacts, b: ResultFacts, covariance: number | null): number | null {
   const [ua, ub] = [statedU(a), statedU(b)];
   if (ua === null || ub === null) return null;
-  const rounding = (halfDigit(a).toNumber() ** 2 + halfDigit(b).toNumber() ** 2) / 3;
+  const half = (result: ResultFacts) => Number(halfDigitText(result, result.reportedDecimals));
+  const rounding = (half(a) ** 2 + half(b) ** 2) / 3;
   const independent = ua ** 2 + ub ** 2;
   const correlated = independent - 2 * (covariance ?? 0);
   return Math.sqrt((correlated > 0 ? correlated : independent) + rounding);
 }
 
 /** A deviation for reading, in the unit and decimals of its certificate. */
-export function valueText(result: ResultFacts): string {
-  return quantityText(
-    inReportedUnit(result, result.deviation),
-    result.reportedUnit,
-    result.reportedDecimals,
-    true,
-  );
-}
+export const valueText = oncePerResult((result) =>
+  quantityText(inReportedUnit(result, result.deviation), result.reportedUnit, result.reportedDecimals, true),
+);
 
 /** U for reading, in the reported unit; "not stated" where there is none. */
-export function expandedUText(result: ResultFacts): string {
+export const expandedUText = oncePerResult((result) => {
   if (result.expandedU === null) return 'not stated';
-  return quantityText(new Decimal(printedU(result)), result.reportedUnit, decimalsOfU(result)!, false);
-}
+  return quantityText(
+    inReportedUnit(result, result.expandedU),
+    result.reportedUnit,
+    decimalsOfU(result)!,
+    false,
+  );
+});
 
 /** Below this no unit has an amount left: what is smaller is written as 0. */
 const NOTHING = '1e-30';
@@ -122,6 +152,6 @@ function quantityText(
   return formatQuantity({ value, unit, decimals, showPlus }).text;
 }
 
-function halfDigitAt(result: Pick<ResultFacts, 'reportedUnit'>, decimals: number): Decimal {
-  return new Decimal(`5e${UNIT_DEFINITIONS[result.reportedUnit].exponent - decimals - 1}`);
+function halfDigitText(result: Pick<ResultFacts, 'reportedUnit'>, decimals: number): string {
+  return `5e${UNIT_DEFINITIONS[result.reportedUnit].exponent - decimals - 1}`;
 }

@@ -1,4 +1,4 @@
-import { Decimal } from '#shared/decimal.ts';
+import type { Decimal } from '#shared/decimal.ts';
 import { requireChoice, requireDecimal, requireNumber } from './domain.ts';
 import type { DecimalMark } from './read-number.ts';
 import { roundResult, type Rounding } from './round-result.ts';
@@ -32,9 +32,14 @@ function group(plain: string, mark: DecimalMark): string {
   return `${groupedWhole}${mark}${fraction.replace(/(\d{3})(?=\d)/g, `$1${THIN_SPACE}`)}`;
 }
 
+/** Whether a plain text is zero; to read it as a decimal again would cost as much as all else here. */
+function isZero(plain: string): boolean {
+  return !/[1-9]/.test(plain);
+}
+
 function signOf(plain: string, showPlus: boolean): string {
   if (plain.startsWith('-')) return MINUS_SIGN;
-  return showPlus && !new Decimal(plain).isZero() ? '+' : '';
+  return showPlus && !isZero(plain) ? '+' : '';
 }
 
 function lineOf(sign: string, value: string, uncertainty: string | null, unit: string): string {
@@ -82,5 +87,5 @@ function unsignedZero(value: Decimal, decimals: number | undefined): string {
   const places =
     decimals === undefined ? undefined : requireNumber(decimals, 'decimals', { min: 0, max: 40 });
   const text = places === undefined ? value.toFixed() : value.toFixed(Math.floor(places));
-  return new Decimal(text).isZero() ? text.replace('-', '') : text;
+  return isZero(text) ? text.replace('-', '') : text;
 }
