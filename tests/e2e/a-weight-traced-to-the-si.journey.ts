@@ -1,5 +1,5 @@
 import { expect, test } from '@playwright/test';
-import type { ChainResponse } from '#shared/contracts/chains.ts';
+import type { PackedChainResponse } from '#shared/contracts/packed-checks.ts';
 import { fillCertificate, choose, issueOpenDraft, waitUntilSaved } from './support/calibration.ts';
 import { daysAgo } from './support/days.ts';
 import { METROLOGIST, PASSWORD, signIn, SIGNATORY } from './support/people.ts';
@@ -78,7 +78,7 @@ test('a metrologist registers a weight and its calibration, a signatory issues i
     const plates = signatory.locator('.react-flow__node');
     await expect(plates.filter({ hasText: registryNo })).toBeVisible();
   });
-  const chain = (await (await reply).json()) as ChainResponse;
+  const chain = (await (await reply).json()) as PackedChainResponse;
   const uid = chain.focusUid;
 
   await test.step('drawn: nothing below the weight, nothing of the chain above its roots', async () => {

@@ -1,5 +1,5 @@
 import { expect, test, type Page } from '@playwright/test';
-import type { ChainResponse } from '#shared/contracts/chains.ts';
+import { unpackChecks, type PackedChainResponse } from '#shared/contracts/packed-checks.ts';
 import { choose, issueOpenDraft } from './support/calibration.ts';
 import { JourneyLaboratory, recognizedInstitute } from './support/laboratory.ts';
 import { PASSWORD, signIn } from './support/people.ts';
@@ -91,19 +91,18 @@ test('a published history without uncertainties stays without uncertainties', as
         `Unknown, because certificate P ${institute.name} 1984 for ${registryNo} states no uncertainty`,
       ),
     ).toBeVisible();
-    const chain = (await (await reply).json()) as ChainResponse;
+    const chain = (await (await reply).json()) as PackedChainResponse;
+    const checks = unpackChecks(chain.checks);
     expect(chain.uncertainty).toMatchObject({ standard: null, expanded: null, carried: null });
     expect(chain.contributions).toEqual([]);
     expect(chain.links.map((link) => link.flow)).toEqual([null]);
     const outcome = (rule: string) =>
-      chain.checks.filter((check) => check.rule === rule).map((check) => [check.subject.type, check.outcome]);
+      checks.filter((check) => check.rule === rule).map((check) => [check.subject.type, check.outcome]);
     // U covers what is carried; U of the reference as used; the whole chain's variance; change since the last.
     expect(outcome('B-21')).toContainEqual(['value', 'cannot be judged']);
     expect(outcome('B-46')).toEqual([['chain', 'cannot be judged']]);
     const root = chain.nodes.find((node) => node.tier === 1)!;
-    const ofRoot = chain.checks.filter(
-      (check) => check.subject.type === 'value' && check.subject.uid === root.uid,
-    );
+    const ofRoot = checks.filter((check) => check.subject.type === 'value' && check.subject.uid === root.uid);
     expect(ofRoot.find((check) => check.rule === 'B-19')).toMatchObject({ outcome: 'cannot be judged' });
     expect(ofRoot.filter((check) => check.outcome === 'fails')).toEqual([]);
   });
