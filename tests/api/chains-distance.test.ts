@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { describe, expect, it } from 'vitest';
-import type { DistanceResponse, TogetherResponse } from '#shared/contracts/downstream.ts';
+import type { DistanceResponse } from '#shared/contracts/distance.ts';
+import type { TogetherResponse } from '#shared/contracts/together.ts';
 import {
   inputOf,
   lineOf,

@@ -1,4 +1,4 @@
-import type { DistanceResponse } from '#shared/contracts/downstream.ts';
+import type { DistanceResponse } from '#shared/contracts/distance.ts';
 import { Decimal } from '#shared/decimal.ts';
 import { classConformity } from '#shared/engine/conformity/class-conformity.ts';
 import type { WeightClass } from '#shared/engine/conformity/r111-2004.ts';
@@ -24,8 +24,13 @@ type Limit = { because: string } | { because: null; largest: Decimal; rule: stri
 /**
  * How wrong each ancestor may be before the value leaves its class, and what the value can still carry as a
  * reference. Distances rest on the certificate: its deviation, its U, its class and the rule it declares.
+ * @param isHistorySeen whether this person sees the weight's other calibrations, of which its drift tells
  */
-export async function distanceOf(context: Context, subject: ChainSubject): Promise<DistanceResponse> {
+export async function distanceOf(
+  context: Context,
+  subject: ChainSubject,
+  isHistorySeen: boolean,
+): Promise<DistanceResponse> {
   const store = storeOf(context.database);
   await store.catchUp();
   const closure = await closureOn(store, [subject.id], today(context));
@@ -56,7 +61,7 @@ export async function distanceOf(context: Context, subject: ChainSubject): Promi
     ancestors,
     reach: await reachOf(context, focus, {
       u: variance === null ? focus.uStated : Math.sqrt(variance),
-      view: subject.view,
+      isHistorySeen,
     }),
   };
 }

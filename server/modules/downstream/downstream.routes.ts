@@ -1,18 +1,18 @@
 import { z } from 'zod';
+import { DistanceResponse } from '#shared/contracts/distance.ts';
 import {
-  DistanceResponse,
   DownstreamQuery,
   DownstreamResponse,
   ExposureQuery,
-  TogetherInput,
-  TogetherResponse,
   WhatIfInput,
   WhatIfResponse,
 } from '#shared/contracts/downstream.ts';
+import { TogetherInput, TogetherResponse } from '#shared/contracts/together.ts';
 import { Id } from '#shared/ids.ts';
 import { route, type Route } from '#server/http/route.ts';
 import { chainSubject, readChain } from '#server/modules/chains/index.ts';
 import { authorize, signedIn } from '#server/policy/permission.ts';
+import { seesHistory } from '#server/policy/value-view.ts';
 import { distanceOf } from './distance.service.ts';
 import { presentDownstream } from './downstream.presenter.ts';
 import { downstreamOf } from './downstream.service.ts';
@@ -68,7 +68,7 @@ export const downstreamRoutes: Route[] = [
     permission: readChain,
     params: z.object({ valueUid: Id }),
     subject: (context, { params }) => chainSubject(context, params.valueUid),
-    act: (context, _input, subject) => distanceOf(context, subject),
+    act: (context, _input, subject) => distanceOf(context, subject, seesHistory(context.user, subject)),
     response: DistanceResponse,
     present: (result) => result,
   }),

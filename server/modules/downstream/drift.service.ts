@@ -1,4 +1,4 @@
-import type { DistanceResponse } from '#shared/contracts/downstream.ts';
+import type { DistanceResponse } from '#shared/contracts/distance.ts';
 import { Decimal } from '#shared/decimal.ts';
 import { EngineError } from '#shared/engine/errors.ts';
 import { predictValue } from '#shared/engine/time/predict-value.ts';

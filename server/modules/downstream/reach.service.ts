@@ -1,11 +1,10 @@
-import type { DistanceResponse } from '#shared/contracts/downstream.ts';
+import type { DistanceResponse } from '#shared/contracts/distance.ts';
 import { Decimal } from '#shared/decimal.ts';
 import { maximumPermissibleError } from '#shared/engine/conformity/maximum-permissible-error.ts';
 import { reachableClasses } from '#shared/engine/conformity/reachable-classes.ts';
 import { dayNumber } from '#shared/engine/time/calendar.ts';
 import { today, type Context } from '#server/http/context.ts';
 import type { StoredValue } from '#server/modules/chains/index.ts';
-import type { ValueView } from '#server/policy/value-view.ts';
 import { driftOf } from './drift.service.ts';
 import { expandedUAfter, lastDayWithin, type Ageing } from './reach-until.ts';
 import { shortText } from './short-text.ts';
@@ -21,12 +20,12 @@ type Reach = DistanceResponse['reach'];
  * What a value can still carry as a reference: a weight of the same nominal, weighed against it without any
  * uncertainty of its own, on the day of its calibration and, where its drift is known, on later ones.
  * @param u standard uncertainty of the value, g; null where unknown
- * @param view how much of the value this person sees
+ * @param isHistorySeen whether this person sees the weight's other calibrations
  */
 export async function reachOf(
   context: Context,
   focus: StoredValue,
-  { u, view }: { u: number | null; view: ValueView },
+  { u, isHistorySeen }: { u: number | null; isHistorySeen: boolean },
 ): Promise<Reach> {
   const nothing = { bestExpandedU: null, bestText: null, classes: [], expandedUToday: null, textToday: null };
   if (u === null) {
@@ -36,11 +35,10 @@ export async function reachOf(
   const nominal = new Decimal(focus.nominal);
   const classes = reachableClasses(nominal, best * MILLIGRAMS_PER_GRAM);
   const atCalibration = { bestExpandedU: best, bestText: shortText(best, 'up'), classes };
-  // A drift tells of the weight's other calibrations: a statement of traceability does not.
-  const { drift, because } =
-    view === 'full'
-      ? await driftOf(context, focus)
-      : { drift: null, because: 'Its drift is told to its holder.' };
+  // A drift tells of the weight's other calibrations: those are its holder's.
+  const { drift, because } = isHistorySeen
+    ? await driftOf(context, focus)
+    : { drift: null, because: 'Its drift is told to its holder.' };
   if (!drift) {
     return { ...nothing, ...atCalibration, drift: null, driftBecause: because, until: [] };
   }

@@ -1,4 +1,4 @@
-import type { TogetherInput, TogetherResponse } from '#shared/contracts/downstream.ts';
+import type { TogetherInput, TogetherResponse } from '#shared/contracts/together.ts';
 import { Decimal, decimalText } from '#shared/decimal.ts';
 import { today, type Context } from '#server/http/context.ts';
 import {

@@ -6,8 +6,8 @@ import {
   type UseMutationResult,
 } from '@tanstack/react-query';
 import type { z } from 'zod';
+import { DistanceResponse } from '#shared/contracts/distance.ts';
 import {
-  DistanceResponse,
   DownstreamResponse,
   WhatIfResponse,
   type DownstreamBy,

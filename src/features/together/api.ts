@@ -1,5 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
-import { TogetherResponse } from '#shared/contracts/downstream.ts';
+import { TogetherResponse } from '#shared/contracts/together.ts';
 import { post } from '#src/lib/api-client.ts';
 import type { Placed } from './search.ts';
 

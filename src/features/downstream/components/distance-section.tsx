@@ -1,4 +1,4 @@
-import type { DistanceResponse } from '#shared/contracts/downstream.ts';
+import type { DistanceResponse } from '#shared/contracts/distance.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
 import { withSigns } from '../signs.ts';

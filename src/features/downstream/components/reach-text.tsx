@@ -1,4 +1,4 @@
-import type { DistanceResponse } from '#shared/contracts/downstream.ts';
+import type { DistanceResponse } from '#shared/contracts/distance.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';

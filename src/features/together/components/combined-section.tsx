@@ -1,4 +1,4 @@
-import type { TogetherResponse } from '#shared/contracts/downstream.ts';
+import type { TogetherResponse } from '#shared/contracts/together.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';

@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import type { TogetherResponse } from '#shared/contracts/downstream.ts';
+import type { TogetherResponse } from '#shared/contracts/together.ts';
 import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Switch } from '#src/components/ui/switch.tsx';

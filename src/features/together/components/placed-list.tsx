@@ -1,4 +1,4 @@
-import type { TogetherResponse } from '#shared/contracts/downstream.ts';
+import type { TogetherResponse } from '#shared/contracts/together.ts';
 import { nominalText } from '#shared/numbers/nominal.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Switch } from '#src/components/ui/switch.tsx';

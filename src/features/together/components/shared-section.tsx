@@ -1,4 +1,4 @@
-import type { TogetherResponse } from '#shared/contracts/downstream.ts';
+import type { TogetherResponse } from '#shared/contracts/together.ts';
 import { paths } from '#src/app/paths.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Cell, Head, Row, RowLink, Table } from '#src/components/ui/table.tsx';
