@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { LaboratoryRole, User } from './user.ts';
-import { valueView, type Relation, type ValueView } from './value-view.ts';
+import { seesHistory, valueView, type Relation, type ValueView } from './value-view.ts';
 
 const HOME = 'home';
 const INSTITUTE = 'institute';
@@ -87,5 +87,19 @@ describe('a value held and issued by another laboratory', () => {
   });
   it.each(rows)('%s', (who, views) => {
     expect(RELATIONS.map((relation) => valueView(PEOPLE[who]!, value, relation))).toEqual(views);
+  });
+});
+
+describe('what else befell a weight of home', () => {
+  it('is seen by who reads home in full, and not by who issued one of its certificates', () => {
+    const seeing = Object.entries(PEOPLE).filter(([, who]) => seesHistory(who, { holderId: HOME }));
+    expect(seeing.map(([who]) => who)).toEqual([
+      'registrar',
+      'laboratory administrator at home',
+      'metrologist at home',
+      'signatory at home',
+      'reader at home',
+      'assessor of home',
+    ]);
   });
 });

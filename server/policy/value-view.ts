@@ -24,3 +24,11 @@ export function valueView(
   if (relation === 'upstream') return 'statement';
   return relation === 'downstream' ? 'warning' : 'none';
 }
+
+/**
+ * Whether the person sees what else befell the weight of a value: its other calibrations, epochs, drift. That is the
+ * holder's to tell: who issued one certificate sees that one in full, and nothing of another laboratory's.
+ */
+export function seesHistory(user: User, { holderId }: { holderId: string }): boolean {
+  return readsInFull(user, holderId);
+}

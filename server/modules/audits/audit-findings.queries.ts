@@ -13,6 +13,8 @@ export interface NamedValue {
   revisionId: string;
   holderId: string;
   issuerId: string;
+  issuerCode: string;
+  issuerName: string;
 }
 
 /** A finding with the names of its values. */
@@ -160,8 +162,10 @@ async function named(database: Sequelize, rows: readonly FindingRow[]): Promise<
     readRows<NamedValue>(
       database,
       `SELECT v.uid, s.registry_no AS registryNo, c.certificate_no AS certificateNo, v.standard_id AS standardId,
-         v.revision_id AS revisionId, v.holder_id AS holderId, v.issuer_id AS issuerId
+         v.revision_id AS revisionId, v.holder_id AS holderId, v.issuer_id AS issuerId,
+         i.code AS issuerCode, i.name AS issuerName
        FROM assigned_value v
+       JOIN laboratory i ON i.id = v.issuer_id
        JOIN standard s ON s.id = v.standard_id
        JOIN revision r ON r.id = v.revision_id
        JOIN calibration c ON c.id = r.calibration_id

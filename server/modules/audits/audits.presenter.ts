@@ -1,9 +1,10 @@
 import type { z } from 'zod';
 import type { AuditFinding, AuditResponse, AuditResult } from '#shared/contracts/audits.ts';
-import type { LinkFacts } from '#shared/rules/facts.ts';
+import type { LinkFacts, ValueFacts } from '#shared/rules/facts.ts';
+import { isToldInWords } from '#server/modules/chains/index.ts';
 import { abilitiesFor } from '#server/policy/permission.ts';
 import type { User } from '#server/policy/user.ts';
-import { valueView } from '#server/policy/value-view.ts';
+import { seesHistory, valueView } from '#server/policy/value-view.ts';
 import type { AuditJob } from './audit-job.queries.ts';
 import type { NamedFinding, NamedValue } from './audit-findings.queries.ts';
 import type { AuditRun } from './audit-run.queries.ts';
@@ -42,11 +43,13 @@ function presentRun(run: AuditRun): z.input<typeof AuditResult> {
 
 /**
  * A finding as this person may see it. What was audited is theirs, or leans on theirs: so all else is above it. What a
- * rule says of another laboratory's weight from its history and budget stays there; its outcome is shown.
+ * rule says of another laboratory's weight from its history and budget stays there; its outcome is shown. Such a weight
+ * is named by who calibrated it, not by who holds it.
  */
 export function presentFinding(found: NamedFinding, user: User): z.input<typeof AuditFinding> {
   const { row, value, reference, laboratory } = found;
-  const isTold = row.subject !== 'value' || isFull(user, value);
+  const sees = { full: isFull(user, value), history: seesHistory(user, value) };
+  const isTold = row.subject !== 'value' || isToldInWords(row.rule, sees);
   return {
     n: row.n,
     rule: row.rule,
@@ -57,7 +60,9 @@ export function presentFinding(found: NamedFinding, user: User): z.input<typeof 
     value: named(value, user),
     reference: reference && named(reference, user),
     focusUid: row.focus_uid,
-    laboratory,
+    laboratory: sees.full
+      ? laboratory
+      : { id: value.issuerId, code: value.issuerCode, name: value.issuerName },
     sentence: isTold ? row.sentence : null,
     parameters: isTold ? (JSON.parse(row.parameters) as Record<string, string>) : {},
   };
@@ -69,17 +74,29 @@ export function presentFinding(found: NamedFinding, user: User): z.input<typeof 
  */
 export function presentFacts(found: NamedFinding, facts: unknown, user: User): unknown {
   if (!isFull(user, found.value)) return null;
-  if (!found.reference || isFull(user, found.reference)) return facts;
-  const { otherValues: _others, parent, ...link } = facts as LinkFacts;
+  const { row, value, reference } = found;
+  if (row.subject === 'chain') return facts;
+  if (!reference) return seesHistory(user, value) ? facts : withoutHistory(facts as ValueFacts);
+  const { otherValues, ...link } = facts as LinkFacts;
+  const child = seesHistory(user, value) ? link.child : withoutHistory(link.child);
+  if (seesHistory(user, reference)) return { ...link, child, otherValues };
+  if (isFull(user, reference)) return { ...link, child, parent: withoutHistory(link.parent) };
+  const { parent } = link;
   const { uid, certificateNo, revisionN, registryNo, quantity, medium, issuer } = parent;
   const { deviation, expandedU, k, performedBegin, performedEnd, issuedOn, ends } = parent;
   return {
-    ...link,
+    ...{ ...link, child },
     parent: {
       ...{ uid, certificateNo, revisionN, registryNo, quantity, medium, issuer },
       ...{ deviation, expandedU, k, performedBegin, performedEnd, issuedOn, ends },
     },
   };
+}
+
+/** What the rule saw of one certificate alone. */
+function withoutHistory(facts: ValueFacts): Partial<ValueFacts> {
+  const { history: _history, duplicates: _duplicates, nextEpoch: _nextEpoch, ...own } = facts;
+  return own;
 }
 
 function isFull(user: User, value: NamedValue): boolean {

@@ -3,7 +3,7 @@ import type { ChainLink, ChainResponse, ChainSource, ChainValue } from '#shared/
 import { ENGINE_VERSION } from '#shared/engine/version.ts';
 import { RULE_SET_VERSION } from '#shared/rules/rule-set.ts';
 import { readsInFull, type User } from '#server/policy/user.ts';
-import { valueView } from '#server/policy/value-view.ts';
+import { seesHistory, valueView } from '#server/policy/value-view.ts';
 import type { Chain } from './chain.service.ts';
 import type { ChainSubject } from './chains.policy.ts';
 import { redactCheck, rulesTold } from './checks.presenter.ts';
@@ -23,13 +23,18 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
     }),
   );
   const isFull = (uid: string) => views.get(uid) === 'full';
+  const withHistory = new Set(
+    chain.closure.values.filter((value) => seesHistory(user, value)).map((value) => value.uid),
+  );
   const shares = sharesOf(chain);
   const { propagation } = chain.numbers;
   const u = propagation.standardUncertainty;
   const k = Number(chain.focus.k ?? '2');
   const carried = chain.numbers.carried(chain.focus).variance;
   const nodeUids = new Set(views.keys());
-  const checks = chain.judgement.checks.map((check) => redactCheck(check, isFull));
+  const checks = chain.judgement.checks.map((check) =>
+    redactCheck(check, { full: isFull, history: (uid) => withHistory.has(uid) }),
+  );
   return {
     question: {
       valueUid: chain.focus.uid,
@@ -40,7 +45,7 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
       engine: ENGINE_VERSION,
     },
     focusUid: chain.focus.uid,
-    inForceInstead: isFull(chain.focus.uid) ? inForceInstead(chain) : null,
+    inForceInstead: withHistory.has(chain.focus.uid) ? inForceInstead(chain) : null,
     succeededBy: isFull(chain.focus.uid) ? succeededBy(chain) : null,
     nodes: [
       ...chain.closure.values.map((value) => presentValue(value, chain, isFull(value.uid), shares)),
@@ -54,7 +59,7 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
       expanded: u === null ? null : u * k,
       k,
       stated: chain.focus.uStated,
-      carried: carried === null ? null : Math.sqrt(carried),
+      carried: carried !== null && isFull(chain.focus.uid) ? Math.sqrt(carried) : null,
       degreesOfFreedom: Number.isFinite(propagation.degreesOfFreedom) ? propagation.degreesOfFreedom : null,
       missing: missingOf(chain),
     },

@@ -14,8 +14,24 @@ export function rulesTold(rules: ChainResponse['rules'], checks: readonly Check[
   }));
 }
 
-/** What a rule says of another laboratory's weight from its history and budget stays there; its outcome is shown. */
-export function redactCheck(check: Check, isFull: (uid: string) => boolean): Check {
-  if (check.subject.type !== 'value' || isFull(check.subject.uid)) return check;
+/** Rules of which the words quote other calibrations of the weight, or of its duplicate. */
+const OF_HISTORY: ReadonlySet<string> = new Set(['B-17', 'B-18', 'B-19', 'X-01']);
+
+/**
+ * Whether what a rule says of a value may be told in words. From the history and budget of another laboratory's weight
+ * nothing is; to who issued its certificate, nothing from its history. The outcome is shown in any case.
+ */
+export function isToldInWords(rule: string, sees: { full: boolean; history: boolean }): boolean {
+  return sees.full && (sees.history || !OF_HISTORY.has(rule));
+}
+
+/** A check as it may be told: of a value without its words where they are not this person's to read. */
+export function redactCheck(
+  check: Check,
+  sees: { full(uid: string): boolean; history(uid: string): boolean },
+): Check {
+  const { rule, subject } = check;
+  if (subject.type !== 'value') return check;
+  if (isToldInWords(rule, { full: sees.full(subject.uid), history: sees.history(subject.uid) })) return check;
   return { ...check, sentence: null, parameters: {} };
 }

@@ -1,3 +1,4 @@
+export { isToldInWords } from './checks.presenter.ts';
 export { chainNumbers } from './chain-numbers.ts';
 export { chainBatch } from './chain-batch.ts';
 export { chainOf } from './chain.service.ts';

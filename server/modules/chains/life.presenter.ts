@@ -1,13 +1,14 @@
 import type { ChainLifeResponse, LifeEvent } from '#shared/contracts/chain-life.ts';
 import type { User } from '#server/policy/user.ts';
-import { valueView } from '#server/policy/value-view.ts';
+import { seesHistory, valueView } from '#server/policy/value-view.ts';
 import type { ChainSubject } from './chains.policy.ts';
 import { isImported, type Life, type RecordedEvent } from './life.service.ts';
 
 /** The life as this person may know it: of other laboratories' weights what a traceability statement tells. */
 export function presentLife(life: Life, user: User, subject: ChainSubject): ChainLifeResponse {
-  const isTold = ({ about, isStated }: RecordedEvent) => {
-    if (about === null || isStated) return true;
+  const isTold = ({ about, toldTo }: RecordedEvent) => {
+    if (about === null || toldTo === 'all') return true;
+    if (toldTo === 'holder') return seesHistory(user, about);
     const view = about.id === subject.id ? subject.view : valueView(user, about, 'upstream');
     return view === 'full';
   };
@@ -23,7 +24,7 @@ export function presentLife(life: Life, user: User, subject: ChainSubject): Chai
   };
 }
 
-function presentEvent({ about: _, isStated: __, ...event }: RecordedEvent): LifeEvent {
+function presentEvent({ about: _, toldTo: __, ...event }: RecordedEvent): LifeEvent {
   return { ...event, isImported: isImported(event) };
 }
 

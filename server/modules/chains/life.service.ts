@@ -11,8 +11,8 @@ import type { LaboratoryDossier, StandardDossier, StoredHistoryValue, StoredValu
 export interface RecordedEvent extends Omit<LifeEvent, 'isImported'> {
   /** The value whose reader may know it; null: published. */
   about: StoredValue | null;
-  /** Told by a traceability statement; otherwise only to who reads the value in full. */
-  isStated: boolean;
+  /** Who may know it: whoever is shown a statement of the value, who reads it in full, or who sees the weight's history. */
+  toldTo: 'all' | 'readers' | 'holder';
 }
 
 export interface Life {
@@ -61,7 +61,7 @@ function ofTheWeight({ focus, standards }: Parts): RecordedEvent[] {
     inForceFrom: focus.performedEnd,
     madeKnownOn: focus.issuedOn,
     recordedOn: dayOf(focus.recordedAt),
-    isStated: true,
+    toldTo: 'all' as const,
   };
   const epochs = dossier.epochs
     .filter((epoch) => epoch.n > 1)
@@ -73,13 +73,13 @@ function ofTheWeight({ focus, standards }: Parts): RecordedEvent[] {
       inForceFrom: epoch.beginsOn,
       madeKnownOn: dayOf(epoch.recordedAt),
       recordedOn: dayOf(epoch.recordedAt),
-      isStated: false,
+      toldTo: 'holder' as const,
     }));
   const values = own.flatMap((row) => {
-    const isStated = row.id === focus.id;
+    const toldTo = row.id === focus.id ? ('all' as const) : ('holder' as const);
     // A later revision is told by the end of the one it replaced.
     const issued = row.revisionN > 1 ? [] : [issuedEvent(row)];
-    return [...issued, ...endEvents(row)].map((event) => ({ ...base, ...event, isStated }));
+    return [...issued, ...endEvents(row)].map((event) => ({ ...base, ...event, toldTo }));
   });
   return [calibrated, ...epochs, ...values];
 }
@@ -87,7 +87,7 @@ function ofTheWeight({ focus, standards }: Parts): RecordedEvent[] {
 /** Ends of a reference and of what took its place; its issue where that was recorded long after. */
 function ofReference(value: StoredValue, { standards }: Parts): RecordedEvent[] {
   const { history } = standards.get(value.standardId)!;
-  const base = { of: 'chain', about: value, registryNo: value.registryNo, isStated: true } as const;
+  const base = { of: 'chain', about: value, registryNo: value.registryNo, toldTo: 'all' } as const;
   const inTurn = [value.id];
   for (const id of inTurn) {
     const ends = history.find((row) => row.id === id)?.ends ?? [];
@@ -146,7 +146,7 @@ function dueDays(parts: Parts): RecordedEvent[] {
         kind: 'due' as const,
         of,
         about: focus,
-        isStated: false,
+        toldTo: of === 'weight' ? ('holder' as const) : ('readers' as const),
         valueUid: value.uid,
         registryNo: value.registryNo,
         what: `${laboratories.get(userId)!.name}, ${dateText(due, value.datePrecision)}`,
@@ -165,7 +165,7 @@ function ofTheScale({ closure }: Parts, store: ChainStore): RecordedEvent[] {
     kind: 'notice',
     of: 'chain',
     about: null,
-    isStated: true,
+    toldTo: 'all',
     valueUid: null,
     registryNo: null,
     what: `${notice.number}, ${notice.title}`,
