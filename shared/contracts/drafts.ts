@@ -172,7 +172,8 @@ export const ReferenceChoice = z.object({
   nominal: DecimalString,
   holder: LaboratoryName,
   quantity: QuantityKind,
-  deviation: Deviation,
+  /** Grams; null, as U and k are, where the weight is another laboratory's: a chain tells it once a certificate names it. */
+  deviation: Deviation.nullable(),
   expandedU: DecimalString.nullable(),
   k: DecimalString.nullable(),
   certificateNo: z.string(),

@@ -375,4 +375,19 @@ describe('GET /api/references', () => {
     expect(await find(foreign.registryNo.slice(0, -1), undefined, other.id)).toEqual([]);
     expect(await find(foreign.registryNo, 'mass', other.id)).toEqual([]);
   });
+
+  it('tells the numbers of own values, and none of another laboratory’s', async () => {
+    const other = await makeLaboratory(app);
+    const [own, foreign] = [await makeStandard(app, laboratory.id), await makeStandard(app, other.id)];
+    await makeCalibration(app, laboratory.id, '2024-01-10', [lineOf(own.id)]);
+    await makeCalibration(app, other.id, '2024-01-10', [lineOf(foreign.id)]);
+    const find = async (q: string) => {
+      const query = { laboratory: laboratory.id, q, issuer: other.id };
+      const reply = await agents.metrologist.get('/api/references').query(query);
+      const { deviation, expandedU, k } = reply.body.references[0];
+      return { deviation, expandedU, k };
+    };
+    expect(await find(own.registryNo)).toEqual({ deviation: '0.000123', expandedU: '0.0005', k: '2' });
+    expect(await find(foreign.registryNo)).toEqual({ deviation: null, expandedU: null, k: null });
+  });
 });

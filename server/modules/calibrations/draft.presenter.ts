@@ -25,7 +25,7 @@ export function presentDraft(shown: ShownDraft, user: User, subject: DraftSubjec
     content: draft.content,
     document: document && { id: document.id, name: document.name, size: document.size },
     standards: standards.map((standard) => presentStandard(standard, shown)),
-    references: presentReferences(references),
+    references: presentReferences(references, user),
     points,
     checks,
     revisionId: draft.revisionId,

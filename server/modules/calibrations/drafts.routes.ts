@@ -134,6 +134,6 @@ export const draftRoutes: Route[] = [
         day: today(context),
       }),
     response: ReferenceListResponse,
-    present: (references) => ({ references: presentReferences(references) }),
+    present: (references, context) => ({ references: presentReferences(references, context.user) }),
   }),
 ];

@@ -105,14 +105,19 @@ function ReferenceFacts({ uid }: { uid: string }) {
       <span className="font-mono text-sm">{registryNo}</span>, {marking}{' '}
       <StateMark state={stateOfValue(state)}>{state}</StateMark>
       <span className="block text-ink-2 [&>*]:whitespace-nowrap">
-        <Quantity
-          value={deviation}
-          kind="deviation"
-          shownIn="auto"
-          expandedUncertainty={expandedU}
-          coverageFactor={k}
-        />
-        , <span>{certificateNo}</span>, <span>{performedEnd}</span>
+        {deviation !== null && (
+          <>
+            <Quantity
+              value={deviation}
+              kind="deviation"
+              shownIn="auto"
+              expandedUncertainty={expandedU}
+              coverageFactor={k}
+            />
+            ,{' '}
+          </>
+        )}
+        <span>{certificateNo}</span>, <span>{performedEnd}</span>
       </span>
     </p>
   );
