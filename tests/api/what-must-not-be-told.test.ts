@@ -2,6 +2,8 @@ import type { Test } from 'supertest';
 import { describe, expect, it } from 'vitest';
 import { auditRunnerOf } from '#server/modules/audits/index.ts';
 import { routes } from '#server/routes.ts';
+import { makeStandard } from '#tests/support/calibration-factories.ts';
+import { freeRegistryNo } from '#tests/support/factories.ts';
 import { testApp } from '#tests/support/test-app.ts';
 import {
   changesOf,
@@ -186,6 +188,46 @@ describe.each([...thorough])('in every wording, to: %s', (teller) => {
   });
 });
 
+const WRITERS = TELLERS.filter((teller) => /^(metrologist|administrator)/.test(teller));
+
+describe.each(WRITERS)('numbers that must not be told while a certificate is entered, to: %s', (teller) => {
+  const own = () => scene.laboratories[laboratoryOf(teller)!].id;
+  // By its whole number a weight may be named as reference, as a certificate names it: no number of it is told.
+  const ofNumbers = (found: string[]) => found.filter((line) => / tells (deviation|U) of /.test(line));
+
+  it('by looking for a reference', async () => {
+    const questions = values.flatMap(({ registryNo, certificateNo, holder }) =>
+      [registryNo, certificateNo].map((q) => ({
+        ...{ route: 'GET /api/references', path: '/api/references' },
+        query: { laboratory: own(), issuer: scene.laboratories[holder].id, q },
+      })),
+    );
+    expect(ofNumbers(await told(teller, questions))).toEqual([]);
+  });
+
+  it('by naming it in a draft', async () => {
+    const standard = await makeStandard(app, own());
+    const questions = values.map(({ uid, holder }) => ({
+      ...{ route: 'POST /api/drafts', path: '/api/drafts' },
+      body: {
+        laboratoryId: own(),
+        content: {
+          ...{ issuerId: scene.laboratories[holder].id, certificateNo: freeRegistryNo() },
+          ...{ issuedOn: '2025-02-03', performedBegin: '2025-02-03', performedEnd: '2025-02-03' },
+          method: 'Substitution weighing',
+          lines: [
+            {
+              ...{ key: 'a', standardId: standard.id, value: '0.1', expandedU: '0.01' },
+              references: [{ valueUid: uid, sensitivity: '1' }],
+            },
+          ],
+        },
+      },
+    }));
+    expect(ofNumbers(await told(teller, questions))).toEqual([]);
+  });
+});
+
 /** Routes that were not asked, and why they tell nothing of a value to who may not know it. */
 const NOT_ASKED = [
   /^(GET|POST|DELETE) \/api\/session$/,
@@ -193,7 +235,7 @@ const NOT_ASKED = [
   // Who is in the network is known to everybody in it.
   /^(GET|PUT) \/api\/laboratories/,
   // Acts and drafts of one's own laboratory: the permission walk holds them, and their own tests.
-  /^(POST|PUT|GET) \/api\/(drafts|references|documents|sets)/,
+  /^(POST|PUT|GET) \/api\/(drafts|documents|sets)/,
   /^POST \/api\/(standards|notices|calibrations|dry-runs\/:id\/notes|audits\/)/,
 ];
 
