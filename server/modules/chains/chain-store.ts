@@ -2,7 +2,7 @@ import type { Sequelize } from 'sequelize';
 import { readRow, readRows } from '#server/db/read.ts';
 import { ancestorIds, storedGroups, storedSources, storedValues } from './closure.queries.ts';
 import type { Notice } from '#shared/notices/notice.ts';
-import { laboratoryDossiers, standardDossiers } from './dossier.queries.ts';
+import { duplicatesOf, laboratoryDossiers, standardDossiers } from './dossier.queries.ts';
 import { isNoticeSince, recordedNotices } from './notices.queries.ts';
 import { RecentMap } from './recent-map.ts';
 import type { LaboratoryDossier, StandardDossier, StoredGroup, StoredSource, StoredValue } from './stored.ts';
@@ -97,8 +97,11 @@ export class ChainStore {
 
   /** What is known of these standards, duplicates' partners included. */
   async standards(ids: Iterable<string>): Promise<Map<string, StandardDossier>> {
-    const found = await this.#standardsOf(ids);
-    const partners = [...found.values()].flatMap((dossier) => dossier.duplicateIds);
+    const asked = [...new Set(ids)];
+    const unread = asked.filter((id) => !this.#standards.has(id));
+    // The partners of what has to be read are read with it, those of what is held have to be in memory still.
+    const found = await this.#standardsOf([...asked, ...(await duplicatesOf(this.#database, unread))]);
+    const partners = asked.flatMap((id) => found.get(id)?.duplicateIds ?? []);
     for (const [id, dossier] of await this.#standardsOf(partners)) found.set(id, dossier);
     return found;
   }

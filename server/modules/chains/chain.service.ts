@@ -90,7 +90,11 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as
   const { question } = steps;
   const certified = await store.closure([focusId]);
   const inForce = noticesInForce(store.notices, question.day, question.known);
-  const now = await chainNow(store, certified, focusOf(certified, focusId), question, inForce);
+  // Read at once: laboratories do not depend on what has changed since.
+  const [now] = await Promise.all([
+    chainNow(store, certified, focusOf(certified, focusId), question, inForce),
+    store.laboratories(laboratoriesOf(certified)),
+  ]);
   const isNow = as === 'now known' && now !== null;
   const closure = isNow ? now.closure : certified;
   const focus = focusOf(closure, focusId);
@@ -98,7 +102,7 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as
   const asUsed = isNow ? await store.closure([focusId, ...idsOf(closure)]) : certified;
   const [standards, laboratories] = await Promise.all([
     store.standards(asUsed.values.map((value) => value.standardId)),
-    store.laboratories(asUsed.values.flatMap((value) => [value.issuerId, value.holderId])),
+    store.laboratories(laboratoriesOf(asUsed)),
   ]);
   const widened = await store.closure([...idsOf(asUsed), ...earlierThan(asUsed, steps, standards)]);
   const shown = withNotices(closure, inForce);
@@ -145,6 +149,10 @@ async function workOut(store: ChainStore, focusId: number, steps: StepMemory, as
 
 function focusOf(closure: Closure, id: number): StoredValue {
   return closure.values.find((value) => value.id === id)!;
+}
+
+function laboratoriesOf(closure: Closure): string[] {
+  return closure.values.flatMap((value) => [value.issuerId, value.holderId]);
 }
 
 function idsOf(closure: Closure): number[] {

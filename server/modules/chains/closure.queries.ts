@@ -1,10 +1,11 @@
 import type { Sequelize } from 'sequelize';
 import { decimalText } from '#shared/decimal.ts';
-import { groupBy } from '#shared/group-by.ts';
 import { readRows } from '#server/db/read.ts';
+import { rowsOf, type JsonList } from './json-list.ts';
 import { plainDecimals } from './plain-decimals.ts';
 import { GroupCovariance } from './group-covariance.ts';
-import type { StoredGroup, StoredLink, StoredSource, StoredSourceLink, StoredValue } from './stored.ts';
+import { readInParts } from './read-in-parts.ts';
+import type { StoredGroup, StoredSource, StoredValue } from './stored.ts';
 
 /** Instants as the pure functions compare them: ISO 8601, UTC, microseconds. */
 const INSTANT = (column: string) => `DATE_FORMAT(${column}, '%Y-%m-%dT%H:%i:%s.%fZ')`;
@@ -31,8 +32,17 @@ const VALUES = `
     r.decision_rule AS decisionRule, r.signatory_id AS signatoryId, r.reason AS amendmentReason, r.method, r.performed_begin AS performedBegin,
     v.performed_end AS performedEnd, v.date_precision AS datePrecision, v.effective_from AS issuedOn,
     ${INSTANT('v.recorded_at')} AS recordedAt,
-    (SELECT COUNT(DISTINCT o.id) FROM assigned_value o JOIN value_link l ON l.child_id = o.id
-     WHERE o.revision_id = v.revision_id AND o.id <> v.id) AS siblingLinesWithReferences
+    (SELECT COUNT(*) FROM assigned_value o WHERE o.revision_id = v.revision_id AND o.id <> v.id
+     AND EXISTS (SELECT 1 FROM value_link l WHERE l.child_id = o.id)) AS siblingLinesWithReferences,
+    (SELECT JSON_ARRAYAGG(JSON_OBJECT('parentId', parent_id, 'role', role, 'sensitivity', sensitivity,
+        'usedBegin', used_begin, 'usedEnd', used_end, 'usedAs', used_as,
+        'usedDeviation', CAST(used_deviation AS CHAR), 'usedExpandedU', CAST(used_expanded_u AS CHAR),
+        'usedK', CAST(used_k AS CHAR)) ORDER BY parent_id, role)
+     FROM value_link WHERE child_id = v.id) AS parents,
+    (SELECT JSON_ARRAYAGG(JSON_OBJECT('sourceId', source_id, 'sensitivity', sensitivity) ORDER BY source_id)
+     FROM source_link WHERE child_id = v.id) AS sources,
+    (SELECT JSON_ARRAYAGG(name ORDER BY n) FROM component WHERE value_id = v.id) AS components,
+    (SELECT group_id FROM group_covariance WHERE row_id = v.id AND column_id = v.id LIMIT 1) AS groupId
   FROM assigned_value v
   JOIN revision r ON r.id = v.revision_id
   JOIN calibration c ON c.id = r.calibration_id
@@ -40,23 +50,6 @@ const VALUES = `
   JOIN epoch e ON e.id = v.epoch_id
   LEFT JOIN scale_version sv ON sv.id = v.scale_version_id
   WHERE v.id IN (:ids)`;
-
-const LINKS = `
-  SELECT child_id AS childId, parent_id AS parentId, role, sensitivity, used_begin AS usedBegin,
-    used_end AS usedEnd, used_as AS usedAs, used_deviation AS usedDeviation,
-    used_expanded_u AS usedExpandedU, used_k AS usedK
-  FROM value_link WHERE child_id IN (:ids) ORDER BY child_id, parent_id`;
-
-const SOURCE_LINKS = `
-  SELECT child_id AS childId, source_id AS sourceId, sensitivity
-  FROM source_link WHERE child_id IN (:ids) ORDER BY child_id, source_id`;
-
-const COMPONENTS = `
-  SELECT value_id AS valueId, name FROM component WHERE value_id IN (:ids) ORDER BY value_id, n`;
-
-const GROUP_MEMBERS = `
-  SELECT row_id AS valueId, group_id AS groupId FROM group_covariance
-  WHERE row_id IN (:ids) AND row_id = column_id`;
 
 const SOURCES = `
   SELECT o.id, o.uid, o.kind, o.name, o.u, o.unit, o.degrees_of_freedom AS degreesOfFreedom, o.estimate,
@@ -81,45 +74,30 @@ export async function ancestorIds(database: Sequelize, ids: readonly number[]): 
 /** The values with their links; every id is expected to exist. */
 export async function storedValues(database: Sequelize, ids: number[]): Promise<StoredValue[]> {
   if (ids.length === 0) return [];
-  type Row = Omit<StoredValue, 'parents' | 'sources' | 'components' | 'groupId'>;
-  const [values, links, sourceLinks, components, members] = await Promise.all([
-    readRows<Row>(database, VALUES, { ids }),
-    readRows<StoredLink & { childId: number }>(database, LINKS, { ids }),
-    readRows<StoredSourceLink & { childId: number }>(database, SOURCE_LINKS, { ids }),
-    readRows<{ valueId: number; name: string }>(database, COMPONENTS, { ids }),
-    readRows<{ valueId: number; groupId: number }>(database, GROUP_MEMBERS, { ids }),
-  ]);
-  const parents = groupBy(links, (link) => link.childId);
-  const sources = groupBy(sourceLinks, (link) => link.childId);
-  const budgets = namesByValue(components);
-  const groups = new Map(members.map((member) => [member.valueId, member.groupId]));
-  return values.map((row) => ({
+  type Listed = 'parents' | 'sources' | 'components';
+  type Row = Omit<StoredValue, Listed> & { [List in Listed]: JsonList<StoredValue[List][number]> };
+  const rows = await readInParts<Row, number>(database, VALUES, ids);
+  const budgets = new Map<string, readonly string[]>([['[]', NO_BUDGET]]);
+  return rows.map((row) => ({
     ...row,
     ...plainDecimals(row),
     nominal: decimalText(row.nominal),
     underAccreditation: Boolean(row.underAccreditation),
     unitConfirmed: Boolean(row.unitConfirmed),
-    parents: (parents.get(row.id) ?? []).map(({ childId: _, ...link }) => link),
-    sources: (sources.get(row.id) ?? []).map(({ childId: _, ...link }) => link),
-    components: budgets.get(row.id) ?? NO_BUDGET,
-    groupId: groups.get(row.id) ?? null,
+    parents: rowsOf(row.parents),
+    sources: rowsOf(row.sources),
+    components: keptOnce(budgets, rowsOf(row.components)),
   }));
 }
 
 const NO_BUDGET: readonly string[] = [];
 
 /** Budgets of one laboratory have the same names again and again: each list is kept once. */
-function namesByValue(rows: readonly { valueId: number; name: string }[]): Map<number, readonly string[]> {
-  const lists = new Map<string, readonly string[]>();
-  const byValue = new Map<number, readonly string[]>();
-  for (const [valueId, components] of groupBy(rows, (row) => row.valueId)) {
-    const names = components.map(({ name }) => name);
-    const key = JSON.stringify(names);
-    const list = lists.get(key) ?? names;
-    lists.set(key, list);
-    byValue.set(valueId, list);
-  }
-  return byValue;
+function keptOnce(lists: Map<string, readonly string[]>, names: readonly string[]): readonly string[] {
+  const key = JSON.stringify(names);
+  const list = lists.get(key) ?? names;
+  lists.set(key, list);
+  return list;
 }
 
 /** Shared effects by id. */

@@ -1,39 +1,50 @@
-import { plainDecimals } from './plain-decimals.ts';
 import type { Sequelize } from 'sequelize';
 import { groupBy } from '#shared/group-by.ts';
 import { readRows } from '#server/db/read.ts';
+import { rowsOf, type JsonList } from './json-list.ts';
+import { plainDecimals } from './plain-decimals.ts';
+import { readInParts } from './read-in-parts.ts';
 import type {
   LaboratoryDossier,
   StandardDossier,
   StoredAuthorisation,
-  StoredClass,
-  StoredDriftRate,
   StoredEnd,
-  StoredEpoch,
   StoredHistoryValue,
-  StoredProgramme,
-  StoredProperty,
   StoredRecognition,
   StoredScopeLine,
 } from './stored.ts';
 
+/** The instant of recording within a JSON object. */
+const RECORDED_JSON = `'recordedAt', DATE_FORMAT(recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ')`;
 const ASSERTED = `valid_from AS validFrom, valid_to AS validTo, act_seq AS actSeq,
   DATE_FORMAT(recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt`;
 
+/** The same within a JSON object. */
+const ASSERTED_JSON = `'validFrom', valid_from, 'validTo', valid_to, 'actSeq', act_seq, ${RECORDED_JSON}`;
+
+/**
+ * Standards with all that was asserted of them, each list in a fixed order, since audits digest it. Of drifts rates only:
+ * a drift given in grams for one interval says nothing of another.
+ */
 const STANDARDS = `
   SELECT s.id AS standardId, s.registry_no AS registryNo, s.marking, s.nominal, s.kind, s.serial, s.shape,
-    EXISTS (SELECT 1 FROM set_member m WHERE m.standard_id = s.id) AS isInSet
+    EXISTS (SELECT 1 FROM set_member m WHERE m.standard_id = s.id) AS isInSet,
+    (SELECT JSON_ARRAYAGG(JSON_OBJECT('value', value, ${ASSERTED_JSON}) ORDER BY recorded_at, id)
+     FROM standard_fact WHERE standard_id = s.id AND kind = 'class' AND value IS NOT NULL) AS classes,
+    (SELECT JSON_ARRAYAGG(JSON_OBJECT('u', u, 'determinedOn', determined_on, ${RECORDED_JSON}) ORDER BY id)
+     FROM source WHERE standard_id = s.id AND kind = 'drift' AND unit = 'g/a') AS driftRates,
+    (SELECT JSON_ARRAYAGG(JSON_OBJECT('n', n, 'reason', reason, 'beginsOn', begins_on,
+        'lastGoodOn', last_good_on, ${RECORDED_JSON}) ORDER BY n)
+     FROM epoch WHERE standard_id = s.id) AS epochs,
+    (SELECT JSON_ARRAYAGG(JSON_OBJECT('laboratoryId', laboratory_id, 'intervalMonths', interval_months,
+        'method', method, 'justification', justification, ${ASSERTED_JSON})
+       ORDER BY laboratory_id, recorded_at, id)
+     FROM programme WHERE standard_id = s.id) AS programmes,
+    (SELECT JSON_ARRAYAGG(JSON_OBJECT('kind', kind, 'value', CAST(value AS CHAR),
+        'expandedU', CAST(expanded_u AS CHAR), 'k', CAST(k AS CHAR), 'origin', origin, 'sourceId', source_id,
+        ${ASSERTED_JSON}) ORDER BY kind, recorded_at, id)
+     FROM property WHERE standard_id = s.id) AS properties
   FROM standard s WHERE s.id IN (:ids)`;
-
-const CLASSES = `
-  SELECT standard_id AS standardId, value, ${ASSERTED}
-  FROM standard_fact WHERE standard_id IN (:ids) AND kind = 'class' AND value IS NOT NULL`;
-
-/** Rates only: a drift given in grams for one interval says nothing of another. */
-const DRIFT_RATES = `
-  SELECT standard_id AS standardId, u, determined_on AS determinedOn,
-    DATE_FORMAT(recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt
-  FROM source WHERE standard_id IN (:ids) AND kind = 'drift' AND unit = 'g/a'`;
 
 const HISTORY = `
   SELECT v.standard_id AS standardId, v.id, v.uid, r.calibration_id AS calibrationId, v.revision_id AS revisionId,
@@ -60,20 +71,6 @@ const ENDS = `
   LEFT JOIN revision r ON r.id = n.revision_id
   LEFT JOIN calibration c ON c.id = r.calibration_id
   WHERE v.standard_id IN (:ids)`;
-
-const EPOCHS = `
-  SELECT standard_id AS standardId, n, reason, begins_on AS beginsOn, last_good_on AS lastGoodOn,
-    DATE_FORMAT(recorded_at, '%Y-%m-%dT%H:%i:%s.%fZ') AS recordedAt
-  FROM epoch WHERE standard_id IN (:ids) ORDER BY n`;
-
-const PROGRAMMES = `
-  SELECT standard_id AS standardId, laboratory_id AS laboratoryId, interval_months AS intervalMonths, method,
-    justification, ${ASSERTED}
-  FROM programme WHERE standard_id IN (:ids)`;
-
-const PROPERTIES = `
-  SELECT standard_id AS standardId, kind, value, expanded_u AS expandedU, k, origin, source_id AS sourceId, ${ASSERTED}
-  FROM property WHERE standard_id IN (:ids)`;
 
 const DUPLICATES = `
   SELECT m.standard_id AS standardId, o.standard_id AS duplicateId
@@ -102,48 +99,52 @@ const AUTHORISATIONS = `
 type StandardRow = Pick<
   StandardDossier,
   'standardId' | 'registryNo' | 'marking' | 'nominal' | 'kind' | 'serial' | 'shape'
-> & { isInSet: number };
+> & { isInSet: number } & { [List in AssertedList]: JsonList<StandardDossier[List][number]> };
+
+type AssertedList = 'classes' | 'driftRates' | 'epochs' | 'programmes' | 'properties';
+
+/** Two standards of one nominal in one set. */
+interface Duplicate {
+  standardId: string;
+  duplicateId: string;
+}
 
 type Of<T, Key extends string> = T & Record<Key, string>;
 
 /** What later acts may have added to these standards: history with its ends, programmes, properties, classes, drifts, duplicates. */
 export async function standardDossiers(database: Sequelize, ids: string[]): Promise<StandardDossier[]> {
   if (ids.length === 0) return [];
-  const [standards, history, ends, epochs, programmes, properties, duplicates, classes, driftRates] =
-    await Promise.all([
-      readRows<StandardRow>(database, STANDARDS, { ids }),
-      readRows<Of<Omit<StoredHistoryValue, 'ends'>, 'standardId'>>(database, HISTORY, { ids }),
-      readRows<StoredEnd & { valueId: number }>(database, ENDS, { ids }),
-      readRows<Of<StoredEpoch, 'standardId'>>(database, EPOCHS, { ids }),
-      readRows<Of<StoredProgramme, 'standardId'>>(database, PROGRAMMES, { ids }),
-      readRows<Of<StoredProperty, 'standardId'>>(database, PROPERTIES, { ids }),
-      readRows<{ standardId: string; duplicateId: string }>(database, DUPLICATES, { ids }),
-      readRows<Of<StoredClass, 'standardId'>>(database, CLASSES, { ids }),
-      readRows<Of<StoredDriftRate, 'standardId'>>(database, DRIFT_RATES, { ids }),
-    ]);
+  const [standards, history, ends, duplicates] = await Promise.all([
+    readInParts<StandardRow, string>(database, STANDARDS, ids),
+    readInParts<Of<Omit<StoredHistoryValue, 'ends'>, 'standardId'>, string>(database, HISTORY, ids),
+    readRows<StoredEnd & { valueId: number }>(database, ENDS, { ids }),
+    readRows<Duplicate>(database, DUPLICATES, { ids }),
+  ]);
   const endsByValue = groupBy(ends, (end) => end.valueId);
   const historyOf = groupBy(history, (row) => row.standardId);
-  const epochsOf = groupBy(epochs, (row) => row.standardId);
-  const programmesOf = groupBy(programmes, (row) => row.standardId);
-  const propertiesOf = groupBy(properties, (row) => row.standardId);
-  const duplicatesOf = groupBy(duplicates, (row) => row.standardId);
-  const classesOf = groupBy(classes, (row) => row.standardId);
-  const driftRatesOf = groupBy(driftRates, (row) => row.standardId);
+  const twins = groupBy(duplicates, (row) => row.standardId);
   return standards.map((standard) => ({
     ...standard,
     isInSet: Boolean(standard.isInSet),
-    classes: classesOf.get(standard.standardId) ?? [],
-    driftRates: driftRatesOf.get(standard.standardId) ?? [],
+    classes: rowsOf(standard.classes),
+    driftRates: rowsOf(standard.driftRates),
     history: (historyOf.get(standard.standardId) ?? []).map((row) => ({
       ...row,
       ...plainDecimals(row),
       ends: endsByValue.get(row.id) ?? [],
     })),
-    epochs: epochsOf.get(standard.standardId) ?? [],
-    programmes: programmesOf.get(standard.standardId) ?? [],
-    properties: propertiesOf.get(standard.standardId) ?? [],
-    duplicateIds: [...new Set((duplicatesOf.get(standard.standardId) ?? []).map((row) => row.duplicateId))],
+    epochs: rowsOf(standard.epochs),
+    programmes: rowsOf(standard.programmes),
+    properties: rowsOf(standard.properties),
+    duplicateIds: [...new Set((twins.get(standard.standardId) ?? []).map((row) => row.duplicateId))],
   }));
+}
+
+/** The other members of the same sets at the same nominal as these standards. */
+export async function duplicatesOf(database: Sequelize, ids: string[]): Promise<string[]> {
+  if (ids.length === 0) return [];
+  const rows = await readRows<Duplicate>(database, DUPLICATES, { ids });
+  return rows.map((row) => row.duplicateId);
 }
 
 /** What later acts may have added to these laboratories: scope lines, recognitions and authorisations. */
