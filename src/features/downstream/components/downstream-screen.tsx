@@ -1,4 +1,4 @@
-import { useRef, useState, type ReactNode } from 'react';
+import { lazy, type ReactNode, Suspense, useRef, useState } from 'react';
 import { Link } from 'react-router';
 import { paths } from '#src/app/paths.ts';
 import { Toolbar, TwoColumns } from '#src/components/layout/columns.tsx';
@@ -11,12 +11,16 @@ import { suppositionOf, type Supposition } from '../api.ts';
 import { GROUPINGS } from '../groups.ts';
 import type { DownstreamSearch } from '../search.ts';
 import { supposedChange } from '../supposed-change.ts';
-import { KeepDryRun } from './keep-dry-run.tsx';
 import { Leaning } from './leaning.tsx';
 import { RealActs, type ActDialogs } from './real-acts.tsx';
 import { RecordedNotice } from './recorded-notice.tsx';
 import { WhatIfForm, type Asked } from './what-if-form.tsx';
 import { WhatIf } from './what-if.tsx';
+
+/** The form and its library are fetched when there is a dry run to keep. */
+const KeepDryRun = lazy(() =>
+  import('./keep-dry-run.tsx').then((module) => ({ default: module.KeepDryRun })),
+);
 
 /** The value that is asked about, as its chain tells it. */
 export interface DownstreamSubject {
@@ -124,7 +128,9 @@ export function DownstreamScreen(props: DownstreamScreenProps) {
             {asked && (
               <>
                 <RealActs asked={asked} dialogs={dialogs} onDone={done} />
-                <KeepDryRun question={questionOf(asked)} />
+                <Suspense fallback={null}>
+                  <KeepDryRun question={questionOf(asked)} />
+                </Suspense>
               </>
             )}
           </>

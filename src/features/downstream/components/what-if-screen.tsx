@@ -1,5 +1,5 @@
 import { useQuery, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { lazy, Suspense, useState } from 'react';
 import type { WhatIfChange } from '#shared/contracts/downstream.ts';
 import { paths } from '#src/app/paths.ts';
 import { Toolbar, TwoColumns } from '#src/components/layout/columns.tsx';
@@ -14,10 +14,14 @@ import type { WhatIfSearch } from '../what-if-search.ts';
 import { BeyondField } from './beyond-field.tsx';
 import { ChangeForm } from './change-form.tsx';
 import { ChangeText } from './change-text.tsx';
-import { KeepDryRun } from './keep-dry-run.tsx';
 import { RealActs, type ActDialogs } from './real-acts.tsx';
 import { RecordedNotice } from './recorded-notice.tsx';
 import { WhatIf } from './what-if.tsx';
+
+/** The form and its library are fetched when there is a dry run to keep. */
+const KeepDryRun = lazy(() =>
+  import('./keep-dry-run.tsx').then((module) => ({ default: module.KeepDryRun })),
+);
 
 const MOST_CHANGES = 20;
 
@@ -78,7 +82,9 @@ export function WhatIfScreen({ search, onChange, dialogs }: WhatIfScreenProps) {
             {changes.length > 0 && (
               <>
                 <RealActs asked={asked} dialogs={dialogs} onDone={setActSeq} />
-                <KeepDryRun question={{ changes, day, known, by, threshold }} />
+                <Suspense fallback={null}>
+                  <KeepDryRun question={{ changes, day, known, by, threshold }} />
+                </Suspense>
               </>
             )}
           </>

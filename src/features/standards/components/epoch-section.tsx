@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { lazy, Suspense, useState } from 'react';
 import { Link } from 'react-router';
 import type { StandardResponse } from '#shared/contracts/standards.ts';
 import { paths } from '#src/app/paths.ts';
@@ -7,7 +7,11 @@ import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { can } from '#src/lib/abilities.ts';
-import { EpochDialog } from './epoch-dialog.tsx';
+
+/** The form and its library are fetched when they are asked for. */
+const EpochDialog = lazy(() =>
+  import('./epoch-dialog.tsx').then((module) => ({ default: module.EpochDialog })),
+);
 
 /** The stretches of the weight's life; nothing is drawn, fitted or compared across their ends. */
 export function EpochSection({ sheet }: { sheet: StandardResponse }) {
@@ -36,7 +40,11 @@ export function EpochSection({ sheet }: { sheet: StandardResponse }) {
               ] as const,
           )}
       />
-      {isOpening && <EpochDialog sheet={sheet} onClose={() => setOpening(false)} />}
+      {isOpening && (
+        <Suspense fallback={null}>
+          <EpochDialog sheet={sheet} onClose={() => setOpening(false)} />
+        </Suspense>
+      )}
     </Section>
   );
 }
