@@ -160,6 +160,12 @@ export type WhatIfChange = z.infer<typeof WhatIfChange>;
 export const WhatIfWord = z.enum(['none', 'material', 'verdict changes']);
 export type WhatIfWord = z.infer<typeof WhatIfWord>;
 
+/**
+ * Beyond this part of U a change is material for weights of others, whatever threshold is asked: a word at a threshold
+ * of the asker's choice would tell U, which is the holder's.
+ */
+export const WEIGHTS_OF_OTHERS_BEYOND = 0.1;
+
 /** By the word, then by |shift|; by |shift|; by |shift|/U; by the growth of U. What is not told comes last. */
 export const WhatIfSort = z.enum(['word', 'shift', 'ratio', 'u']);
 export type WhatIfSort = z.infer<typeof WhatIfSort>;
@@ -174,7 +180,7 @@ export const WhatIfInput = z.strictObject({
   sort: WhatIfSort.default('word'),
   cursor: Cursor.optional(),
   limit: PageLimit,
-  /** A shift, or a growth of U, beyond this part of U is material. */
+  /** A shift, or a growth of U, beyond this part of U is material for one's own values (`WEIGHTS_OF_OTHERS_BEYOND` for others). */
   threshold: z.number().min(0).max(10).default(0.1),
 });
 export type WhatIfInput = z.infer<typeof WhatIfInput>;

@@ -179,6 +179,31 @@ describe('POST /api/what-if', () => {
     expect(await words('0.0012', 10)).toEqual({ none: 0, material: 0, verdictChanges: 2 });
   });
 
+  it('tells the words of weights of others at a threshold that nobody chooses, in rows, counts and order', async () => {
+    const told = async (threshold: number) => {
+      const rest = { by: 'class', group: 'E2', threshold };
+      const { total, groups, page } = await ask('institute', [shift(working.uid, '0.00002')], rest);
+      return { total, groups, rows: page!.rows };
+    };
+    const usual = await told(0.1);
+    expect(usual.rows).toHaveLength(4);
+    for (const threshold of [0, 0.001, 0.05, 0.17, 10]) expect(await told(threshold)).toEqual(usual);
+  });
+
+  it('tells U of weights of others by bands only: a material shift is never told as none', async () => {
+    const word = async (who: Who, grams: string) =>
+      (await rowsOf(who, [shift(working.uid, grams)])).get(homes.registryNo)!.word;
+    // U is 0.3 mg: for its holder the word turns at 30 µg.
+    expect(await word('home', '0.000029')).toBe('none');
+    expect(await word('home', '0.000031')).toBe('material');
+    const words = new Set<string>();
+    for (const grams of ['0.0000201', '0.000029', '0.000031', '0.00005']) {
+      words.add(await word('institute', grams));
+    }
+    expect([...words]).toEqual(['material']);
+    expect(await word('institute', '0.00002')).toBe('none');
+  });
+
   it('answers the largest shift that it takes, and refuses a larger one', async () => {
     const rows = await rowsOf('registrar', [shift(homes.uid, '-1000000')]);
     expect(rows.get(customers.registryNo)).toMatchObject({ deviationAfter: '-999999.999745' });

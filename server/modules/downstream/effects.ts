@@ -49,8 +49,14 @@ const NOISE = 1e-12;
 /**
  * Forward accumulation through the values and all below them: what a value hands down arrives times the link's
  * sensitivity, and nothing passes a link through a class limit, since the child used the nominal.
+ * @param judged the shift by which it is decided whether a value leaves its class, where that is not the shift itself
  */
-export function effectsOf(graph: GraphArrays, found: Below, changes: readonly GraphChange[]): Effects {
+export function effectsOf(
+  graph: GraphArrays,
+  found: Below,
+  changes: readonly GraphChange[],
+  judged: (place: number, shift: number) => number = (_, shift) => shift,
+): Effects {
   const count = found.nodes.length;
   const walk = new Walk(graph, found);
   const shift = new Float64Array(count);
@@ -85,7 +91,7 @@ export function effectsOf(graph: GraphArrays, found: Below, changes: readonly Gr
   add(shift, noticed);
   walk.spread(isLost);
   for (let place = 0; place < count; place += 1) if (isLost[place]) shift[place] = NaN;
-  const { isBeyondLimit, leaving } = beyondLimits(walk, shift);
+  const { isBeyondLimit, leaving } = beyondLimits(walk, shift, judged);
   walk.spread(isBeyondLimit);
   return { shift, addedVariance, isLost, isBeyondLimit, leaving };
 }
@@ -169,7 +175,11 @@ function addSquares(sum: Float64Array, amounts: Float64Array): void {
   for (let place = 0; place < sum.length; place += 1) sum[place]! += amounts[place]! * amounts[place]!;
 }
 
-function beyondLimits(walk: Walk, shift: Float64Array): Pick<Effects, 'isBeyondLimit' | 'leaving'> {
+function beyondLimits(
+  walk: Walk,
+  shift: Float64Array,
+  judged: (place: number, shift: number) => number,
+): Pick<Effects, 'isBeyondLimit' | 'leaving'> {
   const { graph, found } = walk;
   const limits = classLimits(graph);
   const isBeyondLimit = new Uint8Array(shift.length);
@@ -180,7 +190,7 @@ function beyondLimits(walk: Walk, shift: Float64Array): Pick<Effects, 'isBeyondL
     const limit = limits(node) ?? graph.statedLimits.get(link);
     if (limit === undefined) return;
     const before = Math.abs(graph.deviation[node]!);
-    const after = Math.abs(graph.deviation[node]! + shift[parent]!);
+    const after = Math.abs(graph.deviation[node]! + judged(parent, shift[parent]!));
     if (after <= limit * (1 + NOISE) || before > limit) return;
     isBeyondLimit[place] = 1;
     leaving.add(parent);

@@ -1,11 +1,14 @@
 import { z } from 'zod';
-import { DownstreamBy, WhatIfSort } from '#shared/contracts/downstream.ts';
+import { DownstreamBy, WEIGHTS_OF_OTHERS_BEYOND, WhatIfSort } from '#shared/contracts/downstream.ts';
 
 /** What may be supposed of a value on its own screen. */
 export const Suppose = z.enum(['shift', 'raise', 'withdraw']);
 export type Suppose = z.infer<typeof Suppose>;
 
 const DEFAULT_BEYOND = 10;
+
+/** The same for weights of others, whatever is asked: percent of U. */
+export const OTHERS_BEYOND = 100 * WEIGHTS_OF_OTHERS_BEYOND;
 
 /**
  * Everything the downstream screen can be asked, as it stands in the address: a link shows the same picture,

@@ -17,6 +17,7 @@ import { differenceOf, measured, MEASURES, pairGroups, wholeOf, type Measure } f
 import { GROUPED_BY, groupName, GROUPINGS } from '../groups.ts';
 import { askedOfRun } from '../run-view.ts';
 import { ratioText, roundedText } from '../rounded.ts';
+import { OTHERS_BEYOND } from '../search.ts';
 
 interface CompareScreenProps {
   one: DryRunResponse;
@@ -45,7 +46,7 @@ export function CompareScreen({ one, other, by, measure, onChange }: CompareScre
       {!isHidden && !error && (!ofOne.data || !ofOther.data) && <Waiting>Working both out</Waiting>}
       {ofOne.data && ofOther.data && (
         <>
-          <Section title="In all">
+          <Section title="In all" note={`weights of others: material beyond ${OTHERS_BEYOND} % of U`}>
             <Table caption="Both in all" isScrolled>
               <thead>
                 <Heads first="" one={one} other={other} />

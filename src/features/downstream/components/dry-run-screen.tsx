@@ -17,6 +17,7 @@ import { errorAt, useZodForm } from '#src/lib/form.ts';
 import { namedQuery, useNoteDryRun } from '../api.ts';
 import { GROUPINGS } from '../groups.ts';
 import { askedOfRun, type RunView } from '../run-view.ts';
+import { OTHERS_BEYOND } from '../search.ts';
 import { ChangeText } from './change-text.tsx';
 import { WhatIf } from './what-if.tsx';
 
@@ -107,7 +108,9 @@ function Asked({ question }: { question: DryRunQuestion }) {
         ))}
       </ol>
       <p className="text-ink-2">
-        Material beyond {beyond} % of U{day && `; in force on ${day}`}
+        Material beyond {beyond} % of U
+        {beyond !== String(OTHERS_BEYOND) && ` (for weights of others: beyond ${OTHERS_BEYOND} %)`}
+        {day && `; in force on ${day}`}
         {known && `, as known on ${known}`}.
       </p>
       <div>

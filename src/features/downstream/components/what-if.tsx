@@ -1,5 +1,6 @@
 import { keepPreviousData, useInfiniteQuery, useQuery } from '@tanstack/react-query';
 import type { WhatIfChange, WhatIfResponse, WhatIfSort } from '#shared/contracts/downstream.ts';
+import { OTHERS_BEYOND } from '../search.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
@@ -106,7 +107,7 @@ function Totals({ answer }: { answer: WhatIfResponse }) {
           </>
         )}
         {total.warned > 0 &&
-          ' Weights of others are told with their shift and one word only. Each counts once, however often it was calibrated; the list of who leans on it counts every value that one’s own laboratory issued.'}
+          ` Weights of others are told with their shift and one word only: beyond ${OTHERS_BEYOND} % of U, whatever is asked for one’s own, with the shift and the added u counted up to the next of 1, 2, 5, 10. Each counts once, however often it was calibrated; the list of who leans on it counts every value that one’s own laboratory issued.`}
       </p>
       {beyondLimit.length > 0 && (
         <Notice tone="caution" title="A class limit would no longer cover what was used by it">
