@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
+import { askedTodayOnly } from './asked-today-only.ts';
 import { countingChecks, worstOf } from './counting-checks.ts';
 
 type Check = ChainResponse['checks'][number];
@@ -44,6 +45,33 @@ describe('checks that count under a verdict', () => {
   it('leaves out what only informs: no link stands or falls with it', () => {
     const chain = chainWith([check({ subject: { type: 'value', uid: 'run' } })]);
     expect(countingChecks(chain, 'conduct')).toEqual([]);
+  });
+});
+
+describe('findings asked about today only', () => {
+  const today = (rule: string, outcome: Check['outcome'] = 'fails') =>
+    check({ rule, verdict: 'today', outcome });
+
+  it('are those that the use was never asked about, with the links that they count at', () => {
+    expect(askedTodayOnly(chainWith([today('lasting')]))).toEqual({
+      rules: ['lasting'],
+      links: 1,
+      isAllThatDiffers: true,
+    });
+  });
+
+  it('are none where the use was asked and held: then something changed since', () => {
+    const changed = [check({ outcome: 'holds' }), today('passing')];
+    expect(askedTodayOnly(chainWith(changed))).toEqual({ rules: [], links: 0, isAllThatDiffers: false });
+    expect(askedTodayOnly(chainWith([...changed, today('lasting')]))).toMatchObject({
+      rules: ['lasting'],
+      isAllThatDiffers: false,
+    });
+  });
+
+  it('leave out what could not be judged and is slight', () => {
+    const slight = { ...today('lasting', 'cannot be judged'), severity: 'minor' as const };
+    expect(askedTodayOnly(chainWith([slight])).links).toBe(0);
   });
 });
 

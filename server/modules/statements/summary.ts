@@ -1,4 +1,5 @@
 import type { ChainResponse } from '#shared/contracts/chains.ts';
+import { askedTodayOnly } from '#shared/drawing/asked-today-only.ts';
 import { shareText } from '#shared/numbers/share-text.ts';
 import { isZero, shiftWords, uncertaintyWords } from './words.ts';
 
@@ -22,7 +23,8 @@ function extentSentence(chain: ChainResponse): string {
   return `The chain holds ${values} values and ${links} ${links === 1 ? 'link' : 'links'} between them; the longest way up has ${steps} ${steps === 1 ? 'step' : 'steps'}.`;
 }
 
-function judgedSentences({ summary }: ChainResponse): string[] {
+function judgedSentences(chain: ChainResponse): string[] {
+  const { summary } = chain;
   if (summary.links === 0) return [];
   const counted = (counts: ChainResponse['summary']['today']) =>
     [
@@ -33,8 +35,13 @@ function judgedSentences({ summary }: ChainResponse): string[] {
         : []),
       ...(counts.notJudged > 0 ? [`${counts.notJudged} cannot be judged`] : []),
     ].join(', ');
+  const { rules, links } = askedTodayOnly(chain);
+  const unasked =
+    links === 0
+      ? ''
+      : ` At ${links} of them ${rules.join(', ')} ${rules.length === 1 ? 'was' : 'were'} not asked at use: only what is known now tells of ${rules.length === 1 ? 'it' : 'them'}.`;
   return [
-    `Judged by what was known at use, of ${summary.links} links ${counted(summary.conduct)}.`,
+    `Judged by what was known at use, of ${summary.links} links ${counted(summary.conduct)}.${unasked}`,
     `Judged by what is known now, of ${summary.links} links ${counted(summary.today)}.`,
   ];
 }

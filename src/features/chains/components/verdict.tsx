@@ -2,10 +2,12 @@ import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { fillSentence } from '#shared/rules/sentence.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
+import { askedTodayOnly } from '#shared/drawing/asked-today-only.ts';
 import { countingChecks } from '#shared/drawing/counting-checks.ts';
 import { notYet } from '../not-yet.ts';
 import type { ChainQuestion } from '../question.ts';
 import { CheckList } from './check-list.tsx';
+import { atUseWords, meaningOf } from './meaning-of.ts';
 import { namesOf } from '#shared/drawing/link-order.ts';
 
 const LONGEST_LIST = 3;
@@ -61,8 +63,9 @@ function BothVerdicts({ chain, chosen, onChange }: BothVerdictsProps) {
   const { summary, question } = chain;
   const said = (verdict: VerdictName) => headline(summary[verdict], summary.links);
   if (said('today') === said('conduct')) return null;
+  const unasked = askedTodayOnly(chain);
   const verdicts: { name: VerdictName; words: string; counts: string }[] = [
-    { name: 'conduct', words: 'Known at use', counts: 'What had been made known by each day of use.' },
+    { name: 'conduct', words: 'Known at use', counts: atUseWords(unasked) },
     { name: 'today', words: 'Known now', counts: `All that is on record by ${question.known}.` },
   ];
   return (
@@ -83,19 +86,9 @@ function BothVerdicts({ chain, chosen, onChange }: BothVerdictsProps) {
           </div>
         ))}
       </dl>
-      <p className="mt-1 text-ink-2">{meaningOf(summary)}</p>
+      <p className="mt-1 text-ink-2">{meaningOf(summary, unasked)}</p>
     </div>
   );
-}
-
-/** What it means that the two verdicts differ, in one sentence. */
-function meaningOf({ conduct, today }: ChainResponse['summary']): string {
-  const findings = (counts: typeof today) => counts.broken + counts.caution + counts.notJudged;
-  if (findings(conduct) === 0)
-    return 'The work was sound when it was done; something that it rests on has changed since.';
-  if (findings(today) === 0)
-    return 'Something was not in order when the work was done; what is on record now shows no flaw that lasts.';
-  return 'Some findings were there when the work was done, others came to light or changed since.';
 }
 
 function headline(counts: ChainResponse['summary']['today'], links: number): string {
