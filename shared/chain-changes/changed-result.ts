@@ -16,7 +16,7 @@ export function changedResult({ before, after }: Pairs, wording: Wording): Chang
     changes.push({ ...about, says: `U over the chain: ${is}, was ${was}.`, why, mark: 'U changed', weight });
   }
   const [stood, stands] = [movedText(before, wording), movedText(after, wording)];
-  if (stood !== stands) {
+  if (stood !== stands && !(staysPut(before) && staysPut(after))) {
     const says = `As now known: ${stands}; before: ${stood}.`;
     changes.push({ ...about, says, why: [], mark: 'moved', weight: 3 });
   }
@@ -25,6 +25,11 @@ export function changedResult({ before, after }: Pairs, wording: Wording): Chang
 
 function uOf({ uncertainty: { expanded } }: ChainResponse, wording: Wording): string {
   return expanded === null ? 'not computable' : uText(expanded, wording);
+}
+
+/** Whether the value is where it was certified: what changed above it, if anything, brings it nothing. */
+function staysPut({ asNowKnown }: ChainResponse): boolean {
+  return asNowKnown === null || (asNowKnown.shift !== null && Number(asNowKnown.shift) === 0);
 }
 
 function movedText(chain: ChainResponse, wording: Wording): string {

@@ -103,6 +103,15 @@ describe('what changed between two answers', () => {
     expect(whatChanged(chain(), withdrawn)[1]!.why).toEqual(['What B-15 says.']);
   });
 
+  it('does not call moved what stays where it was certified, whether or not something changed above it', () => {
+    const unmoved = chain({
+      asNowKnown: { ...withdrawn.asNowKnown!, shift: '0', deviation: '0.0001', because: null },
+    });
+    expect(whatChanged(chain(), unmoved)).toEqual([]);
+    expect(whatChanged(unmoved, chain())).toEqual([]);
+    expect(said(unmoved, withdrawn)[0]).toContain('not computable');
+  });
+
   it('gives each place of the drawing the word of its gravest change', () => {
     expect([...marksOf(whatChanged(chain(), withdrawn))]).toEqual([
       ['T', 'moved'],
