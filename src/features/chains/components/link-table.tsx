@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { Fragment, useState } from 'react';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
@@ -8,7 +8,15 @@ import { drawnPart } from '#shared/drawing/drawn-part.ts';
 import { linkKey } from '#shared/drawing/drawing-question.ts';
 import { linksUpwards, namesOf } from '#shared/drawing/link-order.ts';
 import type { ChainQuestion } from '../question.ts';
-import { nextOrder, rulesOfLinks, sortedLinks, type LinkOrder, type SortColumn } from './sorted-links.ts';
+import {
+  nextOrder,
+  rulesOfLinks,
+  rulesText,
+  sortedLinks,
+  type LinkOrder,
+  type RulesFound,
+  type SortColumn,
+} from './sorted-links.ts';
 import { shareText } from '#shared/numbers/share-text.ts';
 
 interface LinkTableProps {
@@ -69,10 +77,7 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
             </Cell>
             <Cell>
               <Judged chain={chain} link={link} verdict={question.verdict} />
-              <Rules
-                rules={rules.get(linkKey(link)) ?? []}
-                isNoted={!['broken', 'caution'].includes(link[question.verdict])}
-              />
+              <Rules found={rules.get(linkKey(link))} isNoted={link[question.verdict] === 'sound'} />
             </Cell>
           </Row>
         ))}
@@ -99,13 +104,20 @@ export function LinkTable({ chain: whole, question, onChange }: LinkTableProps) 
   );
 }
 
-/** Which rules a link does not keep, by number; a press on the row says them in words. Some are worth a note only. */
-function Rules({ rules, isNoted }: { rules: readonly string[]; isNoted: boolean }) {
-  if (rules.length === 0) return null;
+/** Which rules a link fails or leaves open, by number; a press on the row says them in words. Some are worth a note only. */
+function Rules({ found, isNoted }: { found: RulesFound | undefined; isNoted: boolean }) {
+  const text = found ? rulesText(found) : '';
+  if (text === '') return null;
   return (
     <span className="block text-xs text-ink-2">
       {isNoted && 'noted: '}
-      <span className="font-mono">{rules.join(' ')}</span>
+      {/* A rule's number is not parted at its hyphen. */}
+      {text.split(' ').map((word, at) => (
+        <Fragment key={at}>
+          {at > 0 && ' '}
+          <span className="whitespace-nowrap">{word}</span>
+        </Fragment>
+      ))}
     </span>
   );
 }

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { generatedChain } from '#shared/drawing/generated-chain.ts';
 import { namesOf } from '#shared/drawing/link-order.ts';
-import { nextOrder, rulesOfLinks, sortedLinks } from './sorted-links.ts';
+import { nextOrder, rulesOfLinks, rulesText, sortedLinks } from './sorted-links.ts';
 
 const chain = generatedChain({ plates: 80 });
 const names = namesOf(chain);
@@ -55,6 +55,12 @@ describe('rules that a link fails', () => {
         { ...check, rule: 'one', subject: { type: 'value' as const, uid: childUid } },
         {
           ...check,
+          rule: 'open',
+          outcome: 'cannot be judged' as const,
+          subject: { type: 'value' as const, uid: childUid },
+        },
+        {
+          ...check,
           rule: 'held',
           outcome: 'holds' as const,
           subject: { type: 'value' as const, uid: childUid },
@@ -67,6 +73,9 @@ describe('rules that a link fails', () => {
         },
       ],
     };
-    expect(rulesOfLinks(checked, 'today').get(`${childUid}.${parentUid}`)).toEqual(['one', 'two']);
+    const found = rulesOfLinks(checked, 'today').get(`${childUid}.${parentUid}`)!;
+    expect(found).toEqual({ fails: ['one', 'two'], notJudged: ['open'] });
+    expect(rulesText(found)).toBe('fails one two; not judged open');
+    expect(rulesText({ fails: [], notJudged: [] })).toBe('');
   });
 });

@@ -48,12 +48,44 @@ function compare(a: string | number | null, b: string | number | null, way: 1 | 
   return a < b ? -way : way;
 }
 
-/** Rules that each link fails, or that cannot be judged there: of the step itself and of the value it made. */
-export function rulesOfLinks(chain: ChainResponse, verdict: ChainQuestion['verdict']): Map<string, string[]> {
+/** Rules by what they found at a link, each list in order. */
+export interface RulesFound {
+  fails: string[];
+  notJudged: string[];
+}
+
+/** Rules that each link fails, and those that cannot be judged there: of the step itself and of the value it made. */
+export function rulesOfLinks(
+  chain: ChainResponse,
+  verdict: ChainQuestion['verdict'],
+): Map<string, RulesFound> {
+  const fails = rulesWith('fails', chain, verdict);
+  const notJudged = rulesWith('cannot be judged', chain, verdict);
+  return new Map(
+    [...fails].map(([key, failed]) => [
+      key,
+      { fails: failed, notJudged: notJudged.get(key)!.filter((rule) => !failed.includes(rule)) },
+    ]),
+  );
+}
+
+/** What was found at a link, in a line: "fails B-17; not judged B-06 B-32". Empty where nothing was. */
+export function rulesText({ fails, notJudged }: RulesFound): string {
+  return [
+    ...(fails.length > 0 ? [`fails ${fails.join(' ')}`] : []),
+    ...(notJudged.length > 0 ? [`not judged ${notJudged.join(' ')}`] : []),
+  ].join('; ');
+}
+
+function rulesWith(
+  wanted: ChainResponse['checks'][number]['outcome'],
+  chain: ChainResponse,
+  verdict: ChainQuestion['verdict'],
+): Map<string, string[]> {
   const ofLink = new Map<string, string[]>();
   const ofValue = new Map<string, string[]>();
   for (const { rule, subject, outcome } of countingChecks(chain, verdict)) {
-    if (outcome !== 'fails' && outcome !== 'cannot be judged') continue;
+    if (outcome !== wanted) continue;
     if (subject.type === 'link') add(ofLink, linkKey(subject), rule);
     if (subject.type === 'value') add(ofValue, subject.uid, rule);
   }
