@@ -162,6 +162,28 @@ describe('folded chain', () => {
     });
     expect(folded.nodes.map((node) => node.uid)).toEqual([focus!.uid, 'A__1', 'B__2', 'A__3']);
   });
+
+  it('goes by the laboratory that a plate names: who holds the weight, where that is told', () => {
+    const answer = generatedChain({ plates: 8, tierWidth: 1 });
+    const values = answer.nodes.filter((node) => node.type === 'value').slice(0, 5);
+    const nodes = values.map((node, index) => ({
+      ...node,
+      rootKind: null,
+      issuer: { ...node.issuer, code: 'A', name: 'Issuer' },
+      holder: index > 2 ? { ...node.issuer, code: 'H', name: 'Holder' } : null,
+    }));
+    const links = nodes.slice(1).map((node, index) => ({
+      ...answer.links[0]!,
+      childUid: nodes[index]!.uid,
+      parentUid: node.uid,
+    }));
+    const fold = { by: 'laboratory', opened: new Set<string>(), verdict: 'today' } as const;
+    const folded = foldChain(drawnWhole({ ...answer, nodes, links }), fold);
+    expect(folded.nodes.flatMap((node) => (node.type === 'group' ? [node.laboratory.name] : []))).toEqual([
+      'Issuer',
+      'Holder',
+    ]);
+  });
 });
 
 describe('a chain as it is drawn', () => {

@@ -5,9 +5,14 @@ import { nominalText } from '#shared/numbers/nominal.ts';
 /** What plates of one group have in common. */
 export type FoldBy = 'laboratory' | 'laboratory, class and nominal';
 
+/** The laboratory that a plate names: who holds the weight or, where that is not said, who calibrated it. */
+export function laboratoryOf(node: ChainValue): ChainValue['issuer'] {
+  return node.holder ?? node.issuer;
+}
+
 /** What plates must have in common to be merged; roots of one kind stay by themselves, or they would hide. */
 export function kindOf(node: ChainValue, by: FoldBy): string {
-  const common = [node.issuer.code, node.rootKind?.split(' ')[0] ?? ''];
+  const common = [laboratoryOf(node).code, node.rootKind?.split(' ')[0] ?? ''];
   if (by === 'laboratory') return common.join('_');
   return [...common, node.class ?? '', decadeOf(node.nominal)].join('_');
 }

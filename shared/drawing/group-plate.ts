@@ -3,7 +3,7 @@ import type { State } from '#shared/states.ts';
 import { worstState } from './counting-checks.ts';
 import type { DrawnChain, DrawnLink, PlateGroup } from './drawn-chain.ts';
 import type { DrawingQuestion } from './drawing-question.ts';
-import { commonOf, type FoldBy } from './fold-kind.ts';
+import { commonOf, laboratoryOf, type FoldBy } from './fold-kind.ts';
 import { sumOfShares } from './folded-links.ts';
 
 interface Around {
@@ -32,7 +32,7 @@ export function groupPlate(key: string, members: readonly ChainValue[], around: 
     type: 'group',
     uid: key,
     tier: 0,
-    laboratory: members[0]!.issuer,
+    laboratory: laboratoryOf(members[0]!),
     common: commonOf(members, fold.by),
     members: members.map((node) => node.uid),
     innerLinks: inner.flatMap((link) => link.of),
