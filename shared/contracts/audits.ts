@@ -171,6 +171,8 @@ export const AuditedValue = z.object({
   /** Addresses of the weight and of the sheet; null where this person may not open them. */
   standardId: Id.nullable(),
   revisionId: Id.nullable(),
+  /** Who holds the weight; null where the value is not theirs in full. */
+  holderId: Id.nullable(),
 });
 
 export const AuditFinding = z.object({

@@ -17,9 +17,9 @@ export const paths = {
     path: '/calibrations/drafts/new',
     /**
      * @param standardId the weight that the first line is about
-     * @param first for which laboratory, and the registry number of what that line leans on
+     * @param first for which laboratory, issued by which, and the registry number of what that line leans on
      */
-    href: (standardId?: string, first: { laboratory?: string; reference?: string } = {}) =>
+    href: (standardId?: string, first: { laboratory?: string; issuer?: string; reference?: string } = {}) =>
       `/calibrations/drafts/new${queryText({ ...(standardId && { standard: standardId }), ...first })}`,
   },
   calibrationDraft: {

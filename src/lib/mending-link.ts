@@ -1,18 +1,29 @@
 import type { Mending } from '#shared/rules/mending.ts';
 import { paths } from '#src/app/paths.ts';
 
+/** A laboratory as a finding names it. */
+interface Named {
+  id: string;
+  name: string;
+}
+
 /** What is known of the finding's places; what the person may not open is left out. */
 export interface MendingPlaces {
   /** The laboratory whose result it is. */
-  laboratory: { id: string; name: string };
-  /** Whether the person writes in that laboratory's name. */
-  isOurs: boolean;
+  laboratory: Named;
+  /** The laboratory for which this person may enter a new result of the weight; null where there is none. */
+  entersFor: string | null;
   /** The weight that the result is about. */
   standardId: string | null;
   /** Its calibration sheet. */
   revisionId: string | null;
-  /** What was leaned on. */
-  reference: { standardId: string | null; registryNo: string; revisionId: string | null } | null;
+  /** What was leaned on, and for which laboratory this person may enter a new result of it. */
+  reference: {
+    standardId: string | null;
+    registryNo: string;
+    revisionId: string | null;
+    entersFor: string | null;
+  } | null;
 }
 
 /** Where the next step is taken, and what the link to it says. */
@@ -23,26 +34,20 @@ export interface MendingLink {
 
 /** The link to the place where a finding is mended; null where that is not this person's to do, or has no place. */
 export function mendingLink({ place }: Mending, places: MendingPlaces): MendingLink | null {
-  const { laboratory, isOurs, standardId, revisionId, reference } = places;
+  const { laboratory, standardId, revisionId, reference } = places;
   const link = (href: string | null, label: string) => (href === null ? null : { href, label });
   const opened = (id: string | null | undefined, label: string) =>
     link(id ? paths.standard.href(id) : null, label);
   const sheet = (id: string | null | undefined, label: string) =>
     link(id ? paths.calibration.href(id) : null, label);
   switch (place) {
-    case 'new calibration': {
-      if (!isOurs || !standardId) return null;
-      const leaning = reference && { reference: reference.registryNo };
-      return link(
-        paths.newDraft.href(standardId, { laboratory: laboratory.id, ...leaning }),
-        'Start the calibration',
-      );
-    }
+    case 'new calibration':
+      return newResult(places);
     case 'calibration of the reference': {
-      if (!isOurs || !reference?.standardId) return null;
+      if (!reference?.entersFor || !reference.standardId) return null;
       return link(
-        paths.newDraft.href(reference.standardId, { laboratory: laboratory.id }),
-        `Start a calibration of ${reference.registryNo}`,
+        paths.newDraft.href(reference.standardId, { laboratory: reference.entersFor }),
+        `Enter a calibration of ${reference.registryNo}`,
       );
     }
     case 'programme':
@@ -59,4 +64,18 @@ export function mendingLink({ place }: Mending, places: MendingPlaces): MendingL
     case 'chain':
       return null;
   }
+}
+
+/**
+ * A draft of the weight's next result. Where another laboratory calibrates it, the draft transcribes that laboratory's
+ * new certificate, and what that will lean on is not known before it is read.
+ */
+function newResult({ laboratory, entersFor, standardId, reference }: MendingPlaces): MendingLink | null {
+  if (!entersFor || !standardId) return null;
+  const isOwn = entersFor === laboratory.id;
+  const leaning = isOwn && reference && { reference: reference.registryNo };
+  return {
+    href: paths.newDraft.href(standardId, { laboratory: entersFor, issuer: laboratory.id, ...leaning }),
+    label: isOwn ? 'Start the calibration' : `Enter the new certificate of ${laboratory.name}`,
+  };
 }

@@ -7,6 +7,7 @@ import {
   useSearchParams,
   type LoaderFunctionArgs,
 } from 'react-router';
+import { Id } from '#shared/ids.ts';
 import type { ReferenceChoice } from '#shared/contracts/drafts.ts';
 import type { StandardRow } from '#shared/contracts/standards.ts';
 import { paths, SAME_SCREEN } from '#src/app/paths.ts';
@@ -67,6 +68,7 @@ export function Component() {
       firstStandards={weights}
       firstStandardId={parameters.get('standard') ?? undefined}
       firstReference={reference}
+      firstIssuerId={Id.safeParse(parameters.get('issuer')).data}
       onCreated={(draft) => {
         setCreatedHere(draft.id);
         void navigate(paths.calibrationDraft.href(draft.id), {

@@ -105,6 +105,7 @@ function isFull(user: User, value: NamedValue): boolean {
 
 function named(value: NamedValue, user: User) {
   const { uid, registryNo, certificateNo } = value;
-  const { standardId, revisionId } = isFull(user, value) ? value : { standardId: null, revisionId: null };
-  return { uid, registryNo, certificateNo, standardId, revisionId };
+  const nothing = { standardId: null, revisionId: null, holderId: null };
+  const { standardId, revisionId, holderId } = isFull(user, value) ? value : nothing;
+  return { uid, registryNo, certificateNo, standardId, revisionId, holderId };
 }

@@ -10,9 +10,9 @@ import { Button } from '#src/components/ui/button.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { Waiting } from '#src/components/ui/progress.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
+import { entersResultsFor, opensHoldingsOf } from '#src/lib/holdings.ts';
 import { mendingLink } from '#src/lib/mending-link.ts';
 import { usePerson, type Person } from '#src/lib/session.ts';
-import { writesFor } from '#src/lib/writes-for.ts';
 import { findingsQuery, type FindingFilter } from '../api.ts';
 import { severityWord } from '#shared/severity-words.ts';
 
@@ -90,10 +90,8 @@ function Mend({ finding, person }: { finding: AuditFinding; person: Person }) {
   const { value, reference, laboratory } = finding;
   const link = mendingLink(mending, {
     laboratory,
-    isOurs: writesFor(person, laboratory.id),
-    standardId: value.standardId,
-    revisionId: value.revisionId,
-    reference,
+    ...placesOf(person, value),
+    reference: reference && { registryNo: reference.registryNo, ...placesOf(person, reference) },
   });
   return (
     <p className="text-sm text-ink-2">
@@ -105,6 +103,15 @@ function Mend({ finding, person }: { finding: AuditFinding; person: Person }) {
       )}
     </p>
   );
+}
+
+/** Who issued a certificate reads its value in full, and yet may not open the weight of another laboratory. */
+function placesOf(person: Person, { holderId, standardId, revisionId }: AuditFinding['value']) {
+  return {
+    standardId: holderId && opensHoldingsOf(person, holderId) ? standardId : null,
+    revisionId,
+    entersFor: entersResultsFor(person, holderId),
+  };
 }
 
 /** The chain on the audited day under the finding's verdict, with the link or the value selected. */

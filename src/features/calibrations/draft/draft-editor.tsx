@@ -24,6 +24,8 @@ interface DraftEditorProps {
   firstStandards?: readonly StandardRow[];
   /** What the first weight leans on. */
   firstReference?: ReferenceChoice | null;
+  /** The laboratory whose certificate a new draft is expected to transcribe. */
+  firstIssuerId?: string | undefined;
   onCreated: (draft: DraftResponse) => void;
   onIssued: (issued: IssuedResponse) => void;
   onDiscarded: () => void;
@@ -37,12 +39,15 @@ export function DraftEditor(props: DraftEditorProps) {
     firstStandardId,
     firstStandards = NONE,
     firstReference = null,
+    firstIssuerId,
     onCreated,
     onIssued,
     onDiscarded,
   } = props;
   const firstIds = firstStandardId ? [firstStandardId] : firstStandards.map(({ id }) => id);
-  const form = useZodForm(DraftForm, { defaultValues: valuesOf(draft, firstIds, firstReference) });
+  const form = useZodForm(DraftForm, {
+    defaultValues: valuesOf(draft, firstIds, firstReference, firstIssuerId),
+  });
   const saving = useAutosave(form, draft, laboratory.id, onCreated);
   const known = useKnownValues(draft, firstStandards, firstReference);
   // What happens afterwards is the same for the whole life of the editor.
@@ -60,11 +65,13 @@ function valuesOf(
   draft: DraftResponse | null,
   firstIds: readonly string[],
   reference: ReferenceChoice | null,
+  issuerId: string | null = null,
 ): DraftValues {
   if (draft) return { ...draft.content, version: draft.version };
   const lines = firstIds.map((id) => newLine(id));
-  if (!reference) return { ...emptyDraft(), lines };
+  const head = { ...emptyDraft(), issuerId };
+  if (!reference) return { ...head, lines };
   const { quantity, valueUid } = reference;
   const leaning = { quantity, references: [{ valueUid, sensitivity: '', usedAs: 'certificate' as const }] };
-  return { ...emptyDraft(), lines: lines.map((line) => ({ ...line, ...leaning })) };
+  return { ...head, lines: lines.map((line) => ({ ...line, ...leaning })) };
 }

@@ -23,6 +23,8 @@ interface DraftPlaceProps {
   firstStandards?: readonly StandardRow[];
   /** What the first weight leans on. */
   firstReference?: ReferenceChoice | null;
+  /** The laboratory whose certificate a new draft is expected to transcribe. */
+  firstIssuerId?: string | undefined;
   onCreated: (draft: DraftResponse) => void;
   onIssued: (issued: IssuedResponse) => void;
   onDiscarded: () => void;

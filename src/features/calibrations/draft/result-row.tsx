@@ -10,6 +10,7 @@ import { LineDetail } from './line-detail.tsx';
 import { MassCell } from './mass-cell.tsx';
 import { usePointAt } from './point-at.ts';
 import { StandardBox } from './standard-box.tsx';
+import { UnknownWeight } from './unknown-weight.tsx';
 
 interface ResultRowProps {
   at: number;
@@ -48,7 +49,10 @@ export const ResultRow = memo(function ResultRow(props: ResultRowProps) {
                 <span className="block font-mono text-xs text-ink-2">{standard.registryNo}</span>
               </span>
             ) : line.standardId ? (
-              <span className="text-ink-2">not loaded yet</span>
+              <UnknownWeight
+                standardId={line.standardId}
+                onRemove={isLocked ? null : () => setValue(`${path}.standardId`, null, { shouldDirty: true })}
+              />
             ) : isLocked ? (
               <span className="text-ink-2">no weight named</span>
             ) : (

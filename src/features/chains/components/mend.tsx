@@ -2,8 +2,8 @@ import { Link } from 'react-router';
 import type { ChainResponse } from '#shared/contracts/chains.ts';
 import { mendingOf } from '#shared/rules/mending.ts';
 import { mendingLink } from '#src/lib/mending-link.ts';
-import { usePerson } from '#src/lib/session.ts';
-import { writesFor } from '#src/lib/writes-for.ts';
+import { usePerson, type Person } from '#src/lib/session.ts';
+import { entersResultsFor, opensHoldingsOf } from '#src/lib/holdings.ts';
 
 type Node = ChainResponse['nodes'][number];
 type ValueNode = Extract<Node, { type: 'value' }>;
@@ -24,14 +24,15 @@ export function Mend({ chain, check }: MendProps) {
   const reference = subject.type === 'link' ? valueOf(chain, subject.parentUid) : undefined;
   const link = mendingLink(mending, {
     laboratory: value.issuer,
-    isOurs: writesFor(person, value.issuer.id),
-    standardId: openStandard(value),
+    entersFor: entersResultsFor(person, value.holder?.id),
+    standardId: openStandard(person, value),
     revisionId: value.revisionId,
     reference: reference
       ? {
-          standardId: openStandard(reference),
+          standardId: openStandard(person, reference),
           registryNo: reference.registryNo,
           revisionId: reference.revisionId,
+          entersFor: entersResultsFor(person, reference.holder?.id),
         }
       : null,
   });
@@ -51,6 +52,7 @@ function valueOf(chain: ChainResponse, uid: string): ValueNode | undefined {
   return chain.nodes.find((node): node is ValueNode => node.type === 'value' && node.uid === uid);
 }
 
-function openStandard({ view, standardId }: ValueNode): string | null {
-  return view === 'full' ? standardId : null;
+/** Who issued a certificate reads its value in full, and yet may not open the weight of another laboratory. */
+function openStandard(person: Person, { holder, standardId }: ValueNode): string | null {
+  return holder && opensHoldingsOf(person, holder.id) ? standardId : null;
 }
