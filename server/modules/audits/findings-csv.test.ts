@@ -11,7 +11,14 @@ const RULE = {
   isLasting: false,
   sentences: { late: 'Used on {used}, "late".' },
 } as const;
-const value = { uid: 'u', registryNo: 'AB 0001', certificateNo: '=1+1', standardId: 's', revisionId: null, holderId: null };
+const value = {
+  uid: 'u',
+  registryNo: 'AB 0001',
+  certificateNo: '=1+1',
+  standardId: 's',
+  revisionId: null,
+  holderId: null,
+};
 const FINDING = {
   n: 0,
   rule: 'B-14',
