@@ -14,6 +14,7 @@ import { DetailLevel, DetailLevelContext } from './detail-level.ts';
 import { DetailCard } from './detail-card.tsx';
 import type { FrameParts } from './frame.tsx';
 import { MapOfDrawing } from './map-of-drawing.tsx';
+import { PictureNode } from './picture-node.tsx';
 import { PlateNode } from './plate-node.tsx';
 import { RibbonEdge } from './ribbon-edge.tsx';
 import { useDetail } from './use-detail.ts';
@@ -22,12 +23,10 @@ import { useElements } from './use-elements.ts';
 import { bringIntoSight } from './view-of.ts';
 import { plateFrom } from './walk-plates.ts';
 
-const nodeTypes: NodeTypes = { plate: PlateNode, band: BandNode };
+const nodeTypes: NodeTypes = { picture: PictureNode, plate: PlateNode, band: BandNode };
 const edgeTypes: EdgeTypes = { ribbon: RibbonEdge };
 /** All of it, however small: what the button of the drawing shows. */
 const WHOLE = { padding: 0.04, maxZoom: 1 };
-/** Above this many plates those outside the frame are not built. */
-const MOST_BUILT = 60;
 
 interface ChainDrawingProps {
   list: DisplayList;
@@ -45,7 +44,7 @@ export function ChainDrawing({ list, at, nameOf, frame, onSelect, onOpen }: Chai
   const [walked, setWalked] = useState<string | null>(null);
   const [level] = useState(() => new DetailLevel());
   const box = useRef<HTMLDivElement>(null);
-  const motion = useMotion(box);
+  const motion = useMotion(box, level);
   const detail = useDetail();
   const { nodes, edges } = useElements(list, at, walked);
   const plateOf = (id: string) => list.plates.find((plate) => plate.id === id);
@@ -92,15 +91,8 @@ export function ChainDrawing({ list, at, nameOf, frame, onSelect, onOpen }: Chai
           onNodeMouseLeave={detail.leave}
           onEdgeMouseEnter={(_event, edge) => detail.show({ ribbon: edge.data.ribbon })}
           onEdgeMouseLeave={detail.leave}
-          onMoveStart={() => {
-            detail.hide();
-            motion.start();
-          }}
-          onMove={(_event, view) => {
-            level.follow(view.zoom);
-            motion.follow(view);
-          }}
-          onMoveEnd={motion.end}
+          onMoveStart={detail.hide}
+          onMove={(event, view) => motion.follow(view, event !== null)}
           nodesDraggable={false}
           nodesConnectable={false}
           nodesFocusable={false}
@@ -112,7 +104,6 @@ export function ChainDrawing({ list, at, nameOf, frame, onSelect, onOpen }: Chai
             setInstance(ready);
             frame.show(ready);
           }}
-          onlyRenderVisibleElements={list.plates.length > MOST_BUILT}
           minZoom={0.05}
           maxZoom={2}
           preventScrolling={false}

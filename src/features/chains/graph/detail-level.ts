@@ -1,43 +1,36 @@
-import { createContext, useContext, useEffect, useState } from 'react';
+import { createContext, useContext, useSyncExternalStore } from 'react';
 import { BRIEF_BELOW } from './brief-plate.ts';
 
-type Listener = (isBrief: boolean) => void;
-
-/** How many plates and links change their face in one frame: all at once would hold up a frame. */
-const IN_ONE_FRAME = 40;
-
-/**
- * Whether the drawing stands so small that plates show number and state only. It tells its listeners a few at a
- * time, frame by frame.
- */
+/** How closely the drawing is looked at, and whether it moves: kept past React, which has nothing to do meanwhile. */
 export class DetailLevel {
+  /** Whether plates show number and state only, since they stand small. */
   isBrief = false;
-  #listeners = new Set<Listener>();
-  #waiting: Listener[] = [];
-  #frame = 0;
+  /** While it moves nothing is built, so that every frame is in time. */
+  isMoving = false;
+  #listeners = new Set<() => void>();
 
-  /** To be called whenever the zoom has changed. */
+  move(): void {
+    this.isMoving = true;
+  }
+
+  rest(zoom: number): void {
+    this.isMoving = false;
+    this.follow(zoom);
+  }
+
+  /** To be called when the drawing stands at another zoom. */
   follow(zoom: number): void {
     const isBrief = zoom < BRIEF_BELOW;
     if (isBrief === this.isBrief) return;
     this.isBrief = isBrief;
-    this.#waiting = [...this.#listeners];
-    if (this.#frame === 0) this.#tellSome();
+    for (const listener of this.#listeners) listener();
   }
 
-  /** Tells the level now and whenever it changes. @returns ends the listening */
-  listen(listener: Listener): () => void {
+  /** Tells when the level has changed. @returns ends the listening */
+  listen = (listener: () => void): (() => void) => {
     this.#listeners.add(listener);
-    listener(this.isBrief);
     return () => this.#listeners.delete(listener);
-  }
-
-  #tellSome(): void {
-    for (const listener of this.#waiting.splice(0, IN_ONE_FRAME)) {
-      if (this.#listeners.has(listener)) listener(this.isBrief);
-    }
-    this.#frame = this.#waiting.length === 0 ? 0 : requestAnimationFrame(() => this.#tellSome());
-  }
+  };
 }
 
 /** The level of the drawing around. */
@@ -46,7 +39,5 @@ export const DetailLevelContext = createContext(new DetailLevel());
 /** Whether to be drawn brief. */
 export function useIsBrief(): boolean {
   const level = useContext(DetailLevelContext);
-  const [isBrief, setBrief] = useState(level.isBrief);
-  useEffect(() => level.listen(setBrief), [level]);
-  return isBrief;
+  return useSyncExternalStore(level.listen, () => level.isBrief);
 }

@@ -1,6 +1,8 @@
 import type { Edge, Node } from 'reactflow';
 import type { DisplayList, Plate, Ribbon } from '#shared/drawing/display-list.ts';
 import { PLATE } from '#shared/drawing/geometry.ts';
+import { ribbonFigure } from '#shared/drawing/ribbon-shapes.ts';
+import type { PictureData } from './picture-node.tsx';
 import type { PlateData } from './plate-node.tsx';
 import type { RibbonData } from './ribbon-edge.tsx';
 
@@ -15,7 +17,7 @@ export interface Standing {
 /** Name of the band among the drawing's elements. */
 export const BAND_ID = 'definition';
 
-/** Plates and the band, in their places. */
+/** The band and the plates' buttons, in their places. */
 export function nodesOf(list: DisplayList, standing: Standing): Node[] {
   const band: Node = {
     id: BAND_ID,
@@ -37,7 +39,7 @@ function nodeOf(plate: Plate, { at, tabStop, takesFocus }: Standing): Node<Plate
     id: plate.id,
     type: 'plate',
     position: { x: plate.x, y: plate.y },
-    style: placedAt(plate.x, plate.y),
+    style: { ...placedAt(plate.x, plate.y), width: PLATE.width, height: PLATE.height },
     // Known beforehand: without it a plate that changes is hidden until it is measured anew, and loses the focus.
     width: PLATE.width,
     height: PLATE.height,
@@ -56,8 +58,34 @@ function isAbout({ id, node }: Plate, at: string): boolean {
   return id === at;
 }
 
-/** Ribbons, the widest first: what is drawn later lies above, and a thin line's label stays readable. */
-export function edgesOf(list: DisplayList, at: string | undefined): Edge<RibbonData>[] {
+/** The picture of all ribbons and plates, below everything that takes the pointer. */
+export function pictureOf(list: DisplayList, at: string | undefined): Node<PictureData> {
+  return {
+    id: 'picture',
+    type: 'picture',
+    position: { x: 0, y: 0 },
+    style: { ...placedAt(0, 0), pointerEvents: 'none' },
+    width: list.width,
+    height: list.height,
+    data: { list, selected: selectedIn(list, at) },
+    selectable: false,
+  };
+}
+
+function selectedIn({ plates, ribbons }: DisplayList, at: string | undefined): ReadonlySet<string> {
+  if (at === undefined) return new Set();
+  return new Set([
+    ...plates.filter((plate) => isAbout(plate, at)).map(({ id }) => id),
+    ...ribbons.filter((ribbon) => holds(ribbon, at)).map(({ id }) => id),
+  ]);
+}
+
+function holds(ribbon: Ribbon, at: string): boolean {
+  return ribbon.id === at || ribbon.link.of.includes(at);
+}
+
+/** Where ribbons take the pointer, the widest first: a thin one that crosses it lies above. */
+export function edgesOf(list: DisplayList): Edge<RibbonData>[] {
   return list.ribbons
     .toSorted((a, b) => b.width - a.width)
     .map((ribbon) => ({
@@ -65,10 +93,7 @@ export function edgesOf(list: DisplayList, at: string | undefined): Edge<RibbonD
       type: 'ribbon',
       source: ribbon.link.parentUid,
       target: ribbon.link.childUid,
-      data: { ribbon, isSelected: at !== undefined && holds(ribbon, at) },
+      data: { ribbon },
+      ariaLabel: ribbonFigure(ribbon).title,
     }));
-}
-
-function holds(ribbon: Ribbon, at: string): boolean {
-  return ribbon.id === at || ribbon.link.of.includes(at);
 }

@@ -22,15 +22,17 @@ export function glide(box: HTMLElement, before: Shown, after: Shown): void {
   const ribbonsBefore = new Map(before.list.ribbons.map((ribbon) => [ribbon.id, ribbon]));
   const placed = (point: Point) => placeInNewView(point, before.view, after.view);
   const scale = before.view.zoom / after.view.zoom;
-  for (const element of box.querySelectorAll<HTMLElement>('.react-flow__node-plate')) {
-    const id = element.dataset['id'] ?? '';
-    const [from, to] = [platesBefore.get(id), after.list.plates.find((plate) => plate.id === id)];
+  const platesAfter = new Map(after.list.plates.map((plate) => [plate.id, plate]));
+  for (const element of box.querySelectorAll<SVGGElement>('[data-plate-drawn]')) {
+    const id = element.dataset['plateDrawn'] ?? '';
+    const [from, to] = [platesBefore.get(id), platesAfter.get(id)];
     if (!to) continue;
     if (!from) fadeIn(element);
     else {
       const start = placed(from);
       if (start.x === to.x && start.y === to.y && scale === 1) continue;
-      move(element, `translate(${start.x - to.x}px, ${start.y - to.y}px) scale(${scale})`, 'none');
+      const shift = [start.x - to.x * scale, start.y - to.y * scale];
+      move(element, matrix([scale, 0, 0, scale, ...shift]), STILL);
     }
   }
   const ribbonsAfter = new Map(after.list.ribbons.map((ribbon) => [ribbon.id, ribbon]));
@@ -73,7 +75,11 @@ export function transformBetween(
   if (!isBearable(stretchX) || !isBearable(stretchY)) return undefined;
   const shiftX = (a.x + b.x) / 2 - ((c.x + d.x) / 2) * stretchX;
   const shiftY = a.y - c.y * stretchY;
-  return `matrix(${[stretchX, 0, 0, stretchY, shiftX, shiftY].map((value) => Math.round(value * 1e4) / 1e4).join(', ')})`;
+  return matrix([stretchX, 0, 0, stretchY, shiftX, shiftY]);
+}
+
+function matrix(values: readonly number[]): string {
+  return `matrix(${values.map((value) => Math.round(value * 1e4) / 1e4).join(', ')})`;
 }
 
 function isBearable(stretch: number): boolean {

@@ -1,7 +1,7 @@
 import { useMemo } from 'react';
 import type { Edge, Node } from 'reactflow';
 import type { DisplayList } from '#shared/drawing/display-list.ts';
-import { edgesOf, nodesOf } from './flow-elements.ts';
+import { edgesOf, nodesOf, pictureOf } from './flow-elements.ts';
 
 /** The list's plates and ribbons as the drawing's elements; what has not changed keeps its identity. */
 export function useElements(
@@ -13,7 +13,8 @@ export function useElements(
     () => nodesOf(list, { at: undefined, tabStop: undefined, takesFocus: false }),
     [list],
   );
-  const nodes = useMemo(() => {
+  const picture = useMemo(() => pictureOf(list, at), [list, at]);
+  const buttons = useMemo(() => {
     const isThere = (id: string | null | undefined) => list.plates.some((plate) => plate.id === id);
     const focus = list.plates.find((plate) => plate.isFocus)?.id;
     const tabStop = (isThere(walked) ? walked : isThere(at) ? at : focus) ?? undefined;
@@ -24,6 +25,7 @@ export function useElements(
       return isTouched ? now : node;
     });
   }, [list, plain, at, walked]);
-  const edges = useMemo(() => edgesOf(list, at), [list, at]);
+  const edges = useMemo(() => edgesOf(list), [list]);
+  const nodes = useMemo(() => [picture, ...buttons], [picture, buttons]);
   return { nodes, edges };
 }
