@@ -93,10 +93,10 @@ export function longQuestions(value: Planted, scene: TellingScene): Question[] {
     ...changesOf(value).flatMap((change) =>
       GROUPINGS.map((by) => whatIf({ changes: [change], by, threshold: 0 })),
     ),
-    ...['statement.pdf', 'statement.json', 'drawing.svg', 'take-along.html'].map((file) =>
+    ...['statement.json', 'take-along.html'].map((file) =>
       get(`/api/chains/:valueUid/${file}`, params, { as: 'now known', verdict: 'conduct' }),
     ),
-    ...others.map((other) => get('/api/chains/:valueUid/drawing.svg', params, { with: other.uid })),
+    ...others.slice(-3).map((other) => get('/api/chains/:valueUid/drawing.svg', params, { with: other.uid })),
   ];
 }
 
