@@ -102,7 +102,6 @@ export function linkFacts(
 ): LinkFacts {
   const horizon = endOfDay(parts.question.known);
   const dossier = parts.standards.get(parent.standardId)!;
-  const own = historyOf(dossier, link.parentId);
   return {
     child,
     parent,
@@ -117,10 +116,7 @@ export function linkFacts(
     programmes: dossier.programmes.filter(
       (row) => row.laboratoryId === child.issuer.id && row.recordedAt <= horizon,
     ),
-    otherValues: dossier.history
-      .filter((row) => row.recordedAt <= horizon && row.calibrationId !== parent.calibrationId)
-      .filter((row) => row.quantity === parent.quantity && row.medium === parent.medium)
-      .map((row) => otherValueFacts(row, own?.epochN, dossier, horizon)),
+    otherValues: otherValuesOf(parent, link.parentId, dossier, horizon),
     notices: parts.noticesOfLinks.get(linkKey(child, link)) ?? [],
     scaleMap: scaleMapOf(
       parts.byId.get(link.parentId)!,
@@ -129,6 +125,27 @@ export function linkFacts(
       parts.question.known,
     ),
   };
+}
+
+/** By the reference's facts, which are of one question: many links lean on one reference. */
+const otherValues = new WeakMap<ValueFacts, OtherValueFacts[]>();
+
+/** The reference's other values of its kind and medium, recorded by the horizon. */
+function otherValuesOf(
+  parent: ValueFacts,
+  parentId: number,
+  dossier: StandardDossier,
+  horizon: string,
+): OtherValueFacts[] {
+  const known = otherValues.get(parent);
+  if (known) return known;
+  const epochN = historyOf(dossier, parentId)?.epochN;
+  const facts = dossier.history
+    .filter((row) => row.recordedAt <= horizon && row.calibrationId !== parent.calibrationId)
+    .filter((row) => row.quantity === parent.quantity && row.medium === parent.medium)
+    .map((row) => otherValueFacts(row, epochN, dossier, horizon));
+  otherValues.set(parent, facts);
+  return facts;
 }
 
 function otherValueFacts(

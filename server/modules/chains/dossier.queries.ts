@@ -23,8 +23,9 @@ const ASSERTED = `valid_from AS validFrom, valid_to AS validTo, act_seq AS actSe
 const ASSERTED_JSON = `'validFrom', valid_from, 'validTo', valid_to, 'actSeq', act_seq, ${RECORDED_JSON}`;
 
 /**
- * Standards with all that was asserted of them, each list in a fixed order, since audits digest it. Of drifts rates only:
- * a drift given in grams for one interval says nothing of another.
+ * Standards with all that was asserted of them. Audits digest rows as they stand here: lists have a fixed order, and
+ * epochs and programmes name their standard, as they always did. Of drifts rates only: a drift given in grams for one
+ * interval says nothing of another.
  */
 const STANDARDS = `
   SELECT s.id AS standardId, s.registry_no AS registryNo, s.marking, s.nominal, s.kind, s.serial, s.shape,
@@ -33,11 +34,11 @@ const STANDARDS = `
      FROM standard_fact WHERE standard_id = s.id AND kind = 'class' AND value IS NOT NULL) AS classes,
     (SELECT JSON_ARRAYAGG(JSON_OBJECT('u', u, 'determinedOn', determined_on, ${RECORDED_JSON}) ORDER BY id)
      FROM source WHERE standard_id = s.id AND kind = 'drift' AND unit = 'g/a') AS driftRates,
-    (SELECT JSON_ARRAYAGG(JSON_OBJECT('n', n, 'reason', reason, 'beginsOn', begins_on,
+    (SELECT JSON_ARRAYAGG(JSON_OBJECT('standardId', standard_id, 'n', n, 'reason', reason, 'beginsOn', begins_on,
         'lastGoodOn', last_good_on, ${RECORDED_JSON}) ORDER BY n)
      FROM epoch WHERE standard_id = s.id) AS epochs,
-    (SELECT JSON_ARRAYAGG(JSON_OBJECT('laboratoryId', laboratory_id, 'intervalMonths', interval_months,
-        'method', method, 'justification', justification, ${ASSERTED_JSON})
+    (SELECT JSON_ARRAYAGG(JSON_OBJECT('standardId', standard_id, 'laboratoryId', laboratory_id,
+        'intervalMonths', interval_months, 'method', method, 'justification', justification, ${ASSERTED_JSON})
        ORDER BY laboratory_id, recorded_at, id)
      FROM programme WHERE standard_id = s.id) AS programmes,
     (SELECT JSON_ARRAYAGG(JSON_OBJECT('kind', kind, 'value', CAST(value AS CHAR),
