@@ -97,6 +97,8 @@ export const CalibrationResponse = z.object({
       stateSince: Day.nullable(),
       /** Why it is superseded or withdrawn. */
       stateReason: z.string().nullable(),
+      /** The latest later certificate in force for the same weight and kind; null where there is none, or it is not told. */
+      newer: z.object({ revisionId: Id, certificateNo: z.string() }).nullable(),
       references: z.array(
         z.object({
           valueUid: Id,

@@ -241,6 +241,8 @@ export const ChainResponse = z.object({
   inForceInstead: z.object({ uid: Id, certificateNo: z.string() }).nullable(),
   /** What took the focus's own place on the day, as known; null where it stands or is lost, and in a statement. */
   succeededBy: z.object({ uid: Id, certificateNo: z.string(), revisionN: z.number().int() }).nullable(),
+  /** The latest later value in force of the same weight and kind, where the focus is in force itself; null as above. */
+  newerInForce: z.object({ uid: Id, certificateNo: z.string() }).nullable(),
   nodes: z.array(z.discriminatedUnion('type', [ChainValue, ChainSource])),
   links: z.array(ChainLink),
   /** Null: nothing that the focus rests on has changed since it was certified. */

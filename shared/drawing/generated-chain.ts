@@ -223,6 +223,7 @@ function responseOf(nodes: ChainResponse['nodes'], links: ChainLink[]): ChainRes
     focusUid: focus.uid,
     inForceInstead: null,
     succeededBy: null,
+    newerInForce: null,
     asNowKnown: null,
     nodes,
     links,

@@ -149,6 +149,17 @@ describe('GET /api/calibrations/:revisionId', () => {
     expect((await holder.agent.get('/api/calibrations/x')).status).toBe(404);
   });
 
+  it('names the later certificate of a weight that stands beside it, to the holder alone', async () => {
+    const { id } = await makeStandard(app, holder.id);
+    const first = await makeCalibration(app, institute.id, '2024-06-12', [lineOf(id)]);
+    const second = await makeCalibration(app, institute.id, '2025-06-12', [lineOf(id)]);
+    const newerOn = async (agent: supertest.Agent, revisionId: string) =>
+      (await agent.get(`/api/calibrations/${revisionId}`)).body.lines[0].newer;
+    expect(await newerOn(holder.agent, first.revisionId)).toMatchObject({ revisionId: second.revisionId });
+    expect(await newerOn(holder.agent, second.revisionId)).toBeNull();
+    expect(await newerOn(institute.agent, first.revisionId)).toBeNull();
+  });
+
   it('shows each customer their own lines, and the budget to the issuer alone', async () => {
     const [mine, theirs] = [await makeStandard(app, holder.id), await makeStandard(app, stranger.id)];
     const top = await makeStandard(app, institute.id);

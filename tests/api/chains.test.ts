@@ -214,6 +214,15 @@ describe('GET /api/chains/:valueUid', () => {
     expect((await chain(person, later.uid, '?known=2021-05-09')).inForceInstead).toBeNull();
   });
 
+  it('names a later value that stands beside one in force, on the days when it does', async () => {
+    const fresh = await smallNetwork();
+    const person = await makePerson(app, 'metrologist', fresh.laboratory.id);
+    const later = await fresh.issueAgain('2021-05-10');
+    expect((await chain(person, fresh.a.uid)).newerInForce).toMatchObject({ uid: later.uid });
+    expect((await chain(person, fresh.a.uid, '?day=2021-05-09')).newerInForce).toBeNull();
+    expect((await chain(person, later.uid)).newerInForce).toBeNull();
+  });
+
   it('finds the choice of a chain by its number in small letters, without the space', async () => {
     const agent = await app.signIn(metrologist);
     const node = (await chain(metrologist, network.a.uid)).nodes.find(({ uid }) => uid === network.a.uid)!;

@@ -27,7 +27,7 @@ export interface SheetHead extends CalibrationRecord {
 
 export interface SheetLine extends Omit<
   Line,
-  'standard' | 'holder' | 'references' | 'components' | 'underAccreditation'
+  'standard' | 'holder' | 'references' | 'components' | 'underAccreditation' | 'newer'
 > {
   id: number;
   standardId: string;
@@ -43,12 +43,21 @@ export interface SheetLine extends Omit<
 export type SheetReference = Line['references'][number] & { childId: number };
 export type SheetComponent = NonNullable<Line['components']>[number] & { valueId: number };
 
+/** A later certificate in force beside a line of this one. */
+export interface SheetNewer {
+  lineId: number;
+  revisionId: string;
+  certificateNo: string;
+}
+
 export interface CalibrationSheet {
   head: SheetHead;
   revisions: Response['revisions'];
   lines: SheetLine[];
   references: SheetReference[];
   components: SheetComponent[];
+  /** In the order of determination. */
+  newer: SheetNewer[];
 }
 
 const HEAD = `
@@ -94,6 +103,16 @@ const COMPONENTS = `
   FROM assigned_value o JOIN component m ON m.value_id = o.id
   WHERE o.revision_id = :revisionId ORDER BY m.value_id, m.n`;
 
+const NEWER = `
+  SELECT o.id AS lineId, v.revision_id AS revisionId, c.certificate_no AS certificateNo, ${STATE_ON_DAY} AS state
+  FROM assigned_value o
+  JOIN assigned_value v ON v.standard_id = o.standard_id AND v.quantity = o.quantity
+    AND v.performed_end > o.performed_end
+  JOIN revision r ON r.id = v.revision_id
+  JOIN calibration c ON c.id = r.calibration_id
+  WHERE o.revision_id = :revisionId AND v.recorded_at <= :knownAt
+  HAVING state = 'in force' ORDER BY v.performed_end, v.id`;
+
 /**
  * Everything on the sheet of one revision, as it stands on the day.
  * @throws AppError `not-found`
@@ -106,7 +125,7 @@ export async function calibrationSheet(
   const asked = { revisionId, day, knownAt: knownAt(day) };
   const head = await readRow<SheetHead>(database, HEAD, asked);
   if (!head) throw notFound('This calibration');
-  const [revisions, lines, references, components] = await Promise.all([
+  const [revisions, lines, references, components, newer] = await Promise.all([
     readRows<Response['revisions'][number]>(
       database,
       `SELECT id AS revisionId, n, issued_on AS issuedOn, reason FROM revision
@@ -116,6 +135,7 @@ export async function calibrationSheet(
     readRows<SheetLine>(database, LINES, asked),
     readRows<SheetReference>(database, REFERENCES, asked),
     readRows<SheetComponent>(database, COMPONENTS, asked),
+    readRows<SheetNewer>(database, NEWER, asked),
   ]);
-  return { head, revisions, lines, references, components };
+  return { head, revisions, lines, references, components, newer };
 }

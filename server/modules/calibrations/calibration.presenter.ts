@@ -3,6 +3,7 @@ import { decimalText } from '#shared/decimal.ts';
 import type { CalibrationResponse } from '#shared/contracts/calibrations.ts';
 import { abilitiesFor } from '#server/policy/permission.ts';
 import { readsInFull, type User } from '#server/policy/user.ts';
+import { seesHistory } from '#server/policy/value-view.ts';
 import { presentCalibrationRow } from './calibration-list.queries.ts';
 import type { CalibrationSheet, SheetLine } from './calibration-sheet.queries.ts';
 import {
@@ -33,7 +34,11 @@ export function presentCalibration(
       firstRegistryNo: lines[0]?.registryNo ?? head.firstRegistryNo,
     },
     revisions: sheet.revisions,
-    lines: lines.map((line) => presentLine(line, sheet, readsInFull(user, subject.issuerId))),
+    lines: lines.map((line) => ({
+      ...presentLine(line, sheet, readsInFull(user, subject.issuerId)),
+      // The weight's other calibrations are its holder's to tell.
+      newer: seesHistory(user, line) ? newerThan(line, sheet) : null,
+    })),
     abilities: abilitiesFor(user, subject, [readCalibration, withdrawCalibrationPermission]),
   };
 }
@@ -68,7 +73,7 @@ function presentLine(
   line: SheetLine,
   { references, components }: CalibrationSheet,
   seesBudget: boolean,
-): Response['lines'][number] {
+): Omit<Response['lines'][number], 'newer'> {
   return {
     uid: line.uid,
     line: line.line,
@@ -103,6 +108,14 @@ function presentLine(
           .map(({ valueId: _, ...component }) => component)
       : null,
   };
+}
+
+function newerThan(
+  { id, state }: SheetLine,
+  { newer }: CalibrationSheet,
+): Response['lines'][number]['newer'] {
+  const found = state === 'in force' && newer.findLast(({ lineId }) => lineId === id);
+  return found ? { revisionId: found.revisionId, certificateNo: found.certificateNo } : null;
 }
 
 function textOrNull(value: string | null): string | null {

@@ -7,7 +7,7 @@ import { seesHistory, valueView } from '#server/policy/value-view.ts';
 import type { Chain } from './chain.service.ts';
 import type { ChainSubject } from './chains.policy.ts';
 import { redactCheck, rulesTold } from './checks.presenter.ts';
-import { inForceInstead, noteOf, standingOn, succeededBy } from './focus.presenter.ts';
+import { inForceInstead, newerInForce, noteOf, standingOn, succeededBy } from './focus.presenter.ts';
 import { becauseLost, nowOf, presentAsNowKnown } from './chain-now.presenter.ts';
 import type { StoredSource, StoredValue } from './stored.ts';
 
@@ -47,6 +47,7 @@ export function presentChain(chain: Chain, user: User, subject: ChainSubject): C
     focusUid: chain.focus.uid,
     inForceInstead: withHistory.has(chain.focus.uid) ? inForceInstead(chain) : null,
     succeededBy: isFull(chain.focus.uid) ? succeededBy(chain) : null,
+    newerInForce: withHistory.has(chain.focus.uid) ? newerInForce(chain) : null,
     nodes: [
       ...chain.closure.values.map((value) => presentValue(value, chain, isFull(value.uid), shares)),
       ...[...chain.closure.sources.values()].map((source) => presentSource(source, chain, user, shares)),

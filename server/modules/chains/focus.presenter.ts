@@ -27,6 +27,21 @@ export function inForceInstead(chain: Chain): ChainResponse['inForceInstead'] {
   return stood ? { uid: stood.uid, certificateNo: stood.certificateNo } : null;
 }
 
+/** The latest determined of this weight in the focus's kind, where it and the focus stand beside each other. */
+export function newerInForce(chain: Chain): ChainResponse['newerInForce'] {
+  const { focus } = chain;
+  const { history } = chain.standards.get(focus.standardId)!;
+  const ends = history.find((row) => row.id === focus.id)?.ends ?? [];
+  if (standingOn(chain, focus, ends).state !== 'in force') return null;
+  const newest = history.findLast(
+    (row) =>
+      row.quantity === focus.quantity &&
+      row.performedEnd > focus.performedEnd &&
+      standingOn(chain, row, row.ends).state === 'in force',
+  );
+  return newest ? { uid: newest.uid, certificateNo: newest.certificateNo } : null;
+}
+
 /** Both kinds are the certificate's: said where what they rest on has moved since. */
 export function noteOf({ sideBySide, now, focus }: Chain): string | null {
   const hasMoved = now !== null && (now.focus.isTouched || now.notices.has(focus.uid));

@@ -44,6 +44,7 @@ export function CalibrationSheet(props: CalibrationSheetProps) {
         </Notice>
       )}
       <EndReason lines={lines} />
+      <Newer lines={lines} />
       <div className="grid grid-cols-1 items-start gap-x-10 gap-y-1 md:grid-cols-2 columns:grid-cols-[auto_auto_1fr]">
         <Facts
           facts={[
@@ -99,6 +100,23 @@ function EndReason({ lines }: { lines: CalibrationResponse['lines'] }) {
     >
       {reason}
     </Notice>
+  ));
+}
+
+/** Later certificates that stand beside this one, which is in force itself. */
+function Newer({ lines }: { lines: CalibrationResponse['lines'] }) {
+  const newer = new Map(lines.flatMap((line) => (line.newer ? [[line.newer.revisionId, line]] : [])));
+  return [...newer].map(([revisionId, line]) => (
+    <p key={revisionId} role="status">
+      In force; newer:{' '}
+      <Link
+        to={paths.calibration.href(revisionId)}
+        className="font-mono text-sm underline underline-offset-3"
+      >
+        {line.newer!.certificateNo}
+      </Link>
+      {lines.length > 1 && `, of ${line.standard.registryNo}`}
+    </p>
   ));
 }
 

@@ -11,6 +11,7 @@ import { nominalText } from '#shared/numbers/nominal.ts';
 import { CompareWith } from '../changes/compare-with.tsx';
 import { isCompared, type ChainQuestion } from '../question.ts';
 import { BothChains } from './both-chains.tsx';
+import { ChainHead } from './chain-head.tsx';
 import { BothKinds } from './both-kinds.tsx';
 import { Contributions } from './contributions.tsx';
 import { LinkTable } from './link-table.tsx';
@@ -56,7 +57,7 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
   return (
     <Page
       title={titleOf(focus)}
-      sub={`${focus.holder?.name ?? focus.issuer.name} · certificate ${focus.certificateNo} · ${focus.state}${focus.stateSince ? ` since ${focus.stateSince}` : ''}`}
+      sub={<ChainHead chain={chain} focus={focus} hrefOf={hrefOf} />}
       value={
         <Quantity
           value={decimalText(new Decimal(focus.nominal).plus(focus.deviation))}
