@@ -4,6 +4,7 @@ import { datedTo } from '#shared/numbers/dated-to.ts';
 import { quantitySpans } from '#shared/numbers/ink-spans.ts';
 import { nominalText } from '#shared/numbers/nominal.ts';
 import { shareText } from '#shared/numbers/share-text.ts';
+import { twoDigits } from '#shared/numbers/small-amount.ts';
 
 const STANDING = {
   sound: 'holds its checks',
@@ -49,9 +50,10 @@ export function isZero(grams: string): boolean {
   return new Decimal(grams).isZero();
 }
 
-/** A shift in grams, with its sign. */
+/** A shift in grams, with its sign, to two significant digits. */
 export function shiftWords(grams: string): string {
-  return plain({ value: grams, kind: 'deviation', shownIn: 'auto' });
+  const value = twoDigits(grams);
+  return value === null ? 'less than 0.01\u2009µg' : plain({ value, kind: 'deviation', shownIn: 'auto' });
 }
 
 function plain(input: Parameters<typeof quantitySpans>[0]): string {

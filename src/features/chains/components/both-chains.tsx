@@ -5,6 +5,7 @@ import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { shareText } from '#shared/numbers/share-text.ts';
 import { whatToDo } from '../what-to-do.ts';
+import { Amount, Shift } from './amount.tsx';
 import { toPlain } from './contributions.tsx';
 import type { ValueNode } from './selection-sheet.tsx';
 
@@ -46,14 +47,7 @@ export function BothChains({ chain }: { chain: ChainResponse }) {
             <Row>
               <Cell isHeading>Shift</Cell>
               <Cell align="right">
-                <Quantity
-                  value={now.shift}
-                  expandedUncertainty={focus.expandedU}
-                  coverageFactor={focus.k}
-                  kind="deviation"
-                  shownIn="auto"
-                  hidesUncertainty
-                />
+                <Shift grams={now.shift} expandedU={focus.expandedU} k={focus.k} />
               </Cell>
               <Cell align="right">{ofU === null ? '' : `${shareText(ofU, decimalMark)} of U`}</Cell>
             </Row>
@@ -70,7 +64,7 @@ export function BothChains({ chain }: { chain: ChainResponse }) {
               {row.shift !== null && Number(row.shift) !== 0 && (
                 <>
                   {' '}
-                  and brings <Quantity value={row.shift} kind="deviation" shownIn="auto" decimals={2} />
+                  and brings <Amount grams={row.shift} kind="deviation" />
                 </>
               )}
               .
@@ -81,12 +75,11 @@ export function BothChains({ chain }: { chain: ChainResponse }) {
               Notice {notice.number}, {notice.title}, in force from {notice.effectiveOn},{' '}
               {Number(notice.shift) === 0 ? (
                 <>
-                  adds a standard uncertainty of{' '}
-                  <Quantity value={toPlain(notice.u)} shownIn="auto" decimals={2} />.
+                  adds a standard uncertainty of <Amount grams={toPlain(notice.u)} kind="uncertainty" />.
                 </>
               ) : (
                 <>
-                  brings <Quantity value={notice.shift} kind="deviation" shownIn="auto" decimals={2} />.
+                  brings <Amount grams={notice.shift} kind="deviation" />.
                 </>
               )}
             </li>
