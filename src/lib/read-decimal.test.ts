@@ -36,6 +36,16 @@ describe('readDecimal', () => {
     expect(read.kind === 'unreadable' && read.why).toMatch(/^Received "12 34"/);
   });
 
+  it.each(['1e999', 'abc', '10 %', '-', '5 hPa x'])(
+    'advises a plain number where "%s" stands, and no unit',
+    (typed) => {
+      const read = readDecimal(typed, '.');
+      expect(read.kind === 'unreadable' && read.why).toBe(
+        `Write a plain decimal number, such as 10 or 0.5; received "${typed}".`,
+      );
+    },
+  );
+
   it('tells nothing from empty', () => {
     expect(value('  ')).toBe('empty');
   });

@@ -20,8 +20,17 @@ export function readDecimal(typed: string, preferred: DecimalMark): ReadDecimal 
     return { kind: 'number', value: parsed.value.toFixed(parsed.decimals) };
   } catch (error) {
     if (!(error instanceof EngineError)) throw error;
-    return { kind: 'unreadable', why: error.message.replace(/^[^:]*: r/, 'R') };
+    return { kind: 'unreadable', why: whyUnread(typed, error) };
   }
+}
+
+/** A field for a bare number has no units to offer, and no place for an uncertainty: its advice says neither. */
+const NOT_BARE = ['not-a-number', 'unknown-unit', 'unreadable-brackets', 'unreadable-uncertainty'];
+
+function whyUnread(typed: string, error: EngineError): string {
+  return NOT_BARE.includes(error.code)
+    ? `Write a plain decimal number, such as 10 or 0.5; received "${typed.trim()}".`
+    : error.message.replace(/^[^:]*: r/, 'R');
 }
 
 function parseNumber(typed: string, preferred: DecimalMark): ReturnType<typeof parseQuantity> {

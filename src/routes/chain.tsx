@@ -6,12 +6,14 @@ import { paths } from '#src/app/paths.ts';
 import { queryClient } from '#src/app/query-client.ts';
 import { Toolbar } from '#src/components/layout/columns.tsx';
 import { LinkButton } from '#src/components/ui/button.tsx';
+import { UnreadAddress } from '#src/components/ui/unread-address.tsx';
 import { AuditChain } from '#src/features/audits/components/audit-chain.tsx';
 import { chainQuery, type ChainDays } from '#src/features/chains/api.ts';
 import { ChainScreen } from '#src/features/chains/components/chain-screen.tsx';
 import type { ValueNode } from '#src/features/chains/components/selection-sheet.tsx';
 import { readQuestion, withChange, type ChainQuestion } from '#src/features/chains/question.ts';
 import { distanceQuery } from '#src/features/downstream/api.ts';
+import { unreadIn } from '#src/lib/unread-address.ts';
 import { DistanceSection } from '#src/features/downstream/components/distance-section.tsx';
 
 /** Fetched with the screen, not with the application. */
@@ -43,14 +45,17 @@ export function Component() {
   const change = (next: Partial<ChainQuestion>, isStep = 'at' in next) =>
     setParameters(withChange(question, next), { replace: isStep, preventScrollReset: true });
   return (
-    <ChainScreen
-      chain={data}
-      question={question}
-      onChange={change}
-      actionsFor={(node) => actionsFor(node, question)}
-      hrefOf={(uid) => paths.chain.href(uid, question)}
-      actions={<Further chain={data} question={question} />}
-    />
+    <>
+      <UnreadAddress unread={unreadIn(parameters, question)} />
+      <ChainScreen
+        chain={data}
+        question={question}
+        onChange={change}
+        actionsFor={(node) => actionsFor(node, question)}
+        hrefOf={(uid) => paths.chain.href(uid, question)}
+        actions={<Further chain={data} question={question} />}
+      />
+    </>
   );
 }
 

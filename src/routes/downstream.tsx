@@ -2,12 +2,14 @@ import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { Link, useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router';
 import { paths } from '#src/app/paths.ts';
 import { queryClient } from '#src/app/query-client.ts';
+import { UnreadAddress } from '#src/components/ui/unread-address.tsx';
 import { chainQuery } from '#src/features/chains/api.ts';
 import type { ValueNode } from '#src/features/chains/components/selection-sheet.tsx';
 import { downstreamQuery } from '#src/features/downstream/api.ts';
 import { DownstreamScreen } from '#src/features/downstream/components/downstream-screen.tsx';
 import { readSearch, withChange, type DownstreamSearch } from '#src/features/downstream/search.ts';
 import { nominalText } from '#shared/numbers/nominal.ts';
+import { unreadIn } from '#src/lib/unread-address.ts';
 import { ACT_DIALOGS } from './act-dialogs.tsx';
 
 /** Primes the value and its groups; a dry run is worked out on the screen, which says so meanwhile. */
@@ -38,14 +40,17 @@ export function Component() {
     setParameters(withChange(search, next), { replace: !isAnotherQuestion, preventScrollReset: true });
   };
   return (
-    <DownstreamScreen
-      subject={focus}
-      sub={<Sub focus={focus} days={days} />}
-      answered={data.question}
-      search={search}
-      onChange={change}
-      dialogs={ACT_DIALOGS}
-    />
+    <>
+      <UnreadAddress unread={unreadIn(parameters, search)} />
+      <DownstreamScreen
+        subject={focus}
+        sub={<Sub focus={focus} days={days} />}
+        answered={data.question}
+        search={search}
+        onChange={change}
+        dialogs={ACT_DIALOGS}
+      />
+    </>
   );
 }
 

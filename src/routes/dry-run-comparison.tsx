@@ -22,7 +22,7 @@ export function Component() {
   const one = useSuspenseQuery(dryRunQuery(parameters.get('one')!));
   const other = useSuspenseQuery(dryRunQuery(parameters.get('other')!));
   const { by } = readSearch(parameters);
-  const measure = MEASURES.find((each) => each === parameters.get('measure')) ?? MEASURES[0];
+  const measure = MEASURES.find((each) => each === parameters.get('measure'));
   const change = (next: { by?: string; measure?: Measure }) =>
     setParameters(
       { ...Object.fromEntries(parameters), ...next },

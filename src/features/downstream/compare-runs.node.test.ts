@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { WhatIfGroup } from '#shared/contracts/downstream.ts';
-import { differenceOf, measured, pairGroups, wholeOf } from './compare-runs.ts';
+import { differenceOf, measured, pairGroups, tellingMeasure, wholeOf } from './compare-runs.ts';
 
 const group = (key: string, rest: Partial<WhatIfGroup> = {}): WhatIfGroup => ({
   key,
@@ -40,5 +40,19 @@ describe('two dry runs side by side', () => {
     expect(differenceOf(2, 5)).toBe(3);
     expect(differenceOf(2, null)).toBe(-2);
     expect(differenceOf(null, null)).toBeNull();
+  });
+
+  it('are compared by the first measure that tells them apart', () => {
+    const answer = (rest: Partial<WhatIfGroup>) => {
+      const groups = [group('E2', rest)];
+      return { total: { count: 1, warned: 0, words: groups[0]!.words }, groups };
+    };
+    const one = answer({});
+    const changed = { none: 0, material: 0, verdictChanges: 1 };
+    expect(tellingMeasure(one, answer({ words: changed }))).toBe('verdict changes');
+    expect(tellingMeasure(one, answer({ words: { ...changed, verdictChanges: 0 } }))).toBe('material');
+    expect(tellingMeasure(one, answer({ largestShift: 0.002 }))).toBe('largest shift');
+    expect(tellingMeasure(one, answer({ largestRatio: 0.1 }))).toBe('largest shift/U');
+    expect(tellingMeasure(one, one)).toBe('verdict changes');
   });
 });

@@ -29,6 +29,19 @@ function largest(values: readonly (number | null)[]): number | null {
   );
 }
 
+/** The measure that two answers are compared by where none is asked: the first that tells them apart. */
+export function tellingMeasure(
+  one: Pick<WhatIfResponse, 'total' | 'groups'>,
+  other: Pick<WhatIfResponse, 'total' | 'groups'>,
+): Measure {
+  const pairs = [{ one: wholeOf(one), other: wholeOf(other) }, ...pairGroups(one.groups, other.groups)];
+  const differs = (measure: Measure) =>
+    pairs.some(
+      (pair) => (pair.one && measured(pair.one, measure)) !== (pair.other && measured(pair.other, measure)),
+    );
+  return MEASURES.find(differs) ?? MEASURES[0];
+}
+
 /** One group in both answers; null where one of them has none of it. */
 export interface GroupPair {
   key: string;

@@ -13,6 +13,14 @@ describe('readAmount', () => {
     expect(readAmount('20 hPa', '.')).toMatchObject({ kind: 'unreadable' });
   });
 
+  it.each([
+    ['abc', 'Write a number and its unit, such as 20 µg; received "abc".'],
+    ['1e999', 'Write the number without an exponent, such as 20 µg; received "1e999".'],
+    ['2e-3 mg', 'Write the number without an exponent, such as 20 µg; received "2e-3 mg".'],
+  ])('advises on "%s" what belongs in the field', (typed, why) => {
+    expect(readAmount(typed, '.')).toEqual({ kind: 'unreadable', why });
+  });
+
   it('takes neither zero nor an uncertainty beside the amount', () => {
     expect(readAmount('0 mg', '.')).toMatchObject({ kind: 'unreadable' });
     expect(readAmount('1 ± 1 mg', '.')).toMatchObject({ kind: 'unreadable' });

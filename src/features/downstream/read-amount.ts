@@ -43,8 +43,17 @@ export function readAmount(typed: string, preferred: DecimalMark): ReadAmount {
     };
   } catch (error) {
     if (!(error instanceof EngineError)) throw error;
-    return { kind: 'unreadable', why: error.message.replace(/^[^:]*: r/, 'R') };
+    return { kind: 'unreadable', why: whyUnread(typed.trim(), error) };
   }
+}
+
+/** No uncertainty belongs beside an amount, and an exponent is no unit: the advice says neither. */
+function whyUnread(typed: string, error: EngineError): string {
+  const isExponent = /\d[eE][-+\u2212]?\d/.test(typed);
+  if (isExponent) return `Write the number without an exponent, such as 20 µg; received "${typed}".`;
+  if (error.code === 'not-a-number')
+    return `Write a number and its unit, such as 20 µg; received "${typed}".`;
+  return error.message.replace(/^[^:]*: r/, 'R');
 }
 
 /** An amount for the address: its number and the code of its unit, whoever reads it. */

@@ -31,3 +31,14 @@ export function supposedCorrection(
     expandedU: decimalText(grown.toSignificantDigits(U_DIGITS, Decimal.ROUND_UP)),
   };
 }
+
+/** The same for several suppositions about one value, one after the other. */
+export function supposedTogether(
+  changes: readonly WhatIfChange[],
+  value: { deviation: string; expandedU: string | null; k: string | null },
+): SupposedCorrection {
+  return changes.reduce<SupposedCorrection>(
+    (supposed, change) => supposedCorrection(change, { ...supposed, k: value.k }),
+    { deviation: value.deviation, expandedU: value.expandedU },
+  );
+}

@@ -1,21 +1,24 @@
 import { useState } from 'react';
 import { DecimalField } from '#src/components/ui/decimal-field.tsx';
+import { percentProblem } from '#src/lib/read-percent.ts';
 
 interface BeyondFieldProps {
   /** Percent of U. */
   value: number;
   onChange: (percent: number) => void;
+  /** Told when the field is left: whether what stands in it cannot be asked. */
+  onRefused: (isRefused: boolean) => void;
 }
 
 const LARGEST = 1000;
 
 /** From which part of U on a shift is material: asked anew once the field is left. 10 % unless said otherwise. */
-export function BeyondField({ value, onChange }: BeyondFieldProps) {
+export function BeyondField({ value, onChange, onRefused }: BeyondFieldProps) {
   const [typed, setTyped] = useState(String(value));
-  const percent = Number(typed);
-  const isGood = typed.trim() !== '' && percent >= 0 && percent <= LARGEST;
+  const problem = percentProblem(typed, LARGEST);
   const settle = () => {
-    if (isGood && percent !== value) onChange(percent);
+    onRefused(problem !== undefined);
+    if (problem === undefined && Number(typed) !== value) onChange(Number(typed));
   };
   return (
     <DecimalField
@@ -26,7 +29,8 @@ export function BeyondField({ value, onChange }: BeyondFieldProps) {
       onChange={setTyped}
       onBlur={settle}
       onKeyDown={(event) => event.key === 'Enter' && settle()}
-      error={isGood ? undefined : `Write a part of U from 0 to ${LARGEST} %.`}
+      hint="For weights of others always 10"
+      error={problem}
     />
   );
 }

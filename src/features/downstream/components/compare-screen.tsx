@@ -13,7 +13,15 @@ import { Switch } from '#src/components/ui/switch.tsx';
 import { Cell, Head, Row, Table } from '#src/components/ui/table.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
 import { suppositionOf, whatIfQuery } from '../api.ts';
-import { differenceOf, measured, MEASURES, pairGroups, wholeOf, type Measure } from '../compare-runs.ts';
+import {
+  differenceOf,
+  measured,
+  MEASURES,
+  pairGroups,
+  tellingMeasure,
+  wholeOf,
+  type Measure,
+} from '../compare-runs.ts';
 import { GROUPED_BY, groupName, GROUPINGS } from '../groups.ts';
 import { askedOfRun } from '../run-view.ts';
 import { ratioText, roundedText } from '../rounded.ts';
@@ -23,13 +31,16 @@ interface CompareScreenProps {
   one: DryRunResponse;
   other: DryRunResponse;
   by: DownstreamBy;
-  measure: Measure;
+  /** Undefined: the first that tells them apart. */
+  measure: Measure | undefined;
   onChange: (change: { by?: DownstreamBy; measure?: Measure }) => void;
 }
 
 /** Two kept dry runs side by side, both answered on the register of today. */
-export function CompareScreen({ one, other, by, measure, onChange }: CompareScreenProps) {
+export function CompareScreen({ one, other, by, measure: asked, onChange }: CompareScreenProps) {
   const [ofOne, ofOther] = [useAnswer(one, by), useAnswer(other, by)];
+  const measure =
+    asked ?? (ofOne.data && ofOther.data ? tellingMeasure(ofOne.data, ofOther.data) : MEASURES[0]);
   const error = ofOne.error ?? ofOther.error;
   const isHidden = one.question === null || other.question === null;
   return (

@@ -12,6 +12,7 @@ import { GROUPINGS } from '../groups.ts';
 import type { DownstreamSearch } from '../search.ts';
 import { supposedChange } from '../supposed-change.ts';
 import { Leaning } from './leaning.tsx';
+import { NotAsked } from './not-asked.tsx';
 import { RealActs, type ActDialogs } from './real-acts.tsx';
 import { RecordedNotice } from './recorded-notice.tsx';
 import { WhatIfForm, type Asked } from './what-if-form.tsx';
@@ -51,17 +52,20 @@ interface DownstreamScreenProps {
 export function DownstreamScreen(props: DownstreamScreenProps) {
   const { subject, sub, answered, search, onChange, dialogs } = props;
   const [actSeq, setActSeq] = useState<number | null>(null);
+  const [isRefused, setRefused] = useState(false);
   const answer = useRef<HTMLDivElement>(null);
   const change = supposedChange(search, subject);
   const onOpen = (group: string | undefined) => onChange({ group });
   const asked = change && suppositionOf([change], search);
   const ask = (next: Asked) => {
     setActSeq(null);
+    setRefused(false);
     onChange({ ...next, sort: 'word' });
     // On a phone the answer stands above the form: it comes into sight, and is read out next.
     answer.current?.focus();
   };
   const leave = () => {
+    setRefused(false);
     onChange({ suppose: undefined, amount: undefined, sort: 'word' });
     answer.current?.focus();
   };
@@ -115,6 +119,7 @@ export function DownstreamScreen(props: DownstreamScreenProps) {
               asked={search}
               certificateNo={subject.revisionId === null ? null : subject.certificateNo}
               onAsk={ask}
+              onRefused={() => setRefused(true)}
               onLeave={leave}
               further={
                 <Link
@@ -125,7 +130,7 @@ export function DownstreamScreen(props: DownstreamScreenProps) {
                 </Link>
               }
             />
-            {asked && (
+            {asked && !isRefused && (
               <>
                 <RealActs asked={asked} dialogs={dialogs} onDone={done} />
                 <Suspense fallback={null}>
@@ -138,7 +143,9 @@ export function DownstreamScreen(props: DownstreamScreenProps) {
       >
         <div ref={answer} tabIndex={-1} className="outline-none">
           {actSeq !== null && <RecordedNotice actSeq={actSeq} />}
-          {asked ? (
+          {isRefused ? (
+            <NotAsked onFormer={() => setRefused(false)} />
+          ) : asked ? (
             <WhatIf
               changes={asked.changes}
               search={search}

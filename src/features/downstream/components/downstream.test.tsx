@@ -106,13 +106,14 @@ describe('WhatIfTable', () => {
 });
 
 describe('WhatIfForm', () => {
-  function showForm(asked = {}) {
+  function showForm(asked = {}, onRefused = vi.fn()) {
     const onAsk = vi.fn();
     render(
       <WhatIfForm
         asked={{ beyond: 10, ...asked } as Parameters<typeof WhatIfForm>[0]['asked']}
         certificateNo={null}
         onAsk={onAsk}
+        onRefused={onRefused}
         onLeave={() => undefined}
       />,
     );
@@ -128,10 +129,13 @@ describe('WhatIfForm', () => {
   });
 
   it('asks nothing without a unit, and says so', () => {
-    const onAsk = showForm();
+    const onRefused = vi.fn();
+    const onAsk = showForm({}, onRefused);
     fireEvent.change(screen.getByLabelText('Shift, with its unit'), { target: { value: '20' } });
     fireEvent.click(screen.getByRole('button', { name: 'Work it out' }));
     expect(screen.getByText(/Write the unit/)).toBeTruthy();
+    // The screen takes the former answer away, which is not this question's.
+    expect(onRefused).toHaveBeenCalledOnce();
     expect(onAsk).not.toHaveBeenCalled();
   });
 

@@ -15,6 +15,9 @@ import { useSaveDryRun } from '../api.ts';
 
 const Entry = z.object({ name: SaveDryRunBody.shape.name, laboratoryId: SaveDryRunBody.shape.laboratoryId });
 
+/** Beyond this many characters programs are known to cut an address; common practice, no source. */
+const LONGEST_ADDRESS = 1_500;
+
 /** Keeps the question of a dry run, to be opened again, shared by its address and compared. */
 export function KeepDryRun({ question }: { question: z.input<typeof DryRunQuestion> }) {
   const choices = keepersOf(usePerson());
@@ -34,6 +37,12 @@ export function KeepDryRun({ question }: { question: z.input<typeof DryRunQuesti
   const { errors } = form.formState;
   return (
     <Section title="Keep this dry run">
+      {location.href.length > LONGEST_ADDRESS && (
+        <Notice title="Its address is long">
+          Mail may cut an address of {location.href.length} characters. Keep the dry run and send the address
+          that it then has, which is short.
+        </Notice>
+      )}
       <form noValidate onSubmit={(event) => void submit(event)} className="flex flex-col gap-3">
         <TextField
           label="Name"

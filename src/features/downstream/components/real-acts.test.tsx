@@ -1,5 +1,5 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { fireEvent, render, screen } from '@testing-library/react';
+import { cleanup, fireEvent, render, screen } from '@testing-library/react';
 import { MemoryRouter } from 'react-router';
 import { describe, expect, it, vi } from 'vitest';
 import type { WhatIfChange, WhatIfResponse } from '#shared/contracts/downstream.ts';
@@ -121,6 +121,24 @@ describe('RealActs', () => {
     const change = new URL(link.getAttribute('href')!, 'http://x').searchParams.get('change');
     expect(JSON.parse(change!)).toEqual(NOTICE);
     expect(screen.getByText(/of all changes together/)).toBeTruthy();
+  });
+
+  it('corrects a value once by all that is supposed of it, and names the weights of two on one certificate', () => {
+    const correct = vi.fn(() => null);
+    const subject = valueSubject({ 'calibration:correct': true });
+    const further = { ...subject, uid: REVISION, registryNo: 'OI 0021' } as NamedSubject;
+    const other: WhatIfChange = { kind: 'shift', valueUid: REVISION, shift: '0.00001' };
+    show([SHIFT, SHIFT], [subject, subject], { dialogs: { withdraw: () => null, correct } });
+    fireEvent.click(screen.getByRole('button', { name: 'Correct certificate OI-24-002' }));
+    expect(correct).toHaveBeenLastCalledWith(
+      expect.objectContaining({ supposed: { deviation: '-0.000024', expandedU: '0.000039' } }),
+    );
+    cleanup();
+    show([SHIFT, other], [subject, further]);
+    expect(screen.getAllByRole('button').map((button) => button.textContent)).toEqual([
+      'Correct certificate OI-24-002 for OI 0020',
+      'Correct certificate OI-24-002 for OI 0021',
+    ]);
   });
 
   it('offers the notice to who signs for the institute alone', () => {

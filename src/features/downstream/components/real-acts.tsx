@@ -7,7 +7,7 @@ import { Section } from '#src/components/layout/page.tsx';
 import { Button, LinkButton } from '#src/components/ui/button.tsx';
 import { usePerson } from '#src/lib/session.ts';
 import { namedQuery, whatIfQuery, type Supposition } from '../api.ts';
-import { supposedCorrection, type SupposedCorrection } from '../supposed-correction.ts';
+import { supposedTogether, type SupposedCorrection } from '../supposed-correction.ts';
 
 type NamedValue = Extract<NamedSubject, { about: 'value' }>;
 
@@ -44,10 +44,7 @@ export function RealActs({ asked, dialogs, onDone }: RealActsProps) {
       role === 'signatory' && laboratory ? [laboratory.id] : [],
     ),
   );
-  const acts = asked.changes.flatMap((change, at) => {
-    const subject = named.data.subjects[at]!;
-    return isOpen(change, subject, signsFor) ? [{ change, subject, at }] : [];
-  });
+  const acts = actsOf(asked.changes, named.data.subjects, signsFor);
   const touches = <Touched total={answer.data.total} />;
   return (
     <Section title="The act itself">
@@ -63,9 +60,14 @@ export function RealActs({ asked, dialogs, onDone }: RealActsProps) {
             {asked.changes.length > 1 && ' The counts are of all changes together.'}
           </p>
           <ul className="flex flex-col gap-2 pt-1">
-            {acts.map(({ change, subject, at }) => (
-              <li key={at}>
-                <OneAct {...{ change, subject, dialogs, touches, onDone }} />
+            {acts.map(({ key, changes, subject }) => (
+              <li key={key}>
+                <OneAct
+                  {...{ changes, subject, dialogs, touches, onDone }}
+                  isOneOfSeveral={
+                    acts.filter((act) => certificateOf(act) === certificateOf({ subject })).length > 1
+                  }
+                />
               </li>
             ))}
           </ul>
@@ -73,6 +75,40 @@ export function RealActs({ asked, dialogs, onDone }: RealActsProps) {
       )}
     </Section>
   );
+}
+
+interface Act {
+  key: string;
+  changes: WhatIfChange[];
+  subject: NamedSubject;
+}
+
+/** One act for each value, certificate or notice, however many changes suppose something of it. */
+function actsOf(
+  changes: readonly WhatIfChange[],
+  subjects: readonly NamedSubject[],
+  signsFor: ReadonlySet<string>,
+): Act[] {
+  const acts = new Map<string, Act>();
+  for (const [at, change] of changes.entries()) {
+    const subject = subjects[at]!;
+    if (!isOpen(change, subject, signsFor)) continue;
+    const key = keyOf(change, at);
+    const act = acts.get(key) ?? { key, changes: [], subject };
+    acts.set(key, act);
+    act.changes.push(change);
+  }
+  return [...acts.values()];
+}
+
+function keyOf(change: WhatIfChange, at: number): string {
+  if (change.kind === 'notice') return `notice ${at}`;
+  return change.kind === 'withdraw' ? `withdraw ${change.revisionId}` : `correct ${change.valueUid}`;
+}
+
+/** The certificate that a correction is of: corrections of two values on it are told apart by their weights. */
+function certificateOf({ subject }: Pick<Act, 'subject'>): string | null {
+  return subject.about === 'value' ? subject.certificateNo : null;
 }
 
 function isOpen(change: WhatIfChange, subject: NamedSubject, signsFor: ReadonlySet<string>): boolean {
@@ -92,13 +128,15 @@ function Touched({ total: { count, words } }: { total: WhatIfResponse['total'] }
 }
 
 interface OneActProps extends Omit<RealActsProps, 'asked'> {
-  change: WhatIfChange;
+  changes: readonly WhatIfChange[];
   subject: NamedSubject;
   touches: ReactNode;
+  isOneOfSeveral: boolean;
 }
 
-function OneAct({ change, subject, dialogs, touches, onDone }: OneActProps) {
+function OneAct({ changes, subject, isOneOfSeveral, dialogs, touches, onDone }: OneActProps) {
   const [isAsked, setAsked] = useState(false);
+  const change = changes[0]!;
   if (change.kind === 'notice') {
     return <LinkButton to={paths.newNotice.href(change)}>Publish as a notice</LinkButton>;
   }
@@ -125,10 +163,13 @@ function OneAct({ change, subject, dialogs, touches, onDone }: OneActProps) {
   }
   if (subject.about !== 'value' || subject.revisionId === null) return null;
   const { revisionId } = subject;
-  const supposed = supposedCorrection(change, subject);
+  const supposed = supposedTogether(changes, subject);
   return (
     <>
-      <Button onClick={() => setAsked(true)}>Correct certificate {certificateNo}</Button>
+      <Button onClick={() => setAsked(true)}>
+        Correct certificate {certificateNo}
+        {isOneOfSeveral && ` for ${subject.registryNo}`}
+      </Button>
       {isAsked && dialogs.correct({ ...shared, revisionId, certificateNo, value: subject, supposed })}
     </>
   );

@@ -5,6 +5,7 @@ import { DecimalField } from '#src/components/ui/decimal-field.tsx';
 import { SelectField } from '#src/components/ui/select-field.tsx';
 import { groupDigits } from '#shared/numbers/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
+import { percentProblem } from '#src/lib/read-percent.ts';
 import { unitSymbol } from '#shared/numbers/quantity-text.ts';
 import { amountProblem, amountText, readAmount } from '../read-amount.ts';
 import type { DownstreamSearch, Suppose } from '../search.ts';
@@ -18,6 +19,8 @@ interface WhatIfFormProps {
   /** Null where the certificate is not this person's to open: then its withdrawal is not theirs to try. */
   certificateNo: string | null;
   onAsk: (asked: Asked) => void;
+  /** What is written cannot be asked. */
+  onRefused: () => void;
   /** Back to who leans on it. */
   onLeave: () => void;
   /** The way to a dry run of several changes. */
@@ -33,7 +36,7 @@ const SUPPOSITIONS: { value: Suppose; label: string }[] = [
 const LARGEST_BEYOND = 1000;
 
 /** Puts one supposition about the value; what it would do is worked out, and nothing is changed. */
-export function WhatIfForm({ asked, certificateNo, onAsk, onLeave, further }: WhatIfFormProps) {
+export function WhatIfForm({ asked, certificateNo, onAsk, onRefused, onLeave, further }: WhatIfFormProps) {
   const { decimalMark } = usePreferences();
   const [suppose, setSuppose] = useState(() => firstSupposition(asked, certificateNo));
   const [amount, setAmount] = useState(() => typedFrom(asked.amount, decimalMark));
@@ -43,12 +46,15 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave, further }: Wh
   const read = readAmount(amount, decimalMark);
   const problems = {
     amount: suppose === 'withdraw' ? undefined : amountProblem(read, suppose),
-    beyond: suppose === 'withdraw' ? undefined : beyondProblem(beyond),
+    beyond: suppose === 'withdraw' ? undefined : percentProblem(beyond, LARGEST_BEYOND),
   };
   const submit = (event: FormEvent) => {
     event.preventDefault();
     setJudged(true);
-    if (problems.amount || problems.beyond) return;
+    if (problems.amount || problems.beyond) {
+      onRefused();
+      return;
+    }
     const kept = suppose !== 'withdraw' && read.kind === 'amount' ? amountText(read.shown) : undefined;
     onAsk({
       suppose,
@@ -88,7 +94,7 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave, further }: Wh
             unit="% of U"
             value={beyond}
             onChange={setBeyond}
-            hint="10 % of U unless you say otherwise; a changed verdict is never below it"
+            hint="10 % of U unless you say otherwise; a changed verdict is never below it. For weights of others always 10 % of U"
             error={problems.beyond}
           />
         )}
@@ -111,12 +117,6 @@ export function WhatIfForm({ asked, certificateNo, onAsk, onLeave, further }: Wh
 /** A link may suppose a withdrawal that its reader may not try: then the form begins as it does for everyone. */
 function firstSupposition({ suppose = 'shift' }: Asked, certificateNo: string | null): Suppose {
   return suppose === 'withdraw' && certificateNo === null ? 'shift' : suppose;
-}
-
-function beyondProblem(text: string): string | undefined {
-  const percent = Number(text);
-  if (text !== '' && percent >= 0 && percent <= LARGEST_BEYOND) return undefined;
-  return `Write a part of U from 0 to ${LARGEST_BEYOND} %; received "${text}".`;
 }
 
 /** The address writes a point and a unit code; the field shows them as this reader writes. */

@@ -14,6 +14,7 @@ import type { WhatIfSearch } from '../what-if-search.ts';
 import { BeyondField } from './beyond-field.tsx';
 import { ChangeForm } from './change-form.tsx';
 import { ChangeText } from './change-text.tsx';
+import { NotAsked } from './not-asked.tsx';
 import { RealActs, type ActDialogs } from './real-acts.tsx';
 import { RecordedNotice } from './recorded-notice.tsx';
 import { WhatIf } from './what-if.tsx';
@@ -35,6 +36,7 @@ interface WhatIfScreenProps {
 export function WhatIfScreen({ search, onChange, dialogs }: WhatIfScreenProps) {
   const { changes } = search;
   const [actSeq, setActSeq] = useState<number | null>(null);
+  const [isRefused, setRefused] = useState(false);
   const queries = useQueryClient();
   const today = new Date().toISOString().slice(0, 10);
   const asked = suppositionOf(changes, search);
@@ -57,7 +59,11 @@ export function WhatIfScreen({ search, onChange, dialogs }: WhatIfScreenProps) {
           value={search.known ?? today}
           onDay={(next) => onChange({ known: next })}
         />
-        <BeyondField value={search.beyond} onChange={(beyond) => onChange({ beyond })} />
+        <BeyondField
+          value={search.beyond}
+          onChange={(beyond) => onChange({ beyond })}
+          onRefused={setRefused}
+        />
         <Switch
           label="Grouped by"
           value={search.by}
@@ -79,7 +85,7 @@ export function WhatIfScreen({ search, onChange, dialogs }: WhatIfScreenProps) {
                 />
               </Section>
             )}
-            {changes.length > 0 && (
+            {changes.length > 0 && !isRefused && (
               <>
                 <RealActs asked={asked} dialogs={dialogs} onDone={setActSeq} />
                 <Suspense fallback={null}>
@@ -96,6 +102,8 @@ export function WhatIfScreen({ search, onChange, dialogs }: WhatIfScreenProps) {
             What several changes together would do stands here: a value that shifts, a larger u, a certificate
             withdrawn, a notice. Suppose the first one beside.
           </EmptyState>
+        ) : isRefused ? (
+          <NotAsked onFormer={() => setRefused(false)} />
         ) : (
           <WhatIf
             changes={changes}
