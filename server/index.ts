@@ -59,8 +59,9 @@ async function stop(): Promise<void> {
   const drained = new Promise<void>((resolve) => server.close(() => resolve()));
   server.closeIdleConnections();
   const deadline = setTimeout(() => server.closeAllConnections(), DRAIN_MILLISECONDS);
+  const laidDown = audits.leave();
   await drained;
-  await audits.leave();
+  await laidDown;
   clearTimeout(deadline);
   app.close();
   await development?.close();

@@ -71,8 +71,8 @@ export function lockDataFolder(folder) {
     onBusy: (holder) => {
       if (holder !== undefined) {
         throw new BootError(
-          `Process ${holder} already uses the data folder ${folder}.`,
-          'Stop it, or give this one a folder of its own: DATA_DIR=.data-2 PORT=4001 npm start',
+          `Process ${holder} already uses the data folder ${folder}, or is just stopping.`,
+          'Where it was just stopped, try again in a few seconds. Else stop it, or give this one a folder of its own: DATA_DIR=.data-2 PORT=4001 npm start',
         );
       }
       say('- Waiting for a database of an earlier run to stop ...');

@@ -5,6 +5,7 @@ import { readRow, readRows } from '#server/db/read.ts';
 import { withdrawCalibration } from '#server/modules/calibrations/index.ts';
 import { chainOf, storeOf } from '#server/modules/chains/index.ts';
 import { addJob, auditJob, stopJob } from '#server/modules/audits/audit-job.queries.ts';
+import { AuditRunner } from '#server/modules/audits/audit-runner.ts';
 import { auditRunnerOf } from '#server/modules/audits/index.ts';
 import { performAudit } from '#server/modules/audits/perform-audit.ts';
 import { storeAudit } from '#server/modules/audits/store-audit.service.ts';
@@ -167,7 +168,7 @@ describe('an audit of a laboratory', () => {
   it('is of the day asked about, as known on the knowledge day', async () => {
     const before = await audited(agent, { ...ofHome, day: '2025-06-01' });
     expect(before.result).toMatchObject({ chains: 1, values: 3 });
-    const unknown = await audited(agent, { ...ofHome, known: '2020-01-01' });
+    const unknown = await audited(agent, { ...ofHome, known: '2023-01-10' });
     expect(unknown.result).toMatchObject({ chains: 0, values: 0, findings: 0, counts: [] });
     const tomorrow = new Date(Date.now() + 2 * 86_400_000).toISOString().slice(0, 10);
     const refused = await agent.post('/api/audits').send({ ...ofHome, known: tomorrow });
@@ -385,6 +386,34 @@ describe('the queue', () => {
     expect(given).toMatchObject({ state: 'failed', message: expect.stringContaining('3 times') });
   });
 
+  it('answers a question asked twice with the audit under way, and asks anew once that has ended', async () => {
+    await runner.idle();
+    const [one, two] = await Promise.all([1, 2].map(() => agent.post('/api/audits').send(ofHome)));
+    expect([one!.status, two!.status]).toEqual([201, 201]);
+    expect(two!.body.id).toBe(one!.body.id);
+    const done = await finished(agent, one!.body.id as string);
+    const repeats = await Promise.all([1, 2].map(() => agent.post(`/api/audits/${done.id}/repeat`)));
+    expect(repeats[0]!.body.id).toBe(repeats[1]!.body.id);
+    expect(repeats[0]!.body.id).not.toBe(done.id);
+    await runner.idle();
+    expect((await audited(agent, ofHome)).id).not.toBe(done.id);
+  });
+
+  it('goes back into the queue when the server is told to end, and does not count as an attempt', async () => {
+    const first = await audited(agent, ofHome);
+    const id = randomUUID();
+    await addJob(app.context(), { ...(await auditJob(app.database, first.id))!, id, repeatOf: null });
+    const leaving = new AuditRunner(app.database, app.context().clock);
+    leaving.wake();
+    await leaving.leave();
+    expect(await auditJob(app.database, id)).toMatchObject({
+      state: 'waiting',
+      attempts: 0,
+      message: expect.stringContaining('begins again'),
+    });
+    expect((await finished(agent, id)).state).toBe('done');
+  });
+
   it('keeps nothing of an audit that is stopped while it runs', async () => {
     const first = await audited(agent, ofHome);
     const job = (await auditJob(app.database, first.id))!;
@@ -439,6 +468,16 @@ describe('what an audit is found by', () => {
     const stranger = await app.signIn(await makePerson(app, 'metrologist', network.other.id));
     expect((await stranger.get('/api/chains').query({ failing: '1' })).body.values).toEqual([]);
     expect((await stranger.get('/api/desk')).body.audits).toEqual([]);
+  });
+
+  it.each([
+    ['day', '0001-01-01', 'The earliest certificate'],
+    ['known', '0001-01-01', 'The earliest certificate'],
+    ['day', '9999-12-31', 'more than 50 years ahead'],
+  ])('refuses %s %s, of which the register can say nothing', async (field, day, words) => {
+    const reply = await agent.post('/api/audits').send({ ...ofHome, [field]: day });
+    expect([reply.status, Object.keys(reply.body.fields as object)]).toEqual([422, [field]]);
+    expect(reply.body.fields[field].message).toContain(words);
   });
 
   it('refuses what it cannot read, each by its field', async () => {

@@ -30,6 +30,23 @@ export function auditJob(database: Sequelize, id: string): Promise<AuditJob | nu
   return readRow<AuditJob>(database, `${JOB} WHERE id = :id`, { id });
 }
 
+/** The job of the same person that asks the same of the same knowledge and is still to end; null where there is none. */
+export async function sameJobUnderWay(
+  database: Sequelize,
+  job: Pick<AuditJob, 'repeatOf' | 'askedBy'> & AuditQuestion,
+): Promise<string | null> {
+  const same = await readRow<{ id: string }>(
+    database,
+    `SELECT id FROM audit_job
+     WHERE state IN ('waiting', 'running') AND asked_by = :askedBy AND scope = :scope AND value_uid <=> :valueUid
+       AND laboratory_id <=> :laboratoryId AND day = :day AND known = :known AND as_of_act = :asOfAct
+       AND repeat_of <=> :repeatOf
+     ORDER BY asked_at, id LIMIT 1`,
+    { ...job },
+  );
+  return same?.id ?? null;
+}
+
 /** Puts a question in the queue. */
 export async function addJob(
   { database, clock }: Pick<Context, 'database' | 'clock'>,
@@ -96,11 +113,22 @@ export async function reportProgress(
   return changed === 1;
 }
 
+/** Puts a job back in the queue, where it is still this process's to do. */
+export async function handBack(database: Sequelize, id: string, runner: string): Promise<void> {
+  await change(
+    database,
+    `UPDATE audit_job SET state = 'waiting', done = 0, runner = NULL, heartbeat = NULL, attempts = attempts - 1,
+       message = 'The server was stopped while it worked on this; it begins again.'
+     WHERE id = :id AND runner = :runner AND state = 'running'`,
+    { id, runner },
+  );
+}
+
 /** Ends a running job. @returns false where it was stopped meanwhile */
 export async function closeJob(
   { database }: Pick<Context, 'database'>,
   { id }: Pick<AuditJob, 'id'>,
-  state: 'done' | 'failed' | 'waiting',
+  state: 'done' | 'failed',
   message: string | null,
 ): Promise<boolean> {
   const changed = await change(

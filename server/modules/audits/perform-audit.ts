@@ -44,25 +44,28 @@ export type Finding = Omit<FindingRow, 'run_id'>;
  * Judges every step of the chains asked about once, and every chain as a whole. What fails or cannot be judged is kept
  * with the facts the rule saw; the rest is counted.
  * @param onProgress told after each batch; false ends the work
+ * @param signal ends the work between two chains
  * @returns null where it was ended
  */
 export async function performAudit(
   database: Sequelize,
   question: AuditQuestion,
   onProgress: (done: number, total: number) => Promise<boolean>,
+  signal?: AbortSignal,
 ): Promise<PerformedAudit | null> {
   const total = await focusCount(database, question);
   const audit = new Audit(question);
   const breath = new Breath();
   const { store, steps } = await ownMemory(database, question);
   let done = 0;
-  if (!(await onProgress(0, total))) return null;
+  if (signal?.aborted || !(await onProgress(0, total))) return null;
   for await (const ids of focusIds(database, question)) {
     for (let from = 0; from < ids.length; from += BATCH) {
       const batch = await chainBatch(store, steps, ids.slice(from, from + BATCH));
       for (const focus of batch.focuses) {
         audit.chain(focus, batch.valuesOf(focus), batch.factsOf(focus), steps);
         await breath.taken();
+        if (signal?.aborted) return null;
       }
       done += batch.focuses.length;
       if (!(await onProgress(done, total))) return null;

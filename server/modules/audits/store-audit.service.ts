@@ -15,18 +15,23 @@ const ROWS = 500;
 /**
  * Records a finished audit: its findings, what the rules saw, and the run that binds them by digest, as one act. The
  * many rows are written before the act begins, in the same transaction, so that other acts wait for the run alone.
- * @returns false where the job was stopped meanwhile: then nothing is kept
+ * @param signal ends the work
+ * @returns false where the job was stopped or the work ended meanwhile: then nothing is kept
  */
 export async function storeAudit(
   context: Context,
   job: AuditJob,
   performed: PerformedAudit,
   beganAt: Date,
+  signal?: AbortSignal,
 ): Promise<boolean> {
   const stopped = new Error('The audit was stopped while it was stored');
   try {
     await inTransaction(context.database, async () => {
-      const written = await writeRows(context.database, job.id, performed);
+      const refuseIfEnded = () => {
+        if (signal?.aborted) throw stopped;
+      };
+      const written = await writeRows(context.database, job.id, performed, refuseIfEnded);
       await recordRun(context, job, performed, beganAt, written);
       if (!(await closeJob(context, job, 'done', null))) throw stopped;
     });
@@ -44,10 +49,12 @@ async function writeRows(
   database: Sequelize,
   runId: string,
   { findings, facts }: PerformedAudit,
+  refuseIfEnded: () => void,
 ): Promise<Written> {
   const written: Written = new Map();
   const write = async (table: string, columns: readonly ColumnShape[], rows: Record<string, unknown>[]) => {
     if (rows.length === 0) return;
+    refuseIfEnded();
     await database.getQueryInterface().bulkInsert(table, rows);
     const digests = written.get(table) ?? [];
     for (const row of rows) digests.push(rowSha256(columns, row));

@@ -1,3 +1,5 @@
+import { countText } from '#shared/numbers/count-text.ts';
+
 interface WaitingProps {
   /** What is being fetched or worked out, as a phrase: "Reading the chain". */
   children: string;
@@ -17,10 +19,12 @@ interface ProgressProps {
   label: string;
   done: number;
   total: number;
+  /** How far it is, in words of its own. */
+  says?: string;
 }
 
 /** How far long work has come, in numbers and as a line. */
-export function Progress({ label, done, total }: ProgressProps) {
+export function Progress({ label, done, total, says }: ProgressProps) {
   const share = total > 0 ? Math.min(1, done / total) : 0;
   return (
     <div
@@ -29,10 +33,11 @@ export function Progress({ label, done, total }: ProgressProps) {
       aria-valuemin={0}
       aria-valuemax={total}
       aria-valuenow={done}
+      aria-valuetext={says}
       className="flex flex-col gap-1"
     >
       <p className="text-ink-2">
-        {label}: {done} of {total}
+        {label}: {says ?? `${countText(done)} of ${countText(total)}`}
       </p>
       <div className="h-0.5 bg-rule">
         <div className="h-full bg-brass" style={{ width: `${share * 100}%` }} />

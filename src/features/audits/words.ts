@@ -1,4 +1,5 @@
 import type { AuditFigures, AuditSummary } from '#shared/contracts/audits.ts';
+import { countText } from '#shared/numbers/count-text.ts';
 import { SEVERITIES, severityWord } from '#shared/severity-words.ts';
 
 /** What an audit is of. */
@@ -16,5 +17,13 @@ export function failingCount(figures: AuditFigures): number {
 /** Failing findings in words, the gravest first: "2 critical, 1 minor". */
 export function failingText(figures: AuditFigures): string {
   const parts = SEVERITIES.filter((severity) => figures[severity] > 0);
-  return parts.map((severity) => `${figures[severity]} ${severityWord(severity)}`).join(', ');
+  return parts.map((severity) => `${countText(figures[severity])} ${severityWord(severity)}`).join(', ');
+}
+
+/** How far a running audit is: what comes before the first chain and after the last has its own words. */
+export function progressText({ done, total }: Pick<AuditSummary, 'done' | 'total'>): string {
+  if (!total) return 'reading the register';
+  if (done === 0) return `judging the first of ${countText(total)} chains`;
+  if (done >= total) return 'recording what was found';
+  return `${countText(done)} of ${countText(total)} chains judged`;
 }

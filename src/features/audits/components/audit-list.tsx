@@ -1,4 +1,5 @@
 import { useSuspenseInfiniteQuery } from '@tanstack/react-query';
+import { countText } from '#shared/numbers/count-text.ts';
 import { paths } from '#src/app/paths.ts';
 import { Page } from '#src/components/layout/page.tsx';
 import { Button, LinkButton } from '#src/components/ui/button.tsx';
@@ -60,7 +61,7 @@ export function AuditList({ onAsked }: { onAsked: (auditId: string) => void }) {
                 <Cell>
                   <AuditState audit={audit} />
                 </Cell>
-                <Cell align="right">{audit.figures?.notJudged}</Cell>
+                <Cell align="right">{audit.figures && countText(audit.figures.notJudged)}</Cell>
               </Row>
             ))}
           </tbody>

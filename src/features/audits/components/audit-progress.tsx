@@ -5,6 +5,7 @@ import { Notice } from '#src/components/ui/notice.tsx';
 import { Progress } from '#src/components/ui/progress.tsx';
 import { can } from '#src/lib/abilities.ts';
 import { useStopAudit } from '../api.ts';
+import { progressText } from '../words.ts';
 
 /** How far an audit is, or why it ended without a result. */
 export function AuditProgress({ audit }: { audit: AuditResponse }) {
@@ -26,7 +27,7 @@ export function AuditProgress({ audit }: { audit: AuditResponse }) {
         </p>
       ) : (
         <div className="w-full">
-          <Progress label="Chains judged" done={audit.done} total={audit.total ?? 0} />
+          <Progress label="The audit" done={audit.done} total={audit.total ?? 0} says={progressText(audit)} />
         </div>
       )}
       {audit.message && <p className="text-ink-2">{audit.message}</p>}

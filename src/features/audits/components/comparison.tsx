@@ -1,6 +1,7 @@
 import { Link } from 'react-router';
 import type { z } from 'zod';
 import type { AuditComparison } from '#shared/contracts/audits.ts';
+import { countText } from '#shared/numbers/count-text.ts';
 import { severityWord } from '#shared/severity-words.ts';
 import { paths } from '#src/app/paths.ts';
 import { Notice } from '#src/components/ui/notice.tsx';
@@ -79,7 +80,7 @@ function Differences({ comparison }: { comparison: Compared }) {
         </tbody>
       </Table>
       {differenceCount > differences.length && (
-        <p className="text-ink-3">{`The first ${differences.length} of ${differenceCount}.`}</p>
+        <p className="text-ink-3">{`The first ${differences.length} of ${countText(differenceCount)}.`}</p>
       )}
     </>
   );

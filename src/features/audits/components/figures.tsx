@@ -3,7 +3,7 @@ import type { AuditResult } from '#shared/contracts/audits.ts';
 import { Facts } from '#src/components/layout/facts.tsx';
 import { Section } from '#src/components/layout/page.tsx';
 import { StateMark } from '#src/components/ui/state-mark.tsx';
-import { formatDecimal } from '#shared/numbers/format-decimal.ts';
+import { countText } from '#shared/numbers/count-text.ts';
 import { stateOfOutcome } from '#shared/states.ts';
 import { SEVERITIES, severityWord } from '#shared/severity-words.ts';
 
@@ -16,7 +16,6 @@ export function Figures({ result }: { result: z.infer<typeof AuditResult> }) {
     count: sum(counts.filter((count) => count.outcome === 'fails' && count.severity === severity)),
   }));
   const of = (outcome: string) => sum(counts.filter((count) => count.outcome === outcome));
-  const number = (value: number) => formatDecimal(String(value));
   return (
     <Section title="Found">
       <Facts
@@ -29,30 +28,30 @@ export function Figures({ result }: { result: z.infer<typeof AuditResult> }) {
                   <StateMark key={severity} state={stateOfOutcome('fails', severity)}>
                     {`fails, ${severityWord(severity)}`}
                   </StateMark>,
-                  number(count),
+                  countText(count),
                 ] as const,
             ),
           [
             <StateMark key="n" state="not judged">
               cannot be judged
             </StateMark>,
-            number(of('cannot be judged')),
+            countText(of('cannot be judged')),
           ],
           [
             <StateMark key="h" state="sound">
               holds
             </StateMark>,
-            number(of('holds')),
+            countText(of('holds')),
           ],
           [
             <StateMark key="a" state="does not apply">
               does not apply
             </StateMark>,
-            number(of('does not apply')),
+            countText(of('does not apply')),
           ],
-          ['Chains', number(result.chains)],
-          ['Values judged', number(result.values)],
-          ['Links judged', number(result.links)],
+          ['Chains', countText(result.chains)],
+          ['Values judged', countText(result.values)],
+          ['Links judged', countText(result.links)],
         ]}
       />
     </Section>

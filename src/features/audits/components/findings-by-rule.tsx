@@ -2,7 +2,7 @@ import { useInfiniteQuery } from '@tanstack/react-query';
 import type { z } from 'zod';
 import type { AuditFindingGroup, AuditResult } from '#shared/contracts/audits.ts';
 import { groupBy } from '#shared/group-by.ts';
-import { formatDecimal } from '#shared/numbers/format-decimal.ts';
+import { countText } from '#shared/numbers/count-text.ts';
 import { stateOfOutcome } from '#shared/states.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
@@ -54,7 +54,7 @@ export function FindingsByRule({ auditId, days, result, search, onChange, hasOwn
       {!data && !error && <Waiting>Reading the findings</Waiting>}
       {found > result.findings && (
         <p className="text-ink-2">
-          {`Not all that cannot be judged is listed: ${formatDecimal(String(found - result.findings))} findings are counted only.`}
+          {`Not all that cannot be judged is listed: ${countText(found - result.findings)} findings are counted only.`}
         </p>
       )}
       {data && rules.length === 0 && (
@@ -116,10 +116,10 @@ function RuleLine({ rule, groups, isOpen, onToggle }: RuleLineProps) {
           .filter(({ outcome }) => outcome === 'fails')
           .map(({ severity, count }) => (
             <StateMark key={severity} state={stateOfOutcome('fails', severity)}>
-              {`${count} ${severityWord(severity)}`}
+              {`${countText(count)} ${severityWord(severity)}`}
             </StateMark>
           ))}
-        {notJudged > 0 && <StateMark state="not judged">{`${notJudged} not judged`}</StateMark>}
+        {notJudged > 0 && <StateMark state="not judged">{`${countText(notJudged)} not judged`}</StateMark>}
       </span>
     </button>
   );

@@ -2,6 +2,7 @@ import { useInfiniteQuery } from '@tanstack/react-query';
 import { Link } from 'react-router';
 import type { z } from 'zod';
 import type { AuditFinding, AuditResult } from '#shared/contracts/audits.ts';
+import { countText } from '#shared/numbers/count-text.ts';
 import { mendingOf } from '#shared/rules/mending.ts';
 import { fillSentence } from '#shared/rules/sentence.ts';
 import { stateOfOutcome } from '#shared/states.ts';
@@ -46,7 +47,7 @@ export function RuleFindings({ auditId, days, rule, filter }: RuleFindingsProps)
           <Button isBusy={isFetchingNextPage} onClick={() => void fetchNextPage()}>
             Show more
           </Button>{' '}
-          <span className="text-ink-3">{`${findings.length} of ${data.pages[0]!.total}`}</span>
+          <span className="text-ink-3">{`${countText(findings.length)} of ${countText(data.pages[0]!.total)}`}</span>
         </p>
       )}
     </>

@@ -57,7 +57,7 @@ export function ChainChooser({ q, isFailing, onSearch, hrefOf, actions }: ChainC
         <EmptyState action={<LinkButton to={paths.audits.href()}>Go to the audits</LinkButton>}>
           {q
             ? `No value of a weight whose number begins with "${q}" fails in the newest audit.`
-            : 'No value of yours fails in the newest audit of its laboratory, or none was made yet.'}
+            : 'No value that you hold or issued fails in the newest audit of your laboratory, or none was made yet.'}
         </EmptyState>
       )}
       {data?.values.length === 0 && !isFailing && (
@@ -68,7 +68,13 @@ export function ChainChooser({ q, isFailing, onSearch, hrefOf, actions }: ChainC
         </EmptyState>
       )}
       {data && data.values.length > 0 && (
-        <Table caption={isFailing ? 'Values that fail in the newest audit' : 'Values in force'}>
+        <Table
+          caption={
+            isFailing
+              ? 'Values held or issued by your laboratory that fail in its newest audit'
+              : 'Values in force'
+          }
+        >
           <thead>
             <tr>
               <Head>Weight</Head>
