@@ -151,6 +151,13 @@ describe('GET /api/calibrations/:revisionId', () => {
 
   it('names the later certificate of a weight that stands beside it, to the holder alone', async () => {
     const { id } = await makeStandard(app, holder.id);
+    const laboratoryId = institute.id;
+    await assertFact(app.context(), {
+      standardId: id,
+      kind: 'custodian',
+      laboratoryId,
+      validFrom: '2024-01-01',
+    });
     const first = await makeCalibration(app, institute.id, '2024-06-12', [lineOf(id)]);
     const second = await makeCalibration(app, institute.id, '2025-06-12', [lineOf(id)]);
     const newerOn = async (agent: supertest.Agent, revisionId: string) =>
