@@ -52,7 +52,9 @@ export const DistanceResponse = z.object({
      */
     expandedUToday: z.number().nullable(),
     textToday: z.string().nullable(),
-    until: z.array(z.object({ class: WeightClass, last: Day.nullable() })),
+    until: z.array(z.object({ class: WeightClass, last: Day.nullable(), isPast: z.boolean() })),
+    /** What stands against relying on it, in sentences: a certificate above it withdrawn, a value that its drift counts doubted. */
+    reserves: z.array(z.string()),
   }),
 });
 export type DistanceResponse = z.infer<typeof DistanceResponse>;

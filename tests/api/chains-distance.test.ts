@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { describe, expect, it } from 'vitest';
 import type { DistanceResponse } from '#shared/contracts/distance.ts';
+import { withdrawCalibration } from '#server/modules/calibrations/index.ts';
 import type { TogetherResponse } from '#shared/contracts/together.ts';
 import {
   inputOf,
@@ -13,6 +14,7 @@ import { issueValue, makeDownstreamScene, type DownstreamScene } from '#tests/su
 import { testApp } from '#tests/support/test-app.ts';
 
 const app = await testApp();
+const today = new Date().toISOString().slice(0, 10);
 const scene = await makeDownstreamScene(app);
 const { root, working, homes, others } = scene;
 type Who = keyof DownstreamScene['people'];
@@ -128,6 +130,31 @@ describe('GET /api/chains/:valueUid/distance', () => {
     expect(last.E2! > last.E1!).toBe(true);
     expect(last.M3).toBeNull();
     expect(reach.expandedUToday!).toBeGreaterThan(reach.bestExpandedU!);
+    expect(reach.until.every(({ last, isPast }) => isPast === (last !== null && last < today))).toBe(true);
+    expect(reach.reserves).toEqual([]);
+  });
+
+  it('has a reserve where the drift counts a value whose sign does not fit the others', async () => {
+    const parts = { issuer: scene.home, holder: scene.home, expandedU: '0.00001', leansOn: null };
+    const first = await issueValue(app, { ...parts, day: '2020-01-01', deviation: '0.0003' });
+    const further = { ...parts, standardId: first.standardId };
+    await issueValue(app, { ...further, day: '2021-01-01', deviation: '-0.0003' });
+    const { uid } = await issueValue(app, { ...further, day: '2022-01-01', deviation: '0.0003' });
+    const { reach } = await ask('home', uid);
+    expect(reach.reserves).toEqual([expect.stringContaining('(B-17)')]);
+  });
+
+  it('has a reserve where what it rests on was withdrawn', async () => {
+    const parts = { issuer: scene.home, holder: scene.home, expandedU: '0.0003', deviation: '0.0001' };
+    const above = await issueValue(app, { ...parts, day: '2023-01-01', leansOn: null });
+    const { uid } = await issueValue(app, { ...parts, day: '2023-02-01', leansOn: above.uid });
+    expect((await ask('home', uid)).reach.reserves).toEqual([]);
+    await withdrawCalibration(app.context(), above.revisionId, {
+      reason: 'The balance was found faulty',
+      effectiveOn: '2023-03-01',
+    });
+    expect((await ask('home', uid)).reach.reserves).toEqual([expect.stringContaining('withdrawn since')]);
+    expect((await ask('home', above.uid)).reach.reserves[0]).toContain('itself withdrawn');
   });
 });
 

@@ -12,6 +12,7 @@ import {
   type StoredValue,
 } from '#server/modules/chains/index.ts';
 import { reachOf } from './reach.service.ts';
+import { withdrawnAbove } from './withdrawn-above.queries.ts';
 import { shortText } from './short-text.ts';
 
 const MILLIGRAMS_PER_GRAM = 1000;
@@ -62,6 +63,7 @@ export async function distanceOf(
     reach: await reachOf(context, focus, {
       u: variance === null ? focus.uStated : Math.sqrt(variance),
       isHistorySeen,
+      reserves: await withdrawnAbove(context, focus, closure.values),
     }),
   };
 }

@@ -1,15 +1,21 @@
 import type { DistanceResponse } from '#shared/contracts/distance.ts';
 import { Decimal } from '#shared/decimal.ts';
 import { EngineError } from '#shared/engine/errors.ts';
+import { isSignOdd } from '#shared/rules/odd-one-out.ts';
 import { predictValue } from '#shared/engine/time/predict-value.ts';
 import { readRow, readRows } from '#server/db/read.ts';
 import { today, type Context } from '#server/http/context.ts';
-import { chainNumbers, storeOf, type StoredValue } from '#server/modules/chains/index.ts';
+import { chainNumbers, storeOf, type Closure, type StoredValue } from '#server/modules/chains/index.ts';
 
 /** How a weight drifts, or why that is not known. */
 export type KnownDrift =
-  | { drift: NonNullable<DistanceResponse['reach']['drift']>; because: null }
-  | { drift: null; because: string };
+  | {
+      drift: NonNullable<DistanceResponse['reach']['drift']>;
+      because: null;
+      /** Certificates whose value it counts although its sign does not fit the others. */
+      doubted: string[];
+    }
+  | { drift: null; because: string; doubted: [] };
 
 interface Point {
   id: number;
@@ -32,7 +38,11 @@ export async function driftOf(context: Context, focus: StoredValue): Promise<Kno
     { standardId: focus.standardId },
   );
   if (declared) {
-    return { drift: { perYear: 0, u: declared.u, from: 'declared rate', calibrations: 0 }, because: null };
+    return {
+      drift: { perYear: 0, u: declared.u, from: 'declared rate', calibrations: 0 },
+      because: null,
+      doubted: [],
+    };
   }
   const points = (await pointsOf(context, focus)).filter((point) => point.u !== null);
   const days = new Set(points.map((point) => point.performedEnd));
@@ -40,6 +50,7 @@ export async function driftOf(context: Context, focus: StoredValue): Promise<Kno
     return {
       drift: null,
       because: 'No drift known: its epoch holds fewer than two calibrations that stand.',
+      doubted: [],
     };
   }
   const history = points.map(({ deviation, performedEnd, u }) => ({
@@ -48,7 +59,8 @@ export async function driftOf(context: Context, focus: StoredValue): Promise<Kno
     standardUncertainty: u!,
   }));
   try {
-    const covariance = await covarianceOf(context, points);
+    const closure = await storeOf(context.database).closure(points.map((point) => point.id));
+    const covariance = covarianceOf(closure, points);
     const fit = predictValue(history, focus.performedEnd, covariance ? { covariance } : {});
     const { slope, slopeUncertainty } = fit;
     const drift = {
@@ -57,10 +69,12 @@ export async function driftOf(context: Context, focus: StoredValue): Promise<Kno
       from: 'calibrations',
       calibrations: points.length,
     } as const;
-    return { drift, because: null };
+    const counted = new Set(points.map((point) => point.id));
+    const values = closure.values.filter((value) => counted.has(value.id));
+    return { drift, because: null, doubted: doubtedOf(values) };
   } catch (error) {
     if (!(error instanceof EngineError)) throw error;
-    return { drift: null, because: 'No drift known: its calibrations do not give a line.' };
+    return { drift: null, because: 'No drift known: its calibrations do not give a line.', doubted: [] };
   }
 }
 
@@ -85,10 +99,20 @@ async function pointsOf(context: Context, focus: StoredValue): Promise<Point[]> 
   );
 }
 
+/** Certificates whose value is the odd one by its sign (B-17). */
+function doubtedOf(values: readonly StoredValue[]): string[] {
+  return values
+    .filter((value) => {
+      const others = values.filter(({ id }) => id !== value.id);
+      const earlier = others.filter(({ performedEnd }) => performedEnd <= value.performedEnd);
+      const later = others.filter(({ performedEnd }) => performedEnd > value.performedEnd);
+      return isSignOdd(value, earlier, later);
+    })
+    .map(({ certificateNo }) => certificateNo);
+}
+
 /** Covariance of the calibrations through what they share; null where some of it is not known. */
-async function covarianceOf(context: Context, points: readonly Point[]): Promise<number[][] | null> {
-  const store = storeOf(context.database);
-  const closure = await store.closure(points.map((point) => point.id));
+function covarianceOf(closure: Closure, points: readonly Point[]): number[][] | null {
   const numbers = chainNumbers(closure, points[0]!.uid);
   const entries = points.map((one) =>
     points.map((other) =>

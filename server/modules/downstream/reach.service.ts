@@ -20,14 +20,18 @@ type Reach = DistanceResponse['reach'];
  * What a value can still carry as a reference: a weight of the same nominal, weighed against it without any
  * uncertainty of its own, on the day of its calibration and, where its drift is known, on later ones.
  * @param u standard uncertainty of the value, g; null where unknown
+ * @param reserves what is known against what it rests on, in sentences
  * @param isHistorySeen whether this person sees the weight's other calibrations
  */
 export async function reachOf(
   context: Context,
   focus: StoredValue,
-  { u, isHistorySeen }: { u: number | null; isHistorySeen: boolean },
+  { u, isHistorySeen, reserves }: { u: number | null; isHistorySeen: boolean; reserves: string[] },
 ): Promise<Reach> {
-  const nothing = { bestExpandedU: null, bestText: null, classes: [], expandedUToday: null, textToday: null };
+  const nothing = {
+    ...{ bestExpandedU: null, bestText: null, classes: [], expandedUToday: null, textToday: null },
+    reserves,
+  };
   if (u === null) {
     return { ...nothing, drift: null, driftBecause: 'Its uncertainty is not known.', until: [] };
   }
@@ -36,17 +40,19 @@ export async function reachOf(
   const classes = reachableClasses(nominal, best * MILLIGRAMS_PER_GRAM);
   const atCalibration = { bestExpandedU: best, bestText: shortText(best, 'up'), classes };
   // A drift tells of the weight's other calibrations: those are its holder's.
-  const { drift, because } = isHistorySeen
+  const { drift, because, doubted } = isHistorySeen
     ? await driftOf(context, focus)
-    : { drift: null, because: 'Its drift is told to its holder.' };
+    : { drift: null, because: 'Its drift is told to its holder.', doubted: [] };
   if (!drift) {
     return { ...nothing, ...atCalibration, drift: null, driftBecause: because, until: [] };
   }
   const ageing: Ageing = { u, rate: drift.perYear, rateU: drift.u };
   const begin = dayNumber(focus.performedEnd, 'performedEnd');
   const now = expandedUAfter(ageing, Math.max(0, dayNumber(today(context), 'day') - begin));
+  const day = today(context);
   return {
     ...atCalibration,
+    reserves: [...reserves, ...doubtWords(doubted)],
     drift,
     driftBecause: null,
     expandedUToday: now,
@@ -56,9 +62,18 @@ export async function reachOf(
         .div(3 * MILLIGRAMS_PER_GRAM)
         .toNumber();
       const days = lastDayWithin(ageing, third);
-      return { class: each, last: days === null ? null : dayText(begin + days) };
+      const last = days === null ? null : dayText(begin + days);
+      return { class: each, last, isPast: last !== null && last < day };
     }),
   };
+}
+
+function doubtWords(doubted: readonly string[]): string[] {
+  if (doubted.length === 0) return [];
+  const certificates = doubted.join(', ');
+  return [
+    `Its drift counts the value of certificate ${certificates}, whose sign does not fit the others (B-17): it may be far less.`,
+  ];
 }
 
 function dayText(day: number): string {

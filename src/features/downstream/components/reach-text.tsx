@@ -9,7 +9,7 @@ type Reach = DistanceResponse['reach'];
 
 /** What a value can still carry as a reference: which classes, and until which day where its drift is known. */
 export function ReachText({ reach }: { reach: Reach }) {
-  const { bestText, textToday, classes, drift, driftBecause, until } = reach;
+  const { bestText, textToday, classes, drift, driftBecause, until, reserves } = reach;
   if (bestText === null) return null;
   return (
     <Section title="What it can carry as a reference">
@@ -18,6 +18,11 @@ export function ReachText({ reach }: { reach: Reach }) {
         {textToday !== null && textToday !== bestText && `, of ${textToday} if it is used today`}
         {classes.length > 0 ? '.' : ': too much for any class of its nominal.'}
       </p>
+      {reserves.map((reserve) => (
+        <p key={reserve} className="text-caution">
+          {reserve}
+        </p>
+      ))}
       {drift ? (
         <>
           <p className="text-ink-2">
@@ -37,6 +42,7 @@ export function ReachText({ reach }: { reach: Reach }) {
                   <Row key={row.class}>
                     <Cell isHeading>{row.class}</Cell>
                     <Cell align="right">
+                      {row.isPast && 'passed on '}
                       {row.last === null ? 'more than 50 years' : <DateText value={row.last} />}
                     </Cell>
                   </Row>
