@@ -60,13 +60,14 @@ function Peek({ calibration, lines }: CalibrationResponse) {
           </tr>
         </thead>
         <tbody>
-          {lines.map(({ uid, standard, deviation, expandedU, k }) => (
+          {lines.map(({ uid, standard, quantity, deviation, expandedU, k }) => (
             <Row key={uid}>
               <Cell isHeading>
                 <Link to={paths.standard.href(standard.id)} className="hover:underline">
                   <span className="font-mono text-sm">{standard.registryNo}</span>
                 </Link>
                 <span className="ml-2 whitespace-nowrap text-ink-2">{standard.marking}</span>
+                <span className="block text-sm whitespace-nowrap text-ink-2">{quantity}</span>
               </Cell>
               <Cell align="right">
                 <Quantity
