@@ -15,9 +15,9 @@ const CorrectDialog = lazy(() =>
 
 /** The dialogs of the calibrations in which a dry run becomes an act. */
 export const ACT_DIALOGS: ActDialogs = {
-  withdraw: ({ revisionId, certificateNo, values, ...rest }) => (
+  withdraw: ({ revisionId, certificateNo, issuer, values, ...rest }) => (
     <Suspense fallback={null}>
-      <WithdrawDialog calibration={{ revisionId, certificateNo }} weights={values} {...rest} />
+      <WithdrawDialog calibration={{ revisionId, certificateNo, issuer }} weights={values} {...rest} />
     </Suspense>
   ),
   correct: (props) => (

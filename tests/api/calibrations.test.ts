@@ -272,6 +272,69 @@ describe('POST /api/calibrations/:revisionId/withdraw', () => {
   });
 });
 
+describe('a withdrawal of what another laboratory issued', () => {
+  const body = {
+    reason: 'Weighed in the wrong hall',
+    effectiveOn: '2024-02-01',
+    password: 'a long test password',
+  };
+  /** Issued by the institute, entered by the holder. */
+  const received = async () => {
+    const weight = await makeStandard(app, holder.id);
+    const issued = await makeCalibration(app, institute.id, '2024-01-10', [lineOf(weight.id)], {
+      registeredById: holder.id,
+      certificateNo: `W-${weight.registryNo}`,
+    });
+    return { ...issued, certificateNo: `W-${weight.registryNo}` };
+  };
+  const withdrawnBy = async (signatory: supertest.Agent) => {
+    const { revisionId, calibrationId, certificateNo } = await received();
+    const reply = await signatory.post(`/api/calibrations/${revisionId}/withdraw`).send(body);
+    expect(reply.status, reply.text).toBe(200);
+    const act = await readRow<{ laboratoryId: string; content: string }>(
+      app.database,
+      `SELECT laboratory_id AS laboratoryId, content FROM act
+       WHERE kind = 'calibration.withdraw' AND subject_id = :calibrationId`,
+      { calibrationId },
+    );
+    return { certificateNo, reason: reply.body.lines[0].stateReason as string, act: act! };
+  };
+
+  it('is of the certificate where its issuer signs, in the name of the issuer', async () => {
+    const { certificateNo, reason, act } = await withdrawnBy(institute.signatory);
+    expect(reason).toBe(`Certificate ${certificateNo} withdrawn by its issuer: ${body.reason}`);
+    expect(act.laboratoryId).toBe(institute.id);
+    expect(act.content).toContain('"withdrawn":"certificate"');
+    expect(act.content).toContain(reason);
+  });
+
+  it('is of the entry where the laboratory signs that only entered it', async () => {
+    const { certificateNo, reason, act } = await withdrawnBy(holder.signatory);
+    expect(reason).toBe(
+      `Entry of certificate ${certificateNo} withdrawn by the laboratory that made it: ${body.reason}`,
+    );
+    expect(act.laboratoryId).toBe(holder.id);
+    expect(act.content).toContain('"withdrawn":"entry"');
+  });
+
+  it('refuses a reason too long to be told with what was withdrawn', async () => {
+    const { revisionId } = await received();
+    const long = { ...body, reason: 'x'.repeat(300) };
+    const reply = await holder.signatory.post(`/api/calibrations/${revisionId}/withdraw`).send(long);
+    expect([reply.status, Object.keys(reply.body.fields)]).toEqual([422, ['reason']]);
+  });
+
+  it('is nobody else’s to sign, and says so beforehand', async () => {
+    const { revisionId } = await received();
+    const path = `/api/calibrations/${revisionId}`;
+    expect((await stranger.signatory.post(`${path}/withdraw`).send(body)).status).toBe(404);
+    expect((await institute.agent.post(`${path}/withdraw`).send(body)).status).toBe(403);
+    const may = async (one: supertest.Agent) => (await one.get(path)).body.abilities['calibration:withdraw'];
+    expect([await may(institute.signatory), await may(holder.signatory)]).toEqual([true, true]);
+    expect([await may(institute.agent), await may(holder.agent)]).toEqual([false, false]);
+  });
+});
+
 describe('POST /api/calibrations/:revisionId/correct', () => {
   const head = {
     reason: 'The sign was copied wrongly',

@@ -76,7 +76,8 @@ const MAY: Record<string, Who[]> = {
   'standard:change': WRITERS,
   'calibration:draft': WRITERS,
   'calibration:read': [...READERS, ...INSTITUTE_PEOPLE],
-  'calibration:withdraw': ['signatory'],
+  // Of the entry at home, and of the certificate at the institute that issued it.
+  'calibration:withdraw': ['signatory', 'signatory of the institute'],
   'calibration:correct': ['signatory'],
   'calibration:issue': ['signatory'],
   'draft:read': READERS,

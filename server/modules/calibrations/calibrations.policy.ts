@@ -17,10 +17,14 @@ export const readCalibration = permission<CalibrationSubject>(
     subject.holderIds.some((id) => readsInFull(user, id)),
 );
 
-/** Withdrawing: a signature, so for a signatory of the laboratory that entered it. */
+/**
+ * Withdrawing: a signature, so for a signatory. Who issued a certificate withdraws the certificate, whoever entered it;
+ * who entered another laboratory's withdraws the entry.
+ */
 export const withdrawCalibrationPermission = permission<CalibrationSubject>(
   'calibration:withdraw',
-  (user, { registeredById }) => worksIn(user, registeredById, 'signatory'),
+  (user, { issuerId, registeredById }) =>
+    [issuerId, registeredById].some((id) => worksIn(user, id, 'signatory')),
 );
 
 /** A calibration with whether this person may sign for who entered it today. */

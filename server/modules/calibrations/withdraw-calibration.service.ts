@@ -5,11 +5,17 @@ import { insertRows } from '#server/db/base-model.ts';
 import { readRow, readRows } from '#server/db/read.ts';
 import { AppError, fieldError, notFound } from '#server/http/app-error.ts';
 import { today, type Context } from '#server/http/context.ts';
+import { worksIn } from '#server/policy/user.ts';
 import { valueEndModel } from './graph.model.ts';
+
+/** Characters of a reason that the register holds. */
+const LONGEST_REASON = 300;
 
 interface Standing {
   calibrationId: string;
+  issuerId: string;
   registeredById: string;
+  certificateNo: string;
   issuedOn: string;
   latestId: string;
   withdrawn: number;
@@ -18,16 +24,20 @@ interface Standing {
 /**
  * Withdraws an issued calibration from a day on: its values end without successor, and every chain that leans
  * on them says so. It is never undone; a mistaken withdrawal is mended by a new revision.
- * @throws AppError `not-found`, `duplicate` where it is withdrawn already, `unprocessable` on effectiveOn or
+ * @throws AppError `not-found`, `duplicate` where it is withdrawn already, `unprocessable` on effectiveOn, reason or
  * where a later revision stands
  */
 export async function withdrawCalibration(
   context: Context,
   revisionId: string,
-  { reason, effectiveOn }: z.infer<typeof WithdrawBody>,
+  { reason: given, effectiveOn }: z.infer<typeof WithdrawBody>,
 ): Promise<{ revisionId: string; valueUids: string[]; actSeq: number }> {
-  const { registeredById } = await standingOf(context, revisionId);
-  const description = { kind: 'calibration.withdraw', laboratoryId: registeredById, reason } as const;
+  const { laboratoryId, withdrawn, reason } = withdrawalOf(
+    context,
+    await standingOf(context, revisionId),
+    given,
+  );
+  const description = { kind: 'calibration.withdraw', laboratoryId, reason } as const;
   return inAct(context, description, async (act) => {
     const standing = await standingOf(context, revisionId);
     refuse(standing, revisionId, effectiveOn, today(context));
@@ -52,16 +62,60 @@ export async function withdrawCalibration(
     act.record({
       subject: { type: 'calibration', id: standing.calibrationId },
       before: { revisionId, state: 'in force' },
-      after: { revisionId, valueUids, state: 'withdrawn', effectiveOn, reason },
+      after: { revisionId, valueUids, state: 'withdrawn', withdrawn, effectiveOn, reason },
     });
     return { revisionId, valueUids, actSeq: act.seq };
   });
 }
 
+interface Withdrawal {
+  /** In whose name it is done. */
+  laboratoryId: string;
+  /** The certificate itself, by who issued it, or its entry, by who only entered it. */
+  withdrawn: 'certificate' | 'entry';
+  /** As the chains that lean on it will read it. */
+  reason: string;
+}
+
+/** What is withdrawn, in whose name, and in words that tell the two apart wherever both could be meant. */
+function withdrawalOf({ user }: Context, standing: Standing, reason: string): Withdrawal {
+  const { issuerId, registeredById, certificateNo } = standing;
+  if (issuerId === registeredById) return { laboratoryId: issuerId, withdrawn: 'certificate', reason };
+  if (user && worksIn(user, issuerId, 'signatory')) {
+    return {
+      laboratoryId: issuerId,
+      withdrawn: 'certificate',
+      reason: toldReason(`Certificate ${certificateNo} withdrawn by its issuer: `, reason),
+    };
+  }
+  return {
+    laboratoryId: registeredById,
+    withdrawn: 'entry',
+    reason: toldReason(
+      `Entry of certificate ${certificateNo} withdrawn by the laboratory that made it: `,
+      reason,
+    ),
+  };
+}
+
+/** @throws AppError `unprocessable` on `reason` where it and the words before it are more than the register holds */
+function toldReason(words: string, reason: string): string {
+  const most = LONGEST_REASON - words.length;
+  if (reason.length > most) {
+    throw fieldError('reason', {
+      message: `It is told after the words "${words.trim()}", and together they are too long.`,
+      received: reason,
+      expected: `at most ${Math.max(0, most)} characters`,
+    });
+  }
+  return words + reason;
+}
+
 async function standingOf(context: Context, revisionId: string): Promise<Standing> {
   const row = await readRow<Standing>(
     context.database,
-    `SELECT c.id AS calibrationId, c.registered_by_id AS registeredById, r.issued_on AS issuedOn,
+    `SELECT c.id AS calibrationId, c.laboratory_id AS issuerId,
+       c.registered_by_id AS registeredById, c.certificate_no AS certificateNo, r.issued_on AS issuedOn,
        (SELECT x.id FROM revision x WHERE x.calibration_id = c.id ORDER BY x.n DESC LIMIT 1) AS latestId,
        EXISTS (SELECT 1 FROM value_end e JOIN assigned_value v ON v.id = e.value_id
                WHERE v.revision_id = r.id AND e.kind = 'withdrawn') AS withdrawn

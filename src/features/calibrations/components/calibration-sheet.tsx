@@ -9,6 +9,8 @@ import { StateMark } from '#src/components/ui/state-mark.tsx';
 import { Facts } from '#src/components/layout/facts.tsx';
 import { Page, Section } from '#src/components/layout/page.tsx';
 import { can } from '#src/lib/abilities.ts';
+import { usePerson } from '#src/lib/session.ts';
+import { withdrawalOf, withdrawalText } from '#src/lib/withdrawal.ts';
 import { stateOfValue } from '#shared/states.ts';
 import { LineTable } from './line-table.tsx';
 import { sharedWords } from './shared-words.ts';
@@ -122,11 +124,12 @@ function Newer({ lines }: { lines: CalibrationResponse['lines'] }) {
 
 function Withdraw({ calibration, lines, abilities }: CalibrationResponse) {
   const [isAsked, setAsked] = useState(false);
+  const person = usePerson();
   if (!can({ abilities }, 'calibration:withdraw') || calibration.state === 'withdrawn') return null;
   return (
     <>
       <Button weight="destructive" onClick={() => setAsked(true)}>
-        Withdraw this calibration
+        {withdrawalText(withdrawalOf(person, calibration.issuer.id), calibration.certificateNo)}
       </Button>
       {isAsked && (
         <WithdrawDialog calibration={calibration} weights={lines.length} onClose={() => setAsked(false)} />

@@ -5,10 +5,12 @@ import { Dialog } from '#src/components/ui/dialog.tsx';
 import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { DateField, Textarea, TextField } from '#src/components/ui/text-field.tsx';
 import { errorAt, showFieldProblems, useZodForm } from '#src/lib/form.ts';
+import { usePerson } from '#src/lib/session.ts';
+import { withdrawalOf, withdrawalText } from '#src/lib/withdrawal.ts';
 import { useWithdraw } from '../api.ts';
 
 interface WithdrawDialogProps {
-  calibration: Pick<CalibrationResponse['calibration'], 'revisionId' | 'certificateNo'>;
+  calibration: Pick<CalibrationResponse['calibration'], 'revisionId' | 'certificateNo' | 'issuer'>;
   /** How many values fall with it. */
   weights: number;
   /** What a dry run counted, in a sentence. */
@@ -23,6 +25,7 @@ export function WithdrawDialog(props: WithdrawDialogProps) {
   const form = useZodForm(SignedWithdrawBody, {
     defaultValues: { reason: '', password: '', effectiveOn: new Date().toISOString().slice(0, 10) },
   });
+  const withdrawal = withdrawalOf(usePerson(), calibration.issuer.id);
   const withdraw = useWithdraw(calibration.revisionId);
   const [isShownAtFields, setShownAtFields] = useState(false);
   const { errors } = form.formState;
@@ -38,7 +41,7 @@ export function WithdrawDialog(props: WithdrawDialogProps) {
   );
   return (
     <Dialog
-      title={`Withdraw certificate ${calibration.certificateNo}`}
+      title={withdrawalText(withdrawal, calibration.certificateNo)}
       onClose={onClose}
       actions={
         <>
@@ -49,6 +52,12 @@ export function WithdrawDialog(props: WithdrawDialogProps) {
         </>
       }
     >
+      {withdrawal === 'entry' && (
+        <p>
+          This takes back what your laboratory entered, and says so. The certificate itself is{' '}
+          {calibration.issuer.name}’s to withdraw.
+        </p>
+      )}
       <p className="text-ink-2">
         From the day given, {weights === 1 ? 'its value is' : `all ${weights} of its values are`} no longer in
         force, and every chain that leans on {weights === 1 ? 'it' : 'them'} shows the break. The certificate

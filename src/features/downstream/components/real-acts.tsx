@@ -6,6 +6,7 @@ import { paths } from '#src/app/paths.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Button, LinkButton } from '#src/components/ui/button.tsx';
 import { usePerson } from '#src/lib/session.ts';
+import { withdrawalOf, withdrawalText } from '#src/lib/withdrawal.ts';
 import { namedQuery, whatIfQuery, type Supposition } from '../api.ts';
 import { supposedTogether, type SupposedCorrection } from '../supposed-correction.ts';
 
@@ -23,7 +24,7 @@ interface ActProps {
 
 /** The dialogs in which a dry run becomes an act; they belong to the calibrations and come through the route. */
 export interface ActDialogs {
-  withdraw: (props: ActProps & { values: number }) => ReactNode;
+  withdraw: (props: ActProps & { values: number; issuer: NamedSubject['issuer'] }) => ReactNode;
   correct: (props: ActProps & { value: NamedValue; supposed: SupposedCorrection }) => ReactNode;
 }
 
@@ -50,8 +51,9 @@ export function RealActs({ asked, dialogs, onDone }: RealActsProps) {
     <Section title="The act itself">
       {acts.length === 0 ? (
         <p className="text-ink-2">
-          Only who signs for the laboratory that entered a certificate can correct or withdraw it, and only
-          who signs for an institute can publish a notice on its values.
+          Only who signs for the laboratory that entered a certificate can correct it, or withdraw its entry;
+          only who signs for its issuer can withdraw the certificate; and only who signs for an institute can
+          publish a notice on its values.
         </p>
       ) : (
         <>
@@ -136,6 +138,7 @@ interface OneActProps extends Omit<RealActsProps, 'asked'> {
 
 function OneAct({ changes, subject, isOneOfSeveral, dialogs, touches, onDone }: OneActProps) {
   const [isAsked, setAsked] = useState(false);
+  const person = usePerson();
   const change = changes[0]!;
   if (change.kind === 'notice') {
     return <LinkButton to={paths.newNotice.href(change)}>Publish as a notice</LinkButton>;
@@ -155,9 +158,10 @@ function OneAct({ changes, subject, isOneOfSeveral, dialogs, touches, onDone }: 
     return (
       <>
         <Button weight="destructive" onClick={() => setAsked(true)}>
-          Withdraw certificate {certificateNo}
+          {withdrawalText(withdrawalOf(person, subject.issuer.id), certificateNo)}
         </Button>
-        {isAsked && dialogs.withdraw({ ...shared, revisionId, certificateNo, values })}
+        {isAsked &&
+          dialogs.withdraw({ ...shared, revisionId, certificateNo, values, issuer: subject.issuer })}
       </>
     );
   }
