@@ -18,7 +18,7 @@ it('fails where the history fits only with the other sign, and names the values'
   const found = judge('-0.0006', [past('0.00058')]);
   expect(found).toMatchObject({ outcome: 'fails', severity: 'major' });
   expect(found.text).toContain(
-    'states −0.60\u2009mg; the other values of MI 0007 (RL-2023) fit it only with the other sign',
+    'states −600\u2009µg; the other values of MI 0007 (RL-2023) fit it only with the other sign',
   );
 });
 

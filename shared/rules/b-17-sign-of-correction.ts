@@ -1,5 +1,5 @@
 import { isSignOdd, isSignVisible, splitHistory } from './odd-one-out.ts';
-import { certificateText, expandedUText, statedU, valueText } from './numbers.ts';
+import { certificateText, expandedUText, shownValueText, statedU } from './numbers.ts';
 import { cannotBeJudged, doesNotApply, fails, holds, type ValueRule } from './rule.ts';
 
 /**
@@ -27,7 +27,7 @@ export const signOfCorrection: ValueRule = {
     const parameters = {
       certificate: certificateText(value),
       registryNo: value.registryNo,
-      value: valueText(value),
+      value: shownValueText(value),
       expandedU: expandedUText(value),
       others: value.history.map(certificateText).join('; '),
     };

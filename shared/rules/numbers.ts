@@ -1,6 +1,7 @@
 import { Decimal } from '#shared/decimal.ts';
 import { formatQuantity } from '#shared/engine/quantity/format-quantity.ts';
 import { UNIT_DEFINITIONS } from '#shared/engine/quantity/units.ts';
+import { deviationUnit } from '#shared/numbers/format-decimal.ts';
 import type { ResultFacts } from './facts.ts';
 
 /**
@@ -108,6 +109,17 @@ export const expandedUText = oncePerResult((result) => {
     decimalsOfU(result)!,
     false,
   );
+});
+
+/**
+ * A deviation for reading in the unit that screens and drawings choose by its size, so that what is said of a value
+ * looks like the value; with the digits of its certificate.
+ */
+export const shownValueText = oncePerResult((result) => {
+  const unit = deviationUnit(result.deviation, result.expandedU);
+  const steps = UNIT_DEFINITIONS[unit].exponent - UNIT_DEFINITIONS[result.reportedUnit].exponent;
+  const decimals = Math.max(0, result.reportedDecimals + steps);
+  return quantityText(inReportedUnit({ reportedUnit: unit }, result.deviation), unit, decimals, true);
 });
 
 /** Below this no unit has an amount left: what is smaller is written as 0. */
