@@ -75,7 +75,7 @@ export function BothChains({ chain }: { chain: ChainResponse }) {
               Notice {notice.number}, {notice.title}, in force from {notice.effectiveOn},{' '}
               {Number(notice.shift) === 0 ? (
                 <>
-                  adds a standard uncertainty of <Amount grams={toPlain(notice.u)} kind="uncertainty" />.
+                  adds to the standard uncertainty: <Amount grams={toPlain(notice.u)} kind="uncertainty" />.
                 </>
               ) : (
                 <>
