@@ -36,7 +36,7 @@ td.serif{font-size:1rem}
 .number{text-align:right}
 b,code,.mono{font-family:'Commit Mono',monospace;font-weight:400;font-size:.8125rem}
 code{overflow-wrap:anywhere}
-th b,.stands{white-space:nowrap}
+th b,.stands,tbody th.mono,td.mono .whole{white-space:nowrap}
 .stands{display:block}
 section>p:not(.quiet):not(#verdict){font-family:${SERIF};font-size:1.05rem}
 .sound{color:var(--sound)}.caution{color:var(--caution)}.broken{color:var(--broken)}.unjudged{color:var(--unjudged)}.ink-3{color:var(--ink-3)}

@@ -17,6 +17,9 @@ import { focusOf, statementOf } from './statement.ts';
 import { TAKE_ALONG_SCRIPT } from './take-along-script.ts';
 import { TAKE_ALONG_STYLE } from './take-along-style.ts';
 
+/** Characters of a name that is kept in one line. */
+const LONGEST_WHOLE = 20;
+
 /**
  * A chain as one page that needs nothing from anywhere: drawing, table, checks, and the chain's own data, whose hash
  * the page verifies by itself.
@@ -135,7 +138,7 @@ function linkCells(link: StatementStep['leanedOn'][number]): string {
       ? '<span class="quiet">informs</span>'
       : stateWord('at use', link.conduct) + stateWord('today', link.today);
   const flow = link.role === 'informs' ? '–' : link.flow === null ? 'unknown' : shareText(link.flow);
-  return `<td class="mono">${escaped(link.name)}<small>${escaped(days)}</small></td><td class="number">${escaped(flow)}</td><td>${judged}</td>`;
+  return `<td class="mono">${wholeNames(link.name)}<small>${escaped(days)}</small></td><td class="number">${escaped(flow)}</td><td>${judged}</td>`;
 }
 
 function stateWord(when: string, state: State): string {
@@ -158,9 +161,19 @@ function findings({ checks }: StatementResponse): string {
   const rows = found.map((check) => {
     const state = stateOfOutcome(check.outcome, check.severity);
     const words = check.words ?? `${check.title}. The words are not for this reader.`;
-    return `<tr><th scope="row" class="mono">${escaped(check.rule)}</th><td class="mono">${escaped(check.about)}</td><td><span class="${STATE_INKS[state]}">${check.outcome}</span><small>${check.verdict === 'conduct' ? 'at use' : 'today'}, ${check.severity}</small></td><td>${escaped(words)}</td></tr>`;
+    return `<tr><th scope="row" class="mono">${escaped(check.rule)}</th><td class="mono">${wholeNames(check.about)}</td><td><span class="${STATE_INKS[state]}">${check.outcome}</span><small>${check.verdict === 'conduct' ? 'at use' : 'today'}, ${check.severity}</small></td><td>${escaped(words)}</td></tr>`;
   });
   return `<h3>What failed or could not be judged</h3>${table(['Rule', 'About', 'Outcome', 'In words'], rows)}`;
+}
+
+/** Names around an arrow, each unparted at a line's end unless it is long, as that of a shared effect. */
+function wholeNames(about: string): string {
+  return about
+    .split(' → ')
+    .map((name) =>
+      name.length > LONGEST_WHOLE ? escaped(name) : `<span class="whole">${escaped(name)}</span>`,
+    )
+    .join(' → ');
 }
 
 function table(heads: readonly string[], rows: readonly string[]): string {
