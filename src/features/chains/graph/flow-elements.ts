@@ -64,7 +64,7 @@ export function pictureOf(list: DisplayList, at: string | undefined): Node<Pictu
     id: 'picture',
     type: 'picture',
     position: { x: 0, y: 0 },
-    style: { ...placedAt(0, 0), pointerEvents: 'none' },
+    style: { ...placedAt(0, 0), width: list.width, height: list.height, pointerEvents: 'none' },
     width: list.width,
     height: list.height,
     data: { list, selected: selectedIn(list, at) },

@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { ChainLifeResponse, LifeEvent } from '#shared/contracts/chain-life.ts';
+import { ErrorNotice } from '#src/components/ui/error-notice.tsx';
 import { chainLifeQuery } from '../api.ts';
 import type { ChainQuestion } from '../question.ts';
 import { ClockTrack } from './clock-track.tsx';
@@ -19,10 +20,11 @@ interface LifeLineProps {
 
 /** The weight's life on its two clocks, one line below the other; what differs between them leans. */
 export function LifeLine({ valueUid, answered, onStep }: LifeLineProps) {
-  const { data: life } = useQuery(chainLifeQuery(valueUid));
+  const { data: life, error, refetch } = useQuery(chainLifeQuery(valueUid));
   return (
     <section aria-label="The weight’s life" className="text-sm print:hidden">
       {life && <Clocks life={life} answered={answered} onStep={onStep} />}
+      {error && !life && <ErrorNotice error={error} onRetry={() => void refetch()} />}
     </section>
   );
 }
