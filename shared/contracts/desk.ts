@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { AuditFigures } from './audits.ts';
-import { Day, Id, LaboratoryName } from './common.ts';
+import { Day, Id, LaboratoryName, QuantityKind } from './common.ts';
 import { DraftSummary } from './drafts.ts';
 
 /** GET /api/desk: what needs this person today, by role; empty parts are not sent. */
@@ -27,9 +27,22 @@ export const DeskResponse = z.object({
     z.object({
       valueUid: Id,
       registryNo: z.string(),
+      quantity: QuantityKind,
+      certificateNo: z.string(),
       referenceRegistryNo: z.string(),
+      referenceCertificateNo: z.string(),
       what: z.enum(['superseded', 'withdrawn']),
       on: Day,
+    }),
+  ),
+  /** Notices that take effect from 60 days ago on and move values of ours materially, or change a verdict. */
+  notices: z.array(
+    z.object({
+      id: Id,
+      number: z.string(),
+      effectiveOn: Day,
+      material: z.number().int(),
+      verdictChanges: z.number().int(),
     }),
   ),
   /** The newest finished audit of each laboratory this person reads in full, and for the registrar of the network. */

@@ -150,8 +150,8 @@ export const NoticeQuery = z.object({
 
 /** One's own value under a notice. Before: the certificate with the earlier notices; after: with this one too. Grams. */
 export const NoticeOwnRow = FullRow.extend({
-  /** What this notice brings; its standard uncertainty is shared by every value it reaches. */
-  shift: z.number(),
+  /** What this notice brings, exact decimal text; its standard uncertainty is shared by every value it reaches. */
+  shift: z.string(),
   addedU: z.number(),
   deviationBefore: z.string(),
   deviationAfter: z.string(),
@@ -166,10 +166,16 @@ export const NoticeOwnRow = FullRow.extend({
 export type NoticeOwnRow = z.infer<typeof NoticeOwnRow>;
 
 /** A weight of others below one's own, or a customer's: enough to warn its holder. */
-export const NoticeWarningRow = WarningRow.extend({ shift: z.number(), word: WhatIfWord });
+export const NoticeWarningRow = WarningRow.extend({ shift: z.string(), word: WhatIfWord });
 
 export const NoticeRow = z.discriminatedUnion('view', [NoticeOwnRow, NoticeWarningRow]);
 export type NoticeRow = z.infer<typeof NoticeRow>;
+
+const WordCounts = z.object({
+  none: z.number().int(),
+  material: z.number().int(),
+  verdictChanges: z.number().int(),
+});
 
 export const NoticeResponse = NoticeSummary.extend({
   reason: z.string(),
@@ -189,7 +195,9 @@ export const NoticeResponse = NoticeSummary.extend({
   total: z.object({
     count: z.number().int(),
     warned: z.number().int(),
-    words: z.object({ none: z.number().int(), material: z.number().int(), verdictChanges: z.number().int() }),
+    words: WordCounts,
+    /** The words of the values told in full alone. */
+    fullWords: WordCounts,
   }),
   rows: z.array(NoticeRow),
   nextCursor: z.string().nullable(),

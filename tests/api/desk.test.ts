@@ -5,6 +5,8 @@ import { withdrawCalibration } from '#server/modules/calibrations/index.ts';
 import { assertFact, registerSet } from '#server/modules/standards/index.ts';
 import { lineOf, makeCalibration, makeStandard, useOf } from '#tests/support/calibration-factories.ts';
 import { freeRegistryNo, makeLaboratory, makePerson, type TestPerson } from '#tests/support/factories.ts';
+import { makeDownstreamScene } from '#tests/support/downstream-scene.ts';
+import { makeNotice, makeScale, termOf } from '#tests/support/notice-scene.ts';
 import { testApp } from '#tests/support/test-app.ts';
 
 const clock: Clock = { now: () => new Date('2026-03-02T09:00:00Z') };
@@ -40,6 +42,7 @@ describe('GET /api/desk', () => {
       drafts: [],
       due: [],
       upstream: [],
+      notices: [],
       audits: [],
       register: null,
       assessments: [],
@@ -118,13 +121,33 @@ describe('GET /api/desk', () => {
       {
         valueUid: below.valueUids[0],
         registryNo: standard.registryNo,
+        quantity: 'conventional mass',
+        certificateNo: expect.any(String),
         referenceRegistryNo: reference.registryNo,
+        referenceCertificateNo: expect.any(String),
         what: 'withdrawn',
         on: '2025-06-01',
       },
     ]);
     await makeCalibration(app, home.id, '2025-09-10', [lineOf(standard.id)]);
     expect((await desk(agent)).upstream).toEqual([]);
+  });
+
+  it('tells of a notice that moves own values materially, to who holds them, until it is no news', async () => {
+    const scene = await makeDownstreamScene(app);
+    const scale = await makeScale(app);
+    const publish = (effectiveOn: string, shift: string, replacesId: string | null = null) =>
+      makeNotice(app, scene.institute.id, scale.id, { effectiveOn, replacesId, terms: [termOf(shift)] });
+    const notices = async (who: 'home' | 'stranger') =>
+      (await desk(await app.signIn(scene.people[who]))).notices;
+    const early = await publish('2025-12-31', '-0.0001');
+    expect(await notices('home')).toEqual([]);
+    // 40 ug beside U = 300 ug: material for the one value that home holds.
+    const { id, number } = await publish('2026-02-20', '-0.00004', early.id);
+    expect(await notices('home')).toEqual([
+      { id, number, effectiveOn: '2026-02-20', material: 1, verdictChanges: 0 },
+    ]);
+    expect(await notices('stranger')).toEqual([]);
   });
 
   it('shows open drafts to the laboratory, and what waits for a signature to its signatory', async () => {

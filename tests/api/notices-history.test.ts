@@ -49,7 +49,7 @@ describe('a linear correction by the day of calibration', () => {
     });
     const notice = await shown(id, scene.people.home);
     expect(own(notice.rows, alone)).toMatchObject({
-      shift: expect.closeTo(-0.00002, 15),
+      shift: '-0.00002',
       deviationBefore: '0.0001',
       deviationAfter: '0.00008',
       expandedUBefore: 0.0002,
@@ -57,7 +57,7 @@ describe('a linear correction by the day of calibration', () => {
       ratio: expect.closeTo(-0.1, 9),
     });
     // Calibrated later, but leaning on the root: it inherits the root's shift and gets none of its own.
-    expect(own(notice.rows, scene.homes).shift).toBeCloseTo(-0.00001, 15);
+    expect(own(notice.rows, scene.homes).shift).toBe('-0.00001');
     const { effects } = await broughtOn(scene.below, '2025-06-01');
     expect(effects.map(({ shift }) => shift)).toEqual([expect.closeTo(-0.00001, 15)]);
   });
@@ -83,7 +83,7 @@ describe('an uncertainty added, values unchanged', () => {
     expect(own(notice.rows, after)).toBeUndefined();
     const row = own(notice.rows, scene.homes);
     expect(row).toMatchObject({
-      shift: 0,
+      shift: '0',
       ratio: 0,
       addedU: expect.closeTo(0.00008, 12),
       deviationAfter: '0.000133',
@@ -113,7 +113,7 @@ describe('successive consensus values', () => {
     expect(await on('2026-01-01')).toEqual([expect.closeTo(-0.000016, 12), expect.closeTo(-0.000018, 12)]);
     const notice = await shown(later.id, scene.people.home);
     expect(own(notice.rows, scene.homes)).toMatchObject({
-      shift: expect.closeTo(-0.000018, 12),
+      shift: '-0.000018',
       deviationBefore: '0.000117',
       deviationAfter: '0.000099',
       ratio: expect.closeTo(-0.034 / 0.3, 9),

@@ -76,7 +76,7 @@ async function broughtTo({ chainOf, page }: Diamond, uid: string) {
   );
   return {
     shift: Number(chain.asNowKnown?.shift ?? 0),
-    onPage: row?.shift ?? 0,
+    onPage: Number(row?.shift ?? 0),
     addedOnPage: row?.addedU ?? 0,
     variance: chain.uncertainty.standard! ** 2,
   };

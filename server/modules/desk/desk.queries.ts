@@ -8,6 +8,7 @@ import { newestAudits } from '#server/modules/audits/index.ts';
 import { standingOn } from '#server/modules/network/index.ts';
 import type { User } from '#server/policy/user.ts';
 import { deskDue } from './desk-due.queries.ts';
+import { deskNotices } from './desk-notices.ts';
 import { deskUpstream } from './desk-upstream.queries.ts';
 
 /** What needs a person today, by the roles they hold. Parts that a role has no use for are empty. */
@@ -18,17 +19,19 @@ export async function deskOf(context: Context, user: User): Promise<DeskResponse
   const signsFor = user.memberships
     .filter(({ role }) => role === 'signatory')
     .map(({ laboratoryId }) => laboratoryId);
-  const [laboratories, toSign, drafts, due, upstream, audits, register, assessments] = await Promise.all([
-    laboratoryNames(database, own),
-    openDrafts(database, signsFor, ['sent to sign']),
-    openDrafts(database, own, ['open']),
-    deskDue(database, own, day, knownAt(day)),
-    deskUpstream(database, own, day, knownAt(day)),
-    newestAudits(database, [...own, ...user.assessedLaboratoryIds], user.isRegistrar),
-    user.isRegistrar ? registerSize(database) : null,
-    openAssessments(database, user.accountId, day),
-  ]);
-  return { day, laboratories, toSign, drafts, due, upstream, audits, register, assessments };
+  const [laboratories, toSign, drafts, due, upstream, notices, audits, register, assessments] =
+    await Promise.all([
+      laboratoryNames(database, own),
+      openDrafts(database, signsFor, ['sent to sign']),
+      openDrafts(database, own, ['open']),
+      deskDue(database, own, day, knownAt(day)),
+      deskUpstream(database, own, day, knownAt(day)),
+      deskNotices(context, user),
+      newestAudits(database, [...own, ...user.assessedLaboratoryIds], user.isRegistrar),
+      user.isRegistrar ? registerSize(database) : null,
+      openAssessments(database, user.accountId, day),
+    ]);
+  return { day, laboratories, toSign, drafts, due, upstream, notices, audits, register, assessments };
 }
 
 type Name = DeskResponse['laboratories'][number];

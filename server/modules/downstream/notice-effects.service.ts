@@ -43,6 +43,9 @@ export interface NoticeFound {
 
 export interface NoticeEffects {
   words: [number, number, number];
+  /** Of them the values told in full, and the values that the person's own laboratories hold. */
+  fullWords: [number, number, number];
+  heldWords: [number, number, number];
   warned: number;
   rows: NoticeFound[];
   nextCursor: string | null;
@@ -80,8 +83,12 @@ export async function noticeEffects(
       isReached(runs, place) && inForceOn(graph, found.nodes[place]!, days.dayNumber, days.knownNumber),
     isBefore: (a, b) => runs.all.word[a]! > runs.all.word[b]!,
   });
+  const laboratories = new Set(context.user.memberships.map(({ laboratoryId }) => laboratoryId));
+  const isHeld = (place: number) =>
+    laboratories.has(graph.laboratories.at(graph.holder[found.nodes[place]!]!));
+  const isFull = (place: number) => runs.all.sight[place] === SIGHT.full;
   const shown = pageAfter(
-    rows.map((place) => standing(runs, place)),
+    rows.map((place) => standing(runs, place, isHeld(place))),
     { order: 'notice', ...page, cursor: page.cursor },
   );
   const details = await rowDetails(
@@ -89,11 +96,14 @@ export async function noticeEffects(
     shown.rows.map(({ id }) => id),
   );
   const judge = judgeClassOf(graph);
-  const words: NoticeEffects['words'] = [0, 0, 0];
-  for (const place of rows) words[runs.all.word[place]!]! += 1;
   return {
-    words,
-    warned: rows.filter((place) => runs.all.sight[place]! < SIGHT.full).length,
+    words: wordsOf(runs, rows),
+    fullWords: wordsOf(runs, rows.filter(isFull)),
+    heldWords: wordsOf(
+      runs,
+      rows.filter((place) => isFull(place) && isHeld(place)),
+    ),
+    warned: rows.filter((place) => !isFull(place)).length,
     rows: shown.rows.map(({ place, id }) => foundRow(runs, place, details.get(id)!, judge)),
     nextCursor: shown.nextCursor,
     laboratories: await laboratoriesById(
@@ -129,8 +139,18 @@ function isReached({ own }: Runs, place: number): boolean {
   return own.shift[place] !== 0 || own.addedVariance[place]! > 0;
 }
 
-/** By the word, then by what is moved for its U. */
-function standing({ all, own }: Runs, place: number): { place: number; id: number; keys: number[] } {
+function wordsOf({ all }: Runs, places: readonly number[]): [number, number, number] {
+  const words: [number, number, number] = [0, 0, 0];
+  for (const place of places) words[all.word[place]!]! += 1;
+  return words;
+}
+
+/** What one's own laboratory holds first, then by the word, then by what is moved for its U. */
+function standing(
+  { all, own }: Runs,
+  place: number,
+  isHeld: boolean,
+): { place: number; id: number; keys: number[] } {
   const node = all.found.nodes[place]!;
   const size = Math.abs(own.shift[place]!) + Math.sqrt(own.addedVariance[place]!);
   const expandedU = all.graph.expandedU[node]!;
@@ -138,7 +158,7 @@ function standing({ all, own }: Runs, place: number): { place: number; id: numbe
   return {
     place,
     id: all.graph.id[node]!,
-    keys: [all.sight[place] === SIGHT.full ? 1 : 0, all.word[place]!, part],
+    keys: [all.sight[place] === SIGHT.full ? (isHeld ? 2 : 1) : 0, all.word[place]!, part],
   };
 }
 

@@ -28,7 +28,7 @@ export function presentNotice(
   abilities: Record<string, boolean>,
 ): z.input<typeof NoticeResponse> {
   const head = shown.heads.find(({ id }) => id === shown.notice.id)!;
-  const { words, warned, rows, nextCursor } = shown.effects;
+  const { words, fullWords, warned, rows, nextCursor } = shown.effects;
   const [none, material, verdictChanges] = words;
   return {
     ...summaryOf(head, shown, day),
@@ -39,7 +39,12 @@ export function presentNotice(
       shiftPerKilogram: [...shifts],
       addedUPerKilogram: addedU,
     })),
-    total: { count: none + material + verdictChanges, warned, words: { none, material, verdictChanges } },
+    total: {
+      count: none + material + verdictChanges,
+      warned,
+      words: { none, material, verdictChanges },
+      fullWords: { none: fullWords[0], material: fullWords[1], verdictChanges: fullWords[2] },
+    },
     rows: rows.map((row) => presentRow(row, shown.effects.laboratories)),
     nextCursor,
     abilities,
@@ -96,13 +101,13 @@ function presentRow(
   const word = WORDS[row.word]!;
   if (sight !== SIGHT.full) {
     const named = sight === SIGHT.issued ? details.holderId : details.issuerId;
-    return { ...warningRow(details, laboratories.get(named)!), shift, word };
+    return { ...warningRow(details, laboratories.get(named)!), shift: movedText('0', shift), word };
   }
   const isUKnown = details.expandedU !== null;
   const moved = row.shiftBefore + shift;
   return {
     ...fullRow(details, laboratories),
-    shift,
+    shift: movedText('0', shift),
     addedU: row.addedU,
     deviationBefore: movedText(details.deviation, row.shiftBefore),
     deviationAfter: movedText(details.deviation, moved),

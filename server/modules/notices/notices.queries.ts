@@ -66,14 +66,30 @@ export interface CoverableRow {
   scaleVersion: string | null;
 }
 
-/** Every value that a laboratory issued, by its nominal, day, kind and scale. */
-export async function valuesIssuedBy(database: Sequelize, issuerId: string): Promise<CoverableRow[]> {
+/** What values are asked for: whatever one of the terms may cover. Null bounds nothing. */
+export interface Reach {
+  performedFrom: string | null;
+  performedTo: string | null;
+  nominalFrom: string | null;
+  nominalTo: string | null;
+}
+
+/** Values that a laboratory issued, by nominal, day, kind and scale: those within a reach, the coverage being judged later. */
+export async function valuesIssuedBy(
+  database: Sequelize,
+  issuerId: string,
+  reach: Reach,
+): Promise<CoverableRow[]> {
   return readRows<CoverableRow>(
     database,
     `SELECT v.id, v.issuer_id AS issuerId, v.quantity, v.nominal, v.performed_end AS performedEnd,
        s.name AS scaleVersion
      FROM assigned_value v LEFT JOIN scale_version s ON s.id = v.scale_version_id
-     WHERE v.issuer_id = :issuerId`,
-    { issuerId },
+     WHERE v.issuer_id = :issuerId
+       AND (:performedFrom IS NULL OR v.performed_end >= :performedFrom)
+       AND (:performedTo IS NULL OR v.performed_end <= :performedTo)
+       AND (:nominalFrom IS NULL OR v.nominal >= CAST(:nominalFrom AS DECIMAL(40, 20)))
+       AND (:nominalTo IS NULL OR v.nominal <= CAST(:nominalTo AS DECIMAL(40, 20)))`,
+    { issuerId, ...reach },
   );
 }

@@ -8,6 +8,7 @@ import { LinkButton } from '#src/components/ui/button.tsx';
 import { DateText } from '#src/components/ui/date-text.tsx';
 import { EmptyState } from '#src/components/ui/empty-state.tsx';
 import { formatDecimal } from '#shared/numbers/format-decimal.ts';
+import { DeskNotices } from './desk-notices.tsx';
 import { DraftTable } from './draft-table.tsx';
 import { DueTable } from './due-table.tsx';
 import { NewestAudits } from './newest-audits.tsx';
@@ -16,7 +17,9 @@ import { UpstreamTable } from './upstream-table.tsx';
 /** What needs this person today; parts without anything in them are not drawn. */
 export function Desk({ desk }: { desk: DeskResponse }) {
   const places = desk.laboratories.map((laboratory) => laboratory.name).join(' · ');
-  const isQuiet = [desk.toSign, desk.drafts, desk.due, desk.upstream].every((part) => part.length === 0);
+  const isQuiet = [desk.toSign, desk.drafts, desk.due, desk.upstream, desk.notices].every(
+    (part) => part.length === 0,
+  );
   return (
     <Page
       title="Desk"
@@ -30,6 +33,11 @@ export function Desk({ desk }: { desk: DeskResponse }) {
         {desk.toSign.length > 0 && (
           <Section title="Sent to you to sign">
             <DraftTable caption="Sent to you to sign" drafts={desk.toSign} />
+          </Section>
+        )}
+        {desk.notices.length > 0 && (
+          <Section title="Notices that move your values">
+            <DeskNotices notices={desk.notices} day={desk.day} />
           </Section>
         )}
         {desk.upstream.length > 0 && (

@@ -11,17 +11,24 @@ export function UpstreamTable({ rows }: { rows: DeskResponse['upstream'] }) {
       <thead>
         <tr>
           <Head>Number</Head>
+          <Head>Quantity</Head>
+          <Head>Certificate</Head>
           <Head>Leans on</Head>
           <Head>Which was</Head>
         </tr>
       </thead>
       <tbody>
         {rows.map((row) => (
-          <Row key={`${row.valueUid} ${row.referenceRegistryNo}`}>
+          <Row key={`${row.valueUid} ${row.referenceRegistryNo} ${row.referenceCertificateNo}`}>
             <Cell isHeading isMono>
               <RowLink to={paths.chain.href(row.valueUid)}>{row.registryNo}</RowLink>
             </Cell>
-            <Cell isMono>{row.referenceRegistryNo}</Cell>
+            <Cell className="whitespace-nowrap">{row.quantity}</Cell>
+            <Cell isMono>{row.certificateNo}</Cell>
+            <Cell>
+              <span className="font-mono text-sm whitespace-nowrap">{row.referenceRegistryNo}</span>
+              <span className="block text-sm whitespace-nowrap text-ink-2">{row.referenceCertificateNo}</span>
+            </Cell>
             <Cell>
               <StateMark state={row.what === 'withdrawn' ? 'broken' : 'caution'}>
                 {row.what} <DateText value={row.on} />

@@ -76,7 +76,7 @@ function whatToDo(row: NoticeOwnRow, { decimalMark }: Preferences): string {
     return 'Judge it: its certificate states no U to weigh it by.';
   }
   const all = Math.abs(ratio) * Number(row.expandedU);
-  const isCumulative = Math.abs(all - Math.abs(row.shift)) > 1e-3 * all;
+  const isCumulative = Math.abs(all - Math.abs(Number(row.shift))) > 1e-3 * all;
   const growth = expandedUAfter / Number(row.expandedU) - 1;
   const reasons = [
     ratio === 0

@@ -26,7 +26,7 @@ const OWN: NoticeOwnRow = {
   performedEnd: '2018-08-18',
   datePrecision: 'day',
   issuedOn: '2018-08-20',
-  shift: -0.000007,
+  shift: '-0.000007',
   addedU: 0.00001,
   deviationBefore: '0.00062',
   deviationAfter: '0.000613',
@@ -43,7 +43,7 @@ function showRows(...rows: NoticeRow[]): string {
   const words = { none: 1, material: 0, verdictChanges: 0 };
   const { container } = render(
     <MemoryRouter>
-      <OwnValues total={{ count: rows.length, warned, words }} rows={rows} isFetchingMore={false} />
+      <OwnValues total={{ count: rows.length, warned, words, fullWords: words }} rows={rows} isFetchingMore={false} />
     </MemoryRouter>,
   );
   return container.textContent.replace(/\s/g, ' ');
@@ -81,7 +81,7 @@ describe('one’s own values under a notice', () => {
       registryNo: 'HM 0002',
       nominal: '2000',
       class: 'F1',
-      shift: -0.000014,
+      shift: '-0.000014',
       word: 'none',
     };
     const text = showRows(others);

@@ -35,7 +35,7 @@ export function OwnValues({ total, rows, onMore, isFetchingMore }: OwnValuesProp
   return (
     <>
       {own.length > 0 && (
-        <Section title="Your values, before and after" note={countsText(total)}>
+        <Section title="Values that you see in full, before and after" note={countsText(total)}>
           <OwnTable rows={own} />
         </Section>
       )}
@@ -55,7 +55,7 @@ export function OwnValues({ total, rows, onMore, isFetchingMore }: OwnValuesProp
   );
 }
 
-function countsText({ words }: NoticeResponse['total']): string {
+function countsText({ fullWords: words }: NoticeResponse['total']): string {
   const parts = [
     words.verdictChanges > 0 ? `${words.verdictChanges} change a verdict` : '',
     words.material > 0 ? `${words.material} material` : '',
@@ -67,7 +67,7 @@ function countsText({ words }: NoticeResponse['total']): string {
 function OwnTable({ rows }: { rows: readonly NoticeOwnRow[] }) {
   const { decimalMark } = usePreferences();
   return (
-    <Table caption="Your values, before and after" isScrolled>
+    <Table caption="Values that you see in full, before and after" isScrolled>
       <thead>
         <tr>
           <Head>Weight</Head>
@@ -103,7 +103,7 @@ function OwnTable({ rows }: { rows: readonly NoticeOwnRow[] }) {
               <Expanded value={row.expandedUBefore} k={row.k} />
             </Cell>
             <Cell align="right">
-              <ShiftText grams={row.shift} />
+              <ShiftText grams={Number(row.shift)} />
             </Cell>
             <Cell align="right">
               <Deviation value={row.deviationAfter} u={row.expandedUAfter} k={row.k} />
@@ -148,7 +148,7 @@ function WarningTable({ rows }: { rows: readonly Extract<NoticeRow, { view: 'war
               {row.class && `, ${row.class}`}
             </Cell>
             <Cell align="right">
-              <ShiftText grams={row.shift} />
+              <ShiftText grams={Number(row.shift)} />
             </Cell>
             <Cell className="whitespace-nowrap">
               <WordMark word={row.word} />
