@@ -1,13 +1,17 @@
+import { useQueries } from '@tanstack/react-query';
 import type { TogetherResponse } from '#shared/contracts/together.ts';
 import { nominalText } from '#shared/numbers/nominal.ts';
 import { Button } from '#src/components/ui/button.tsx';
 import { Switch } from '#src/components/ui/switch.tsx';
 import { usePreferences } from '#src/lib/preferences.ts';
+import { placedQuery } from '../api.ts';
 import type { Placed } from '../search.ts';
 
 interface PlacedListProps {
   placed: readonly Placed[];
   together: TogetherResponse | undefined;
+  /** Whether no answer about all of them is to come: then each is asked for by itself. */
+  isAlone: boolean;
   onPlaced: (placed: readonly Placed[]) => void;
 }
 
@@ -17,13 +21,17 @@ const PANS = [
 ] as const;
 
 /** The weights as they lie on the pans. */
-export function PlacedList({ placed, together, onPlaced }: PlacedListProps) {
+export function PlacedList({ placed, together, isAlone, onPlaced }: PlacedListProps) {
   const { decimalMark } = usePreferences();
-  const weightOf = (uid: string) => together?.weights[together.valueUids.indexOf(uid)];
+  const known = (uid: string) => together?.weights[together.valueUids.indexOf(uid)];
+  const single = useQueries({
+    queries: placed.map(({ uid }) => ({ ...placedQuery(uid), enabled: isAlone && !known(uid) })),
+  });
   return (
     <ul className="border-t border-rule">
       {placed.map(({ uid, sign }, at) => {
-        const weight = weightOf(uid);
+        const found = single[at]?.data;
+        const weight = known(uid) ?? (found?.type === 'value' ? found : undefined);
         const name = weight?.registryNo ?? `weight ${at + 1}`;
         return (
           <li
@@ -34,6 +42,12 @@ export function PlacedList({ placed, together, onPlaced }: PlacedListProps) {
               <span className="font-mono text-sm">{weight?.registryNo ?? `Weight ${at + 1}`}</span>
               {weight && (
                 <span className="ml-2 whitespace-nowrap">{nominalText(weight.nominal, decimalMark)}</span>
+              )}
+              {weight && <span className="block text-sm text-ink-2">certificate {weight.certificateNo}</span>}
+              {!weight && single[at]?.error && (
+                <span className="block text-sm text-ink-2">
+                  Cannot be opened: there is no such value, or it is not yours to see.
+                </span>
               )}
             </span>
             <span className="flex items-center gap-3">

@@ -46,7 +46,12 @@ export function TogetherScreen({ placed, onPlaced }: TogetherScreenProps) {
         side={
           <>
             <Section title="On the pans">
-              {placed.length > 0 && <PlacedList {...{ placed, together, onPlaced }} />}
+              {placed.length > 0 && (
+                <PlacedList
+                  {...{ placed, together, onPlaced }}
+                  isAlone={placed.length === 1 || answer.isError}
+                />
+              )}
               {placed.length < MOST && (
                 <Combobox
                   key={asked}
