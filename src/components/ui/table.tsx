@@ -17,7 +17,9 @@ interface TableProps {
  */
 export function Table({ caption, showsCaption = false, isScrolled = false, children }: TableProps) {
   const ref = useRowMovement();
-  const box = isScrolled ? 'relative max-h-[75dvh] overflow-auto' : 'relative max-columns:overflow-x-auto';
+  const box = isScrolled
+    ? 'relative max-h-[75dvh] overflow-auto'
+    : 'relative max-columns:overflow-x-auto max-columns:scroll-edge';
   return (
     <div role="region" aria-label={caption} tabIndex={isScrolled ? 0 : undefined} className={box}>
       <table ref={ref} className="w-full border-separate border-spacing-0 text-left">
