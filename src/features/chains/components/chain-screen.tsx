@@ -19,6 +19,7 @@ import { NotYetNotice, SucceededNotice } from './not-yet-notice.tsx';
 import { OtherRules } from './other-rules.tsx';
 import { QuestionBar } from './question-bar.tsx';
 import { SelectionSheet, type ValueNode } from './selection-sheet.tsx';
+import { SecondWeightNote } from './second-weight-note.tsx';
 import { Verdict } from './verdict.tsx';
 
 /** The drawing brings reactflow and dagre: fetched with the screen, not with the application. */
@@ -116,6 +117,7 @@ export function ChainScreen({ chain, question, onChange, actionsFor, hrefOf, act
         }
       >
         <Section title={<span className="sr-only">The chain, drawn</span>}>
+          <SecondWeightNote {...{ chain, question, onChange }} />
           {isNothingFailing(chain, question) ? (
             <NothingFails onShowAll={() => onChange({ only: undefined })} />
           ) : (
