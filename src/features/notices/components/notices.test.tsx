@@ -43,7 +43,11 @@ function showRows(...rows: NoticeRow[]): string {
   const words = { none: 1, material: 0, verdictChanges: 0 };
   const { container } = render(
     <MemoryRouter>
-      <OwnValues total={{ count: rows.length, warned, words, fullWords: words }} rows={rows} isFetchingMore={false} />
+      <OwnValues
+        total={{ count: rows.length, warned, words, fullWords: words }}
+        rows={rows}
+        isFetchingMore={false}
+      />
     </MemoryRouter>,
   );
   return container.textContent.replace(/\s/g, ' ');
@@ -61,6 +65,12 @@ describe('one’s own values under a notice', () => {
     expect(text).toContain(
       'Material: the shift, with earlier notices, is 15 % of U and U grows by 0.33 %. Use the value after.',
     );
+  });
+
+  it('tell a small part of U as small, not as zero', () => {
+    const text = showRows({ ...OWN, ratio: 0.001 });
+    expect(text).toContain('below 0.01');
+    expect(text).not.toContain('0.00 ');
   });
 
   it('never hide a verdict that changes', () => {

@@ -179,6 +179,7 @@ function Expanded({ value, k }: { value: number | null; k: string | null }) {
 }
 
 function ratioText(ratio: number, decimalMark: '.' | ','): string {
+  if (ratio !== 0 && Math.abs(ratio) < 0.005) return `below\u20090${decimalMark}01`;
   return formatDecimal(ratio.toFixed(2), { decimalMark, decimals: 2, isSigned: ratio !== 0 });
 }
 
