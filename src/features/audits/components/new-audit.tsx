@@ -40,17 +40,21 @@ export function NewAudit({ mayAudit, onAsked }: NewAuditProps) {
   };
   const told = ask.error instanceof ApiProblem ? ask.error.document.fields : undefined;
   const isAtField = Boolean(told?.day ?? told?.known);
-  const dayField = (name: 'day' | 'known', label: string) => (
-    <DateField
-      label={label}
-      value={days[name]}
-      error={(isRefused ? dayProblem(days[name]) : undefined) ?? told?.[name]?.message}
-      onChange={(event) => {
-        setDays({ ...days, [name]: event.target.value.trim() });
-        if (ask.error) ask.reset();
-      }}
-    />
-  );
+  const dayField = (name: 'day' | 'known', label: string) => {
+    const error = (isRefused ? dayProblem(days[name]) : undefined) ?? told?.[name]?.message;
+    return (
+      <DateField
+        label={label}
+        className={error ? 'w-72' : 'w-36'}
+        value={days[name]}
+        error={error}
+        onChange={(event) => {
+          setDays({ ...days, [name]: event.target.value.trim() });
+          if (ask.error) ask.reset();
+        }}
+      />
+    );
+  };
   return (
     <Section title="New audit" note="every step of the chains judged once, and each chain as a whole">
       <Toolbar label="New audit">
