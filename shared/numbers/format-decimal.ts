@@ -19,7 +19,7 @@ export function convertText(text: string, from: Unit, to: Unit): string {
  * @param deviation grams
  * @param expandedUncertainty grams; the larger of the two decides
  */
-export function deviationUnit(deviation: string, expandedUncertainty?: string | null): Unit {
+export function deviationUnit(deviation: string, expandedUncertainty?: string | null): 'g' | 'mg' | 'ug' {
   const size = Decimal.max(new Decimal(deviation).abs(), new Decimal(expandedUncertainty ?? 0).abs());
   if (size.lt('0.001')) return 'ug';
   return size.lt(1) ? 'mg' : 'g';

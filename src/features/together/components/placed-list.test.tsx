@@ -18,7 +18,7 @@ afterEach(() => vi.unstubAllGlobals());
 
 it('names the one weight on the pan with its certificate', () => {
   const client = new QueryClient({ defaultOptions: { queries: { staleTime: Infinity } } });
-  client.setQueryData(placedQuery(UID).queryKey, {
+  client.setQueryData([...placedQuery(UID).queryKey], {
     type: 'value',
     uid: UID,
     registryNo: 'AB 0001',
