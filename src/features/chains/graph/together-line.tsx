@@ -4,6 +4,7 @@ import { Waiting } from '#src/components/ui/progress.tsx';
 import { Quantity } from '#src/components/ui/quantity.tsx';
 import { formatDecimal } from '#shared/numbers/format-decimal.ts';
 import { usePreferences } from '#src/lib/preferences.ts';
+import { isPracticallyNone } from '../second-weight.ts';
 import type { SecondWeight } from './use-second-weight.ts';
 
 interface TogetherLineProps {
@@ -45,11 +46,18 @@ function Numbers({ together }: { together: NonNullable<SecondWeight['together']>
   const ofDifference = Math.sqrt(Math.max(0, one ** 2 + other ** 2 - 2 * covariance));
   return (
     <>
-      <i className="font-serif">r</i>{' '}
-      {correlation === null
-        ? 'unknown'
-        : `= ${formatDecimal(correlation.toFixed(3), { decimalMark, decimals: 3 })}`}
-      , covariance <Quantity value={covariance.toPrecision(3)} unit="g^2" isScientific decimals={2} />;{' '}
+      {isPracticallyNone(correlation) ? (
+        'practically no correlation; '
+      ) : (
+        <>
+          <i className="font-serif">r</i>{' '}
+          {correlation === null
+            ? 'unknown'
+            : `= ${formatDecimal(correlation.toFixed(3), { decimalMark, decimals: 3 })}`}
+          , covariance <Quantity value={covariance.toPrecision(3)} unit="g^2" isScientific decimals={2} />
+          ;{' '}
+        </>
+      )}
       <i className="font-serif">u</i> of their difference{' '}
       <Quantity value={ofDifference.toFixed(15)} kind="uncertainty" coverageFactor={1} shownIn="auto" />.
     </>
