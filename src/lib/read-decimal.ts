@@ -15,7 +15,7 @@ export function readDecimal(typed: string, preferred: DecimalMark): ReadDecimal 
   try {
     const parsed = parseNumber(typed, preferred);
     if (parsed.unit !== null || parsed.uncertainty !== null) {
-      return { kind: 'unreadable', why: `Only the number belongs here; received "${typed.trim()}".` };
+      return { kind: 'unreadable', why: notBare(typed) };
     }
     return { kind: 'number', value: parsed.value.toFixed(parsed.decimals) };
   } catch (error) {
@@ -28,9 +28,11 @@ export function readDecimal(typed: string, preferred: DecimalMark): ReadDecimal 
 const NOT_BARE = ['not-a-number', 'unknown-unit', 'unreadable-brackets', 'unreadable-uncertainty'];
 
 function whyUnread(typed: string, error: EngineError): string {
-  return NOT_BARE.includes(error.code)
-    ? `Write a plain decimal number, such as 10 or 0.5; received "${typed.trim()}".`
-    : error.message.replace(/^[^:]*: r/, 'R');
+  return NOT_BARE.includes(error.code) ? notBare(typed) : error.message.replace(/^[^:]*: r/, 'R');
+}
+
+function notBare(typed: string): string {
+  return `Write a plain decimal number, such as 10 or 0.5; received "${typed.trim()}".`;
 }
 
 function parseNumber(typed: string, preferred: DecimalMark): ReturnType<typeof parseQuantity> {
