@@ -23,7 +23,7 @@ it('a unit typed beside the number becomes the unit of the value, and leaves the
   await user.type(cell, '80 g');
   expect(cell.value).toBe('80');
   expect(screen.getByRole('status').textContent).toBe('80 in g, U in mg');
-  expect(screen.queryByText(/Only the number/)).toBeNull();
+  expect(screen.queryByText(/Write a plain decimal/)).toBeNull();
   await user.clear(cell);
   await user.type(cell, '-0,031 \u00b5g');
   expect(screen.getByRole('status').textContent).toBe('-0.031 in ug, U in mg');
