@@ -101,6 +101,8 @@ function mariadbArguments({ folder, isThrowaway = false }, { port, socket, accou
     '--skip-symbolic-links',
     '--max-connections=200',
     '--innodb-buffer-pool-size=256M',
+    // Pages that the small pool let go are still in the system's cache: a large register is read faster.
+    '--innodb-flush-method=fsync',
     // The wide walks of the graph are several times faster when their work table stays in memory.
     '--tmp-memory-table-size=256M',
     '--max-heap-table-size=256M',
