@@ -212,7 +212,8 @@ export const WhatIfWarningRow = WarningRow.extend({ shift: z.number().nullable()
 export const WhatIfRow = z.discriminatedUnion('view', [WhatIfFullRow, WhatIfWarningRow]);
 export type WhatIfRow = z.infer<typeof WhatIfRow>;
 
-const WordCounts = z.object({
+/** Weights by their word. */
+export const WordCounts = z.object({
   none: z.number().int(),
   material: z.number().int(),
   verdictChanges: z.number().int(),

@@ -11,7 +11,7 @@ import {
   Nominal,
   QuantityKind,
 } from './common.ts';
-import { ClassVerdict, FullRow, WarningRow, WhatIfWord } from './downstream.ts';
+import { ClassVerdict, FullRow, WarningRow, WhatIfWord, WordCounts } from './downstream.ts';
 
 /** What a notice does to the mass scale. */
 export const NoticeKind = z.enum(['unit correction', 'uncertainty added', 'consensus value']);
@@ -170,12 +170,6 @@ export const NoticeWarningRow = WarningRow.extend({ shift: z.string(), word: Wha
 
 export const NoticeRow = z.discriminatedUnion('view', [NoticeOwnRow, NoticeWarningRow]);
 export type NoticeRow = z.infer<typeof NoticeRow>;
-
-const WordCounts = z.object({
-  none: z.number().int(),
-  material: z.number().int(),
-  verdictChanges: z.number().int(),
-});
 
 export const NoticeResponse = NoticeSummary.extend({
   reason: z.string(),
